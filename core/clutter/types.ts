@@ -1,0 +1,14 @@
+import type { Held } from '../polar/index.ts'
+
+/** Per option: clutter-to-noise before STC. */
+export interface ClutterCells extends Held {
+  readonly kind: 'clutter'
+  readonly heightM: number
+  readonly tiltDeg: number
+  /** Main beam + side-lobe term per cell, dB; NaN = undefined (both nil). */
+  readonly cnrDb: Float32Array
+  /** Side-lobe term, one number per range gate, dB; NaN = nil. */
+  readonly sideLobeCnrDb: Float32Array
+}
+/** Words beside a value, never colours alone. */
+export type ModelMark = 'default' | 'outside model' | 'by hand' | 'from memory'

@@ -1,0 +1,51 @@
+/** The radar as the kernels need it: every field settled, SI units, degrees. Follows the `radar` part of the study file. */
+export interface AntennaInput {
+  readonly gainDbi: number
+  readonly azimuthBeamwidthDeg: number
+  readonly elevationBeamwidthDeg: number
+  readonly elevationPattern: 'cosecant-squared' | 'gaussian' | 'table'
+  readonly cosecantLimitDeg: number
+  /** Rows of [elevation − tilt deg, dB relative to peak]; used when elevationPattern is 'table'. */
+  readonly elevationTable: readonly (readonly [number, number])[]
+  /** Azimuth side-lobe level, one way, dB relative to peak. */
+  readonly sidelobeDb: number
+  /** Floor of the elevation pattern, for clutter only, dB relative to peak. */
+  readonly elevationSidelobeDb: number
+  readonly tiltDeg: number
+  readonly apertureWidthM: number | null
+  readonly apertureHeightM: number | null
+}
+export interface SuppressionInput {
+  readonly kind: 'none' | 'stated' | 'canceller' | 'filterBank'
+  readonly statedDb: number
+  readonly pulses: number
+  readonly stabilityLimitDb: number | null
+  readonly bits: number | null
+}
+export interface StcInput {
+  readonly kind: 'none' | 'curve' | 'rtoFourth'
+  /** [slant range m, attenuation dB] */
+  readonly curve: readonly (readonly [number, number])[]
+  readonly cornerM: number
+  readonly maxDb: number
+}
+export interface RadarInput {
+  readonly name: string
+  readonly frequencyHz: number
+  readonly peakPowerW: number
+  readonly pulseWidthS: number
+  readonly compressedPulseWidthS: number
+  readonly noiseBandwidthHz: number
+  readonly prfHz: readonly number[]
+  readonly prfMode: 'single' | 'pulseStagger' | 'dwellStagger'
+  readonly coherentTransmitter: boolean
+  readonly polarisation: 'H' | 'V' | 'circular'
+  readonly rotationRpm: number
+  readonly noiseFigureDb: number
+  readonly systemLossDb: number
+  readonly pfa: number
+  readonly antenna: AntennaInput
+  readonly suppression: SuppressionInput
+  readonly stc: StcInput
+  readonly instrumentedRangeM: number
+}

@@ -1,0 +1,148 @@
+import type { ModelMark } from '../clutter/index.ts'
+import type { LonLat } from '../geodesy/index.ts'
+import type { GroundCode } from '../landcover/index.ts'
+import type { Figures, Ladder } from '../merit/index.ts'
+import type { Obstacle } from '../obstacles/index.ts'
+import type { Ramp, View } from '../paint/index.ts'
+import type { GridShape } from '../raster/index.ts'
+import type { StudyDoc } from '../study/index.ts'
+
+export interface OptionRef {
+  readonly candidate: string
+  readonly heightM: number
+  readonly tiltDeg: number
+}
+/** ground -> site, mask -> clutter -> need; a change of tilt leaves mask untouched, a change of need leaves clutter untouched. */
+export interface Keys {
+  readonly site: string
+  readonly mask: string
+  readonly clutter: string
+  readonly needs: string
+}
+export interface OptionResult {
+  readonly ref: OptionRef
+  readonly keys: Keys
+  readonly figures: Figures
+  /** Are the polar grids still in the cache? */
+  readonly held: boolean
+}
+
+/** The map's quantities. Families: what comes back, what is seen, what is hidden, what it takes. */
+export const LAYER_IDS = [
+  'masked',
+  'coverage-floor',
+  'height-to-see',
+  'depression',
+  'clutter-strength',
+  'clutter-to-noise',
+  'suppression-needed',
+] as const
+export type LayerId = (typeof LAYER_IDS)[number]
+export interface LayerInfo {
+  readonly id: LayerId
+  readonly family: 'echo' | 'seen' | 'hidden' | 'takes'
+  readonly unit: 'dB' | 'm' | 'deg' | ''
+  /** Which way the value is rounded at the face. */
+  readonly safe: 'up' | 'down'
+  readonly ramp: Ramp
+  /** States (hatch) drawn over the values. */
+  readonly hatchMasked: boolean
+}
+
+/** One line of a cell ledger; adding the start/add/subtract lines of a result gives the result. */
+export interface LedgerLine {
+  readonly key: string
+  readonly label: string
+  readonly value: number | string | null
+  readonly unit: string
+  readonly op: 'start' | 'add' | 'subtract' | 'info'
+  readonly model: string
+  readonly source: string
+  readonly mark: ModelMark | ''
+  /** Which result this line belongs to; '' for context lines. */
+  readonly of?: string
+}
+export interface CellLedger {
+  readonly at: LonLat & { readonly azimuthDeg: number; readonly rangeM: number }
+  readonly option: OptionRef
+  readonly lines: readonly LedgerLine[]
+  readonly results: Readonly<Record<string, number | null>>
+}
+/** Terrain profile along one azimuth for one option. Arrays of equal length. */
+export interface Profile {
+  readonly azimuthDeg: number
+  readonly option: OptionRef
+  readonly antennaM: number
+  readonly effectiveRadiusM: number
+  readonly distM: Float64Array
+  readonly groundM: Float64Array
+  readonly surfaceM: Float64Array
+  readonly floorM: Float64Array
+  readonly floorBandM: Float64Array
+  /** 1 in sight, 0 masked, 2 unknown. */
+  readonly inSight: Uint8Array
+}
+export interface Probe {
+  readonly lon: number
+  readonly lat: number
+  readonly azimuthDeg: number | null
+  readonly rangeM: number | null
+  readonly groundM: number | null
+  readonly layer: LayerId
+  readonly value: number | null
+  /** A word where there is no number: 'masked', 'unknown: beyond a void', 'unknown: edge of terrain', 'out of range', 'below noise', 'too weak', 'none needed'. */
+  readonly word: string | null
+}
+
+/** page -> study worker; every ask has an id; `paint`, `base` and `preview` supersede their like. */
+export interface Ask {
+  ground: {
+    shape: GridShape
+    heightM: Float32Array
+    code: Uint8Array | null
+    codes: readonly GroundCode[]
+    obstacles: readonly Obstacle[]
+    verticalErrorM: number
+  }
+  /** Replaces the last one whole: this is also the cancel. */
+  study: { doc: StudyDoc; show: { option: OptionRef | null; layer: LayerId; need?: string }; hold: boolean }
+  preview: { candidate: string; lon: number; lat: number; heightM: number }
+  paint: { view: View; layer: LayerId; option: OptionRef | 'preview'; opacity?: number }
+  base: { view: View }
+  probe: { at: LonLat }
+  profile: { azimuthDeg: number; option: OptionRef }
+  ledger: { at: LonLat; option: OptionRef }
+  ladder: { candidate: string }
+  groundAt: { at: readonly LonLat[] }
+}
+export interface Answer {
+  ground: { serial: number; minM: number; maxM: number; voidPct: number; corners: readonly LonLat[] }
+  study: null
+  /** bearing: is the candidate on known ground? */
+  preview: { siteGroundM: number | null; horizon: readonly { azimuthDeg: number; elevationDeg: number }[]; groundInSightPct: number | null }
+  /** null when the newest result is not there yet: ask again on `dirty`. Pixels are premultiplied RGBA in an ImageBitmap on the page's side. */
+  paint: { bitmap: unknown; view: View } | null
+  base: { bitmap: unknown; view: View } | null
+  probe: Probe | null
+  profile: Profile
+  ledger: CellLedger
+  ladder: Ladder
+  groundAt: readonly (number | null)[]
+}
+export type Tell =
+  | { readonly kind: 'status'; readonly done: number; readonly total: number; readonly secondsLeft: number | null; readonly doing: string }
+  | { readonly kind: 'figures'; readonly results: readonly OptionResult[] }
+  | { readonly kind: 'dirty' }
+  | { readonly kind: 'warnings'; readonly warnings: readonly string[] }
+  | { readonly kind: 'reply'; readonly id: number; readonly body: unknown }
+  | {
+      readonly kind: 'failure'
+      readonly id: number | null
+      readonly error: {
+        readonly code: string
+        readonly message: string
+        readonly place?: string
+        readonly remedy?: string
+        readonly stack?: string
+      }
+    }

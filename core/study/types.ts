@@ -1,0 +1,180 @@
+import type { TerrainName } from '../landcover/index.ts'
+import type { RadarInput } from '../radar/index.ts'
+
+/** The document as it is written: only what the user stated. Unknown keys are kept untouched. */
+export interface TerrainFileDoc {
+  file: string
+  heights?: 'orthometric' | 'ellipsoidal'
+  verticalErrorM?: number
+  crs?: string | null
+  unit?: 'm' | 'ft' | 'us-ft' | null
+}
+export interface LandCoverDoc {
+  file: string
+  legend: 'worldcover' | 'nlcd' | 'corine' | 'custom'
+  classes?: Record<string, { terrain: TerrainName; coverHeightM: number }>
+}
+export interface AntennaDoc {
+  gainDbi: number
+  azimuthBeamwidthDeg: number
+  elevationBeamwidthDeg?: number
+  elevationPattern?: 'cosecant-squared' | 'gaussian' | 'table'
+  cosecantLimitDeg?: number
+  elevationTable?: [number, number][]
+  sidelobeDb?: number
+  elevationSidelobeDb?: number
+  tiltDeg?: number
+  apertureWidthM?: number | null
+  apertureHeightM?: number | null
+}
+export interface RadarDoc {
+  name?: string
+  frequencyHz: number
+  peakPowerW: number
+  pulseWidthS: number
+  compressedPulseWidthS?: number
+  noiseBandwidthHz?: number
+  prfHz: number[]
+  prfMode?: 'single' | 'pulseStagger' | 'dwellStagger'
+  coherentTransmitter?: boolean
+  polarisation?: 'H' | 'V' | 'circular'
+  rotationRpm?: number
+  noiseFigureDb?: number
+  systemLossDb?: number
+  pfa?: number
+  antenna: AntennaDoc
+  suppression?: {
+    kind: 'none' | 'stated' | 'canceller' | 'filterBank'
+    statedDb?: number
+    pulses?: number
+    stabilityLimitDb?: number
+    bits?: number
+  }
+  stc?: { kind: 'none' | 'curve' | 'rtoFourth'; curve?: [number, number][]; cornerM?: number; maxDb?: number }
+  instrumentedRangeM?: number
+}
+export interface NeedDoc {
+  id: string
+  name?: string
+  must?: boolean
+  rcsM2?: number
+  swerling?: 0 | 1 | 2 | 3 | 4
+  pd?: number
+  requiredRatioDb?: number | null
+  kind: 'layer' | 'fixes' | 'track' | 'polygon'
+  heightM?: number | [number, number]
+  heightAbove?: 'sea' | 'ground'
+  fromRangeM?: number
+  toRangeM?: number
+  sectorDeg?: [number, number]
+  file?: string
+}
+export interface CandidateDoc {
+  id: string
+  name?: string
+  lon: number
+  lat: number
+  groundHeightM?: number | null
+  mastHeightsM: number[]
+  tiltsDeg?: number[] | null
+  clearingRadiusM?: number
+  notes?: string
+}
+export interface AtmosphereDoc {
+  effectiveEarthFactor?: number
+  earthRadiusM?: number | null
+  gas?: 'none' | 'p676'
+  rainRateMmH?: number
+  windMs?: number
+  seaState?: number
+}
+export interface RunDoc {
+  maxRangeM?: number
+  rangeStepM?: number
+  azimuthStepDeg?: number
+}
+export interface StudyDoc {
+  format: 'sightfell-study'
+  version: 1
+  name: string
+  terrain: TerrainFileDoc[]
+  landCover?: LandCoverDoc
+  uniformTerrain?: TerrainName
+  obstacles?: { file: string }
+  roads?: { file: string }
+  facades?: { file: string }
+  tables?: { lowAngleLand?: string }
+  atmosphere?: AtmosphereDoc
+  radar: RadarDoc
+  needs?: NeedDoc[]
+  candidates: CandidateDoc[]
+  run?: RunDoc
+}
+
+/** A default that stands in for something the user did not state; all are listed in the memo. */
+export interface DefaultUsed {
+  /** Key path, e.g. 'radar.noiseFigureDb'. */
+  readonly path: string
+  readonly value: string | number | boolean | null
+  readonly unit: string
+}
+export interface SettledNeed {
+  readonly id: string
+  readonly name: string
+  readonly must: boolean
+  readonly rcsM2: number
+  readonly swerling: 0 | 1 | 2 | 3 | 4
+  readonly pd: number
+  /** D0, dB: stated, or 13 dB marked default. */
+  readonly requiredRatioDb: number
+  readonly requiredRatioMark: 'default' | null
+  readonly kind: NeedDoc['kind']
+  /** Heights tested, m: one, or floor, three between, ceiling. */
+  readonly levelsM: readonly number[]
+  readonly heightAbove: 'sea' | 'ground'
+  readonly fromRangeM: number
+  readonly toRangeM: number
+  readonly sectorDeg: readonly [number, number]
+}
+export interface SettledCandidate {
+  readonly id: string
+  readonly name: string
+  readonly lon: number
+  readonly lat: number
+  readonly groundHeightM: number | null
+  readonly mastHeightsM: readonly number[]
+  /** Never empty: the antenna's own tilt when none are stated. */
+  readonly tiltsDeg: readonly number[]
+  readonly clearingRadiusM: number
+  readonly notes: string
+}
+/** The document with every default filled in: what the engine runs on. */
+export interface SettledStudy {
+  readonly name: string
+  readonly terrain: readonly {
+    file: string
+    heights: 'orthometric'
+    verticalErrorM: number
+    crs: string | null
+    unit: 'm' | 'ft' | 'us-ft' | null
+  }[]
+  readonly landCover: LandCoverDoc | null
+  readonly uniformTerrain: TerrainName
+  readonly uniformTerrainMark: 'default' | null
+  readonly obstacles: string | null
+  readonly roads: string | null
+  readonly lowAngleLandTable: string | null
+  readonly atmosphere: {
+    readonly effectiveEarthFactor: number
+    readonly earthRadiusM: number | null
+    readonly gas: 'none' | 'p676'
+    readonly rainRateMmH: number
+    readonly windMs: number
+    readonly seaState: number
+  }
+  readonly radar: RadarInput
+  readonly needs: readonly SettledNeed[]
+  readonly candidates: readonly SettledCandidate[]
+  readonly run: { readonly maxRangeM: number; readonly rangeStepM: number; readonly azimuthStepDeg: number }
+  readonly defaults: readonly DefaultUsed[]
+}

@@ -1,0 +1,50 @@
+import type { GroundCode } from '../landcover/index.ts'
+import type { Obstacle } from '../obstacles/index.ts'
+import type { GridShape, RasterGrid } from '../raster/index.ts'
+
+export const RELIEF = { low: 0, high: 1, mountains: 2, unknown: 255 } as const
+export type Relief = (typeof RELIEF)[keyof typeof RELIEF]
+
+/** What every ray runs over. The arrays may lie on a SharedArrayBuffer. */
+export interface Ground {
+  readonly serial: number
+  readonly shape: GridShape
+  /** m MSL, NaN = void; shape.width * shape.height. */
+  readonly heightM: Float32Array
+  /** Index into `codes` per post, or null when the terrain is uniform (codes[0]). */
+  readonly code: Uint8Array | null
+  readonly codes: readonly GroundCode[]
+  /** One value of RELIEF per block of the raster. */
+  readonly relief: RasterGrid<Uint8Array>
+  readonly obstacles: readonly Obstacle[]
+  /** 90 % linear error of the heights, m. */
+  readonly verticalErrorM: number
+  /** Mean posting at mid-raster, m. */
+  readonly postingM: number
+}
+/** A candidate's place as the kernels need it. */
+export interface Site {
+  readonly lon: number
+  readonly lat: number
+  /** Stated ground height, m MSL; null = bilinear ground of the raster. */
+  readonly groundHeightM: number | null
+  readonly clearingRadiusM: number
+}
+/** Scratch of one ray, filled again for each azimuth; never leaves the kernel. All mast heights read the same track. */
+export interface RayTrack {
+  count: number
+  /** Ground range from the site, m. */
+  distM: Float64Array
+  /** Ground, m MSL. */
+  groundM: Float64Array
+  /** Ground + cover + obstacles, m MSL. */
+  surfaceM: Float64Array
+  /** Quadratic term of the surface between this crossing and the next, 1/m. */
+  bendPerM: Float64Array
+  /** Ground code of the nearest cell. */
+  code: Uint8Array
+  /** Where the ray stopped being known: crossed a void or left the raster, m; Infinity if neither. */
+  unknownFromM: number
+  unknownWhy: 'void' | 'edge' | null
+  end: 'maxRange' | 'edge'
+}

@@ -1,0 +1,2 @@
+export * from './constants.ts'
+export * from './convert.ts'

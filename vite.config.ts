@@ -1,0 +1,27 @@
+import react from '@vitejs/plugin-react'
+import { defineConfig } from 'vitest/config'
+
+const isolation = { 'Cross-Origin-Opener-Policy': 'same-origin', 'Cross-Origin-Embedder-Policy': 'require-corp' }
+
+export default defineConfig({
+  plugins: [react()],
+  worker: { format: 'es' },
+  build: { target: 'es2022', chunkSizeWarningLimit: 2000 },
+  server: { headers: isolation },
+  preview: { headers: isolation, port: 4173, strictPort: true, host: '127.0.0.1' },
+  optimizeDeps: { include: ['geotiff', 'proj4', 'fast-png'] },
+  test: {
+    projects: [
+      {
+        test: {
+          name: 'unit',
+          include: ['test/**/*.test.ts', 'test/**/*.test.tsx'],
+          exclude: ['test/reference/**'],
+          testTimeout: 60_000,
+          environment: 'node',
+        },
+      },
+      { test: { name: 'reference', include: ['test/reference/**/*.test.ts'], testTimeout: 120_000, environment: 'node' } },
+    ],
+  },
+})
