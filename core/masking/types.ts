@@ -17,8 +17,10 @@ export interface SiteCells extends Held {
   readonly kind: 'site'
   /** Ground at the cell centre, m MSL; NaN unknown. */
   readonly groundM: Float32Array
-  /** Row number of the land table (clutter room), 255 = none (water, unknown). Filled by `classify` of the clutter room. */
+  /** Ground code at the cell centre (index into Ground.codes), 255 = unknown. */
   readonly code: Uint8Array
+  /** Relief at the cell centre, a value of RELIEF. */
+  readonly relief: Uint8Array
   /** Terrain slope along the ray (rising away from the radar is positive), per mille. */
   readonly slopePermille: Int16Array
   /** Lowest electrical centre above the site's ground that brings the cell centre's surface into sight, m; NaN unknown. */
