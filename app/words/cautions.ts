@@ -1,0 +1,68 @@
+import type { LayerId } from '../../core/index.ts'
+
+/** Every caution of the app, the batch command and the memo; shown under the number it concerns, never folded away. */
+export const CAUTIONS = {
+  draft: 'Draft: prediction, not for construction or operation',
+  prediction: 'A prediction from a raster and models, to be confirmed by survey and trial.',
+  notForNavigation: 'Not for navigation, separation, minimum altitudes or operational use.',
+  exposure:
+    'RF exposure is for a qualified person under the local limits: antenna stopped first, near field, implants, fuel and electro-explosive devices, lock-out before work on the antenna.',
+  climbing: 'Climbing, lifts and work at height follow local rules and trained crews.',
+  structure: 'Mast, foundations, wind, ice, lightning and sway are for a licensed structural engineer under the local code.',
+  obstruction: 'A mast may need notice, marking or lighting as an obstacle to aviation: ask the local authority before fixing its height.',
+  spectrum: 'The frequency needs a licence and co-ordination with its neighbours from the national authority.',
+  environment: 'Environment, heritage, birds and land use follow the local permitting authority.',
+  localCodes: 'Local codes and licensed practice prevail over this memo; professional sign-off where it is reserved.',
+  sensitive: "Coverage gaps can be sensitive: no publication without the owner's consent.",
+  nearMast: 'Inside 3–5 km a 30 m raster does not place a horizon within 0.1°: survey.',
+  landTable: 'The low-angle land table is from memory, not proof-read in print: check it before relying on a level.',
+  clutterMean: 'Clutter is a cell mean over land only; single cells spread by many decibels around it.',
+  sightOnly: 'In sight is line of sight only: not detectable, not usable, not confirmed.',
+  headlineK: 'For one effective-earth factor; pass is not stated until other factors are run.',
+  requiredRatio: 'Required ratio 13 dB is a default: it stands for beam-shape and straddle losses until detection is computed.',
+  coverDefault: 'Ground cover is a default: give land cover or a uniform terrain before relying on clutter.',
+  unknownGround: 'Unknown ground counts against a need: it is never in sight and never free of clutter.',
+  floorBand: 'The floor is nominal; the error band beside it is 90 %, from the raster and obstacle errors.',
+  edgeHorizon: 'Where the terrain ends the horizon is "at least" the value shown.',
+  moreGround: 'More ground in sight is not better by itself: clutter comes with it.',
+  ducting: 'Ducting sensitivity, not a prediction',
+} as const
+export type CautionId = keyof typeof CAUTIONS
+
+/** On the memo's first page, in this order. */
+export const FIRST_PAGE_CAUTIONS: readonly CautionId[] = [
+  'prediction',
+  'notForNavigation',
+  'landTable',
+  'nearMast',
+  'sensitive',
+  'localCodes',
+]
+/** What defers to local codes and licensed practice, each with its own line in the memo. */
+export const DEFERRED_CAUTIONS: readonly CautionId[] = ['exposure', 'climbing', 'structure', 'obstruction', 'spectrum', 'environment']
+/** Which caution stands under which kind of number. */
+export const CAUTIONS_OF = {
+  horizon: ['nearMast', 'edgeHorizon'],
+  floor: ['floorBand', 'notForNavigation'],
+  need: ['sightOnly', 'headlineK'],
+  clutter: ['landTable', 'clutterMean'],
+  suppression: ['requiredRatio', 'landTable'],
+  mast: ['obstruction', 'structure'],
+  candidate: ['nearMast'],
+  compare: ['moreGround', 'sightOnly', 'landTable'],
+} as const satisfies Record<string, readonly CautionId[]>
+export type CautionTopic = keyof typeof CAUTIONS_OF
+
+const LAYER_TOPIC: Record<LayerId, CautionTopic> = {
+  masked: 'need',
+  'coverage-floor': 'floor',
+  'height-to-see': 'mast',
+  depression: 'candidate',
+  'clutter-strength': 'clutter',
+  'clutter-to-noise': 'clutter',
+  'suppression-needed': 'suppression',
+}
+/** Sentences to stand under a number of this topic. */
+export const cautionsFor = (topic: CautionTopic): readonly string[] => CAUTIONS_OF[topic].map((id) => CAUTIONS[id])
+/** Sentences to stand under the map's legend while this layer is on show. */
+export const cautionsForLayer = (layer: LayerId): readonly string[] => cautionsFor(LAYER_TOPIC[layer])

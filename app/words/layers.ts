@@ -1,0 +1,83 @@
+import type { LayerId, LayerInfo } from '../../core/index.ts'
+
+/** What the map's sentence and legend say of a layer. Its ramp and rounding side are core's (`LayerInfo`). */
+export interface LayerWords {
+  /** In the sentence: "Show what comes back as **C/N** for…". */
+  readonly short: string
+  /** Legend title. */
+  readonly title: string
+  /** After the title in lighter ink: unit and what the value is. */
+  readonly of: string
+  /** Meaning of the two ends of the ramp, low then high; null where the numbers say enough. */
+  readonly ends: readonly [string, string] | null
+  /** Line under the ramp: what is left bare, what is hatched. */
+  readonly note: string
+  /** One sentence for help and the memo's figure caption. */
+  readonly meaning: string
+}
+export const LAYER_WORDS: Record<LayerId, LayerWords> = {
+  masked: {
+    short: 'masked ground',
+    title: 'Masked ground',
+    of: 'line of sight only',
+    ends: null,
+    note: 'hatched: masked · dotted: marginal or partly · crossed: unknown',
+    meaning: 'Ground whose surface the antenna does not see, by line of sight over terrain, cover and obstacles',
+  },
+  'coverage-floor': {
+    short: 'coverage floor',
+    title: 'Coverage floor',
+    of: 'MSL, nominal',
+    ends: ['low, good', 'high, poor'],
+    note: 'error band on the pointer · bare: unknown',
+    meaning: 'Lowest height in sight above each place, above mean sea level',
+  },
+  'height-to-see': {
+    short: 'height to see',
+    title: 'Height to see',
+    of: 'm of mast, nominal',
+    ends: ['low, good', 'high, poor'],
+    note: 'bare: unknown or over the ramp',
+    meaning: 'Lowest mast height that brings the ground of a place into sight',
+  },
+  depression: {
+    short: 'depression angle',
+    title: 'Depression angle',
+    of: 'deg, at the ground, smooth earth',
+    ends: ['small', 'steep'],
+    note: 'slope not included · hatched: masked',
+    meaning: 'Angle of the ray below the local horizontal at the ground on the smooth effective earth; the land table is entered with it',
+  },
+  'clutter-strength': {
+    short: 'clutter strength',
+    title: 'Clutter strength σ°F⁴',
+    of: 'dB, mean',
+    ends: ['faint', 'severe'],
+    note: 'hatched: masked, none modelled · land table from memory',
+    meaning: 'Mean ground clutter strength per unit area, propagation included',
+  },
+  'clutter-to-noise': {
+    short: 'C/N',
+    title: 'Clutter-to-noise',
+    of: 'dB, mean, one pulse',
+    ends: ['faint', 'severe'],
+    note: 'bare: below noise · hatched: masked · land table from memory',
+    meaning:
+      'Mean ground clutter against receiver noise in each resolution cell, per pulse, before suppression and short-range sensitivity',
+  },
+  'suppression-needed': {
+    short: 'suppression needed',
+    title: 'Suppression needed',
+    of: 'dB, for the need on show',
+    ends: ['little', 'much'],
+    note: 'bare: none needed or too weak · hatched: masked · land table from memory',
+    meaning: 'Improvement factor that lets the target of the need stand above mean clutter and noise',
+  },
+}
+/** The map's families, in the words of its sentence. */
+export const FAMILY_WORDS: Record<LayerInfo['family'], string> = {
+  hidden: 'what is hidden',
+  seen: 'what is seen',
+  echo: 'what comes back',
+  takes: 'what it takes',
+}
