@@ -1,0 +1,82 @@
+import type { CandidateDoc, LonLat, NeedDoc } from '../../core/index.ts'
+import { type DraftStudy, freeCandidateId, withValue } from './draft.ts'
+import type { StudyStore } from './studyStore.ts'
+
+const DEFAULT_MASTS_M = [10, 20, 30]
+const PLACE_DECIMALS = 7
+
+const rounded = ({ lon, lat }: LonLat): LonLat => ({ lon: Number(lon.toFixed(PLACE_DECIMALS)), lat: Number(lat.toFixed(PLACE_DECIMALS)) })
+const changeCandidate = (doc: DraftStudy, id: string, part: Partial<CandidateDoc>): DraftStudy => ({
+  ...doc,
+  candidates: doc.candidates.map((c) => (c.id === id ? { ...c, ...part } : c)),
+})
+
+/** Sets or (undefined) clears one field by its key path. `words` names it in undo: "changed tilt". */
+export const setField = (store: StudyStore, path: string, value: unknown, words: string): void =>
+  store.getState().edit(words, (doc) => withValue(doc, path, value))
+
+export const renameStudy = (store: StudyStore, name: string): void =>
+  store.getState().edit('renamed the study', (doc) => (name === doc.name ? doc : { ...doc, name }))
+
+/** A new candidate at `at`, with the masts of the last one; returns its id. */
+export function addCandidate(store: StudyStore, at: LonLat): string {
+  const { candidates } = store.getState().doc
+  const id = freeCandidateId(candidates)
+  const mastHeightsM = candidates.at(-1)?.mastHeightsM ?? DEFAULT_MASTS_M
+  store.getState().edit(`placed ${id}`, (doc) => ({
+    ...doc,
+    candidates: [...doc.candidates, { id, name: `Place ${id}`, ...rounded(at), mastHeightsM: [...mastHeightsM] }],
+  }))
+  return id
+}
+/** Moves a candidate. With `dragging`, folds into one undo step until `store.getState().drop()`. */
+export function moveCandidate(store: StudyStore, id: string, to: LonLat, dragging = false): void {
+  const { edit, drag } = store.getState()
+  const how = dragging ? drag : edit
+  how(`moved ${id}`, (doc) => changeCandidate(doc, id, rounded(to)))
+}
+export const renameCandidate = (store: StudyStore, id: string, name: string): void =>
+  store.getState().edit(`renamed ${id}`, (doc) => changeCandidate(doc, id, { name }))
+export const removeCandidate = (store: StudyStore, id: string): void =>
+  store.getState().edit(`removed ${id}`, (doc) => ({ ...doc, candidates: doc.candidates.filter((c) => c.id !== id) }))
+
+/** Replaces the mast heights of a candidate; sorted, each once. Refused (no change) when none is left. */
+export function setMastHeights(store: StudyStore, id: string, heightsM: readonly number[], dragging = false): void {
+  const mastHeightsM = [...new Set(heightsM)].sort((a, b) => a - b)
+  if (mastHeightsM.length === 0) return
+  const { edit, drag } = store.getState()
+  const how = dragging ? drag : edit
+  how(`changed masts of ${id}`, (doc) => changeCandidate(doc, id, { mastHeightsM }))
+}
+/** One mast height of a candidate becomes another: what a drag on the ruler does. */
+export function changeMastHeight(store: StudyStore, id: string, fromM: number, toM: number, dragging = false): void {
+  const now = store.getState().doc.candidates.find((c) => c.id === id)?.mastHeightsM ?? []
+  setMastHeights(
+    store,
+    id,
+    now.map((h) => (h === fromM ? toM : h)),
+    dragging,
+  )
+}
+export const setCandidateField = <K extends keyof CandidateDoc>(
+  store: StudyStore,
+  id: string,
+  key: K,
+  value: CandidateDoc[K] | undefined,
+): void =>
+  store.getState().edit(`changed ${id}`, (doc) => {
+    const at = doc.candidates.findIndex((c) => c.id === id)
+    return at < 0 ? doc : withValue(doc, `candidates.${at}.${key}`, value)
+  })
+
+/** A new layer need; returns its id. */
+export function addNeed(store: StudyStore): string {
+  const needs = store.getState().doc.needs ?? []
+  let n = needs.length + 1
+  while (needs.some((need) => need.id === `n${n}`)) n++
+  const need: NeedDoc = { id: `n${n}`, name: `Need ${n}`, must: true, kind: 'layer', heightM: 300, heightAbove: 'sea' }
+  store.getState().edit(`added need ${n}`, (doc) => ({ ...doc, needs: [...(doc.needs ?? []), need] }))
+  return need.id
+}
+export const removeNeed = (store: StudyStore, id: string): void =>
+  store.getState().edit('removed a need', (doc) => ({ ...doc, needs: (doc.needs ?? []).filter((n) => n.id !== id) }))

@@ -1,0 +1,71 @@
+import { createStore } from 'zustand/vanilla'
+import type { Answer, OptionRef, OptionResult, Tell } from '../../core/index.ts'
+
+export type Failure = Extract<Tell, { kind: 'failure' }>['error']
+export type GroundAnswer = NonNullable<Answer['ground']>
+export interface RunStatus {
+  readonly done: number
+  readonly total: number
+  readonly secondsLeft: number | null
+  readonly doing: string
+}
+export interface ResultsState {
+  /** By `optionKey`. */
+  readonly byOption: ReadonlyMap<string, OptionResult>
+  /** null when nothing runs. */
+  readonly status: RunStatus | null
+  readonly warnings: readonly string[]
+  readonly failure: Failure | null
+  /** What the study worker said of the ground it holds; null while there is none. */
+  readonly ground: GroundAnswer | null
+  /** Ground under each candidate by id, m MSL; null off the terrain or over a void. */
+  readonly groundAtM: ReadonlyMap<string, number | null>
+  /** Grows with every `figures`; charts and memo redraw on it. */
+  readonly serial: number
+  /** When the last run ended, ms since 1970. */
+  readonly ranAt: number | null
+}
+export type WorkerTell = Exclude<Tell, { kind: 'reply' }>
+
+/** One key per option: candidate, mast height, tilt. */
+export const optionKey = (o: OptionRef): string => `${o.candidate}|${o.heightM}|${o.tiltDeg}`
+
+const nothing: ResultsState = {
+  byOption: new Map(),
+  status: null,
+  warnings: [],
+  failure: null,
+  ground: null,
+  groundAtM: new Map(),
+  serial: 0,
+  ranAt: null,
+}
+/** What the study worker has answered so far; never saved, never undone. */
+export const createResultsStore = () => createStore<ResultsState>()(() => nothing)
+export type ResultsStore = ReturnType<typeof createResultsStore>
+
+/** Takes one message of the study worker into the store. `now` is the clock of the page, ms. */
+export function takeTell(store: ResultsStore, tell: WorkerTell, now: number): void {
+  const state = store.getState()
+  if (tell.kind === 'figures') {
+    const byOption = new Map(state.byOption)
+    for (const r of tell.results) byOption.set(optionKey(r.ref), r)
+    store.setState({ byOption, serial: state.serial + 1, failure: null })
+  } else if (tell.kind === 'status') {
+    const over = tell.done >= tell.total
+    store.setState({ status: over ? null : tell, ...(over && state.status ? { ranAt: now } : {}) })
+  } else if (tell.kind === 'warnings') store.setState({ warnings: tell.warnings })
+  else if (tell.kind === 'failure') store.setState({ failure: tell.error, status: null })
+}
+
+/** Drops results of options the study no longer has. */
+export function keepOptions(store: ResultsStore, options: readonly OptionRef[]): void {
+  const { byOption, serial } = store.getState()
+  const wanted = new Set(options.map(optionKey))
+  const kept = [...byOption].filter(([key]) => wanted.has(key))
+  if (kept.length !== byOption.size) store.setState({ byOption: new Map(kept), serial: serial + 1 })
+}
+
+/** Another study or another ground: nothing shown so far holds. */
+export const forgetResults = (store: ResultsStore): void =>
+  store.setState({ ...nothing, serial: store.getState().serial + 1, ground: null }, true)

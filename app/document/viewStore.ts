@@ -1,0 +1,70 @@
+import { createJSONStorage, persist } from 'zustand/middleware'
+import { createStore } from 'zustand/vanilla'
+import type { LayerId, LonLat, OptionRef } from '../../core/index.ts'
+
+export const STEPS = ['ground', 'radar', 'need', 'candidates', 'compare', 'memo'] as const
+export type StepId = (typeof STEPS)[number]
+/** NM and ft, or km and m. Mast heights are metres in both. */
+export type UnitSystem = 'nautical' | 'metric'
+export type Theme = 'paper' | 'night'
+/** What stands over the lower half of the map. */
+export type OpenChart = 'profile' | 'ledger' | null
+
+/** What is looked at: kept over a reload, never undone, never saved with the study. */
+export interface ViewState {
+  readonly step: StepId
+  /** The step's form is shown; only narrow windows fold it. */
+  readonly formOpen: boolean
+  /** The memo column is shown where it is a drawer. */
+  readonly memoOpen: boolean
+  /** The option on show; null while there is no candidate. */
+  readonly option: OptionRef | null
+  readonly layer: LayerId
+  /** Need the layer is about, where it is about one. */
+  readonly need: string | null
+  readonly units: UnitSystem
+  readonly theme: Theme
+  /** Cell whose ledger is asked for. */
+  readonly cell: LonLat | null
+  readonly chart: OpenChart
+  /** Azimuth of the profile chart. */
+  readonly profileAzimuthDeg: number | null
+  /** The next click on the map places a candidate. */
+  readonly placing: boolean
+  /** Edits wait for "Run" instead of running by themselves. */
+  readonly hold: boolean
+  set(part: Partial<Omit<ViewState, 'set'>>): void
+}
+
+const KEY = 'sightfell.view'
+
+/** The view store. `storage` is the page's local storage; without one nothing is kept. */
+export function createViewStore(storage?: Storage, prefersDark = false) {
+  return createStore<ViewState>()(
+    persist(
+      (set) => ({
+        step: 'ground',
+        formOpen: true,
+        memoOpen: false,
+        option: null,
+        layer: 'clutter-to-noise',
+        need: null,
+        units: 'nautical',
+        theme: prefersDark ? 'night' : 'paper',
+        cell: null,
+        chart: null,
+        profileAzimuthDeg: null,
+        placing: false,
+        hold: false,
+        set: (part) => set(part),
+      }),
+      {
+        name: KEY,
+        version: 1,
+        storage: storage ? createJSONStorage(() => storage) : undefined,
+        partialize: ({ set: _set, placing: _placing, ...kept }) => kept,
+      },
+    ),
+  )
+}
+export type ViewStore = ReturnType<typeof createViewStore>
