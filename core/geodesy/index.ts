@@ -1,1 +1,8 @@
+export * from './crs.ts'
+export * from './earthRadius.ts'
+export * from './geodesics.ts'
+export { normalLon } from './longitude.ts'
+export * from './position.ts'
+export * from './sightGeometry.ts'
+export { type CrsTransform, crsTransform, loadCrs } from './transform.ts'
 export * from './types.ts'

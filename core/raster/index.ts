@@ -1,1 +1,5 @@
+export * from './lattice.ts'
+export * from './planGround.ts'
+export * from './position.ts'
+export * from './sample.ts'
 export * from './types.ts'
