@@ -1,5 +1,5 @@
-import { temporal } from 'zundo'
-import { createStore } from 'zustand/vanilla'
+import { type TemporalState, temporal } from 'zundo'
+import { createStore, type StoreApi } from 'zustand/vanilla'
 import { type DraftStudy, emptyStudy } from './draft.ts'
 
 /** What undo keeps: the document, and the words that name the change which led to it. */
@@ -19,11 +19,13 @@ export interface StudyState extends Recorded {
   load(doc: DraftStudy): void
 }
 
+export type StudyStore = StoreApi<StudyState> & { temporal: StoreApi<TemporalState<Recorded>> }
+
 const UNDO_STEPS = 300
 
 /** The study document with undo; no React, no page, so tests and memo use the same store. */
-export function createStudyStore(start: DraftStudy = emptyStudy()) {
-  const store = createStore<StudyState>()(
+export function createStudyStore(start: DraftStudy = emptyStudy()): StudyStore {
+  const store: StudyStore = createStore<StudyState>()(
     temporal(
       (set, get) => {
         const apply = (words: string, make: (doc: DraftStudy) => DraftStudy) => {
@@ -60,7 +62,6 @@ export function createStudyStore(start: DraftStudy = emptyStudy()) {
   const history = () => store.temporal.getState()
   return store
 }
-export type StudyStore = ReturnType<typeof createStudyStore>
 
 /** Takes the last change back. */
 export const undo = (store: StudyStore): void => store.temporal.getState().undo()

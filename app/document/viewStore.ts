@@ -1,11 +1,10 @@
 import { createJSONStorage, persist } from 'zustand/middleware'
 import { createStore } from 'zustand/vanilla'
 import type { LayerId, LonLat, OptionRef } from '../../core/index.ts'
+import type { UnitSystem } from '../words/index.ts'
 
 export const STEPS = ['ground', 'radar', 'need', 'candidates', 'compare', 'memo'] as const
 export type StepId = (typeof STEPS)[number]
-/** NM and ft, or km and m. Mast heights are metres in both. */
-export type UnitSystem = 'nautical' | 'metric'
 export type Theme = 'paper' | 'night'
 /** What stands over the lower half of the map. */
 export type OpenChart = 'profile' | 'ledger' | null

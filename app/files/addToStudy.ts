@@ -1,0 +1,39 @@
+import { type DraftStudy, filesOf } from '../document/index.ts'
+import type { FileRole } from './types.ts'
+
+/** The study with a file in a role; the same object when the study names the file already. */
+export function addToStudy(doc: DraftStudy, file: string, role: FileRole): DraftStudy {
+  if (filesOf(doc).includes(file)) return doc
+  switch (role) {
+    case 'terrain':
+      return { ...doc, terrain: [...doc.terrain, { file }] }
+    case 'landCover':
+      return { ...doc, landCover: { file, legend: doc.landCover?.legend ?? legendOf(file) } }
+    case 'obstacles':
+      return { ...doc, obstacles: { file } }
+    case 'roads':
+      return { ...doc, roads: { file } }
+    case 'facades':
+      return { ...doc, facades: { file } }
+    case 'landTable':
+      return { ...doc, tables: { ...doc.tables, lowAngleLand: file } }
+    default:
+      return doc
+  }
+}
+
+/** Takes a file out of every place of the study that names it. */
+export function takeOut(doc: DraftStudy, file: string): DraftStudy {
+  const { landCover, obstacles, roads, facades, ...rest } = doc
+  return {
+    ...rest,
+    terrain: doc.terrain.filter((t) => t.file !== file),
+    ...(landCover && landCover.file !== file ? { landCover } : {}),
+    ...(obstacles && obstacles.file !== file ? { obstacles } : {}),
+    ...(roads && roads.file !== file ? { roads } : {}),
+    ...(facades && facades.file !== file ? { facades } : {}),
+  }
+}
+
+const legendOf = (file: string): 'worldcover' | 'nlcd' | 'corine' =>
+  /nlcd/i.test(file) ? 'nlcd' : /corine|clc|u20\d\d/i.test(file) ? 'corine' : 'worldcover'

@@ -1,0 +1,5 @@
+export * from './addToStudy.ts'
+export * from './fileRole.ts'
+export * from './served.ts'
+export * from './takeIn.ts'
+export * from './types.ts'

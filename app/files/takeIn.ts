@@ -1,0 +1,55 @@
+import { InputError } from '../../core/index.ts'
+import { type DraftStudy, type FileStore, type GivenFile, openPackage, openStudyText, type StudyStore } from '../document/index.ts'
+import { addToStudy } from './addToStudy.ts'
+import { fileRole } from './fileRole.ts'
+import type { FileRole } from './types.ts'
+
+export interface TakenIn {
+  /** A study was opened: everything of the one before is gone. */
+  readonly opened: boolean
+  readonly warnings: readonly string[]
+  /** Files the opened study names that are not here yet. */
+  readonly missing: readonly string[]
+}
+type Named = Blob & { readonly name: string }
+
+/**
+ * Takes dropped or picked files into the study: a study or package replaces what is open (loose files beside it join it), anything else is
+ * added in one step of undo. `as` overrides the guess of what a file is. Throws InputError and changes nothing when one cannot be used.
+ */
+export async function takeIn(study: StudyStore, given: FileStore, dropped: readonly Named[], as?: FileRole): Promise<TakenIn> {
+  const sorted = await Promise.all(dropped.map(async (file) => ({ file, role: as ?? (await fileRole(file)) })))
+  const head = sorted.find((s) => s.role === 'study' || s.role === 'package')
+  if (head) {
+    const loose = sorted.filter((s) => s !== head).map(({ file }) => ({ name: file.name, blob: file }))
+    const opened =
+      head.role === 'package'
+        ? await openPackage(new Uint8Array(await head.file.arrayBuffer()), head.file.name)
+        : openStudyText(await head.file.text(), head.file.name, loose)
+    given.getState().replace(opened.files)
+    study.getState().load(opened.doc)
+    return { opened: true, warnings: opened.warnings, missing: opened.missing }
+  }
+  const useless = sorted.find((s) => s.role === 'unknown')
+  if (useless)
+    throw new InputError({
+      code: 'unknown-file',
+      file: useless.file.name,
+      found: 'neither GeoTIFF, GeoJSON, study nor package',
+      remedy: 'give a .tif, .geojson, .json or .zip file',
+    })
+  const doc = study.getState().doc
+  given.getState().give(sorted.map(({ file, role }) => ({ name: nameInStudy(doc, file.name, role), blob: file }) satisfies GivenFile))
+  const words = sorted.length === 1 ? `added ${sorted[0].file.name}` : `added ${sorted.length} files`
+  study.getState().edit(words, (before) => sorted.reduce((d, s) => addToStudy(d, nameInStudy(d, s.file.name, s.role), s.role), before))
+  return { opened: false, warnings: [], missing: [] }
+}
+
+/** A study may name a file with folders; a dropped file of that last name is that file. */
+function nameInStudy(doc: DraftStudy, name: string, role: FileRole): string {
+  const named =
+    role === 'terrain'
+      ? doc.terrain.map((t) => t.file)
+      : [doc.landCover?.file, doc.obstacles?.file, doc.roads?.file, doc.tables?.lowAngleLand]
+  return named.find((n) => n !== undefined && (n === name || n.endsWith(`/${name}`))) ?? name
+}
