@@ -61,6 +61,8 @@ export interface NeedDoc {
   swerling?: 0 | 1 | 2 | 3 | 4
   pd?: number
   requiredRatioDb?: number | null
+  /** Share of the area that must be met for the need to count as met, %. */
+  requiredPct?: number
   kind: 'layer' | 'fixes' | 'track' | 'polygon'
   heightM?: number | [number, number]
   heightAbove?: 'sea' | 'ground'
@@ -128,6 +130,8 @@ export interface SettledNeed {
   /** D0, dB: stated, or 13 dB marked default. */
   readonly requiredRatioDb: number
   readonly requiredRatioMark: 'default' | null
+  /** Share of the area that must be met, %; 100 unless stated. */
+  readonly requiredPct: number
   readonly kind: NeedDoc['kind']
   /** Heights tested, m: one, or floor, three between, ceiling. */
   readonly levelsM: readonly number[]

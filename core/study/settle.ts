@@ -1,0 +1,181 @@
+import { InputError } from '../errors/index.ts'
+import type { RadarInput } from '../radar/index.ts'
+import { checkDoc } from './checkDoc.ts'
+import { instrumentedRangeOf } from './crossChecks.ts'
+import { defaultAzimuthStepDeg, defaultRangeStepM, evenStepDeg, gateOfM } from './grid.ts'
+import { limitOf } from './limits.ts'
+import type { CandidateDoc, DefaultUsed, NeedDoc, RadarDoc, SettledCandidate, SettledNeed, SettledStudy, StudyDoc } from './types.ts'
+
+/** Signal-to-noise ratio asked for where none is stated, dB. */
+export const DEFAULT_REQUIRED_RATIO_DB = 13
+
+/** Takes what is stated, else the default, and writes the default down. */
+class Defaults {
+  readonly used: DefaultUsed[] = []
+  take<T extends string | number | boolean | null>(path: string, stated: T | undefined, value: T, unit = limitOf(path)?.unit ?? ''): T {
+    if (stated !== undefined) return stated
+    this.used.push({ path, value, unit })
+    return value
+  }
+}
+
+function settleRadar(r: RadarDoc, instrumentedRangeM: number, d: Defaults): RadarInput {
+  const a = r.antenna
+  const s = r.suppression
+  const compressedPulseWidthS = d.take('radar.compressedPulseWidthS', r.compressedPulseWidthS, r.pulseWidthS)
+  const pattern = d.take('radar.antenna.elevationPattern', a.elevationPattern, 'gaussian')
+  const beamwidthUnused = pattern === 'table'
+  const kind = d.take('radar.suppression.kind', s?.kind, 'none')
+  const stcKind = d.take('radar.stc.kind', r.stc?.kind, 'none')
+  const takesPulses = kind === 'canceller' || kind === 'filterBank'
+  return {
+    name: d.take('radar.name', r.name, 'Unnamed radar'),
+    frequencyHz: r.frequencyHz,
+    peakPowerW: r.peakPowerW,
+    pulseWidthS: r.pulseWidthS,
+    compressedPulseWidthS,
+    noiseBandwidthHz: d.take('radar.noiseBandwidthHz', r.noiseBandwidthHz, 1 / compressedPulseWidthS),
+    prfHz: [...r.prfHz],
+    prfMode: d.take('radar.prfMode', r.prfMode, 'single'),
+    coherentTransmitter: d.take('radar.coherentTransmitter', r.coherentTransmitter, false),
+    polarisation: d.take('radar.polarisation', r.polarisation, 'V'),
+    rotationRpm: d.take('radar.rotationRpm', r.rotationRpm, 10),
+    noiseFigureDb: d.take('radar.noiseFigureDb', r.noiseFigureDb, 4),
+    systemLossDb: d.take('radar.systemLossDb', r.systemLossDb, 6),
+    pfa: d.take('radar.pfa', r.pfa, 1e-6),
+    antenna: {
+      gainDbi: a.gainDbi,
+      azimuthBeamwidthDeg: a.azimuthBeamwidthDeg,
+      elevationBeamwidthDeg: beamwidthUnused
+        ? (a.elevationBeamwidthDeg ?? 5)
+        : d.take('radar.antenna.elevationBeamwidthDeg', a.elevationBeamwidthDeg, 5),
+      elevationPattern: pattern,
+      cosecantLimitDeg:
+        pattern === 'cosecant-squared' ? d.take('radar.antenna.cosecantLimitDeg', a.cosecantLimitDeg, 30) : (a.cosecantLimitDeg ?? 30),
+      elevationTable: a.elevationTable ?? [],
+      sidelobeDb: d.take('radar.antenna.sidelobeDb', a.sidelobeDb, -28),
+      elevationSidelobeDb: d.take('radar.antenna.elevationSidelobeDb', a.elevationSidelobeDb, -30),
+      tiltDeg: d.take('radar.antenna.tiltDeg', a.tiltDeg, 0),
+      apertureWidthM: a.apertureWidthM ?? null,
+      apertureHeightM: a.apertureHeightM ?? null,
+    },
+    suppression: {
+      kind,
+      statedDb: s?.statedDb ?? 0,
+      pulses: takesPulses ? d.take('radar.suppression.pulses', s?.pulses, kind === 'canceller' ? 3 : 8) : (s?.pulses ?? 1),
+      stabilityLimitDb: s?.stabilityLimitDb ?? null,
+      bits: s?.bits ?? null,
+    },
+    stc: { kind: stcKind, curve: r.stc?.curve ?? [], cornerM: r.stc?.cornerM ?? 0, maxDb: r.stc?.maxDb ?? 0 },
+    instrumentedRangeM: d.take('radar.instrumentedRangeM', r.instrumentedRangeM, instrumentedRangeM),
+  }
+}
+
+/** Floor, three between and ceiling; or the one height. */
+function levels(heightM: NeedDoc['heightM']): readonly number[] {
+  if (heightM === undefined) return []
+  if (typeof heightM === 'number') return [heightM]
+  const [floor, ceiling] = heightM
+  return [0, 1, 2, 3, 4].map((n) => floor + ((ceiling - floor) * n) / 4)
+}
+
+function settleNeed(n: NeedDoc, i: number, maxRangeM: number, d: Defaults): SettledNeed {
+  const path = (key: string) => `needs[${i}].${key}`
+  const ratioStated = n.requiredRatioDb ?? undefined
+  return {
+    id: n.id,
+    name: n.name ?? n.id,
+    must: d.take(path('must'), n.must, true),
+    rcsM2: d.take(path('rcsM2'), n.rcsM2, 1),
+    swerling: d.take(path('swerling'), n.swerling, 1),
+    pd: d.take(path('pd'), n.pd, 0.8),
+    requiredRatioDb: d.take(path('requiredRatioDb'), ratioStated, DEFAULT_REQUIRED_RATIO_DB),
+    requiredRatioMark: ratioStated === undefined ? 'default' : null,
+    requiredPct: d.take(path('requiredPct'), n.requiredPct, 100),
+    kind: n.kind,
+    levelsM: levels(n.heightM),
+    heightAbove: d.take(path('heightAbove'), n.heightAbove, 'sea'),
+    fromRangeM: d.take(path('fromRangeM'), n.fromRangeM, 0),
+    toRangeM: d.take(path('toRangeM'), n.toRangeM, maxRangeM),
+    sectorDeg: n.sectorDeg ?? [0, 360],
+  }
+}
+
+function settleCandidate(c: CandidateDoc, i: number, antennaTiltDeg: number, d: Defaults): SettledCandidate {
+  return {
+    id: c.id,
+    name: c.name ?? c.id,
+    lon: c.lon,
+    lat: c.lat,
+    groundHeightM: c.groundHeightM ?? null,
+    mastHeightsM: [...c.mastHeightsM],
+    tiltsDeg: c.tiltsDeg ? [...c.tiltsDeg] : [antennaTiltDeg],
+    clearingRadiusM: d.take(`candidates[${i}].clearingRadiusM`, c.clearingRadiusM, 50),
+    notes: c.notes ?? '',
+  }
+}
+
+/**
+ * Fills in every default of a sound document and lists each one used.
+ * @param fileName for the sentence of an error
+ * @throws InputError at the first problem of the document
+ */
+export function settle(doc: StudyDoc, fileName?: string): SettledStudy {
+  const first = checkDoc(doc).problems[0]
+  if (first) throw new InputError({ ...first, place: first.path, ...(fileName === undefined ? {} : { file: fileName }) })
+  const d = new Defaults()
+  const terrain = doc.terrain.map((t, i) => ({
+    file: t.file,
+    heights: d.take(`terrain[${i}].heights`, t.heights as 'orthometric' | undefined, 'orthometric'),
+    verticalErrorM: d.take(`terrain[${i}].verticalErrorM`, t.verticalErrorM, 10),
+    crs: t.crs ?? null,
+    unit: t.unit ?? null,
+  }))
+  const bare = doc.landCover === undefined && doc.uniformTerrain === undefined
+  const uniformTerrain = bare ? d.take('uniformTerrain', doc.uniformTerrain, 'rural') : (doc.uniformTerrain ?? 'rural')
+  const air = doc.atmosphere
+  const atmosphere = {
+    effectiveEarthFactor: d.take('atmosphere.effectiveEarthFactor', air?.effectiveEarthFactor, 4 / 3),
+    earthRadiusM: air?.earthRadiusM ?? null,
+    gas: d.take('atmosphere.gas', air?.gas, 'none'),
+    rainRateMmH: d.take('atmosphere.rainRateMmH', air?.rainRateMmH, 0),
+    windMs: d.take('atmosphere.windMs', air?.windMs, 8),
+    seaState: d.take('atmosphere.seaState', air?.seaState, 3),
+  }
+  const radar = settleRadar(doc.radar, instrumentedRangeOf(doc.radar, doc.run), d)
+  const maxRangeM = d.take('run.maxRangeM', doc.run?.maxRangeM, radar.instrumentedRangeM)
+  const stated = doc.run?.azimuthStepDeg
+  const azimuthStepDeg = d.take(
+    'run.azimuthStepDeg',
+    stated === undefined ? undefined : evenStepDeg(stated),
+    defaultAzimuthStepDeg(radar.antenna.azimuthBeamwidthDeg),
+  )
+  const rangeStepM = d.take(
+    'run.rangeStepM',
+    doc.run?.rangeStepM,
+    defaultRangeStepM(gateOfM(radar.compressedPulseWidthS), maxRangeM, azimuthStepDeg),
+  )
+  return {
+    name: doc.name,
+    terrain,
+    landCover: doc.landCover ?? null,
+    uniformTerrain,
+    uniformTerrainMark: bare ? 'default' : null,
+    obstacles: doc.obstacles?.file ?? null,
+    roads: doc.roads?.file ?? null,
+    lowAngleLandTable: doc.tables?.lowAngleLand ?? null,
+    atmosphere,
+    radar,
+    needs: (doc.needs ?? []).map((n, i) => settleNeed(n, i, maxRangeM, d)),
+    candidates: doc.candidates.map((c, i) => settleCandidate(c, i, radar.antenna.tiltDeg, d)),
+    run: { maxRangeM, rangeStepM, azimuthStepDeg },
+    defaults: d.used,
+  }
+}
+
+/** Every option of a study: candidate × mast height × tilt, in the order written. */
+export function optionsOf(study: SettledStudy): { candidate: string; heightM: number; tiltDeg: number }[] {
+  return study.candidates.flatMap((c) =>
+    c.mastHeightsM.flatMap((heightM) => c.tiltsDeg.map((tiltDeg) => ({ candidate: c.id, heightM, tiltDeg }))),
+  )
+}
