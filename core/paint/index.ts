@@ -1,1 +1,6 @@
+export * from './hillshade.ts'
+export * from './map.ts'
+export * from './mercator.ts'
+export * from './polar.ts'
+export * from './ramps.ts'
 export * from './types.ts'
