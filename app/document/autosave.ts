@@ -1,5 +1,6 @@
 import { createStore } from 'zustand/vanilla'
-import { type DraftStudy, filesOf } from './draft.ts'
+import type { StudyDoc } from '../../core/index.ts'
+import { filesOf } from './draft.ts'
 import type { FileStore, GivenFile } from './fileStore.ts'
 import type { StudyStore } from './studyStore.ts'
 
@@ -23,7 +24,7 @@ export interface SaveState {
 interface KeptStudy {
   readonly version: 1
   readonly at: number
-  readonly doc: DraftStudy
+  readonly doc: StudyDoc
 }
 
 const STUDY_KEY = 'study'
@@ -35,7 +36,7 @@ export const createSaveStore = () => createStore<SaveState>()(() => ({ state: 's
 export type SaveStore = ReturnType<typeof createSaveStore>
 
 /** What an earlier visit left: document and files, or null. The journal wins where it is newer than the shelf. */
-export async function restore(shelf: Shelf, journal: Journal | null): Promise<{ doc: DraftStudy; files: GivenFile[] } | null> {
+export async function restore(shelf: Shelf, journal: Journal | null): Promise<{ doc: StudyDoc; files: GivenFile[] } | null> {
   const kept = (await shelf.get(STUDY_KEY)) as KeptStudy | undefined
   const noted = readJournal(journal)
   const newest = noted && (!kept || noted.at > kept.at) ? noted : kept

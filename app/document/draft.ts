@@ -1,36 +1,15 @@
-import type { AntennaDoc, CandidateDoc, RadarDoc, StudyDoc } from '../../core/index.ts'
+import { type CandidateDoc, checkDoc, type FieldProblem, newStudy, STARTING_RADAR_NAME, type StudyDoc } from '../../core/index.ts'
 
-/** The radar while it is being entered: any field may still be missing. */
-export type DraftRadar = Omit<Partial<RadarDoc>, 'antenna'> & { antenna: Partial<AntennaDoc> }
-/** The document as the app edits it: a study file whose radar need not be whole yet. */
-export interface DraftStudy extends Omit<StudyDoc, 'radar'> {
-  radar: DraftRadar
-}
+/** A study with no files and no candidates, and a radar of round starting values that says so. */
+export const emptyStudy = (): StudyDoc => newStudy('Untitled study')
 
-/** Fields of the radar without which nothing can be computed, as key paths of the study file. */
-export const REQUIRED_RADAR_PATHS = [
-  'radar.frequencyHz',
-  'radar.peakPowerW',
-  'radar.pulseWidthS',
-  'radar.prfHz',
-  'radar.antenna.gainDbi',
-  'radar.antenna.azimuthBeamwidthDeg',
-] as const
+/** Steps of a key path: `needs[0].sectorDeg` or `needs.0.sectorDeg`. */
+const stepsOf = (path: string): string[] => path.split(/[.[\]]+/).filter((s) => s !== '')
 
-/** A study with nothing in it but a name. */
-export const emptyStudy = (): DraftStudy => ({
-  format: 'sightfell-study',
-  version: 1,
-  name: 'Untitled study',
-  terrain: [],
-  radar: { antenna: {} },
-  candidates: [],
-})
-
-/** Value at a key path such as `radar.antenna.tiltDeg` or `needs.0.rcsM2`; undefined where the path leads nowhere. */
+/** Value at a key path; undefined where the path leads nowhere. */
 export function valueAt(doc: unknown, path: string): unknown {
   let here = doc
-  for (const key of path.split('.')) {
+  for (const key of stepsOf(path)) {
     if (here === null || typeof here !== 'object') return undefined
     here = (here as Record<string, unknown>)[key]
   }
@@ -39,33 +18,39 @@ export function valueAt(doc: unknown, path: string): unknown {
 
 /** A copy of `doc` with the value at `path` replaced; undefined removes the key. Missing objects on the way are made. */
 export function withValue<T>(doc: T, path: string, value: unknown): T {
-  const [key, ...rest] = path.split('.')
-  if (value === undefined && valueAt(doc, key) === undefined) return doc
-  const copy = (Array.isArray(doc) ? [...doc] : { ...doc }) as Record<string, unknown>
-  const next = rest.length === 0 ? value : withValue(copy[key] ?? {}, rest.join('.'), value)
-  if (next === undefined) {
-    if (Array.isArray(copy)) copy.splice(Number(key), 1)
-    else delete copy[key]
-  } else copy[key] = next
-  return copy as T
+  return withSteps(doc, stepsOf(path), value) as T
+}
+function withSteps(doc: unknown, [key, ...rest]: string[], value: unknown): unknown {
+  const old = (doc as Record<string, unknown>)[key]
+  if (old === value || (value === undefined && old === undefined)) return doc
+  const copy = (Array.isArray(doc) ? [...doc] : { ...(doc as object) }) as Record<string, unknown>
+  const next = rest.length === 0 ? value : withSteps(old ?? {}, rest, value)
+  if (next !== undefined) copy[key] = next
+  else if (Array.isArray(copy)) copy.splice(Number(key), 1)
+  else delete copy[key]
+  return copy
 }
 
-/** Required radar fields that are still empty. */
-export function missingRadarPaths(doc: DraftStudy): string[] {
-  return REQUIRED_RADAR_PATHS.filter((path) => {
-    const value = valueAt(doc, path)
-    return value === undefined || value === null || (Array.isArray(value) && value.length === 0)
-  })
+/** Is the radar still the round values a new study starts with? */
+export const hasStartingRadar = (doc: StudyDoc): boolean => doc.radar.name === STARTING_RADAR_NAME
+
+const checked = new WeakMap<StudyDoc, readonly FieldProblem[]>()
+/** Everything wrong with the document, at its key paths; checked once per document. */
+export function problemsOf(doc: StudyDoc): readonly FieldProblem[] {
+  let problems = checked.get(doc)
+  if (!problems) {
+    problems = checkDoc(doc).problems
+    checked.set(doc, problems)
+  }
+  return problems
 }
 
-/** The document as a study that can run, or null while terrain, radar or every candidate is missing. */
-export function runnable(doc: DraftStudy): StudyDoc | null {
-  if (doc.terrain.length === 0 || doc.candidates.length === 0 || missingRadarPaths(doc).length > 0) return null
-  return doc as StudyDoc
-}
+/** The document, once it can run; null while terrain or every candidate is missing or a value has to change. */
+export const runnable = (doc: StudyDoc): StudyDoc | null =>
+  doc.terrain.length > 0 && doc.candidates.length > 0 && problemsOf(doc).length === 0 ? doc : null
 
 /** Names of every file the document refers to, each once. */
-export function filesOf(doc: DraftStudy): string[] {
+export function filesOf(doc: StudyDoc): string[] {
   const names = [
     ...doc.terrain.map((t) => t.file),
     doc.landCover?.file,

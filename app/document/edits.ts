@@ -1,12 +1,12 @@
-import type { CandidateDoc, LonLat, NeedDoc } from '../../core/index.ts'
-import { type DraftStudy, freeCandidateId, withValue } from './draft.ts'
+import type { CandidateDoc, LonLat, NeedDoc, StudyDoc } from '../../core/index.ts'
+import { freeCandidateId, withValue } from './draft.ts'
 import type { StudyStore } from './studyStore.ts'
 
 const DEFAULT_MASTS_M = [10, 20, 30]
 const PLACE_DECIMALS = 7
 
 const rounded = ({ lon, lat }: LonLat): LonLat => ({ lon: Number(lon.toFixed(PLACE_DECIMALS)), lat: Number(lat.toFixed(PLACE_DECIMALS)) })
-const changeCandidate = (doc: DraftStudy, id: string, part: Partial<CandidateDoc>): DraftStudy => ({
+const changeCandidate = (doc: StudyDoc, id: string, part: Partial<CandidateDoc>): StudyDoc => ({
   ...doc,
   candidates: doc.candidates.map((c) => (c.id === id ? { ...c, ...part } : c)),
 })

@@ -1,10 +1,10 @@
 import { strFromU8, strToU8, unzip, zip } from 'fflate'
-import { InputError, parseStudy } from '../../core/index.ts'
-import { type DraftStudy, filesOf, missingRadarPaths, withValue } from './draft.ts'
+import { InputError, openDraft, parseStudy, type StudyDoc } from '../../core/index.ts'
+import { filesOf } from './draft.ts'
 import type { GivenFile } from './fileStore.ts'
 
 export interface OpenedStudy {
-  readonly doc: DraftStudy
+  readonly doc: StudyDoc
   /** Files that came with it, by the name the study uses. */
   readonly files: readonly GivenFile[]
   readonly warnings: readonly string[]
@@ -12,39 +12,23 @@ export interface OpenedStudy {
   readonly missing: readonly string[]
 }
 
-/** Any value the schema accepts, put where a half-entered radar has none yet, and taken out again after the check. */
-const STAND_IN: Readonly<Record<string, unknown>> = {
-  'radar.frequencyHz': 1e9,
-  'radar.peakPowerW': 1,
-  'radar.pulseWidthS': 1e-6,
-  'radar.prfHz': [1000],
-  'radar.antenna.gainDbi': 0,
-  'radar.antenna.azimuthBeamwidthDeg': 1,
-}
-
-/** Reads a study file. A radar that is not whole yet is accepted, as this app saves such studies; all else is checked. Throws InputError. */
-export function readStudyText(text: string, fileName: string): { doc: DraftStudy; warnings: readonly string[] } {
-  const unfinished = unfinishedStudy(text)
-  const parsed = unfinished ? parseStudy(JSON.stringify(unfinished.whole), fileName) : parseStudy(text, fileName)
-  let doc = parsed.doc as DraftStudy
-  for (const path of unfinished?.missing ?? []) doc = withValue(doc, path, undefined)
-  if (!doc.radar.antenna) doc = { ...doc, radar: { ...doc.radar, antenna: {} } }
-  return { doc, warnings: parsed.warnings }
-}
-
-/** The study with stand-ins where required radar fields are empty; null when none is, or it is no study of ours. */
-function unfinishedStudy(text: string): { whole: unknown; missing: string[] } | null {
-  let raw: DraftStudy
-  try {
-    raw = JSON.parse(text)
-  } catch {
-    return null // parseStudy names line and column
+/**
+ * Reads a study that may still be in progress: values that have to change stay and are shown at their fields.
+ * Throws InputError for JSON syntax, another format or version, and a document whose lists are not lists.
+ */
+export function readStudyText(text: string, fileName: string): { doc: StudyDoc; warnings: readonly string[] } {
+  const { doc, problems, warnings } = openDraft(text, fileName)
+  const broken = problems.find((p) => SHAPE_CODES.has(p.code) && !editable(p.path))
+  if (broken) parseStudy(text, fileName) // throws, with line and column
+  const radar = { ...doc.radar, prfHz: doc.radar?.prfHz ?? [], antenna: doc.radar?.antenna ?? {} }
+  return {
+    doc: { ...doc, name: doc.name ?? '', terrain: doc.terrain ?? [], candidates: doc.candidates ?? [], radar: radar as StudyDoc['radar'] },
+    warnings,
   }
-  if (raw?.format !== 'sightfell-study' || typeof raw.radar !== 'object' || raw.radar === null) return null
-  const missing = missingRadarPaths(raw)
-  if (missing.length === 0) return null
-  return { whole: missing.reduce((doc, path) => withValue(doc, path, STAND_IN[path]), raw), missing }
 }
+const SHAPE_CODES = new Set(['wrong-kind', 'wrong-shape', 'missing'])
+/** A single value of the radar, or a list that is simply not there, can be put right in the form. */
+const editable = (path: string): boolean => /^radar(\.antenna|\.suppression|\.stc)?(\.[A-Za-z]+)?$|^(terrain|candidates|name)$/.test(path)
 
 /** Paths in a study are relative to it; the page knows files by that path and, dropped loose, by the last part of it. */
 const lastPart = (path: string): string => path.split(/[\\/]/).at(-1) ?? path
@@ -98,10 +82,10 @@ const unzipped = (bytes: Uint8Array, fileName: string) =>
   )
 
 /** The study file as text: two spaces, a line end. */
-export const studyText = (doc: DraftStudy): string => `${JSON.stringify(doc, null, 2)}\n`
+export const studyText = (doc: StudyDoc): string => `${JSON.stringify(doc, null, 2)}\n`
 
 /** A package: `study.json` and every file the study names, stored, as rasters are compressed already. */
-export async function packStudy(doc: DraftStudy, files: ReadonlyMap<string, GivenFile>): Promise<Blob> {
+export async function packStudy(doc: StudyDoc, files: ReadonlyMap<string, GivenFile>): Promise<Blob> {
   const entries: Record<string, [Uint8Array, { level: 0 | 6 }]> = { 'study.json': [strToU8(studyText(doc)), { level: 6 }] }
   for (const name of filesOf(doc)) {
     const file = files.get(name)
@@ -112,7 +96,7 @@ export async function packStudy(doc: DraftStudy, files: ReadonlyMap<string, Give
 }
 
 /** A file name from the study's name: letters, digits and hyphens. */
-export const fileStem = (doc: DraftStudy): string =>
+export const fileStem = (doc: StudyDoc): string =>
   doc.name
     .normalize('NFKD')
     .replace(/[^\p{L}\p{N}]+/gu, '-')

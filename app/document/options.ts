@@ -1,10 +1,9 @@
-import type { OptionRef } from '../../core/index.ts'
-import type { DraftStudy } from './draft.ts'
+import type { OptionRef, StudyDoc } from '../../core/index.ts'
 
 const DEFAULT_TILT_DEG = 0
 
 /** Every option of the study, candidate by candidate, lowest mast first. */
-export function optionsOf(doc: DraftStudy): OptionRef[] {
+export function studyOptions(doc: StudyDoc): OptionRef[] {
   const own = doc.radar.antenna.tiltDeg ?? DEFAULT_TILT_DEG
   return doc.candidates.flatMap((c) =>
     [...c.mastHeightsM]
@@ -18,8 +17,8 @@ export const sameOption = (a: OptionRef | null, b: OptionRef | null): boolean =>
   a === b || (a !== null && b !== null && a.candidate === b.candidate && a.heightM === b.heightM && a.tiltDeg === b.tiltDeg)
 
 /** The option to show: the wished one if the study has it, else the nearest mast of the same candidate, else the first. */
-export function settleOption(doc: DraftStudy, wished: OptionRef | null): OptionRef | null {
-  const all = optionsOf(doc)
+export function settleOption(doc: StudyDoc, wished: OptionRef | null): OptionRef | null {
+  const all = studyOptions(doc)
   if (all.length === 0) return null
   if (wished) {
     const same = all.find((o) => sameOption(o, wished))

@@ -1,22 +1,23 @@
 import { type TemporalState, temporal } from 'zundo'
 import { createStore, type StoreApi } from 'zustand/vanilla'
-import { type DraftStudy, emptyStudy } from './draft.ts'
+import type { StudyDoc } from '../../core/index.ts'
+import { emptyStudy } from './draft.ts'
 
 /** What undo keeps: the document, and the words that name the change which led to it. */
 interface Recorded {
-  readonly doc: DraftStudy
+  readonly doc: StudyDoc
   /** "moved B"; '' for a document as it was opened. */
   readonly change: string
 }
 export interface StudyState extends Recorded {
   /** One step of undo. `words` is a past tense with its object: "moved B", "renamed A". */
-  edit(words: string, make: (doc: DraftStudy) => DraftStudy): void
+  edit(words: string, make: (doc: StudyDoc) => StudyDoc): void
   /** A step of a running drag: the first is recorded, the following fold into it until `drop`. */
-  drag(words: string, make: (doc: DraftStudy) => DraftStudy): void
+  drag(words: string, make: (doc: StudyDoc) => StudyDoc): void
   /** Ends the running drag; harmless when there is none. */
   drop(): void
   /** Another document: undo starts anew. */
-  load(doc: DraftStudy): void
+  load(doc: StudyDoc): void
 }
 
 export type StudyStore = StoreApi<StudyState> & { temporal: StoreApi<TemporalState<Recorded>> }
@@ -24,11 +25,11 @@ export type StudyStore = StoreApi<StudyState> & { temporal: StoreApi<TemporalSta
 const UNDO_STEPS = 300
 
 /** The study document with undo; no React, no page, so tests and memo use the same store. */
-export function createStudyStore(start: DraftStudy = emptyStudy()): StudyStore {
+export function createStudyStore(start: StudyDoc = emptyStudy()): StudyStore {
   const store: StudyStore = createStore<StudyState>()(
     temporal(
       (set, get) => {
-        const apply = (words: string, make: (doc: DraftStudy) => DraftStudy) => {
+        const apply = (words: string, make: (doc: StudyDoc) => StudyDoc) => {
           const doc = make(get().doc)
           if (doc !== get().doc) set({ doc, change: words })
         }

@@ -1,8 +1,9 @@
-import { type DraftStudy, filesOf } from '../document/index.ts'
+import type { StudyDoc } from '../../core/index.ts'
+import { filesOf } from '../document/index.ts'
 import type { FileRole } from './types.ts'
 
 /** The study with a file in a role; the same object when the study names the file already. */
-export function addToStudy(doc: DraftStudy, file: string, role: FileRole): DraftStudy {
+export function addToStudy(doc: StudyDoc, file: string, role: FileRole): StudyDoc {
   if (filesOf(doc).includes(file)) return doc
   switch (role) {
     case 'terrain':
@@ -23,7 +24,7 @@ export function addToStudy(doc: DraftStudy, file: string, role: FileRole): Draft
 }
 
 /** Takes a file out of every place of the study that names it. */
-export function takeOut(doc: DraftStudy, file: string): DraftStudy {
+export function takeOut(doc: StudyDoc, file: string): StudyDoc {
   const { landCover, obstacles, roads, facades, ...rest } = doc
   return {
     ...rest,

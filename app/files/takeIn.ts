@@ -1,5 +1,5 @@
-import { InputError } from '../../core/index.ts'
-import { type DraftStudy, type FileStore, type GivenFile, openPackage, openStudyText, type StudyStore } from '../document/index.ts'
+import { InputError, type StudyDoc } from '../../core/index.ts'
+import { type FileStore, type GivenFile, openPackage, openStudyText, type StudyStore } from '../document/index.ts'
 import { addToStudy } from './addToStudy.ts'
 import { fileRole } from './fileRole.ts'
 import type { FileRole } from './types.ts'
@@ -46,7 +46,7 @@ export async function takeIn(study: StudyStore, given: FileStore, dropped: reado
 }
 
 /** A study may name a file with folders; a dropped file of that last name is that file. */
-function nameInStudy(doc: DraftStudy, name: string, role: FileRole): string {
+function nameInStudy(doc: StudyDoc, name: string, role: FileRole): string {
   const named =
     role === 'terrain'
       ? doc.terrain.map((t) => t.file)

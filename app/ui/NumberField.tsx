@@ -1,0 +1,54 @@
+import type { ReactNode } from 'react'
+import type { Limit } from '../../core/index.ts'
+import { CommitField } from './CommitField.tsx'
+import { Mark } from './Marks.tsx'
+import { allowedAtFace, type FaceUnit, fieldText, readNumber } from './readNumber.ts'
+
+export interface NumberFieldProps {
+  readonly label: ReactNode
+  /** Stored value, SI; undefined or null where nobody stated one. */
+  readonly value: number | null | undefined
+  /** SI, or undefined when the field was emptied. */
+  readonly onCommit: (value: number | undefined) => void
+  readonly face: FaceUnit
+  readonly limit?: Limit
+  /** What stands in while the field is empty, SI; shown in the field and marked *default*. */
+  readonly fallback?: number | null
+  /** Shown while empty when the default is no number: "pulse width". */
+  readonly fallbackWords?: string
+  /** The study cannot run without it. */
+  readonly required?: boolean
+  readonly help?: ReactNode
+  readonly shape?: 'row' | 'wide'
+  readonly hideLabel?: boolean
+  readonly ariaLabel?: string
+}
+
+/** A number with its unit and sane range: SI in the document, face units in the field. */
+export function NumberField(props: NumberFieldProps) {
+  const { value, face, limit, fallback, fallbackWords, required } = props
+  const stated = value !== undefined && value !== null
+  const standIn = fallbackWords ?? (fallback !== undefined && fallback !== null ? fieldText(fallback, face) : '')
+  const commit = (text: string): string | null => {
+    const read = readNumber(text, face, limit)
+    if (!read.ok) return read.why
+    if (read.value === undefined && required) return limit ? `needed; ${allowedAtFace(limit, face)}` : 'needed'
+    props.onCommit(read.value)
+    return null
+  }
+  return (
+    <CommitField
+      label={props.label}
+      text={fieldText(value, face)}
+      onCommit={commit}
+      unit={face.unit}
+      numeric
+      placeholder={stated ? undefined : required ? 'needed' : standIn}
+      marks={!stated && !required && standIn !== '' ? <Mark>default</Mark> : null}
+      help={props.help}
+      shape={props.shape}
+      hideLabel={props.hideLabel}
+      ariaLabel={props.ariaLabel}
+    />
+  )
+}

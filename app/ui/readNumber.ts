@@ -1,0 +1,57 @@
+import { type Limit, within } from '../../core/index.ts'
+
+/** Unit at the face: its word and how many SI units it is. */
+export interface FaceUnit {
+  readonly unit: string
+  readonly size: number
+}
+export type ReadNumber = { readonly ok: true; readonly value: number | undefined } | { readonly ok: false; readonly why: string }
+
+const DIGITS = 7
+const SPACES = /[\s\u00a0\u202f\u2009]/g
+
+/** An SI value as it stands in a field: no grouping, at most seven digits. */
+export function fieldText(si: number | null | undefined, face: FaceUnit): string {
+  if (si === null || si === undefined || !Number.isFinite(si)) return ''
+  return String(Number((si / face.size).toPrecision(DIGITS)))
+}
+
+/** What may stand in a field, in face units: "give 0.03 to 40 GHz". */
+export function allowedAtFace(limit: Limit, face: FaceUnit): string {
+  const low = fieldText(limit.low, face)
+  const high = fieldText(limit.high, face)
+  const unit = face.unit ? ` ${face.unit}` : ''
+  const kind = limit.whole ? 'a whole number ' : ''
+  if (limit.lowOpen) return `give ${kind}above ${low} and ${limit.highOpen ? 'below' : 'up to'} ${high}${unit}`
+  return `give ${kind}from ${low} to ${high}${unit}`
+}
+
+/** Reads what was typed, face units in, SI out. Empty is undefined: the default takes its place. The unit may be typed too. */
+export function readNumber(text: string, face: FaceUnit, limit?: Limit): ReadNumber {
+  let plain = text.replace(SPACES, '').replaceAll('−', '-')
+  if (plain === '') return { ok: true, value: undefined }
+  if (face.unit && plain.endsWith(face.unit.replace(SPACES, ''))) plain = plain.slice(0, -face.unit.replace(SPACES, '').length)
+  if (/^[+-]?\d+,\d{3}$/.test(plain))
+    return { ok: false, why: `“${text.trim()}” can be read two ways; write it with a point, or with no comma` }
+  plain = plain.replace(/^([+-]?\d*),(\d+)$/, '$1.$2')
+  const typed = /^[+-]?(\d+\.?\d*|\.\d+)(e[+-]?\d+)?$/i.test(plain) ? Number(plain) : Number.NaN
+  const may = limit ? `; ${allowedAtFace(limit, face)}` : ''
+  if (!Number.isFinite(typed)) return { ok: false, why: `“${text.trim()}” is no number${may}` }
+  // thirteen digits keep 2.75 GHz from becoming 2 750 000 000.000 000 5 Hz
+  const value = Number((typed * face.size).toPrecision(13))
+  if (limit && !within(limit, value))
+    return { ok: false, why: `${fieldText(value, face)}${face.unit ? ` ${face.unit}` : ''} is outside; ${allowedAtFace(limit, face)}` }
+  return { ok: true, value }
+}
+
+/** A list of numbers parted by commas, semicolons or spaces. */
+export function readNumbers(text: string, face: FaceUnit, limit?: Limit): { ok: true; values: number[] } | { ok: false; why: string } {
+  const parts = text.split(/[;,\s]+/).filter((p) => p !== '' && p !== face.unit)
+  const values: number[] = []
+  for (const part of parts) {
+    const read = readNumber(part, face, limit)
+    if (!read.ok) return read
+    if (read.value !== undefined) values.push(read.value)
+  }
+  return { ok: true, values }
+}
