@@ -1,1 +1,8 @@
 export * from './types.ts'
+export { optionFigures } from './figures.ts'
+export { RING_WIDTH_M } from './groundFigures.ts'
+export { ladderHeightsM, ladderOf, rung, type Rung } from './ladder.ts'
+export { cellsOfNeed, availableSuppressionDb } from './needFigure.ts'
+export { inSector, needCells, PLACE, type NeedCells } from './needCells.ts'
+export { antennaM, meanEffectiveRadiusM, type OptionCells } from './optionCells.ts'
+export { snrDbAt, stcAt, targetSignal, type TargetSignal } from './targetSignal.ts'

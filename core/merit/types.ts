@@ -45,6 +45,8 @@ export interface NeedFigure {
   readonly name: string
   readonly must: boolean
   readonly areaKm2: number
+  /** Share that must be met, %, as the need states it. */
+  readonly requiredPct: number
   readonly inSightPct: number
   readonly inSightKm2: number
   readonly marginalKm2: number
@@ -92,6 +94,6 @@ export interface Ladder {
   readonly inSightPct: readonly number[]
   /** Ground with C/N over 40 dB, km². */
   readonly over40Km2: readonly number[]
-  /** Lowest height of the ladder from which each layer need is wholly in sight; null = not within the ladder. */
+  /** Lowest height of the ladder from which the required share of each layer need is in sight; null = not within the ladder. */
   readonly needMetAtM: readonly { readonly needId: string; readonly name: string; readonly heightM: number | null }[]
 }

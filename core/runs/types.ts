@@ -109,6 +109,8 @@ export interface Ask {
   preview: { candidate: string; lon: number; lat: number; heightM: number }
   paint: { view: View; layer: LayerId; option: OptionRef | 'preview'; opacity?: number }
   base: { view: View }
+  /** Ground and one layer as one opaque picture, for the memo. */
+  map: { view: View; layer: LayerId; option: OptionRef }
   probe: { at: LonLat }
   profile: { azimuthDeg: number; option: OptionRef }
   ledger: { at: LonLat; option: OptionRef }
@@ -123,6 +125,8 @@ export interface Answer {
   /** null when the newest result is not there yet: ask again on `dirty`. Pixels are premultiplied RGBA in an ImageBitmap on the page's side. */
   paint: { bitmap: unknown; view: View } | null
   base: { bitmap: unknown; view: View } | null
+  /** RGBA, width × height × 4. */
+  map: { rgba: Uint8ClampedArray; view: View }
   probe: Probe | null
   profile: Profile
   ledger: CellLedger

@@ -1,0 +1,32 @@
+/// <reference lib="webworker" />
+import type { Ask, Painted } from '../../core/index.ts'
+import type { Envelope } from './messages.ts'
+import { Scheduler } from './scheduler.ts'
+
+const scope = self as unknown as DedicatedWorkerGlobalScope
+const turn = new MessageChannel()
+let waiting = false
+
+/** Pictures leave as bitmaps, everything else as it is. */
+async function finish(kind: keyof Ask, body: unknown): Promise<{ body: unknown; transfer: Transferable[] }> {
+  if (body === null || (kind !== 'paint' && kind !== 'base')) return { body, transfer: [] }
+  const { pixels, view } = body as Painted
+  const image = new ImageData(new Uint8ClampedArray(pixels.buffer as ArrayBuffer), view.width, view.height)
+  const bitmap = await createImageBitmap(image)
+  return { body: { bitmap, view }, transfer: [bitmap] }
+}
+const scheduler = new Scheduler((tell, transfer) => scope.postMessage(tell, transfer ?? []), finish, () => performance.now())
+
+function wake(): void {
+  if (waiting) return
+  waiting = true
+  turn.port2.postMessage(null)
+}
+turn.port1.onmessage = () => {
+  waiting = false
+  if (scheduler.slice()) wake()
+}
+scope.onmessage = ({ data }: MessageEvent<Envelope>) => {
+  scheduler.take(data)
+  wake()
+}

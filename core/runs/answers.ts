@@ -1,0 +1,181 @@
+import { clutterToNoise } from '../clutter/index.ts'
+import { previewSweep, sightAlong, sweep } from '../masking/index.ts'
+import { ladderHeightsM, ladderOf, type OptionCells, rung, type Rung } from '../merit/index.ts'
+import { polarShape } from '../polar/index.ts'
+import { buildGround, groundAt } from '../terrain/index.ts'
+import { share, type Work } from '../work/index.ts'
+import { candidateOf, type Engine, earthOf, siteOf } from './engine.ts'
+import { cellLedger } from './ledger.ts'
+import { paintGround, paintOption, paintSheet } from './pictures.ts'
+import { type ProbeCache, probeAt } from './probe.ts'
+import type { Answer, Ask, Profile, Tell } from './types.ts'
+
+/** What the port turns into an ImageBitmap. */
+export interface Painted {
+  readonly pixels: Uint32Array
+  readonly view: Ask['paint']['view']
+}
+/** Answers as the engine gives them: pictures are pixels here, bitmaps on the page's side. */
+export interface EngineAnswer extends Omit<Answer, 'paint' | 'base'> {
+  paint: Painted | null
+  base: Painted | null
+}
+/** Each azimuth of a drag preview stands for this many of the full grid; range cells are never skipped. */
+const PREVIEW_STRIDE = 4
+/** Heights of the ladder swept together: a bound on memory, the sampling is shared among them. */
+const LADDER_BATCH = 6
+let serial = 0
+
+/** Answers one ask of the page. One per engine. */
+export class Answers {
+  private preview: OptionCells | null = null
+  private readonly probe: ProbeCache = { key: '', values: new Float32Array(0), words: null }
+  /** What to tell the page besides the reply. */
+  readonly tells: Tell[] = []
+
+  constructor(private readonly engine: Engine) {}
+
+  private readonly handlers: { [K in keyof Ask]: (body: Ask[K]) => Work<EngineAnswer[K]> } = {
+    ground: (body) => this.takeGround(body),
+    study: (body) => this.takeStudy(body),
+    preview: (body) => this.previewOf(body),
+    paint: (body) => this.paint(body),
+    base: (body) => this.base(body),
+    map: (body) => this.map(body),
+    probe: (body) => this.probeAt(body),
+    profile: (body) => this.profile(body),
+    ledger: (body) => this.ledger(body),
+    ladder: (body) => this.ladder(body),
+    groundAt: (body) => this.groundAt(body),
+  }
+
+  ask<K extends keyof Ask>(kind: K, body: Ask[K]): Work<EngineAnswer[K]> {
+    return this.handlers[kind](body)
+  }
+
+  private *takeGround(body: Ask['ground']): Work<EngineAnswer['ground']> {
+    const ground = yield* buildGround({ serial: ++serial, ...body })
+    this.engine.setGround(ground)
+    this.preview = null
+    let min = Number.POSITIVE_INFINITY
+    let max = Number.NEGATIVE_INFINITY
+    let voids = 0
+    for (const h of ground.heightM) {
+      if (h !== h) voids++
+      else {
+        if (h < min) min = h
+        if (h > max) max = h
+      }
+    }
+    this.tells.push(this.engine.figures(), { kind: 'dirty' })
+    return { serial: ground.serial, minM: min, maxM: max, voidPct: (100 * voids) / ground.heightM.length, corners: [] }
+  }
+
+  // biome-ignore lint/correctness/useYield: an answer that needs no slices
+  private *takeStudy(body: Ask['study']): Work<null> {
+    this.tells.push(...this.engine.setStudy(body.doc, body.show, body.hold), { kind: 'dirty' })
+    return null
+  }
+
+  private *previewOf(body: Ask['preview']): Work<EngineAnswer['preview']> {
+    const { ground, study } = this.engine.ready()
+    const candidate = candidateOf(study, body.candidate)
+    const place = { ...siteOf(candidate), lon: body.lon, lat: body.lat }
+    const moved = body.lon !== candidate.lon || body.lat !== candidate.lat
+    const site = moved ? { ...place, groundHeightM: null } : place
+    const earth = earthOf(study)
+    const swept = previewSweep(ground, site, body.heightM, polarShape(study.run), earth, PREVIEW_STRIDE)
+    const tiltDeg = this.engine.shown.option?.tiltDeg ?? candidate.tiltsDeg[0]
+    const clutter = yield* clutterToNoise(swept.site, swept.mask, ground.codes, site, body.heightM, earth, study.radar, tiltDeg)
+    this.preview = { ground, place: site, earth, radar: study.radar, heightM: body.heightM, tiltDeg, site: swept.site, mask: swept.mask, clutter }
+    const siteGroundM = swept.site.siteGroundM
+    return {
+      siteGroundM: Number.isFinite(siteGroundM) ? siteGroundM : null,
+      horizon: swept.mask.horizon.map(({ azimuthDeg, elevationDeg }) => ({ azimuthDeg, elevationDeg })),
+      groundInSightPct: null,
+    }
+  }
+
+  // biome-ignore lint/correctness/useYield: an answer that needs no slices
+  private *paint(body: Ask['paint']): Work<EngineAnswer['paint']> {
+    const o = body.option === 'preview' ? this.preview : this.engine.cells(body.option)
+    if (!o) return null
+    const need = this.engine.needOnShow(this.engine.shown.need)
+    return { pixels: paintOption(o, body.layer, need, body.view, body.opacity), view: body.view }
+  }
+
+  // biome-ignore lint/correctness/useYield: an answer that needs no slices
+  private *base(body: Ask['base']): Work<EngineAnswer['base']> {
+    return this.engine.ground ? { pixels: paintGround(this.engine.ground, body.view), view: body.view } : null
+  }
+
+  private *map(body: Ask['map']): Work<EngineAnswer['map']> {
+    const o = yield* this.engine.compute(body.option)
+    const pixels = paintSheet(o, body.layer, this.engine.needOnShow(this.engine.shown.need), body.view)
+    return { rgba: new Uint8ClampedArray(pixels.buffer), view: body.view }
+  }
+
+  // biome-ignore lint/correctness/useYield: an answer that needs no slices
+  private *probeAt(body: Ask['probe']): Work<EngineAnswer['probe']> {
+    const { option, layer, need } = this.engine.shown
+    const o = option ? this.engine.cells(option) : null
+    if (o) return probeAt(o, layer, this.engine.needOnShow(need), body.at, this.probe)
+    if (!this.engine.ground) return null
+    const ground = groundAt(this.engine.ground, body.at.lon, body.at.lat)
+    const known = Number.isFinite(ground)
+    return { ...body.at, azimuthDeg: null, rangeM: null, groundM: known ? ground : null, layer, value: null, word: known ? null : 'unknown' }
+  }
+
+  // biome-ignore lint/correctness/useYield: an answer that needs no slices
+  private *profile(body: Ask['profile']): Work<Profile> {
+    const { ground, study } = this.engine.ready()
+    const site = siteOf(candidateOf(study, body.option.candidate))
+    const along = sightAlong(ground, site, body.option.heightM, earthOf(study), body.azimuthDeg, study.run.maxRangeM)
+    return { azimuthDeg: body.azimuthDeg, option: body.option, ...along }
+  }
+
+  // biome-ignore lint/correctness/useYield: an answer that needs no slices
+  private *ledger(body: Ask['ledger']): Work<EngineAnswer['ledger']> {
+    const { ground, study } = this.engine.ready()
+    return cellLedger(ground, study, body.option, body.at)
+  }
+
+  private *ladder(body: Ask['ladder']): Work<EngineAnswer['ladder']> {
+    const { ground, study } = this.engine.ready()
+    const candidate = candidateOf(study, body.candidate)
+    const place = siteOf(candidate)
+    const earth = earthOf(study)
+    const tiltDeg = this.engine.shown.option?.tiltDeg ?? candidate.tiltsDeg[0]
+    const heights = ladderHeightsM(candidate.mastHeightsM)
+    const rungs: Rung[] = []
+    for (let n = 0; n < heights.length; n += LADDER_BATCH) {
+      const batch = heights.slice(n, n + LADDER_BATCH)
+      const swept = yield* share(sweep(ground, place, batch, polarShape(study.run), earth), n, n + batch.length / 2, heights.length)
+      for (const mask of swept.masks) {
+        const { heightM } = mask
+        const clutter = yield* silently(clutterToNoise(swept.site, mask, ground.codes, place, heightM, earth, study.radar, tiltDeg))
+        rungs.push(rung({ ground, place, earth, radar: study.radar, heightM, tiltDeg, site: swept.site, mask, clutter }, study.needs))
+        yield { done: rungs.length, total: heights.length }
+      }
+    }
+    return ladderOf(rungs)
+  }
+
+  // biome-ignore lint/correctness/useYield: an answer that needs no slices
+  private *groundAt(body: Ask['groundAt']): Work<EngineAnswer['groundAt']> {
+    const { ground } = this.engine
+    return body.at.map((p) => {
+      const h = ground ? groundAt(ground, p.lon, p.lat) : Number.NaN
+      return Number.isFinite(h) ? h : null
+    })
+  }
+}
+
+/** The slices of a piece of work without its progress. */
+function* silently<T>(work: Work<T>): Work<T> {
+  for (;;) {
+    const step = work.next()
+    if (step.done) return step.value
+    yield { done: 0, total: 0 }
+  }
+}
