@@ -1,0 +1,2 @@
+export * from './hub.ts'
+export * from './types.ts'
