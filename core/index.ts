@@ -1,5 +1,6 @@
 // The public library of Sightfell: everything the app and the batch command may use.
 
+export * from './antenna/index.ts'
 export * from './clutter/index.ts'
 export * from './errors/index.ts'
 export * from './geodesy/index.ts'
@@ -10,6 +11,8 @@ export * from './merit/index.ts'
 export * from './obstacles/index.ts'
 export * from './paint/index.ts'
 export * from './polar/index.ts'
+export * from './atmosphere/index.ts'
+export * from './antenna/index.ts'
 export * from './radar/index.ts'
 export * from './raster/index.ts'
 export * from './runs/index.ts'

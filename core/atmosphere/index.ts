@@ -1,0 +1,3 @@
+export * from './gasLoss.ts'
+export * from './rainLoss.ts'
+export * from './refractivity.ts'
