@@ -1,0 +1,162 @@
+import type { HorizonRow } from '../../core/index.ts'
+import { formatPlaceRange, formatScreening, textOf, type UnitSystem } from '../words/index.ts'
+import { azimuthTicks, niceTicks, ticksWithin, xAxis, yAxis } from './axes.ts'
+import { type Box, type Drawing, type Item, lineOf, type Point, pathOf, type Scale, scaleOf } from './drawing.ts'
+import { placeInRows } from './labels.ts'
+
+export interface HorizonInput {
+  /** One row per azimuth, ascending from 0. */
+  readonly rows: readonly HorizonRow[]
+  readonly width: number
+  readonly height: number
+  readonly system: UnitSystem
+  /** Text size, in the drawing's unit. */
+  readonly size: number
+  /** `strip`: winds only, no axis titles, for the edge of the map. */
+  readonly style: 'strip' | 'chart'
+  /** Most labels to try; default 4 in a strip, 8 in a chart. */
+  readonly labels?: number
+}
+/** Drawing plus what a pointer needs. */
+export interface HorizonGeometry {
+  readonly drawing: Drawing
+  readonly box: Box
+  readonly azimuth: Scale
+  readonly elevation: Scale
+  /** Row nearest an azimuth, deg. */
+  rowAt(azimuthDeg: number): HorizonRow | null
+}
+const isEdge = (row: HorizonRow): boolean => row.obstacle.startsWith('at least')
+/** Peaks within this many degrees of a named one are the same feature to the reader. */
+const APART_DEG = 14
+/** A further peak is named when it rises over the median by this share of what the highest one does. */
+const LEAST_RISE = 0.2
+
+/** Horizon profile: elevation of the horizon against azimuth from true north, controlling points named over it. */
+export function horizonChart(input: HorizonInput): HorizonGeometry {
+  const { rows, width, height, size, style } = input
+  const strip = style === 'strip'
+  const named = peaksOf(rows, input.labels ?? (strip ? 4 : 8))
+  const rowCount = strip ? 1 : 2
+  const box: Box = {
+    left: strip ? 2.9 * size : 3.4 * size,
+    right: width - (strip ? 0.8 : 1.4) * size,
+    top: (strip ? 1.5 : 1.6 + 1.25 * rowCount) * size,
+    bottom: height - (strip ? 1.6 : 3) * size,
+  }
+  const low = Math.min(0, ...rows.map((r) => r.elevationDeg))
+  const high = Math.max(0.1, ...rows.map((r) => r.elevationDeg))
+  const pad = 0.06 * (high - low)
+  const { from, to, ticks } = strip
+    ? { from: low - pad, to: high + pad, ticks: ticksWithin(low - pad, high + pad, 2) }
+    : niceTicks(low, high, 4)
+  const azimuth = scaleOf(0, 360, box.left, box.right)
+  const elevation = scaleOf(from, to, box.bottom, box.top)
+  const points = closed(rows).map((r): Point => [azimuth.at(r.azimuthDeg), elevation.at(r.elevationDeg)])
+  const degrees = ticks.map((t) => ({ at: t.at, label: `${t.label}°` }))
+  const items: Item[] = [...yAxis(box, elevation, degrees, strip ? '' : 'Elevation of the horizon, deg', size)]
+  if (points.length > 1) {
+    const area: Point[] = [[box.left, box.bottom], ...points, [box.right, box.bottom]]
+    items.push({ kind: 'path', d: pathOf(area, true), fill: 'ink', opacity: 0.14 })
+    items.push({ kind: 'path', d: edgePath(rows, azimuth, elevation, false), stroke: 'ink', width: 1 })
+    items.push({ kind: 'path', d: edgePath(rows, azimuth, elevation, true), stroke: 'ink', width: 1, dash: [3, 2] })
+  }
+  const titleX = strip ? '' : 'Azimuth from true north'
+  items.push(...xAxis(box, azimuth, azimuthTicks(strip ? 'winds' : 'degrees'), titleX, size))
+  items.push(...labelItems(named, input, box, azimuth, elevation, rowCount))
+  const top = named[0]
+  const title = top
+    ? `Horizon profile: highest ${textOf(formatScreening(top.elevationDeg))} at azimuth ${Math.round(top.azimuthDeg)}°, ${nameOf(top)}`
+    : 'Horizon profile: no azimuth evaluated'
+  return {
+    drawing: { width, height, title, items },
+    box,
+    azimuth,
+    elevation,
+    rowAt: (azimuthDeg) => nearestRow(rows, azimuthDeg),
+  }
+}
+
+function labelItems(
+  named: readonly HorizonRow[],
+  input: HorizonInput,
+  box: Box,
+  azimuth: Scale,
+  elevation: Scale,
+  rowCount: number,
+): Item[] {
+  const wants = named.map((r) => ({ x: azimuth.at(r.azimuthDeg), text: labelOf(r, input.system), row: r }))
+  const placed = placeInRows(wants, box.left, input.width, input.size, rowCount)
+  return placed.flatMap((p): Item[] => {
+    const row = named[wants.findIndex((w) => w.x === p.x && w.text === p.text)]
+    const base = box.top - (0.45 + 1.25 * p.row) * input.size
+    const d = lineOf(p.x, base + 0.2 * input.size, p.x, elevation.at(row.elevationDeg))
+    return [
+      { kind: 'path', d, stroke: 'ink-3', width: 0.5 },
+      { kind: 'text', x: p.left, y: base, text: p.text, size: input.size, ink: 'ink', halo: true },
+    ]
+  })
+}
+
+/** Rows worth a name, most important first: the highest of all, each named obstacle's highest, then further peaks. */
+export function peaksOf(rows: readonly HorizonRow[], most: number): HorizonRow[] {
+  const plain = new Set(['terrain', 'cover'])
+  const byHeight = [...rows].sort((a, b) => b.elevationDeg - a.elevationDeg || a.azimuthDeg - b.azimuthDeg)
+  const chosen: HorizonRow[] = []
+  const take = (row: HorizonRow, apartDeg: number): void => {
+    if (chosen.length < most && chosen.every((c) => turn(c.azimuthDeg, row.azimuthDeg) >= apartDeg)) chosen.push(row)
+  }
+  if (byHeight.length > 0) take(byHeight[0], 0)
+  const seen = new Set(chosen.map((c) => c.obstacle))
+  for (const row of byHeight) {
+    if (plain.has(row.obstacle) || isEdge(row) || seen.has(row.obstacle)) continue
+    seen.add(row.obstacle)
+    take(row, 1)
+  }
+  const edge = byHeight.find(isEdge)
+  if (edge && !seen.has(edge.obstacle)) take(edge, 1)
+  if (byHeight.length === 0) return chosen
+  const median = byHeight[byHeight.length >> 1].elevationDeg
+  const least = median + LEAST_RISE * (byHeight[0].elevationDeg - median)
+  const isPeak = (row: HorizonRow): boolean =>
+    rows.every((r) => turn(r.azimuthDeg, row.azimuthDeg) > APART_DEG / 2 || r.elevationDeg <= row.elevationDeg)
+  for (const row of byHeight) {
+    if (chosen.length >= most || row.elevationDeg < least) break
+    if (!isEdge(row) && chosen.every((c) => turn(c.azimuthDeg, row.azimuthDeg) >= APART_DEG) && isPeak(row)) take(row, APART_DEG)
+  }
+  return chosen
+}
+const turn = (a: number, b: number): number => {
+  const d = Math.abs(a - b) % 360
+  return d > 180 ? 360 - d : d
+}
+const nameOf = (row: HorizonRow): string => (isEdge(row) ? 'at least, the terrain ends there' : row.obstacle)
+
+/** `Harl Edge 6.3 NM, 0.62°`; at the edge of terrain `≥ 0.12°, edge of terrain`. */
+export function labelOf(row: HorizonRow, system: UnitSystem): string {
+  const angle = textOf(formatScreening(row.elevationDeg))
+  if (isEdge(row)) return `at least ${angle}, edge of terrain`
+  return `${row.obstacle} ${textOf(formatPlaceRange(row.rangeM, system))}, ${angle}`
+}
+
+/** The first row again at 360°, so that the profile closes. */
+function closed(rows: readonly HorizonRow[]): HorizonRow[] {
+  if (rows.length === 0) return []
+  const last = rows[rows.length - 1]
+  return last.azimuthDeg >= 360 ? [...rows] : [...rows, { ...rows[0], azimuthDeg: 360 }]
+}
+/** Line of the known (or, `edge`, the "at least") part of the horizon. */
+function edgePath(rows: readonly HorizonRow[], azimuth: Scale, elevation: Scale, edge: boolean): string {
+  const all = closed(rows)
+  return pathOf(
+    all.map((r, i): Point => {
+      const shown = isEdge(r) === edge || (edge && i > 0 && isEdge(all[i - 1]))
+      return shown ? [azimuth.at(r.azimuthDeg), elevation.at(r.elevationDeg)] : [Number.NaN, 0]
+    }),
+  )
+}
+function nearestRow(rows: readonly HorizonRow[], azimuthDeg: number): HorizonRow | null {
+  let best: HorizonRow | null = null
+  for (const r of rows) if (!best || turn(r.azimuthDeg, azimuthDeg) < turn(best.azimuthDeg, azimuthDeg)) best = r
+  return best
+}

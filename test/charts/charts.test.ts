@@ -1,0 +1,136 @@
+import { describe, expect, it } from 'vitest'
+import * as c from '../../app/charts/index.ts'
+import { sampleProfile, sampleResults, sampleRows } from '../memo/sample.ts'
+
+const size = 12
+const horizon = (style: 'strip' | 'chart') =>
+  c.horizonChart({ rows: sampleRows(0.7, 2), width: 640, height: style === 'strip' ? 96 : 210, system: 'nautical', size, style })
+
+/** Boxes of all texts of a drawing, unturned ones. */
+const textBoxes = (d: c.Drawing) =>
+  d.items.flatMap((i) => {
+    if (i.kind !== 'text' || i.turn !== undefined) return []
+    const w = c.textWidth(i.text, i.size)
+    const left = i.anchor === 'end' ? i.x - w : i.anchor === 'middle' ? i.x - w / 2 : i.x
+    return [{ text: i.text, left, right: left + w, top: i.y - 0.75 * i.size, bottom: i.y + 0.1 * i.size }]
+  })
+const collisions = (d: c.Drawing): string[] => {
+  const boxes = textBoxes(d)
+  return boxes.flatMap((a, i) =>
+    boxes
+      .slice(i + 1)
+      .flatMap((b) => (a.left < b.right && b.left < a.right && a.top < b.bottom && b.top < a.bottom ? [`${a.text} / ${b.text}`] : [])),
+  )
+}
+const outside = (d: c.Drawing): string[] =>
+  textBoxes(d).flatMap((b) => (b.left < -1 || b.right > d.width + 1 || b.top < -1 || b.bottom > d.height + 1 ? [b.text] : []))
+
+const drawings: readonly (readonly [string, () => c.Drawing])[] = [
+  ['horizon-strip', () => horizon('strip').drawing],
+  ['horizon-chart', () => horizon('chart').drawing],
+  ['terrain', () => c.terrainChart({ profile: sampleProfile(), width: 640, height: 260, system: 'metric', size }).drawing],
+  ['rings', () => c.ringChart({ rings: sampleResults[1].figures.rings, width: 480, height: 280, system: 'nautical', size })],
+  [
+    'options',
+    () =>
+      c.optionsChart({
+        results: sampleResults,
+        needId: 'n1',
+        selected: sampleResults[3].ref,
+        width: 480,
+        height: 260,
+        system: 'metric',
+        size,
+      }).drawing,
+  ],
+]
+
+describe('every chart', () => {
+  it.each(drawings)('%s: texts touch neither each other nor the edge', (_name, make) => {
+    expect(collisions(make())).toEqual([])
+    expect(outside(make())).toEqual([])
+  })
+  it.each(drawings)('%s: looks as it did, in hex colours and three places', async (name, make) => {
+    const svg = c.svgOf(make())
+    expect(svg).not.toMatch(/hsl|var\(|NaN|Infinity|undefined/)
+    expect(svg).not.toMatch(/\d\.\d{4}/)
+    await expect(`${svg}\n`).toMatchFileSnapshot(`snapshots/${name}.svg`)
+  })
+})
+
+describe('horizon profile', () => {
+  it('names the highest point, each named obstacle and the end of the terrain', () => {
+    const named = c.peaksOf(sampleRows(0.7, 2), 8)
+    expect(named[0].azimuthDeg).toBeGreaterThan(95)
+    expect(named[0].azimuthDeg).toBeLessThan(113)
+    expect(named.map((r) => r.obstacle)).toContain('Grey mast')
+    expect(named.map((r) => r.obstacle)).toContain('at least: edge of terrain')
+  })
+  it('an angle at the edge of terrain reads "at least"', () => {
+    const row = sampleRows(0.7, 2).find((r) => r.obstacle.startsWith('at least'))!
+    expect(c.labelOf(row, 'nautical')).toMatch(/^at least .*edge of terrain$/)
+  })
+  it('finds the row under the pointer across north', () => {
+    const g = horizon('strip')
+    expect(g.rowAt(359.5)?.azimuthDeg).toBe(0)
+    expect(g.azimuth.invert(g.azimuth.at(104))).toBeCloseTo(104, 9)
+  })
+})
+
+describe('terrain profile', () => {
+  const g = c.terrainChart({ profile: sampleProfile(), width: 640, height: 260, system: 'metric', size })
+  it('a sight line over the controlling point is straight: the floor beyond lies on it', () => {
+    const p = sampleProfile()
+    const i = c.controllingIndex(p)
+    const [x0, y0] = g.place(0, p.antennaM)
+    const [x1, y1] = g.place(p.distM[i], p.surfaceM[i])
+    const [x2, y2] = g.place(p.distM[140], p.floorM[140])
+    expect(p.distM[i]).toBeGreaterThan(8_000)
+    expect((y2 - y0) / (x2 - x0)).toBeCloseTo((y1 - y0) / (x1 - x0), 6)
+  })
+  it('heights are true at both ends and raised by the bulge between', () => {
+    const far = sampleProfile().distM[160]
+    expect(g.place(far, 100)[1]).toBeCloseTo(g.place(0, 100)[1], 9)
+    expect(g.place(far / 2, 100)[1]).toBeLessThan(g.place(0, 100)[1])
+  })
+  it('finds the sample under the pointer', () => {
+    expect(g.indexAt(10_040)).toBe(33)
+    expect(g.indexAt(1e9)).toBe(160)
+  })
+})
+
+describe('options plot', () => {
+  it('names every option', () => {
+    const d = drawings[4][1]()
+    const texts = d.items.flatMap((i) => (i.kind === 'text' ? [i.text.replaceAll('\u202f', ' ')] : []))
+    for (const name of ['A 12 m', 'A 24 m', 'B 12 m', 'B 24 m', 'C 24 m']) expect(texts).toContain(name)
+  })
+})
+
+describe('ladder', () => {
+  const ladder = {
+    heightsM: [5, 15, 25, 40],
+    inSightPct: [40, 60, 90, 100],
+    over40Km2: [10, 30, 50, 80],
+    needMetAtM: [
+      { needId: 'n1', name: 'one', heightM: 24 },
+      { needId: 'n2', name: 'two', heightM: 25 },
+      { needId: 'n3', name: 'three', heightM: null },
+    ],
+  }
+  const g = c.ladderGeometry({ ladder, topM: 40, lengthPx: 400, stripPx: 30, linePx: 16 })
+  it('puts ground at the foot and the top of the scale at 0', () => {
+    expect(g.mast.at(0)).toBe(400)
+    expect(g.mast.at(40)).toBe(0)
+    expect(g.mast.invert(200)).toBe(20)
+  })
+  it('keeps labels of needs apart and says which are not met', () => {
+    expect(Math.abs(g.met[0].labelY - g.met[1].labelY)).toBeGreaterThanOrEqual(16)
+    expect(g.met[0].y).toBe(160)
+    expect(g.notMet.map((n) => n.needId)).toEqual(['n3'])
+  })
+  it('reads between the rungs and nothing outside them', () => {
+    expect(g.valuesAt(20)).toEqual({ inSightPct: 75, over40Km2: 40 })
+    expect(g.valuesAt(2)).toBeNull()
+  })
+})
