@@ -25,7 +25,7 @@ export const hexOf = (paint: Paint): string => (paint.startsWith('#') ? paint : 
 export function svgOf(drawing: Drawing, font = 'SourceSans'): string {
   const { width, height } = drawing
   const body = drawing.items.map((item) => printItem(item, font)).join('\n')
-  return `<svg xmlns="http://www.w3.org/2000/svg" width="${round3(width)}" height="${round3(height)}" viewBox="0 0 ${round3(width)} ${round3(height)}">\n${body}\n</svg>`
+  return `<svg xmlns="http://www.w3.org/2000/svg" width="${round3(width)}" height="${round3(height)}" viewBox="0 0 ${round3(width)} ${round3(height)}">\n<title>${escapeXml(drawing.title)}</title>\n${body}\n</svg>`
 }
 
 function printItem(item: Item, font: string): string {
