@@ -2,6 +2,7 @@
 
 export * from './antenna/index.ts'
 export * from './clutter/index.ts'
+export * from './detection/index.ts'
 export * from './errors/index.ts'
 export * from './geodesy/index.ts'
 export * from './intake/index.ts'
