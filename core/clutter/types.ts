@@ -9,6 +9,13 @@ export interface ClutterCells extends Held {
   readonly cnrDb: Float32Array
   /** Side-lobe term, one number per range gate, dB; NaN = nil. */
   readonly sideLobeCnrDb: Float32Array
+  /** What the numbers rest on; goes to legend, ledger and memo. */
+  readonly notes: readonly ModelNote[]
 }
 /** Words beside a value, never colours alone. */
 export type ModelMark = 'default' | 'outside model' | 'by hand' | 'from memory'
+/** A mark and what it is about. */
+export interface ModelNote {
+  readonly mark: ModelMark
+  readonly about: string
+}

@@ -1,1 +1,5 @@
+export * from './equation.ts'
+export * from './limits.ts'
+export * from './stc.ts'
+export * from './target.ts'
 export * from './types.ts'

@@ -1,20 +1,7 @@
-/** The radar as the kernels need it: every field settled, SI units, degrees. Follows the `radar` part of the study file. */
-export interface AntennaInput {
-  readonly gainDbi: number
-  readonly azimuthBeamwidthDeg: number
-  readonly elevationBeamwidthDeg: number
-  readonly elevationPattern: 'cosecant-squared' | 'gaussian' | 'table'
-  readonly cosecantLimitDeg: number
-  /** Rows of [elevation − tilt deg, dB relative to peak]; used when elevationPattern is 'table'. */
-  readonly elevationTable: readonly (readonly [number, number])[]
-  /** Azimuth side-lobe level, one way, dB relative to peak. */
-  readonly sidelobeDb: number
-  /** Floor of the elevation pattern, for clutter only, dB relative to peak. */
-  readonly elevationSidelobeDb: number
-  readonly tiltDeg: number
-  readonly apertureWidthM: number | null
-  readonly apertureHeightM: number | null
-}
+import type { AntennaInput } from '../antenna/index.ts'
+
+export type { AntennaInput } from '../antenna/index.ts'
+
 export interface SuppressionInput {
   readonly kind: 'none' | 'stated' | 'canceller' | 'filterBank'
   readonly statedDb: number
@@ -29,6 +16,7 @@ export interface StcInput {
   readonly cornerM: number
   readonly maxDb: number
 }
+/** The radar as the kernels need it: every field settled, SI units, degrees. Follows the `radar` part of the study file. */
 export interface RadarInput {
   readonly name: string
   readonly frequencyHz: number

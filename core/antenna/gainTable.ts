@@ -1,0 +1,47 @@
+import { DEG_PER_RAD, RAD_PER_DEG } from '../units/index.ts'
+import { checkElevationPattern, elevationGainForClutter } from './elevationPattern.ts'
+import type { AntennaInput } from './types.ts'
+
+/** Two-way elevation gain toward clutter by the tangent of elevation, for loops that may not call a transcendental. */
+export interface GainTable {
+  /** Tangent at values[0], and entries per unit of tangent. */
+  readonly low: number
+  readonly perUnit: number
+  /** Two-way gain, ratio to the peak, linear between entries. */
+  readonly values: Float64Array
+  readonly antenna: AntennaInput
+  readonly tiltDeg: number
+}
+
+const TABLE_TO = 0.6
+const MOST_ENTRIES = 32_768
+
+/** Builds the table: entries dense against the beamwidth or the rows of a stated pattern. Throws InputError for a pattern that is refused. */
+export function clutterGainTable(antenna: AntennaInput, tiltDeg: number = antenna.tiltDeg): GainTable {
+  checkElevationPattern(antenna)
+  let scaleDeg = 10
+  if (antenna.elevationPattern === 'table')
+    antenna.elevationTable.forEach((row, i, rows) => {
+      if (i > 0) scaleDeg = Math.min(scaleDeg, (row[0] - rows[i - 1][0]) * 3)
+    })
+  else scaleDeg = Math.min(scaleDeg, antenna.elevationBeamwidthDeg)
+  const count = Math.min(MOST_ENTRIES, Math.ceil((2 * TABLE_TO) / ((scaleDeg / 200) * RAD_PER_DEG)) + 1)
+  const values = new Float64Array(count)
+  const perUnit = (count - 1) / (2 * TABLE_TO)
+  for (let i = 0; i < count; i++) values[i] = exactTwoWay(antenna, tiltDeg, i / perUnit - TABLE_TO)
+  return { low: -TABLE_TO, perUnit, values, antenna, tiltDeg }
+}
+
+/** Two-way gain toward clutter, ratio, at a tangent of elevation; beyond ±31° the pattern itself is asked. */
+export function twoWayGain(t: GainTable, tanElevation: number): number {
+  const x = (tanElevation - t.low) * t.perUnit
+  const i = x | 0
+  if (!(x >= 0) || i >= t.values.length - 1) return exactTwoWay(t.antenna, t.tiltDeg, tanElevation)
+  const v = t.values[i]
+  return v + (x - i) * (t.values[i + 1] - v)
+}
+
+function exactTwoWay(antenna: AntennaInput, tiltDeg: number, tanElevation: number): number {
+  const g = elevationGainForClutter(antenna, Math.atan(tanElevation) * DEG_PER_RAD, tiltDeg)
+  return g * g
+}

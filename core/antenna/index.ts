@@ -1,0 +1,5 @@
+export * from './azimuthKernel.ts'
+export * from './elevationPattern.ts'
+export * from './gainTable.ts'
+export * from './scan.ts'
+export * from './types.ts'

@@ -1,0 +1,141 @@
+import { azimuthKernel, clutterGainTable } from '../antenna/index.ts'
+import type { Earth } from '../geodesy/index.ts'
+import type { GroundCode } from '../landcover/index.ts'
+import type { SightCells, SiteCells } from '../masking/index.ts'
+import { CELL, type PolarShape } from '../polar/index.ts'
+import { gateLengthM, minimumRangeM, type RadarInput, radarConstantDb } from '../radar/index.ts'
+import type { Site } from '../terrain/index.ts'
+import { fromDb } from '../units/index.ts'
+import type { Work } from '../work/index.ts'
+import { type CellModel, cellClutter, gateSums, gateWeights, type RayCells, slantSquared } from './cellSums.ts'
+import { decibel } from './decibelTable.ts'
+import type { LandTable } from './landTable.ts'
+import { BUILT_IN_LAND_TABLE } from './landTableData.ts'
+import { notesOf, strengthTable } from './strengthTable.ts'
+import type { ClutterCells, ModelNote } from './types.ts'
+
+export interface ClutterOptions {
+  /** Low-angle land table in place of the built-in one. */
+  readonly landTable?: LandTable
+  /** Key of the result; '' when the caller keeps none. */
+  readonly key?: string
+}
+/** Cells summed between two yields: a few milliseconds. */
+const CELLS_PER_YIELD = 60_000
+
+/** A factor k outside this is a sensitivity of ducting, not a prediction. */
+const NOTE_FLAT: ModelNote = { mark: 'outside model', about: 'flat-earth rays: ducting sensitivity, not a prediction' }
+
+/** Ground range of the cell centres of a polar grid, m. */
+export const centresOf = (grid: PolarShape): Float64Array =>
+  Float64Array.from({ length: grid.ranges }, (_, j) => (j + 0.5) * grid.rangeStepM)
+
+/** Electrical centre, m MSL: stated ground or that of the raster, plus mast height. */
+export const electricalCentreM = (site: Site, siteGroundM: number, heightM: number): number => (site.groundHeightM ?? siteGroundM) + heightM
+
+/** The words that hold for a whole option, from the bits its cells met. */
+export function optionNotes(model: CellModel, bits: number, earth: Earth): ModelNote[] {
+  const k = earth.effectiveEarthFactor
+  return k > 0 && k <= 10 ? notesOf(model.strength, bits) : [...notesOf(model.strength, bits), NOTE_FLAT]
+}
+
+/** Side lobes all round against the main beam: two-way level × 360°/θ, ratio. */
+export const sideLobeShare = (r: RadarInput): number => fromDb(2 * r.antenna.sidelobeDb) * (360 / r.antenna.azimuthBeamwidthDeg)
+
+/**
+ * Clutter-to-noise of every cell of a polar grid for one option, dB, one pulse, before STC, integration and suppression: radar equation with
+ * σ°F⁴·A over the ground in sight of the resolution cell centred on the cell (A = R·θaz·cτc/2·sec ψ; two-way Gaussian azimuth kernel; cells
+ * weighted by their overlap with the gate; elevation gain at cell centres with the side-lobe floor), plus one side-lobe term per gate. NaN
+ * where sight is unknown and inside cτ/2. Holds within LAND_LIMITS; beyond them notes say so. Throws InputError for a frequency outside
+ * 30 MHz to 40 GHz or a pattern that is refused.
+ */
+export function* clutterToNoise(
+  s: SiteCells,
+  m: SightCells,
+  site: Site,
+  codes: readonly GroundCode[],
+  heightM: number,
+  earth: Earth,
+  r: RadarInput,
+  tiltDeg: number,
+  options: ClutterOptions = {},
+): Work<ClutterCells> {
+  const { grid } = s
+  const { azimuths, ranges } = grid
+  const centresM = centresOf(grid)
+  const cells: RayCells = { ...pick(s), inSight: m.inSight, centresM }
+  const model: CellModel = {
+    antennaM: electricalCentreM(site, s.siteGroundM, heightM),
+    strength: strengthTable(codes, r.frequencyHz, options.landTable ?? BUILT_IN_LAND_TABLE),
+    gain: clutterGainTable(r.antenna, tiltDeg),
+  }
+  const { antennaM } = model
+  const constant = fromDb(radarConstantDb(r))
+  const nearest2 = minimumRangeM(r) ** 2
+  const rowsPerYield = Math.max(1, Math.floor(CELLS_PER_YIELD / ranges))
+  const total = 2 * azimuths
+
+  // First pass: clutter of each gate on one azimuth, and its mean round the ring.
+  const weights = gateWeights(gateLengthM(r), grid.rangeStepM)
+  const row = new Float64Array(ranges)
+  const gates = new Float32Array(azimuths * ranges)
+  const ringSum = new Float64Array(ranges)
+  const ringCount = new Uint32Array(ranges)
+  let bits = 0
+  for (let i = 0; i < azimuths; i++) {
+    bits |= cellClutter(model, cells, i, row, null)
+    gateSums(row, weights, gates, i * ranges)
+    const c = 1 / s.effectiveRadiusM[i]
+    for (let j = 0; j < ranges; j++) {
+      const at = i * ranges + j
+      if (m.state[at] >= CELL.beyondVoid) continue
+      const r2 = slantSquared(antennaM, s.groundM[at], centresM[j], c)
+      if (!(r2 >= nearest2)) continue
+      ringCount[j]++
+      ringSum[j] += gates[at] / (r2 * r2)
+    }
+    if ((i + 1) % rowsPerYield === 0) yield { done: i + 1, total }
+  }
+  const kernel = azimuthKernel(r.antenna.azimuthBeamwidthDeg, grid.azimuthStepDeg)
+  const width = kernel.reduce((sum, w) => sum + w, 0)
+  const ringScale = constant * width * sideLobeShare(r)
+  const sideLobe = ringSum.map((sum, j) => (ringCount[j] > 0 ? (ringScale * sum) / ringCount[j] : 0))
+
+  // Second pass: the azimuth beam, the radar equation, dB.
+  const cnrDb = new Float32Array(azimuths * ranges)
+  const half = kernel.length >> 1
+  for (let i = 0; i < azimuths; i++) {
+    row.fill(0)
+    for (let n = -half; n <= half; n++) addRow(row, gates, ((i + n + azimuths) % azimuths) * ranges, kernel[n + half])
+    const c = 1 / s.effectiveRadiusM[i]
+    for (let j = 0; j < ranges; j++) {
+      const at = i * ranges + j
+      const r2 = m.state[at] >= CELL.beyondVoid ? Number.NaN : slantSquared(antennaM, s.groundM[at], centresM[j], c)
+      cnrDb[at] = r2 >= nearest2 ? decibel((row[j] * constant) / (r2 * r2) + sideLobe[j]) : Number.NaN
+    }
+    if ((i + 1) % rowsPerYield === 0) yield { done: azimuths + i + 1, total }
+  }
+  return {
+    kind: 'clutter',
+    version: 1,
+    key: options.key ?? '',
+    grid,
+    heightM,
+    tiltDeg,
+    cnrDb,
+    sideLobeCnrDb: Float32Array.from(sideLobe, decibel),
+    notes: optionNotes(model, bits, earth),
+  }
+}
+
+const pick = ({ groundM, code, relief, effectiveRadiusM, siteGroundM }: SiteCells) => ({
+  groundM,
+  code,
+  relief,
+  effectiveRadiusM,
+  siteGroundM,
+})
+
+function addRow(sum: Float64Array, rows: Float32Array, from: number, weight: number): void {
+  for (let j = 0; j < sum.length; j++) sum[j] += weight * rows[from + j]
+}

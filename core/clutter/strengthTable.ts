@@ -1,0 +1,69 @@
+import type { GroundCode } from '../landcover/index.ts'
+import { RELIEF } from '../terrain/index.ts'
+import { DEG_PER_RAD, fromDb, RAD_PER_DEG } from '../units/index.ts'
+import { chooseRow, landTableNotes } from './landRow.ts'
+import { LAND_LIMITS, type LandTable } from './landTable.ts'
+import { BUILT_IN_LAND_TABLE } from './landTableData.ts'
+import type { ModelNote } from './types.ts'
+
+/** Strength of every ground code, relief and band of depression at one frequency, so that a loop over cells only looks it up. */
+export interface StrengthTable {
+  /** Rising band edges of depression, rad; first −Infinity, last +Infinity. */
+  readonly edgesRad: Float64Array
+  readonly bands: number
+  /** Mean σ°F⁴, ratio, at ((code × 4 + relief) × bands + band); 0 where no model is assessed. Relief: low, high, mountains, unknown. */
+  readonly sigma: Float64Array
+  /** Bit i set = notes[i] holds for that entry. */
+  readonly noteBits: Uint32Array
+  readonly notes: readonly ModelNote[]
+  /** Notes that hold for every entry. */
+  readonly always: readonly ModelNote[]
+}
+const RELIEF_SLOTS = [RELIEF.low, RELIEF.high, RELIEF.mountains, RELIEF.unknown] as const
+
+/** Slot of a relief value in the table. */
+export const reliefSlot = (relief: number): number => (relief < 3 ? relief : 3)
+
+/** Builds the table for the codes of a ground. Throws InputError for a frequency outside 30 MHz to 40 GHz. */
+export function strengthTable(codes: readonly GroundCode[], frequencyHz: number, table: LandTable = BUILT_IN_LAND_TABLE): StrengthTable {
+  const edges = new Set<number>([0, LAND_LIMITS.highestDepressionDeg])
+  for (const bands of Object.values(table.rows))
+    for (const { fromDeg, toDeg } of bands) for (const edge of [fromDeg, toDeg]) if (edge !== null) edges.add(edge)
+  const inner = [...edges].sort((a, b) => a - b)
+  const edgesRad = Float64Array.from([Number.NEGATIVE_INFINITY, ...inner.map((d) => d * RAD_PER_DEG), Number.POSITIVE_INFINITY])
+  const bands = edgesRad.length - 1
+  const sigma = new Float64Array(codes.length * 4 * bands)
+  const noteBits = new Uint32Array(sigma.length)
+  const notes: ModelNote[] = []
+  codes.forEach(({ terrain }, c) => {
+    RELIEF_SLOTS.forEach((relief, slot) => {
+      for (let b = 0; b < bands; b++) {
+        const choice = chooseRow(terrain, relief, middleDeg(edgesRad, b), frequencyHz, {}, table)
+        const at = (c * 4 + slot) * bands + b
+        sigma[at] = choice.meanDb === null ? 0 : fromDb(choice.meanDb)
+        for (const note of choice.notes) {
+          if (!notes.includes(note)) notes.push(note)
+          noteBits[at] |= 1 << notes.indexOf(note)
+        }
+      }
+    })
+  })
+  return { edgesRad, bands, sigma, noteBits, notes, always: landTableNotes(frequencyHz, table) }
+}
+
+function middleDeg(edgesRad: Float64Array, band: number): number {
+  const lo = edgesRad[band] * DEG_PER_RAD
+  const hi = edgesRad[band + 1] * DEG_PER_RAD
+  return lo === Number.NEGATIVE_INFINITY ? hi - 1 : hi === Number.POSITIVE_INFINITY ? lo + 1 : (lo + hi) / 2
+}
+
+/** Band of a depression, rad; starting from a guess (neighbouring cells mostly share it). */
+export function bandOf(edgesRad: Float64Array, depressionRad: number, guess: number): number {
+  let b = guess
+  while (depressionRad >= edgesRad[b + 1]) b++
+  while (depressionRad < edgesRad[b]) b--
+  return b
+}
+
+/** The notes whose bits are set, after those that always hold. */
+export const notesOf = (t: StrengthTable, bits: number): ModelNote[] => [...t.always, ...t.notes.filter((_, i) => (bits >>> i) & 1)]
