@@ -1,5 +1,6 @@
+import { MAX_POLAR_CELLS } from '../polar/index.ts'
 import { SPEED_OF_LIGHT_MS } from '../units/index.ts'
-import { cellCount, defaultAzimuthStepDeg, evenStepDeg, gateOfM, longestRangeStepM, MOST_CELLS } from './grid.ts'
+import { cellsOf, defaultAzimuthStepDeg, evenStepDeg, gateOfM, longestRangeStepM } from './grid.ts'
 import { quantity } from './limits.ts'
 import type { Problem } from './problems.ts'
 import type { CandidateDoc, NeedDoc, RadarDoc, RunDoc, StudyDoc, TerrainFileDoc } from './types.ts'
@@ -226,9 +227,9 @@ function checkRun(radar: RadarDoc, run: RunDoc, say: Say): void {
     )
     return
   }
-  const cells = cellCount(range, step ?? longest, azimuthStep)
-  if (cells > MOST_CELLS) {
-    const room = Math.floor((MOST_CELLS / Math.round(360 / azimuthStep)) * (step ?? longest))
+  const cells = cellsOf(range, step ?? longest, azimuthStep)
+  if (cells > MAX_POLAR_CELLS) {
+    const room = Math.floor((MAX_POLAR_CELLS / Math.round(360 / azimuthStep)) * (step ?? longest))
     const found = `${(cells / 1e6).toFixed(1)} million cells of ${quantity(azimuthStep, 'deg')} by ${m(step ?? longest)}, over the 16 million allowed`
     say(
       run.maxRangeM === undefined && step !== undefined ? 'run.rangeStepM' : 'run.maxRangeM',

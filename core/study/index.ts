@@ -1,7 +1,6 @@
 export * from './canonicalJson.ts'
 export { checkDoc, type DocCheck, type FieldProblem } from './checkDoc.ts'
 export { checkStudy } from './checkStudy.ts'
-export { cellCount, gateOfM, MOST_CELLS } from './grid.ts'
 export { allowed, LIMITS, type Limit, limitOf, quantity, within } from './limits.ts'
 export { newStudy, STARTING_RADAR_NAME } from './newStudy.ts'
 export { type Draft, openDraft, parseStudy } from './parse.ts'
