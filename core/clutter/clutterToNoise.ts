@@ -52,8 +52,8 @@ export const sideLobeShare = (r: RadarInput): number => fromDb(2 * r.antenna.sid
 export function* clutterToNoise(
   s: SiteCells,
   m: SightCells,
-  site: Site,
   codes: readonly GroundCode[],
+  site: Site,
   heightM: number,
   earth: Earth,
   r: RadarInput,

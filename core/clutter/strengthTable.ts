@@ -1,6 +1,6 @@
 import type { GroundCode } from '../landcover/index.ts'
 import { RELIEF } from '../terrain/index.ts'
-import { DEG_PER_RAD, fromDb, RAD_PER_DEG } from '../units/index.ts'
+import { DEG_PER_RAD, fromDb, RAD_PER_DEG, toDb } from '../units/index.ts'
 import { chooseRow, landTableNotes } from './landRow.ts'
 import { LAND_LIMITS, type LandTable } from './landTable.ts'
 import { BUILT_IN_LAND_TABLE } from './landTableData.ts'
@@ -22,7 +22,7 @@ export interface StrengthTable {
 const RELIEF_SLOTS = [RELIEF.low, RELIEF.high, RELIEF.mountains, RELIEF.unknown] as const
 
 /** Slot of a relief value in the table. */
-export const reliefSlot = (relief: number): number => (relief < 3 ? relief : 3)
+export const reliefSlot = (relief: number): number => Math.min(relief, 3)
 
 /** Builds the table for the codes of a ground. Throws InputError for a frequency outside 30 MHz to 40 GHz. */
 export function strengthTable(codes: readonly GroundCode[], frequencyHz: number, table: LandTable = BUILT_IN_LAND_TABLE): StrengthTable {
@@ -67,3 +67,22 @@ export function bandOf(edgesRad: Float64Array, depressionRad: number, guess: num
 
 /** The notes whose bits are set, after those that always hold. */
 export const notesOf = (t: StrengthTable, bits: number): ModelNote[] => [...t.always, ...t.notes.filter((_, i) => (bits >>> i) & 1)]
+
+/**
+ * Mean σ°F⁴, dB, by ground code, relief and depression in degrees; NaN where nothing is assessed (water) or the code is unknown. Throws
+ * InputError for a frequency outside 30 MHz to 40 GHz.
+ */
+export function strengthByCode(
+  codes: readonly GroundCode[],
+  frequencyHz: number,
+  table: LandTable = BUILT_IN_LAND_TABLE,
+): (code: number, relief: number, depressionDeg: number) => number {
+  const t = strengthTable(codes, frequencyHz, table)
+  const db = Float64Array.from(t.sigma, (v) => (v > 0 ? toDb(v) : Number.NaN))
+  let band = t.bands >> 1
+  return (code, relief, depressionDeg) => {
+    if (code >= codes.length || !Number.isFinite(depressionDeg)) return Number.NaN
+    band = bandOf(t.edgesRad, depressionDeg * RAD_PER_DEG, band)
+    return db[(code * 4 + reliefSlot(relief)) * t.bands + band]
+  }
+}
