@@ -1,1 +1,2 @@
+export * from './openTerrain.ts'
 export * from './types.ts'
