@@ -1,0 +1,5 @@
+export * from './blindSpeed.ts'
+export * from './canceller.ts'
+export * from './correlation.ts'
+export * from './filterBank.ts'
+export * from './stability.ts'
