@@ -1,0 +1,5 @@
+export * from './deltaBullington.ts'
+export * from './knifeEdge.ts'
+export * from './reflection.ts'
+export * from './sphericalEarth.ts'
+export * from './twoRay.ts'
