@@ -1,2 +1,6 @@
-export * from './openTerrain.ts'
+export type { HeightUnit } from './heightUnit.ts'
+export { openTerrain, type Progress, type StatedTerrain, type TerrainHead } from './openTerrain.ts'
+export * from './readClasses.ts'
+export * from './readFeatures.ts'
+export * from './readTable.ts'
 export * from './types.ts'

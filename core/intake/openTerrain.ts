@@ -63,6 +63,7 @@ export async function openTerrain(source: ByteSource, stated: StatedTerrain): Pr
     unit === 'm' ? 'metres' : unit === 'ft' ? 'feet' : 'US survey feet',
     nodata === null ? 'no no-data value declared' : `no data ${nodata}`,
     ...(image.bands > 1 ? [`band 1 of ${image.bands}`] : []),
+    ...(valuer.scale === METRES_PER[unit] && valuer.offset === 0 ? [] : ["scale and offset of the file's metadata applied"]),
   ]
   return {
     name: source.name,
@@ -199,7 +200,7 @@ async function resample(
   const found = { read: 0, valid: 0 }
   const lastCol = image.width - 1
   const lastRow = image.height - 1
-  const patches = [...patchesOf(target.shape)]
+  const patches = [...patchesOf(target.shape, image.blockWidth >= image.width)]
   for (let n = 0; n < patches.length; n++) {
     const { col, row, width, height } = patches[n]
     positions.fill(col, row, width, height)

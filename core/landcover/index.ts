@@ -1,1 +1,2 @@
+export * from './legends.ts'
 export * from './types.ts'
