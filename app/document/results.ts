@@ -1,8 +1,7 @@
 import { createStore } from 'zustand/vanilla'
-import type { Answer, OptionRef, OptionResult, Tell } from '../../core/index.ts'
+import type { OptionRef, OptionResult, Tell } from '../../core/index.ts'
 
 export type Failure = Extract<Tell, { kind: 'failure' }>['error']
-export type GroundAnswer = NonNullable<Answer['ground']>
 export interface RunStatus {
   readonly done: number
   readonly total: number
@@ -16,10 +15,6 @@ export interface ResultsState {
   readonly status: RunStatus | null
   readonly warnings: readonly string[]
   readonly failure: Failure | null
-  /** What the study worker said of the ground it holds; null while there is none. */
-  readonly ground: GroundAnswer | null
-  /** Ground under each candidate by id, m MSL; null off the terrain or over a void. */
-  readonly groundAtM: ReadonlyMap<string, number | null>
   /** Grows with every `figures`; charts and memo redraw on it. */
   readonly serial: number
   /** When the last run ended, ms since 1970. */
@@ -35,8 +30,6 @@ const nothing: ResultsState = {
   status: null,
   warnings: [],
   failure: null,
-  ground: null,
-  groundAtM: new Map(),
   serial: 0,
   ranAt: null,
 }
@@ -67,5 +60,4 @@ export function keepOptions(store: ResultsStore, options: readonly OptionRef[]):
 }
 
 /** Another study or another ground: nothing shown so far holds. */
-export const forgetResults = (store: ResultsStore): void =>
-  store.setState({ ...nothing, serial: store.getState().serial + 1, ground: null }, true)
+export const forgetResults = (store: ResultsStore): void => store.setState({ ...nothing, serial: store.getState().serial + 1 })

@@ -12,6 +12,8 @@ export interface CommitFieldProps {
   /** Words after the label: marks. */
   readonly marks?: ReactNode
   readonly help?: ReactNode
+  /** What is wrong with the stored value. */
+  readonly trouble?: string | null
   /** `row`: label, field, unit in a line; `long`: a wider field; `wide`: field under its label. */
   readonly shape?: 'row' | 'long' | 'wide'
   readonly numeric?: boolean
@@ -25,7 +27,8 @@ export interface CommitFieldProps {
 export function CommitField(props: CommitFieldProps) {
   const { text, onCommit, shape = 'row', numeric, rows, unit, marks, help, placeholder } = props
   const [typed, setTyped] = useState<string | null>(null)
-  const [why, setWhy] = useState<string | null>(null)
+  const [refused, setWhy] = useState<string | null>(null)
+  const why = refused ?? props.trouble ?? null
   const input = useRef<HTMLInputElement & HTMLTextAreaElement>(null)
   const helpId = useId()
   const before = useRef(text)
@@ -49,7 +52,7 @@ export function CommitField(props: CommitFieldProps) {
     if (trouble === null) setTyped(null)
   }
   const onKeyDown = (event: React.KeyboardEvent) => {
-    if (event.key === 'Enter' && !(rows && event.shiftKey)) {
+    if (event.key === 'Enter' && (!rows || event.ctrlKey || event.metaKey)) {
       event.preventDefault()
       commit()
     } else if (event.key === 'Escape' && typed !== null) {

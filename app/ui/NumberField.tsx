@@ -1,8 +1,9 @@
 import type { ReactNode } from 'react'
 import type { Limit } from '../../core/index.ts'
+import type { FaceUnit } from '../words/index.ts'
 import { CommitField } from './CommitField.tsx'
 import { Mark } from './Marks.tsx'
-import { allowedAtFace, type FaceUnit, fieldText, readNumber } from './readNumber.ts'
+import { allowedAtFace, fieldText, readNumber } from './readNumber.ts'
 
 export interface NumberFieldProps {
   readonly label: ReactNode
@@ -19,6 +20,8 @@ export interface NumberFieldProps {
   /** The study cannot run without it. */
   readonly required?: boolean
   readonly help?: ReactNode
+  /** What is wrong with the stored value. */
+  readonly trouble?: string | null
   readonly shape?: 'row' | 'wide'
   readonly hideLabel?: boolean
   readonly ariaLabel?: string
@@ -46,6 +49,7 @@ export function NumberField(props: NumberFieldProps) {
       placeholder={stated ? undefined : required ? 'needed' : standIn}
       marks={!stated && !required && standIn !== '' ? <Mark>default</Mark> : null}
       help={props.help}
+      trouble={props.trouble}
       shape={props.shape}
       hideLabel={props.hideLabel}
       ariaLabel={props.ariaLabel}

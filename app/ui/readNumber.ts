@@ -1,10 +1,6 @@
 import { type Limit, within } from '../../core/index.ts'
+import type { FaceUnit } from '../words/index.ts'
 
-/** Unit at the face: its word and how many SI units it is. */
-export interface FaceUnit {
-  readonly unit: string
-  readonly size: number
-}
 export type ReadNumber = { readonly ok: true; readonly value: number | undefined } | { readonly ok: false; readonly why: string }
 
 const DIGITS = 7

@@ -1,0 +1,219 @@
+import { useState } from 'react'
+import { Button as AriaButton } from 'react-aria-components'
+import { type CandidateDoc, limitOf } from '../../core/index.ts'
+import {
+  addCandidate,
+  moveCandidate,
+  removeCandidate,
+  renameCandidate,
+  sameOption,
+  setCandidateField,
+  setMastHeights,
+} from '../document/index.ts'
+import { Button, Caution, CommitField, Notice, NumberField, PositionField, readNumbers } from '../ui/index.ts'
+import { CAUTIONS, DEG, EMPTY_WORDS, formatHeight, formatPosition, METRES, textOf } from '../words/index.ts'
+import { settledOf } from './fields.tsx'
+import { useDoc, useGround, useSession, useView } from './session/index.ts'
+
+/** Places where the radar could stand, with their mast heights. */
+export function CandidatesStep() {
+  const { study, view } = useSession()
+  const candidates = useDoc((d) => d.candidates)
+  const placing = useView((v) => v.placing)
+  const hasGround = useGround((g) => g.state === 'ready')
+  const [typing, setTyping] = useState(false)
+  const select = (id: string) => {
+    const c = study.getState().doc.candidates.find((x) => x.id === id)
+    if (c)
+      view
+        .getState()
+        .set({ option: { candidate: id, heightM: c.mastHeightsM[0], tiltDeg: study.getState().doc.radar.antenna.tiltDeg ?? 0 } })
+  }
+  return (
+    <>
+      {candidates.length === 0 ? (
+        <div className="empty">
+          <h3>{EMPTY_WORDS.candidates.title}</h3>
+          <p className="ink-2">
+            {hasGround ? 'Place one on the map or enter its position' : 'Terrain comes first: the Ground step takes it'}.{' '}
+            {EMPTY_WORDS.candidates.reason}.
+          </p>
+        </div>
+      ) : null}
+      {candidates.length > 0 ? (
+        <div className="stack">
+          {candidates.map((c) => (
+            <Card key={c.id} candidate={c} onSelect={() => select(c.id)} />
+          ))}
+        </div>
+      ) : null}
+      {placing ? <Notice>Click the map where the candidate stands; Escape ends it</Notice> : null}
+      <div className="row">
+        <Button active={placing} disabled={!hasGround} onPress={() => view.getState().set({ placing: !placing })}>
+          Place on map
+        </Button>
+        <Button active={typing} onPress={() => setTyping(!typing)}>
+          Enter position
+        </Button>
+      </div>
+      {typing ? (
+        <PositionField
+          label="Position"
+          value={null}
+          help="Decimal degrees, degrees minutes seconds, DDMMSS, or UTM such as 33N 500000 5400000"
+          onCommit={(at) => {
+            const id = addCandidate(study, at)
+            select(id)
+            setTyping(false)
+          }}
+        />
+      ) : null}
+      {candidates.length > 0 ? <Caution>{CAUTIONS.nearMast}</Caution> : null}
+    </>
+  )
+}
+
+/** Letter ring as the map draws it. */
+export const Ring = () => (
+  <svg className="ring" width="18" height="18" viewBox="0 0 18 18" aria-hidden>
+    <circle cx="9" cy="9" r="7" />
+    <circle cx="9" cy="9" r="2" />
+  </svg>
+)
+
+function Card({ candidate: c, onSelect }: { candidate: CandidateDoc; onSelect: () => void }) {
+  const { view } = useSession()
+  const option = useView((v) => v.option)
+  const system = useView((v) => v.units)
+  const groundM = useGround((g) => g.candidateM.get(c.id))
+  const hasGround = useGround((g) => g.state === 'ready')
+  const tilts = useDoc((d) => settledOf(d)?.candidates.find((x) => x.id === c.id)?.tiltsDeg)
+  const on = option?.candidate === c.id
+  const heightM = c.groundHeightM ?? groundM
+  const choose = (mastM: number, tiltDeg = on ? option.tiltDeg : (tilts?.[0] ?? 0)) =>
+    view.getState().set({ option: { candidate: c.id, heightM: mastM, tiltDeg } })
+  return (
+    <section className={on ? 'card on' : 'card'} aria-label={`Candidate ${c.id}`}>
+      <AriaButton className="card-head" aria-pressed={on} onPress={onSelect}>
+        <Ring />
+        <b>{c.id}</b>
+        <span className="card-name">{c.name === c.id ? '' : c.name}</span>
+        <span className="ink-3">{heightM === null || heightM === undefined ? '' : textOf(formatHeight(heightM, system))}</span>
+      </AriaButton>
+      <p className="small ink-3">{formatPosition(c)}</p>
+      {hasGround && groundM === null ? <p className="mark">no ground known here: outside the terrain or over a void</p> : null}
+      <fieldset className="chips" aria-label={`Mast heights of ${c.id}`}>
+        {[...c.mastHeightsM]
+          .sort((a, b) => a - b)
+          .map((m, i, all) => (
+            <AriaButton
+              key={m}
+              className={on && option.heightM === m ? 'chip on' : 'chip'}
+              aria-pressed={on && option.heightM === m}
+              onPress={() => choose(m)}
+            >
+              {m}
+              {i === all.length - 1 ? ' m' : ''}
+            </AriaButton>
+          ))}
+      </fieldset>
+      {tilts && tilts.length > 1 ? (
+        <fieldset className="chips" aria-label={`Tilts of ${c.id}`}>
+          <span className="small ink-3">tilt</span>
+          {tilts.map((t) => {
+            const chosen = on && sameOption(option, { candidate: c.id, heightM: option.heightM, tiltDeg: t })
+            return (
+              <AriaButton
+                key={t}
+                className={chosen ? 'chip on' : 'chip'}
+                aria-pressed={chosen}
+                onPress={() => choose(on ? option.heightM : c.mastHeightsM[0], t)}
+              >
+                {t}°
+              </AriaButton>
+            )
+          })}
+        </fieldset>
+      ) : null}
+      {on ? <Details candidate={c} /> : null}
+    </section>
+  )
+}
+
+function Details({ candidate: c }: { candidate: CandidateDoc }) {
+  const { study } = useSession()
+  const at = useDoc((d) => d.candidates.findIndex((x) => x.id === c.id))
+  const ownTiltDeg = useDoc((d) => d.radar.antenna.tiltDeg ?? 0)
+  const limit = (key: string) => limitOf(`candidates[${at}].${key}`)
+  return (
+    <div className="details">
+      <CommitField
+        label="Name"
+        text={c.name ?? ''}
+        shape="long"
+        onCommit={(text) => {
+          renameCandidate(study, c.id, text.trim())
+          return null
+        }}
+      />
+      <PositionField label="Position" value={c} onCommit={(to) => moveCandidate(study, c.id, to)} />
+      <CommitField
+        label="Mast heights"
+        text={c.mastHeightsM.join(', ')}
+        unit="m"
+        numeric
+        onCommit={(text) => {
+          const read = readNumbers(text, METRES, limit('mastHeightsM[0]'))
+          if (!read.ok) return read.why
+          if (read.values.length === 0) return 'give at least one height'
+          setMastHeights(study, c.id, read.values)
+          return null
+        }}
+      />
+      <CommitField
+        label="Tilts"
+        text={(c.tiltsDeg ?? []).join(', ')}
+        placeholder={String(ownTiltDeg)}
+        unit="°"
+        numeric
+        onCommit={(text) => {
+          const read = readNumbers(text, DEG, limit('tiltsDeg[0]'))
+          if (!read.ok) return read.why
+          setCandidateField(study, c.id, 'tiltsDeg', read.values.length > 0 ? read.values : undefined)
+          return null
+        }}
+      />
+      <NumberField
+        label="Ground"
+        value={c.groundHeightM}
+        fallbackWords="raster"
+        face={METRES}
+        limit={limit('groundHeightM')}
+        onCommit={(v) => setCandidateField(study, c.id, 'groundHeightM', v)}
+      />
+      <NumberField
+        label="Clearing radius"
+        value={c.clearingRadiusM}
+        fallback={50}
+        face={METRES}
+        limit={limit('clearingRadiusM')}
+        onCommit={(v) => setCandidateField(study, c.id, 'clearingRadiusM', v)}
+      />
+      <CommitField
+        label="Notes"
+        text={c.notes ?? ''}
+        shape="wide"
+        rows={2}
+        onCommit={(text) => {
+          setCandidateField(study, c.id, 'notes', text.trim() || undefined)
+          return null
+        }}
+      />
+      <div className="row end">
+        <Button small look="quiet" label={`Delete candidate ${c.id}`} onPress={() => removeCandidate(study, c.id)}>
+          Delete {c.id}
+        </Button>
+      </div>
+    </div>
+  )
+}

@@ -1,0 +1,169 @@
+import { lazy, Suspense, useMemo } from 'react'
+import type { LonLat } from '../../core/index.ts'
+import { addCandidate, hasStartingRadar, moveCandidate, optionKey, setMastHeights, settleOption } from '../document/index.ts'
+import type { MapCandidate, MapHub, MapNeed } from '../map/index.ts'
+import { EMPTY_WORDS } from '../words/index.ts'
+import { settledOf } from './fields.tsx'
+import { LowerPanel } from './LowerPanel.tsx'
+import { useDoc, useGround, useResults, useSession, useView } from './session/index.ts'
+
+const MapPane = lazy(() => import('../map/index.ts').then((m) => ({ default: m.MapPane })))
+const Ruler = lazy(() => import('../map/index.ts').then((m) => ({ default: m.Ruler })))
+const HorizonStrip = lazy(() => import('../map/index.ts').then((m) => ({ default: m.HorizonStrip })))
+
+const NO_CORNERS: readonly LonLat[] = []
+const NO_ROWS: never[] = []
+const NO_MARKS: never[] = []
+
+/** Candidates as the map draws them. */
+function useMapCandidates(): readonly MapCandidate[] {
+  const candidates = useDoc((d) => d.candidates)
+  const ownTiltDeg = useDoc((d) => d.radar.antenna.tiltDeg ?? 0)
+  return useMemo(
+    () =>
+      candidates.map((c) => ({
+        id: c.id,
+        name: c.name ?? c.id,
+        lon: c.lon,
+        lat: c.lat,
+        mastHeightsM: c.mastHeightsM,
+        tiltsDeg: c.tiltsDeg && c.tiltsDeg.length > 0 ? c.tiltsDeg : [ownTiltDeg],
+      })),
+    [candidates, ownTiltDeg],
+  )
+}
+function useMapNeeds(maxRangeM: number): readonly MapNeed[] {
+  const needs = useDoc((d) => d.needs)
+  return useMemo(
+    () =>
+      (needs ?? [])
+        .filter((n) => n.kind === 'layer')
+        .map((n) => ({
+          id: n.id,
+          name: n.name ?? n.id,
+          fromRangeM: n.fromRangeM ?? 0,
+          toRangeM: n.toRangeM ?? maxRangeM,
+          sectorDeg: n.sectorDeg ?? [0, 360],
+        })),
+    [needs, maxRangeM],
+  )
+}
+
+/** The map with what it needs of the session. */
+export function MapSlot({ hub }: { hub: MapHub }) {
+  const session = useSession()
+  const { study, view, client } = session
+  const set = view.getState().set
+  const { option, layer, need, units, theme, placing, cell, chart, profileAzimuthDeg } = useView((v) => v)
+  const ground = useGround((g) => g.ground)
+  const obstacles = useGround((g) => g.obstacles)
+  const roads = useGround((g) => g.roads)
+  const marks = useResults((r) => (option ? r.byOption.get(optionKey(option))?.figures.marks : undefined)) ?? NO_MARKS
+  const maxRangeM = useDoc((d) => settledOf(d)?.run.maxRangeM ?? d.radar.instrumentedRangeM ?? 60_000)
+  const candidates = useMapCandidates()
+  const needs = useMapNeeds(maxRangeM)
+  const starting = useDoc(hasStartingRadar)
+  const shownMarks = useMemo(() => (starting ? [...marks, { mark: 'default', about: 'radar: starting values' }] : marks), [marks, starting])
+  const select = (id: string) => {
+    const { doc } = study.getState()
+    const c = doc.candidates.find((x) => x.id === id)
+    if (c)
+      set({ option: settleOption(doc, { candidate: id, heightM: option?.heightM ?? c.mastHeightsM[0], tiltDeg: option?.tiltDeg ?? 0 }) })
+  }
+  return (
+    <Suspense fallback={null}>
+      <MapPane
+        client={client}
+        hub={hub}
+        groundSerial={ground?.serial ?? null}
+        corners={ground?.corners ?? NO_CORNERS}
+        candidates={candidates}
+        needs={needs}
+        obstacles={obstacles}
+        roads={roads}
+        maxRangeM={maxRangeM}
+        show={{ option, layer, need }}
+        onShow={set}
+        units={units}
+        night={theme === 'night'}
+        marks={shownMarks}
+        placing={placing}
+        onPlace={(at) => {
+          const id = addCandidate(study, at)
+          set({ placing: false })
+          select(id)
+        }}
+        onPlacingEnd={() => set({ placing: false })}
+        onSelect={select}
+        onMove={(id, at) => moveCandidate(study, id, at)}
+        onCell={(at) => set({ cell: at, chart: 'ledger' })}
+        cell={chart === 'ledger' ? cell : null}
+        onProfile={(azimuthDeg) => set({ chart: 'profile', profileAzimuthDeg: azimuthDeg })}
+        profileAzimuthDeg={chart === 'profile' ? profileAzimuthDeg : null}
+        progress={null}
+        onStop={session.stop}
+        lower={chart && option ? <LowerPanel hub={hub} /> : null}
+        onLowerClose={() => set({ chart: null, cell: null })}
+        empty={<NoGround />}
+      />
+    </Suspense>
+  )
+}
+
+function NoGround() {
+  const state = useGround((g) => g.state)
+  if (state === 'reading') return <p className="ink-2">Reading terrain</p>
+  return (
+    <>
+      <h3>{EMPTY_WORDS.ground.title}</h3>
+      <p className="ink-2">{EMPTY_WORDS.ground.action}</p>
+    </>
+  )
+}
+
+export function RulerSlot({ hub }: { hub: MapHub }) {
+  const { study, view, client } = useSession()
+  const option = useView((v) => v.option)
+  const units = useView((v) => v.units)
+  const serial = useResults((r) => r.serial)
+  const candidate = useMapCandidates().find((c) => c.id === option?.candidate) ?? null
+  const stated = useDoc((d) => d.candidates.find((c) => c.id === option?.candidate)?.groundHeightM)
+  const raster = useGround((g) => (option ? g.candidateM.get(option.candidate) : undefined))
+  const show = (heightM: number) => option && view.getState().set({ option: { ...option, heightM } })
+  return (
+    <Suspense fallback={null}>
+      <Ruler
+        client={client}
+        hub={hub}
+        candidate={candidate}
+        option={option}
+        groundM={stated ?? raster ?? null}
+        resultSerial={serial}
+        units={units}
+        onHeight={show}
+        onAddHeight={(heightM) => {
+          if (!candidate) return
+          setMastHeights(study, candidate.id, [...candidate.mastHeightsM, heightM])
+          show(heightM)
+        }}
+      />
+    </Suspense>
+  )
+}
+
+export function StripSlot({ hub }: { hub: MapHub }) {
+  const { view } = useSession()
+  const option = useView((v) => v.option)
+  const units = useView((v) => v.units)
+  const rows = useResults((r) => (option ? r.byOption.get(optionKey(option))?.figures.horizon.rows : undefined)) ?? NO_ROWS
+  return (
+    <Suspense fallback={null}>
+      <HorizonStrip
+        hub={hub}
+        rows={rows}
+        units={units}
+        onPick={(azimuthDeg) => view.getState().set({ chart: 'profile', profileAzimuthDeg: azimuthDeg })}
+      />
+    </Suspense>
+  )
+}

@@ -1,0 +1,45 @@
+import { addNeed, type StepId } from '../document/index.ts'
+import { Button } from '../ui/index.ts'
+import { useDoc, useGround, useSession, useView } from './session/index.ts'
+import { useFilePicker } from './useFilePicker.tsx'
+import { useMemoExport } from './useMemoExport.ts'
+
+/** One primary action per step: what comes next. */
+export function PrimaryAction() {
+  const { view, study } = useSession()
+  const step = useView((v) => v.step)
+  const placing = useView((v) => v.placing)
+  const hasGround = useGround((g) => g.state === 'ready' || g.state === 'reading')
+  const needs = useDoc((d) => d.needs?.length ?? 0)
+  const candidates = useDoc((d) => d.candidates.length)
+  const picker = useFilePicker()
+  const memo = useMemoExport()
+  const go = (to: StepId) => () => view.getState().set({ step: to, formOpen: true })
+  const action = ((): { words: string; run: () => void; disabled?: boolean } => {
+    switch (step) {
+      case 'ground':
+        return hasGround ? { words: 'Radar next', run: go('radar') } : { words: 'Add terrain', run: picker.open }
+      case 'radar':
+        return { words: 'Need next', run: go('need') }
+      case 'need':
+        return needs > 0 ? { words: 'Candidates next', run: go('candidates') } : { words: 'State a need', run: () => addNeed(study) }
+      case 'candidates':
+        if (candidates > 0 && !placing) return { words: 'Compare', run: go('compare') }
+        return placing
+          ? { words: 'Stop placing', run: () => view.getState().set({ placing: false }) }
+          : { words: 'Place on map', run: () => view.getState().set({ placing: true, formOpen: true }), disabled: !hasGround }
+      case 'compare':
+        return { words: 'Write memo', run: go('memo') }
+      case 'memo':
+        return { words: memo.busy ? 'Writing PDF' : 'Export PDF', run: memo.run, disabled: !memo.possible || memo.busy }
+    }
+  })()
+  return (
+    <>
+      <Button look="primary" onPress={action.run} disabled={action.disabled}>
+        {action.words}
+      </Button>
+      {picker.input}
+    </>
+  )
+}

@@ -1,0 +1,136 @@
+import { hasStartingRadar, setField, valueAt } from '../document/index.ts'
+import { Caution, Check, CommitField, Mark } from '../ui/index.ts'
+import {
+  COSECANT_FIELD,
+  ELEVATION_PATTERNS,
+  GAS_KINDS,
+  POLARISATIONS,
+  PRF_MODES,
+  RADAR_FIELDS,
+  STC_FIELDS,
+  STC_KINDS,
+  SUPPRESSION_FIELDS,
+  SUPPRESSION_KINDS,
+} from '../words/index.ts'
+import { DocChoice, DocNumber, DocNumbers, Group } from './fields.tsx'
+import { PairsField } from './PairsField.tsx'
+import { useDoc, useSession } from './session/index.ts'
+
+const HZ = { unit: 'Hz', size: 1 }
+
+/** Every field of the radar, of the air it works in and of the polar grid. */
+export function RadarStep() {
+  const { study } = useSession()
+  const name = useDoc((d) => d.radar.name ?? '')
+  const starting = useDoc(hasStartingRadar)
+  const coherent = useDoc((d) => d.radar.coherentTransmitter)
+  const pattern = useDoc((d) => d.radar.antenna.elevationPattern ?? 'gaussian')
+  const suppression = useDoc((d) => d.radar.suppression?.kind ?? 'none')
+  const stc = useDoc((d) => d.radar.stc?.kind ?? 'none')
+  return (
+    <>
+      <CommitField
+        label="Name"
+        text={name}
+        shape="wide"
+        onCommit={(text) => {
+          setField(study, 'radar.name', text.trim() || undefined, 'renamed the radar')
+          return null
+        }}
+      />
+      {starting ? <Caution>Round starting values, not a radar: enter yours and name it before relying on any figure.</Caution> : null}
+      <Group title="Transmitter">
+        {RADAR_FIELDS.transmitter.map((f) => (
+          <DocNumber key={f.path} of={f} />
+        ))}
+        <DocNumbers path="radar.prfHz" label="PRF" face={HZ} required />
+        <DocChoice path="radar.prfMode" label="PRF change" choices={PRF_MODES} fallback="single" />
+        <Check value={coherent ?? false} onChange={(v) => setField(study, 'radar.coherentTransmitter', v, 'changed coherence')}>
+          Coherent transmitter {coherent === undefined ? <Mark>default</Mark> : null}
+        </Check>
+      </Group>
+      <Group title="Antenna">
+        {RADAR_FIELDS.antenna.slice(0, 3).map((f) => (
+          <DocNumber key={f.path} of={f} />
+        ))}
+        <DocChoice path="radar.antenna.elevationPattern" label="Elevation pattern" choices={ELEVATION_PATTERNS} fallback="gaussian" />
+        {pattern === 'cosecant-squared' ? <DocNumber of={COSECANT_FIELD} /> : null}
+        {pattern === 'table' ? (
+          <PairsField
+            path="radar.antenna.elevationTable"
+            label="Pattern: degrees from the beam axis, dB below peak"
+            first={{ unit: '°', size: 1 }}
+            example={'−5  −13\n0  0\n5  −6'}
+          />
+        ) : null}
+        {RADAR_FIELDS.antenna.slice(3).map((f) => (
+          <DocNumber key={f.path} of={f} />
+        ))}
+        <DocChoice path="radar.polarisation" label="Polarisation" choices={POLARISATIONS} fallback="V" />
+      </Group>
+      <Group title="Receiver">
+        {RADAR_FIELDS.receiver.map((f) => (
+          <DocNumber key={f.path} of={f} />
+        ))}
+      </Group>
+      <Group title="Clutter suppression">
+        <DocChoice
+          path="radar.suppression.kind"
+          label="Kind"
+          choices={SUPPRESSION_KINDS}
+          fallback="none"
+          onChange={(kind) => {
+            const kept = (valueAt(study.getState().doc, 'radar.suppression') ?? {}) as object
+            const stated = kind === 'stated' ? { statedDb: 30, ...kept } : kept
+            setField(study, 'radar.suppression', { ...stated, kind }, 'changed suppression')
+          }}
+        />
+        {suppression === 'stated' ? SUPPRESSION_FIELDS.stated.map((f) => <DocNumber key={f.path} of={f} />) : null}
+        {suppression === 'canceller' || suppression === 'filterBank'
+          ? SUPPRESSION_FIELDS.canceller.map((f) => <DocNumber key={f.path} of={f} />)
+          : null}
+        {suppression === 'canceller' || suppression === 'filterBank' ? (
+          <Caution>Kept, not assessed yet: available suppression counts as 0 dB.</Caution>
+        ) : null}
+      </Group>
+      <Group title="Short-range sensitivity (STC)">
+        <DocChoice
+          path="radar.stc.kind"
+          label="Kind"
+          choices={STC_KINDS}
+          fallback="none"
+          onChange={(kind) => {
+            const kept = (valueAt(study.getState().doc, 'radar.stc') ?? {}) as object
+            const start =
+              kind === 'curve'
+                ? {
+                    curve: [
+                      [0, 40],
+                      [20_000, 0],
+                    ],
+                  }
+                : kind === 'rtoFourth'
+                  ? { cornerM: 20_000, maxDb: 40 }
+                  : {}
+            setField(study, 'radar.stc', { ...start, ...kept, kind }, 'changed STC')
+          }}
+        />
+        {stc === 'rtoFourth' ? STC_FIELDS.map((f) => <DocNumber key={f.path} of={f} />) : null}
+        {stc === 'curve' ? (
+          <PairsField path="radar.stc.curve" label="Curve: slant range, attenuation dB" first="range" example={'0  40\n10  0'} />
+        ) : null}
+      </Group>
+      <Group title="Air and earth">
+        {RADAR_FIELDS.air.map((f) => (
+          <DocNumber key={f.path} of={f} />
+        ))}
+        <DocChoice path="atmosphere.gas" label="Gas loss" choices={GAS_KINDS} fallback="none" />
+      </Group>
+      <Group title="Polar grid">
+        {RADAR_FIELDS.grid.map((f) => (
+          <DocNumber key={f.path} of={f} />
+        ))}
+      </Group>
+    </>
+  )
+}

@@ -1,0 +1,128 @@
+import { type ComponentType, useEffect, useState } from 'react'
+import { useStore } from 'zustand'
+import { redo, type StepId, undo } from '../document/index.ts'
+import { createMapHub } from '../map/index.ts'
+import { Button, Caution, Notice } from '../ui/index.ts'
+import { cautionsForLayer, STEP_WORDS } from '../words/index.ts'
+import { CandidatesStep } from './CandidatesStep.tsx'
+import { CompareStep } from './CompareStep.tsx'
+import { FaultBoundary } from './FaultBoundary.tsx'
+import { GroundStep } from './GroundStep.tsx'
+import { MapSlot, RulerSlot, StripSlot } from './MapSlot.tsx'
+import { MemoAside } from './MemoAside.tsx'
+import { MemoStep } from './MemoStep.tsx'
+import { NeedStep } from './NeedStep.tsx'
+import { RadarStep } from './RadarStep.tsx'
+import { StepIndex } from './StepIndex.tsx'
+import { useSession, useView } from './session/index.ts'
+import { TopBar } from './TopBar.tsx'
+import { useDrop } from './useDrop.ts'
+
+const FORMS: Record<StepId, ComponentType> = {
+  ground: GroundStep,
+  radar: RadarStep,
+  need: NeedStep,
+  candidates: CandidatesStep,
+  compare: CompareStep,
+  memo: MemoStep,
+}
+/** Steps whose form takes the whole sheet beside the ruler. */
+const WHOLE_SHEET: ReadonlySet<StepId> = new Set(['compare', 'memo'])
+
+/** The page: index, form, horizon strip, map, ruler, memo column. */
+export function Shell() {
+  const { view } = useSession()
+  const step = useView((v) => v.step)
+  const formOpen = useView((v) => v.formOpen)
+  const memoOpen = useView((v) => v.memoOpen)
+  const theme = useView((v) => v.theme)
+  const layer = useView((v) => v.layer)
+  const [hub] = useState(createMapHub)
+  const dragging = useDrop()
+  useUndoKeys()
+  useEffect(() => {
+    document.documentElement.dataset.theme = theme
+  }, [theme])
+  const Form = FORMS[step]
+  const whole = WHOLE_SHEET.has(step)
+  return (
+    <div className="shell" data-form={formOpen ? 'open' : 'closed'} data-memo={memoOpen ? 'open' : 'closed'}>
+      <TopBar />
+      <StepIndex />
+      <section className={whole ? 'sheet' : 'form'} aria-label={STEP_WORDS[step].name}>
+        <header>
+          <h2>{STEP_WORDS[step].name}</h2>
+          {whole ? null : (
+            <Button small look="quiet" className="fold" onPress={() => view.getState().set({ formOpen: false })}>
+              fold
+            </Button>
+          )}
+        </header>
+        <FaultBoundary key={step}>
+          <Form />
+        </FaultBoundary>
+      </section>
+      <div className="strip">
+        <FaultBoundary>
+          <StripSlot hub={hub} />
+        </FaultBoundary>
+      </div>
+      <main className="map">
+        <FaultBoundary>
+          <MapSlot hub={hub} />
+        </FaultBoundary>
+        <Notices />
+      </main>
+      <div className="ruler-column">
+        <FaultBoundary>
+          <RulerSlot hub={hub} />
+        </FaultBoundary>
+        <div className="ruler-cautions">
+          {cautionsForLayer(layer).map((c) => (
+            <Caution key={c}>{c}</Caution>
+          ))}
+        </div>
+      </div>
+      <aside className="memo" aria-label="Memo of the option on show">
+        <FaultBoundary>
+          <MemoAside />
+        </FaultBoundary>
+      </aside>
+      {dragging ? <div className="drop-veil">Drop terrain, land cover, obstacles, roads, a study or a package</div> : null}
+    </div>
+  )
+}
+
+function Notices() {
+  const { notices } = useSession()
+  const shown = useStore(notices, (n) => n.shown)
+  if (shown.length === 0) return null
+  return (
+    <div className="notices">
+      {shown.map((n) => (
+        <Notice key={n.id} tone={n.tone} onClose={() => notices.getState().close(n.id)}>
+          {n.text}
+        </Notice>
+      ))}
+    </div>
+  )
+}
+
+/** Ctrl+Z and Ctrl+Shift+Z (or Ctrl+Y), unless a text field is being edited. */
+function useUndoKeys() {
+  const { study } = useSession()
+  useEffect(() => {
+    const onKey = (e: KeyboardEvent) => {
+      if (!(e.ctrlKey || e.metaKey) || e.altKey) return
+      const key = e.key.toLowerCase()
+      if (key !== 'z' && key !== 'y') return
+      const typing = e.target instanceof HTMLElement && e.target.closest('input, textarea')
+      if (typing) return
+      e.preventDefault()
+      if (key === 'y' || e.shiftKey) redo(study)
+      else undo(study)
+    }
+    window.addEventListener('keydown', onKey)
+    return () => window.removeEventListener('keydown', onKey)
+  }, [study])
+}

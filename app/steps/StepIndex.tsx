@@ -1,0 +1,80 @@
+import { Button } from 'react-aria-components'
+import { hasStartingRadar, optionKey, problemsOf, STEPS, type StepId, studyOptions } from '../document/index.ts'
+import { STEP_WORDS } from '../words/index.ts'
+import { useDoc, useGround, useResults, useSession, useView } from './session/index.ts'
+
+interface StepState {
+  readonly words: string
+  readonly tone: 'ready' | 'missing' | 'changed'
+}
+const ready = (words: string): StepState => ({ words, tone: 'ready' })
+const missing = (words: string): StepState => ({ words, tone: 'missing' })
+const changed = (words: string): StepState => ({ words, tone: 'changed' })
+
+/** Each step's state in a word or two. */
+function useStepStates(): Record<StepId, StepState> {
+  const doc = useDoc((d) => d)
+  const ground = useGround((g) => g)
+  const byOption = useResults((r) => r.byOption)
+  const running = useResults((r) => r.status !== null)
+  const hold = useView((v) => v.hold)
+  const problems = problemsOf(doc)
+  const wrong = (part: string) => problems.filter((p) => p.path.startsWith(part)).length
+  const options = studyOptions(doc)
+  const done = options.filter((o) => byOption.has(optionKey(o))).length
+  const needs = doc.needs?.length ?? 0
+  const toCorrect = (n: number) => missing(`${n} to correct`)
+  return {
+    ground:
+      ground.state === 'failed'
+        ? missing('not readable')
+        : ground.state === 'reading'
+          ? changed('reading')
+          : doc.terrain.length === 0
+            ? missing('missing')
+            : ground.missing.length > 0
+              ? missing(`${ground.missing.length} file${ground.missing.length > 1 ? 's' : ''} missing`)
+              : ready('ready'),
+    radar: wrong('radar') > 0 ? toCorrect(wrong('radar')) : hasStartingRadar(doc) ? changed('starting values') : ready('ready'),
+    need: wrong('needs') > 0 ? toCorrect(wrong('needs')) : needs === 0 ? missing('none stated') : ready(`${needs} stated`),
+    candidates:
+      wrong('candidates') > 0
+        ? toCorrect(wrong('candidates'))
+        : doc.candidates.length === 0
+          ? missing('none placed')
+          : ready(`${doc.candidates.length} placed`),
+    compare:
+      options.length === 0
+        ? missing('no options')
+        : done < options.length || running
+          ? changed(hold && !running ? `held, ${done} of ${options.length}` : `${done} of ${options.length}`)
+          : ready(`${options.length} options`),
+    memo: { words: done === 0 ? 'empty' : 'draft', tone: 'ready' },
+  }
+}
+
+/** The index of the sheet: six steps, each with its state. */
+export function StepIndex() {
+  const { view } = useSession()
+  const step = useView((v) => v.step)
+  const formOpen = useView((v) => v.formOpen)
+  const states = useStepStates()
+  return (
+    <nav className="index" aria-label="Steps">
+      <ol>
+        {STEPS.map((id) => (
+          <li key={id}>
+            <Button
+              className={id === step ? 'step on' : 'step'}
+              aria-current={id === step ? 'step' : undefined}
+              onPress={() => view.getState().set({ step: id, formOpen: id === step ? !formOpen : true })}
+            >
+              <span className="step-name">{STEP_WORDS[id].name}</span>
+              <span className={`step-state ${states[id].tone}`}>{states[id].words}</span>
+            </Button>
+          </li>
+        ))}
+      </ol>
+    </nav>
+  )
+}

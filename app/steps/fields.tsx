@@ -1,0 +1,117 @@
+import type { ReactNode } from 'react'
+import { type DefaultUsed, limitOf, type SettledStudy, type StudyDoc, settle } from '../../core/index.ts'
+import { problemsOf, setField, valueAt } from '../document/index.ts'
+import { CommitField, Mark, NumberField, readNumbers, Select } from '../ui/index.ts'
+import { type FaceUnit, type FieldWords, fromFace, type UnitSystem, unitOf } from '../words/index.ts'
+import { useDoc, useSession, useView } from './session/index.ts'
+
+const settled = new WeakMap<StudyDoc, SettledStudy | null>()
+/** The study with its defaults, once per document; null while a value has to change. */
+export function settledOf(doc: StudyDoc): SettledStudy | null {
+  let study = settled.get(doc)
+  if (study === undefined) {
+    study = problemsOf(doc).length === 0 ? settle(doc) : null
+    settled.set(doc, study)
+  }
+  return study
+}
+const defaultAt = (doc: StudyDoc, path: string): DefaultUsed['value'] | undefined =>
+  settledOf(doc)?.defaults.find((d) => d.path === path)?.value
+
+/** Why the value at a path has to change; null when it may stay. */
+const troubleAt = (doc: StudyDoc, path: string): string | null => {
+  const problem = problemsOf(doc).find((p) => p.path === path)
+  return problem ? `${problem.found}; ${problem.remedy}` : null
+}
+/** Face unit of a field under the unit switch. */
+export const faceOf = (face: FieldWords['face'], system: UnitSystem): FaceUnit =>
+  typeof face === 'string' ? { unit: unitOf(face, system), size: fromFace(face, 1, system) } : face
+
+/** A number of the study at its key path, with unit, range, default and what is wrong with it. */
+export function DocNumber({ of }: { of: FieldWords }) {
+  const session = useSession()
+  const system = useView((v) => v.units)
+  const value = useDoc((d) => valueAt(d, of.path))
+  const fallback = useDoc((d) => defaultAt(d, of.path))
+  const trouble = useDoc((d) => troubleAt(d, of.path))
+  return (
+    <NumberField
+      label={of.label}
+      value={typeof value === 'number' ? value : undefined}
+      onCommit={(v) => setField(session.study, of.path, v, `changed ${of.label.toLowerCase()}`)}
+      face={faceOf(of.face, system)}
+      limit={limitOf(of.path)}
+      fallback={typeof fallback === 'number' ? fallback : undefined}
+      fallbackWords={of.emptyWords}
+      required={of.required}
+      trouble={trouble}
+    />
+  )
+}
+
+export interface DocChoiceProps<T extends string> {
+  readonly path: string
+  readonly label: string
+  readonly choices: readonly { readonly id: T; readonly words: string; readonly hint?: string }[]
+  readonly fallback: T
+  /** Instead of setting the one value. */
+  readonly onChange?: (value: T) => void
+}
+/** A choice of the study at its key path. */
+export function DocChoice<T extends string>({ path, label, choices, fallback, onChange }: DocChoiceProps<T>) {
+  const session = useSession()
+  const value = useDoc((d) => valueAt(d, path)) as T | undefined
+  return (
+    <Select
+      label={label}
+      value={value ?? fallback}
+      choices={choices}
+      onChange={onChange ?? ((v) => setField(session.study, path, v, `changed ${label.toLowerCase()}`))}
+      marks={value === undefined ? <Mark>default</Mark> : null}
+    />
+  )
+}
+
+/** A list of numbers in one field: "900, 1100". */
+export function DocNumbers({
+  path,
+  label,
+  face,
+  help,
+  required,
+}: {
+  path: string
+  label: string
+  face: FaceUnit
+  help?: ReactNode
+  required?: boolean
+}) {
+  const session = useSession()
+  const value = useDoc((d) => valueAt(d, path)) as number[] | null | undefined
+  const trouble = useDoc((d) => troubleAt(d, path))
+  const commit = (text: string): string | null => {
+    const read = readNumbers(text, face, limitOf(`${path}[0]`))
+    if (!read.ok) return read.why
+    if (read.values.length === 0 && required) return 'needed; give at least one'
+    setField(session.study, path, read.values.length > 0 ? read.values : undefined, `changed ${label.toLowerCase()}`)
+    return null
+  }
+  return (
+    <CommitField
+      label={label}
+      text={(value ?? []).map((v) => Number((v / face.size).toPrecision(7))).join(', ')}
+      onCommit={commit}
+      unit={face.unit}
+      numeric
+      help={help}
+      trouble={trouble}
+    />
+  )
+}
+/** A row of form fields under a heading. */
+export const Group = ({ title, children }: { title: string; children: ReactNode }) => (
+  <section className="group">
+    <h3>{title}</h3>
+    {children}
+  </section>
+)

@@ -1,0 +1,2 @@
+export { Shell } from './Shell.tsx'
+export { type GroundRead, type ReadGround, type Session, SessionProvider, startSession } from './session/index.ts'

@@ -1,0 +1,80 @@
+import type { Ask, Obstacle, Road, StudyDoc } from '../../../core/index.ts'
+import type { StudyClient } from '../../compute/client.ts'
+import { type FileStore, filesOf, type GivenFile, type GroundStore, NO_GROUND, type StudyStore } from '../../document/index.ts'
+import { sentenceOf } from './notices.ts'
+
+/** What reading the files gives: the ground to hand over, and what the page keeps of it. */
+export interface GroundRead {
+  readonly ground: Ask['ground']
+  readonly roads: readonly Road[]
+  readonly obstacles: readonly Obstacle[]
+  /** A line per file. */
+  readonly notes: readonly string[]
+}
+export type ReadGround = (
+  files: ReadonlyMap<string, GivenFile>,
+  doc: StudyDoc,
+  onProgress: (doing: string, done: number, total: number) => void,
+) => Promise<GroundRead>
+
+/** Reads the ground again whenever its files, or what the study states about them, change, and hands it to the study worker. */
+export function keepGround(
+  study: StudyStore,
+  given: FileStore,
+  ground: GroundStore,
+  client: StudyClient,
+  read: ReadGround,
+  onGround: () => void,
+): () => void {
+  let latest = ''
+  let round = 0
+  const look = async () => {
+    const { doc } = study.getState()
+    const { files } = given.getState()
+    const key = groundKey(doc, files)
+    if (key === latest) return
+    latest = key
+    const mine = ++round
+    const missing = filesOf(doc).filter((name) => !files.has(name))
+    if (doc.terrain.length === 0 || doc.terrain.some((t) => !files.has(t.file))) {
+      ground.setState({ ...NO_GROUND, missing })
+      return
+    }
+    ground.setState({ state: 'reading', reading: { doing: 'Reading terrain', done: 0, total: 0 }, trouble: '', missing })
+    try {
+      const got = await read(files, doc, (doing, done, total) => {
+        if (mine === round) ground.setState({ reading: { doing, done, total } })
+      })
+      if (mine !== round) return
+      const { heightM, code } = got.ground
+      const transfer = [heightM.buffer, ...(code ? [code.buffer] : [])].filter((b): b is ArrayBuffer => b instanceof ArrayBuffer)
+      const answer = await client.ask('ground', got.ground, transfer)
+      if (mine !== round) return
+      const { notes, roads, obstacles } = got
+      ground.setState({ state: 'ready', reading: null, ground: answer, notes, roads, obstacles })
+      onGround()
+    } catch (error) {
+      if (mine === round) ground.setState({ ...NO_GROUND, state: 'failed', trouble: sentenceOf(error), missing })
+    }
+  }
+  const stops = [study.subscribe(look), given.subscribe(look)]
+  void look()
+  return () => {
+    for (const stop of stops) stop()
+  }
+}
+
+const serials = new WeakMap<Blob, number>()
+let nextSerial = 1
+const serialOf = (blob: Blob | undefined): number => {
+  if (!blob) return 0
+  const known = serials.get(blob) ?? nextSerial++
+  serials.set(blob, known)
+  return known
+}
+/** Everything the ground is made from: what the study states about its files, and which files these are. */
+function groundKey(doc: StudyDoc, files: ReadonlyMap<string, GivenFile>): string {
+  const names = [...doc.terrain.map((t) => t.file), doc.landCover?.file, doc.obstacles?.file, doc.roads?.file]
+  const blobs = names.map((n) => serialOf(n === undefined ? undefined : files.get(n)?.blob))
+  return JSON.stringify([doc.terrain, doc.landCover, doc.uniformTerrain, doc.obstacles, doc.roads, blobs])
+}

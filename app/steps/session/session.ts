@@ -1,0 +1,159 @@
+import type { StudyClient } from '../../compute/client.ts'
+import {
+  type Autosave,
+  autosave,
+  createFileStore,
+  createGroundStore,
+  createResultsStore,
+  createSaveStore,
+  createStudyStore,
+  createViewStore,
+  emptyStudy,
+  type FileStore,
+  fileStem,
+  forgetResults,
+  type GroundStore,
+  openShelf,
+  packStudy,
+  type ResultsStore,
+  restore,
+  type SaveStore,
+  type Shelf,
+  type StudyStore,
+  studyText,
+  takeTell,
+  type ViewStore,
+} from '../../document/index.ts'
+import { download, type FileRole, openServed, takeIn } from '../../files/index.ts'
+import { keepGround, type ReadGround } from './groundKeeper.ts'
+import { createNoticeStore, type NoticeStore, sentenceOf } from './notices.ts'
+import { keepRunning } from './runKeeper.ts'
+
+/** One open page: its stores, the study worker behind it, and what the user can do with the whole of it. */
+export interface Session {
+  readonly study: StudyStore
+  readonly files: FileStore
+  readonly view: ViewStore
+  readonly results: ResultsStore
+  readonly ground: GroundStore
+  readonly save: SaveStore
+  readonly notices: NoticeStore
+  readonly client: StudyClient
+  /** Dropped or picked files; `as` says what they are. */
+  take(files: readonly File[], as?: FileRole): Promise<void>
+  openDemo(): Promise<void>
+  newStudy(): void
+  saveStudy(): void
+  savePackage(): Promise<void>
+  run(): void
+  stop(): void
+}
+
+const DEMO_FOLDER = `${import.meta.env.BASE_URL}demo/`
+
+/** Starts the page: restores what was there, else opens the demo (`?empty`: nothing), then keeps ground, results and saves up to date. */
+export async function startSession(client: StudyClient, readGround: ReadGround): Promise<Session> {
+  const study = createStudyStore()
+  const files = createFileStore()
+  const dark = matchMedia('(prefers-color-scheme: dark)').matches
+  const view = createViewStore(window.localStorage, dark)
+  const results = createResultsStore()
+  const ground = createGroundStore()
+  const save = createSaveStore()
+  const notices = createNoticeStore()
+  const { say } = notices.getState()
+  const shelf = await openShelf().catch(() => noShelf())
+  const saver = autosave(study, files, save, shelf, window.localStorage, Date.now)
+
+  client.listen((tell) => takeTell(results, tell, Date.now()))
+  const runner = keepRunning(study, view, ground, results, client, notices)
+
+  const opened = (warnings: readonly string[], missing: readonly string[]) => {
+    forgetResults(results)
+    view.getState().set({ cell: null, chart: null, placing: false })
+    for (const w of warnings) say(w)
+    if (missing.length > 0)
+      say(`${missing.join(', ')}: named by the study, not here yet; drop ${missing.length > 1 ? 'them' : 'it'} on the page`)
+  }
+  const guarded = async (work: () => Promise<void>) => {
+    try {
+      await work()
+    } catch (error) {
+      say(sentenceOf(error), 'bad')
+    }
+  }
+  const openDemo = async () => {
+    const demo = await openServed(DEMO_FOLDER)
+    files.getState().replace(demo.files)
+    study.getState().load(demo.doc)
+    opened(demo.warnings, demo.missing)
+  }
+  const session: Session = {
+    study,
+    files,
+    view,
+    results,
+    ground,
+    save,
+    notices,
+    client,
+    take: (dropped, as) =>
+      guarded(async () => {
+        const taken = await takeIn(study, files, dropped, as)
+        if (taken.opened) opened(taken.warnings, taken.missing)
+      }),
+    openDemo: () => guarded(openDemo),
+    newStudy: () => {
+      files.getState().replace([])
+      study.getState().load(emptyStudy())
+      opened([], [])
+      view.getState().set({ step: 'ground' })
+    },
+    saveStudy: () => {
+      const { doc } = study.getState()
+      download(new Blob([studyText(doc)], { type: 'application/json' }), `${fileStem(doc)}.json`)
+    },
+    savePackage: () =>
+      guarded(async () => {
+        const { doc } = study.getState()
+        download(await packStudy(doc, files.getState().files), `${fileStem(doc)}.zip`)
+      }),
+    run: runner.run,
+    stop: runner.stop,
+  }
+  await firstStudy(session, saver, shelf, openDemo)
+  keepGround(study, files, ground, client, readGround, runner.onGround)
+  const leave = () => void saver.flush()
+  document.addEventListener('visibilitychange', () => document.visibilityState === 'hidden' && leave())
+  window.addEventListener('pagehide', leave)
+  return session
+}
+
+async function firstStudy(session: Session, saver: Autosave, shelf: Shelf, openDemo: () => Promise<void>): Promise<void> {
+  const { study, files, notices } = session
+  if (new URLSearchParams(location.search).has('empty')) return
+  try {
+    const kept = await restore(shelf, window.localStorage)
+    if (kept) {
+      saver.known(kept.files)
+      files.getState().replace(kept.files)
+      study.getState().load(kept.doc)
+      return
+    }
+  } catch (error) {
+    notices
+      .getState()
+      .say(`The study of the last visit could not be read: ${error instanceof Error ? error.message : error}; open a saved package`, 'bad')
+  }
+  try {
+    await openDemo()
+  } catch {
+    // served without the demo: the Ground step says what to do next
+  }
+}
+
+/** Private windows may refuse a database: the page works, and the save state says that nothing is kept. */
+function noShelf(): Shelf {
+  const refuse = () => Promise.reject(new Error('this browser keeps nothing here'))
+  return { get: async () => undefined, set: refuse, del: refuse, keys: async () => [] }
+}
