@@ -1,1 +1,4 @@
+export * from './cellState.ts'
+export * from './polarPlace.ts'
+export * from './polarShape.ts'
 export * from './types.ts'

@@ -1,0 +1,96 @@
+import { type Earth, effectiveRadiusM } from '../geodesy/index.ts'
+import { type Ground, makeTracer, type Site, siteGround, type Tracer } from '../terrain/index.ts'
+import { makeStraightProfile, type StraightProfile, straighten } from './profile.ts'
+import { makeSightRun, runSight, type SightRun } from './sightRun.ts'
+import { heightOfY, rangeOfX, straightDrop, straightX } from './straight.ts'
+
+/** One site with all it takes to run single rays: scratch that is filled again for each. */
+export interface RayRunner {
+  readonly g: Ground
+  readonly site: Site
+  readonly siteGroundM: number
+  readonly tracer: Tracer
+  readonly run: SightRun
+  profile: StraightProfile
+  effectiveRadiusM: number
+  /** 1 / effective radius of the last ray; 0 for a flat earth. */
+  inverse: number
+  antennaY: number
+}
+
+export function makeRunner(g: Ground, site: Site, maxRangeM: number, cuts: number, fanStepDeg?: number): RayRunner {
+  const tracer = makeTracer(g, site, maxRangeM, { fanStepDeg })
+  return {
+    g,
+    site,
+    siteGroundM: siteGround(g, site),
+    tracer,
+    run: makeSightRun(cuts),
+    profile: makeStraightProfile(tracer.track.distM.length, cuts),
+    effectiveRadiusM: 0,
+    inverse: 0,
+    antennaY: 0,
+  }
+}
+
+/** Prepares a traced ray: straight plane of the azimuth's effective radius, cuts, and the run from one antenna height (m above the site's ground). */
+export function runRay(r: RayRunner, earth: Earth, azimuthDeg: number, heightM: number, cutM: Float64Array): void {
+  setEarth(r, earth, azimuthDeg)
+  straighten(r.tracer.track, r.inverse, cutM, r.profile)
+  const antennaM = r.siteGroundM + heightM
+  r.antennaY = antennaM / (1 + antennaM * r.inverse)
+  runSight(r.profile, r.antennaY, r.run)
+}
+export function setEarth(r: RayRunner, earth: Earth, azimuthDeg: number): void {
+  r.effectiveRadiusM = effectiveRadiusM(earth, r.site.lat, azimuthDeg)
+  r.inverse = 1 / r.effectiveRadiusM
+}
+
+/** Height of the line of a tangent at a ground range, m MSL. */
+export const heightOnLine = (antennaY: number, tangent: number, rangeM: number, inverse: number): number =>
+  heightOfY(antennaY + tangent * straightX(rangeM, inverse), straightDrop(rangeM, inverse), inverse)
+
+/** What a line from the antenna touches: range, height, and what stands there. */
+export interface Controlling {
+  readonly rangeM: number
+  readonly heightM: number
+  /** 'terrain', 'cover' or the obstacle's name. */
+  readonly obstacle: string
+  /** Its 90 % error, m. */
+  readonly errorM: number
+}
+/** Cover is named where the surface stands at least this far above the ground, m. */
+const COVER_NAMED_M = 0.05
+
+export function controllingOf(r: RayRunner, tangent: number, controlX: number): Controlling {
+  const t = r.tracer.track
+  const rangeM = rangeOfX(controlX, r.inverse)
+  const heightM = heightOfY(r.antennaY + tangent * controlX, straightDrop(rangeM, r.inverse), r.inverse)
+  for (const spike of t.spikes)
+    if (Math.abs(spike.distM - rangeM) < 1e-4) {
+      const o = r.g.obstacles[spike.obstacle]
+      return { rangeM, heightM, obstacle: o.name, errorM: o.verticalErrorM ?? r.g.verticalErrorM }
+    }
+  let j = 0
+  let high = t.count - 1
+  while (high - j > 1) {
+    const mid = (j + high) >> 1
+    if (t.distM[mid] <= rangeM) j = mid
+    else high = mid
+  }
+  const length = t.distM[j + 1] - t.distM[j]
+  const u = rangeM - t.distM[j]
+  const q = t.groundBendPerM[j]
+  const ground = length > 0 ? t.groundM[j] + u * ((t.groundM[j + 1] - t.groundM[j]) / length + q * (u - length)) : t.groundM[j]
+  const obstacle = heightM - ground > COVER_NAMED_M ? 'cover' : 'terrain'
+  return { rangeM, heightM, obstacle, errorM: r.g.verticalErrorM }
+}
+/** Error of the controlling point alone: obstacle records carry their own. */
+export function controlErrorM(r: RayRunner, controlX: number): number {
+  const { spikes } = r.tracer.track
+  if (spikes.length > 0) {
+    const rangeM = rangeOfX(controlX, r.inverse)
+    for (const s of spikes) if (Math.abs(s.distM - rangeM) < 1e-4) return r.g.obstacles[s.obstacle].verticalErrorM ?? r.g.verticalErrorM
+  }
+  return r.g.verticalErrorM
+}
