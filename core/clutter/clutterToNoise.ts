@@ -5,8 +5,9 @@ import type { SightCells, SiteCells } from '../masking/index.ts'
 import { CELL, type PolarShape } from '../polar/index.ts'
 import { gateLengthM, minimumRangeM, type RadarInput, radarConstantDb } from '../radar/index.ts'
 import type { Site } from '../terrain/index.ts'
-import { fromDb } from '../units/index.ts'
+import { fromDb, RAD_PER_DEG } from '../units/index.ts'
 import type { Work } from '../work/index.ts'
+import { azimuthSum } from './azimuthSum.ts'
 import { type CellModel, cellClutter, gateSums, gateWeights, type RayCells, slantSquared } from './cellSums.ts'
 import { decibel } from './decibelTable.ts'
 import type { LandTable } from './landTable.ts'
@@ -79,40 +80,23 @@ export function* clutterToNoise(
   const weights = gateWeights(gateLengthM(r), grid.rangeStepM)
   const row = new Float64Array(ranges)
   const gates = new Float32Array(azimuths * ranges)
-  const ringSum = new Float64Array(ranges)
-  const ringCount = new Uint32Array(ranges)
+  const ring: Ring = { sum: new Float64Array(ranges), count: new Uint32Array(ranges) }
   let bits = 0
   for (let i = 0; i < azimuths; i++) {
     bits |= cellClutter(model, cells, i, row, null)
     gateSums(row, weights, gates, i * ranges)
-    const c = 1 / s.effectiveRadiusM[i]
-    for (let j = 0; j < ranges; j++) {
-      const at = i * ranges + j
-      if (m.state[at] >= CELL.beyondVoid) continue
-      const r2 = slantSquared(antennaM, s.groundM[at], centresM[j], c)
-      if (!(r2 >= nearest2)) continue
-      ringCount[j]++
-      ringSum[j] += gates[at] / (r2 * r2)
-    }
+    addToRing(ring, gates, i, cells, m.state, antennaM, nearest2)
     if ((i + 1) % rowsPerYield === 0) yield { done: i + 1, total }
   }
   const kernel = azimuthKernel(r.antenna.azimuthBeamwidthDeg, grid.azimuthStepDeg)
-  const width = kernel.reduce((sum, w) => sum + w, 0)
-  const ringScale = constant * width * sideLobeShare(r)
-  const sideLobe = ringSum.map((sum, j) => (ringCount[j] > 0 ? (ringScale * sum) / ringCount[j] : 0))
+  const ringScale = constant * r.antenna.azimuthBeamwidthDeg * RAD_PER_DEG * sideLobeShare(r)
+  const sideLobe = ring.sum.map((sum, j) => (ring.count[j] > 0 ? (ringScale * sum) / ring.count[j] : 0))
 
   // Second pass: the azimuth beam, the radar equation, dB.
   const cnrDb = new Float32Array(azimuths * ranges)
-  const half = kernel.length >> 1
   for (let i = 0; i < azimuths; i++) {
-    row.fill(0)
-    for (let n = -half; n <= half; n++) addRow(row, gates, ((i + n + azimuths) % azimuths) * ranges, kernel[n + half])
-    const c = 1 / s.effectiveRadiusM[i]
-    for (let j = 0; j < ranges; j++) {
-      const at = i * ranges + j
-      const r2 = m.state[at] >= CELL.beyondVoid ? Number.NaN : slantSquared(antennaM, s.groundM[at], centresM[j], c)
-      cnrDb[at] = r2 >= nearest2 ? decibel((row[j] * constant) / (r2 * r2) + sideLobe[j]) : Number.NaN
-    }
+    azimuthSum(gates, azimuths, i, kernel, row)
+    toDecibels(cnrDb, row, i, cells, m.state, antennaM, nearest2, constant, sideLobe)
     if ((i + 1) % rowsPerYield === 0) yield { done: azimuths + i + 1, total }
   }
   return {
@@ -136,6 +120,51 @@ const pick = ({ groundM, code, relief, effectiveRadiusM, siteGroundM }: SiteCell
   siteGroundM,
 })
 
-function addRow(sum: Float64Array, rows: Float32Array, from: number, weight: number): void {
-  for (let j = 0; j < sum.length; j++) sum[j] += weight * rows[from + j]
+/** Sums round the rings: clutter of the gates over R⁴, and how many cells are known. */
+interface Ring {
+  readonly sum: Float64Array
+  readonly count: Uint32Array
+}
+
+function addToRing(
+  ring: Ring,
+  gates: Float32Array,
+  i: number,
+  cells: RayCells,
+  state: Uint8Array,
+  antennaM: number,
+  nearest2: number,
+): void {
+  const { centresM, groundM } = cells
+  const { sum, count } = ring
+  const n = centresM.length
+  const c = 1 / cells.effectiveRadiusM[i]
+  for (let j = 0, at = i * n; j < n; j++, at++) {
+    if (state[at] >= CELL.beyondVoid) continue
+    const r2 = slantSquared(antennaM, groundM[at], centresM[j], c)
+    if (r2 >= nearest2) {
+      count[j]++
+      sum[j] += gates[at] / (r2 * r2)
+    }
+  }
+}
+
+function toDecibels(
+  out: Float32Array,
+  main: Float64Array,
+  i: number,
+  cells: RayCells,
+  state: Uint8Array,
+  antennaM: number,
+  nearest2: number,
+  constant: number,
+  sideLobe: Float64Array,
+): void {
+  const { centresM, groundM } = cells
+  const n = centresM.length
+  const c = 1 / cells.effectiveRadiusM[i]
+  for (let j = 0, at = i * n; j < n; j++, at++) {
+    const r2 = state[at] >= CELL.beyondVoid ? Number.NaN : slantSquared(antennaM, groundM[at], centresM[j], c)
+    out[at] = r2 >= nearest2 ? decibel((main[j] * constant) / (r2 * r2) + sideLobe[j]) : Number.NaN
+  }
 }
