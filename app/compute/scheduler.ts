@@ -26,7 +26,10 @@ export class Scheduler {
 
   constructor(
     private readonly post: Post,
-    private readonly finishReply: (kind: keyof Ask, body: unknown) => { body: unknown; transfer: Transferable[] } | Promise<{ body: unknown; transfer: Transferable[] }>,
+    private readonly finishReply: (
+      kind: keyof Ask,
+      body: unknown,
+    ) => { body: unknown; transfer: Transferable[] } | Promise<{ body: unknown; transfer: Transferable[] }>,
     private readonly now: () => number,
   ) {}
 

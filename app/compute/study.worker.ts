@@ -15,7 +15,11 @@ async function finish(kind: keyof Ask, body: unknown): Promise<{ body: unknown; 
   const bitmap = await createImageBitmap(image)
   return { body: { bitmap, view }, transfer: [bitmap] }
 }
-const scheduler = new Scheduler((tell, transfer) => scope.postMessage(tell, transfer ?? []), finish, () => performance.now())
+const scheduler = new Scheduler(
+  (tell, transfer) => scope.postMessage(tell, transfer ?? []),
+  finish,
+  () => performance.now(),
+)
 
 function wake(): void {
   if (waiting) return

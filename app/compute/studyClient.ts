@@ -1,4 +1,4 @@
-import { InputError, type Answer, type Ask, type Tell } from '../../core/index.ts'
+import { type Answer, type Ask, InputError, type Tell } from '../../core/index.ts'
 import type { StudyClient } from './client.ts'
 
 interface Waiting {

@@ -44,10 +44,8 @@ function obstaclesInSight(o: OptionCells): string[] {
     if (!at) continue
     const { distanceM } = geodesicInverse(o.place, at)
     if (distanceM > longest || distanceM < 1) continue
-    const sight = sightPoint(o.ground, o.place, o.heightM, o.earth, at)
-    if (sight.unknown) continue
-    const top = obstacle.topM ?? sight.groundM + (obstacle.heightM ?? 0)
-    if (top >= sight.horizonFloorM) seen.push({ name: obstacle.name, rangeM: distanceM })
+    // the surface at the obstacle's own place is its top
+    if (sightPoint(o.ground, o.place, o.heightM, o.earth, at).inSight) seen.push({ name: obstacle.name, rangeM: distanceM })
   }
   return seen.sort((a, b) => a.rangeM - b.rangeM).map((s) => s.name)
 }

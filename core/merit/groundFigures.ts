@@ -1,5 +1,5 @@
 import { CELL, cellAreasM2 } from '../polar/index.ts'
-import { M_PER_NM, fromDb, toDb } from '../units/index.ts'
+import { fromDb, M_PER_NM, toDb } from '../units/index.ts'
 import type { OptionCells } from './optionCells.ts'
 import { percentile } from './percentile.ts'
 import type { Figures, FloorFigure, RingFigure } from './types.ts'
@@ -20,7 +20,7 @@ export interface GroundSums {
 /** Areas of ground in sight, masked and unknown, and of clutter over 0, 20, 40 and 60 dB, by ring and in all. */
 export function groundSums(o: OptionCells): GroundSums {
   const { azimuths, ranges, rangeStepM } = o.site.grid
-  const areas = cellAreasM2(o.site.grid)
+  const areas = cellAreasM2(o.site.grid, o.place.lat)
   const ringOf = (j: number) => Math.floor(((j + 0.5) * rangeStepM) / RING_WIDTH_M)
   const ringCount = ringOf(ranges - 1) + 1
   const ground = new Float64Array(ringCount)

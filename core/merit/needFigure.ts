@@ -1,10 +1,10 @@
-import { sightPoint } from '../masking/index.ts'
 import { geodesicDirect } from '../geodesy/index.ts'
+import { sightPoint } from '../masking/index.ts'
 import { cellAreasM2 } from '../polar/index.ts'
 import type { RadarInput } from '../radar/index.ts'
 import type { SettledNeed } from '../study/index.ts'
 import { addArea, areaHistogram, areaPercentile } from './areaHistogram.ts'
-import { inSector, needCells, PLACE, type NeedCells } from './needCells.ts'
+import { inSector, type NeedCells, needCells, PLACE } from './needCells.ts'
 import type { OptionCells } from './optionCells.ts'
 import type { NeedFigure, PlaceRef, SuppressionFigure } from './types.ts'
 
@@ -15,7 +15,7 @@ export const availableSuppressionDb = (radar: RadarInput): number => (radar.supp
 export function needFigure(o: OptionCells, need: SettledNeed, cells: NeedCells | null): NeedFigure {
   if (need.kind !== 'layer' || !cells) return unassessed(o, need)
   const { azimuths, ranges, azimuthStepDeg, rangeStepM } = o.site.grid
-  const areas = cellAreasM2(o.site.grid)
+  const areas = cellAreasM2(o.site.grid, o.place.lat)
   const margins = areaHistogram(-2000, 20000, 1)
   const needed = areaHistogram(0, 200, 0.1)
   const available = availableSuppressionDb(o.radar)
@@ -129,7 +129,15 @@ function unassessed(o: OptionCells, need: SettledNeed): NeedFigure {
     worstMarginM: null,
     tenthMarginM: null,
     worst: null,
-    suppression: { p50Db: null, p90Db: null, p99Db: null, availableDb: availableSuppressionDb(o.radar), shortKm2: 0, maskedPct: 0, tooWeakPct: 0 },
+    suppression: {
+      p50Db: null,
+      p90Db: null,
+      p99Db: null,
+      availableDb: availableSuppressionDb(o.radar),
+      shortKm2: 0,
+      maskedPct: 0,
+      tooWeakPct: 0,
+    },
     notAssessed: `needs of kind "${need.kind}" are not assessed yet`,
   }
 }

@@ -1,4 +1,4 @@
-import type { ClutterCells } from '../clutter/index.ts'
+import type { ClutterCells, LandTable } from '../clutter/index.ts'
 import type { Earth } from '../geodesy/index.ts'
 import type { SightCells, SiteCells } from '../masking/index.ts'
 import type { RadarInput } from '../radar/index.ts'
@@ -10,6 +10,8 @@ export interface OptionCells {
   readonly place: Site
   readonly earth: Earth
   readonly radar: RadarInput
+  /** The study's own land table; null for the built-in one. */
+  readonly landTable: LandTable | null
   readonly heightM: number
   readonly tiltDeg: number
   readonly site: SiteCells

@@ -1,10 +1,10 @@
 import { clutterToNoise } from '../clutter/index.ts'
 import { previewSweep, sightAlong, sweep } from '../masking/index.ts'
-import { ladderHeightsM, ladderOf, type OptionCells, rung, type Rung } from '../merit/index.ts'
+import { ladderHeightsM, ladderOf, type OptionCells, type Rung, rung } from '../merit/index.ts'
 import { polarShape } from '../polar/index.ts'
 import { buildGround, groundAt } from '../terrain/index.ts'
 import { share, type Work } from '../work/index.ts'
-import { candidateOf, type Engine, earthOf, siteOf } from './engine.ts'
+import { candidateOf, type Engine, earthOf, landOption, siteOf } from './engine.ts'
 import { cellLedger } from './ledger.ts'
 import { paintGround, paintOption, paintSheet } from './pictures.ts'
 import { type ProbeCache, probeAt } from './probe.ts'
@@ -54,8 +54,9 @@ export class Answers {
   }
 
   private *takeGround(body: Ask['ground']): Work<EngineAnswer['ground']> {
-    const ground = yield* buildGround({ serial: ++serial, ...body })
-    this.engine.setGround(ground)
+    const { landTable, ...parts } = body
+    const ground = yield* buildGround({ serial: ++serial, ...parts })
+    this.engine.setGround(ground, landTable ?? null)
     this.preview = null
     let min = Number.POSITIVE_INFINITY
     let max = Number.NEGATIVE_INFINITY
@@ -86,8 +87,30 @@ export class Answers {
     const earth = earthOf(study)
     const swept = previewSweep(ground, site, body.heightM, polarShape(study.run), earth, PREVIEW_STRIDE)
     const tiltDeg = this.engine.shown.option?.tiltDeg ?? candidate.tiltsDeg[0]
-    const clutter = yield* clutterToNoise(swept.site, swept.mask, ground.codes, site, body.heightM, earth, study.radar, tiltDeg)
-    this.preview = { ground, place: site, earth, radar: study.radar, heightM: body.heightM, tiltDeg, site: swept.site, mask: swept.mask, clutter }
+    const clutter = yield* clutterToNoise(
+      swept.site,
+      swept.mask,
+      ground.codes,
+      site,
+      body.heightM,
+      earth,
+      study.radar,
+      tiltDeg,
+      landOption(this.engine.landTable),
+    )
+    const { landTable } = this.engine
+    this.preview = {
+      ground,
+      place: site,
+      earth,
+      radar: study.radar,
+      landTable,
+      heightM: body.heightM,
+      tiltDeg,
+      site: swept.site,
+      mask: swept.mask,
+      clutter,
+    }
     const siteGroundM = swept.site.siteGroundM
     return {
       siteGroundM: Number.isFinite(siteGroundM) ? siteGroundM : null,
@@ -123,7 +146,15 @@ export class Answers {
     if (!this.engine.ground) return null
     const ground = groundAt(this.engine.ground, body.at.lon, body.at.lat)
     const known = Number.isFinite(ground)
-    return { ...body.at, azimuthDeg: null, rangeM: null, groundM: known ? ground : null, layer, value: null, word: known ? null : 'unknown' }
+    return {
+      ...body.at,
+      azimuthDeg: null,
+      rangeM: null,
+      groundM: known ? ground : null,
+      layer,
+      value: null,
+      word: known ? null : 'unknown',
+    }
   }
 
   // biome-ignore lint/correctness/useYield: an answer that needs no slices
@@ -147,14 +178,19 @@ export class Answers {
     const earth = earthOf(study)
     const tiltDeg = this.engine.shown.option?.tiltDeg ?? candidate.tiltsDeg[0]
     const heights = ladderHeightsM(candidate.mastHeightsM)
+    const { landTable } = this.engine
     const rungs: Rung[] = []
     for (let n = 0; n < heights.length; n += LADDER_BATCH) {
       const batch = heights.slice(n, n + LADDER_BATCH)
       const swept = yield* share(sweep(ground, place, batch, polarShape(study.run), earth), n, n + batch.length / 2, heights.length)
       for (const mask of swept.masks) {
         const { heightM } = mask
-        const clutter = yield* silently(clutterToNoise(swept.site, mask, ground.codes, place, heightM, earth, study.radar, tiltDeg))
-        rungs.push(rung({ ground, place, earth, radar: study.radar, heightM, tiltDeg, site: swept.site, mask, clutter }, study.needs))
+        const clutter = yield* silently(
+          clutterToNoise(swept.site, mask, ground.codes, place, heightM, earth, study.radar, tiltDeg, landOption(landTable)),
+        )
+        rungs.push(
+          rung({ ground, place, earth, radar: study.radar, landTable, heightM, tiltDeg, site: swept.site, mask, clutter }, study.needs),
+        )
         yield { done: rungs.length, total: heights.length }
       }
     }

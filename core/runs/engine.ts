@@ -1,16 +1,15 @@
-import { clutterToNoise, clutterMarks } from '../clutter/index.ts'
+import { type ClutterCells, clutterMarks, clutterToNoise, type LandTable } from '../clutter/index.ts'
 import { isInputError } from '../errors/index.ts'
 import type { Earth } from '../geodesy/index.ts'
 import { type SightCells, type SiteCells, sweep } from '../masking/index.ts'
 import { type OptionCells, optionFigures } from '../merit/index.ts'
 import { polarShape } from '../polar/index.ts'
-import { type SettledCandidate, type SettledNeed, type SettledStudy, settle, type StudyDoc } from '../study/index.ts'
+import { type SettledCandidate, type SettledNeed, type SettledStudy, type StudyDoc, settle } from '../study/index.ts'
 import type { Ground, Site } from '../terrain/index.ts'
 import { share, type Work } from '../work/index.ts'
 import { keysOf, optionId, optionsOfStudy } from './keys.ts'
 import { PolarCache } from './polarCache.ts'
 import type { LayerId, OptionRef, OptionResult, Tell } from './types.ts'
-import type { ClutterCells } from '../clutter/index.ts'
 
 export interface Shown {
   readonly option: OptionRef | null
@@ -24,6 +23,8 @@ export interface Shown {
  */
 export class Engine {
   ground: Ground | null = null
+  /** The study's own land table; null for the built-in one. */
+  landTable: LandTable | null = null
   study: SettledStudy | null = null
   shown: Shown = { option: null, layer: 'clutter-to-noise' }
   hold = false
@@ -35,8 +36,9 @@ export class Engine {
     this.cache = new PolarCache(cacheBytes)
   }
 
-  setGround(ground: Ground): void {
+  setGround(ground: Ground, landTable: LandTable | null): void {
     this.ground = ground
+    this.landTable = landTable
     this.cache.clear()
     this.results.clear()
     this.failed.clear()
@@ -100,7 +102,7 @@ export class Engine {
       const cells = yield* this.compute(ref)
       const keys = this.keys(ref)
       if (this.study !== study || !keys) return []
-      const figures = optionFigures(cells, study.needs, clutterMarks(cells.ground.codes, study.radar, study.lowAngleLandTable !== null))
+      const figures = optionFigures(cells, study.needs, clutterMarks(cells.ground.codes, study.radar, this.landTable !== null))
       this.results.set(optionId(ref), { ref, keys, figures, held: true })
       const isShown = this.shown.option !== null && optionId(this.shown.option) === optionId(ref)
       return isShown ? [this.figures(), { kind: 'dirty' }] : [this.figures()]
@@ -143,14 +145,25 @@ export class Engine {
     let clutter = this.cache.get<ClutterCells>(keys.clutter)
     if (!clutter) {
       clutter = yield* share(
-        clutterToNoise(site, mask, ground.codes, place, ref.heightM, earth, study.radar, ref.tiltDeg),
+        clutterToNoise(site, mask, ground.codes, place, ref.heightM, earth, study.radar, ref.tiltDeg, landOption(this.landTable)),
         0.6,
         1,
         1,
       )
       this.cache.put(keys.clutter, clutter, keep)
     }
-    return { ground, place, earth, radar: study.radar, heightM: ref.heightM, tiltDeg: ref.tiltDeg, site, mask, clutter }
+    return {
+      ground,
+      place,
+      earth,
+      radar: study.radar,
+      landTable: this.landTable,
+      heightM: ref.heightM,
+      tiltDeg: ref.tiltDeg,
+      site,
+      mask,
+      clutter,
+    }
   }
 
   /** Cells of an option if all of them are still held. */
@@ -164,7 +177,18 @@ export class Engine {
     const clutter = this.cache.get<ClutterCells>(keys.clutter)
     if (!site || !mask || !clutter) return null
     const { heightM, tiltDeg } = ref
-    return { ground: this.ground, place: siteOf(candidate), earth: earthOf(this.study), radar: this.study.radar, heightM, tiltDeg, site, mask, clutter }
+    return {
+      ground: this.ground,
+      place: siteOf(candidate),
+      earth: earthOf(this.study),
+      radar: this.study.radar,
+      landTable: this.landTable,
+      heightM,
+      tiltDeg,
+      site,
+      mask,
+      clutter,
+    }
   }
 
   /** The need a layer is drawn for: the one named, else the first layer need. */
@@ -199,3 +223,5 @@ export function candidateOf(study: SettledStudy, id: string): SettledCandidate {
   if (!found) throw new Error(`no candidate ${id}`)
   return found
 }
+
+export const landOption = (landTable: LandTable | null): { landTable?: LandTable } => (landTable ? { landTable } : {})

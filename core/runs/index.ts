@@ -1,1 +1,7 @@
+export { Answers, type EngineAnswer, type Painted } from './answers.ts'
+export { candidateOf, Engine, earthOf, type Shown, siteOf } from './engine.ts'
+export { optionId, optionsOfStudy } from './keys.ts'
+export { fillLayer, isLayerId, LAYERS, layerInfo } from './layers.ts'
+export { paintGround, paintOption, paintSheet, waterOf } from './pictures.ts'
+export * from './readGround.ts'
 export * from './types.ts'

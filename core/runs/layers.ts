@@ -73,7 +73,7 @@ function fillDepression(o: OptionCells, out: Float32Array): void {
 
 function fillStrength(o: OptionCells, out: Float32Array): void {
   fillDepression(o, out)
-  const strength = strengthByCode(o.ground.codes, o.radar.frequencyHz)
+  const strength = strengthByCode(o.ground.codes, o.radar.frequencyHz, o.landTable ?? undefined)
   for (let at = 0; at < out.length; at++) {
     const depression = out[at]
     if (depression === depression) out[at] = strength(o.site.code[at], o.site.relief[at], depression)

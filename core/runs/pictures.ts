@@ -1,5 +1,5 @@
 import type { LonLat } from '../geodesy/index.ts'
-import { type OptionCells } from '../merit/index.ts'
+import type { OptionCells } from '../merit/index.ts'
 import { paintHillshade, paintMap, paintPolar, type View, type WaterCodes } from '../paint/index.ts'
 import type { RasterGrid } from '../raster/index.ts'
 import type { SettledNeed } from '../study/index.ts'
@@ -44,7 +44,13 @@ export function paintSheet(o: OptionCells, layer: LayerId, need: SettledNeed | n
   fillLayer(layer, o, need, values)
   const out = new Uint32Array(view.width * view.height)
   const how = { hatchMasked: info.hatchMasked, smooth: info.unit === 'dB' }
-  paintMap(rasterOf(o.ground), { grid: o.site.grid, site: placeOf(o), values, state: o.mask.state, ramp: info.ramp, how }, view, out, waterOf(o.ground))
+  paintMap(
+    rasterOf(o.ground),
+    { grid: o.site.grid, site: placeOf(o), values, state: o.mask.state, ramp: info.ramp, how },
+    view,
+    out,
+    waterOf(o.ground),
+  )
   return out
 }
 

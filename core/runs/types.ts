@@ -1,4 +1,4 @@
-import type { ModelMark } from '../clutter/index.ts'
+import type { LandTable, ModelMark } from '../clutter/index.ts'
 import type { LonLat } from '../geodesy/index.ts'
 import type { GroundCode } from '../landcover/index.ts'
 import type { Figures, Ladder } from '../merit/index.ts'
@@ -103,6 +103,8 @@ export interface Ask {
     codes: readonly GroundCode[]
     obstacles: readonly Obstacle[]
     verticalErrorM: number
+    /** The study's own low-angle land table; null or absent for the built-in one. */
+    landTable?: LandTable | null
   }
   /** Replaces the last one whole: this is also the cancel. */
   study: { doc: StudyDoc; show: { option: OptionRef | null; layer: LayerId; need?: string }; hold: boolean }
