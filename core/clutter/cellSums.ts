@@ -90,7 +90,7 @@ export function gateWeights(gateM: number, rangeStepM: number): Float64Array {
 }
 
 /** Sums of a row over the gate around each cell. Where the gate leaves the row, the part inside stands for all of it. */
-export function gateSums(row: Float64Array, weights: Float64Array, out: Float32Array, outFrom: number): void {
+export function gateSums(row: Float64Array, weights: Float64Array, out: Float64Array): void {
   const n = row.length
   const half = weights.length >> 1
   const whole = weights.reduce((s, w) => s + w, 0)
@@ -104,6 +104,6 @@ export function gateSums(row: Float64Array, weights: Float64Array, out: Float32A
       for (let k = lo; k <= hi; k++) inside += weights[k + half]
       sum *= whole / inside
     }
-    out[outFrom + j] = sum
+    out[j] = sum
   }
 }

@@ -72,31 +72,32 @@ export function* clutterToNoise(
   }
   const { antennaM } = model
   const constant = fromDb(radarConstantDb(r))
-  const nearest2 = minimumRangeM(r) ** 2
+  const nearestM = minimumRangeM(r)
   const rowsPerYield = Math.max(1, Math.floor(CELLS_PER_YIELD / ranges))
   const total = 2 * azimuths
 
   // First pass: clutter of each gate on one azimuth, and its mean round the ring.
   const weights = gateWeights(gateLengthM(r), grid.rangeStepM)
   const row = new Float64Array(ranges)
+  const sums = new Float64Array(ranges)
   const gates = new Float32Array(azimuths * ranges)
   const ring: Ring = { sum: new Float64Array(ranges), count: new Uint32Array(ranges) }
   let bits = 0
   for (let i = 0; i < azimuths; i++) {
     bits |= cellClutter(model, cells, i, row, null)
-    gateSums(row, weights, gates, i * ranges)
-    addToRing(ring, gates, i, cells, m.state, antennaM, nearest2)
+    gateSums(row, weights, sums)
+    gatesOfRow(sums, i, cells, m.state, antennaM, nearestM, constant, gates, ring)
     if ((i + 1) % rowsPerYield === 0) yield { done: i + 1, total }
   }
   const kernel = azimuthKernel(r.antenna.azimuthBeamwidthDeg, grid.azimuthStepDeg)
-  const ringScale = constant * r.antenna.azimuthBeamwidthDeg * RAD_PER_DEG * sideLobeShare(r)
+  const ringScale = r.antenna.azimuthBeamwidthDeg * RAD_PER_DEG * sideLobeShare(r)
   const sideLobe = ring.sum.map((sum, j) => (ring.count[j] > 0 ? (ringScale * sum) / ring.count[j] : 0))
 
   // Second pass: the azimuth beam, the radar equation, dB.
   const cnrDb = new Float32Array(azimuths * ranges)
   for (let i = 0; i < azimuths; i++) {
     azimuthSum(gates, azimuths, i, kernel, row)
-    toDecibels(cnrDb, row, i, cells, m.state, antennaM, nearest2, constant, sideLobe)
+    toDecibels(cnrDb, row, i, cells, m.state, antennaM, nearestM, sideLobe)
     if ((i + 1) % rowsPerYield === 0) yield { done: azimuths + i + 1, total }
   }
   return {
@@ -120,32 +121,41 @@ const pick = ({ groundM, code, relief, effectiveRadiusM, siteGroundM }: SiteCell
   siteGroundM,
 })
 
-/** Sums round the rings: clutter of the gates over R⁴, and how many cells are known. */
+/** Sums round the rings: clutter-to-noise of the gates per radian, and how many cells are known. */
 interface Ring {
   readonly sum: Float64Array
   readonly count: Uint32Array
 }
 
-function addToRing(
-  ring: Ring,
-  gates: Float32Array,
+/** Is the cell nearer than the pulse allows? The slant range is worked out only where it can decide. */
+function tooNear(nearestM: number, antennaM: number, groundM: number, rangeM: number, c: number): boolean {
+  return rangeM <= 1.01 * nearestM && slantSquared(antennaM, groundM, rangeM, c) < nearestM * nearestM
+}
+
+/** Radar equation of the gates on one azimuth, each at the slant range of its middle cell: clutter-to-noise per radian of azimuth, ratio. */
+function gatesOfRow(
+  sums: Float64Array,
   i: number,
   cells: RayCells,
   state: Uint8Array,
   antennaM: number,
-  nearest2: number,
+  nearestM: number,
+  constant: number,
+  gates: Float32Array,
+  ring: Ring,
 ): void {
   const { centresM, groundM } = cells
   const { sum, count } = ring
   const n = centresM.length
   const c = 1 / cells.effectiveRadiusM[i]
   for (let j = 0, at = i * n; j < n; j++, at++) {
-    if (state[at] >= CELL.beyondVoid) continue
+    if (state[at] >= CELL.beyondVoid || tooNear(nearestM, antennaM, groundM[at], centresM[j], c)) continue
+    count[j]++
+    if (sums[j] === 0) continue
     const r2 = slantSquared(antennaM, groundM[at], centresM[j], c)
-    if (r2 >= nearest2) {
-      count[j]++
-      sum[j] += gates[at] / (r2 * r2)
-    }
+    const v = (sums[j] * constant) / (r2 * r2)
+    sum[j] += v
+    gates[at] = v
   }
 }
 
@@ -156,15 +166,14 @@ function toDecibels(
   cells: RayCells,
   state: Uint8Array,
   antennaM: number,
-  nearest2: number,
-  constant: number,
+  nearestM: number,
   sideLobe: Float64Array,
 ): void {
   const { centresM, groundM } = cells
   const n = centresM.length
   const c = 1 / cells.effectiveRadiusM[i]
   for (let j = 0, at = i * n; j < n; j++, at++) {
-    const r2 = state[at] >= CELL.beyondVoid ? Number.NaN : slantSquared(antennaM, groundM[at], centresM[j], c)
-    out[at] = r2 >= nearest2 ? decibel((main[j] * constant) / (r2 * r2) + sideLobe[j]) : Number.NaN
+    const undefinedHere = state[at] >= CELL.beyondVoid || tooNear(nearestM, antennaM, groundM[at], centresM[j], c)
+    out[at] = undefinedHere ? Number.NaN : decibel(main[j] + sideLobe[j])
   }
 }

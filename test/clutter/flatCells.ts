@@ -1,20 +1,11 @@
-import {
-  BUILT_IN_LAND_TABLE,
-  CELL,
-  type ClutterCells,
-  clutterToNoise,
-  type Earth,
-  finish,
-  type GroundCode,
-  type LandTable,
-  type PolarShape,
-  type RadarInput,
-  RELIEF,
-  type SightCells,
-  type Site,
-  type SiteCells,
-  type TerrainName,
-} from '../../core/index.ts'
+import { BUILT_IN_LAND_TABLE, type ClutterCells, clutterToNoise, type LandTable } from '../../core/clutter/index.ts'
+import type { Earth } from '../../core/geodesy/index.ts'
+import type { GroundCode, TerrainName } from '../../core/landcover/index.ts'
+import type { SightCells, SiteCells } from '../../core/masking/index.ts'
+import { CELL, type PolarShape } from '../../core/polar/index.ts'
+import type { RadarInput } from '../../core/radar/index.ts'
+import { RELIEF, type Site } from '../../core/terrain/index.ts'
+import { finish } from '../../core/work/index.ts'
 
 export const EARTH: Earth = { effectiveEarthFactor: 4 / 3, earthRadiusM: 6_371_000 }
 export const SITE: Site = { lon: 0, lat: 0, groundHeightM: null, clearingRadiusM: 0 }

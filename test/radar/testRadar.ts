@@ -1,4 +1,4 @@
-import type { AntennaInput, RadarInput } from '../../core/index.ts'
+import type { AntennaInput, RadarInput } from '../../core/radar/index.ts'
 
 type Over = Partial<Omit<RadarInput, 'antenna'>> & { antenna?: Partial<AntennaInput> }
 
