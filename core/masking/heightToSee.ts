@@ -37,8 +37,8 @@ export function touchingSlope(x0: number, y0: number, slope: number, bend: numbe
   // in t = xd − x: y = alpha + beta t + bend t²
   const alpha = y0 + t0 * (slope + bend * t0)
   const beta = -(slope + 2 * bend * t0)
-  if (t1 <= 0) return -beta
   const square = (alpha - yd) / bend
+  if (t1 <= 0 && square <= 0) return -beta
   if (square < t1 * t1 || square > t0 * t0) return Number.POSITIVE_INFINITY
   const t = Math.sqrt(square)
   return (yd - alpha) / t - beta - bend * t

@@ -9,6 +9,7 @@ export interface SightRun {
   readonly seenX: Float64Array
   endTangent: number
   endControlX: number
+  endSeenX: number
 }
 export const makeSightRun = (cuts: number): SightRun => ({
   tangent: new Float64Array(cuts),
@@ -16,6 +17,7 @@ export const makeSightRun = (cuts: number): SightRun => ({
   seenX: new Float64Array(cuts),
   endTangent: NO_TANGENT,
   endControlX: 0,
+  endSeenX: 0,
 })
 
 /** Lower than any line to a surface: nothing met yet. */
@@ -67,6 +69,7 @@ export function runSight(p: StraightProfile, antennaY: number, out: SightRun): v
   }
   out.endTangent = m
   out.endControlX = controlX
+  out.endSeenX = seen
 
   function record(): void {
     out.tangent[k] = m

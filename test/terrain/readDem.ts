@@ -1,7 +1,8 @@
 // Reads a GeoTIFF for tests straight through the decoding library, so that these tests do not lean on intake.
 import { readFileSync } from 'node:fs'
 import { fromArrayBuffer } from 'geotiff'
-import { crsFromEpsg, type GridShape } from '../../core/index.ts'
+import { crsFromEpsg } from '../../core/geodesy/index.ts'
+import type { GridShape } from '../../core/raster/index.ts'
 
 export async function readDem(path: string): Promise<{ shape: GridShape; heightM: Float32Array }> {
   const file = readFileSync(path)

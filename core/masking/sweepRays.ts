@@ -1,0 +1,78 @@
+import type { Earth } from '../geodesy/index.ts'
+import { CELL } from '../polar/index.ts'
+import { type Ground, RELIEF, type Site } from '../terrain/index.ts'
+import { cutsAround, writeGround, writeSeen } from './cells.ts'
+import { makeStraightProfile } from './profile.ts'
+import { runRay } from './ray.ts'
+import { heldRunner } from './sightPoint.ts'
+import { makeSightRun } from './sightRun.ts'
+
+/** Cells of chosen rays, packed as in SiteCells and SightCells: index i * cells + j for azimuth i and centre j. */
+export interface RayCells {
+  readonly azimuthsDeg: readonly number[]
+  readonly centresM: readonly number[]
+  readonly cellM: number
+  readonly siteGroundM: number
+  readonly effectiveRadiusM: Float64Array
+  readonly groundM: Float32Array
+  readonly code: Uint8Array
+  readonly relief: Uint8Array
+  readonly slopePermille: Int16Array
+  readonly state: Uint8Array
+  readonly inSight: Uint16Array
+  readonly floorM: Float32Array
+  readonly floorBandM: Float32Array
+}
+
+/**
+ * The cell quantities of `sweep` for chosen azimuths (degrees true) and cells of length cellM around chosen centres (ground range, m, ascending): what a
+ * polar grid with a ray and a cell there would hold. Centres must be above 0.
+ */
+export function sweepRays(
+  g: Ground,
+  site: Site,
+  heightM: number,
+  earth: Earth,
+  azimuthsDeg: readonly number[],
+  centresM: readonly number[],
+  cellM: number,
+): RayCells {
+  const n = centresM.length
+  const cells = azimuthsDeg.length * n
+  const cuts = cutsAround(centresM, cellM)
+  const reachM = cuts.cutM.length > 0 ? cuts.cutM[cuts.cutM.length - 1] : 0
+  const held = heldRunner(g, site, reachM)
+  const r = {
+    ...held,
+    profile: makeStraightProfile(held.tracer.track.distM.length, cuts.cutM.length),
+    run: makeSightRun(cuts.cutM.length),
+  }
+  const centres = Float64Array.from(centresM)
+  const out = {
+    azimuthsDeg,
+    centresM,
+    cellM,
+    siteGroundM: r.siteGroundM,
+    effectiveRadiusM: new Float64Array(azimuthsDeg.length),
+    groundM: new Float32Array(cells).fill(Number.NaN),
+    code: new Uint8Array(cells).fill(255),
+    relief: new Uint8Array(cells).fill(RELIEF.unknown),
+    slopePermille: new Int16Array(cells),
+    state: new Uint8Array(cells),
+    inSight: new Uint16Array(cells),
+    floorM: new Float32Array(cells),
+    floorBandM: new Float32Array(cells),
+  }
+  azimuthsDeg.forEach((azimuthDeg, i) => {
+    const offset = i * n
+    r.tracer.traceTo(azimuthDeg, reachM)
+    runRay(r, earth, azimuthDeg, heightM, cuts.cutM)
+    out.effectiveRadiusM[i] = r.effectiveRadiusM
+    writeGround(r.profile, cuts, out, offset)
+    let known = 0
+    while (known < n && cuts.centre[known] < r.profile.cuts) known++
+    r.tracer.sampleCells(centres, known, out.code, out.relief, offset)
+    writeSeen(r, r.run, cuts, out, offset, r.tracer.track.unknownWhy === 'void' ? CELL.beyondVoid : CELL.outside)
+  })
+  return out
+}
