@@ -6,7 +6,7 @@ import { bandOf, reliefSlot, type StrengthTable } from './strengthTable.ts'
  * Azimuth × range cells as clutter reads them: the polar grid, or a few rays around one point. Row i holds `centresM.length` cells of equal
  * depth; ground heights NaN where unknown.
  */
-export interface RayCells
+export interface CellRows
   extends Pick<SiteCells, 'groundM' | 'code' | 'relief' | 'effectiveRadiusM' | 'siteGroundM'>,
     Pick<SightCells, 'inSight'> {
   /** Ground range of the cell centres, m, > 0. */
@@ -44,7 +44,7 @@ export function elevationTangent(antennaM: number, heightM: number, rangeM: numb
  * Clutter of the cells of row i per metre of gate and radian of azimuth: σ°F⁴ × share in sight × slant range × sec ψ, ψ the depression at the
  * ground, m. With two-way elevation gain into `patterned`, without into `plain` (null = not wanted). Returns the note bits met.
  */
-export function cellClutter(model: CellModel, cells: RayCells, i: number, patterned: Float64Array, plain: Float64Array | null): number {
+export function cellClutter(model: CellModel, cells: CellRows, i: number, patterned: Float64Array, plain: Float64Array | null): number {
   const { antennaM, strength, gain } = model
   const { edgesRad, bands, sigma, noteBits } = strength
   const { groundM, code, relief, inSight, centresM } = cells

@@ -8,7 +8,7 @@ import type { Site } from '../terrain/index.ts'
 import { fromDb, RAD_PER_DEG } from '../units/index.ts'
 import type { Work } from '../work/index.ts'
 import { azimuthSum } from './azimuthSum.ts'
-import { type CellModel, cellClutter, gateSums, gateWeights, type RayCells, slantSquared } from './cellSums.ts'
+import { type CellModel, type CellRows, cellClutter, gateSums, gateWeights, slantSquared } from './cellSums.ts'
 import { decibel } from './decibelTable.ts'
 import type { LandTable } from './landTable.ts'
 import { BUILT_IN_LAND_TABLE } from './landTableData.ts'
@@ -64,7 +64,7 @@ export function* clutterToNoise(
   const { grid } = s
   const { azimuths, ranges } = grid
   const centresM = centresOf(grid)
-  const cells: RayCells = { ...pick(s), inSight: m.inSight, centresM }
+  const cells: CellRows = { ...pick(s), inSight: m.inSight, centresM }
   const model: CellModel = {
     antennaM: electricalCentreM(site, s.siteGroundM, heightM),
     strength: strengthTable(codes, r.frequencyHz, options.landTable ?? BUILT_IN_LAND_TABLE),
@@ -136,7 +136,7 @@ function tooNear(nearestM: number, antennaM: number, groundM: number, rangeM: nu
 function gatesOfRow(
   sums: Float64Array,
   i: number,
-  cells: RayCells,
+  cells: CellRows,
   state: Uint8Array,
   antennaM: number,
   nearestM: number,
@@ -163,7 +163,7 @@ function toDecibels(
   out: Float32Array,
   main: Float64Array,
   i: number,
-  cells: RayCells,
+  cells: CellRows,
   state: Uint8Array,
   antennaM: number,
   nearestM: number,
