@@ -45,14 +45,14 @@ export async function crsFromText(text: string): Promise<Crs> {
   if (/^(OGC:)?CRS84$|^WGS ?84$/i.test(t)) return WGS84
   const utm = /^(?:WGS ?84\s*\/?\s*)?UTM\s*(?:zone\s*)?(\d{1,2})\s*([NS])$/i.exec(t)
   if (utm) return crsFromEpsg((utm[2].toUpperCase() === 'N' ? 32600 : 32700) + Number(utm[1]))
-  if (t.includes('+proj=')) return crsFromProjString(t, null, 'stated CRS')
+  if (t.includes('+proj=')) return crsFromProjString(t, null, 'the stated CRS')
   if (/^[A-Z_]+(CS|CRS)\s*[[(]/i.test(t)) return crsFromWkt(t)
   throw fault('crs-unknown', `"${t.slice(0, 60)}" is no CRS this program knows`)
 }
 
 async function crsFromWkt(wkt: string): Promise<Crs> {
   const horizontal = horizontalPart(wkt)
-  const name = /^\s*\w+\s*[[(]\s*"([^"]*)"/.exec(horizontal)?.[1] ?? 'stated CRS'
+  const name = /^\s*\w+\s*[[(]\s*"([^"]*)"/.exec(horizontal)?.[1] ?? 'the stated CRS'
   const id = /(?:AUTHORITY|ID)\s*[[(]\s*"EPSG"\s*,\s*"?(\d+)"?\s*[\])]\s*[\])]\s*$/i.exec(horizontal)
   if (id) {
     const crs = await crsFromEpsg(Number(id[1])).catch(() => null)
@@ -92,7 +92,7 @@ export async function crsFromGeoKeys(keys: GeoKeys): Promise<Crs> {
   }
   const definition = await fromTable(keys)
   if (!definition) throw fault('crs-unknown', `the CRS of the file (${name || 'no name'}) is not understood`)
-  return crsFromProjString(definition, null, name || 'CRS of the file', geographic)
+  return crsFromProjString(definition, null, name || 'the CRS of the file', geographic)
 }
 
 function citation(keys: GeoKeys): string {

@@ -73,13 +73,9 @@ function ownProjection(definition: string): CrsTransform | null {
   if (utm && +utm[2] >= 1 && +utm[2] <= 60) return utmProjection(+utm[2], utm[1] === '7', WGS84_F)
   if (!definition.startsWith('+')) return null
   const p = projParameters(definition)
-  const a = +(p.get('a') ?? WGS84_A_M)
-  const known = p.get('ellps') ?? p.get('datum')
-  const grs80 = known === 'GRS80' || known === 'NAD83'
-  if (p.has('towgs84') || p.has('nadgrids') || p.has('units') || !(grs80 || known === 'WGS84')) return null
-  if (p.has('b') && !isWgs84Like(a, +p.get('b')!)) return null
-  if (+(p.get('pm') ?? 0) !== 0) return null
-  const f = grs80 ? GRS80_F : WGS84_F
+  if (p.has('nadgrids') || p.has('units') || /[1-9]/.test(p.get('towgs84') ?? '0') || +(p.get('pm') ?? 0) !== 0) return null
+  const f = flatteningOf(p)
+  if (f === null) return null
   if (p.get('proj') === 'longlat') return geographic
   if (p.get('proj') === 'utm') return utmProjection(+p.get('zone')!, p.has('south'), f, +(p.get('to_meter') ?? 1))
   if (p.get('proj') !== 'tmerc') return null
@@ -93,6 +89,16 @@ function ownProjection(definition: string): CrsTransform | null {
     falseNorthing: +(p.get('y_0') ?? 0),
     metresPerUnit: +(p.get('to_meter') ?? 1),
   })
+}
+
+/** Flattening where the ellipsoid is WGS 84 or GRS 80; null for any other. */
+function flatteningOf(p: Map<string, string>): number | null {
+  const name = p.get('ellps') ?? p.get('datum')
+  const a = +(p.get('a') ?? WGS84_A_M)
+  if (p.has('b')) return isWgs84Like(a, +p.get('b')!) ? 1 - +p.get('b')! / a : null
+  if (p.has('a') || p.has('R') || p.has('rf') || p.has('f')) return null
+  if (name === 'WGS84') return WGS84_F
+  return name === 'GRS80' || name === 'NAD83' ? GRS80_F : null
 }
 
 function utmProjection(zone: number, south: boolean, f: number, metresPerUnit = 1): CrsTransform {

@@ -4,7 +4,11 @@ import type { TiffImage } from './tiffImage.ts'
 export interface Valuer {
   readonly scale: number
   readonly offset: number
-  isVoid(sample: number): boolean
+  /** Samples outside these are no data. */
+  readonly lowest: number
+  readonly highest: number
+  /** Single samples that are no data; unused places hold NaN. */
+  readonly voids: readonly [number, number, number]
 }
 /** A rectangle of pixels with their values, row by row. */
 export interface Patch {
@@ -67,10 +71,11 @@ export async function blockValues(image: TiffImage, valuer: Valuer, bc: number, 
   const { samples, stride } = found
   const n = Math.floor(samples.length / stride)
   const out = new Float32Array(n)
-  const { scale, offset } = valuer
+  const { scale, offset, lowest, highest } = valuer
+  const [void1, void2, void3] = valuer.voids
   for (let i = 0, at = 0; i < n; i++, at += stride) {
     const v = samples[at]
-    out[i] = valuer.isVoid(v) ? Number.NaN : v * scale + offset
+    out[i] = v >= lowest && v <= highest && v !== void1 && v !== void2 && v !== void3 ? v * scale + offset : Number.NaN
   }
   if (image.alphaBand !== null) {
     const alpha = stride > 1 ? found : await image.block(bc, br, image.alphaBand)

@@ -32,7 +32,7 @@ export interface TerrainHead {
 export type Progress = (done: number, total: number) => void
 
 /** Samples taken as no data where the file declares none. */
-const CUSTOMARY_VOIDS: ReadonlySet<number> = new Set([-9999, -32767, -32768])
+const CUSTOMARY_VOIDS = [-9999, -32767, -32768] as const
 /** No height on earth, m: outside this a sample is no data, declared or not. */
 const LOWEST_M = -12_000
 const HIGHEST_M = 9_000
@@ -97,13 +97,11 @@ function refusePictures(image: TiffImage): void {
     throw new InputError({ code: 'not-heights', file: image.file, found, remedy: 'give heights in one band of numbers (Int16 or Float32)' })
 }
 
-/** Declared no-data value; NaN is no data anyway. */
+/** Declared no-data value, NaN included; null where none is declared or it is no number. */
 export function noDataOf(image: TiffImage): number | null {
   const words = image.tags.gdalNoData.trim()
-  if (words === '') return null
-  const v = Number(words)
-  if (Number.isNaN(v) && !/^-?nan/i.test(words)) return /^-?inf/i.test(words) ? Number(words.replace(/inf.*/i, 'Infinity')) : null
-  return v
+  const v = words === '' ? Number.NaN : Number(words)
+  return Number.isNaN(v) && !/^[-+]?nan/i.test(words) ? null : v
 }
 
 function heightValuer(image: TiffImage, nodata: number | null, metresPerUnit: number): Valuer {
@@ -115,16 +113,13 @@ function heightValuer(image: TiffImage, nodata: number | null, metresPerUnit: nu
   const offset = number('OFFSET', 0) * metresPerUnit
   const low = (LOWEST_M - offset) / scale
   const high = (HIGHEST_M - offset) / scale
-  const lowest = Math.min(low, high)
-  const highest = Math.max(low, high)
-  // the text of a Float32 no-data value is rarely the exact number
-  const single = nodata === null ? Number.NaN : Math.fround(nodata)
-  const declared = nodata ?? Number.NaN
-  const undeclared = nodata === null
   return {
     scale,
     offset,
-    isVoid: (v) => !(v >= lowest && v <= highest) || v === declared || v === single || (undeclared && CUSTOMARY_VOIDS.has(v)),
+    lowest: Math.min(low, high),
+    highest: Math.max(low, high),
+    // the text of a Float32 no-data value is rarely the exact number
+    voids: nodata === null ? CUSTOMARY_VOIDS : [nodata, Math.fround(nodata), Number.NaN],
   }
 }
 

@@ -61,7 +61,8 @@ function undoFloatPredictor(b: Uint8Array, rowSamples: number, stride: number, s
     const end = row + rowBytes
     for (let i = row + stride; i < end; i++) b[i] += b[i - stride]
     copy.set(b.subarray(row, end))
-    for (let i = 0, at = row; i < rowSamples; i++) for (let plane = size - 1; plane >= 0; plane--) b[at++] = copy[plane * rowSamples + i]
+    for (let plane = 0; plane < size; plane++)
+      for (let i = plane * rowSamples, last = i + rowSamples, at = row + size - 1 - plane; i < last; i++, at += size) b[at] = copy[i]
   }
 }
 

@@ -148,16 +148,16 @@ async function imageOf(
     bytesPerSample,
     format: format as 1 | 2 | 3,
     predictor: await one('Predictor', 1),
-    littleEndian: compression === 34887 ? true : guard.littleEndian,
+    littleEndian: guard.littleEndian,
   }
-  const lerc = compression === 34887 ? await fields.loadValue('LercParameters') : undefined
   let codec: Codec | null = null
   const parameters = {
     tileWidth: blockWidth,
     tileHeight: blockHeight,
     planarConfiguration: planar,
     bitsPerSample: bits,
-    LercParameters: lerc,
+    float: format === 3,
+    LercParameters: numbers(await fields.loadValue('LercParameters')) ?? undefined,
   }
   return {
     file,
