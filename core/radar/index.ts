@@ -1,5 +1,7 @@
 export * from './equation.ts'
+export * from './exposure.ts'
 export * from './limits.ts'
 export * from './stc.ts'
 export * from './target.ts'
+export * from './targets.ts'
 export * from './types.ts'

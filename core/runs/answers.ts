@@ -1,5 +1,5 @@
 import { clutterToNoise } from '../clutter/index.ts'
-import { previewSweep, sightAlong, sweep } from '../masking/index.ts'
+import { sightAlong, sweep } from '../masking/index.ts'
 import { ladderHeightsM, ladderOf, type OptionCells, type Rung, rung } from '../merit/index.ts'
 import { polarShape } from '../polar/index.ts'
 import { buildGround, groundAt } from '../terrain/index.ts'
@@ -62,7 +62,7 @@ export class Answers {
     let max = Number.NEGATIVE_INFINITY
     let voids = 0
     for (const h of ground.heightM) {
-      if (h !== h) voids++
+      if (Number.isNaN(h)) voids++
       else {
         if (h < min) min = h
         if (h > max) max = h
@@ -85,20 +85,23 @@ export class Answers {
     const moved = body.lon !== candidate.lon || body.lat !== candidate.lat
     const site = moved ? { ...place, groundHeightM: null } : place
     const earth = earthOf(study)
-    const swept = previewSweep(ground, site, body.heightM, polarShape(study.run), earth, PREVIEW_STRIDE)
+    const full = polarShape(study.run)
+    const azimuths = Math.ceil(full.azimuths / PREVIEW_STRIDE)
+    const swept = yield* sweep(ground, site, [body.heightM], { ...full, azimuths, azimuthStepDeg: 360 / azimuths }, earth)
+    const [mask] = swept.masks
     const tiltDeg = this.engine.shown.option?.tiltDeg ?? candidate.tiltsDeg[0]
+    const { landTable } = this.engine
     const clutter = yield* clutterToNoise(
       swept.site,
-      swept.mask,
+      mask,
       ground.codes,
       site,
       body.heightM,
       earth,
       study.radar,
       tiltDeg,
-      landOption(this.engine.landTable),
+      landOption(landTable),
     )
-    const { landTable } = this.engine
     this.preview = {
       ground,
       place: site,
@@ -108,13 +111,13 @@ export class Answers {
       heightM: body.heightM,
       tiltDeg,
       site: swept.site,
-      mask: swept.mask,
+      mask,
       clutter,
     }
     const siteGroundM = swept.site.siteGroundM
     return {
       siteGroundM: Number.isFinite(siteGroundM) ? siteGroundM : null,
-      horizon: swept.mask.horizon.map(({ azimuthDeg, elevationDeg }) => ({ azimuthDeg, elevationDeg })),
+      horizon: mask.horizon.map(({ azimuthDeg, elevationDeg }) => ({ azimuthDeg, elevationDeg })),
       groundInSightPct: null,
     }
   }
@@ -162,7 +165,7 @@ export class Answers {
     const { ground, study } = this.engine.ready()
     const site = siteOf(candidateOf(study, body.option.candidate))
     const along = sightAlong(ground, site, body.option.heightM, earthOf(study), body.azimuthDeg, study.run.maxRangeM)
-    return { azimuthDeg: body.azimuthDeg, option: body.option, ...along }
+    return { option: body.option, ...along }
   }
 
   // biome-ignore lint/correctness/useYield: an answer that needs no slices

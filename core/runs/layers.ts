@@ -76,7 +76,7 @@ function fillStrength(o: OptionCells, out: Float32Array): void {
   const strength = strengthByCode(o.ground.codes, o.radar.frequencyHz, o.landTable ?? undefined)
   for (let at = 0; at < out.length; at++) {
     const depression = out[at]
-    if (depression === depression) out[at] = strength(o.site.code[at], o.site.relief[at], depression)
+    if (!Number.isNaN(depression)) out[at] = strength(o.site.code[at], o.site.relief[at], depression)
   }
 }
 
