@@ -1,2 +1,5 @@
+export * from './HorizonStrip.tsx'
 export * from './hub.ts'
+export * from './MapPane.tsx'
+export * from './Ruler.tsx'
 export * from './types.ts'

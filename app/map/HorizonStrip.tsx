@@ -1,0 +1,101 @@
+import { useEffect, useLayoutEffect, useMemo, useRef, useState } from 'react'
+import { Button } from 'react-aria-components'
+import type { HorizonRow } from '../../core/index.ts'
+import { horizonChart } from '../charts/index.ts'
+import { HorizonChart, moveCursor } from '../charts/printers.tsx'
+import { formatAzimuth, formatPlaceRange, formatScreening, MAP_WORDS, textOf, type UnitSystem } from '../words/index.ts'
+import type { HorizonStripProps } from './types.ts'
+import { useChannel } from './useChannel.ts'
+import './ruler.css'
+
+const SIZE = 12
+/** The strip can be stretched to this many times its height. */
+const STRETCH = 2.6
+
+/** The horizon wraps the map: its profile along the map's upper edge, azimuth by azimuth, pointer linked both ways. */
+export function HorizonStrip({ hub, rows, units, onPick }: HorizonStripProps) {
+  const box = useRef<HTMLDivElement>(null)
+  const cursor = useRef<SVGLineElement>(null)
+  const read = useRef<HTMLSpanElement>(null)
+  const [size, setSize] = useState({ width: 0, height: 0 })
+  const [stretched, setStretched] = useState(false)
+  const answer = useChannel(hub.trialAnswer)
+  useLayoutEffect(() => {
+    const host = box.current
+    if (!host) return
+    const measure = () => setSize({ width: host.clientWidth, height: host.clientHeight })
+    measure()
+    const watch = new ResizeObserver(measure)
+    watch.observe(host)
+    return () => watch.disconnect()
+  }, [])
+  const tried = useMemo(() => (answer ? answer.horizon.map(roughRow) : null), [answer])
+  const shown = tried ?? rows
+  const { width } = size
+  const height = Math.round(size.height * (stretched ? STRETCH : 1))
+  const geometry = useMemo(
+    () => (width > 0 && shown.length > 0 ? horizonChart({ rows: shown, width, height, system: units, size: SIZE, style: 'strip' }) : null),
+    [shown, width, height, units],
+  )
+  useEffect(
+    () =>
+      hub.pointer.listen((p) => {
+        if (!geometry) return
+        const azimuth = p?.azimuthDeg ?? null
+        moveCursor(cursor.current, geometry.azimuth, azimuth)
+        const row = azimuth === null ? null : geometry.rowAt(azimuth)
+        if (read.current) read.current.textContent = row && azimuth !== null ? rowText(row, azimuth, units) : ''
+      }),
+    [hub, geometry, units],
+  )
+  return (
+    <div ref={box} className={`horizon-strip${stretched ? ' stretched' : ''}`}>
+      {geometry ? (
+        <div className="horizon-chart" style={{ height }}>
+          <HorizonChart
+            rows={shown}
+            width={width}
+            height={height}
+            system={units}
+            size={SIZE}
+            style="strip"
+            cursorRef={cursor}
+            onPoint={(azimuth) => hub.pointer.set(azimuth === null ? null : pointed(azimuth, geometry.rowAt(azimuth)))}
+            onPick={onPick}
+          />
+          <span ref={read} className="horizon-read" aria-hidden />
+          <Button className="button quiet small stretch" aria-pressed={stretched} onPress={() => setStretched(!stretched)}>
+            {MAP_WORDS.stretch}
+          </Button>
+        </div>
+      ) : (
+        <p className="ink-3 horizon-empty">{MAP_WORDS.horizonEmpty}</p>
+      )}
+    </div>
+  )
+}
+
+const pointed = (azimuthDeg: number, row: HorizonRow | null) => ({
+  from: 'horizon' as const,
+  at: null,
+  azimuthDeg,
+  rangeM: row && row.rangeM > 0 ? row.rangeM : null,
+})
+const rowText = (row: HorizonRow, azimuthDeg: number, units: UnitSystem): string =>
+  [
+    textOf(formatAzimuth(azimuthDeg)),
+    textOf(formatScreening(row.elevationDeg)),
+    row.rangeM > 0 ? textOf(formatPlaceRange(row.rangeM, units)) : '',
+    row.obstacle,
+  ]
+    .filter(Boolean)
+    .join(' · ')
+/** A preview knows the elevation of the horizon only. */
+const roughRow = (r: { azimuthDeg: number; elevationDeg: number }): HorizonRow => ({
+  ...r,
+  rangeM: 0,
+  heightM: 0,
+  lon: 0,
+  lat: 0,
+  obstacle: 'terrain',
+})

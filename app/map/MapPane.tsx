@@ -1,0 +1,195 @@
+import { useCallback, useEffect, useLayoutEffect, useMemo, useRef, useState } from 'react'
+import { Button } from 'react-aria-components'
+import { geodesicDirect, type View } from '../../core/index.ts'
+import { MAP_WORDS } from '../words/index.ts'
+import { fitted, openingView, resized, zoomed } from './camera.ts'
+import { Legend } from './face/Legend.tsx'
+import { Progress } from './face/Progress.tsx'
+import { ReadOut } from './face/ReadOut.tsx'
+import { ScaleBar } from './face/ScaleBar.tsx'
+import { Sentence } from './face/Sentence.tsx'
+import { type FitTo, Tools } from './face/Tools.tsx'
+import { createChannel } from './hub.ts'
+import { useMapInput } from './input/useMapInput.ts'
+import { Marks } from './marks/Marks.tsx'
+import type { Rect } from './marks/Rings.tsx'
+import { useSheets } from './sheets/useSheets.ts'
+import type { Channel, MapPaneProps } from './types.ts'
+import { useChannel } from './useChannel.ts'
+import './map.css'
+
+const FIT_MARGIN_PX = 28
+
+/** The map: base, overlay and marks as three stacked sheets, with its own sentence, legend, scale, read-out and tools. */
+export function MapPane(props: MapPaneProps) {
+  const { hub, candidates, show, units, night, corners, maxRangeM } = props
+  const stage = useRef<HTMLDivElement>(null)
+  const sheets = useRef<HTMLDivElement>(null)
+  const cursor = useRef<SVGGElement>(null)
+  // biome-ignore lint/correctness/useExhaustiveDependencies: made once, the theme follows in useSheets
+  const camera = useMemo(() => createChannel<View>(openingView(night)), [])
+  const view = useChannel(camera)
+  const trial = useChannel(hub.trial)
+  const [trouble, setTrouble] = useState<string | null>(null)
+  const onError = useCallback((error: unknown) => setTrouble(error instanceof Error ? error.message : String(error)), [])
+  const { base, setBase, glReal } = useSheets(sheets, camera, props, onError)
+  const chosen = candidates.find((c) => c.id === show.option?.candidate) ?? null
+  const lon = chosen?.lon
+  const lat = chosen?.lat
+  const site = useMemo(() => (lon === undefined || lat === undefined ? null : { lon, lat }), [lon, lat])
+
+  const placesOf = useCallback(
+    (to: FitTo) => {
+      if (to === 'ground') return corners
+      if (to === 'candidates') return candidates
+      return site ? [0, 90, 180, 270].map((az) => geodesicDirect(site, az, maxRangeM)) : []
+    },
+    [corners, candidates, site, maxRangeM],
+  )
+  const showWhole = useCallback((to: FitTo) => camera.set(fitted(camera.get(), placesOf(to), FIT_MARGIN_PX)), [camera, placesOf])
+  const fits = (['range', 'candidates', 'ground'] as const).filter((f) => placesOf(f).length > (f === 'candidates' ? 1 : 0))
+  useFirstFit(stage, camera, props, fits.includes('range') ? 'range' : 'ground', showWhole)
+  const input = useMapInput(stage, cursor, camera, props, () => showWhole(fits.includes('ground') ? 'ground' : 'range'))
+  const cards = useCards(stage, view, show.layer, props.lower !== null)
+  const hint = props.placing ? MAP_WORDS.placing : input.nudging ? MAP_WORDS.movingByKeys : MAP_WORDS.pointHint
+  const empty = props.groundSerial === null
+
+  return (
+    <section className={`map-pane${props.placing ? ' placing' : ''}${props.lower ? ' with-lower' : ''}`} aria-label={MAP_WORDS.map}>
+      <div
+        ref={stage}
+        className="stage"
+        role="application"
+        aria-label={MAP_WORDS.map}
+        aria-describedby="map-help"
+        // biome-ignore lint/a11y/noNoninteractiveTabindex: the map is worked by keys, as its role says
+        tabIndex={0}
+        {...input.handlers}
+      >
+        <div ref={sheets} className="sheets" />
+        <Marks
+          view={view}
+          trial={trial}
+          cards={cards}
+          cursorRef={cursor}
+          candidates={candidates}
+          needs={props.needs}
+          obstacles={props.obstacles}
+          roads={props.roads}
+          maxRangeM={maxRangeM}
+          show={show}
+          units={units}
+          cell={props.cell}
+          profileAzimuthDeg={props.profileAzimuthDeg}
+        />
+        <span className="cross" aria-hidden />
+      </div>
+      <span id="map-help" className="visually-hidden">
+        {MAP_WORDS.help}
+      </span>
+      <div className="map-head">
+        <div className="map-words">
+          <Sentence show={show} candidates={candidates} needs={props.needs} trial={trial} onShow={props.onShow} onSelect={props.onSelect} />
+          {props.progress ? <Progress progress={props.progress} onStop={props.onStop} /> : null}
+          {trouble ? (
+            <p className="card trouble" role="alert">
+              {trouble}
+              <Button className="button quiet small" onPress={() => setTrouble(null)}>
+                {MAP_WORDS.close}
+              </Button>
+            </p>
+          ) : null}
+        </div>
+        <Tools
+          onZoom={(factor) => camera.set(zoomed(camera.get(), factor, view.width / 2, view.height / 2))}
+          onFit={showWhole}
+          fits={fits}
+          base={base}
+          glReal={glReal}
+          onBase={setBase}
+        />
+      </div>
+      {empty && props.empty ? <div className="map-empty">{props.empty}</div> : null}
+      <div className="map-foot">
+        {empty ? <span /> : <Legend layer={show.layer} units={units} night={night} marks={legendMarks(props.marks)} />}
+        <div className="map-corner">
+          {empty ? null : <ScaleBar view={view} units={units} />}
+          {empty ? null : <ReadOut client={props.client} hub={hub} site={site} units={units} hint={hint} />}
+        </div>
+      </div>
+      {props.lower ? <LowerChart onClose={props.onLowerClose}>{props.lower}</LowerChart> : null}
+    </section>
+  )
+}
+
+/** A chart over the lower half of the map; Esc closes it. */
+function LowerChart({ children, onClose }: { children: MapPaneProps['lower']; onClose: () => void }) {
+  useEffect(() => {
+    const key = (e: KeyboardEvent) => {
+      if (e.key === 'Escape' && !e.defaultPrevented && !document.querySelector('.popover, .dialog')) onClose()
+    }
+    window.addEventListener('keydown', key)
+    return () => window.removeEventListener('keydown', key)
+  }, [onClose])
+  return (
+    <div className="map-lower">
+      <Button className="button quiet small close" onPress={onClose}>
+        {MAP_WORDS.close}
+      </Button>
+      {children}
+    </div>
+  )
+}
+
+const legendMarks = (marks: MapPaneProps['marks']): string[] => [...new Set(marks.map((m) => `${m.about} ${m.mark}`.trim()))]
+
+/** Size of the stage, and the first view once ground or candidate is there. */
+function useFirstFit(
+  stage: React.RefObject<HTMLDivElement | null>,
+  camera: Channel<View>,
+  props: MapPaneProps,
+  to: FitTo,
+  showWhole: (to: FitTo) => void,
+) {
+  const fittedFor = useRef<string | null>(null)
+  const latest = useRef({ to, showWhole, serial: props.groundSerial })
+  latest.current = { to, showWhole, serial: props.groundSerial }
+  const once = useCallback(() => {
+    const { to, showWhole, serial } = latest.current
+    const key = `${serial}`
+    if (serial === null || fittedFor.current === key || camera.get().width < 1) return
+    fittedFor.current = key
+    showWhole(to)
+  }, [camera])
+  useLayoutEffect(() => {
+    const host = stage.current
+    if (!host) return
+    const measure = () => {
+      camera.set(resized(camera.get(), host.clientWidth, host.clientHeight))
+      once()
+    }
+    measure()
+    const watch = new ResizeObserver(measure)
+    watch.observe(host)
+    return () => watch.disconnect()
+  }, [stage, camera, once])
+  // biome-ignore lint/correctness/useExhaustiveDependencies: a new ground is looked at whole
+  useEffect(once, [props.groundSerial, props.corners])
+}
+
+/** Where cards lie over the map, so that ring labels keep clear of them. */
+function useCards(stage: React.RefObject<HTMLDivElement | null>, view: View, layer: string, lower: boolean): readonly Rect[] {
+  const [cards, setCards] = useState<readonly Rect[]>([])
+  // biome-ignore lint/correctness/useExhaustiveDependencies: cards change with the size, the layer and the lower chart
+  useLayoutEffect(() => {
+    const host = stage.current
+    const box = host?.getBoundingClientRect()
+    if (!host?.parentElement || !box) return
+    const found = [...host.parentElement.querySelectorAll('.card, .map-lower')].map((card) => {
+      const r = card.getBoundingClientRect()
+      return { left: r.left - box.left - 4, top: r.top - box.top - 4, right: r.right - box.left + 4, bottom: r.bottom - box.top + 4 }
+    })
+    setCards(found)
+  }, [stage, view.width, view.height, layer, lower])
+  return cards
+}

@@ -1,0 +1,101 @@
+import { useEffect, useRef } from 'react'
+import { geodesicInverse, type LonLat, type Probe } from '../../../core/index.ts'
+import type { StudyClient } from '../../compute/client.ts'
+import { MAP_WORDS, placeLine, textOf, type UnitSystem, valueLine } from '../../words/index.ts'
+import type { MapHub } from '../types.ts'
+
+/** Pointer read-out. Written to the page by the pointer itself, never by render. */
+export function ReadOut({
+  client,
+  hub,
+  site,
+  units,
+  hint,
+}: {
+  client: StudyClient
+  hub: MapHub
+  site: LonLat | null
+  units: UnitSystem
+  hint: string
+}) {
+  const place = useRef<HTMLSpanElement>(null)
+  const value = useRef<HTMLSpanElement>(null)
+  useEffect(() => {
+    let asking = false
+    let latest: LonLat | null = null
+    let known: Probe | null = null
+    const write = (first: string, name = '', number = '', word = '') => {
+      if (place.current) place.current.textContent = first
+      if (!value.current) return
+      value.current.replaceChildren(...lineOf(name, number, word))
+    }
+    const reply = (probe: Probe | null, at: LonLat) => {
+      if (!probe || !latest) return
+      known = probe
+      const line = valueLine(probe, units)
+      write(
+        placeLine(probe.azimuthDeg, probe.rangeM, probe.groundM, units),
+        line.name,
+        line.value.value === '' ? '' : textOf(line.value),
+        line.word,
+      )
+      if (at !== latest) ask()
+    }
+    const ask = () => {
+      const at = latest
+      if (asking || !at) return
+      asking = true
+      client
+        .ask('probe', { at })
+        .then((probe) => {
+          asking = false
+          reply(probe, at)
+          if (!probe && at !== latest) ask()
+        })
+        .catch(() => {
+          // the shell reports failures of the worker; the read-out keeps to what it knows
+          asking = false
+        })
+    }
+    const stop = hub.pointer.listen((p) => {
+      latest = p?.at ?? null
+      if (!p) {
+        known = null
+        write(hint)
+        return
+      }
+      if (!p.at) {
+        write(placeLine(p.azimuthDeg, p.rangeM, undefined, units))
+        return
+      }
+      if (!known && site) {
+        const to = geodesicInverse(site, p.at)
+        write(placeLine(to.azimuthDeg, to.distanceM, undefined, units))
+      }
+      ask()
+    })
+    write(hint)
+    return stop
+  }, [client, hub, site, units, hint])
+  return (
+    <div className="card readout">
+      <span ref={place} className="place" />
+      <span ref={value} className="value" />
+    </div>
+  )
+}
+
+function lineOf(name: string, number: string, word: string): Node[] {
+  const piece = (text: string, className: string) => {
+    const span = document.createElement('span')
+    span.className = className
+    span.textContent = text
+    return span
+  }
+  const out: Node[] = []
+  if (name) out.push(piece(`${name} `, 'name'))
+  if (number) out.push(piece(`${number} `, 'number'))
+  if (word) out.push(piece(word, 'word'))
+  return out
+}
+export const readOutHint = MAP_WORDS.pointHint

@@ -1,0 +1,146 @@
+import { useId, useRef } from 'react'
+import type { LadderGeometry } from '../../charts/index.ts'
+import { textWidth } from '../../charts/index.ts'
+import { formatMast, MAP_WORDS, textOf } from '../../words/index.ts'
+import { labelPlaces } from './rulerGeometry.ts'
+
+const LINE_PX = 14
+const SIZE = 12
+
+export interface RulerScaleProps {
+  readonly width: number
+  readonly height: number
+  readonly axisX: number
+  readonly topPad: number
+  readonly stripPx: number
+  readonly geometry: LadderGeometry
+  readonly stated: readonly number[]
+  readonly heightM: number
+  readonly topM: number
+  /** Stands at the mast: `24 m, B`. */
+  readonly label: string
+  readonly describedBy: string
+  /** A height under the held pointer, m. */
+  readonly onTry: (heightM: number) => void
+  readonly onLetGo: () => void
+  readonly onCancel: () => void
+  readonly onKeyDown: (e: React.KeyboardEvent) => void
+}
+
+/** Scale, strips, lines of the needs and the mast itself. */
+export function RulerScale(p: RulerScaleProps) {
+  const { geometry: g, axisX, topPad, stripPx, width } = p
+  const clip = useId()
+  const held = useRef(false)
+  const y = (m: number) => topPad + g.mast.at(m)
+  const mastY = y(p.heightM)
+  const footY = y(0)
+  const first = axisX + 7
+  const second = first + stripPx + 6
+  const right = width - 4
+  // the mast's own label stands above its line, below it at the very top
+  const mastLabelY = mastY - 6 < topPad + 8 ? mastY + 15 : mastY - 6
+  const met = labelPlaces(
+    g.met.map((m) => topPad + m.y - 4),
+    [mastLabelY],
+    LINE_PX,
+    topPad + 8,
+    footY - 4,
+  )
+  const heightAt = (e: React.PointerEvent<SVGSVGElement>) => g.mast.invert(e.clientY - e.currentTarget.getBoundingClientRect().top - topPad)
+  return (
+    <svg
+      className="ruler-scale"
+      width={width}
+      height={p.height}
+      aria-hidden={width === 0}
+      onPointerDown={(e) => {
+        if (e.button !== 0) return
+        held.current = true
+        e.currentTarget.setPointerCapture(e.pointerId)
+        e.currentTarget.querySelector<SVGElement>('.mast')?.focus()
+        p.onTry(heightAt(e))
+      }}
+      onPointerMove={(e) => held.current && p.onTry(heightAt(e))}
+      onPointerUp={() => {
+        if (held.current) p.onLetGo()
+        held.current = false
+      }}
+      onPointerCancel={() => {
+        if (held.current) p.onCancel()
+        held.current = false
+      }}
+    >
+      <title>{MAP_WORDS.mastOf}</title>
+      <defs>
+        <clipPath id={`${clip}-up`}>
+          <rect x={0} y={0} width={width} height={Math.max(0, mastY)} />
+        </clipPath>
+        <clipPath id={`${clip}-down`}>
+          <rect x={0} y={mastY} width={width} height={Math.max(0, p.height - mastY)} />
+        </clipPath>
+      </defs>
+      {(['up', 'down'] as const).map((part) => (
+        <g key={part} className={`strips ${part}`} clipPath={`url(#${clip}-${part})`}>
+          <path className="in-sight" d={g.inSight} transform={`translate(${first} ${topPad})`} />
+          <path className="clutter" d={g.clutter} transform={`translate(${second} ${topPad})`} />
+        </g>
+      ))}
+      <g className="axis">
+        <path d={`M${axisX} ${topPad}V${footY}`} />
+        {g.ticks.map((t) => (
+          <g key={t.at}>
+            <path d={`M${axisX - 5} ${y(t.at)}H${axisX}`} />
+            <text x={axisX - 8} y={y(t.at) + 4} textAnchor="end">
+              {t.label}
+            </text>
+          </g>
+        ))}
+        {p.stated.map((s) => (
+          <path key={s} className="stated" d={`M${axisX - 6} ${y(s)}H${axisX + 3}`}>
+            <title>{textOf(formatMast(s))}</title>
+          </path>
+        ))}
+        <path className="foot" d={`M${axisX - 12} ${footY}H${right}`} />
+      </g>
+      {g.met.map((m, n) => (
+        <g key={m.needId} className="met">
+          <path d={`M${axisX} ${topPad + m.y}H${right}`} />
+          <text x={first + 2} y={met[n]}>
+            {shortened(`${m.name} ${MAP_WORDS.met}`, right - first - 2)}
+            <title>{`${m.name} ${MAP_WORDS.met}`}</title>
+          </text>
+        </g>
+      ))}
+      <g
+        className="mast"
+        role="slider"
+        tabIndex={0}
+        aria-label={MAP_WORDS.mastOf}
+        aria-describedby={p.describedBy}
+        aria-orientation="vertical"
+        aria-valuemin={0}
+        aria-valuemax={p.topM}
+        aria-valuenow={p.heightM}
+        aria-valuetext={textOf(formatMast(p.heightM))}
+        onKeyDown={p.onKeyDown}
+      >
+        <path className="line" d={`M${axisX - 14} ${mastY}H${right}`} />
+        <circle cx={axisX} cy={mastY} r={10} className="focus-ring" />
+        <circle cx={axisX} cy={mastY} r={6.5} className="grip" />
+        <text x={first + 2} y={mastLabelY}>
+          {p.label}
+        </text>
+      </g>
+    </svg>
+  )
+}
+
+/** A name cut to a width, with an ellipsis; the last word (met) is kept. */
+function shortened(text: string, widthPx: number): string {
+  if (textWidth(text, SIZE) <= widthPx) return text
+  const end = text.slice(text.lastIndexOf(' '))
+  let head = text.slice(0, text.lastIndexOf(' '))
+  while (head.length > 1 && textWidth(`${head}…${end}`, SIZE) > widthPx) head = head.slice(0, -1)
+  return `${head.trimEnd()}…${end}`
+}
