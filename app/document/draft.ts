@@ -21,10 +21,11 @@ export function withValue<T>(doc: T, path: string, value: unknown): T {
   return withSteps(doc, stepsOf(path), value) as T
 }
 function withSteps(doc: unknown, [key, ...rest]: string[], value: unknown): unknown {
+  if (doc === undefined) return undefined
   const old = (doc as Record<string, unknown>)[key]
-  if (old === value || (value === undefined && old === undefined)) return doc
   const copy = (Array.isArray(doc) ? [...doc] : { ...(doc as object) }) as Record<string, unknown>
-  const next = rest.length === 0 ? value : withSteps(old ?? {}, rest, value)
+  const next = rest.length === 0 ? value : withSteps(old ?? (value === undefined ? undefined : {}), rest, value)
+  if (next === old) return doc
   if (next !== undefined) copy[key] = next
   else if (Array.isArray(copy)) copy.splice(Number(key), 1)
   else delete copy[key]

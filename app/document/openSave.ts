@@ -1,5 +1,5 @@
 import { strFromU8, strToU8, unzip, zip } from 'fflate'
-import { InputError, openDraft, parseStudy, type StudyDoc } from '../../core/index.ts'
+import { type FieldProblem, InputError, openDraft, type StudyDoc } from '../../core/index.ts'
 import { filesOf } from './draft.ts'
 import type { GivenFile } from './fileStore.ts'
 
@@ -18,8 +18,8 @@ export interface OpenedStudy {
  */
 export function readStudyText(text: string, fileName: string): { doc: StudyDoc; warnings: readonly string[] } {
   const { doc, problems, warnings } = openDraft(text, fileName)
-  const broken = problems.find((p) => SHAPE_CODES.has(p.code) && !editable(p.path))
-  if (broken) parseStudy(text, fileName) // throws, with line and column
+  const broken = problems.find((p) => SHAPE_CODES.has(p.code) && !editable(p))
+  if (broken) throw new InputError({ ...broken, file: fileName, place: broken.path })
   const radar = { ...doc.radar, prfHz: doc.radar?.prfHz ?? [], antenna: doc.radar?.antenna ?? {} }
   return {
     doc: { ...doc, name: doc.name ?? '', terrain: doc.terrain ?? [], candidates: doc.candidates ?? [], radar: radar as StudyDoc['radar'] },
@@ -27,8 +27,10 @@ export function readStudyText(text: string, fileName: string): { doc: StudyDoc; 
   }
 }
 const SHAPE_CODES = new Set(['wrong-kind', 'wrong-shape', 'missing'])
-/** A single value of the radar, or a list that is simply not there, can be put right in the form. */
-const editable = (path: string): boolean => /^radar(\.antenna|\.suppression|\.stc)?(\.[A-Za-z]+)?$|^(terrain|candidates|name)$/.test(path)
+/** A list or radar value that is simply not there, or a single radar value of the wrong kind, can be put right in the form. */
+const editable = ({ path, code }: FieldProblem): boolean =>
+  /^radar(\.antenna|\.suppression|\.stc)?(\.[A-Za-z]+)?$|^(terrain|candidates|name)$/.test(path) &&
+  (code === 'missing' || (path.includes('.') && !/(prfHz|elevationTable|curve|antenna|suppression|stc)$/.test(path)))
 
 /** Paths in a study are relative to it; the page knows files by that path and, dropped loose, by the last part of it. */
 const lastPart = (path: string): string => path.split(/[\\/]/).at(-1) ?? path
@@ -99,6 +101,7 @@ export async function packStudy(doc: StudyDoc, files: ReadonlyMap<string, GivenF
 export const fileStem = (doc: StudyDoc): string =>
   doc.name
     .normalize('NFKD')
+    .replace(/\p{M}/gu, '')
     .replace(/[^\p{L}\p{N}]+/gu, '-')
     .replace(/^-+|-+$/g, '')
     .toLowerCase()

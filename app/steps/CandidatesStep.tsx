@@ -82,7 +82,8 @@ export const Ring = () => (
 )
 
 function Card({ candidate: c, onSelect }: { candidate: CandidateDoc; onSelect: () => void }) {
-  const { view } = useSession()
+  const session = useSession()
+  const { view } = session
   const option = useView((v) => v.option)
   const system = useView((v) => v.units)
   const groundM = useGround((g) => g.candidateM.get(c.id))
@@ -101,7 +102,14 @@ function Card({ candidate: c, onSelect }: { candidate: CandidateDoc; onSelect: (
         <span className="ink-3">{heightM === null || heightM === undefined ? '' : textOf(formatHeight(heightM, system))}</span>
       </AriaButton>
       <p className="small ink-3">{formatPosition(c)}</p>
-      {hasGround && groundM === null ? <p className="mark">no ground known here: outside the terrain or over a void</p> : null}
+      {hasGround && groundM === null ? (
+        <div className="row">
+          <span className="mark">no ground known here: outside the terrain or over a void</span>
+          <Button small look="quiet" onPress={session.readAgain}>
+            read again
+          </Button>
+        </div>
+      ) : null}
       <fieldset className="chips" aria-label={`Mast heights of ${c.id}`}>
         {[...c.mastHeightsM]
           .sort((a, b) => a - b)

@@ -1,2 +1,2 @@
 export { Shell } from './Shell.tsx'
-export { type GroundRead, type ReadGround, type Session, SessionProvider, startSession } from './session/index.ts'
+export { type ReadGround, type Session, SessionProvider, startSession } from './session/index.ts'

@@ -23,6 +23,9 @@ export interface CommitFieldProps {
   readonly ariaLabel?: string
 }
 
+/** Class names of the shapes. */
+export const SHAPES = { row: 'in-line', long: 'roomy', wide: 'under' } as const
+
 /** A text field that applies on Enter or on leaving, keeps what was typed while it is wrong, and gives it up on Escape. */
 export function CommitField(props: CommitFieldProps) {
   const { text, onCommit, shape = 'row', numeric, rows, unit, marks, help, placeholder } = props
@@ -64,7 +67,7 @@ export function CommitField(props: CommitFieldProps) {
   const shared = { ref: input, placeholder, onBlur: commit, onKeyDown, spellCheck: false }
   return (
     <AriaTextField
-      className={`field ${shape}`}
+      className={`field ${SHAPES[shape]}`}
       value={typed ?? text}
       onChange={setTyped}
       isInvalid={why !== null}

@@ -47,7 +47,7 @@ export function NumberField(props: NumberFieldProps) {
       unit={face.unit}
       numeric
       placeholder={stated ? undefined : required ? 'needed' : standIn}
-      marks={!stated && !required && standIn !== '' ? <Mark>default</Mark> : null}
+      marks={!stated && !required && typeof fallback === 'number' ? <Mark>default</Mark> : null}
       help={props.help}
       trouble={props.trouble}
       shape={props.shape}

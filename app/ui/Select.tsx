@@ -1,5 +1,6 @@
 import type { ReactNode } from 'react'
 import { Select as AriaSelect, Button, Label, ListBox, ListBoxItem, Popover, SelectValue } from 'react-aria-components'
+import { SHAPES } from './CommitField.tsx'
 
 export interface Choice<T extends string> {
   readonly id: T
@@ -19,13 +20,13 @@ export interface SelectProps<T extends string> {
 export function Select<T extends string>({ label, value, choices, onChange, marks, hideLabel, ariaLabel, shape = 'long' }: SelectProps<T>) {
   return (
     <AriaSelect
-      className={`field ${hideLabel ? 'wide' : shape}`}
+      className={`field ${SHAPES[hideLabel ? 'wide' : shape]}`}
       value={value}
       onChange={(key) => onChange(key as T)}
       aria-label={hideLabel ? ariaLabel : undefined}
     >
       {hideLabel ? null : (
-        <Label>
+        <Label className="label">
           {label}
           {marks ? <span className="marks">{marks}</span> : null}
         </Label>

@@ -9,7 +9,7 @@ const SPACES = /[\s\u00a0\u202f\u2009]/g
 /** An SI value as it stands in a field: no grouping, at most seven digits. */
 export function fieldText(si: number | null | undefined, face: FaceUnit): string {
   if (si === null || si === undefined || !Number.isFinite(si)) return ''
-  return String(Number((si / face.size).toPrecision(DIGITS)))
+  return String(Number((si / face.size).toPrecision(DIGITS))).replace('-', '−')
 }
 
 /** What may stand in a field, in face units: "give 0.03 to 40 GHz". */

@@ -51,11 +51,11 @@ export const RADAR_FIELDS = {
   receiver: [
     field('radar.noiseFigureDb', 'Noise figure', DB),
     field('radar.systemLossDb', 'System loss', DB),
-    field('radar.pfa', 'False-alarm probability', PLAIN),
+    field('radar.pfa', 'Pfa', PLAIN),
     field('radar.instrumentedRangeM', 'Instrumented range', 'range'),
   ],
   air: [
-    field('atmosphere.effectiveEarthFactor', 'Effective-earth factor k', PLAIN),
+    field('atmosphere.effectiveEarthFactor', 'Effective-earth k', PLAIN),
     field('atmosphere.earthRadiusM', 'Earth radius', face('km', 1e3), { emptyWords: 'by azimuth' }),
     field('atmosphere.rainRateMmH', 'Rain rate', face('mm/h')),
     field('atmosphere.windMs', 'Wind', face('m/s')),

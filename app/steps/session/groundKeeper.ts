@@ -1,21 +1,10 @@
-import type { Ask, Obstacle, Road, StudyDoc } from '../../../core/index.ts'
+import type { StudyDoc } from '../../../core/index.ts'
 import type { StudyClient } from '../../compute/client.ts'
+import type { makeGroundReader } from '../../compute/intakeClient.ts'
 import { type FileStore, filesOf, type GivenFile, type GroundStore, NO_GROUND, type StudyStore } from '../../document/index.ts'
 import { sentenceOf } from './notices.ts'
 
-/** What reading the files gives: the ground to hand over, and what the page keeps of it. */
-export interface GroundRead {
-  readonly ground: Ask['ground']
-  readonly roads: readonly Road[]
-  readonly obstacles: readonly Obstacle[]
-  /** A line per file. */
-  readonly notes: readonly string[]
-}
-export type ReadGround = (
-  files: ReadonlyMap<string, GivenFile>,
-  doc: StudyDoc,
-  onProgress: (doing: string, done: number, total: number) => void,
-) => Promise<GroundRead>
+export type ReadGround = ReturnType<typeof makeGroundReader>
 
 /** Reads the ground again whenever its files, or what the study states about them, change, and hands it to the study worker. */
 export function keepGround(
@@ -25,7 +14,7 @@ export function keepGround(
   client: StudyClient,
   read: ReadGround,
   onGround: () => void,
-): () => void {
+): { again(): void } {
   let latest = ''
   let round = 0
   const look = async () => {
@@ -57,10 +46,15 @@ export function keepGround(
       if (mine === round) ground.setState({ ...NO_GROUND, state: 'failed', trouble: sentenceOf(error), missing })
     }
   }
-  const stops = [study.subscribe(look), given.subscribe(look)]
+  study.subscribe(look)
+  given.subscribe(look)
   void look()
-  return () => {
-    for (const stop of stops) stop()
+  return {
+    /** Reads the files once more: a candidate may have left the window that was read of a very large file. */
+    again() {
+      latest = ''
+      void look()
+    },
   }
 }
 
@@ -74,7 +68,7 @@ const serialOf = (blob: Blob | undefined): number => {
 }
 /** Everything the ground is made from: what the study states about its files, and which files these are. */
 function groundKey(doc: StudyDoc, files: ReadonlyMap<string, GivenFile>): string {
-  const names = [...doc.terrain.map((t) => t.file), doc.landCover?.file, doc.obstacles?.file, doc.roads?.file]
+  const names = [...doc.terrain.map((t) => t.file), doc.landCover?.file, doc.obstacles?.file, doc.roads?.file, doc.tables?.lowAngleLand]
   const blobs = names.map((n) => serialOf(n === undefined ? undefined : files.get(n)?.blob))
-  return JSON.stringify([doc.terrain, doc.landCover, doc.uniformTerrain, doc.obstacles, doc.roads, blobs])
+  return JSON.stringify([doc.terrain, doc.landCover, doc.uniformTerrain, doc.obstacles, doc.roads, doc.tables, blobs])
 }

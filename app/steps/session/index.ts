@@ -1,4 +1,4 @@
 export * from './context.tsx'
-export type { GroundRead, ReadGround } from './groundKeeper.ts'
+export type { ReadGround } from './groundKeeper.ts'
 export { sentenceOf } from './notices.ts'
 export { type Session, startSession } from './session.ts'

@@ -61,14 +61,12 @@ export function keepRunning(
     if (wished !== need) set({ need: wished })
     keepOptions(results, studyOptions(doc))
   }
-  const stops = [
-    study.subscribe(() => {
-      settle()
-      send()
-      void askGround()
-    }),
-    view.subscribe(() => send()),
-  ]
+  study.subscribe(() => {
+    settle()
+    send()
+    void askGround()
+  })
+  view.subscribe(() => send())
   settle()
   return {
     /** A new ground: everything is asked anew. */
@@ -85,9 +83,6 @@ export function keepRunning(
     stop() {
       view.getState().set({ hold: true })
       results.setState({ status: null })
-    },
-    end() {
-      for (const stop of stops) stop()
     },
   }
 }

@@ -45,6 +45,8 @@ export interface Session {
   newStudy(): void
   saveStudy(): void
   savePackage(): Promise<void>
+  /** Reads the ground from its files once more. */
+  readAgain(): void
   run(): void
   stop(): void
 }
@@ -88,6 +90,7 @@ export async function startSession(client: StudyClient, readGround: ReadGround):
     study.getState().load(demo.doc)
     opened(demo.warnings, demo.missing)
   }
+  let readAgain = () => {}
   const session: Session = {
     study,
     files,
@@ -118,11 +121,12 @@ export async function startSession(client: StudyClient, readGround: ReadGround):
         const { doc } = study.getState()
         download(await packStudy(doc, files.getState().files), `${fileStem(doc)}.zip`)
       }),
+    readAgain: () => readAgain(),
     run: runner.run,
     stop: runner.stop,
   }
   await firstStudy(session, saver, shelf, openDemo)
-  keepGround(study, files, ground, client, readGround, runner.onGround)
+  readAgain = keepGround(study, files, ground, client, readGround, runner.onGround).again
   const leave = () => void saver.flush()
   document.addEventListener('visibilitychange', () => document.visibilityState === 'hidden' && leave())
   window.addEventListener('pagehide', leave)

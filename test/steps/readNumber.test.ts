@@ -1,0 +1,38 @@
+import { describe, expect, it } from 'vitest'
+import { allowedAtFace, fieldText, readNumber, readNumbers } from '../../app/ui/readNumber.ts'
+import { limitOf } from '../../core/index.ts'
+
+const GHZ = { unit: 'GHz', size: 1e9 }
+const FT = { unit: 'ft', size: 0.3048 }
+const frequency = limitOf('radar.frequencyHz')
+
+describe('number fields', () => {
+  it('take face units, keep SI', () => {
+    expect(readNumber('2.75', GHZ, frequency)).toEqual({ ok: true, value: 2.75e9 })
+    expect(readNumber('1000', FT)).toEqual({ ok: true, value: 304.8 })
+    expect(fieldText(304.8, FT)).toBe('1000')
+  })
+  it.each([
+    ['2.75 GHz', 2.75e9],
+    ['2,75', 2.75e9],
+    [' 2.75 ', 2.75e9],
+    ['0.1e1', 1e9],
+  ])('read "%s"', (text, value) => expect(readNumber(text, GHZ, frequency)).toEqual({ ok: true, value }))
+  it('read a true minus as it is shown', () => {
+    expect(readNumber(fieldText(-28, { unit: 'dB', size: 1 }), { unit: 'dB', size: 1 })).toEqual({ ok: true, value: -28 })
+  })
+  it('empty is the default again', () => expect(readNumber('  ', GHZ, frequency)).toEqual({ ok: true, value: undefined }))
+  it('say what is allowed, in face units', () => {
+    expect(readNumber('50', GHZ, frequency)).toEqual({ ok: false, why: '50 GHz is outside; give from 0.03 to 40 GHz' })
+    expect(readNumber('two', GHZ, frequency)).toEqual({ ok: false, why: '“two” is no number; give from 0.03 to 40 GHz' })
+    expect(allowedAtFace(limitOf('needs[0].pd')!, { unit: '', size: 1 })).toBe('give above 0 and below 1')
+  })
+  it('refuse what can be read two ways', () => expect(readNumber('1,000', FT).ok).toBe(false))
+  it('lists', () => {
+    expect(readNumbers('8, 15; 24 32', { unit: 'm', size: 1 }, limitOf('candidates[0].mastHeightsM[0]'))).toEqual({
+      ok: true,
+      values: [8, 15, 24, 32],
+    })
+    expect(readNumbers('8, -5', { unit: 'm', size: 1 }, limitOf('candidates[0].mastHeightsM[0]')).ok).toBe(false)
+  })
+})
