@@ -1,5 +1,5 @@
 /** Land cover of the island in WorldCover class numbers: sea, beach and pine belt, fields with shelter belts, marsh, woods on the slopes, bare tops, towns. */
-import { type Island, POSTING_M, type Point, SIDE_KM } from './island.ts'
+import { type Island, NORTH_KM, POSTING_M, type Point, WEST_KM } from './island.ts'
 import { chance, fbm, noise, smoothstep } from './noise.ts'
 import { CANDIDATES, TOWNS } from './places.ts'
 
@@ -40,8 +40,8 @@ export function coverIsland(island: Island): Uint8Array {
     if (!isLand[cell]) continue
     const row = Math.floor(cell / width)
     const col = cell - row * width
-    const x = ((col + 0.5) * POSTING_M) / 1000 - SIDE_KM / 2
-    const y = SIDE_KM / 2 - ((row + 0.5) * POSTING_M) / 1000
+    const x = WEST_KM + ((col + 0.5) * POSTING_M) / 1000
+    const y = NORTH_KM - ((row + 0.5) * POSTING_M) / 1000
     const h = heightM[cell]
     const dx = (heightM[cell + 1] - heightM[cell - 1]) / (2 * POSTING_M)
     const dy = (heightM[cell + width] - heightM[cell - width]) / (2 * POSTING_M)

@@ -10,8 +10,10 @@ export interface Island {
   readonly inlandKm: Float32Array
 }
 
-/** Side of the square raster, km, and its finest posting, m. */
+/** Side of the square raster and where its western and northern edges lie, km; its finest posting, m. Most sea is left where the candidates look. */
 export const SIDE_KM = 90
+export const WEST_KM = -50
+export const NORTH_KM = 41
 export const POSTING_M = 50
 
 export const NEAR_RIDGE: readonly Point[] = [
@@ -43,6 +45,21 @@ const SOUTH_CAPE: readonly Point[] = [
 const NORTH_CAPE: readonly Point[] = [
   [-13.5, 9.6],
   [-17, 12],
+]
+/** Lower arms of the near ridge, reaching onto the plain. */
+const SPURS: readonly (readonly Point[])[] = [
+  [
+    [-1.4, -4.3],
+    [-4.6, -3.4],
+  ],
+  [
+    [-0.8, 7.6],
+    [-4.4, 8.6],
+  ],
+  [
+    [-0.6, 3.2],
+    [1.6, 4.4],
+  ],
 ]
 const INLET: readonly Point[] = [
   [6.5, -27],
@@ -112,7 +129,10 @@ function forcingAt(x: number, y: number, inland: number): readonly [uplift: numb
   const bendY = 1.5 * fbm(x / 5.5, y / 5.5, 3, 211)
   const gap = bump(Math.sqrt((x - GAP[0]) ** 2 + ((y - GAP[1]) * 1.1) ** 2), 2.3)
   const crest = Math.max(0.45, 1 + 0.45 * fbm(x / 3.4, y / 3.4, 2, 202))
-  const ridge = bump(toPath(x + 0.6 * bendX, y + 0.6 * bendY, NEAR_RIDGE), 2) * (1 - 0.93 * gap) * crest
+  const ridgeX = x + 0.9 * bendX
+  const ridgeY = y + 0.9 * bendY
+  const spurs = Math.max(...SPURS.map((spur) => bump(toPath(ridgeX, ridgeY, spur), 1.3)))
+  const ridge = Math.max(bump(toPath(ridgeX, ridgeY, NEAR_RIDGE), 2.1), 0.55 * spurs) * (1 - 0.93 * gap) * crest
   const far = bump(toPath(x + 2.2 * bendX, y + 2.2 * bendY, MASSIF), 9.5)
   const massif = far * far * Math.max(0.3, 1 + 0.75 * fbm(x / 6.5, y / 6.5, 3, 205))
   const plain = smoothstep(-1.6, -4.2, x + 0.8 * bendX) * smoothstep(9.6, 6.6, y + 1.8 * bendY) * smoothstep(-11.5, -8.2, y + 1.2 * bendX)
@@ -134,10 +154,10 @@ function shapeAt(cellM: number): { land: Land; forcing: Forcing; inlandKm: Float
   const forcing: Forcing = { uplift: new Float64Array(n), wear: new Float64Array(n) }
   const inlandKm = new Float32Array(n).fill(-9)
   for (let row = 1; row < width - 1; row++) {
-    const y = SIDE_KM / 2 - ((row + 0.5) * cellM) / 1000
+    const y = NORTH_KM - ((row + 0.5) * cellM) / 1000
     for (let col = 1; col < width - 1; col++) {
-      const x = ((col + 0.5) * cellM) / 1000 - SIDE_KM / 2
-      if (Math.abs(x) > 36 || Math.abs(y) > 31) continue
+      const x = WEST_KM + ((col + 0.5) * cellM) / 1000
+      if (x < -28 || x > 36 || Math.abs(y) > 29) continue
       const cell = row * width + col
       const inland = coastKm(x, y)
       inlandKm[cell] = inland
@@ -153,14 +173,14 @@ function shapeAt(cellM: number): { land: Land; forcing: Forcing; inlandKm: Float
 }
 
 /** Heights of a coarser run as the start of a finer one, read a little aside so that no straight grid line survives. */
-function refine(coarse: Land, fine: Land): void {
+function refine(coarse: Land, fine: Land, roughM: number, roughKm: number): void {
   const ratio = fine.cellM / coarse.cellM
   for (let row = 1; row < fine.height - 1; row++) {
     for (let col = 1; col < fine.width - 1; col++) {
       const cell = row * fine.width + col
       if (!fine.isLand[cell]) continue
-      const aside = 0.55 * noise((col * ratio) / 2.3, (row * ratio) / 2.3, 302)
-      const along = 0.55 * noise((col * ratio) / 2.3, (row * ratio) / 2.3, 303)
+      const aside = 1.1 * fbm((col * ratio) / 4, (row * ratio) / 4, 2, 302)
+      const along = 1.1 * fbm((col * ratio) / 4, (row * ratio) / 4, 2, 303)
       const c = (col + 0.5) * ratio - 0.5 + aside
       const r = (row + 0.5) * ratio - 0.5 + along
       const c0 = Math.floor(c)
@@ -169,7 +189,10 @@ function refine(coarse: Land, fine: Land): void {
       const h = coarse.heightM
       const top = mix(h[at], h[at + 1], c - c0)
       const bottom = mix(h[at + coarse.width], h[at + coarse.width + 1], c - c0)
-      fine.heightM[cell] = Math.max(0.3, mix(top, bottom, r - r0))
+      const x = WEST_KM + ((col + 0.5) * fine.cellM) / 1000
+      const y = NORTH_KM - ((row + 0.5) * fine.cellM) / 1000
+      const swell = roughM * fbm(x / roughKm, y / roughKm, 4, 304)
+      fine.heightM[cell] = Math.max(0.3, mix(top, bottom, r - r0) + swell)
     }
   }
 }
@@ -177,16 +200,16 @@ function refine(coarse: Land, fine: Land): void {
 /** What running water does not make: dunes behind the beach, cliffs, a little roughness on steep rock. */
 function finish(land: Land, inlandKm: Float32Array): void {
   for (let row = 1; row < land.height - 1; row++) {
-    const y = SIDE_KM / 2 - ((row + 0.5) * land.cellM) / 1000
+    const y = NORTH_KM - ((row + 0.5) * land.cellM) / 1000
     for (let col = 1; col < land.width - 1; col++) {
       const cell = row * land.width + col
       if (!land.isLand[cell]) continue
-      const x = ((col + 0.5) * land.cellM) / 1000 - SIDE_KM / 2
+      const x = WEST_KM + ((col + 0.5) * land.cellM) / 1000
       const inland = inlandKm[cell]
       const h = land.heightM[cell]
       const beach = smoothstep(-12.5, -14, x) * smoothstep(8, 6.5, y) * smoothstep(-10, -8.5, y)
       const dunes =
-        beach * (bump(inland - 0.45, 0.4) * 8 + bump(inland - 0.95, 0.35) * 5) * (0.55 + 0.75 * ridged(x / 0.7, y / 1.6, 3, 401))
+        beach * (bump(inland - 0.45, 0.4) * 11 + bump(inland - 0.95, 0.35) * 7) * (0.55 + 0.75 * ridged(x / 0.7, y / 1.6, 3, 401))
       const cape = Math.max(
         bump(toPath(x, y, SOUTH_CAPE), 4),
         bump(toPath(x, y, NORTH_CAPE), 4),
@@ -196,8 +219,7 @@ function finish(land: Land, inlandKm: Float32Array): void {
       )
       const cliff = cape * (1 - beach) * smoothstep(0, 0.22, inland) * (8 + 16 * smoothstep(-0.35, 0.5, noise(x / 3.5, y / 3.5, 402)))
       const rock = smoothstep(120, 500, h) * 26 * (ridged(x / 0.9, y / 0.9, 4, 403) - 0.35)
-      const swell = (1.2 * fbm(x / 0.8, y / 0.8, 3, 404) + 5 * fbm(x / 2.6, y / 2.6, 3, 405)) * smoothstep(0.3, 1.5, inland)
-      land.heightM[cell] = Math.max(0.5, h + dunes + cliff + rock + swell)
+      land.heightM[cell] = Math.max(0.5, h + dunes + cliff + rock)
     }
   }
 }
@@ -206,15 +228,16 @@ function finish(land: Land, inlandKm: Float32Array): void {
 export function makeIsland(): Island {
   let last = shapeAt(300)
   for (let step = 0; step < 130; step++) wearDown(last.land, last.forcing, 0.06, 5e4)
-  for (const [cellM, steps, timeStep] of [
-    [150, 26, 0.03],
-    [POSTING_M, 7, 0.012],
+  for (const [cellM, steps, timeStep, roughM, roughKm] of [
+    [150, 26, 0.03, 9, 2.4],
+    [POSTING_M, 7, 0.012, 3, 0.9],
   ] as const) {
     const next = shapeAt(cellM)
-    refine(last.land, next.land)
+    refine(last.land, next.land, roughM, roughKm)
     for (let step = 0; step < steps; step++) wearDown(next.land, next.forcing, timeStep, 2.5e4)
     last = next
   }
+  const rivers = drainage(last.land)
   finish(last.land, last.inlandKm)
-  return { land: last.land, drainage: drainage(last.land), inlandKm: last.inlandKm }
+  return { land: last.land, drainage: rivers, inlandKm: last.inlandKm }
 }

@@ -30,22 +30,23 @@ export function hash(ix: number, iy: number, salt: number): number {
 /** Uniform number in [0, 1) of a lattice point. */
 export const chance = (ix: number, iy: number, salt: number): number => hash(ix, iy, salt) / 4294967296
 
+function slopeOf(ix: number, iy: number, salt: number, dx: number, dy: number): number {
+  const k = hash(ix, iy, salt) & (GRADIENTS - 1)
+  return gradX[k] * dx + gradY[k] * dy
+}
+
 /** Gradient noise, about −1…1, feature size 1. */
 export function noise(x: number, y: number, salt: number): number {
   const ix = Math.floor(x)
   const iy = Math.floor(y)
   const fx = x - ix
   const fy = y - iy
-  const corner = (dx: number, dy: number) => {
-    const k = hash(ix + dx, iy + dy, salt) & (GRADIENTS - 1)
-    return gradX[k] * (fx - dx) + gradY[k] * (fy - dy)
-  }
   const u = fx * fx * fx * (fx * (fx * 6 - 15) + 10)
   const v = fy * fy * fy * (fy * (fy * 6 - 15) + 10)
-  const a = corner(0, 0)
-  const b = corner(1, 0)
-  const c = corner(0, 1)
-  const d = corner(1, 1)
+  const a = slopeOf(ix, iy, salt, fx, fy)
+  const b = slopeOf(ix + 1, iy, salt, fx - 1, fy)
+  const c = slopeOf(ix, iy + 1, salt, fx, fy - 1)
+  const d = slopeOf(ix + 1, iy + 1, salt, fx - 1, fy - 1)
   return 1.6 * (a + u * (b - a) + v * (c - a) + u * v * (a - b - c + d))
 }
 

@@ -42,15 +42,15 @@ export const CANDIDATES: readonly Place[] = [
   {
     id: 'B',
     name: 'Hask shoulder',
-    at: [-3.1, -5.8],
+    at: [-1.0, -5.0],
     mastHeightsM: [10, 20, 35],
     clearingRadiusM: 100,
-    notes: 'Shoulder of the Long Hask above the plain. Track to be built.',
+    notes: 'High on the Long Hask. Sees both ways: the approach, and all the mountains behind. Track to be built.',
   },
   {
     id: 'C',
     name: 'Corlan Head',
-    at: [-11.4, -11.6],
+    at: [-15.0, -13.8],
     mastHeightsM: [10, 20, 35],
     clearingRadiusM: 100,
     notes: 'Cliff top beside the old light. No mains power.',
@@ -120,7 +120,7 @@ export const WAYS: readonly Way[] = [
     straight: true,
     via: [
       [-10.4, -2.06],
-      [-0.4, -1.4],
+      [-2.4, -1.532],
     ],
   },
   {
@@ -129,7 +129,7 @@ export const WAYS: readonly Way[] = [
     maxspeedKmh: 110,
     straight: false,
     via: [
-      [-0.4, -1.4],
+      [-2.4, -1.532],
       [4.6, -2.2],
     ],
   },

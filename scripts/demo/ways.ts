@@ -1,5 +1,5 @@
 /** Roads and rails: the easiest way over the ground between the points given, on a coarse lattice, then rounded off. */
-import { type Island, type Point, SIDE_KM } from './island.ts'
+import { type Island, NORTH_KM, type Point, SIDE_KM, WEST_KM } from './island.ts'
 import type { Way } from './places.ts'
 
 const CELL_KM = 0.25
@@ -27,17 +27,17 @@ const MOVES: readonly Point[] = [
 /** Height at a place, m; NaN at sea. */
 export function heightAt(island: Island, [x, y]: Point): number {
   const { land } = island
-  const col = Math.floor(((x + SIDE_KM / 2) * 1000) / land.cellM)
-  const row = Math.floor(((SIDE_KM / 2 - y) * 1000) / land.cellM)
+  const col = Math.floor(((x - WEST_KM) * 1000) / land.cellM)
+  const row = Math.floor(((NORTH_KM - y) * 1000) / land.cellM)
   const cell = row * land.width + col
   return land.isLand[cell] ? land.heightM[cell] : Number.NaN
 }
 
-const middle = (node: number): Point => [((node % N) + 0.5) * CELL_KM - SIDE_KM / 2, SIDE_KM / 2 - (Math.floor(node / N) + 0.5) * CELL_KM]
-const nodeOf = ([x, y]: Point): number => Math.floor((SIDE_KM / 2 - y) / CELL_KM) * N + Math.floor((x + SIDE_KM / 2) / CELL_KM)
+const middle = (node: number): Point => [WEST_KM + ((node % N) + 0.5) * CELL_KM, NORTH_KM - (Math.floor(node / N) + 0.5) * CELL_KM]
+const nodeOf = ([x, y]: Point): number => Math.floor((NORTH_KM - y) / CELL_KM) * N + Math.floor((x - WEST_KM) / CELL_KM)
 
 /** Cheapest chain of lattice points, steepness dear and water closed. Levels are taken in whole buckets of cost, lowest first. */
-function easiest(heights: Float64Array, from: Point, to: Point): Point[] {
+function easiest(heights: Float64Array, from: Point, to: Point, steepness: number): Point[] {
   const start = nodeOf(from)
   const goal = nodeOf(to)
   const cost = new Float64Array(N * N).fill(Number.POSITIVE_INFINITY)
@@ -54,7 +54,7 @@ function easiest(heights: Float64Array, from: Point, to: Point): Point[] {
         if (Number.isNaN(heights[next])) continue
         const length = Math.sqrt(dx * dx + dy * dy)
         const slope = Math.abs(heights[next] - heights[node]) / (length * CELL_KM * 1000)
-        const reached = cost[node] + length * (1 + 900 * slope * slope + 6 * slope)
+        const reached = cost[node] + length * (1 + steepness * (900 * slope * slope + 6 * slope))
         if (reached >= cost[next]) continue
         cost[next] = reached
         back[next] = node
@@ -68,10 +68,10 @@ function easiest(heights: Float64Array, from: Point, to: Point): Point[] {
   return [from, ...chain]
 }
 
-/** Cuts corners twice: straights stay, bends become curves. */
+/** Cuts corners three times: straights stay, bends become curves. */
 function rounded(path: readonly Point[]): Point[] {
   let points = [...path]
-  for (let turn = 0; turn < 2; turn++) {
+  for (let turn = 0; turn < 3; turn++) {
     const next: Point[] = [points[0]]
     for (let k = 1; k < points.length; k++) {
       const [ax, ay] = points[k - 1]
@@ -109,7 +109,9 @@ export function layWays(island: Island, ways: readonly Way[]): Point[][] {
   for (let node = 0; node < heights.length; node++) heights[node] = heightAt(island, middle(node))
   return ways.map((way) => {
     if (way.straight) return [...way.via]
-    const path = way.via.slice(1).flatMap((to, k) => easiest(heights, way.via[k], to).slice(k === 0 ? 0 : 1))
-    return thinned(rounded(path), 0.012)
+    // Fast roads and rails go through cuttings rather than round every rise.
+    const steepness = way.highway === 'motorway' || way.highway === 'rail' ? 0.2 : 1
+    const legs = way.via.slice(1).map((to, k) => thinned(easiest(heights, way.via[k], to, steepness), 0.13))
+    return thinned(rounded(legs.flatMap((leg, k) => leg.slice(k === 0 ? 0 : 1))), 0.008)
   })
 }
