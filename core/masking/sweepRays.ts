@@ -8,9 +8,9 @@ import { heldRunner } from './sightPoint.ts'
 import { makeSightRun } from './sightRun.ts'
 
 /** Cells of chosen rays, packed as in SiteCells and SightCells: index i * cells + j for azimuth i and centre j. */
-export interface RayCells {
+export interface SweptRays {
   readonly azimuthsDeg: readonly number[]
-  readonly centresM: readonly number[]
+  readonly centresM: Float64Array
   readonly cellM: number
   readonly siteGroundM: number
   readonly effectiveRadiusM: Float64Array
@@ -36,7 +36,7 @@ export function sweepRays(
   azimuthsDeg: readonly number[],
   centresM: readonly number[],
   cellM: number,
-): RayCells {
+): SweptRays {
   const n = centresM.length
   const cells = azimuthsDeg.length * n
   const cuts = cutsAround(centresM, cellM)
@@ -50,7 +50,7 @@ export function sweepRays(
   const centres = Float64Array.from(centresM)
   const out = {
     azimuthsDeg,
-    centresM,
+    centresM: centres,
     cellM,
     siteGroundM: r.siteGroundM,
     effectiveRadiusM: new Float64Array(azimuthsDeg.length),
