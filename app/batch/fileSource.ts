@@ -18,7 +18,7 @@ export function fileFault(error: unknown, path: string, place?: string): InputEr
     file: basename(path),
     ...(place === undefined ? {} : { place }),
     found,
-    remedy: 'give the name of a readable file, relative to the study file',
+    remedy: place?.startsWith('--') ? 'give the name of a readable file' : 'give the name of a readable file, relative to the study file',
   })
 }
 

@@ -122,6 +122,7 @@ function noteOf(s: SightPoint, c: PointClutter | null): string {
   const notes: string[] = []
   if (s.unknown !== null) notes.push(UNKNOWN[s.unknown])
   if (s.marginal) notes.push('marginal: masked by less than the error band')
-  for (const { mark, about } of c?.notes ?? []) notes.push(`${mark}: ${about}`)
+  const hasClutter = c !== null && (c.strengthDb !== null || c.rcsDbsm !== null || c.cnrDb !== null)
+  if (hasClutter) for (const { mark, about } of c.notes) notes.push(`${mark}: ${about}`)
   return notes.join('; ')
 }
