@@ -14,7 +14,9 @@ export interface GainTable {
 }
 
 const TABLE_TO = 0.6
-const MOST_ENTRIES = 32_768
+/** Entries: 0.004° apart, closer where a beam or the rows of a pattern are narrow. */
+const FEWEST_ENTRIES = 16_384
+const MOST_ENTRIES = 65_536
 
 /** Builds the table: entries dense against the beamwidth or the rows of a stated pattern. Throws InputError for a pattern that is refused. */
 export function clutterGainTable(antenna: AntennaInput, tiltDeg: number = antenna.tiltDeg): GainTable {
@@ -25,7 +27,8 @@ export function clutterGainTable(antenna: AntennaInput, tiltDeg: number = antenn
       if (i > 0) scaleDeg = Math.min(scaleDeg, (row[0] - rows[i - 1][0]) * 3)
     })
   else scaleDeg = Math.min(scaleDeg, antenna.elevationBeamwidthDeg)
-  const count = Math.min(MOST_ENTRIES, Math.ceil((2 * TABLE_TO) / ((scaleDeg / 200) * RAD_PER_DEG)) + 1)
+  const wanted = Math.ceil((2 * TABLE_TO) / ((scaleDeg / 120) * RAD_PER_DEG)) + 1
+  const count = Math.min(MOST_ENTRIES, Math.max(FEWEST_ENTRIES, wanted))
   const values = new Float64Array(count)
   const perUnit = (count - 1) / (2 * TABLE_TO)
   for (let i = 0; i < count; i++) values[i] = exactTwoWay(antenna, tiltDeg, i / perUnit - TABLE_TO)

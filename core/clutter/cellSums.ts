@@ -17,6 +17,8 @@ export interface CellModel {
   readonly antennaM: number
   readonly strength: StrengthTable
   readonly gain: GainTable
+  /** Cells nearer than this do not count as used, m. */
+  readonly nearestM: number
 }
 
 /**
@@ -42,17 +44,24 @@ export function elevationTangent(antennaM: number, heightM: number, rangeM: numb
 
 /**
  * Clutter of the cells of row i per metre of gate and radian of azimuth: σ°F⁴ × share in sight × slant range × sec ψ, ψ the depression at the
- * ground, m. With two-way elevation gain into `patterned`, without into `plain` (null = not wanted). Returns the note bits met.
+ * ground, m. With two-way elevation gain into `patterned`, without into `plain` (null = not wanted). Adds the ground in sight that took each
+ * entry of the strength table to `use` (in proportion to area).
  */
-export function cellClutter(model: CellModel, cells: CellRows, i: number, patterned: Float64Array, plain: Float64Array | null): number {
-  const { antennaM, strength, gain } = model
-  const { edgesRad, bands, sigma, noteBits } = strength
+export function cellClutter(
+  model: CellModel,
+  cells: CellRows,
+  i: number,
+  patterned: Float64Array,
+  plain: Float64Array | null,
+  use: Float64Array,
+): void {
+  const { antennaM, strength, gain, nearestM } = model
+  const { edgesRad, bands, sigma } = strength
   const { groundM, code, relief, inSight, centresM } = cells
   const ranges = centresM.length
   const c = 1 / cells.effectiveRadiusM[i]
   const from = i * ranges
   let band = bands >> 1
-  let bits = 0
   for (let j = 0; j < ranges; j++) {
     const at = from + j
     const seen = inSight[at]
@@ -66,13 +75,12 @@ export function cellClutter(model: CellModel, cells: CellRows, i: number, patter
     const depression = (antennaM - ground) / r - 0.5 * r * c
     band = bandOf(edgesRad, depression, band)
     const entry = (code[at] * 4 + reliefSlot(relief[at])) * bands + band
-    bits |= noteBits[entry]
+    if (r >= nearestM) use[entry] += r * seen
     const slant = Math.sqrt(slantSquared(antennaM, ground, r, c) * (1 + depression * depression))
     const value = sigma[entry] * seen * (1 / 65535) * slant
     if (plain) plain[j] = value
     patterned[j] = value === 0 ? 0 : value * twoWayGain(gain, elevationTangent(antennaM, ground, r, c))
   }
-  return bits
 }
 
 /**

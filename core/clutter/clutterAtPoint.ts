@@ -67,10 +67,11 @@ export function pointClutter(
     antennaM: electricalCentreM(site, siteGround(g, site), heightM),
     strength: strengthTable(g.codes, r.frequencyHz, table),
     gain: clutterGainTable(r.antenna, tiltDeg),
+    nearestM: minimumRangeM(r),
   }
-  const { antennaM } = model
+  const { antennaM, nearestM } = model
+  const entries = model.strength.sigma.length
   const constant = fromDb(radarConstantDb(r))
-  const nearestM = minimumRangeM(r)
   const gateM = gateLengthM(r)
   const weights = gateWeights(gateM, grid.rangeStepM)
   const half = weights.length >> 1
@@ -103,10 +104,11 @@ export function pointClutter(
     const azimuths = Array.from({ length: grid.azimuths }, (_, i) => i * grid.azimuthStepDeg)
     const { rows, state, gate, middle } = around(azimuths, (j + 0.5) * grid.rangeStepM)
     const row = new Float64Array(gate.length)
+    const use = new Float64Array(entries)
     let sum = 0
     let known = 0
     for (let i = 0; i < azimuths.length; i++) {
-      cellClutter(model, rows, i, row, null)
+      cellClutter(model, rows, i, row, null, use)
       const at = i * gate.length + middle
       if (isUnknown(state[at])) continue
       const r2 = slantSquared(antennaM, rows.groundM[at], rows.centresM[middle], 1 / rows.effectiveRadiusM[i])
@@ -140,7 +142,7 @@ export function pointClutter(
 
     const patterned = new Float64Array(cells)
     const plain = new Float64Array(cells)
-    let bits = 0
+    const use = new Float64Array(entries)
     let rcsM2 = 0
     let main = 0
     let share = 0
@@ -148,7 +150,7 @@ export function pointClutter(
     const depression = (antennaM - groundM) / rangeM - 0.5 * rangeM * c
     const cellAreaM2 = slantRangeM * beamRad * gateM * Math.sqrt(1 + depression * depression)
     for (let n = 0; n < kernel.length; n++) {
-      bits |= cellClutter(model, rows, n, patterned, plain)
+      cellClutter(model, rows, n, patterned, plain, use)
       const at0 = n * cells
       const r2 = slantSquared(antennaM, rows.groundM[at0 + middle], rangeM, 1 / rows.effectiveRadiusM[n])
       for (let k = 0; k < cells; k++) {
@@ -181,8 +183,8 @@ export function pointClutter(
       shareInSight: share,
       spread: rcsM2 > 0 ? spreadSum / rcsM2 : null,
     }
-    const notes = optionNotes(model, bits, earth)
-    for (const note of own?.notes ?? []) if (!notes.includes(note)) notes.push(note)
+    const notes = optionNotes(model, use, earth)
+    for (const note of own?.notes ?? []) if (!notes.some((n) => n.about === note.about)) notes.push(note)
     if (unstated) notes.push({ mark: 'default', about: 'land cover not stated' })
     return { ...numbers, lines: clutterLines(numbers, r, table), notes }
   }

@@ -12,7 +12,7 @@ import { type CellModel, type CellRows, cellClutter, gateSums, gateWeights, slan
 import { decibel } from './decibelTable.ts'
 import type { LandTable } from './landTable.ts'
 import { BUILT_IN_LAND_TABLE } from './landTableData.ts'
-import { notesOf, strengthTable } from './strengthTable.ts'
+import { notesInUse, strengthTable } from './strengthTable.ts'
 import type { ClutterCells, ModelNote } from './types.ts'
 
 export interface ClutterOptions {
@@ -34,10 +34,10 @@ export const centresOf = (grid: PolarShape): Float64Array =>
 /** Electrical centre, m MSL: stated ground or that of the raster, plus mast height. */
 export const electricalCentreM = (site: Site, siteGroundM: number, heightM: number): number => (site.groundHeightM ?? siteGroundM) + heightM
 
-/** The words that hold for a whole option, from the bits its cells met. */
-export function optionNotes(model: CellModel, bits: number, earth: Earth): ModelNote[] {
+/** The words that hold for a whole option, from the entries of the strength table its cells took. */
+export function optionNotes(model: CellModel, use: Float64Array, earth: Earth): ModelNote[] {
   const k = earth.effectiveEarthFactor
-  return k > 0 && k <= 10 ? notesOf(model.strength, bits) : [...notesOf(model.strength, bits), NOTE_FLAT]
+  return k > 0 && k <= 10 ? notesInUse(model.strength, use) : [...notesInUse(model.strength, use), NOTE_FLAT]
 }
 
 /** Side lobes all round against the main beam: two-way level × 360°/θ, ratio. */
@@ -69,10 +69,10 @@ export function* clutterToNoise(
     antennaM: electricalCentreM(site, s.siteGroundM, heightM),
     strength: strengthTable(codes, r.frequencyHz, options.landTable ?? BUILT_IN_LAND_TABLE),
     gain: clutterGainTable(r.antenna, tiltDeg),
+    nearestM: minimumRangeM(r),
   }
-  const { antennaM } = model
+  const { antennaM, nearestM } = model
   const constant = fromDb(radarConstantDb(r))
-  const nearestM = minimumRangeM(r)
   const rowsPerYield = Math.max(1, Math.floor(CELLS_PER_YIELD / ranges))
   const total = 2 * azimuths
 
@@ -82,9 +82,9 @@ export function* clutterToNoise(
   const sums = new Float64Array(ranges)
   const gates = new Float32Array(azimuths * ranges)
   const ring: Ring = { sum: new Float64Array(ranges), count: new Uint32Array(ranges) }
-  let bits = 0
+  const use = new Float64Array(model.strength.sigma.length)
   for (let i = 0; i < azimuths; i++) {
-    bits |= cellClutter(model, cells, i, row, null)
+    cellClutter(model, cells, i, row, null, use)
     gateSums(row, weights, sums)
     gatesOfRow(sums, i, cells, m.state, antennaM, nearestM, constant, gates, ring)
     if ((i + 1) % rowsPerYield === 0) yield { done: i + 1, total }
@@ -109,7 +109,7 @@ export function* clutterToNoise(
     tiltDeg,
     cnrDb,
     sideLobeCnrDb: Float32Array.from(sideLobe, decibel),
-    notes: optionNotes(model, bits, earth),
+    notes: optionNotes(model, use, earth),
   }
 }
 

@@ -65,8 +65,15 @@ export function bandOf(edgesRad: Float64Array, depressionRad: number, guess: num
   return b
 }
 
-/** The notes whose bits are set, after those that always hold. */
-export const notesOf = (t: StrengthTable, bits: number): ModelNote[] => [...t.always, ...t.notes.filter((_, i) => (bits >>> i) & 1)]
+/** The notes that always hold, then those of the entries in use, each with its share of the ground in sight. */
+export function notesInUse(t: StrengthTable, use: Float64Array): ModelNote[] {
+  const all = use.reduce((sum, u) => sum + u, 0)
+  const some = t.notes.flatMap((note, n) => {
+    const share = use.reduce((sum, u, entry) => sum + ((t.noteBits[entry] >>> n) & 1 ? u : 0), 0) / all
+    return share > 0 ? [{ ...note, share }] : []
+  })
+  return [...t.always, ...some]
+}
 
 /**
  * Mean σ°F⁴, dB, by ground code, relief and depression in degrees; NaN where nothing is assessed (water) or the code is unknown. Throws

@@ -18,4 +18,6 @@ export type ModelMark = 'default' | 'outside model' | 'by hand' | 'from memory'
 export interface ModelNote {
   readonly mark: ModelMark
   readonly about: string
+  /** Share of the ground in sight it holds for, 0…1, where it does not hold for all. */
+  readonly share?: number
 }
