@@ -92,7 +92,7 @@ export function MapPane(props: MapPaneProps) {
           <Sentence show={show} candidates={candidates} needs={props.needs} trial={trial} onShow={props.onShow} onSelect={props.onSelect} />
           {props.progress ? <Progress progress={props.progress} onStop={props.onStop} /> : null}
           {trouble ? (
-            <p className="card trouble" role="alert">
+            <p className="map-card trouble" role="alert">
               {trouble}
               <Button className="button quiet small" onPress={() => setTrouble(null)}>
                 {MAP_WORDS.close}
@@ -111,7 +111,7 @@ export function MapPane(props: MapPaneProps) {
       </div>
       {empty && props.empty ? <div className="map-empty">{props.empty}</div> : null}
       <div className="map-foot">
-        {empty ? <span /> : <Legend layer={show.layer} units={units} night={night} marks={legendMarks(props.marks)} />}
+        {empty ? <span /> : <Legend layer={show.layer} units={units} night={night} marks={props.marks} />}
         <div className="map-corner">
           {empty ? null : <ScaleBar view={view} units={units} />}
           {empty ? null : <ReadOut client={props.client} hub={hub} site={site} units={units} hint={hint} />}
@@ -140,8 +140,6 @@ function LowerChart({ children, onClose }: { children: MapPaneProps['lower']; on
     </div>
   )
 }
-
-const legendMarks = (marks: MapPaneProps['marks']): string[] => [...new Set(marks.map((m) => `${m.about} ${m.mark}`.trim()))]
 
 /** Size of the stage, and the first view once ground or candidate is there. */
 function useFirstFit(
@@ -174,7 +172,7 @@ function useFirstFit(
     return () => watch.disconnect()
   }, [stage, camera, once])
   // biome-ignore lint/correctness/useExhaustiveDependencies: a new ground is looked at whole
-  useEffect(once, [props.groundSerial, props.corners])
+  useLayoutEffect(once, [props.groundSerial, props.corners])
 }
 
 /** Where cards lie over the map, so that ring labels keep clear of them. */
@@ -185,7 +183,7 @@ function useCards(stage: React.RefObject<HTMLDivElement | null>, view: View, lay
     const host = stage.current
     const box = host?.getBoundingClientRect()
     if (!host?.parentElement || !box) return
-    const found = [...host.parentElement.querySelectorAll('.card, .map-lower')].map((card) => {
+    const found = [...host.parentElement.querySelectorAll('.map-card, .map-lower')].map((card) => {
       const r = card.getBoundingClientRect()
       return { left: r.left - box.left - 4, top: r.top - box.top - 4, right: r.right - box.left + 4, bottom: r.bottom - box.top + 4 }
     })

@@ -20,7 +20,7 @@ export function Ruler(props: RulerProps) {
   const box = useRef<HTMLDivElement>(null)
   const [size, setSize] = useState({ width: 0, height: 0 })
   const trial = useChannel(hub.trial)
-  const ladder = useLadder(client, candidate?.id ?? null, props.resultSerial)
+  const ladder = useLadder(client, groundM === null ? null : (candidate?.id ?? null), props.resultSerial)
   const helpId = useId()
   // biome-ignore lint/correctness/useExhaustiveDependencies: the box is there only with a candidate
   useLayoutEffect(() => {

@@ -113,6 +113,23 @@ export function legendStops(
   return { unit: '', labels: stops.map((v) => ({ at: share(v), text: formatNumber(v, Number.isInteger(v) ? 0 : 1) })) }
 }
 
+const ABOUT_CLUTTER = /clutter|land table/i
+const CLUTTER_LAYERS: readonly LayerId[] = ['clutter-strength', 'clutter-to-noise', 'suppression-needed']
+
+/** The line under a legend, and the marks that stand under it in words: those of the layer itself, then those of the result that concern it. */
+export function legendMarks(
+  layer: LayerId,
+  marks: readonly { readonly mark: string; readonly about: string }[],
+): { readonly note: string; readonly warned: readonly string[] } {
+  const parts = LAYER_WORDS[layer].note.split(' · ')
+  const own = parts.filter((p) => p.includes('from memory'))
+  const concerns = marks.filter((m) => CLUTTER_LAYERS.includes(layer) || !ABOUT_CLUTTER.test(m.about))
+  const others = concerns
+    .filter((m) => !(m.mark === 'from memory' && own.length > 0 && /land/i.test(m.about)))
+    .map((m) => `${(m.about.split(/[:,;(]/)[0] ?? '').trim()} · ${m.mark}`)
+  return { note: parts.filter((p) => !own.includes(p)).join(' · '), warned: [...new Set([...own, ...others])] }
+}
+
 /** Round length for a scale bar at most `mostPx` long: its length in pixels and its words. */
 export function scaleBar(groundPerPx: number, mostPx: number, units: UnitSystem): { px: number; text: string } {
   const most = groundPerPx * mostPx

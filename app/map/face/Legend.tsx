@@ -1,20 +1,32 @@
 import { type LayerId, layerInfo, rampHex } from '../../../core/index.ts'
-import { LAYER_WORDS, legendStops, type UnitSystem } from '../../words/index.ts'
+import { LAYER_WORDS, legendMarks, legendStops, type UnitSystem } from '../../words/index.ts'
+import type { MapPaneProps } from '../types.ts'
 
 const WIDTH = 232
 /** Labels nearer than this to the one before are left out, px. */
 const APART = 26
 
 /** Title, ramp with labelled stops, what bare and hatched mean, and marks in words. */
-export function Legend({ layer, units, night, marks }: { layer: LayerId; units: UnitSystem; night: boolean; marks: readonly string[] }) {
+export function Legend({
+  layer,
+  units,
+  night,
+  marks,
+}: {
+  layer: LayerId
+  units: UnitSystem
+  night: boolean
+  marks: MapPaneProps['marks']
+}) {
   const { ramp, hatchMasked } = layerInfo(layer)
   const words = LAYER_WORDS[layer]
   const { unit, labels } = legendStops(layer, ramp.stops, units)
+  const { note, warned } = legendMarks(layer, marks)
   const colours = Array.from({ length: 33 }, (_, n) => rampHex(ramp, ramp.low + ((ramp.high - ramp.low) * n) / 32, night))
   const kept: { at: number; text: string }[] = []
   for (const l of labels) if (kept.length === 0 || (l.at - kept[kept.length - 1]!.at) * WIDTH >= APART) kept.push(l)
   return (
-    <section className="card legend" aria-label={`Legend: ${words.title}`}>
+    <section className="map-card legend" aria-label={`Legend: ${words.title}`}>
       <h3>
         {words.title} <span className="ink-3">{unit ? `${unit} ${words.of}` : words.of}</span>
       </h3>
@@ -51,10 +63,10 @@ export function Legend({ layer, units, night, marks }: { layer: LayerId; units: 
       {layer === 'masked' ? null : (
         <p className="note">
           {hatchMasked ? <Swatch kind="masked" /> : null}
-          <span>{words.note}</span>
+          <span>{note}</span>
         </p>
       )}
-      {marks.map((m) => (
+      {warned.map((m) => (
         <p key={m} className="mark">
           {m}
         </p>

@@ -6,7 +6,7 @@ import type { RunProgress } from '../types.ts'
 export function Progress({ progress, onStop }: { progress: RunProgress; onStop: () => void }) {
   const pct = progress.total > 0 ? Math.min(100, (100 * progress.done) / progress.total) : 0
   return (
-    <ProgressBar className="card run" value={pct} aria-label={progress.doing}>
+    <ProgressBar className="map-card run" value={pct} aria-label={progress.doing}>
       <span className="doing">
         {progress.doing}
         {progress.secondsLeft === null ? null : (

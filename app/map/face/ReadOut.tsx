@@ -78,7 +78,7 @@ export function ReadOut({
     return stop
   }, [client, hub, site, units, hint])
   return (
-    <div className="card readout">
+    <div className="map-card readout">
       <span ref={place} className="place" />
       <span ref={value} className="value" />
     </div>

@@ -72,7 +72,7 @@ export function Sentence({ show, candidates, needs, trial, onShow, onSelect }: S
   const heights = [...new Set(candidate?.mastHeightsM ?? [])].sort((a, b) => a - b)
   const mast = trial?.moving === 'mast' && trial.candidate === candidate?.id ? trial.heightM : (option?.heightM ?? 0)
   return (
-    <p className="card sentence">
+    <p className="map-card sentence">
       {s.show}{' '}
       <Word
         label={choose.family}

@@ -19,7 +19,7 @@ const FIT_WORDS: Record<FitTo, string> = {
 /** Zoom, fit and base: small, at the map's edge. */
 export function Tools({ onZoom, onFit, fits, base, glReal, onBase }: ToolsProps) {
   return (
-    <div className="tools card">
+    <div className="tools map-card">
       <Button className="tool" aria-label={MAP_WORDS.zoomIn} onPress={() => onZoom(2)}>
         +
       </Button>

@@ -101,7 +101,7 @@ export function RulerScale(p: RulerScaleProps) {
             <title>{textOf(formatMast(s))}</title>
           </path>
         ))}
-        <path className="foot" d={`M${axisX - 12} ${footY}H${right}`} />
+        <path className="foot" d={`M${axisX - 5} ${footY}H${right}`} />
       </g>
       {g.met.map((m, n) => (
         <g key={m.needId} className="met">
@@ -125,7 +125,7 @@ export function RulerScale(p: RulerScaleProps) {
         aria-valuetext={textOf(formatMast(p.heightM))}
         onKeyDown={p.onKeyDown}
       >
-        <path className="line" d={`M${axisX - 14} ${mastY}H${right}`} />
+        <path className="line" d={`M${axisX} ${mastY}H${right}`} />
         <circle cx={axisX} cy={mastY} r={10} className="focus-ring" />
         <circle cx={axisX} cy={mastY} r={6.5} className="grip" />
         <text x={first + 2} y={mastLabelY}>
