@@ -171,7 +171,7 @@ export class Answers {
   // biome-ignore lint/correctness/useYield: an answer that needs no slices
   private *ledger(body: Ask['ledger']): Work<EngineAnswer['ledger']> {
     const { ground, study } = this.engine.ready()
-    return cellLedger(ground, study, body.option, body.at)
+    return cellLedger(ground, study, body.option, body.at, this.engine.landTable)
   }
 
   private *ladder(body: Ask['ladder']): Work<EngineAnswer['ladder']> {
