@@ -64,7 +64,8 @@ function classAt(x: number, y: number, h: number, slope: number, inland: number,
   }
   // Runway of the airfield.
   if (Math.abs(x + 11.9 + 0.35 * (y + 2.4)) < 0.04 && Math.abs(y + 2.4) < 0.95) return COVER.bare
-  const west = smoothstep(-12.5, -14, x) * smoothstep(8.5, 6.5, y) * smoothstep(-10, -8.5, y)
+  const ragged = y + 0.9 * fbm(x / 0.7, y / 0.7, 3, 616)
+  const west = smoothstep(-12.5, -14, x) * smoothstep(8.5, 6.5, ragged) * smoothstep(-10, -8.5, ragged)
   if (west > 0.5) {
     if (inland < 0.09) return COVER.bare
     if (inland < 0.4 + 0.1 * noise(x, y / 0.8, 610)) return noise(x / 0.3, y / 0.3, 611) > 0.1 ? COVER.shrub : COVER.grass

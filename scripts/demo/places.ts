@@ -1,7 +1,7 @@
 /** Where the invented island lies and what stands on it. Kilometres east and north of the island's middle; every name is made up. */
 import type { Point } from './island.ts'
 
-/** WGS 84 / UTM zone 10 south: open South Pacific, nearest land some two thousand kilometres off. */
+/** WGS 84 / UTM zone 10 south: open South Pacific, no land within two thousand kilometres. */
 export const EPSG = 32710
 export const MIDDLE_EAST_M = 612_000
 export const MIDDLE_NORTH_M = 4_728_000
@@ -41,7 +41,7 @@ export const CANDIDATES: readonly Place[] = [
   },
   {
     id: 'B',
-    name: 'Hask shoulder',
+    name: 'Long Hask top',
     at: [-1.0, -5.0],
     mastHeightsM: [10, 20, 35],
     clearingRadiusM: 100,
@@ -76,13 +76,13 @@ const point = (name: string, at: Point, heightM: number, widthM: number, rcsM2: 
 export const STANDERS: readonly Stander[] = [
   point('Long Hask radio mast', [-0.75, 5.2], 84, 3, 150, 0.5),
   point('Vennet airfield tower', [-11.75, -2.75], 24, 9, 300, 0.3),
-  point('Vennet light', [-15.9, -3.4], 31, 6, 120, 0.5),
-  point('Corlan old light', [-12.4, -13.2], 18, 6, 90, 1),
+  point('Vennet light', [-17.9, -1.2], 31, 6, 120, 0.5),
+  point('Corlan old light', [-15.5, -14.15], 18, 6, 90, 1),
   point('Ambry silo north', [-6.6, 3.9], 38, 14, 900, 0.5),
   point('Ambry silo south', [-6.55, 3.8], 38, 14, 900, 0.5),
   point('Quillow silo', [-8.7, -6.7], 34, 12, 700, 1),
   point('Tolvane chimney', [5.9, -4.2], 72, 7, 500, 0.5),
-  point('Tolvane harbour crane', [6.0, -6.0], 46, 10, 1500, 1),
+  point('Tolvane harbour crane', [5.6, -5.75], 46, 10, 1500, 1),
   point('Norrick mast', [3.2, 15.0], 60, 2, 80, 1),
   point('Eddra mast', [22.8, -2.6], 55, 2, 80, 2),
   point('North Cape beacon', [-16.6, 11.4], 22, 4, 60, 1),
@@ -151,7 +151,7 @@ export const WAYS: readonly Way[] = [
     maxspeedKmh: 90,
     straight: false,
     via: [
-      [-11.2, -11.2],
+      [-14.9, -13.7],
       [-13.2, -7.6],
       [-14.2, -4.6],
       [-14.4, 2],
