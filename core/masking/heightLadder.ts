@@ -19,13 +19,12 @@ export const makeHull = (points: number): HullScratch => ({
 const MIDDLE_M = 0.02
 
 /**
- * Height to see of each cell centre along a ray in O(n): the tangent from a place to the upper hull of everything nearer, carried back to the mast. The
- * hull holds the points and the middles of hollow-downward segments; the tangent is then settled in closed form on the two segments at the hull point it
- * touches. Writes metres above the site's ground, at least 0.
+ * Height to see at every second cut (the cell centres of a sweep) along a ray, in O(n): the tangent from a place to the upper hull of everything nearer,
+ * carried back to the mast. The hull holds the points and the middles of hollow-downward segments; the tangent is then settled in closed form on the two
+ * segments at the hull point it touches. Writes metres above the site's ground, at least 0.
  */
 export function heightsToSee(
   p: StraightProfile,
-  centre: Int32Array,
   cells: number,
   siteGroundM: number,
   inverse: number,
@@ -34,47 +33,49 @@ export function heightsToSee(
   out: Float32Array,
   offset: number,
 ): void {
-  const { x, y, slope, bend, bulge, cutPoint } = p
+  const { x, y, bend, cutPoint } = p
   const { x: hx, y: hy, point: hp } = h
-  let n = 1
+  const nearM = ALLOWANCE_REACH * postingM
+  let n = 0
   hx[0] = 0
   hy[0] = siteGroundM / (1 + siteGroundM * inverse)
   hp[0] = 0
-  let j = 0
-  let next = j < cells && centre[j] < p.cuts ? cutPoint[centre[j]] : -1
-  for (let k = 1; k < p.count; k++) {
-    const c = bend[k - 1]
-    if (c < 0) {
-      const half = 0.5 * (x[k] - x[k - 1])
-      if (-c * half * half > MIDDLE_M && half > 0) push(x[k - 1] + half, y[k - 1] + half * (slope[k - 1] + c * half), k - 1)
-    }
-    if (next === k) {
-      const xd = x[k]
-      const yd = y[k]
-      while (n >= 2 && (hy[n - 1] - hy[n - 2]) * (xd - hx[n - 1]) <= (yd - hy[n - 1]) * (hx[n - 1] - hx[n - 2])) n--
-      const q = hp[n - 1]
-      const near = xd - ALLOWANCE_REACH * postingM
-      let least = ((hx[n - 1] >= near ? yd + SIGHT_ALLOWANCE_M : yd) - hy[n - 1]) / (xd - hx[n - 1])
-      for (let s = q > 0 ? q - 1 : 0; s <= q && s < k; s++) least = Math.min(least, touch(s, xd, yd, near))
-      if (bulge[k - 1] > 0) least = Math.min(least, touch(k - 1, xd, yd, near))
-      const heightM = heightOfY(yd - least * xd, 0, inverse) - siteGroundM
-      while (next === k) {
-        out[offset + j] = heightM > 0 ? heightM : 0
-        j++
-        next = j < cells && centre[j] < p.cuts ? cutPoint[centre[j]] : -1
+  let k = 1
+  for (let j = 0; j < cells; j++) {
+    const centre = cutPoint[2 * j]
+    for (; k <= centre; k++) {
+      const px = x[k]
+      const py = y[k]
+      const c = bend[k - 1]
+      if (c < 0) {
+        const half = 0.5 * (px - x[k - 1])
+        const rise = -c * half * half
+        if (rise > MIDDLE_M) {
+          const mx = px - half
+          const my = 0.5 * (py + y[k - 1]) + rise
+          while (n >= 1 && (hy[n] - hy[n - 1]) * (mx - hx[n]) <= (my - hy[n]) * (hx[n] - hx[n - 1])) n--
+          n++
+          hx[n] = mx
+          hy[n] = my
+          hp[n] = k - 1
+        }
       }
+      while (n >= 1 && (hy[n] - hy[n - 1]) * (px - hx[n]) <= (py - hy[n]) * (hx[n] - hx[n - 1])) n--
+      n++
+      hx[n] = px
+      hy[n] = py
+      hp[n] = k
     }
-    push(x[k], y[k], k)
-  }
-
-  function push(px: number, py: number, point: number): void {
-    while (n >= 2 && (hy[n - 1] - hy[n - 2]) * (px - hx[n - 1]) <= (py - hy[n - 1]) * (hx[n - 1] - hx[n - 2])) n--
-    hx[n] = px
-    hy[n] = py
-    hp[n] = point
-    n++
-  }
-  function touch(s: number, xd: number, yd: number, near: number): number {
-    return touchingSlope(x[s], y[s], slope[s], bend[s], x[s + 1], xd, x[s + 1] >= near ? yd + SIGHT_ALLOWANCE_M : yd)
+    // the centre itself is now the last of the hull: the one before it is what the tangent touches
+    const xd = x[centre]
+    const yd = y[centre]
+    const near = xd - nearM
+    const q = hp[n - 1]
+    const raised = yd + SIGHT_ALLOWANCE_M
+    let least = ((hx[n - 1] >= near ? raised : yd) - hy[n - 1]) / (xd - hx[n - 1])
+    for (let s = q > 0 ? q - 1 : 0; s <= q && s < centre; s++)
+      if (bend[s] < 0) least = Math.min(least, touchingSlope(p, s, xd, x[s + 1] >= near ? raised : yd))
+    if (q < centre - 1 && bend[centre - 1] < 0) least = Math.min(least, touchingSlope(p, centre - 1, xd, raised))
+    out[offset + j] = Math.max(0, heightOfY(yd - least * xd, 0, inverse) - siteGroundM)
   }
 }

@@ -3,11 +3,11 @@ import { NO_TANGENT } from './sightRun.ts'
 import { ALLOWANCE_REACH, SIGHT_ALLOWANCE_M } from './sightState.ts'
 
 /**
- * Y of the lowest antenna from which the last point of a profile is in sight, exact for its segments: the highest of all lines through the point and a
- * place nearer the radar, carried back to the mast, with the allowance of isInSight. `NO_TANGENT` when nothing stands between.
+ * Y of the lowest antenna from which a point of a profile is in sight, exact for its segments: the highest of all lines through the point and a place
+ * nearer the radar, carried back to the mast, with the allowance of isInSight. `NO_TANGENT` when nothing stands between.
  */
 export function lowestAntennaY(p: StraightProfile, point: number, postingM: number): number {
-  const { x, y, slope, bend } = p
+  const { x, y } = p
   const xd = x[point]
   const yd = y[point]
   const raised = yd + SIGHT_ALLOWANCE_M
@@ -20,20 +20,25 @@ export function lowestAntennaY(p: StraightProfile, point: number, postingM: numb
       const s = ((x[j] >= near ? raised : yd) - y[j]) / t
       if (s < least) least = s
     }
-    const touch = touchingSlope(x[j], y[j], slope[j], bend[j], x[j + 1], xd, x[j + 1] >= near ? raised : yd)
+    const touch = touchingSlope(p, j, xd, x[j + 1] >= near ? raised : yd)
     if (touch < least) least = touch
   }
   return least === Number.POSITIVE_INFINITY ? NO_TANGENT : yd - least * xd
 }
 
 /**
- * Slope of the line from (xd, yd) that touches the parabola of a segment from above at a place inside it; Infinity where there is none. At the segment
- * that ends in the point itself it is the surface's own slope there.
+ * Slope of the line from (xd, yd) that touches from above, at a place inside it, the segment that starts at point j; Infinity where there is none. At the
+ * segment that ends in the point itself it is the surface's own slope there.
  */
-export function touchingSlope(x0: number, y0: number, slope: number, bend: number, x1: number, xd: number, yd: number): number {
-  if (!(bend < 0) || !(x1 > x0)) return Number.POSITIVE_INFINITY
+export function touchingSlope(p: StraightProfile, j: number, xd: number, yd: number): number {
+  const bend = p.bend[j]
+  const x0 = p.x[j]
+  const length = p.x[j + 1] - x0
+  if (!(bend < 0) || !(length > 0)) return Number.POSITIVE_INFINITY
+  const y0 = p.y[j]
+  const slope = (p.y[j + 1] - y0) / length - bend * length
   const t0 = xd - x0
-  const t1 = xd - x1
+  const t1 = t0 - length
   // in t = xd − x: y = alpha + beta t + bend t²
   const alpha = y0 + t0 * (slope + bend * t0)
   const beta = -(slope + 2 * bend * t0)

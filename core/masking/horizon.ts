@@ -1,13 +1,15 @@
 import { type Earth, elevationAngleDeg } from '../geodesy/index.ts'
 import type { Ground, Site } from '../terrain/index.ts'
+import { makeCuts } from './profile.ts'
 import { controllingOf, makeRunner, type RayRunner, runRay } from './ray.ts'
+import { RUN } from './sightRun.ts'
 import type { HorizonRow } from './types.ts'
 
 /** Said in place of the controlling point where the ray ends before what was asked. */
 export const AT_LEAST_EDGE = 'at least: edge of terrain'
 export const AT_LEAST_VOID = 'at least: void in terrain'
 
-const NO_CUTS = new Float64Array(0)
+const NO_CUTS = makeCuts(new Float64Array(0))
 
 /**
  * Horizon from one antenna height at chosen azimuths (degrees true), each on its own ray, to maxRangeM or the end of known ground. Exact geometry on the
@@ -25,7 +27,7 @@ export function horizonAt(
   return azimuthsDeg.map((azimuthDeg) => {
     r.tracer.trace(azimuthDeg)
     runRay(r, earth, azimuthDeg, heightM, NO_CUTS)
-    return horizonRow(r, azimuthDeg, r.siteGroundM + heightM, r.run.endTangent, r.run.endControlX)
+    return horizonRow(r, azimuthDeg, r.siteGroundM + heightM, r.run.end[RUN.tangent], r.run.end[RUN.controlX])
   })
 }
 

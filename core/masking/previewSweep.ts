@@ -1,11 +1,14 @@
 import type { Earth } from '../geodesy/index.ts'
-import type { PolarShape } from '../polar/index.ts'
-import { CELL } from '../polar/index.ts'
+import { CELL, type PolarShape } from '../polar/index.ts'
 import type { Ground, Site } from '../terrain/index.ts'
-import { uniformCuts, writeSeen } from './cells.ts'
+import { uniformCuts } from './cells.ts'
 import { horizonRow } from './horizon.ts'
-import { makeRunner, runRay } from './ray.ts'
-import type { HorizonRow, SightCells } from './types.ts'
+import { straighten } from './profile.ts'
+import { makeRunner, setAntenna, setEarth } from './ray.ts'
+import { sightPass } from './sightPass.ts'
+import { RUN } from './sightRun.ts'
+import { makeSight, markUnknown } from './sweep.ts'
+import type { SightCells } from './types.ts'
 
 /**
  * Coarse picture of one height while a candidate is being moved: every n-th azimuth of the grid (the step is widened to a whole number of azimuths),
@@ -16,26 +19,21 @@ export function previewSweep(g: Ground, site: Site, heightM: number, grid: Polar
   const coarse: PolarShape = { ...grid, azimuths, azimuthStepDeg: 360 / azimuths }
   const { ranges } = grid
   const cuts = uniformCuts(ranges, grid.rangeStepM)
-  const r = makeRunner(g, site, ranges * grid.rangeStepM, cuts.cutM.length, coarse.azimuthStepDeg)
-  const cells = azimuths * ranges
-  const mask = {
-    kind: 'sight' as const,
-    version: 1 as const,
-    key: '',
-    grid: coarse,
-    heightM,
-    state: new Uint8Array(cells),
-    inSight: new Uint16Array(cells),
-    floorM: new Float32Array(cells),
-    floorBandM: new Float32Array(cells),
-    horizon: [] as HorizonRow[],
-  }
+  const r = makeRunner(g, site, ranges * grid.rangeStepM, 2 * ranges, coarse.azimuthStepDeg)
+  const mask = makeSight(coarse, heightM, '')
+  const whole = new Uint8Array(ranges)
   for (let i = 0; i < azimuths; i++) {
     const azimuthDeg = i * coarse.azimuthStepDeg
+    const offset = i * ranges
     r.tracer.trace(azimuthDeg)
-    runRay(r, earth, azimuthDeg, heightM, cuts.cutM)
-    writeSeen(r, r.run, cuts, mask, i * ranges, r.tracer.track.unknownWhy === 'void' ? CELL.beyondVoid : CELL.outside)
-    mask.horizon.push(horizonRow(r, azimuthDeg, r.siteGroundM + heightM, r.run.endTangent, r.run.endControlX))
+    setEarth(r, earth, azimuthDeg)
+    straighten(r.tracer.track, r.inverse, cuts, r.profile)
+    const known = Math.min(ranges, (r.profile.cuts + 1) >> 1)
+    whole.fill(0)
+    setAntenna(r, heightM)
+    sightPass(r, cuts, known, whole, r.run.end, mask, offset)
+    markUnknown(mask, offset + known, offset + ranges, r.tracer.track.unknownWhy === 'void' ? CELL.beyondVoid : CELL.outside)
+    mask.horizon.push(horizonRow(r, azimuthDeg, r.siteGroundM + heightM, r.run.end[RUN.tangent], r.run.end[RUN.controlX]))
   }
   return mask
 }

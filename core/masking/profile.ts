@@ -1,135 +1,170 @@
 import type { TracedRay } from '../terrain/index.ts'
 import { straightDrop, straightX } from './straight.ts'
 
+/** Distances a profile is cut at (cell edges and centres), ascending, with their places in the straight plane for one effective radius. */
+export interface Cuts {
+  readonly m: Float64Array
+  readonly x: Float64Array
+  readonly drop: Float64Array
+  /** 1/R the x and drop are made for; -1 before the first. */
+  inverse: number
+}
+export const makeCuts = (m: Float64Array): Cuts => ({ m, x: new Float64Array(m.length), drop: new Float64Array(m.length), inverse: -1 })
+
+/** Puts the cuts into the straight plane of an effective radius, if they are not there already. */
+export function placeCuts(cuts: Cuts, inverse: number): void {
+  if (cuts.inverse === inverse) return
+  const { m, x, drop } = cuts
+  for (let k = 0; k < m.length; k++) {
+    x[k] = straightX(m[k], inverse)
+    drop[k] = straightDrop(m[k], inverse)
+  }
+  cuts.inverse = inverse
+}
+
 /**
- * One ray in the straight plane, shared by all antenna heights: the crossings, and the cuts asked for (cell edges and centres) on the same surface.
- * From point p to the next the surface is Y + slope·(x−X) + bend·(x−X)². Scratch, filled again for each ray.
+ * One ray in the straight plane, shared by all antenna heights: the crossings, and the cuts on the same surface. From point p to the next the surface is
+ * the chord plus bend·(x−X)·(x−X'). Scratch, filled again for each ray.
  */
 export interface StraightProfile {
   count: number
-  x: Float64Array
-  /** 1/X; a very large number at the site itself. */
-  inverseX: Float64Array
-  y: Float64Array
-  /** Slope of the surface at the point, toward the next. */
-  slope: Float64Array
-  bend: Float64Array
-  /** How much the segment that starts here can stand above its ends as an angle tangent; 0 where it cannot. */
-  bulge: Float64Array
-  /** Point of each cut (-1: beyond what is known), and ground there: height, slope along the ray. Surface height too. */
-  cutPoint: Int32Array
-  cutGroundM: Float64Array
-  cutSurfaceM: Float64Array
-  cutSlope: Float64Array
+  readonly x: Float64Array
+  readonly y: Float64Array
+  /** Quadratic term from this point to the next, 1/m. */
+  readonly bend: Float64Array
   /** Cuts that lie on known ground. */
   cuts: number
+  /** Point of each cut; ground there, its slope along the ray, and the surface, m. */
+  readonly cutPoint: Int32Array
+  readonly cutGroundM: Float64Array
+  readonly cutSlope: Float64Array
+  readonly cutSurfaceM: Float64Array
+  /** Highest Y of the surface from the cut before to this one, bulges included. */
+  readonly cutTop: Float64Array
 }
-
-const AT_SITE = 1e12
 
 export function makeStraightProfile(points: number, cuts: number): StraightProfile {
   const n = points + cuts
   return {
     count: 0,
     x: new Float64Array(n),
-    inverseX: new Float64Array(n),
     y: new Float64Array(n),
-    slope: new Float64Array(n),
     bend: new Float64Array(n),
-    bulge: new Float64Array(n),
+    cuts: 0,
     cutPoint: new Int32Array(cuts),
     cutGroundM: new Float64Array(cuts),
-    cutSurfaceM: new Float64Array(cuts),
     cutSlope: new Float64Array(cuts),
-    cuts: 0,
+    cutSurfaceM: new Float64Array(cuts),
+    cutTop: new Float64Array(cuts),
   }
 }
 
 /**
- * Fills the profile from a traced ray. `cutM` are ascending distances; those past the end of the ray are left out (cuts counts the others).
- * Heights at crossings and cuts go through the exact map; inside a segment the surface is the parabola of the patch less 1/2R, which differs from the
- * mapped patch by under 1e-3 of its own bulge.
+ * Fills the profile from a traced ray; cuts past its end are left out. Heights at crossings and cuts go through the exact map; inside a segment the surface
+ * is the parabola of the patch less 1/2R, which differs from the mapped patch by under a thousandth of its own bulge.
  */
-export function straighten(t: TracedRay, inverse: number, cutM: Float64Array, out: StraightProfile): void {
+export function straighten(t: TracedRay, inverse: number, cuts: Cuts, out: StraightProfile): void {
+  placeCuts(cuts, inverse)
   const { distM, surfaceM, bendPerM, groundM, groundBendPerM, count } = t
-  const { x, inverseX, y, slope, bend, bulge, cutPoint, cutGroundM, cutSurfaceM, cutSlope } = out
-  const ownGround = groundM !== surfaceM
-  const half = 0.5 * inverse
+  const { x, y, bend, cutPoint, cutGroundM, cutSlope, cutSurfaceM, cutTop } = out
+  const { m: cutM, x: cutX, drop: cutDrop } = cuts
   const total = cutM.length
+  const half = 0.5 * inverse
   out.count = 0
   out.cuts = 0
   if (count === 0) return
-  let p = 0
   let k = 0
-  let s0 = distM[0]
+  let nextCut = total > 0 ? cutM[0] : Number.POSITIVE_INFINITY
+  let s0 = 0
   let z0 = surfaceM[0]
-  let nextCut = k < total ? cutM[k] : Number.POSITIVE_INFINITY
+  let w = z0 * inverse
+  let x0 = 0
+  let y0 = z0 * (1 - w * (1 - w * (1 - w)))
   x[0] = 0
-  inverseX[0] = AT_SITE
-  y[0] = z0 / (1 + z0 * inverse)
+  y[0] = y0
+  let top = y0
+  let p = 0
   for (let j = 1; j < count; j++) {
     const s1 = distM[j]
     const z1 = surfaceM[j]
-    const length = s1 - s0
     const q = bendPerM[j - 1]
     const c = q - half
-    const rise = length > 0 ? (z1 - z0) / length - q * length : 0
-    while (nextCut <= s1) {
-      const u = nextCut - s0
-      const z = z0 + u * (rise + q * u)
-      cutSurfaceM[k] = z
-      if (ownGround) {
-        const gq = groundBendPerM[j - 1]
-        const g0 = groundM[j - 1]
-        const gRise = length > 0 ? (groundM[j] - g0) / length - gq * length : 0
-        cutGroundM[k] = g0 + u * (gRise + gq * u)
-        cutSlope[k] = gRise + 2 * gq * u
-      } else {
+    if (nextCut <= s1) {
+      const length = s1 - s0
+      const rise = length > 0 ? (z1 - z0) / length - q * length : 0
+      do {
+        const u = nextCut - s0
+        const z = z0 + u * (rise + q * u)
+        cutSurfaceM[k] = z
         cutGroundM[k] = z
         cutSlope[k] = rise + 2 * q * u
-      }
-      const last = x[p]
-      const xc = straightX(nextCut, inverse)
-      const yc = (z - straightDrop(nextCut, inverse)) / (1 + z * inverse)
-      close(p, xc - last, yc, c)
-      if (xc > last) {
-        p++
-        x[p] = xc
-        inverseX[p] = 1 / xc
-        y[p] = yc
-      }
-      cutPoint[k] = p
-      k++
-      nextCut = k < total ? cutM[k] : Number.POSITIVE_INFINITY
+        const xc = cutX[k]
+        w = z * inverse
+        const yc = (z - cutDrop[k]) * (1 - w * (1 - w * (1 - w)))
+        const lx = xc - x0
+        if (lx > 0) {
+          const bulge = c < 0 ? -0.25 * c * lx * lx : 0
+          bend[p] = c
+          const high = (yc > y0 ? yc : y0) + bulge
+          if (high > top) top = high
+          p++
+          x[p] = xc
+          y[p] = yc
+          x0 = xc
+          y0 = yc
+        }
+        cutPoint[k] = p
+        cutTop[k] = top
+        top = y0
+        k++
+        nextCut = k < total ? cutM[k] : Number.POSITIVE_INFINITY
+      } while (nextCut <= s1)
     }
-    const x1 = straightX(s1, inverse)
-    const y1 = (z1 - straightDrop(s1, inverse)) / (1 + z1 * inverse)
-    close(p, x1 - x[p], y1, c)
-    if (x1 > x[p] || length <= 0) {
+    const a = s1 * inverse
+    const pp = a * a
+    const x1 = s1 * (1 + pp * (1 / 3 + pp * (2 / 15)))
+    w = z1 * inverse
+    const y1 = (z1 - 0.5 * s1 * a * (1 + pp * (5 / 12 + pp * (61 / 360)))) * (1 - w * (1 - w * (1 - w)))
+    const lx = x1 - x0
+    // a cut on the crossing itself is not doubled; an upright step (an obstacle) is kept
+    if (lx > 0 || s1 === s0) {
+      const bulge = c < 0 ? -0.25 * c * lx * lx : 0
+      bend[p] = c
+      const high = (y1 > y0 ? y1 : y0) + bulge
+      if (high > top) top = high
       p++
       x[p] = x1
-      inverseX[p] = 1 / x1
       y[p] = y1
+      x0 = x1
+      y0 = y1
     }
     s0 = s1
     z0 = z1
   }
-  slope[p] = 0
   bend[p] = 0
-  bulge[p] = 0
   out.count = p + 1
   out.cuts = k
+  if (groundM !== surfaceM) cutGround(distM, groundM, groundBendPerM, cutM, k, cutGroundM, cutSlope)
+}
 
-  /** Settles the segment from point `from` over a length in X to a height Y. */
-  function close(from: number, length: number, toY: number, c: number): void {
-    if (length > 0) {
-      slope[from] = (toY - y[from]) / length - c * length
-      bend[from] = c
-      bulge[from] = c < 0 ? -0.25 * c * length * length * inverseX[from] : 0
-    } else {
-      slope[from] = 0
-      bend[from] = 0
-      bulge[from] = 0
-    }
+/** Ground and its slope at the cuts where the surface is not the ground. */
+function cutGround(
+  distM: Float64Array,
+  groundM: Float64Array,
+  bendPerM: Float64Array,
+  cutM: Float64Array,
+  cuts: number,
+  outM: Float64Array,
+  outSlope: Float64Array,
+): void {
+  let j = 1
+  for (let k = 0; k < cuts; k++) {
+    while (distM[j] < cutM[k]) j++
+    const length = distM[j] - distM[j - 1]
+    const q = bendPerM[j - 1]
+    const rise = length > 0 ? (groundM[j] - groundM[j - 1]) / length - q * length : 0
+    const u = cutM[k] - distM[j - 1]
+    outM[k] = groundM[j - 1] + u * (rise + q * u)
+    outSlope[k] = rise + 2 * q * u
   }
 }

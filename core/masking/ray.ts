@@ -1,8 +1,8 @@
 import { type Earth, effectiveRadiusM } from '../geodesy/index.ts'
 import { type Ground, makeTracer, type Site, siteGround, type Tracer } from '../terrain/index.ts'
-import { makeStraightProfile, type StraightProfile, straighten } from './profile.ts'
+import { type Cuts, makeStraightProfile, type StraightProfile, straighten } from './profile.ts'
 import { makeSightRun, runSight, type SightRun } from './sightRun.ts'
-import { heightOfY, rangeOfX, straightDrop, straightX } from './straight.ts'
+import { heightOfY, rangeOfX, straightDrop, straightX, straightY } from './straight.ts'
 
 /** One site with all it takes to run single rays: scratch that is filled again for each. */
 export interface RayRunner {
@@ -18,6 +18,7 @@ export interface RayRunner {
   antennaY: number
 }
 
+/** `cuts`: how many a profile may be cut at. With `fanStepDeg` the runner is for a fan of rays that far apart. */
 export function makeRunner(g: Ground, site: Site, maxRangeM: number, cuts: number, fanStepDeg?: number): RayRunner {
   const tracer = makeTracer(g, site, maxRangeM, { fanStepDeg })
   return {
@@ -34,12 +35,14 @@ export function makeRunner(g: Ground, site: Site, maxRangeM: number, cuts: numbe
 }
 
 /** Prepares a traced ray: straight plane of the azimuth's effective radius, cuts, and the run from one antenna height (m above the site's ground). */
-export function runRay(r: RayRunner, earth: Earth, azimuthDeg: number, heightM: number, cutM: Float64Array): void {
+export function runRay(r: RayRunner, earth: Earth, azimuthDeg: number, heightM: number, cuts: Cuts): void {
   setEarth(r, earth, azimuthDeg)
-  straighten(r.tracer.track, r.inverse, cutM, r.profile)
-  const antennaM = r.siteGroundM + heightM
-  r.antennaY = antennaM / (1 + antennaM * r.inverse)
+  straighten(r.tracer.track, r.inverse, cuts, r.profile)
+  setAntenna(r, heightM)
   runSight(r.profile, r.antennaY, r.run)
+}
+export function setAntenna(r: RayRunner, heightM: number): void {
+  r.antennaY = straightY(r.siteGroundM + heightM, 0, r.inverse)
 }
 export function setEarth(r: RayRunner, earth: Earth, azimuthDeg: number): void {
   r.effectiveRadiusM = effectiveRadiusM(earth, r.site.lat, azimuthDeg)

@@ -1,7 +1,7 @@
 import type { Earth } from '../geodesy/index.ts'
 import type { Ground, Site } from '../terrain/index.ts'
 import { floorBand } from './floorBand.ts'
-import { makeStraightProfile } from './profile.ts'
+import { makeCuts, makeStraightProfile } from './profile.ts'
 import { controlErrorM, heightOnLine, runRay } from './ray.ts'
 import { heldRunner } from './sightPoint.ts'
 import { makeSightRun } from './sightRun.ts'
@@ -33,7 +33,7 @@ export function sightAlong(g: Ground, site: Site, heightM: number, earth: Earth,
   const known = t.count
   const cutM = t.distM.slice(0, known)
   const r = { ...held, profile: makeStraightProfile(t.distM.length, known), run: makeSightRun(known) }
-  runRay(r, earth, azimuthDeg, heightM, cutM)
+  runRay(r, earth, azimuthDeg, heightM, makeCuts(cutM))
   const antennaM = r.siteGroundM + heightM
   const tail = t.unknownWhy === null ? 0 : 2
   const n = known + tail

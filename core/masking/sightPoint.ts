@@ -2,6 +2,7 @@ import { depressionAtTerrainDeg, type Earth, geodesicInverse, type LonLat } from
 import { type Ground, groundAt, groundKindAt, positionOf, type Site } from '../terrain/index.ts'
 import { floorBand } from './floorBand.ts'
 import { lowestAntennaY } from './heightToSee.ts'
+import { makeCuts } from './profile.ts'
 import { controllingOf, heightOnLine, makeRunner, type RayRunner, runRay } from './ray.ts'
 import { isInSight } from './sightState.ts'
 import { heightOfY } from './straight.ts'
@@ -53,8 +54,7 @@ export function sightPoint(g: Ground, site: Site, heightM: number, earth: Earth,
   if (rangeM < 1e-3) return atTheMast(r, azimuthDeg, rangeM, kind)
   r.tracer.traceTo(azimuthDeg, rangeM)
   const t = r.tracer.track
-  const cut = Float64Array.of(rangeM)
-  runRay(r, earth, azimuthDeg, heightM, cut)
+  runRay(r, earth, azimuthDeg, heightM, makeCuts(Float64Array.of(rangeM)))
   if (r.profile.cuts === 0 || Number.isNaN(r.siteGroundM)) {
     const none = Number.NaN
     return {

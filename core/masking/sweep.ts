@@ -2,12 +2,13 @@ import type { Earth } from '../geodesy/index.ts'
 import { CELL, type PolarShape } from '../polar/index.ts'
 import { type Ground, RELIEF, type Site } from '../terrain/index.ts'
 import type { Work } from '../work/index.ts'
-import { uniformCuts, writeGround, writeSeen } from './cells.ts'
+import { packSlope, type SeenCells, uniformCuts } from './cells.ts'
 import { heightsToSee, makeHull } from './heightLadder.ts'
 import { horizonRow } from './horizon.ts'
 import { straighten } from './profile.ts'
-import { makeRunner, setEarth } from './ray.ts'
-import { runSight } from './sightRun.ts'
+import { makeRunner, setAntenna, setEarth } from './ray.ts'
+import { sightPass } from './sightPass.ts'
+import { RUN } from './sightRun.ts'
 import type { HorizonRow, SightCells, SiteCells } from './types.ts'
 
 /** Keys of the results, set by the caller. */
@@ -33,7 +34,7 @@ export function* sweep(
 ): Work<{ site: SiteCells; masks: SightCells[] }> {
   const { azimuths, ranges } = grid
   const cuts = uniformCuts(ranges, grid.rangeStepM)
-  const r = makeRunner(g, site, ranges * grid.rangeStepM, cuts.cutM.length, grid.azimuthStepDeg)
+  const r = makeRunner(g, site, ranges * grid.rangeStepM, 2 * ranges, grid.azimuthStepDeg)
   const hull = makeHull(r.profile.x.length)
   const cells = azimuths * ranges
   const siteCells = {
@@ -41,27 +42,18 @@ export function* sweep(
     version: 1 as const,
     key: options.keys?.site ?? '',
     grid,
-    groundM: new Float32Array(cells).fill(Number.NaN),
-    code: new Uint8Array(cells).fill(255),
-    relief: new Uint8Array(cells).fill(RELIEF.unknown),
+    groundM: new Float32Array(cells),
+    code: new Uint8Array(cells),
+    relief: new Uint8Array(cells),
     slopePermille: new Int16Array(cells),
-    heightToSeeM: new Float32Array(cells).fill(Number.NaN),
+    heightToSeeM: new Float32Array(cells),
     siteGroundM: r.siteGroundM,
     effectiveRadiusM: new Float64Array(azimuths),
   }
-  const masks = heightsM.map((heightM, h) => ({
-    kind: 'sight' as const,
-    version: 1 as const,
-    key: options.keys?.masks?.[h] ?? '',
-    grid,
-    heightM,
-    state: new Uint8Array(cells),
-    inSight: new Uint16Array(cells),
-    floorM: new Float32Array(cells),
-    floorBandM: new Float32Array(cells),
-    horizon: [] as HorizonRow[],
-  }))
+  const masks = heightsM.map((heightM, h) => makeSight(grid, heightM, options.keys?.masks?.[h] ?? ''))
+  const ascending = [...masks].sort((a, b) => a.heightM - b.heightM)
   const centres = Float64Array.from({ length: ranges }, (_, j) => (j + 0.5) * grid.rangeStepM)
+  const whole = new Uint8Array(ranges)
   let points = 0
   for (let i = 0; i < azimuths; i++) {
     const azimuthDeg = i * grid.azimuthStepDeg
@@ -69,24 +61,56 @@ export function* sweep(
     r.tracer.trace(azimuthDeg)
     setEarth(r, earth, azimuthDeg)
     siteCells.effectiveRadiusM[i] = r.effectiveRadiusM
-    straighten(r.tracer.track, r.inverse, cuts.cutM, r.profile)
-    writeGround(r.profile, cuts, siteCells, offset)
+    straighten(r.tracer.track, r.inverse, cuts, r.profile)
     const known = Math.min(ranges, (r.profile.cuts + 1) >> 1)
-    r.tracer.sampleCells(centres, known, siteCells.code, siteCells.relief, offset)
-    heightsToSee(r.profile, cuts.centre, known, r.siteGroundM, r.inverse, g.postingM, hull, siteCells.heightToSeeM, offset)
-    const unknownState = r.tracer.track.unknownWhy === 'void' ? CELL.beyondVoid : CELL.outside
-    for (const mask of masks) {
-      const antennaM = r.siteGroundM + mask.heightM
-      r.antennaY = antennaM / (1 + antennaM * r.inverse)
-      runSight(r.profile, r.antennaY, r.run)
-      writeSeen(r, r.run, cuts, mask, offset, unknownState)
-      mask.horizon.push(horizonRow(r, azimuthDeg, antennaM, r.run.endTangent, r.run.endControlX))
+    const { cutGroundM, cutSlope } = r.profile
+    for (let j = 0; j < known; j++) {
+      siteCells.groundM[offset + j] = cutGroundM[2 * j]
+      siteCells.slopePermille[offset + j] = packSlope(cutSlope[2 * j])
     }
-    points += r.profile.count * (1 + masks.length)
+    r.tracer.sampleCells(centres, known, siteCells.code, siteCells.relief, offset)
+    heightsToSee(r.profile, known, r.siteGroundM, r.inverse, g.postingM, hull, siteCells.heightToSeeM, offset)
+    siteCells.groundM.fill(Number.NaN, offset + known, offset + ranges)
+    siteCells.code.fill(255, offset + known, offset + ranges)
+    siteCells.relief.fill(RELIEF.unknown, offset + known, offset + ranges)
+    siteCells.heightToSeeM.fill(Number.NaN, offset + known, offset + ranges)
+    const unknownState = r.tracer.track.unknownWhy === 'void' ? CELL.beyondVoid : CELL.outside
+    whole.fill(0)
+    for (const mask of ascending) {
+      setAntenna(r, mask.heightM)
+      sightPass(r, cuts, known, whole, r.run.end, mask, offset)
+      markUnknown(mask, offset + known, offset + ranges, unknownState)
+      mask.horizon.push(horizonRow(r, azimuthDeg, r.siteGroundM + mask.heightM, r.run.end[RUN.tangent], r.run.end[RUN.controlX]))
+    }
+    points += r.profile.count * (2 + 0.3 * masks.length)
     if (points > POINTS_PER_TURN) {
       points = 0
       yield { done: i + 1, total: azimuths }
     }
   }
   return { site: siteCells, masks }
+}
+
+/** Empty result of one height. */
+export const makeSight = (grid: PolarShape, heightM: number, key: string) => {
+  const cells = grid.azimuths * grid.ranges
+  return {
+    kind: 'sight' as const,
+    version: 1 as const,
+    key,
+    grid,
+    heightM,
+    state: new Uint8Array(cells),
+    inSight: new Uint16Array(cells),
+    floorM: new Float32Array(cells),
+    floorBandM: new Float32Array(cells),
+    horizon: [] as HorizonRow[],
+  }
+}
+/** Cells past the end of what is known: no floor, nothing in sight. */
+export function markUnknown(out: SeenCells, from: number, to: number, state: number): void {
+  out.state.fill(state, from, to)
+  out.inSight.fill(0, from, to)
+  out.floorM.fill(Number.NaN, from, to)
+  out.floorBandM.fill(Number.NaN, from, to)
 }

@@ -40,12 +40,13 @@ export function sweepRays(
   const n = centresM.length
   const cells = azimuthsDeg.length * n
   const cuts = cutsAround(centresM, cellM)
-  const reachM = cuts.cutM.length > 0 ? cuts.cutM[cuts.cutM.length - 1] : 0
+  const count = cuts.cuts.m.length
+  const reachM = count > 0 ? cuts.cuts.m[count - 1] : 0
   const held = heldRunner(g, site, reachM)
   const r = {
     ...held,
-    profile: makeStraightProfile(held.tracer.track.distM.length, cuts.cutM.length),
-    run: makeSightRun(cuts.cutM.length),
+    profile: makeStraightProfile(held.tracer.track.distM.length, count),
+    run: makeSightRun(count),
   }
   const centres = Float64Array.from(centresM)
   const out = {
@@ -66,7 +67,7 @@ export function sweepRays(
   azimuthsDeg.forEach((azimuthDeg, i) => {
     const offset = i * n
     r.tracer.traceTo(azimuthDeg, reachM)
-    runRay(r, earth, azimuthDeg, heightM, cuts.cutM)
+    runRay(r, earth, azimuthDeg, heightM, cuts.cuts)
     out.effectiveRadiusM[i] = r.effectiveRadiusM
     writeGround(r.profile, cuts, out, offset)
     let known = 0
