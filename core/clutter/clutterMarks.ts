@@ -1,7 +1,7 @@
 import type { GroundCode } from '../landcover/index.ts'
 import type { RadarInput } from '../radar/index.ts'
-import { landTableNotes, NOTE_SEA } from './landRow.ts'
-import { BUILT_IN_LAND_TABLE } from './landTableData.ts'
+import { landTableNotes, NOTE_SEA } from './land/landRow.ts'
+import { BUILT_IN_LAND_TABLE } from './land/landTableData.ts'
 import type { ModelNote } from './types.ts'
 
 /**

@@ -1,7 +1,7 @@
-import { compressionGainDb, noiseDbw, type RadarInput } from '../radar/index.ts'
-import { toDb, wavelengthM } from '../units/index.ts'
-import type { LandTable } from './landTable.ts'
-import type { ModelMark } from './types.ts'
+import { compressionGainDb, noiseDbw, type RadarInput } from '../../radar/index.ts'
+import { toDb, wavelengthM } from '../../units/index.ts'
+import type { LandTable } from '../land/landTable.ts'
+import type { ModelMark } from '../types.ts'
 
 /** One factor of a clutter figure; start, add and subtract lines of one result (`of`) give it. */
 export interface ClutterLine {

@@ -1,6 +1,6 @@
-import { type GainTable, twoWayGain } from '../antenna/index.ts'
-import type { SightCells, SiteCells } from '../masking/index.ts'
-import { bandOf, reliefSlot, type StrengthTable } from './strengthTable.ts'
+import { type GainTable, twoWayGain } from '../../antenna/index.ts'
+import type { SightCells, SiteCells } from '../../masking/index.ts'
+import { bandOf, reliefSlot, type StrengthTable } from '../land/strengthTable.ts'
 
 /**
  * Azimuth × range cells as clutter reads them: the polar grid, or a few rays around one point. Row i holds `centresM.length` cells of equal

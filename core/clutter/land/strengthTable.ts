@@ -1,10 +1,10 @@
-import type { GroundCode } from '../landcover/index.ts'
-import { RELIEF } from '../terrain/index.ts'
-import { DEG_PER_RAD, fromDb, RAD_PER_DEG, toDb } from '../units/index.ts'
+import type { GroundCode } from '../../landcover/index.ts'
+import { RELIEF } from '../../terrain/index.ts'
+import { DEG_PER_RAD, fromDb, RAD_PER_DEG, toDb } from '../../units/index.ts'
+import type { ModelNote } from '../types.ts'
 import { chooseRow, landTableNotes } from './landRow.ts'
 import { LAND_LIMITS, type LandTable } from './landTable.ts'
 import { BUILT_IN_LAND_TABLE } from './landTableData.ts'
-import type { ModelNote } from './types.ts'
 
 /** Strength of every ground code, relief and band of depression at one frequency, so that a loop over cells only looks it up. */
 export interface StrengthTable {

@@ -1,10 +1,10 @@
-import { InputError } from '../errors/index.ts'
-import type { TerrainName } from '../landcover/index.ts'
-import { RADAR_LIMITS } from '../radar/index.ts'
-import { RELIEF } from '../terrain/index.ts'
+import { InputError } from '../../errors/index.ts'
+import type { TerrainName } from '../../landcover/index.ts'
+import { RADAR_LIMITS } from '../../radar/index.ts'
+import { RELIEF } from '../../terrain/index.ts'
+import type { ModelNote } from '../types.ts'
 import { LAND_LIMITS, type LandBand, type LandRow, type LandTable } from './landTable.ts'
 import { BUILT_IN_LAND_TABLE } from './landTableData.ts'
-import type { ModelNote } from './types.ts'
 
 /** What the row choice may know beyond the place itself. */
 export interface LandContext {

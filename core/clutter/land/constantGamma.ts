@@ -1,4 +1,4 @@
-import { RAD_PER_DEG } from '../units/index.ts'
+import { RAD_PER_DEG } from '../../units/index.ts'
 
 /**
  * Constant-gamma land clutter, mean σ° in dB at a grazing angle in degrees (0 < angle <= 90): γ·sin ψ. Propagation is not included.

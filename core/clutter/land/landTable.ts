@@ -1,5 +1,5 @@
-import { InputError } from '../errors/index.ts'
-import type { ModelMark } from './types.ts'
+import { InputError } from '../../errors/index.ts'
+import type { ModelMark } from '../types.ts'
 
 /** Rows a land table must have. */
 export const LAND_ROWS = [
