@@ -7,7 +7,7 @@ export const STEPS = ['ground', 'radar', 'need', 'candidates', 'compare', 'memo'
 export type StepId = (typeof STEPS)[number]
 export type Theme = 'paper' | 'night'
 /** What stands over the lower half of the map. */
-export type OpenChart = 'profile' | 'ledger' | null
+export type OpenChart = 'profile' | 'ledger' | 'figure' | null
 
 /** What is looked at: kept over a reload, never undone, never saved with the study. */
 export interface ViewState {
@@ -26,6 +26,8 @@ export interface ViewState {
   /** Cell whose ledger is asked for. */
   readonly cell: LonLat | null
   readonly chart: OpenChart
+  /** Key of the figure that is explained, as in the summary. */
+  readonly figure: string | null
   /** Azimuth of the profile chart. */
   readonly profileAzimuthDeg: number | null
   /** The next click on the map places a candidate. */
@@ -52,6 +54,7 @@ export function createViewStore(storage?: Storage, prefersDark = false) {
         theme: prefersDark ? 'night' : 'paper',
         cell: null,
         chart: null,
+        figure: null,
         profileAzimuthDeg: null,
         placing: false,
         hold: false,

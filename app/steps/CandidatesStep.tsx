@@ -12,8 +12,8 @@ import {
 } from '../document/index.ts'
 import { Button, Caution, CommitField, Notice, NumberField, PositionField, readNumbers } from '../ui/index.ts'
 import { CAUTIONS, DEG, EMPTY_WORDS, formatHeight, formatPosition, METRES, textOf } from '../words/index.ts'
-import { settledOf } from './fields.tsx'
 import { useDoc, useGround, useSession, useView } from './session/index.ts'
+import { settledOf } from './settled.ts'
 
 /** Places where the radar could stand, with their mast heights. */
 export function CandidatesStep() {
@@ -84,6 +84,7 @@ export const Ring = () => (
 function Card({ candidate: c, onSelect }: { candidate: CandidateDoc; onSelect: () => void }) {
   const session = useSession()
   const { view } = session
+  const [editing, setEditing] = useState(false)
   const option = useView((v) => v.option)
   const system = useView((v) => v.units)
   const groundM = useGround((g) => g.candidateM.get(c.id))
@@ -101,7 +102,14 @@ function Card({ candidate: c, onSelect }: { candidate: CandidateDoc; onSelect: (
         <span className="card-name">{c.name === c.id ? '' : c.name}</span>
         <span className="ink-3">{heightM === null || heightM === undefined ? '' : textOf(formatHeight(heightM, system))}</span>
       </AriaButton>
-      <p className="small ink-3">{formatPosition(c)}</p>
+      <div className="card-line">
+        <span className="small ink-3">{formatPosition(c)}</span>
+        {on ? (
+          <Button small look="quiet" label={editing ? `Close ${c.id}` : `Edit ${c.id}`} onPress={() => setEditing(!editing)}>
+            {editing ? 'close' : 'edit'}
+          </Button>
+        ) : null}
+      </div>
       {hasGround && groundM === null ? (
         <div className="row">
           <span className="mark">no ground known here: outside the terrain or over a void</span>
@@ -143,7 +151,7 @@ function Card({ candidate: c, onSelect }: { candidate: CandidateDoc; onSelect: (
           })}
         </fieldset>
       ) : null}
-      {on ? <Details candidate={c} /> : null}
+      {on && editing ? <Details candidate={c} /> : null}
     </section>
   )
 }

@@ -1,6 +1,6 @@
 import { useLayoutEffect, useRef, useState } from 'react'
 import { Button as AriaButton } from 'react-aria-components'
-import type { LayerId, LonLat, OptionRef, OptionResult } from '../../core/index.ts'
+import { M_PER_NM, type OptionRef, type OptionResult } from '../../core/index.ts'
 import { inSightPctOf } from '../charts/index.ts'
 import { OptionsChart } from '../charts/printers.tsx'
 import { optionKey, sameOption, studyOptions } from '../document/index.ts'
@@ -15,71 +15,66 @@ import {
   formatMargin,
   formatMast,
   formatMetPct,
-  formatRange,
+  formatSetting,
   type Quantity,
   textOf,
+  toFace,
   type UnitSystem,
+  unitOf,
 } from '../words/index.ts'
+import { Explain } from './Explain.tsx'
 import { FLOOR_RANGE_M, floorNear, needOf } from './figuresOf.ts'
 import { useDoc, useResults, useSession, useView } from './session/index.ts'
 
 interface Column {
   readonly id: string
   readonly head: string
-  /** What the figure is, one sentence. */
-  readonly meaning: string
-  /** Layer that shows where it comes from. */
-  readonly layer: LayerId
   value(result: OptionResult, need: string | null, system: UnitSystem): Quantity
-  /** The place it was found at, if it has one. */
-  place?(result: OptionResult, need: string | null): LonLat | null
-  /** What sets it there. */
-  because?(result: OptionResult, need: string | null): string
+  /** Key of the figure in the summary, for its explanation. */
+  key(result: OptionResult, need: string | null): string | null
 }
-
+const needFigureKey = (result: OptionResult, need: string | null, tail: string): string | null => {
+  const of = needOf(result, need)
+  return of ? `need_${of.needId}_${tail}` : null
+}
 const COLUMNS: readonly Column[] = [
   {
     id: 'inSight',
     head: 'In sight',
-    meaning: 'Share of the need’s area whose height is in sight, line of sight only; of the ground where no need is stated. Rounded down',
-    layer: 'coverage-floor',
     value: (r, need) => formatMetPct(inSightPctOf(r, need)),
+    key: (r, need) => needFigureKey(r, need, 'in_sight_pct') ?? 'ground_in_sight_km2',
   },
   {
     id: 'margin',
     head: 'Worst margin',
-    meaning: 'Height of the need less the coverage floor, at the worst place of the need. Rounded down',
-    layer: 'coverage-floor',
     value: (r, need, system) => formatMargin(needOf(r, need)?.worstMarginM, system),
-    place: (r, need) => needOf(r, need)?.worst ?? null,
-    because: (r, need) => needOf(r, need)?.worst?.obstacle ?? '',
+    key: (r, need) => needFigureKey(r, need, 'worst_margin_m'),
   },
   {
     id: 'over40',
     head: 'C/N over 40 dB',
-    meaning: 'Ground whose mean clutter stands more than 40 dB above noise, one pulse, before suppression. Rounded up',
-    layer: 'clutter-to-noise',
     value: (r, _need, system) => formatAreaUp(r.figures.clutterOverKm2.over40, system),
+    key: () => 'clutter_over_40_km2',
   },
   {
     id: 'suppression',
     head: 'Suppression needed, 90 %',
-    meaning: 'Improvement factor that serves 90 % of the places of the need which are in sight and strong enough. Rounded up',
-    layer: 'suppression-needed',
     value: (r, need) => formatDbUp(needOf(r, need)?.suppression.p90Db),
+    key: (r, need) => needFigureKey(r, need, 'suppression_needed_90_db'),
   },
   {
     id: 'floor',
     head: 'Floor at 20 NM, worst',
-    meaning: 'Lowest height in sight above sea level at that ground range, on the worst azimuth. Rounded up',
-    layer: 'coverage-floor',
     value: (r, _need, system) => formatFloor(floorNear(r)?.worstM, system),
-    because: (r) => {
-      const azimuth = floorNear(r)?.worstAzimuthDeg
-      return azimuth === null || azimuth === undefined ? '' : `azimuth ${textOf(formatAngle(azimuth, 1))}`
+    key: (r) => {
+      const floor = floorNear(r)
+      return floor ? `floor_${Math.round(floor.rangeM / M_PER_NM)}nm_worst_m` : null
     },
   },
 ]
+
+/** A stated range without decimals it does not have: `20 NM`, `37 km`. */
+const roundRange = (m: number, system: UnitSystem): string => textOf(formatSetting(toFace('range', m, system), unitOf('range', system), 1))
 
 /** All options side by side; each figure says what it is and shows where it comes from. */
 export function CompareStep() {
@@ -89,7 +84,7 @@ export function CompareStep() {
   const shown = useView((v) => v.option)
   const need = useView((v) => v.need)
   const system = useView((v) => v.units)
-  const [asked, setAsked] = useState<{ key: string; column: string } | null>(null)
+  const explaining = useView((v) => v.chart === 'figure')
   const options = studyOptions(doc)
   const needs = (doc.needs ?? []).filter((n) => n.kind === 'layer')
   const withTilt = new Set(options.map((o) => o.tiltDeg)).size > 1
@@ -104,9 +99,7 @@ export function CompareStep() {
       </div>
     )
   const floorRange = results[0] ? floorNear(results[0])?.rangeM : undefined
-  const headOf = (c: Column) => (c.id === 'floor' ? `Floor at ${textOf(formatRange(floorRange ?? FLOOR_RANGE_M, system))}, worst` : c.head)
-  const explained = asked && COLUMNS.find((c) => c.id === asked.column)
-  const explainedResult = asked ? byOption.get(asked.key) : undefined
+  const headOf = (c: Column) => (c.id === 'floor' ? `Floor at ${roundRange(floorRange ?? FLOOR_RANGE_M, system)}, worst` : c.head)
   return (
     <div className="compare">
       {needs.length > 1 ? (
@@ -163,15 +156,14 @@ export function CompareStep() {
                 {COLUMNS.map((c) => (
                   <td key={c.id}>
                     {result ? (
-                      <FigureButton
-                        label={`${headOf(c)} of ${o.candidate} at ${o.heightM} m: ${textOf(c.value(result, need, system))}; explain`}
+                      <FigureCell
+                        words={`${headOf(c)} of ${o.candidate} at ${o.heightM} m`}
+                        value={c.value(result, need, system)}
                         onPress={() => {
-                          show(o)
-                          setAsked({ key, column: c.id })
+                          const figure = c.key(result, need)
+                          if (figure) view.getState().set({ option: o, chart: 'figure', figure })
                         }}
-                      >
-                        <Value of={c.value(result, need, system)} />
-                      </FigureButton>
+                      />
                     ) : (
                       <span className="ink-3">…</span>
                     )}
@@ -182,28 +174,7 @@ export function CompareStep() {
           })}
         </tbody>
       </table>
-      {explained && explainedResult ? (
-        <section className="explain" aria-live="polite">
-          <h3>
-            {headOf(explained)}, {explainedResult.ref.candidate} at {textOf(formatMast(explainedResult.ref.heightM))}:{' '}
-            {textOf(explained.value(explainedResult, need, system))}
-          </h3>
-          <p className="ink-2">
-            {explained.meaning}.{explained.because?.(explainedResult, need) ? ` Set by ${explained.because(explainedResult, need)}.` : ''}
-          </p>
-          <div className="row">
-            <Button
-              small
-              onPress={() => {
-                const at = explained.place?.(explainedResult, need) ?? null
-                view.getState().set({ layer: explained.layer, step: 'candidates', formOpen: false, cell: at, chart: at ? 'ledger' : null })
-              }}
-            >
-              {explained.place?.(explainedResult, need) ? 'Show the place and its ledger' : 'Show on the map'}
-            </Button>
-          </div>
-        </section>
-      ) : null}
+      {explaining ? <Explain /> : null}
       <div className="cautions">
         {cautionsFor('compare').map((c) => (
           <Caution key={c}>{c}</Caution>
@@ -211,6 +182,14 @@ export function CompareStep() {
       </div>
       {results.length > 1 ? <Plot results={results} need={need} shown={shown} system={system} onChoose={show} /> : null}
     </div>
+  )
+}
+
+function FigureCell({ words, value, onPress }: { words: string; value: Quantity; onPress: () => void }) {
+  return (
+    <FigureButton label={`${words}: ${textOf(value)}; explain`} onPress={onPress}>
+      <Value of={value} />
+    </FigureButton>
   )
 }
 

@@ -5,12 +5,14 @@ import { moveCursor, TerrainChart } from '../charts/printers.tsx'
 import type { MapHub } from '../map/index.ts'
 import { Notice } from '../ui/index.ts'
 import { formatAzimuth, formatMast, textOf } from '../words/index.ts'
+import { Explain } from './Explain.tsx'
 import { Ledger } from './Ledger.tsx'
 import { sentenceOf, useResults, useSession, useView } from './session/index.ts'
 
-/** What stands over the lower half of the map: the terrain profile of an azimuth, or the ledger of a cell. */
+/** What stands over the lower half of the map: the terrain profile of an azimuth, the ledger of a cell, or what a figure means. */
 export function LowerPanel({ hub }: { hub: MapHub }) {
   const chart = useView((v) => v.chart)
+  if (chart === 'figure') return <Explain />
   return chart === 'ledger' ? <LedgerPanel /> : <ProfilePanel hub={hub} />
 }
 

@@ -3,9 +3,9 @@ import type { LonLat } from '../../core/index.ts'
 import { addCandidate, hasStartingRadar, moveCandidate, optionKey, setMastHeights, settleOption } from '../document/index.ts'
 import type { MapCandidate, MapHub, MapNeed } from '../map/index.ts'
 import { EMPTY_WORDS } from '../words/index.ts'
-import { settledOf } from './fields.tsx'
 import { LowerPanel } from './LowerPanel.tsx'
 import { useDoc, useGround, useResults, useSession, useView } from './session/index.ts'
+import { settledOf } from './settled.ts'
 
 const MapPane = lazy(() => import('../map/index.ts').then((m) => ({ default: m.MapPane })))
 const Ruler = lazy(() => import('../map/index.ts').then((m) => ({ default: m.Ruler })))

@@ -2,8 +2,9 @@ import { limitOf, type NeedDoc } from '../../core/index.ts'
 import { addNeed, removeNeed, setField } from '../document/index.ts'
 import { Button, Caution, Check, CommitField, Mark, NumberField, Select } from '../ui/index.ts'
 import { CAUTIONS, DB, DEG, EMPTY_WORDS, formatSetting, PLAIN, SWERLING_CASES, textOf } from '../words/index.ts'
-import { faceOf, settledOf } from './fields.tsx'
+import { faceOf } from './fields.tsx'
 import { useDoc, useSession, useView } from './session/index.ts'
+import { settledOf } from './settled.ts'
 
 const HEIGHT_ABOVE = [
   { id: 'sea', words: 'above sea level' },
@@ -119,6 +120,14 @@ function Need({ need, at }: { need: NeedDoc; at: number }) {
         face={DEG}
         limit={limit('sectorDeg[1]')}
         onCommit={(v) => set('sectorDeg', v === undefined ? undefined : [sector[0], v])}
+      />
+      <NumberField
+        label="Share to be met"
+        value={need.requiredPct}
+        fallback={100}
+        face={{ unit: '%', size: 1 }}
+        limit={limit('requiredPct')}
+        onCommit={(v) => set('requiredPct', v)}
       />
       <NumberField
         label="RCS"

@@ -1,8 +1,8 @@
 import { addNeed, type StepId } from '../document/index.ts'
 import { Button } from '../ui/index.ts'
+import { useMemoExport } from './memo/useMemoExport.ts'
 import { useDoc, useGround, useSession, useView } from './session/index.ts'
 import { useFilePicker } from './useFilePicker.tsx'
-import { useMemoExport } from './useMemoExport.ts'
 
 /** One primary action per step: what comes next. */
 export function PrimaryAction() {

@@ -1,20 +1,11 @@
 import type { ReactNode } from 'react'
-import { type DefaultUsed, limitOf, type SettledStudy, type StudyDoc, settle } from '../../core/index.ts'
+import { type DefaultUsed, limitOf, type StudyDoc } from '../../core/index.ts'
 import { problemsOf, setField, valueAt } from '../document/index.ts'
 import { CommitField, Mark, NumberField, readNumbers, Select } from '../ui/index.ts'
 import { type FaceUnit, type FieldWords, fromFace, type UnitSystem, unitOf } from '../words/index.ts'
 import { useDoc, useSession, useView } from './session/index.ts'
+import { settledOf } from './settled.ts'
 
-const settled = new WeakMap<StudyDoc, SettledStudy | null>()
-/** The study with its defaults, once per document; null while a value has to change. */
-export function settledOf(doc: StudyDoc): SettledStudy | null {
-  let study = settled.get(doc)
-  if (study === undefined) {
-    study = problemsOf(doc).length === 0 ? settle(doc) : null
-    settled.set(doc, study)
-  }
-  return study
-}
 const defaultAt = (doc: StudyDoc, path: string): DefaultUsed['value'] | undefined =>
   settledOf(doc)?.defaults.find((d) => d.path === path)?.value
 

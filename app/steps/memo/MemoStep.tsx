@@ -1,4 +1,4 @@
-import { CAUTIONS } from '../words/index.ts'
+import { CAUTIONS } from '../../words/index.ts'
 
 export function MemoStep() {
   return <p className="ink-2">{CAUTIONS.draft}</p>

@@ -1,8 +1,8 @@
-import { optionKey } from '../document/index.ts'
-import { Caution, Value } from '../ui/index.ts'
-import { CAUTIONS, cautionsFor, formatAreaUp, formatFloor, formatMast, formatMetPct, formatScreening, textOf } from '../words/index.ts'
-import { floorNear, needOf } from './figuresOf.ts'
-import { useResults, useView } from './session/index.ts'
+import { optionKey } from '../../document/index.ts'
+import { Caution, Value } from '../../ui/index.ts'
+import { CAUTIONS, cautionsFor, formatAreaUp, formatFloor, formatMast, formatMetPct, formatScreening, textOf } from '../../words/index.ts'
+import { floorNear, needOf } from '../figuresOf.ts'
+import { useResults, useView } from '../session/index.ts'
 
 /** The figures of the option on show, as the memo will say them. */
 export function MemoAside() {

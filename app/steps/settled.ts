@@ -1,0 +1,13 @@
+import { type SettledStudy, type StudyDoc, settle } from '../../core/index.ts'
+import { problemsOf } from '../document/index.ts'
+
+const settled = new WeakMap<StudyDoc, SettledStudy | null>()
+/** The study with its defaults, once per document; null while a value has to change. */
+export function settledOf(doc: StudyDoc): SettledStudy | null {
+  let study = settled.get(doc)
+  if (study === undefined) {
+    study = problemsOf(doc).length === 0 ? settle(doc) : null
+    settled.set(doc, study)
+  }
+  return study
+}
