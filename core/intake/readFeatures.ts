@@ -1,3 +1,4 @@
+import { type ParseError, parse as parseJson } from 'jsonc-parser'
 import { InputError } from '../errors/index.ts'
 import type { LonLat } from '../geodesy/index.ts'
 import { normalLon } from '../geodesy/index.ts'
@@ -48,10 +49,11 @@ const isObject = (v: unknown): v is Record<string, unknown> => typeof v === 'obj
 function parse(text: string, fault: (place: string | undefined, found: string, remedy: string) => InputError): unknown {
   try {
     return JSON.parse(text.charCodeAt(0) === 0xfeff ? text.slice(1) : text)
-  } catch (e) {
-    const at = /position (\d+)/.exec(e instanceof Error ? e.message : '')
-    const before = at ? text.slice(0, Number(at[1])).split('\n') : null
-    const place = before ? `line ${before.length}, column ${before[before.length - 1].length + 1}` : undefined
+  } catch {
+    const errors: ParseError[] = []
+    parseJson(text, errors, { disallowComments: true })
+    const before = text.slice(0, errors[0]?.offset ?? 0).split('\n')
+    const place = `line ${before.length}, column ${before[before.length - 1].length + 1}`
     throw fault(place, 'not JSON', 'correct the syntax there')
   }
 }
