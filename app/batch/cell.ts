@@ -17,8 +17,14 @@ export async function cell(line: CommandLine, progress: Progress): Promise<void>
     lon: numberOption('at', parts[0] as string, -360, 360, 'longitude'),
     lat: numberOption('at', parts[1] as string, -90, 90, 'latitude'),
   }
-  const { ground, warnings } = await loadGround(loaded, [candidate], progress)
-  const ledger = cellLedger(ground, loaded.study, { candidate: candidate.id, heightM, tiltDeg }, at)
+  const { ground, read, warnings } = await loadGround(loaded, [candidate], progress)
+  const ledger = cellLedger(
+    ground,
+    loaded.study,
+    { candidate: candidate.id, heightM, tiltDeg },
+    at,
+    read.landTable ? { landTable: read.landTable } : {},
+  )
   process.stdout.write(`${JSON.stringify(ledger, null, 2)}\n`)
   sayWarnings([...loaded.warnings, ...warnings])
 }

@@ -171,7 +171,9 @@ export class Answers {
   // biome-ignore lint/correctness/useYield: an answer that needs no slices
   private *ledger(body: Ask['ledger']): Work<EngineAnswer['ledger']> {
     const { ground, study } = this.engine.ready()
-    return cellLedger(ground, study, body.option, body.at, this.engine.landTable)
+    const sideLobeCnrDb = this.engine.cells(body.option)?.clutter.sideLobeCnrDb
+    const options = { ...landOption(this.engine.landTable), ...(sideLobeCnrDb ? { sideLobeCnrDb } : {}) }
+    return cellLedger(ground, study, body.option, body.at, options)
   }
 
   private *ladder(body: Ask['ladder']): Work<EngineAnswer['ladder']> {

@@ -1,5 +1,5 @@
 import { elevationGain } from '../antenna/index.ts'
-import { clutterAtPoint, type LandTable, type PointClutter, suppressionNeededDb } from '../clutter/index.ts'
+import { clutterAtPoint, type PointClutter, type PointOptions, suppressionNeededDb } from '../clutter/index.ts'
 import { depressionAtTerrainDeg, earthDropM, effectiveRadiusM, elevationAngleDeg, type LonLat, slantRangeM } from '../geodesy/index.ts'
 import { type SightPoint, sightPoint } from '../masking/index.ts'
 import { polarShape } from '../polar/index.ts'
@@ -17,15 +17,10 @@ const GEOMETRY = 'Straight ray over the effective earth'
 
 /**
  * Every step behind the numbers of one place for one option. Lines of a result (`of`) that start, add or subtract sum to it; `info` lines
- * give what went in. The place is evaluated on its own ray and range.
+ * give what went in. The place is evaluated on its own ray and range. `options` carries the study's own land table and, where it is at hand,
+ * the side-lobe term of the option, which otherwise takes a sweep of its own.
  */
-export function cellLedger(
-  ground: Ground,
-  study: SettledStudy,
-  option: OptionRef,
-  at: LonLat,
-  landTable: LandTable | null = null,
-): CellLedger {
+export function cellLedger(ground: Ground, study: SettledStudy, option: OptionRef, at: LonLat, options: PointOptions = {}): CellLedger {
   const site = siteOf(candidateOf(study, option.candidate))
   const earth = earthOf(study)
   const sight = sightPoint(ground, site, option.heightM, earth, at)
@@ -50,7 +45,6 @@ export function cellLedger(
     results.coverage_floor_m = sight.floorM
     results.height_to_see_m = sight.heightToSeeM
     results.depression_deg = depressionAtTerrainDeg(siteM + option.heightM - sight.groundM, sight.rangeM, radius)
-    const options = landTable ? { landTable } : {}
     const clutter = clutterAtPoint(ground, site, option.heightM, earth, study.radar, option.tiltDeg, polarShape(study.run), at, options)
     lines.push(...clutterInfo(clutter), ...clutter.lines)
     results.clutter_strength_db = clutter.strengthDb
