@@ -17,8 +17,8 @@ export class Progress {
     const every = this.#terminal ? 100 : 5000
     if (now - this.#last < every || (!this.#terminal && !this.#lasting)) return
     this.#last = now
-    const percent = total > 0 ? Math.floor((100 * done) / total) : 0
-    const text = `${doing}: ${percent} % after ${Math.round((now - this.#started) / 1000)} s`
+    const share = total > 0 ? `: ${Math.floor((100 * done) / total)} %` : ''
+    const text = `${doing}${share}, ${Math.round((now - this.#started) / 1000)} s`
     if (this.#terminal) {
       process.stderr.write(`\r${text.padEnd(this.#shown.length)}`)
       this.#shown = text

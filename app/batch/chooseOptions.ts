@@ -1,0 +1,71 @@
+import { LAYER_IDS, type LayerId, type OptionRef, optionsOf, type StudyDoc } from '../../core/index.ts'
+import { numberOption, usageError } from './arguments.ts'
+import { candidateNamed, type LoadedStudy } from './loadStudy.ts'
+
+/** Rasters that every run writes, by file name without ending. */
+const STANDARD = ['in-sight', 'coverage-floor', 'clutter-to-noise'] as const
+/** Rasters written on request; they hang on the mast height only, or on the tilt as well. */
+export const EXTRA_LAYERS: Readonly<Partial<Record<LayerId, 'height' | 'tilt'>>> = {
+  'height-to-see': 'height',
+  depression: 'height',
+  'clutter-strength': 'height',
+  'suppression-needed': 'tilt',
+}
+
+interface Picks {
+  readonly candidate?: string
+  readonly height?: string
+  readonly tilt?: string
+}
+
+/** Options of the study that the command line picks, in the study's order. @throws InputError where none is left */
+export function chooseOptions(loaded: LoadedStudy, picks: Picks): OptionRef[] {
+  const all = optionsOf(loaded.study)
+  const candidate = picks.candidate === undefined ? null : candidateNamed(loaded, picks.candidate).id
+  const height = picks.height === undefined ? null : numberOption('height', picks.height, 0, 1000, 'mast height', true)
+  const tilt = picks.tilt === undefined ? null : numberOption('tilt', picks.tilt, -90, 90, 'tilt')
+  const ofCandidate = all.filter((o) => candidate === null || o.candidate === candidate)
+  const ofHeight = ofCandidate.filter((o) => height === null || o.heightM === height)
+  if (ofHeight.length === 0)
+    throw pickError(
+      'height',
+      `${height} m`,
+      ofCandidate.map((o) => o.heightM),
+    )
+  const chosen = ofHeight.filter((o) => tilt === null || o.tiltDeg === tilt)
+  if (chosen.length === 0)
+    throw pickError(
+      'tilt',
+      `${tilt} deg`,
+      ofHeight.map((o) => o.tiltDeg),
+    )
+  return chosen
+}
+const pickError = (name: string, asked: string, there: readonly number[]) =>
+  usageError(
+    `--${name}`,
+    `the study has no ${name} ${asked} here`,
+    `use one of ${[...new Set(there)].slice(0, 12).join(', ')}, or leave it out`,
+  )
+
+/** The document with the options that were picked and no others. */
+export function narrowed(doc: StudyDoc, chosen: readonly OptionRef[]): StudyDoc {
+  const candidates = doc.candidates.flatMap((c) => {
+    const own = chosen.filter((o) => o.candidate === c.id)
+    const tiltsDeg = [...new Set(own.map((o) => o.tiltDeg))]
+    return own.length === 0 ? [] : [{ ...c, mastHeightsM: [...new Set(own.map((o) => o.heightM))], tiltsDeg }]
+  })
+  return { ...doc, candidates }
+}
+
+/** `--layers`. @throws InputError for a name that is none */
+export function chooseLayers(text: string | undefined): LayerId[] {
+  const extra = LAYER_IDS.filter((id) => EXTRA_LAYERS[id] !== undefined)
+  if (text === undefined) return []
+  if (text === 'all') return extra
+  const asked = text.split(',').map((name) => name.trim())
+  for (const name of asked)
+    if (!(extra as string[]).includes(name) && !(STANDARD as readonly string[]).includes(name))
+      throw usageError('--layers', `there is no layer "${name.slice(0, 40)}"`, `use all, or names from ${extra.join(', ')}`)
+  return extra.filter((id) => asked.includes(id))
+}
