@@ -84,8 +84,9 @@ export function transverseMercator(p: TransverseMercator): ProjectionPair {
     // conformal latitude: t = sinh(asinh(tan φ) − e atanh(e sin φ)) written with sin χ
     const q = Math.atanh(sinPhi) - e * Math.atanh(e * sinPhi)
     const t = Math.sinh(q)
-    const xi1 = Math.atan2(t, Math.cos(lam))
-    const eta1 = Math.asinh(Math.sin(lam) / Math.hypot(t, Math.cos(lam)))
+    const cosLam = Math.cos(lam)
+    const xi1 = Math.atan2(t, cosLam)
+    const eta1 = Math.asinh(Math.sin(lam) / Math.sqrt(t * t + cosLam * cosLam))
     series(alpha, xi1, eta1)
     return [radius * (eta1 + sumIm), radius * (xi1 + sumRe)]
   }
