@@ -14,8 +14,8 @@ export const HILL_CODES: readonly GroundCode[] = [
 ]
 
 /** Deterministic numbers 0…1. */
-export function randomNumbers(seed: number): () => number {
-  let s = seed >>> 0
+export function randomNumbers(first: number): () => number {
+  let s = first >>> 0
   return () => {
     s = (Math.imul(s, 1_664_525) + 1_013_904_223) >>> 0
     return s / 2 ** 32
