@@ -82,7 +82,7 @@ export const STANDERS: readonly Stander[] = [
   point('Ambry silo south', [-6.55, 3.8], 38, 14, 900, 0.5),
   point('Quillow silo', [-8.7, -6.7], 34, 12, 700, 1),
   point('Tolvane chimney', [5.9, -4.2], 72, 7, 500, 0.5),
-  point('Tolvane harbour crane', [5.6, -5.75], 46, 10, 1500, 1),
+  point('Tolvane harbour crane', [5.1, -5.5], 46, 10, 1500, 1),
   point('Norrick mast', [3.2, 15.0], 60, 2, 80, 1),
   point('Eddra mast', [22.8, -2.6], 55, 2, 80, 2),
   point('North Cape beacon', [-16.6, 11.4], 22, 4, 60, 1),
