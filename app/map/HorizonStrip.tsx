@@ -18,6 +18,7 @@ export function HorizonStrip({ hub, rows, units, onPick }: HorizonStripProps) {
   const cursor = useRef<SVGLineElement>(null)
   const read = useRef<HTMLSpanElement>(null)
   const [size, setSize] = useState({ width: 0, height: 0 })
+  const [pointed, setPointed] = useState(false)
   const [stretched, setStretched] = useState(false)
   const answer = useChannel(hub.trialAnswer)
   useLayoutEffect(() => {
@@ -31,17 +32,23 @@ export function HorizonStrip({ hub, rows, units, onPick }: HorizonStripProps) {
   }, [])
   const tried = useMemo(() => (answer ? answer.horizon.map(roughRow) : null), [answer])
   const shown = tried ?? rows
+  // the pointer's own words take the place of the names; a preview knows no names
+  const labels = tried || pointed ? 0 : undefined
   const { width } = size
   const height = Math.round(size.height * (stretched ? STRETCH : 1))
   const geometry = useMemo(
-    () => (width > 0 && shown.length > 0 ? horizonChart({ rows: shown, width, height, system: units, size: SIZE, style: 'strip' }) : null),
-    [shown, width, height, units],
+    () =>
+      width > 0 && shown.length > 0
+        ? horizonChart({ rows: shown, width, height, system: units, size: SIZE, style: 'strip', labels })
+        : null,
+    [shown, labels, width, height, units],
   )
   useEffect(
     () =>
       hub.pointer.listen((p) => {
         if (!geometry) return
         const azimuth = p?.azimuthDeg ?? null
+        setPointed(azimuth !== null)
         moveCursor(cursor.current, geometry.azimuth, azimuth)
         const row = azimuth === null ? null : geometry.rowAt(azimuth)
         if (read.current) read.current.textContent = row && azimuth !== null ? rowText(row, azimuth, units) : ''
@@ -60,7 +67,8 @@ export function HorizonStrip({ hub, rows, units, onPick }: HorizonStripProps) {
             size={SIZE}
             style="strip"
             cursorRef={cursor}
-            onPoint={(azimuth) => hub.pointer.set(azimuth === null ? null : pointed(azimuth, geometry.rowAt(azimuth)))}
+            labels={labels}
+            onPoint={(azimuth) => hub.pointer.set(azimuth === null ? null : placeOn(azimuth, geometry.rowAt(azimuth)))}
             onPick={onPick}
           />
           <span ref={read} className="horizon-read" aria-hidden />
@@ -75,7 +83,7 @@ export function HorizonStrip({ hub, rows, units, onPick }: HorizonStripProps) {
   )
 }
 
-const pointed = (azimuthDeg: number, row: HorizonRow | null) => ({
+const placeOn = (azimuthDeg: number, row: HorizonRow | null) => ({
   from: 'horizon' as const,
   at: null,
   azimuthDeg,
@@ -97,5 +105,5 @@ const roughRow = (r: { azimuthDeg: number; elevationDeg: number }): HorizonRow =
   heightM: 0,
   lon: 0,
   lat: 0,
-  obstacle: 'terrain',
+  obstacle: '',
 })

@@ -32,7 +32,7 @@ export function MapPane(props: MapPaneProps) {
   const trial = useChannel(hub.trial)
   const [trouble, setTrouble] = useState<string | null>(null)
   const onError = useCallback((error: unknown) => setTrouble(error instanceof Error ? error.message : String(error)), [])
-  const { base, setBase, glReal } = useSheets(sheets, camera, props, onError)
+  const { base, setBase, gl } = useSheets(sheets, camera, props, onError)
   const chosen = candidates.find((c) => c.id === show.option?.candidate) ?? null
   const lon = chosen?.lon
   const lat = chosen?.lat
@@ -46,7 +46,10 @@ export function MapPane(props: MapPaneProps) {
     },
     [corners, candidates, site, maxRangeM],
   )
-  const showWhole = useCallback((to: FitTo) => camera.set(fitted(camera.get(), placesOf(to), FIT_MARGIN_PX)), [camera, placesOf])
+  const showWhole = useCallback(
+    (to: FitTo) => camera.set(fitted(camera.get(), placesOf(to), FIT_MARGIN_PX, insetOf(stage.current))),
+    [camera, placesOf],
+  )
   const fits = (['range', 'candidates', 'ground'] as const).filter((f) => placesOf(f).length > (f === 'candidates' ? 1 : 0))
   useFirstFit(stage, camera, props, fits.includes('range') ? 'range' : 'ground', showWhole)
   const input = useMapInput(stage, cursor, camera, props, () => showWhole(fits.includes('ground') ? 'ground' : 'range'))
@@ -105,7 +108,7 @@ export function MapPane(props: MapPaneProps) {
           onFit={showWhole}
           fits={fits}
           base={base}
-          glReal={glReal}
+          gl={gl}
           onBase={setBase}
         />
       </div>
@@ -121,6 +124,10 @@ export function MapPane(props: MapPaneProps) {
     </section>
   )
 }
+
+/** Pixels at the left edge that something lies over. */
+const insetOf = (stage: HTMLElement | null): number =>
+  stage?.parentElement ? Number.parseFloat(getComputedStyle(stage.parentElement.querySelector('.map-head') ?? stage).left) - 12 || 0 : 0
 
 /** A chart over the lower half of the map; Esc closes it. */
 function LowerChart({ children, onClose }: { children: MapPaneProps['lower']; onClose: () => void }) {

@@ -1,7 +1,7 @@
 import { useId, useLayoutEffect, useMemo, useRef, useState } from 'react'
 import { Button } from 'react-aria-components'
-import { ladderHeightsM } from '../../core/index.ts'
-import { ladderGeometry } from '../charts/index.ts'
+import { type Ladder, ladderHeightsM } from '../../core/index.ts'
+import { ladderGeometry, textWidth } from '../charts/index.ts'
 import { formatAreaUp, formatHeight, formatMast, formatMetPct, MAP_WORDS, textOf } from '../words/index.ts'
 import { RulerScale } from './ruler/RulerScale.tsx'
 import { BETWEEN_STEP_M, nextStated, snapped } from './ruler/rulerGeometry.ts'
@@ -107,6 +107,7 @@ export function Ruler(props: RulerProps) {
           onLetGo={() => mine && tryHeight(mine.heightM, true)}
           onCancel={putBack}
           onKeyDown={onKeyDown}
+          needWords={(id, px) => needWords(ladder, id, px)}
           describedBy={helpId}
         />
       </div>
@@ -130,7 +131,7 @@ export function Ruler(props: RulerProps) {
         )}
         {geometry.notMet.map((n) => (
           <span key={n.needId} className="not-met" title={n.name}>
-            {n.name} {MAP_WORDS.notMet} {textOf(formatMast(topM))}
+            {MAP_WORDS.needNotMet(MAP_WORDS.needNumber(numberOf(ladder, n.needId)), textOf(formatMast(topM)))}
           </span>
         ))}
       </div>
@@ -139,4 +140,12 @@ export function Ruler(props: RulerProps) {
       </span>
     </div>
   )
+}
+
+/** Needs are known by their place in the study where their names find no room. */
+const numberOf = (ladder: Ladder | null, needId: string): number => 1 + (ladder?.needMetAtM.findIndex((n) => n.needId === needId) ?? 0)
+function needWords(ladder: Ladder | null, needId: string, widthPx: number): string {
+  const name = ladder?.needMetAtM.find((n) => n.needId === needId)?.name ?? needId
+  const whole = MAP_WORDS.needMet(name)
+  return textWidth(whole, 12) <= widthPx ? whole : MAP_WORDS.needMet(MAP_WORDS.needNumber(numberOf(ladder, needId)))
 }

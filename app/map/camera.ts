@@ -39,8 +39,8 @@ export function resized(v: View, width: number, height: number): View {
     worldY: v.worldY - ((v.height - height) / 2) * v.worldPerPx,
   }
 }
-/** Shows all places, `marginPx` from the edge; longitudes are taken on the turn nearest the first. */
-export function fitted(v: View, places: readonly LonLat[], marginPx: number): View {
+/** Shows all places, `marginPx` from the edge and right of `insetPx`, which something covers; longitudes are taken on the turn nearest the first. */
+export function fitted(v: View, places: readonly LonLat[], marginPx: number, insetPx = 0): View {
   if (places.length === 0 || v.width === 0) return v
   const first = worldXFromLon(places[0]!.lon)
   const xs = places.map((p) => {
@@ -49,11 +49,16 @@ export function fitted(v: View, places: readonly LonLat[], marginPx: number): Vi
   })
   const ys = places.map((p) => worldYFromLat(p.lat))
   const box = { west: Math.min(...xs), east: Math.max(...xs), south: Math.min(...ys), north: Math.max(...ys) }
-  const fit = viewOfBox(box, v, marginPx, v.night)
+  const free = { width: Math.max(1, v.width - insetPx), height: v.height }
+  const fit = viewOfBox(box, free, marginPx, v.night)
   const worldPerPx = clamp(fit.worldPerPx, NEAREST, FARTHEST)
   const middleX = (box.west + box.east) / 2
   const middleY = (box.south + box.north) / 2
-  return panned({ ...v, worldPerPx, worldX: middleX - (v.width / 2) * worldPerPx, worldY: middleY + (v.height / 2) * worldPerPx }, 0, 0)
+  return panned(
+    { ...v, worldPerPx, worldX: middleX - (insetPx + free.width / 2) * worldPerPx, worldY: middleY + (v.height / 2) * worldPerPx },
+    0,
+    0,
+  )
 }
 /** The view to paint for a view on the page: device pixels up to a budget, and a margin all round where the budget has room, so that small pans need nothing new. */
 export function paintView(v: View, pixelRatio: number, budgetPx: number, marginPx: number): View {

@@ -31,8 +31,11 @@ export const MAP_WORDS = {
   baseCanvas: 'Plain canvas',
   baseCanvasHint: 'Works everywhere',
   baseGl: 'Graphics processor',
-  baseGlHint: 'Smoother where there is one',
-  baseNoGl: 'No graphics processor in this browser',
+  baseHints: {
+    processor: 'Smoother pan and zoom',
+    software: 'Drawn by software in this browser: slow',
+    none: 'None in this browser',
+  },
   stop: 'Stop',
   left: 'left',
   close: 'Close',
@@ -56,9 +59,9 @@ export const MAP_WORDS = {
   addHeight: (text: string) => `Add ${text}`,
   putBack: 'Put back',
   noMast: 'Place a candidate to see its mast',
-  met: 'met',
-  notMet: 'not met up to',
-  belowGround: 'ground',
+  needMet: (name: string) => `${name} met`,
+  needNotMet: (name: string, text: string) => `${name} not met up to ${text}`,
+  needNumber: (n: number) => `need ${n}`,
 } as const
 
 /** The quantity under the pointer in the unit of the face; a word where there is no number. */

@@ -48,7 +48,7 @@ export function statePatterns(night: boolean): ReadonlyMap<number, Pattern> {
   const veil = night ? NIGHT_VEIL : DAY_INK
   const unknown = pattern(veil, night ? 0.25 : 0.05, ink, night ? 0.3 : 0.34, falling)
   return new Map<number, Pattern>([
-    [CELL.masked, pattern(veil, night ? 0.42 : 0.2, ink, night ? 0.13 : 0.17, rising)],
+    [CELL.masked, pattern(veil, night ? 0.42 : 0.17, ink, night ? 0.12 : 0.13, rising)],
     [CELL.marginal, pattern(veil, night ? 0.2 : 0.08, ink, night ? 0.5 : 0.45, dots)],
     [CELL.beyondVoid, unknown],
     [CELL.outside, unknown],

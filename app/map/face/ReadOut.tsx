@@ -1,7 +1,7 @@
 import { useEffect, useRef } from 'react'
 import { geodesicInverse, type LonLat, type Probe } from '../../../core/index.ts'
 import type { StudyClient } from '../../compute/client.ts'
-import { MAP_WORDS, placeLine, textOf, type UnitSystem, valueLine } from '../../words/index.ts'
+import { formatHeight, formatPosition, MAP_WORDS, placeLine, textOf, type UnitSystem, valueLine } from '../../words/index.ts'
 import type { MapHub } from '../types.ts'
 
 /** Pointer read-out. Written to the page by the pointer itself, never by render. */
@@ -74,8 +74,22 @@ export function ReadOut({
       }
       ask()
     })
+    // a candidate in the hand: where it would stand
+    const writeTrial = () => {
+      const trial = hub.trial.get()
+      if (!trial) return write(hint)
+      if (trial.moving !== 'place') return
+      latest = null
+      known = null
+      const groundM = hub.trialAnswer.get()?.siteGroundM
+      const ground = groundM === undefined ? '' : groundM === null ? MAP_WORDS.noGroundHere : textOf(formatHeight(groundM, units))
+      write(formatPosition(trial), groundM === null ? '' : MAP_WORDS.ground, ground)
+    }
+    const stops = [stop, hub.trial.listen(writeTrial), hub.trialAnswer.listen(writeTrial)]
     write(hint)
-    return stop
+    return () => {
+      for (const end of stops) end()
+    }
   }, [client, hub, site, units, hint])
   return (
     <div className="map-card readout">

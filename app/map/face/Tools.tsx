@@ -1,5 +1,6 @@
 import { Button, Menu, MenuItem, MenuTrigger, Popover } from 'react-aria-components'
 import { MAP_WORDS } from '../../words/index.ts'
+import type { WebglKind } from '../sheets/webgl.ts'
 
 export type FitTo = 'ground' | 'range' | 'candidates'
 export interface ToolsProps {
@@ -7,8 +8,8 @@ export interface ToolsProps {
   readonly onFit: (to: FitTo) => void
   readonly fits: readonly FitTo[]
   readonly base: 'canvas' | 'maplibre'
-  /** Is there a graphics processor to draw the base with? */
-  readonly glReal: boolean
+  /** What would draw the base with WebGL. */
+  readonly gl: WebglKind
   readonly onBase: (base: 'canvas' | 'maplibre') => void
 }
 const FIT_WORDS: Record<FitTo, string> = {
@@ -17,7 +18,7 @@ const FIT_WORDS: Record<FitTo, string> = {
   candidates: MAP_WORDS.fitCandidates,
 }
 /** Zoom, fit and base: small, at the map's edge. */
-export function Tools({ onZoom, onFit, fits, base, glReal, onBase }: ToolsProps) {
+export function Tools({ onZoom, onFit, fits, base, gl, onBase }: ToolsProps) {
   return (
     <div className="tools map-card">
       <Button className="tool" aria-label={MAP_WORDS.zoomIn} onPress={() => onZoom(2)}>
@@ -47,7 +48,7 @@ export function Tools({ onZoom, onFit, fits, base, glReal, onBase }: ToolsProps)
             selectionMode="single"
             disallowEmptySelection
             selectedKeys={[base]}
-            disabledKeys={glReal ? [] : ['maplibre']}
+            disabledKeys={gl === 'none' ? ['maplibre'] : []}
             onAction={(key) => onBase(key as 'canvas' | 'maplibre')}
           >
             <MenuItem id="canvas" textValue={MAP_WORDS.baseCanvas} className="option">
@@ -56,7 +57,7 @@ export function Tools({ onZoom, onFit, fits, base, glReal, onBase }: ToolsProps)
             </MenuItem>
             <MenuItem id="maplibre" textValue={MAP_WORDS.baseGl} className="option">
               {MAP_WORDS.baseGl}
-              <span className="hint">{glReal ? MAP_WORDS.baseGlHint : MAP_WORDS.baseNoGl}</span>
+              <span className="hint">{MAP_WORDS.baseHints[gl]}</span>
             </MenuItem>
           </Menu>
         </Popover>

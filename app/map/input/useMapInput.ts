@@ -26,7 +26,9 @@ export function useMapInput(
   }
   const moveTo = (id: string, x: number, y: number) => {
     const trial = trialOf(id)
-    if (trial) hub.trial.set({ ...trial, ...lonLatAtPixel(camera.get(), x, y) })
+    if (!trial) return
+    hub.pointer.set(null)
+    hub.trial.set({ ...trial, ...lonLatAtPixel(camera.get(), x, y) })
   }
   const letGo = (id: string, kept: boolean) => {
     const trial = hub.trial.get()

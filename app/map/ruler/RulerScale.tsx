@@ -1,11 +1,9 @@
 import { useId, useRef } from 'react'
 import type { LadderGeometry } from '../../charts/index.ts'
-import { textWidth } from '../../charts/index.ts'
 import { formatMast, MAP_WORDS, textOf } from '../../words/index.ts'
 import { labelPlaces } from './rulerGeometry.ts'
 
 const LINE_PX = 14
-const SIZE = 12
 
 export interface RulerScaleProps {
   readonly width: number
@@ -17,6 +15,8 @@ export interface RulerScaleProps {
   readonly stated: readonly number[]
   readonly heightM: number
   readonly topM: number
+  /** What stands at the line of a need, within a width, px. */
+  readonly needWords: (needId: string, widthPx: number) => string
   /** Stands at the mast: `24 m, B`. */
   readonly label: string
   readonly describedBy: string
@@ -107,8 +107,8 @@ export function RulerScale(p: RulerScaleProps) {
         <g key={m.needId} className="met">
           <path d={`M${axisX} ${topPad + m.y}H${right}`} />
           <text x={first + 2} y={met[n]}>
-            {shortened(`${m.name} ${MAP_WORDS.met}`, right - first - 2)}
-            <title>{`${m.name} ${MAP_WORDS.met}`}</title>
+            {p.needWords(m.needId, right - first - 2)}
+            <title>{MAP_WORDS.needMet(m.name)}</title>
           </text>
         </g>
       ))}
@@ -134,13 +134,4 @@ export function RulerScale(p: RulerScaleProps) {
       </g>
     </svg>
   )
-}
-
-/** A name cut to a width, with an ellipsis; the last word (met) is kept. */
-function shortened(text: string, widthPx: number): string {
-  if (textWidth(text, SIZE) <= widthPx) return text
-  const end = text.slice(text.lastIndexOf(' '))
-  let head = text.slice(0, text.lastIndexOf(' '))
-  while (head.length > 1 && textWidth(`${head}…${end}`, SIZE) > widthPx) head = head.slice(0, -1)
-  return `${head.trimEnd()}…${end}`
 }

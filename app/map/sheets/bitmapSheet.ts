@@ -36,6 +36,7 @@ export class BitmapSheet {
   private fade = false
   private rest: ReturnType<typeof setTimeout> | undefined
   private removed = false
+  private queued = false
 
   constructor(
     className: string,
@@ -64,7 +65,7 @@ export class BitmapSheet {
     if (view.width < 1 || view.height < 1) return
     const sameScale = this.picture !== null && before !== null && before.worldPerPx === view.worldPerPx && before.night === view.night
     if (sameScale && covers(this.picture!, view)) this.rest = setTimeout(() => this.request(), REST_MS)
-    else this.request()
+    else this.soon()
   }
 
   /** The content changed; `kin` names what it is of. While there is none to be had, a picture of the same kin is stale, of another it is wrong. */
@@ -72,7 +73,7 @@ export class BitmapSheet {
     this.fade ||= fade
     this.content = kin
     this.serial++
-    this.request()
+    this.soon()
   }
 
   /** Takes the picture away. */
@@ -87,6 +88,16 @@ export class BitmapSheet {
     this.removed = true
     clearTimeout(this.rest)
     this.element.remove()
+  }
+
+  /** Changes of the same turn become one question. */
+  private soon(): void {
+    if (this.queued) return
+    this.queued = true
+    queueMicrotask(() => {
+      this.queued = false
+      this.request()
+    })
   }
 
   private request(): void {

@@ -5,7 +5,7 @@ import type { Channel, MapPaneProps } from '../types.ts'
 import { BitmapSheet, type Picture } from './bitmapSheet.ts'
 import { canvasSurface } from './canvasSurface.ts'
 import type { GroundPainter, MapSurface } from './mapSurface.ts'
-import { webglIsReal } from './webgl.ts'
+import { type WebglKind, webglKind } from './webgl.ts'
 
 const FULL = { px: 1_500_000, marginPx: 96 }
 /** While something is dragged the picture has to follow the hand: no margin, fewer pixels. */
@@ -26,13 +26,13 @@ export function useSheets(
   latest.current = inputs
   const overlay = useRef<BitmapSheet | null>(null)
   const surface = useRef<MapSurface | null>(null)
-  const [glReal, setGlReal] = useState(false)
+  const [gl, setGl] = useState<WebglKind>('none')
   const [base, setBase] = useState<MapSurface['kind']>('canvas')
 
   useEffect(() => {
-    const real = webglIsReal()
-    setGlReal(real)
-    if (real) setBase('maplibre')
+    const kind = webglKind()
+    setGl(kind)
+    if (kind === 'processor') setBase('maplibre')
   }, [])
 
   useEffect(() => {
@@ -116,7 +116,7 @@ export function useSheets(
     if (view.night !== night) camera.set({ ...view, night })
   }, [camera, night])
 
-  return { base, setBase, glReal }
+  return { base, setBase, gl }
 }
 
 const kinOf = (show: MapPaneProps['show']): string => `${show.option?.candidate ?? ''}|${show.layer}|${show.need ?? ''}`
