@@ -113,17 +113,19 @@ export function peaksOf(rows: readonly HorizonRow[], most: number): HorizonRow[]
     seen.add(row.obstacle)
     take(row, 1)
   }
-  const edge = byHeight.find(isEdge)
-  if (edge && !seen.has(edge.obstacle)) take(edge, 1)
   if (byHeight.length === 0) return chosen
+  // The end of the terrain is always said, in the last place.
+  const edge = seen.has(byHeight.find(isEdge)?.obstacle ?? '') ? undefined : byHeight.find(isEdge)
+  const room = edge ? most - 1 : most
   const median = byHeight[byHeight.length >> 1].elevationDeg
   const least = median + LEAST_RISE * (byHeight[0].elevationDeg - median)
   const isPeak = (row: HorizonRow): boolean =>
     rows.every((r) => turn(r.azimuthDeg, row.azimuthDeg) > APART_DEG / 2 || r.elevationDeg <= row.elevationDeg)
   for (const row of byHeight) {
-    if (chosen.length >= most || row.elevationDeg < least) break
+    if (chosen.length >= room || row.elevationDeg < least) break
     if (!isEdge(row) && chosen.every((c) => turn(c.azimuthDeg, row.azimuthDeg) >= APART_DEG) && isPeak(row)) take(row, APART_DEG)
   }
+  if (edge) take(edge, 1)
   return chosen
 }
 const turn = (a: number, b: number): number => {

@@ -35,28 +35,28 @@ export interface Placed extends Want {
 }
 /**
  * Places labels in rows over their x, first come first served: most important first. A label is centred over its
- * point, pushed inside [left, right]; it takes the lowest row where it touches nothing and no leader of a higher label
- * runs through it. What finds no room is left out.
+ * point, else to the right or left of it, pushed inside [left, right]; it takes the lowest row where it touches nothing
+ * and no leader of a higher label runs through it. What finds no room is left out.
  */
 export function placeInRows(wants: readonly Want[], left: number, right: number, size: number, rows: number): Placed[] {
   const placed: Placed[] = []
   const gap = 0.7 * size
+  const clashes = (want: Want, start: number, end: number, row: number): boolean =>
+    placed.some((p) => {
+      const far = p.left + textWidth(p.text, size)
+      if (p.row === row) return start < far + gap && p.left < end + gap
+      // A leader goes down from the label's row to the profile: it must not cross a label of a lower row.
+      return p.row > row ? p.x > start - 3 && p.x < end + 3 : want.x > p.left - 3 && want.x < far + 3
+    })
   for (const want of wants) {
     const width = textWidth(want.text, size)
     if (width > right - left) continue
-    const start = Math.min(right - width, Math.max(left, want.x - width / 2))
-    for (let row = 0; row < rows; row++) {
-      const clash = placed.some((p) => {
-        const far = p.left + textWidth(p.text, size)
-        if (p.row === row) return start < far + gap && p.left < start + width + gap
-        // A leader goes down from the label's row to the profile: it must not cross a label of a lower row.
-        return p.row > row ? p.x > start - 3 && p.x < start + width + 3 : want.x > p.left - 3 && want.x < far + 3
-      })
-      if (!clash) {
-        placed.push({ ...want, left: start, row })
-        break
-      }
-    }
+    const starts = [want.x - width / 2, want.x - 0.3 * size, want.x - width + 0.3 * size].map((x) =>
+      Math.min(right - width, Math.max(left, x)),
+    )
+    const tries = Array.from({ length: rows }, (_, row) => starts.map((start) => ({ row, start }))).flat()
+    const free = tries.find(({ row, start }) => !clashes(want, start, start + width, row))
+    if (free) placed.push({ ...want, left: free.start, row: free.row })
   }
   return placed
 }

@@ -83,17 +83,20 @@ export function formatRoad(m: Maybe, system: UnitSystem): Quantity {
 }
 /** Area of what counts against a site (clutter, masked, short, unknown, folded), km²; UP to 1, to 0.1 under 10. */
 export function formatAreaUp(km2: Maybe, system: UnitSystem): Quantity {
-  return faced('area', km2, system, areaStep(km2, system), 'up')
+  return km2 === 0 ? noArea(system) : faced('area', km2, system, areaStep(km2, system), 'up')
 }
 /** Area of what counts for a site (in sight of a need), km²; DOWN to 1, to 0.1 under 10; below the first step `< 0.1`. */
 export function formatAreaDown(km2: Maybe, system: UnitSystem): Quantity {
+  if (km2 === 0) return noArea(system)
   const q = faced('area', km2, system, areaStep(km2, system), 'down')
   return (km2 ?? 0) > 0 && q.value === '0.0' ? { value: '< 0.1', unit: q.unit } : q
 }
 /** Area as information, km²; nearest 1, or 0.1 under 10. */
 export function formatArea(km2: Maybe, system: UnitSystem): Quantity {
-  return faced('area', km2, system, areaStep(km2, system), 'nearest')
+  return km2 === 0 ? noArea(system) : faced('area', km2, system, areaStep(km2, system), 'nearest')
 }
+/** Exactly none reads `0`, not `0.0`. */
+const noArea = (system: UnitSystem): Quantity => ({ value: '0', unit: unitOf('area', system) })
 const areaStep = (km2: Maybe, system: UnitSystem): number => (toFace('area', km2 ?? 0, system) < 10 ? 0.1 : 1)
 
 /** C/N, clutter strength and RCS, suppression needed, in dB, dBsm…; UP to 1 dB (or the step given). */

@@ -43,6 +43,7 @@ describe('numbers at the face', () => {
     ['clutter area under 10: up to 0.1', t(w.formatAreaUp(0.004, 'metric')), '0.1 km²'],
     ['area in sight: down', t(w.formatAreaDown(2100.9, 'nautical')), '612 NM²'],
     ['area in sight below the first step', t(w.formatAreaDown(0.004, 'metric')), '< 0.1 km²'],
+    ['exactly no area', t(w.formatAreaUp(0, 'metric')), '0 km²'],
     ['area as information: nearest', t(w.formatArea(12.6, 'metric')), '13 km²'],
     ['C/N: up', t(w.formatDbUp(46.01)), '47 dB'],
     ['C/N below noise: up', t(w.formatDbUp(-3.6)), '−3 dB'],

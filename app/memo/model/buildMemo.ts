@@ -1,0 +1,62 @@
+import type { OptionRef } from '../../../core/index.ts'
+import { CAUTIONS, formatDate } from '../../words/index.ts'
+import { candidateBlocks } from './candidatesSection.ts'
+import { optionName } from './cells.ts'
+import { cautionBlocks, comparisonBlocks, modelBlocks, notAssessedBlocks } from './closingSections.ts'
+import { dataBlocks } from './dataSection.ts'
+import { needBlocks } from './needSection.ts'
+import { optionBlocks, optionFinding } from './optionSection.ts'
+import { hasTilts, summaryBlocks } from './summarySection.ts'
+import type { Block, MemoInput, MemoModel, Section } from './types.ts'
+
+/** The memo as ordered sections of words, tables and drawings: the PDF and the app's memo column print the same model. */
+export function buildMemo(input: MemoInput): MemoModel {
+  let figures = 0
+  const figure = (): number => ++figures
+  const sections: Section[] = []
+  const add = (id: string, title: string, blocks: readonly Block[], more: Partial<Section> = {}): void => {
+    sections.push({ id, number: sections.length + 1, title, blocks, ...more })
+  }
+  add('summary', 'Summary', summaryBlocks(input))
+  add('need', 'Need', needBlocks(input), { newPage: true })
+  add('data', 'Data and assumptions', dataBlocks(input))
+  add('candidates', 'Candidates', candidateBlocks(input))
+  for (const r of inStudyOrder(input))
+    add(`option-${r.ref.candidate}-${r.ref.heightM}-${r.ref.tiltDeg}`, optionTitle(input, r.ref), optionBlocks(input, r, figure), {
+      option: r.ref,
+      finding: optionFinding(input, r),
+      newPage: true,
+    })
+  add('comparison', 'Comparison', comparisonBlocks(input, figure), { newPage: true })
+  add('not-assessed', 'Not assessed', notAssessedBlocks())
+  add('cautions', 'Cautions', cautionBlocks())
+  add('models', 'Models and sources', modelBlocks(input))
+  const candidates = input.study.candidates.map((c) => c.id).join(', ')
+  return {
+    title: input.study.name,
+    draft: CAUTIONS.draft,
+    meta: [
+      ['Date', formatDate(input.date)],
+      ['Radar', input.study.radar.name],
+      ['Candidates', candidates],
+      ['Program', `Sightfell ${input.version}`],
+    ],
+    date: input.date,
+    version: input.version,
+    footer: CAUTIONS.draft,
+    sections,
+  }
+}
+function optionTitle(input: MemoInput, ref: OptionRef): string {
+  const name = input.study.candidates.find((c) => c.id === ref.candidate)?.name ?? ref.candidate
+  const own = optionName(ref, hasTilts(input))
+  return name === ref.candidate ? own : own.replace(/^\S+/, (id) => `${id} ${name}`)
+}
+/** Candidates as the study lists them, lower masts first. */
+function inStudyOrder(input: MemoInput): MemoInput['results'] {
+  const rank = new Map(input.study.candidates.map((c, i) => [c.id, i]))
+  return [...input.results].sort(
+    (a, b) =>
+      (rank.get(a.ref.candidate) ?? 0) - (rank.get(b.ref.candidate) ?? 0) || a.ref.heightM - b.ref.heightM || a.ref.tiltDeg - b.ref.tiltDeg,
+  )
+}

@@ -1,0 +1,46 @@
+import type { OptionResult } from '../../../core/index.ts'
+import { formatAreaUp, formatDbUp, formatFloor, formatMetPct, formatScreening } from '../../words/index.ts'
+import { bare, bothUnits, dualBare, optionName } from './cells.ts'
+import type { Cell, Column, MemoInput, TableBlock } from './types.ts'
+
+/** Needs a table shows before it gets too wide; the rest stand in each option's own table. */
+const MOST_NEEDS = 3
+const FLOOR_NM = 20
+
+/** Options as rows, figures as columns; `summary` is the short form of the first page. */
+export function comparisonTable(input: MemoInput, results: readonly OptionResult[], form: 'summary' | 'full'): TableBlock {
+  const { system } = input
+  const tilts = new Set(input.results.map((r) => r.ref.tiltDeg)).size > 1
+  const needs = (results[0]?.figures.needs ?? []).filter((n) => n.notAssessed === null).slice(0, MOST_NEEDS)
+  const first = needs[0]
+  const columns: Column[] = [{ head: 'Option', keep: true }]
+  for (const n of needs) columns.push({ head: `${n.name} in sight`, unit: `%, asked ${n.requiredPct}`, align: 'right', width: 'fill' })
+  if (form === 'full') columns.push({ head: 'Horizon, median', unit: '°', align: 'right', width: 'fill' })
+  columns.push({ head: `Floor at ${FLOOR_NM}\u202fNM, worst`, unit: `${bothUnits('height', system)} MSL`, align: 'right', width: 'fill' })
+  columns.push({ head: 'Ground over 40\u202fdB', unit: bothUnits('area', system), align: 'right', width: 'fill' })
+  if (form === 'full') columns.push({ head: 'C/N, highest', unit: 'dB', align: 'right', width: 'fill' })
+  if (first) {
+    columns.push({ head: 'Suppression needed, 90\u202f%', unit: 'dB', align: 'right', width: 'fill' })
+    if (form === 'full') columns.push({ head: 'Short of it', unit: bothUnits('area', system), align: 'right', width: 'fill' })
+  }
+  const rows = results.map((r) => {
+    const f = r.figures
+    const floor = f.floors.find((x) => Math.round(x.rangeM / 1852) === FLOOR_NM)
+    const cells: Cell[] = [optionName(r.ref, tilts)]
+    for (const n of needs) {
+      const own = f.needs.find((x) => x.needId === n.needId)
+      cells.push(bare(formatMetPct(own?.inSightPct), { explain: `need_${n.needId}_in_sight_pct` }))
+    }
+    if (form === 'full') cells.push(bare(formatScreening(f.horizon.medianDeg), { explain: 'horizon_median_deg' }))
+    cells.push(dualBare((s) => formatFloor(floor?.worstM, s), system, `floor_${FLOOR_NM}nm_worst_m`))
+    cells.push(dualBare((s) => formatAreaUp(f.clutterOverKm2.over40, s), system, 'clutter_over_40_km2'))
+    if (form === 'full') cells.push(bare(formatDbUp(f.cnrPeakDb), { explain: 'clutter_to_noise_peak_db' }))
+    if (first) {
+      const own = f.needs.find((x) => x.needId === first.needId)?.suppression
+      cells.push(bare(formatDbUp(own?.p90Db), { explain: `need_${first.needId}_suppression_needed_90_db` }))
+      if (form === 'full') cells.push(dualBare((s) => formatAreaUp(own?.shortKm2, s), system, `need_${first.needId}_suppression_short_km2`))
+    }
+    return cells
+  })
+  return { kind: 'table', id: `compare-${form}`, columns, rows }
+}

@@ -1,0 +1,96 @@
+import type { NeedFigure, OptionResult } from '../../../core/index.ts'
+import {
+  CAUTIONS,
+  FIRST_PAGE_CAUTIONS,
+  formatAreaUp,
+  formatDbDown,
+  formatDbUp,
+  formatMetPct,
+  NOT_ASSESSED,
+  textOf,
+  withMetric,
+} from '../../words/index.ts'
+import { capital, countWord, inSentence, inWords, optionName } from './cells.ts'
+import { comparisonTable } from './comparisonTable.ts'
+import { inOrder, mustNeeds, ORDER_SENTENCE, reaches, shortfallPct } from './ranking.ts'
+import type { Block, MemoInput } from './types.ts'
+
+/** Options the study asks for. */
+const optionCount = (input: MemoInput): number => input.study.candidates.reduce((n, c) => n + c.mastHeightsM.length * c.tiltsDeg.length, 0)
+export const hasTilts = (input: MemoInput): boolean => new Set(input.results.map((r) => r.ref.tiltDeg)).size > 1
+
+/** First page: what is found, side by side, the cautions, and what is not assessed. */
+export function summaryBlocks(input: MemoInput): Block[] {
+  const ordered = inOrder(input.results)
+  const blocks: Block[] = [{ kind: 'paragraph', role: 'lead', text: leadSentence(input, ordered) }]
+  const rest = restSentences(input, ordered)
+  if (rest !== '') blocks.push({ kind: 'paragraph', text: rest })
+  if (ordered.length > 0) {
+    blocks.push(comparisonTable(input, ordered.slice(0, MOST_ROWS), 'summary'))
+    const left =
+      ordered.length > MOST_ROWS ? ` ${capital(countWord(ordered.length - MOST_ROWS))} further options stand in the comparison.` : ''
+    blocks.push({ kind: 'paragraph', role: 'small', text: ORDER_SENTENCE + left })
+  }
+  blocks.push({ kind: 'caution', texts: firstPageCautions(input) })
+  const what = NOT_ASSESSED.map((n) => inSentence(n.what))
+  blocks.push({
+    kind: 'paragraph',
+    role: 'small',
+    text: `Not assessed in this version: ${inWords(what)}. What each leaves open is listed further on.`,
+  })
+  return blocks
+}
+const MOST_ROWS = 6
+
+/** The first page's cautions; the land table's only while the built-in one is in use. */
+export function firstPageCautions(input: MemoInput): readonly string[] {
+  return FIRST_PAGE_CAUTIONS.filter((id) => id !== 'landTable' || input.study.lowAngleLandTable === null).map((id) => CAUTIONS[id])
+}
+
+function leadSentence(input: MemoInput, ordered: readonly OptionResult[]): string {
+  if (ordered.length === 0) return 'No option has been computed yet: this memo holds the study and nothing of its results.'
+  const tilts = hasTilts(input)
+  const best = ordered[0]
+  const needs = mustNeeds(best)
+  const name = optionName(best.ref, tilts)
+  const clutter = `with ${withMetric((s) => formatAreaUp(best.figures.clutterOverKm2.over40, s), input.system)} of ground over 40\u202fdB`
+  if (needs.length === 0)
+    return `No must need is assessed, so nothing sets one option before another; least ground stands over 40\u202fdB from ${name}, ${clutter}.`
+  const reaching = ordered.filter((r) => shortfallPct(r) === 0)
+  const shares = inWords(needs.map(shareWords))
+  if (reaching.length === 0)
+    return `None of the ${countWord(ordered.length)} options computed brings every must need into sight over the share asked. ${name} comes nearest: ${shares}, ${clutter}.`
+  const many =
+    reaching.length === 1 ? `Only ${name} brings` : `${capital(countWord(reaching.length))} of ${countWord(ordered.length)} options bring`
+  const lead = `${many} every must need into sight over the share asked`
+  return reaching.length === 1
+    ? `${lead}: ${shares}, ${clutter}.`
+    : `${lead}; ${name} has the least clutter of them: ${shares}, ${clutter}.`
+}
+const shareWords = (n: NeedFigure): string =>
+  `${textOf(formatMetPct(n.inSightPct))} of ${n.name} in sight (${textOf(formatMetPct(n.requiredPct))} asked)`
+
+function restSentences(input: MemoInput, ordered: readonly OptionResult[]): string {
+  const out: string[] = []
+  const best = ordered[0]
+  const need = best && mustNeeds(best)[0]
+  if (best && need && need.suppression.p90Db !== null) {
+    const { p90Db, availableDb, shortKm2 } = need.suppression
+    out.push(
+      `Over ${need.name} it needs ${textOf(formatDbUp(p90Db))} of suppression at 90\u202f% of the places in sight, with ${textOf(formatDbDown(availableDb))} available; ${withMetric((s) => formatAreaUp(shortKm2, s), input.system)} fall short.`,
+    )
+  }
+  const lower = best && lowestReaching(ordered, best)
+  if (lower) out.push(`The lowest mast that still brings every must need into sight is ${optionName(lower.ref, hasTilts(input))}.`)
+  const open = best?.figures.needs.filter((n) => n.notAssessed !== null) ?? []
+  if (open.length > 0) out.push(`Not part of this: ${inWords(open.map((n) => `${n.name} (${n.notAssessed})`))}.`)
+  const total = optionCount(input)
+  if (ordered.length > 0 && ordered.length < total)
+    out.push(`${capital(countWord(total - ordered.length))} of ${countWord(total)} options are not computed yet.`)
+  return out.join(' ')
+}
+function lowestReaching(ordered: readonly OptionResult[], best: OptionResult): OptionResult | null {
+  const reaching = ordered.filter((r) => mustNeeds(r).every(reaches) && mustNeeds(r).length > 0)
+  const lowest = [...reaching].sort((a, b) => a.ref.heightM - b.ref.heightM)[0]
+  return lowest && lowest.ref.heightM < best.ref.heightM ? lowest : null
+}

@@ -1,0 +1,286 @@
+import type { Content, ContentTable, CustomTableLayout, TableCell, TDocumentDefinitions } from 'pdfmake/interfaces'
+import { hexOf, svgOf } from '../../charts/index.ts'
+import { textOf } from '../../words/index.ts'
+import {
+  type Block,
+  BODY_PT,
+  type Cell,
+  type Column,
+  type FigureBlock,
+  type MemoModel,
+  type Section,
+  SMALL_PT,
+  type TableBlock,
+  TEXT_WIDTH_PT,
+} from '../model/index.ts'
+
+export const FONT = 'SourceSans'
+export type Paper = 'A4' | 'Letter'
+const INK = hexOf('ink')
+const INK_2 = hexOf('ink-2')
+const INK_3 = hexOf('ink-3')
+const LINE = hexOf('line')
+const WARN = hexOf('warn')
+const PAGE_WIDTH: Record<Paper, number> = { A4: 595.28, Letter: 612 }
+const TITLE_PT = 22
+const SECTION_PT = 13
+
+/** Hairlines between rows, a darker one under the heads, none over or between them. */
+const hairlines = (heads: number): CustomTableLayout => ({
+  hLineWidth: (i, node) => (i < heads ? 0 : i === heads && heads > 0 ? 0.8 : i === 0 || i === node.table.body.length ? 0.5 : 0.4),
+  vLineWidth: () => 0,
+  hLineColor: (i) => (heads > 0 && i === heads ? INK_3 : LINE),
+  paddingLeft: (i) => (i === 0 ? 0 : 4),
+  paddingRight: (i, node) => (i === (node.table.widths?.length ?? 0) - 1 ? 0 : 4),
+  paddingTop: () => 2.4,
+  paddingBottom: () => 1.8,
+})
+const CAUTION_LAYOUT: CustomTableLayout = {
+  hLineWidth: () => 0,
+  vLineWidth: (i) => (i === 0 ? 1.4 : 0),
+  vLineColor: () => WARN,
+  paddingLeft: () => 7,
+  paddingRight: () => 0,
+  paddingTop: () => 1,
+  paddingBottom: () => 1,
+}
+
+/** The whole memo as a document of the PDF printer. */
+export function pdfDefinition(model: MemoModel, paper: Paper): TDocumentDefinitions {
+  const side = (PAGE_WIDTH[paper] - TEXT_WIDTH_PT) / 2
+  const stamp = new Date(/^\d{4}-\d{2}-\d{2}$/.test(model.date) ? `${model.date}T00:00:00Z` : model.date)
+  return {
+    pageSize: paper === 'A4' ? 'A4' : 'LETTER',
+    pageMargins: [side, 56, side, 52],
+    version: '1.7',
+    language: 'en',
+    displayTitle: true,
+    info: {
+      title: `${model.title}: siting memo`,
+      subject: model.draft,
+      creator: `Sightfell ${model.version}`,
+      producer: 'Sightfell',
+      creationDate: stamp,
+      modDate: stamp,
+    },
+    defaultStyle: { font: FONT, fontSize: BODY_PT, color: INK, lineHeight: 1.04 },
+    header: (page) =>
+      page === 1 ? '' : { text: `${model.title}: siting memo`, fontSize: SMALL_PT, color: INK_3, margin: [side, 30, side, 0] },
+    footer: (page, pages) => ({
+      columns: [
+        { text: model.footer, fontSize: SMALL_PT, color: INK_3 },
+        { text: `page ${page} of ${pages}`, fontSize: SMALL_PT, color: INK_3, alignment: 'right', width: 90 },
+      ],
+      margin: [side, 18, side, 0],
+    }),
+    content: [...titleBlock(model), ...model.sections.flatMap((s) => sectionContent(s))],
+  }
+}
+
+function titleBlock(model: MemoModel): Content[] {
+  return [
+    { text: 'Siting memo', fontSize: BODY_PT, color: INK_2, margin: [0, 0, 0, 2] },
+    { text: model.title, fontSize: TITLE_PT, lineHeight: 1.05, margin: [0, 0, 0, 8] },
+    {
+      columns: model.meta.map(([label, text]) => ({
+        width: 'auto',
+        stack: [
+          { text: label, fontSize: SMALL_PT, color: INK_3 },
+          { text, fontSize: BODY_PT },
+        ],
+      })),
+      columnGap: 26,
+      margin: [0, 0, 0, 9],
+    },
+    {
+      table: { widths: ['*'], body: [[{ text: model.draft, bold: true, color: WARN, fontSize: BODY_PT, alignment: 'center' }]] },
+      layout: {
+        hLineWidth: () => 0.8,
+        vLineWidth: () => 0.8,
+        hLineColor: () => WARN,
+        vLineColor: () => WARN,
+        paddingTop: () => 4,
+        paddingBottom: () => 3,
+      },
+      margin: [0, 0, 0, 4],
+    },
+  ]
+}
+
+/** A heading never stands alone: it is kept with the block after it, unless that may itself be broken over pages. */
+function sectionContent(section: Section): Content[] {
+  const heading: Content = {
+    text: `${section.number}  ${section.title}`,
+    fontSize: SECTION_PT,
+    bold: true,
+    margin: [0, section.newPage ? 0 : 12, 0, 5],
+    outline: true,
+    outlineText: `${section.number}  ${section.title}`,
+  }
+  const [first, second] = section.blocks
+  const kept = isLong(first) ? [] : first.kind === 'paragraph' && second && !isLong(second) ? [first, second] : [first]
+  if (section.blocks[kept.length]?.kind === 'caution') kept.push(section.blocks[kept.length])
+  const after = section.blocks.slice(kept.length)
+  const head: Content = {
+    stack: [heading, ...kept.map(blockContent)],
+    unbreakable: true,
+    ...(section.newPage ? { pageBreak: 'before' as const } : {}),
+  }
+  return [head, ...withCautions(after)]
+}
+/** A caution stays with the table or figure it stands under. */
+function withCautions(blocks: readonly Block[]): Content[] {
+  const out: Content[] = []
+  for (let i = 0; i < blocks.length; i++) {
+    const next = blocks[i + 1]
+    if (next?.kind === 'caution' && blocks[i].kind !== 'caution' && !isLong(blocks[i])) {
+      out.push({ stack: [blockContent(blocks[i]), blockContent(next)], unbreakable: true })
+      i++
+    } else out.push(blockContent(blocks[i]))
+  }
+  return out
+}
+const isLong = (block: Block | undefined): boolean => block === undefined || (block.kind === 'table' && !isKept(block))
+
+function blockContent(block: Block): Content {
+  switch (block.kind) {
+    case 'paragraph':
+      return paragraph(block)
+    case 'heading':
+      return { text: block.text, bold: true, margin: [0, 8, 0, 3] }
+    case 'list':
+      return {
+        stack: block.items.map((item) => ({
+          columns: [
+            { width: 8, text: '–', color: INK_3 },
+            { width: '*', text: words(item) },
+          ],
+          fontSize: block.role === 'small' ? SMALL_PT : BODY_PT,
+          color: block.role === 'small' ? INK_2 : INK,
+          margin: [0, 0, 0, 1.5],
+        })),
+        margin: [0, 3, 0, 6],
+      }
+    case 'caution':
+      return {
+        table: {
+          widths: ['*'],
+          body: block.texts.map((text) => [{ text: words(text), fontSize: SMALL_PT, color: INK_2 }]),
+          dontBreakRows: true,
+        },
+        layout: CAUTION_LAYOUT,
+        margin: [0, 2, 0, 8],
+        unbreakable: true,
+      }
+    case 'table':
+      return tableContent(block)
+    case 'figure':
+      return figureContent(block)
+    case 'beside': {
+      const gap = 19
+      return {
+        columns: [
+          { width: block.leftPt, stack: block.left.map(blockContent) },
+          { width: '*', stack: block.right.map(blockContent) },
+        ],
+        columnGap: gap,
+        unbreakable: true,
+      }
+    }
+  }
+}
+
+/** Words as runs that keep `C/N` in one piece: a slash is a place to break a line. */
+function words(text: string): Content[] {
+  return text
+    .split(/(\(?C\/N[,.;:)]?)/)
+    .filter((t) => t !== '')
+    .map((t) => (t.includes('C/N') ? { text: t, noWrap: true } : { text: t }))
+}
+function paragraph(block: Extract<Block, { kind: 'paragraph' }>): Content {
+  if (block.role === 'small') return { text: words(block.text), fontSize: SMALL_PT, color: INK_2, margin: [0, 2, 0, 6] }
+  return { text: words(block.text), margin: [0, 0, 0, 6], ...(block.role === 'lead' ? { bold: true } : {}) }
+}
+
+/** Tables of up to about this many lines are never broken over pages; a longer block kept whole could not be placed at all. */
+const KEPT_LINES = 30
+/** Lines a table will take, estimated high: words per column from the share of the text width it is likely to get. */
+function linesOf({ columns, rows }: TableBlock): number {
+  const fills = columns.filter((c) => c.width === 'fill').length
+  const characters = (c: Column): number => (c.width === 'fill' ? 66 / fills : 24)
+  const height = (cell: Cell, c: Column): number => {
+    const text = typeof cell === 'string' ? cell : cell.text + (cell.also ?? '')
+    return text.split('\n').reduce((sum, line) => sum + Math.max(1, Math.ceil(line.length / characters(c))), 0)
+  }
+  return rows.reduce((sum, row) => sum + Math.max(...row.map((cell, i) => height(cell, columns[i]))), 0)
+}
+const isKept = (block: TableBlock): boolean => linesOf(block) <= KEPT_LINES
+/** Words longer than this are broken even in a column that keeps its words. */
+const LONGEST_KEPT = 34
+function tableContent(block: TableBlock): Content {
+  const { columns, rows, title } = block
+  const kept = isKept(block)
+  const headed = columns.some((c) => c.head !== '')
+  const heads = columns.map(
+    (c): TableCell => ({
+      text: c.unit === undefined ? words(c.head) : [...words(c.head), { text: ` ${c.unit}`, color: INK_3 }],
+      fontSize: SMALL_PT,
+      color: INK_2,
+      alignment: c.align ?? 'left',
+      lineHeight: 1,
+      verticalAlignment: 'bottom',
+    }),
+  )
+  // The title of a table that may be broken is part of its repeated head, so that neither stands alone.
+  const titleRow: TableCell[] = [
+    { text: title ?? '', bold: true, fontSize: SMALL_PT, colSpan: columns.length },
+    ...columns.slice(1).map(() => ''),
+  ]
+  const titled = title !== undefined && !kept && headed
+  const heading = [...(titled ? [titleRow] : []), ...(headed ? [heads] : [])]
+  const table: ContentTable = {
+    table: {
+      headerRows: heading.length,
+      keepWithHeaderRows: 1,
+      dontBreakRows: true,
+      widths: columns.map((c) => (c.width === 'fill' ? '*' : (c.width ?? 'auto'))),
+      body: [...heading, ...rows.map((row) => row.map((cell, i) => cellContent(cell, columns[i])))],
+    },
+    layout: hairlines(heading.length),
+    margin: [0, 2, 0, 8],
+  }
+  if (!kept) return table
+  if (title === undefined) return { stack: [table], unbreakable: true }
+  return { stack: [{ text: title ?? '', bold: true, fontSize: SMALL_PT, margin: [0, 4, 0, 2] }, table], unbreakable: true }
+}
+
+function cellContent(cell: Cell, column: Column): TableCell {
+  const long = (typeof cell === 'string' ? cell : cell.text).length > LONGEST_KEPT
+  const base = { fontSize: SMALL_PT, alignment: column.align ?? ('left' as const), lineHeight: 1, noWrap: column.keep === true && !long }
+  if (typeof cell === 'string') return { text: words(cell), ...base }
+  const runs: Content[] = []
+  if (cell.text !== '') runs.push({ text: cell.text, color: cell.light ? INK_2 : INK })
+  if (cell.unit) runs.push({ text: textOf({ value: '', unit: cell.unit }), color: INK_3 })
+  if (cell.also) runs.push({ text: ` (${cell.also})`, color: INK_3 })
+  if (cell.mark) runs.push({ text: `${runs.length > 0 ? ' ' : ''}${cell.mark}`, color: WARN })
+  return cell.span === undefined ? { text: runs, ...base } : { text: runs, ...base, colSpan: cell.span, alignment: 'left' }
+}
+
+function figureContent(block: FigureBlock): Content {
+  const { drawing, png } = block
+  const caption: Content = {
+    text: [{ text: `Figure ${block.number}  `, color: INK_3 }, ...words(block.caption)],
+    fontSize: SMALL_PT,
+    color: INK_2,
+    margin: [0, 3, 0, 8],
+  }
+  const vector = svgOf(drawing, FONT)
+  const picture: Content[] =
+    png === undefined
+      ? [{ svg: vector, width: drawing.width }]
+      : [
+          { image: png, width: drawing.width, height: drawing.height },
+          { svg: vector, width: drawing.width, relativePosition: { x: 0, y: -drawing.height } },
+        ]
+  return { stack: [...picture, caption], unbreakable: true, margin: [0, 4, 0, 0] }
+}
