@@ -130,13 +130,14 @@ function Need({ need, at }: { need: NeedDoc; at: number }) {
         onCommit={(v) => set('requiredPct', v)}
       />
       <NumberField
-        label="RCS"
+        label={
+          <>RCS{need.rcsM2 ? <span className="ink-3 small"> {textOf(formatSetting(10 * Math.log10(need.rcsM2), 'dBsm'))}</span> : null}</>
+        }
         value={need.rcsM2}
         fallback={1}
         face={{ unit: 'm²', size: 1 }}
         limit={limit('rcsM2')}
         onCommit={(v) => set('rcsM2', v)}
-        help={need.rcsM2 ? textOf(formatSetting(10 * Math.log10(need.rcsM2), 'dBsm')) : undefined}
       />
       <Select
         label="Fluctuation"

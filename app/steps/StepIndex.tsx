@@ -2,6 +2,7 @@ import { Button } from 'react-aria-components'
 import { hasStartingRadar, optionKey, problemsOf, STEPS, type StepId, studyOptions } from '../document/index.ts'
 import { STEP_WORDS } from '../words/index.ts'
 import { useDoc, useGround, useResults, useSession, useView } from './session/index.ts'
+import { Working } from './Working.tsx'
 
 interface StepState {
   readonly words: string
@@ -75,6 +76,7 @@ export function StepIndex() {
           </li>
         ))}
       </ol>
+      <Working />
     </nav>
   )
 }

@@ -2,9 +2,10 @@ import { useRef } from 'react'
 import { useStore } from 'zustand'
 import { redo, renameStudy, undo, undoWords } from '../document/index.ts'
 import { Button, CommitField, Menu } from '../ui/index.ts'
-import { formatDuration, UNIT_SYSTEM_NAMES } from '../words/index.ts'
+import { UNIT_SYSTEM_NAMES } from '../words/index.ts'
 import { PrimaryAction } from './PrimaryAction.tsx'
-import { useDoc, useGround, useResults, useSave, useSession, useView } from './session/index.ts'
+import { useDoc, useSave, useSession, useView } from './session/index.ts'
+import { RunLine } from './Working.tsx'
 
 const clock = new Intl.DateTimeFormat('en-GB', { hour: '2-digit', minute: '2-digit' })
 
@@ -22,43 +23,6 @@ function Saved() {
     <span className={state === 'failed' ? 'saved failed' : 'saved'} role="status">
       {words}
     </span>
-  )
-}
-
-/** What runs, how far, time left, and Stop; or Run while edits are held back. */
-function Working() {
-  const session = useSession()
-  const status = useResults((r) => r.status)
-  const reading = useGround((g) => g.reading)
-  const hold = useView((v) => v.hold)
-  const now = reading ?? status
-  if (!now)
-    return hold ? (
-      <span className="working">
-        <span className="doing">stopped</span>
-        <Button small onPress={session.run}>
-          Run
-        </Button>
-      </span>
-    ) : null
-  const left =
-    status && !reading && status.secondsLeft !== null && status.secondsLeft >= 1 ? ` · ${formatDuration(status.secondsLeft)} left` : ''
-  const share = now.total > 0 ? Math.min(1, now.done / now.total) : 0
-  return (
-    <>
-      <span className="working" role="status" aria-live="off">
-        <span className="doing">
-          {now.doing}
-          {left}
-        </span>
-        {reading ? null : (
-          <Button small onPress={session.stop}>
-            Stop
-          </Button>
-        )}
-      </span>
-      <span className="run-line" style={{ width: `${100 * share}%` }} />
-    </>
   )
 }
 
@@ -137,7 +101,7 @@ export function TopBar() {
       </div>
       <FileMenu />
       <Saved />
-      <Working />
+      <RunLine />
       <span className="spacer" />
       <Button
         look="quiet"

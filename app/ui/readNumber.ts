@@ -3,13 +3,16 @@ import type { FaceUnit } from '../words/index.ts'
 
 export type ReadNumber = { readonly ok: true; readonly value: number | undefined } | { readonly ok: false; readonly why: string }
 
+/** Digits shown: a converted unit has no round values, so that more would only be noise; an untouched field is never applied. */
 const DIGITS = 7
+const CONVERTED_DIGITS = 5
+const decimal = (size: number): boolean => Math.abs(Math.log10(size) - Math.round(Math.log10(size))) < 1e-9
 const SPACES = /[\s\u00a0\u202f\u2009]/g
 
-/** An SI value as it stands in a field: no grouping, at most seven digits. */
+/** An SI value as it stands in a field: no grouping. */
 export function fieldText(si: number | null | undefined, face: FaceUnit): string {
   if (si === null || si === undefined || !Number.isFinite(si)) return ''
-  return String(Number((si / face.size).toPrecision(DIGITS))).replace('-', '−')
+  return String(Number((si / face.size).toPrecision(decimal(face.size) ? DIGITS : CONVERTED_DIGITS))).replace('-', '−')
 }
 
 /** What may stand in a field, in face units: "give 0.03 to 40 GHz". */

@@ -1,63 +1,32 @@
-import { optionKey } from '../../document/index.ts'
-import { Caution, Value } from '../../ui/index.ts'
-import { CAUTIONS, cautionsFor, formatAreaUp, formatFloor, formatMast, formatMetPct, formatScreening, textOf } from '../../words/index.ts'
-import { floorNear, needOf } from '../figuresOf.ts'
-import { useResults, useView } from '../session/index.ts'
+import { lazy, Suspense } from 'react'
+import { Caution } from '../../ui/index.ts'
+import { CAUTIONS, formatMast, textOf } from '../../words/index.ts'
+import { useSession, useView } from '../session/index.ts'
+import { useMemoModel } from './useMemoModel.ts'
 
-/** The figures of the option on show, as the memo will say them. */
+const MemoColumn = lazy(() => import('../../memo/MemoColumn.tsx').then((m) => ({ default: m.MemoColumn })))
+
+/** The memo writing itself for the option on show. A number pressed explains itself over the map. */
 export function MemoAside() {
+  const { view } = useSession()
   const option = useView((v) => v.option)
-  const need = useView((v) => v.need)
-  const system = useView((v) => v.units)
-  const result = useResults((r) => (option ? r.byOption.get(optionKey(option)) : undefined))
-  if (!option) return <p className="ink-2">The memo writes itself here once a candidate is placed</p>
-  if (!result)
+  const model = useMemoModel()
+  if (!model)
     return (
-      <p className="ink-2">
-        {option.candidate} at {textOf(formatMast(option.heightM))}: not computed yet
-      </p>
+      <>
+        <p className="ink-2">
+          {option
+            ? `${option.candidate} at ${textOf(formatMast(option.heightM))}: the memo writes itself here once this is computed`
+            : 'The memo writes itself here once a candidate is placed'}
+        </p>
+        <Caution>
+          {CAUTIONS.prediction} {CAUTIONS.notForNavigation}
+        </Caution>
+      </>
     )
-  const of = needOf(result, need)
-  const { figures } = result
   return (
-    <>
-      <p className="ink-3">
-        Candidate {option.candidate}, {textOf(formatMast(option.heightM))}, draft
-      </p>
-      <table className="table">
-        <tbody>
-          {of ? (
-            <tr>
-              <td className="text">{of.name}, in sight</td>
-              <td>
-                <Value of={formatMetPct(of.inSightPct)} />
-              </td>
-            </tr>
-          ) : null}
-          <tr>
-            <td className="text">Floor at 20 NM, worst</td>
-            <td>
-              <Value of={formatFloor(floorNear(result)?.worstM, system)} />
-            </td>
-          </tr>
-          <tr>
-            <td className="text">Horizon, median</td>
-            <td>
-              <Value of={formatScreening(figures.horizon.medianDeg)} />
-            </td>
-          </tr>
-          <tr>
-            <td className="text">C/N over 40 dB</td>
-            <td>
-              <Value of={formatAreaUp(figures.clutterOverKm2.over40, system)} />
-            </td>
-          </tr>
-        </tbody>
-      </table>
-      {cautionsFor('clutter').map((c) => (
-        <Caution key={c}>{c}</Caution>
-      ))}
-      <Caution>{CAUTIONS.notForNavigation}</Caution>
-    </>
+    <Suspense fallback={null}>
+      <MemoColumn model={model} option={option} onExplain={(figure) => view.getState().set({ chart: 'figure', figure })} />
+    </Suspense>
   )
 }

@@ -36,21 +36,24 @@ async function sha256(blob: Blob): Promise<string> {
   return digest
 }
 
-/** Files of the study with what was read of them. `withDigests` takes their checksums too. */
-export async function memoFiles(session: Session, withDigests: boolean): Promise<MemoFile[]> {
+/** Files of the study with what was read of them, without checksums. */
+export function memoFiles(session: Session): MemoFile[] {
   const { notes } = session.ground.getState()
   const { files } = session.files.getState()
-  const out: MemoFile[] = []
-  for (const name of filesOf(session.study.getState().doc)) {
-    const blob = files.get(name)?.blob
+  return filesOf(session.study.getState().doc).map((name) => {
     const note = notes.find((n) => n.startsWith(`${name}: `))
-    out.push({
-      name,
-      sha256: withDigests && blob ? await sha256(blob) : null,
-      describe: note ? note.slice(name.length + 2) : blob ? 'not read' : 'not here',
-    })
-  }
-  return out
+    return { name, sha256: null, describe: note ? note.slice(name.length + 2) : files.has(name) ? 'not read' : 'not here' }
+  })
+}
+/** The same with the checksum of each file that is here. */
+export async function memoFilesWithDigests(session: Session): Promise<MemoFile[]> {
+  const { files } = session.files.getState()
+  return Promise.all(
+    memoFiles(session).map(async (file) => {
+      const blob = files.get(file.name)?.blob
+      return blob ? { ...file, sha256: await sha256(blob) } : file
+    }),
+  )
 }
 
 /** One picture per option: ground and C/N of the whole range, day colours. Needs the results of each option. */
