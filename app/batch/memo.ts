@@ -11,21 +11,30 @@ import {
   type SettledStudy,
   type StudyDoc,
   type View,
+  viewOfBox,
+  WORLD_WIDTH_M,
   worldXFromLon,
   worldYFromLat,
 } from '../../core/index.ts'
 import { buildMemo, type MemoFile, type MemoMap } from '../memo/model/index.ts'
 
-/** Width and height of a map picture, pixels. */
-const MAP_PX = 1000
+/** Size of a map picture and its margin, pixels: as in the app. */
+const MAP_PX = { width: 920, height: 920 }
+const MAP_MARGIN_PX = 12
 
 /** The view that holds a candidate's circle, north up. */
 export function circleView(at: LonLat, radiusM: number): View {
+  const [north, east, south, west] = [0, 90, 180, 270].map((azimuth) => geodesicDirect(at, azimuth, radiusM)) as [
+    LonLat,
+    LonLat,
+    LonLat,
+    LonLat,
+  ]
   const x = worldXFromLon(at.lon)
-  const y = worldYFromLat(at.lat)
-  const reach = Math.max(worldYFromLat(geodesicDirect(at, 0, radiusM).lat) - y, y - worldYFromLat(geodesicDirect(at, 180, radiusM).lat))
-  const half = 1.03 * reach
-  return { width: MAP_PX, height: MAP_PX, worldX: x - half, worldY: y + half, worldPerPx: (2 * half) / MAP_PX, night: false }
+  // Longitudes on the turn nearest the candidate, so that a circle over the antimeridian stays whole.
+  const near = (lon: number) => worldXFromLon(lon) - WORLD_WIDTH_M * Math.round((worldXFromLon(lon) - x) / WORLD_WIDTH_M)
+  const box = { west: near(west.lon), east: near(east.lon), south: worldYFromLat(south.lat), north: worldYFromLat(north.lat) }
+  return viewOfBox(box, MAP_PX, MAP_MARGIN_PX, false)
 }
 
 /** Clutter-to-noise over shaded ground, as the memo prints it. */
