@@ -19,7 +19,7 @@ export function MemoPages({ model }: { model: MemoModel }) {
       </dl>
       {model.sections.map((s) => (
         <section key={s.id}>
-          <h3>
+          <h3 className="section-head">
             {s.number} {s.title}
           </h3>
           <Blocks blocks={s.blocks} />
