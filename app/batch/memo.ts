@@ -16,7 +16,7 @@ import {
   worldXFromLon,
   worldYFromLat,
 } from '../../core/index.ts'
-import { buildMemo, type MemoFile, type MemoMap } from '../memo/model/index.ts'
+import { buildMemo, type MemoFile, type MemoMap, makePdf, pngDataUrl } from '../memo/index.ts'
 
 /** Size of a map picture and its margin, pixels: as in the app. */
 const MAP_PX = { width: 920, height: 920 }
@@ -24,22 +24,21 @@ const MAP_MARGIN_PX = 12
 
 /** The view that holds a candidate's circle, north up. */
 export function circleView(at: LonLat, radiusM: number): View {
-  const [north, east, south, west] = [0, 90, 180, 270].map((azimuth) => geodesicDirect(at, azimuth, radiusM)) as [
-    LonLat,
-    LonLat,
-    LonLat,
-    LonLat,
-  ]
+  const edge = (azimuthDeg: number) => geodesicDirect(at, azimuthDeg, radiusM)
   const x = worldXFromLon(at.lon)
   // Longitudes on the turn nearest the candidate, so that a circle over the antimeridian stays whole.
   const near = (lon: number) => worldXFromLon(lon) - WORLD_WIDTH_M * Math.round((worldXFromLon(lon) - x) / WORLD_WIDTH_M)
-  const box = { west: near(west.lon), east: near(east.lon), south: worldYFromLat(south.lat), north: worldYFromLat(north.lat) }
+  const box = {
+    west: near(edge(270).lon),
+    east: near(edge(90).lon),
+    south: worldYFromLat(edge(180).lat),
+    north: worldYFromLat(edge(0).lat),
+  }
   return viewOfBox(box, MAP_PX, MAP_MARGIN_PX, false)
 }
 
 /** Clutter-to-noise over shaded ground, as the memo prints it. */
-export async function memoMap(cells: OptionCells, result: OptionResult, radiusM: number): Promise<MemoMap> {
-  const { pngDataUrl } = await import('../memo/pdf/png.ts')
+export function memoMap(cells: OptionCells, result: OptionResult, radiusM: number): MemoMap {
   const view = circleView(cells.place, radiusM)
   const pixels = paintSheet(cells, 'clutter-to-noise', null, view)
   const png = pngDataUrl(pixels, view.width, view.height)
@@ -69,7 +68,6 @@ export interface MemoParts {
 
 /** The memo as PDF bytes; the same model as in the app. */
 export async function memoPdf(parts: MemoParts): Promise<Uint8Array> {
-  const { makePdf } = await import('../memo/pdf/makePdf.ts')
   const fonts = join(createRequire(import.meta.url).resolve('@expo-google-fonts/source-sans-3/package.json'), '..')
   const face = async (name: string) => new Uint8Array(await readFile(join(fonts, name, `SourceSans3_${name}.ttf`)))
   const [regular, semibold] = await Promise.all([face('400Regular'), face('600SemiBold')])

@@ -14,7 +14,7 @@ import {
   type StudyDoc,
   settle,
 } from '../../core/index.ts'
-import type { MemoMap } from '../memo/model/index.ts'
+import type { MemoMap } from '../memo/index.ts'
 import type { CommandLine } from './arguments.ts'
 import { chooseLayers, chooseOptions, EXTRA_LAYERS, narrowed } from './chooseOptions.ts'
 import { encodeGeoTiff } from './geoTiffWriter.ts'
