@@ -9,8 +9,22 @@ export interface ClutterCells extends Held {
   readonly cnrDb: Float32Array
   /** Side-lobe term, one number per range gate, dB; NaN = nil. */
   readonly sideLobeCnrDb: Float32Array
+  /** What is left of it after suppression: Σ Cⱼ/Iⱼ over noise, dB; NaN where cnrDb is NaN. The same array as cnrDb where nothing is suppressed. */
+  readonly residueDb: Float32Array
+  /** Side-lobe part of the residue per range gate, dB; NaN = nil. */
+  readonly sideLobeResidueDb: Float32Array
   /** What the numbers rest on; goes to legend, ledger and memo. */
   readonly notes: readonly ModelNote[]
+}
+/** Improvement factor by kind of clutter, dB: what suppression takes off each before they are added up. */
+export interface ImprovementDb {
+  /** Land, one value per ground code of the ground. */
+  readonly byCode: readonly number[]
+  readonly sea: number
+  readonly rain: number
+  readonly discrete: number
+  /** Second-time-around clutter. */
+  readonly folded: number
 }
 /** Words beside a value, never colours alone. */
 export type ModelMark = 'default' | 'outside model' | 'by hand' | 'from memory'

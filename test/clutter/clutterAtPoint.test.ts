@@ -55,6 +55,26 @@ describe('clutter at a point', () => {
     expect(compared - masked).toBeGreaterThan(200)
   })
 
+  it('equals the cell in what suppression leaves too, with a different improvement for each kind of clutter', () => {
+    const improvementDb = { byCode: [20, 25, 30, 40, 0], sea: 10, rain: 5, discrete: 40, folded: 0 }
+    const left = finish(clutterToNoise(site, mask, ground.codes, place, HEIGHT_M, EARTH, RADAR, 1, { improvementDb }))
+    expect(left.cnrDb).toEqual(cells.cnrDb)
+    const { sideLobeCnrDb, sideLobeResidueDb } = left
+    const at = pointClutter(ground, place, HEIGHT_M, EARTH, RADAR, 1, GRID, { sideLobeCnrDb, sideLobeResidueDb, improvementDb })
+    const random = randomNumbers(11)
+    let compared = 0
+    while (compared < 300) {
+      const cell = Math.floor(random() * mask.state.length)
+      if (isUnknown(mask.state[cell]) || Number.isNaN(left.residueDb[cell])) continue
+      const point = at(cellCentre(place, GRID, cell))
+      expect(Math.abs((point.residueDb ?? Number.NaN) - left.residueDb[cell]), `cell ${cell}`).toBeLessThanOrEqual(0.05)
+      const improvement = left.cnrDb[cell] - left.residueDb[cell]
+      expect(improvement).toBeGreaterThan(10 - 1e-4)
+      expect(improvement).toBeLessThan(40 + 1e-4)
+      compared++
+    }
+  })
+
   it('works out the side-lobe term itself, in the grid and beyond it', () => {
     const short = { ...GRID, ranges: 100 }
     const own = pointClutter(ground, place, HEIGHT_M, EARTH, RADAR, 1, short)

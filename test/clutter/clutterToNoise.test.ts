@@ -1,9 +1,18 @@
 import { describe, expect, it } from 'vitest'
-import { clutterMarks, clutterToNoise, decibel, elevationTangent, gateWeights, slantSquared } from '../../core/clutter/index.ts'
+import {
+  clutterMarks,
+  clutterToNoise,
+  decibel,
+  elevationTangent,
+  gateWeights,
+  type ImprovementDb,
+  slantSquared,
+} from '../../core/clutter/index.ts'
 import { elevationAngleDeg, slantRangeM } from '../../core/geodesy/index.ts'
 import { CELL, type PolarShape } from '../../core/polar/index.ts'
 import { gateLengthM, radarConstantDb } from '../../core/radar/index.ts'
 import { fromDb, RAD_PER_DEG, toDb } from '../../core/units/index.ts'
+import { finish } from '../../core/work/index.ts'
 import { sBandRadar, testRadar } from '../radar/testRadar.ts'
 import { clutterOf, codeOf, EARTH, flatCells, SITE, uniformTable } from './flatCells.ts'
 
@@ -83,6 +92,28 @@ describe('clutter-to-noise over polar cells', () => {
     expect(sideLobeCnrDb[120]).toBeCloseTo(term, 3)
     expect(cnrDb[at(360, 120)]).toBeCloseTo(term, 3)
     expect(cnrDb[at(0, 120)]).toBeCloseTo(toDb(fromDb(quiet) + fromDb(term)), 3)
+  })
+
+  it('leaves a residue: each ground code divided by its own improvement before the sum, side lobes too', () => {
+    const r = testRadar({ antenna: { azimuthBeamwidthDeg: 2, sidelobeDb: -25 } })
+    const cells = flatCells(GRID, 20)
+    for (let i = 0; i < 360; i++) for (let j = 0; j < GRID.ranges; j++) cells.site.code[at(i, j)] = 1
+    const codes = [codeOf('rural'), codeOf('urban')]
+    const run = (improvementDb?: ImprovementDb) =>
+      finish(clutterToNoise(cells.site, cells.mask, codes, SITE, 20, EARTH, r, 0, improvementDb ? { improvementDb } : {}))
+    const same = { sea: 30, rain: 30, discrete: 30, folded: 30 }
+    const plain = run()
+    expect(plain.residueDb).toBe(plain.cnrDb)
+    const even = run({ byCode: [30, 30], ...same })
+    expect(even.residueDb[at(90, 120)] - plain.cnrDb[at(90, 120)]).toBeCloseTo(-30, 4)
+    const { residueDb, cnrDb, sideLobeCnrDb, sideLobeResidueDb } = run({ byCode: [30, 10], ...same })
+    expect(cnrDb).toEqual(plain.cnrDb)
+    const main = (c: number) => fromDb(plain.cnrDb[c]) - fromDb(sideLobeCnrDb[120])
+    const [urban, rural] = [main(at(90, 120)), main(at(450, 120))]
+    const ring = fromDb(sideLobeResidueDb[120])
+    expect(toDb(ring)).toBeCloseTo(toDb((urban / 10 + rural / 1000) / 2) - 50 + toDb(180), 3)
+    expect(residueDb[at(90, 120)]).toBeCloseTo(toDb(urban / 10 + ring), 3)
+    expect(residueDb[at(450, 120)]).toBeCloseTo(toDb(rural / 1000 + ring), 3)
   })
 
   it('is undefined where sight is unknown, inside cτ/2, and where both terms are nil', () => {

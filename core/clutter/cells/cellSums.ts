@@ -19,6 +19,17 @@ export interface CellModel {
   readonly gain: GainTable
   /** Cells nearer than this do not count as used, m. */
   readonly nearestM: number
+  /** What suppression leaves of each ground code's clutter, 1/I, ratio. */
+  readonly left: Float64Array
+}
+/** Where one row of cells is written; null = not wanted. */
+export interface RowSums {
+  /** With two-way elevation gain. */
+  readonly patterned: Float64Array
+  /** The same after suppression. */
+  readonly residual: Float64Array | null
+  /** Without antenna gain or suppression. */
+  readonly plain: Float64Array | null
 }
 
 /**
@@ -44,20 +55,13 @@ export function elevationTangent(antennaM: number, heightM: number, rangeM: numb
 
 /**
  * Clutter of the cells of row i per metre of gate and radian of azimuth: σ°F⁴ × share in sight × slant range × sec ψ, ψ the depression at the
- * ground, m. With two-way elevation gain into `patterned`, without into `plain` (null = not wanted). Adds the ground in sight that took each
- * entry of the strength table to `use` (in proportion to area).
+ * ground, m. Adds the ground in sight that took each entry of the strength table to `use` (in proportion to area).
  */
-export function cellClutter(
-  model: CellModel,
-  cells: CellRows,
-  i: number,
-  patterned: Float64Array,
-  plain: Float64Array | null,
-  use: Float64Array,
-): void {
-  const { antennaM, strength, gain, nearestM } = model
+export function cellClutter(model: CellModel, cells: CellRows, i: number, out: RowSums, use: Float64Array): void {
+  const { antennaM, strength, gain, nearestM, left } = model
   const { edgesRad, bands, sigma } = strength
   const { groundM, code, relief, inSight, centresM } = cells
+  const { patterned, residual, plain } = out
   const ranges = centresM.length
   const c = 1 / cells.effectiveRadiusM[i]
   const from = i * ranges
@@ -68,6 +72,7 @@ export function cellClutter(
     const ground = groundM[at]
     if (seen === 0 || code[at] === 255 || Number.isNaN(ground)) {
       patterned[j] = 0
+      if (residual) residual[j] = 0
       if (plain) plain[j] = 0
       continue
     }
@@ -78,8 +83,10 @@ export function cellClutter(
     if (r >= nearestM) use[entry] += r * seen
     const slant = Math.sqrt(slantSquared(antennaM, ground, r, c) * (1 + depression * depression))
     const value = sigma[entry] * seen * (1 / 65535) * slant
+    const gained = value === 0 ? 0 : value * twoWayGain(gain, elevationTangent(antennaM, ground, r, c))
+    patterned[j] = gained
+    if (residual) residual[j] = gained * left[code[at]]
     if (plain) plain[j] = value
-    patterned[j] = value === 0 ? 0 : value * twoWayGain(gain, elevationTangent(antennaM, ground, r, c))
   }
 }
 

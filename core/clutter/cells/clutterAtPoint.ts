@@ -4,14 +4,14 @@ import { type SightPoint, sightPoint } from '../../masking/index.ts'
 import { isUnknown, type PolarShape } from '../../polar/index.ts'
 import type { RadarInput } from '../../radar/index.ts'
 import type { Ground, Site } from '../../terrain/index.ts'
-import { fromDb, toDb } from '../../units/index.ts'
+import { toDb } from '../../units/index.ts'
 import { chooseRow, type LandChoice } from '../land/landRow.ts'
 import { weibullSpread } from '../land/weibull.ts'
 import type { ModelNote } from '../types.ts'
 import { cellClutter, slantSquared } from './cellSums.ts'
 import { type ClutterLine, clutterLines } from './clutterLines.ts'
-import { type ClutterOptions, optionNotes } from './clutterToNoise.ts'
-import { type GateCells, gateCells, type PointOption, pointOption, sideLobes } from './pointCells.ts'
+import { optionNotes } from './clutterToNoise.ts'
+import { type GateCells, gateCells, type PointOption, type PointOptions, pointOption, sideLobes } from './pointCells.ts'
 
 /** Clutter at one place, on its own rays and range; null = undefined. */
 export interface PointClutter {
@@ -29,6 +29,8 @@ export interface PointClutter {
   readonly cnrDb: number | null
   readonly mainCnrDb: number | null
   readonly sideLobeCnrDb: number | null
+  /** What suppression leaves of `cnrDb`: each kind of clutter divided by its improvement factor, dB over noise. */
+  readonly residueDb: number | null
   /** Area of the whole resolution cell, m², and share of its ground in sight. */
   readonly cellAreaM2: number | null
   readonly shareInSight: number
@@ -37,10 +39,6 @@ export interface PointClutter {
   /** The factors behind RCS and C/N; adding them gives each. */
   readonly lines: readonly ClutterLine[]
   readonly notes: readonly ModelNote[]
-}
-export interface PointOptions extends ClutterOptions {
-  /** Side-lobe term per gate of the grid, from `clutterToNoise` for the same option; worked out when absent. */
-  readonly sideLobeCnrDb?: Float32Array
 }
 /** Evaluates places of one option one after the other; tables and the side-lobe term are made once. */
 export type PointEvaluator = (at: LonLat, sight?: SightPoint) => PointClutter
@@ -60,11 +58,11 @@ export function pointClutter(
   grid: PolarShape,
   options: PointOptions = {},
 ): PointEvaluator {
-  const o = pointOption(g, site, heightM, earth, r, tiltDeg, grid, options.landTable)
+  const o = pointOption(g, site, heightM, earth, r, tiltDeg, grid, options)
   const { model } = o
   const kernel = azimuthKernel(r.antenna.azimuthBeamwidthDeg, grid.azimuthStepDeg)
   const reach = kernel.length >> 1
-  const sideLobeDb = sideLobes(o, options)
+  const sideLobeAt = sideLobes(o, options)
 
   return (at, sight = sightPoint(g, site, heightM, earth, at)) => {
     const { azimuthDeg, rangeM } = sight
@@ -78,7 +76,7 @@ export function pointClutter(
     if (!(slantRangeM >= model.nearestM)) return { ...nothing, slantRangeM, rowName: own?.rowName ?? null }
 
     const sums = sumCell(o, cells, kernel, slantRangeM)
-    const sideLobe = fromDb(sideLobeDb(rangeM)) || 0
+    const sideLobe = sideLobeAt(rangeM)
     const db = (ratio: number): number | null => (ratio > 0 ? toDb(ratio) : null)
     const numbers = {
       azimuthDeg,
@@ -87,9 +85,10 @@ export function pointClutter(
       rowName: own?.rowName ?? null,
       strengthDb: sight.inSight ? (own?.meanDb ?? null) : null,
       rcsDbsm: db(sums.rcsM2),
-      cnrDb: db(sums.main + sideLobe),
+      cnrDb: db(sums.main + sideLobe.all),
       mainCnrDb: db(sums.main),
-      sideLobeCnrDb: db(sideLobe),
+      sideLobeCnrDb: db(sideLobe.all),
+      residueDb: db(sums.left + sideLobe.left),
       cellAreaM2: sums.areaM2,
       shareInSight: sums.share,
       spread: sums.rcsM2 > 0 ? sums.spread / sums.rcsM2 : null,
@@ -123,11 +122,12 @@ function sumCell(o: PointOption, cells: GateCells, kernel: Float64Array, slantRa
   const { gate, middle } = cells
   const patterned = new Float64Array(gate.length)
   const plain = new Float64Array(gate.length)
+  const residual = new Float64Array(gate.length)
   const use = new Float64Array(model.strength.sigma.length)
   const areaM2 = slantRangeM * beamRad * gateM * secantOf(o, cells, kernel.length >> 1)
-  let [rcsM2, main, share, spread] = [0, 0, 0, 0]
+  let [rcsM2, main, left, share, spread] = [0, 0, 0, 0, 0]
   for (let n = 0; n < kernel.length; n++) {
-    cellClutter(model, cells, n, patterned, plain, use)
+    cellClutter(model, cells, n, { patterned, plain, residual }, use)
     const at0 = n * gate.length
     const perRange4 = isUnknown(cells.state[at0 + middle]) ? 0 : constant / slantOf(o, cells, n) ** 4
     for (let k = 0; k < gate.length; k++) {
@@ -136,11 +136,12 @@ function sumCell(o: PointOption, cells: GateCells, kernel: Float64Array, slantRa
       if (plain[k] === 0) continue
       rcsM2 += w * plain[k]
       main += w * patterned[k] * perRange4
+      left += w * residual[k] * perRange4
       const band = choiceOf(o, cells, n, k)?.band
       if (band) spread += w * plain[k] * weibullSpread(band, areaM2)
     }
   }
-  return { areaM2, rcsM2, main, share: share / (beamRad * gateM), spread, use }
+  return { areaM2, rcsM2, main, left, share: share / (beamRad * gateM), spread, use }
 }
 
 /** sec ψ of the middle cell of a row, ψ the depression at the ground. */
@@ -176,6 +177,7 @@ const emptyPoint = (azimuthDeg: number, rangeM: number): PointClutter => ({
   cnrDb: null,
   mainCnrDb: null,
   sideLobeCnrDb: null,
+  residueDb: null,
   cellAreaM2: null,
   shareInSight: 0,
   spread: null,
