@@ -26,7 +26,7 @@ export const NO_PERCENT = 255
 /** Rays halve in number each time the range halves, this many times. */
 const HALVINGS = 10
 /** Rays evaluated together. */
-const BATCH = 64
+const BATCH = 256
 /** Control points of a ray: straight in pixels between them to a tenth of a pixel. */
 const CONTROL_M = 2000
 
