@@ -8,6 +8,8 @@ export interface SuppressionInput {
   readonly pulses: number
   readonly stabilityLimitDb: number | null
   readonly bits: number | null
+  /** Window of a filter bank; absent = hamming. */
+  readonly window?: 'uniform' | 'hamming'
 }
 export interface StcInput {
   readonly kind: 'none' | 'curve' | 'rtoFourth'
@@ -36,4 +38,13 @@ export interface RadarInput {
   readonly suppression: SuppressionInput
   readonly stc: StcInput
   readonly instrumentedRangeM: number
+  /** Loss of an echo that falls between gates and filters, dB; absent = 1. Added to the required ratio of a target. */
+  readonly straddleLossDb?: number
+  /** Loss of an adaptive threshold, dB: stated, or worked out from its reference cells; neither = 0. */
+  readonly cfarLossDb?: number | null
+  readonly cfarReferenceCells?: number | null
+  /** Time after the pulse during which the receiver recovers, s; absent = 0. */
+  readonly recoveryS?: number
+  /** Range of clutter-to-noise the receiver takes linearly, dB; absent = 6.02 bits − 6, or no limit where bits are not stated. */
+  readonly receiverLinearRangeDb?: number | null
 }

@@ -14,8 +14,7 @@ export function checkStudy(study: SettledStudy, doc?: StudyDoc): string[] {
   const out: string[] = []
   const { radar: r, atmosphere: air, run } = study
   study.needs.forEach((n, i) => {
-    if (n.kind !== 'layer') out.push(`needs[${i}] "${n.name}": kind "${n.kind}" is kept, not assessed yet`)
-    else if (n.toRangeM > run.maxRangeM)
+    if (n.kind === 'layer' && n.toRangeM > run.maxRangeM)
       out.push(`needs[${i}] "${n.name}" reaches ${quantity(n.toRangeM, 'm')}, beyond the grid of ${quantity(run.maxRangeM, 'm')}`)
     if (n.kind === 'layer' && n.toRangeM > r.instrumentedRangeM)
       out.push(`needs[${i}] "${n.name}" reaches beyond the instrumented range of ${quantity(r.instrumentedRangeM, 'm')}`)
@@ -24,8 +23,6 @@ export function checkStudy(study: SettledStudy, doc?: StudyDoc): string[] {
   if (doc?.facades) out.push('facades: kept, not assessed yet')
   if (air.rainRateMmH > 0) out.push('atmosphere.rainRateMmH: kept, rain is not assessed yet')
   if (air.gas !== 'none') out.push('atmosphere.gas: kept, gas loss is not assessed yet')
-  if (r.suppression.kind === 'canceller' || r.suppression.kind === 'filterBank')
-    out.push(`radar.suppression: a ${r.suppression.kind} is kept, not assessed yet; available suppression counts as 0 dB`)
   const unambiguous = SPEED_OF_LIGHT_MS / (2 * Math.max(...r.prfHz))
   if (r.instrumentedRangeM > unambiguous * 1.001)
     out.push(

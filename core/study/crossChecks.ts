@@ -5,6 +5,8 @@ import { quantity } from './limits.ts'
 import type { Problem } from './problems.ts'
 import type { CandidateDoc, NeedDoc, RadarDoc, RunDoc, StudyDoc, TerrainFileDoc } from './types.ts'
 
+/** Largest filter bank that is worked out. */
+const MOST_BANK_PULSES = 64
 type Say = (path: string, code: string, found: string, remedy: string) => void
 const m = (value: number) => quantity(value, 'm')
 
@@ -120,6 +122,8 @@ function checkReceiver(r: RadarDoc, say: Say): void {
     say('radar.suppression.statedDb', 'missing', 'stated suppression without a value', 'give the improvement factor in dB')
   if (s?.kind === 'canceller' && s.pulses !== undefined && s.pulses > 4)
     say('radar.suppression.pulses', 'range', `canceller of ${s.pulses} pulses`, 'give 1 to 4 pulses, or use "filterBank"')
+  if (s?.kind === 'filterBank' && s.pulses !== undefined && s.pulses > MOST_BANK_PULSES)
+    say('radar.suppression.pulses', 'range', `bank of ${s.pulses} filters`, `give up to ${MOST_BANK_PULSES}`)
   const stc = r.stc
   if (stc?.kind === 'curve') {
     if ((stc.curve?.length ?? 0) === 0)
@@ -139,10 +143,12 @@ function checkReceiver(r: RadarDoc, say: Say): void {
       if (stc[key] === undefined) say(`radar.stc.${key}`, 'missing', 'is missing', 'give cornerM in m and maxDb in dB for "rtoFourth"')
 }
 
-function checkNeeds(needs: readonly NeedDoc[], say: Say): void {
+function checkNeeds(needs: readonly NeedDoc[], pfa: number | null, say: Say): void {
   needs.forEach((n, i) => {
-    if (n.kind === 'layer' && n.heightM === undefined)
-      say(`needs[${i}].heightM`, 'missing', 'a need of kind "layer" has no height', 'give one height or [floor, ceiling] in m')
+    if ((n.kind === 'layer' || n.kind === 'polygon') && n.heightM === undefined)
+      say(`needs[${i}].heightM`, 'missing', `a need of kind "${n.kind}" has no height`, 'give one height or [floor, ceiling] in m')
+    if (pfa !== null && (n.pd ?? 0.8) <= pfa)
+      say(`needs[${i}].pd`, 'pd', `detection probability ${n.pd} is not above the false-alarm probability ${pfa}`, 'give a larger one')
     if (n.kind !== 'layer' && n.file === undefined)
       say(`needs[${i}].file`, 'missing', `a need of kind "${n.kind}" has no file`, 'name the file beside the study')
     if (n.fromRangeM !== undefined && n.toRangeM !== undefined && n.fromRangeM >= n.toRangeM)
@@ -256,7 +262,7 @@ export function crossChecks(doc: StudyDoc, ok: (part: string) => boolean): Probl
     if (ok('run') && doc.radar.prfHz.length > 0) checkRun(doc.radar, doc.run ?? {}, say)
   }
   if (ok('needs')) {
-    checkNeeds(doc.needs ?? [], say)
+    checkNeeds(doc.needs ?? [], ok('radar') ? (doc.radar.pfa ?? 1e-6) : null, say)
     checkIds(doc.needs ?? [], 'needs', say)
   }
   if (ok('candidates')) {

@@ -5,5 +5,5 @@ export { allowed, LIMITS, type Limit, limitOf, quantity, within } from './limits
 export { newStudy, STARTING_RADAR_NAME } from './newStudy.ts'
 export { type Draft, openDraft, parseStudy } from './parse.ts'
 export { problemSentence } from './problems.ts'
-export { DEFAULT_REQUIRED_RATIO_DB, optionsOf, settle } from './settle.ts'
+export { optionsOf, settle } from './settle.ts'
 export * from './types.ts'

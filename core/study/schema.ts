@@ -49,6 +49,10 @@ const atmosphere = z.looseObject({
   rainRateMmH: num('atmosphere.rainRateMmH').optional(),
   windMs: num('atmosphere.windMs').optional(),
   seaState: num('atmosphere.seaState').optional(),
+  seaSpreadMs: num('atmosphere.seaSpreadMs').nullable().optional(),
+  seaMeanMs: num('atmosphere.seaMeanMs').nullable().optional(),
+  rainSpreadMs: num('atmosphere.rainSpreadMs').nullable().optional(),
+  rainMeanMs: num('atmosphere.rainMeanMs').nullable().optional(),
 })
 const antenna = z.looseObject({
   gainDbi: num('radar.antenna.gainDbi'),
@@ -86,6 +90,7 @@ const radar = z.looseObject({
       pulses: num('radar.suppression.pulses').optional(),
       stabilityLimitDb: num('radar.suppression.stabilityLimitDb').optional(),
       bits: num('radar.suppression.bits').optional(),
+      window: z.enum(['uniform', 'hamming']).optional(),
     })
     .optional(),
   stc: z
@@ -97,6 +102,11 @@ const radar = z.looseObject({
     })
     .optional(),
   instrumentedRangeM: num('radar.instrumentedRangeM').optional(),
+  straddleLossDb: num('radar.straddleLossDb').optional(),
+  cfarLossDb: num('radar.cfarLossDb').nullable().optional(),
+  cfarReferenceCells: num('radar.cfarReferenceCells').nullable().optional(),
+  recoveryS: num('radar.recoveryS').optional(),
+  receiverLinearRangeDb: num('radar.receiverLinearRangeDb').nullable().optional(),
 })
 /** One height or [floor, ceiling]. */
 const levelOrBand = z.unknown().superRefine((value, ctx) => {
@@ -128,6 +138,8 @@ const need = z.looseObject({
   toRangeM: num('needs[].toRangeM').optional(),
   sectorDeg: z.tuple([num('needs[].sectorDeg[]'), num('needs[].sectorDeg[]')]).optional(),
   file: fileName.optional(),
+  speedMs: num('needs[].speedMs').nullable().optional(),
+  qnhHpa: num('needs[].qnhHpa').nullable().optional(),
 })
 const candidate = z.looseObject({
   id,

@@ -1,3 +1,4 @@
+import { DEFAULT_STRADDLE_LOSS_DB, requiredRatio } from '../detection/index.ts'
 import { InputError } from '../errors/index.ts'
 import type { RadarInput } from '../radar/index.ts'
 import { checkDoc } from './checkDoc.ts'
@@ -5,9 +6,6 @@ import { instrumentedRangeOf } from './crossChecks.ts'
 import { defaultAzimuthStepDeg, defaultRangeStepM, evenStepDeg, gateOfM } from './grid.ts'
 import { limitOf } from './limits.ts'
 import type { CandidateDoc, DefaultUsed, NeedDoc, RadarDoc, SettledCandidate, SettledNeed, SettledStudy, StudyDoc } from './types.ts'
-
-/** Signal-to-noise ratio asked for where none is stated, dB. */
-export const DEFAULT_REQUIRED_RATIO_DB = 13
 
 /** Takes what is stated, else the default, and writes the default down. */
 class Defaults {
@@ -65,9 +63,15 @@ function settleRadar(r: RadarDoc, instrumentedRangeM: number, d: Defaults): Rada
       pulses: takesPulses ? d.take('radar.suppression.pulses', s?.pulses, kind === 'canceller' ? 3 : 8) : (s?.pulses ?? 1),
       stabilityLimitDb: s?.stabilityLimitDb ?? null,
       bits: s?.bits ?? null,
+      ...(kind === 'filterBank' ? { window: d.take('radar.suppression.window', s?.window, 'hamming') } : {}),
     },
     stc: { kind: stcKind, curve: r.stc?.curve ?? [], cornerM: r.stc?.cornerM ?? 0, maxDb: r.stc?.maxDb ?? 0 },
     instrumentedRangeM: d.take('radar.instrumentedRangeM', r.instrumentedRangeM, instrumentedRangeM),
+    straddleLossDb: d.take('radar.straddleLossDb', r.straddleLossDb, DEFAULT_STRADDLE_LOSS_DB),
+    cfarLossDb: r.cfarLossDb ?? (r.cfarReferenceCells == null ? d.take('radar.cfarLossDb', undefined, 0) : null),
+    cfarReferenceCells: r.cfarReferenceCells ?? null,
+    recoveryS: d.take('radar.recoveryS', r.recoveryS, 0),
+    receiverLinearRangeDb: r.receiverLinearRangeDb ?? null,
   }
 }
 
@@ -79,18 +83,22 @@ function levels(heightM: NeedDoc['heightM']): readonly number[] {
   return [0, 1, 2, 3, 4].map((n) => floor + ((ceiling - floor) * n) / 4)
 }
 
-function settleNeed(n: NeedDoc, i: number, maxRangeM: number, d: Defaults): SettledNeed {
+function settleNeed(n: NeedDoc, i: number, radar: RadarInput, maxRangeM: number, d: Defaults): SettledNeed {
   const path = (key: string) => `needs[${i}].${key}`
-  const ratioStated = n.requiredRatioDb ?? undefined
+  const swerling = d.take(path('swerling'), n.swerling, 1)
+  const pd = d.take(path('pd'), n.pd, 0.8)
+  const required = requiredRatio(radar, { pd, swerling, statedRatioDb: n.requiredRatioDb ?? null })
   return {
     id: n.id,
     name: n.name ?? n.id,
     must: d.take(path('must'), n.must, true),
     rcsM2: d.take(path('rcsM2'), n.rcsM2, 1),
-    swerling: d.take(path('swerling'), n.swerling, 1),
-    pd: d.take(path('pd'), n.pd, 0.8),
-    requiredRatioDb: d.take(path('requiredRatioDb'), ratioStated, DEFAULT_REQUIRED_RATIO_DB),
-    requiredRatioMark: ratioStated === undefined ? 'default' : null,
+    swerling,
+    pd,
+    requiredRatioDb: required.ratioDb,
+    requiredRatioBy: required.by,
+    requiredRatioMark: null,
+    required,
     requiredPct: d.take(path('requiredPct'), n.requiredPct, 100),
     kind: n.kind,
     levelsM: levels(n.heightM),
@@ -98,6 +106,9 @@ function settleNeed(n: NeedDoc, i: number, maxRangeM: number, d: Defaults): Sett
     fromRangeM: d.take(path('fromRangeM'), n.fromRangeM, 0),
     toRangeM: d.take(path('toRangeM'), n.toRangeM, maxRangeM),
     sectorDeg: n.sectorDeg ?? [0, 360],
+    file: n.file ?? null,
+    speedMs: n.speedMs ?? null,
+    qnhHpa: n.qnhHpa ?? null,
   }
 }
 
@@ -141,6 +152,10 @@ export function settle(doc: StudyDoc, fileName?: string): SettledStudy {
     rainRateMmH: d.take('atmosphere.rainRateMmH', air?.rainRateMmH, 0),
     windMs: d.take('atmosphere.windMs', air?.windMs, 8),
     seaState: d.take('atmosphere.seaState', air?.seaState, 3),
+    seaSpreadMs: air?.seaSpreadMs ?? null,
+    seaMeanMs: air?.seaMeanMs ?? null,
+    rainSpreadMs: air?.rainSpreadMs ?? null,
+    rainMeanMs: air?.rainMeanMs ?? null,
   }
   const radar = settleRadar(doc.radar, instrumentedRangeOf(doc.radar, doc.run), d)
   const maxRangeM = d.take('run.maxRangeM', doc.run?.maxRangeM, radar.instrumentedRangeM)
@@ -166,7 +181,7 @@ export function settle(doc: StudyDoc, fileName?: string): SettledStudy {
     lowAngleLandTable: doc.tables?.lowAngleLand ?? null,
     atmosphere,
     radar,
-    needs: (doc.needs ?? []).map((n, i) => settleNeed(n, i, maxRangeM, d)),
+    needs: (doc.needs ?? []).map((n, i) => settleNeed(n, i, radar, maxRangeM, d)),
     candidates: doc.candidates.map((c, i) => settleCandidate(c, i, radar.antenna.tiltDeg, d)),
     run: { maxRangeM, rangeStepM, azimuthStepDeg },
     defaults: d.used,

@@ -1,3 +1,4 @@
+import type { RequiredRatio } from '../detection/index.ts'
 import type { TerrainName } from '../landcover/index.ts'
 import type { RadarInput } from '../radar/index.ts'
 
@@ -49,9 +50,15 @@ export interface RadarDoc {
     pulses?: number
     stabilityLimitDb?: number
     bits?: number
+    window?: 'uniform' | 'hamming'
   }
   stc?: { kind: 'none' | 'curve' | 'rtoFourth'; curve?: [number, number][]; cornerM?: number; maxDb?: number }
   instrumentedRangeM?: number
+  straddleLossDb?: number
+  cfarLossDb?: number | null
+  cfarReferenceCells?: number | null
+  recoveryS?: number
+  receiverLinearRangeDb?: number | null
 }
 export interface NeedDoc {
   id: string
@@ -70,6 +77,10 @@ export interface NeedDoc {
   toRangeM?: number
   sectorDeg?: [number, number]
   file?: string
+  /** Speed over ground of a target on a track, m/s: gaps in seconds, radial speeds. */
+  speedMs?: number | null
+  /** Pressure setting that turns flight levels of a fix file into heights, hPa. */
+  qnhHpa?: number | null
 }
 export interface CandidateDoc {
   id: string
@@ -89,6 +100,11 @@ export interface AtmosphereDoc {
   rainRateMmH?: number
   windMs?: number
   seaState?: number
+  /** How sea and rain echoes move, m/s: spread and mean radial velocity; absent = worked out from the wind. */
+  seaSpreadMs?: number | null
+  seaMeanMs?: number | null
+  rainSpreadMs?: number | null
+  rainMeanMs?: number | null
 }
 export interface RunDoc {
   maxRangeM?: number
@@ -127,9 +143,11 @@ export interface SettledNeed {
   readonly rcsM2: number
   readonly swerling: 0 | 1 | 2 | 3 | 4
   readonly pd: number
-  /** D0, dB: stated, or 13 dB marked default. */
+  /** Ratio of echo to noise, and to noise and residue, that a target must reach, dB: stated, or worked out (`required` says from what). */
   readonly requiredRatioDb: number
+  readonly requiredRatioBy: 'stated' | 'detection'
   readonly requiredRatioMark: 'default' | null
+  readonly required: RequiredRatio
   /** Share of the area that must be met, %; 100 unless stated. */
   readonly requiredPct: number
   readonly kind: NeedDoc['kind']
@@ -139,6 +157,10 @@ export interface SettledNeed {
   readonly fromRangeM: number
   readonly toRangeM: number
   readonly sectorDeg: readonly [number, number]
+  /** File of fixes, track or polygon; null for a layer. */
+  readonly file: string | null
+  readonly speedMs: number | null
+  readonly qnhHpa: number | null
 }
 export interface SettledCandidate {
   readonly id: string
@@ -175,6 +197,10 @@ export interface SettledStudy {
     readonly rainRateMmH: number
     readonly windMs: number
     readonly seaState: number
+    readonly seaSpreadMs: number | null
+    readonly seaMeanMs: number | null
+    readonly rainSpreadMs: number | null
+    readonly rainMeanMs: number | null
   }
   readonly radar: RadarInput
   readonly needs: readonly SettledNeed[]

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { canonicalJson, checkStudy, optionsOf, type StudyDoc, settle } from '../../core/index.ts'
+import { canonicalJson, checkStudy, optionsOf, requiredSnrDb, type StudyDoc, settle } from '../../core/index.ts'
 import { minimal, withValue } from './fixture.ts'
 
 const settled = (path?: string, value?: unknown) => settle((path === undefined ? minimal() : withValue(path, value)) as StudyDoc)
@@ -61,18 +61,22 @@ describe('defaults', () => {
 
 describe('needs', () => {
   const need = (over: object) => settled('needs', [{ id: 'n', kind: 'layer', heightM: 300, ...over }]).needs[0]!
-  it('required ratio null or absent is 13 dB, marked default', () => {
-    expect(need({})).toMatchObject({ requiredRatioDb: 13, requiredRatioMark: 'default' })
-    expect(need({ requiredRatioDb: null })).toMatchObject({ requiredRatioDb: 13, requiredRatioMark: 'default' })
-    expect(need({ requiredRatioDb: 15 })).toMatchObject({ requiredRatioDb: 15, requiredRatioMark: null })
+  it('required ratio null or absent is worked out from Pd, Pfa, case and pulses with its losses; stated overrides', () => {
+    // 1.6 deg at 900 Hz and 10 rpm: 24 pulses in the beam, all of them counted without a canceller
+    const d0 = requiredSnrDb(0.8, 1e-6, 24, 1)
+    for (const n of [need({}), need({ requiredRatioDb: null })]) {
+      expect(n.requiredRatioBy).toBe('detection')
+      expect(n.required.pulses).toBeCloseTo(24, 9)
+      expect(n.requiredRatioDb).toBeCloseTo(d0 + 1.24 + 1, 9)
+    }
+    expect(need({ requiredRatioDb: 15 })).toMatchObject({ requiredRatioDb: 15, requiredRatioBy: 'stated' })
   })
   it('a band of heights is tested at floor, ceiling and three between', () => {
     expect(need({ heightM: [100, 500] }).levelsM).toEqual([100, 200, 300, 400, 500])
   })
-  it('kinds not assessed yet are kept and reported', () => {
-    const study = settled('needs', [{ id: 'n', name: 'Route', kind: 'track', file: 'route.csv' }])
-    expect(study.needs[0]).toMatchObject({ kind: 'track', levelsM: [] })
-    expect(checkStudy(study)).toContain('needs[0] "Route": kind "track" is kept, not assessed yet')
+  it('a need of fixes, track or polygon keeps its file, speed and pressure setting', () => {
+    const study = settled('needs', [{ id: 'n', name: 'Route', kind: 'track', file: 'route.csv', speedMs: 70, qnhHpa: 1013 }])
+    expect(study.needs[0]).toMatchObject({ kind: 'track', levelsM: [], file: 'route.csv', speedMs: 70, qnhHpa: 1013 })
   })
 })
 
