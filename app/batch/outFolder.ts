@@ -1,4 +1,4 @@
-import { mkdirSync, mkdtempSync, readdirSync, readFileSync, renameSync, rmdirSync, rmSync, statSync } from 'node:fs'
+import { chmodSync, mkdirSync, mkdtempSync, readdirSync, readFileSync, renameSync, rmdirSync, rmSync, statSync } from 'node:fs'
 import { basename, dirname, join, resolve } from 'node:path'
 import { InputError } from '../../core/index.ts'
 
@@ -49,6 +49,7 @@ export function openOutFolder(dir: string): OutFolder {
   try {
     mkdirSync(parent, { recursive: true })
     workDir = mkdtempSync(join(parent, `.${basename(place)}-part-`))
+    chmodSync(workDir, 0o777 & ~process.umask())
   } catch (error) {
     throw fault(`nothing can be written beside it (${(error as NodeJS.ErrnoException).code ?? 'unknown reason'})`)
   }
