@@ -26,7 +26,11 @@ export interface HorizonGeometry {
   /** Row nearest an azimuth, deg. */
   rowAt(azimuthDeg: number): HorizonRow | null
 }
-const isEdge = (row: HorizonRow): boolean => row.obstacle.startsWith('at least')
+const AT_LEAST = 'at least'
+/** Does the ground beyond stay unknown, so that the angle is a lower bound? */
+export const isAtLeast = (row: HorizonRow): boolean => row.obstacle.startsWith(AT_LEAST)
+/** Why: `edge of terrain`, `void in terrain`. */
+export const whyAtLeast = (row: HorizonRow): string => row.obstacle.slice(AT_LEAST.length).replace(/^: */, '')
 /** Peaks within this many degrees of a named one are the same feature to the reader. */
 const APART_DEG = 14
 /** A further peak is named when it rises over the median by this share of what the highest one does. */
@@ -34,7 +38,8 @@ const LEAST_RISE = 0.2
 
 /** Horizon profile: elevation of the horizon against azimuth from true north, controlling points named over it. */
 export function horizonChart(input: HorizonInput): HorizonGeometry {
-  const { rows, width, height, size, style } = input
+  const { width, height, size, style } = input
+  const rows = input.rows.filter((r) => Number.isFinite(r.elevationDeg))
   const strip = style === 'strip'
   const named = peaksOf(rows, input.labels ?? (strip ? 4 : 8))
   const rowCount = strip ? 1 : 2
@@ -109,13 +114,13 @@ export function peaksOf(rows: readonly HorizonRow[], most: number): HorizonRow[]
   if (byHeight.length > 0) take(byHeight[0], 0)
   const seen = new Set(chosen.map((c) => c.obstacle))
   for (const row of byHeight) {
-    if (plain.has(row.obstacle) || isEdge(row) || seen.has(row.obstacle)) continue
+    if (plain.has(row.obstacle) || isAtLeast(row) || seen.has(row.obstacle)) continue
     seen.add(row.obstacle)
     take(row, 1)
   }
   if (byHeight.length === 0) return chosen
   // The end of the terrain is always said, in the last place.
-  const edge = seen.has(byHeight.find(isEdge)?.obstacle ?? '') ? undefined : byHeight.find(isEdge)
+  const edge = seen.has(byHeight.find(isAtLeast)?.obstacle ?? '') ? undefined : byHeight.find(isAtLeast)
   const room = edge ? most - 1 : most
   const median = byHeight[byHeight.length >> 1].elevationDeg
   const least = median + LEAST_RISE * (byHeight[0].elevationDeg - median)
@@ -123,7 +128,7 @@ export function peaksOf(rows: readonly HorizonRow[], most: number): HorizonRow[]
     rows.every((r) => turn(r.azimuthDeg, row.azimuthDeg) > APART_DEG / 2 || r.elevationDeg <= row.elevationDeg)
   for (const row of byHeight) {
     if (chosen.length >= room || row.elevationDeg < least) break
-    if (!isEdge(row) && chosen.every((c) => turn(c.azimuthDeg, row.azimuthDeg) >= APART_DEG) && isPeak(row)) take(row, APART_DEG)
+    if (!isAtLeast(row) && chosen.every((c) => turn(c.azimuthDeg, row.azimuthDeg) >= APART_DEG) && isPeak(row)) take(row, APART_DEG)
   }
   if (edge) take(edge, 1)
   return chosen
@@ -132,12 +137,12 @@ const turn = (a: number, b: number): number => {
   const d = Math.abs(a - b) % 360
   return d > 180 ? 360 - d : d
 }
-const nameOf = (row: HorizonRow): string => (isEdge(row) ? 'at least, the terrain ends there' : row.obstacle)
+const nameOf = (row: HorizonRow): string => (isAtLeast(row) ? `at least, ${whyAtLeast(row)}` : row.obstacle)
 
-/** `Harl Edge 6.3 NM, 0.62°`; at the edge of terrain `≥ 0.12°, edge of terrain`. */
+/** `Harl Edge 6.3 NM, 0.62°`; where the ground beyond is unknown `at least 0.12°, edge of terrain`. */
 export function labelOf(row: HorizonRow, system: UnitSystem): string {
   const angle = textOf(formatScreening(row.elevationDeg))
-  if (isEdge(row)) return `at least ${angle}, edge of terrain`
+  if (isAtLeast(row)) return `at least ${angle}, ${whyAtLeast(row)}`
   return `${row.obstacle} ${textOf(formatPlaceRange(row.rangeM, system))}, ${angle}`
 }
 
@@ -152,7 +157,7 @@ function edgePath(rows: readonly HorizonRow[], azimuth: Scale, elevation: Scale,
   const all = closed(rows)
   return pathOf(
     all.map((r, i): Point => {
-      const shown = isEdge(r) === edge || (edge && i > 0 && isEdge(all[i - 1]))
+      const shown = isAtLeast(r) === edge || (edge && i > 0 && isAtLeast(all[i - 1]))
       return shown ? [azimuth.at(r.azimuthDeg), elevation.at(r.elevationDeg)] : [Number.NaN, 0]
     }),
   )

@@ -49,7 +49,7 @@ describe('the memo', () => {
   it('leads with the option that misses least of the must needs, and never says pass', () => {
     expect(inOrder(sampleResults)[0].ref).toEqual({ candidate: 'A', heightM: 24, tiltDeg: 1.5 })
     const words = wordsOf(model, 'summary')
-    expect(words).toContain('None of the five options computed brings every must need into sight over the share asked.')
+    expect(words).toContain('None of the five options computed brings the share asked of every must need into sight.')
     expect(words).toContain('A at 24 m comes nearest: 89 % of Ferry approach in sight (95 % asked)')
     expect(words).toContain('Harbour fixes (needs of fixes are not assessed yet)')
     expect(words).not.toMatch(/\bpass(es|ed)?\b|\busable in\b/)
@@ -100,7 +100,7 @@ describe('the memo', () => {
     }))
     const words = wordsOf(buildMemo({ ...input, results }), 'summary')
     expect(words).toContain(
-      'Three of five options bring every must need into sight over the share asked; A at 12 m has the least clutter of them',
+      'Three of five options bring the share asked of every must need into sight; A at 12 m has the least clutter of them',
     )
   })
   it('holds the study alone while nothing is computed', () => {

@@ -25,7 +25,7 @@ export function candidateBlocks(input: MemoInput): Block[] {
       columns: [
         { head: '' },
         { head: 'Candidate', width: 'fill' },
-        { head: 'Position, WGS 84', keep: true },
+        { head: 'Position, WGS\u00a084' },
         { head: 'Ground MSL', align: 'right', keep: true },
         { head: 'Mast heights', align: 'right' },
         { head: 'Electrical centre MSL', align: 'right', keep: true },

@@ -67,7 +67,7 @@ function shortWords(r: OptionResult): string {
     if (!reaches(n)) {
       const behind = n.worst ? `, worst behind ${n.worst.obstacle} at azimuth ${Math.round(n.worst.azimuthDeg)}°` : ''
       reasons.push(
-        `${n.must ? '' : 'wish '}${n.name}: ${textOf(formatMetPct(n.inSightPct))} in sight, ${textOf(formatMetPct(n.requiredPct))} asked${behind}`,
+        `${n.name}${n.must ? '' : ' (wish)'}: ${textOf(formatMetPct(n.inSightPct))} in sight, ${textOf(formatMetPct(n.requiredPct))} asked${behind}`,
       )
     }
     const s = n.suppression
@@ -134,7 +134,11 @@ export function modelBlocks(input: MemoInput): Block[] {
         }
       : { model: 'Low-angle land clutter table', source: `The study's own: ${own}`, basis: 'by hand' }
   const marks = new Map<string, Set<string>>()
-  for (const r of input.results) for (const m of r.figures.marks) marks.set(m.about, (marks.get(m.about) ?? new Set()).add(m.mark))
+  for (const r of input.results)
+    for (const m of r.figures.marks) {
+      const about = m.about.replace(`, ${m.mark}`, '')
+      marks.set(about, (marks.get(about) ?? new Set()).add(m.mark))
+    }
   const blocks: Block[] = [
     {
       kind: 'table',

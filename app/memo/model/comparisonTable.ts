@@ -1,11 +1,27 @@
-import type { OptionResult } from '../../../core/index.ts'
-import { formatAreaUp, formatDbUp, formatFloor, formatMetPct, formatScreening } from '../../words/index.ts'
+import { M_PER_NM, type OptionResult } from '../../../core/index.ts'
+import {
+  formatAreaUp,
+  formatDbUp,
+  formatFloor,
+  formatMetPct,
+  formatScreening,
+  formatSetting,
+  textOf,
+  toFace,
+  unitOf,
+} from '../../words/index.ts'
 import { bare, bothUnits, dualBare, optionName } from './cells.ts'
 import type { Cell, Column, MemoInput, TableBlock } from './types.ts'
 
 /** Needs a table shows before it gets too wide; the rest stand in each option's own table. */
 const MOST_NEEDS = 3
+/** Ground range of the floor that stands for an option, NM; a shorter one where the polar grid ends sooner. */
 const FLOOR_NM = 20
+function floorNm(results: readonly OptionResult[]): number {
+  const known = results.flatMap((r) => r.figures.floors.filter((f) => f.worstM !== null).map((f) => Math.round(f.rangeM / M_PER_NM)))
+  const reached = known.filter((nm) => nm <= FLOOR_NM)
+  return reached.length === 0 ? FLOOR_NM : Math.max(...reached)
+}
 
 /** Options as rows, figures as columns; `summary` is the short form of the first page. */
 export function comparisonTable(input: MemoInput, results: readonly OptionResult[], form: 'summary' | 'full'): TableBlock {
@@ -13,10 +29,16 @@ export function comparisonTable(input: MemoInput, results: readonly OptionResult
   const tilts = new Set(input.results.map((r) => r.ref.tiltDeg)).size > 1
   const needs = (results[0]?.figures.needs ?? []).filter((n) => n.notAssessed === null).slice(0, MOST_NEEDS)
   const first = needs[0]
+  const nm = floorNm(results)
   const columns: Column[] = [{ head: 'Option', keep: true }]
   for (const n of needs) columns.push({ head: `${n.name} in sight`, unit: `%, asked ${n.requiredPct}`, align: 'right', width: 'fill' })
   if (form === 'full') columns.push({ head: 'Horizon, median', unit: '°', align: 'right', width: 'fill' })
-  columns.push({ head: `Floor at ${FLOOR_NM}\u202fNM, worst`, unit: `${bothUnits('height', system)} MSL`, align: 'right', width: 'fill' })
+  columns.push({
+    head: `Floor at ${textOf(formatSetting(toFace('range', nm * M_PER_NM, system), unitOf('range', system)))}, worst`,
+    unit: `${bothUnits('height', system)} MSL`,
+    align: 'right',
+    width: 'fill',
+  })
   columns.push({ head: 'Ground over 40\u202fdB', unit: bothUnits('area', system), align: 'right', width: 'fill' })
   if (form === 'full') columns.push({ head: 'C/N, highest', unit: 'dB', align: 'right', width: 'fill' })
   if (first) {
@@ -25,14 +47,14 @@ export function comparisonTable(input: MemoInput, results: readonly OptionResult
   }
   const rows = results.map((r) => {
     const f = r.figures
-    const floor = f.floors.find((x) => Math.round(x.rangeM / 1852) === FLOOR_NM)
+    const floor = f.floors.find((x) => Math.round(x.rangeM / M_PER_NM) === nm)
     const cells: Cell[] = [optionName(r.ref, tilts)]
     for (const n of needs) {
       const own = f.needs.find((x) => x.needId === n.needId)
       cells.push(bare(formatMetPct(own?.inSightPct), { explain: `need_${n.needId}_in_sight_pct` }))
     }
     if (form === 'full') cells.push(bare(formatScreening(f.horizon.medianDeg), { explain: 'horizon_median_deg' }))
-    cells.push(dualBare((s) => formatFloor(floor?.worstM, s), system, `floor_${FLOOR_NM}nm_worst_m`))
+    cells.push(dualBare((s) => formatFloor(floor?.worstM, s), system, `floor_${nm}nm_worst_m`))
     cells.push(dualBare((s) => formatAreaUp(f.clutterOverKm2.over40, s), system, 'clutter_over_40_km2'))
     if (form === 'full') cells.push(bare(formatDbUp(f.cnrPeakDb), { explain: 'clutter_to_noise_peak_db' }))
     if (first) {

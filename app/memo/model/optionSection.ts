@@ -1,5 +1,5 @@
 import type { HorizonRow, NeedFigure, OptionResult } from '../../../core/index.ts'
-import { horizonChart, ringChart, ringFinding } from '../../charts/index.ts'
+import { horizonChart, isAtLeast, ringChart, ringFinding, whyAtLeast } from '../../charts/index.ts'
 import {
   CAUTIONS,
   cautionsFor,
@@ -123,7 +123,7 @@ export function figureTable(input: MemoInput, r: OptionResult): TableBlock {
     ['C/N, highest', value(formatDbUp(f.cnrPeakDb), { explain: 'clutter_to_noise_peak_db' })],
   ]
   if (f.obstaclesInSight.length > 0) rows.push(['Obstacles in sight', obstacleWords(f.obstaclesInSight)])
-  for (const m of f.marks) rows.push([capital(m.about), { text: '', mark: m.mark }])
+  for (const m of f.marks) rows.push([capital(m.about.replace(`, ${m.mark}`, '')), { text: '', mark: m.mark }])
   return { kind: 'table', id: 'figures', columns: NO_HEADS, rows }
 }
 const obstacleWords = (names: readonly string[]): string => (names.length === 1 ? names[0] : `${names[0]} and ${names.length - 1} more`)
@@ -142,7 +142,7 @@ function horizonFigure(input: MemoInput, r: OptionResult, number: number): Block
   const finding =
     highest === null
       ? 'No azimuth has a known horizon.'
-      : `The horizon stands highest at azimuth ${textOf(formatAzimuth(highest.azimuthDeg, 1))}: ${textOf(formatScreening(highest.elevationDeg))}, set by ${highest.obstacle} at ${withMetric((s) => formatPlaceRange(highest.rangeM, s), input.system)}; half of all azimuths lie at or under ${textOf(formatScreening(medianDeg))}.`
+      : `The horizon stands highest at azimuth ${textOf(formatAzimuth(highest.azimuthDeg, 1))}: ${textOf(formatScreening(highest.elevationDeg))}, ${isAtLeast(highest) ? `at least (${whyAtLeast(highest)})` : `set by ${highest.obstacle}`} at ${withMetric((s) => formatPlaceRange(highest.rangeM, s), input.system)}; half of all azimuths lie at or under ${textOf(formatScreening(medianDeg))}.`
   return { kind: 'figure', id: 'horizon', number, caption: finding, drawing }
 }
 
@@ -155,16 +155,16 @@ function sectorTable(input: MemoInput, r: OptionResult): TableBlock {
   for (const row of r.figures.horizon.rows) {
     const i = Math.round(row.azimuthDeg / SECTOR_DEG) % count
     const top = highest[i]
-    if (top === null || row.elevationDeg > top.elevationDeg) highest[i] = row
+    if (Number.isFinite(row.elevationDeg) && (top === null || row.elevationDeg > top.elevationDeg)) highest[i] = row
   }
   const cells = (i: number): Cell[] => {
     const row = highest[i]
     const azimuth = textOf(formatAzimuth(i * SECTOR_DEG, 1))
     if (row === null) return [azimuth, NO_VALUE, NO_VALUE, { text: 'unknown', light: true }]
-    const edge = row.obstacle.startsWith('at least')
+    const bound = isAtLeast(row)
     const far = formatPlaceRange(row.rangeM, input.system)
     const elevation = formatScreening(row.elevationDeg).value
-    return [azimuth, edge ? `≥ ${elevation}` : elevation, far.value, edge ? { text: 'edge of terrain', light: true } : row.obstacle]
+    return [azimuth, bound ? `≥ ${elevation}` : elevation, far.value, bound ? { text: whyAtLeast(row), light: true } : row.obstacle]
   }
   const third = count / 3
   const columns: Column[] = Array.from({ length: 3 }, (): Column[] => [
@@ -217,7 +217,7 @@ type NeedRow = (n: NeedFigure, key: (what: string) => { explain: string }) => Ce
 function needRows(r: OptionResult, columns: number, row: NeedRow): Cell[][] {
   return r.figures.needs.map((n) => {
     if (n.notAssessed === null) return [n.name, ...row(n, (what) => ({ explain: `need_${n.needId}_${what}` }))]
-    return [n.name, { text: 'not assessed', light: true, span: columns - 1 }, ...Array.from({ length: columns - 2 }, () => '')]
+    return [n.name, { text: 'not assessed', light: true, span: columns - 1 }]
   })
 }
 /** Needs of one option by line of sight: shares, unknown ground, margins. */

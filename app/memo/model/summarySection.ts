@@ -59,10 +59,10 @@ function leadSentence(input: MemoInput, ordered: readonly OptionResult[]): strin
   const reaching = ordered.filter((r) => shortfallPct(r) === 0)
   const shares = inWords(needs.map(shareWords))
   if (reaching.length === 0)
-    return `None of the ${countWord(ordered.length)} options computed brings every must need into sight over the share asked. ${name} comes nearest: ${shares}, ${clutter}.`
+    return `None of the ${countWord(ordered.length)} options computed brings the share asked of every must need into sight. ${name} comes nearest: ${shares}, ${clutter}.`
   const many =
     reaching.length === 1 ? `Only ${name} brings` : `${capital(countWord(reaching.length))} of ${countWord(ordered.length)} options bring`
-  const lead = `${many} every must need into sight over the share asked`
+  const lead = `${many} the share asked of every must need into sight`
   return reaching.length === 1
     ? `${lead}: ${shares}, ${clutter}.`
     : `${lead}; ${name} has the least clutter of them: ${shares}, ${clutter}.`
@@ -76,12 +76,12 @@ function restSentences(input: MemoInput, ordered: readonly OptionResult[]): stri
   const need = best && mustNeeds(best)[0]
   if (best && need && need.suppression.p90Db !== null) {
     const { p90Db, availableDb, shortKm2 } = need.suppression
-    out.push(
-      `Over ${need.name} it needs ${textOf(formatDbUp(p90Db))} of suppression at 90\u202f% of the places in sight, with ${textOf(formatDbDown(availableDb))} available; ${withMetric((s) => formatAreaUp(shortKm2, s), input.system)} fall short.`,
-    )
+    const asked = p90Db <= 0 ? 'no suppression is needed' : `${textOf(formatDbUp(p90Db))} of suppression is needed`
+    const short = shortKm2 > 0 ? `${withMetric((s) => formatAreaUp(shortKm2, s), input.system)} need more` : 'no place needs more'
+    out.push(`At 90\u202f% of the places in sight of ${need.name} ${asked}; with ${textOf(formatDbDown(availableDb))} available, ${short}.`)
   }
   const lower = best && lowestReaching(ordered, best)
-  if (lower) out.push(`The lowest mast that still brings every must need into sight is ${optionName(lower.ref, hasTilts(input))}.`)
+  if (lower) out.push(`The lowest mast that still does so is ${optionName(lower.ref, hasTilts(input))}.`)
   const open = best?.figures.needs.filter((n) => n.notAssessed !== null) ?? []
   if (open.length > 0) out.push(`Not part of this: ${inWords(open.map((n) => `${n.name} (${n.notAssessed})`))}.`)
   const total = optionCount(input)

@@ -44,7 +44,7 @@ export interface Value {
   /** Key of the figure (`Figures.flat`), for the app's explanation. */
   readonly explain?: string
   readonly light?: boolean
-  /** Columns the cell takes; the cells it covers are empty. */
+  /** Columns the cell takes; the cells it covers are left out of the row. */
   readonly span?: number
 }
 export type Cell = string | Value

@@ -126,14 +126,16 @@ function sectionContent(section: Section): Content[] {
     unbreakable: true,
     ...(section.newPage ? { pageBreak: 'before' as const } : {}),
   }
-  return [head, ...withCautions(after)]
+  return [head, ...keptTogether(after)]
 }
-/** A caution stays with the table or figure it stands under. */
-function withCautions(blocks: readonly Block[]): Content[] {
+/** A caution stays with the table or figure it stands under, a list with the sentence that opens it. */
+function keptTogether(blocks: readonly Block[]): Content[] {
   const out: Content[] = []
   for (let i = 0; i < blocks.length; i++) {
     const next = blocks[i + 1]
-    if (next?.kind === 'caution' && blocks[i].kind !== 'caution' && !isLong(blocks[i])) {
+    const caution = next?.kind === 'caution' && blocks[i].kind !== 'caution' && !isLong(blocks[i])
+    const opening = next?.kind === 'list' && blocks[i].kind === 'paragraph' && next.items.length < 12
+    if (next && (caution || opening)) {
       out.push({ stack: [blockContent(blocks[i]), blockContent(next)], unbreakable: true })
       i++
     } else out.push(blockContent(blocks[i]))
@@ -198,8 +200,9 @@ function words(text: string): Content[] {
     .map((t) => (t.includes('C/N') ? { text: t, noWrap: true } : { text: t }))
 }
 function paragraph(block: Extract<Block, { kind: 'paragraph' }>): Content {
-  if (block.role === 'small') return { text: words(block.text), fontSize: SMALL_PT, color: INK_2, margin: [0, 2, 0, 6] }
-  return { text: words(block.text), margin: [0, 0, 0, 6], ...(block.role === 'lead' ? { bold: true } : {}) }
+  if (block.role === 'small')
+    return { stack: [{ text: words(block.text), fontSize: SMALL_PT, color: INK_2 }], margin: [0, 2, 0, 6], unbreakable: true }
+  return { stack: [{ text: words(block.text), bold: block.role === 'lead' }], margin: [0, 0, 0, 6], unbreakable: true }
 }
 
 /** Tables of up to about this many lines are never broken over pages; a longer block kept whole could not be placed at all. */
@@ -244,7 +247,7 @@ function tableContent(block: TableBlock): Content {
       keepWithHeaderRows: 1,
       dontBreakRows: true,
       widths: columns.map((c) => (c.width === 'fill' ? '*' : (c.width ?? 'auto'))),
-      body: [...heading, ...rows.map((row) => row.map((cell, i) => cellContent(cell, columns[i])))],
+      body: [...heading, ...rows.map((row) => rowContent(row, columns))],
     },
     layout: hairlines(heading.length),
     margin: [0, 2, 0, 8],
@@ -254,6 +257,16 @@ function tableContent(block: TableBlock): Content {
   return { stack: [{ text: title ?? '', bold: true, fontSize: SMALL_PT, margin: [0, 4, 0, 2] }, table], unbreakable: true }
 }
 
+/** Cells of a row; the printer wants an empty cell for each one that a spanning cell covers. */
+function rowContent(row: readonly Cell[], columns: readonly Column[]): TableCell[] {
+  const out: TableCell[] = []
+  for (const cell of row) {
+    out.push(cellContent(cell, columns[out.length]))
+    const covered = typeof cell === 'string' ? 0 : (cell.span ?? 1) - 1
+    for (let n = 0; n < covered; n++) out.push('')
+  }
+  return out
+}
 function cellContent(cell: Cell, column: Column): TableCell {
   const long = (typeof cell === 'string' ? cell : cell.text).length > LONGEST_KEPT
   const base = { fontSize: SMALL_PT, alignment: column.align ?? ('left' as const), lineHeight: 1, noWrap: column.keep === true && !long }
