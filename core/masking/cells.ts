@@ -1,4 +1,4 @@
-import { type Cuts, makeCuts, type StraightProfile } from './profile.ts'
+import { type Cuts, makeCuts } from './profile.ts'
 import { controlErrorM, type RayRunner } from './ray.ts'
 import { RUN, type SightRun } from './sightRun.ts'
 import { isInSight, knownState, packShare } from './sightState.ts'
@@ -12,9 +12,9 @@ export interface RayCellCuts {
   readonly centre: Int32Array
   readonly far: Int32Array
 }
-/** Contiguous cells of equal length from the site outward: cut 2j is the centre of cell j, cut 2j + 1 its far edge. */
+/** Contiguous cells of equal length from the site outward: cut 2j is the centre of cell j, cut 2j + 1 its far edge; a last cut no ray reaches. */
 export const uniformCuts = (cells: number, stepM: number): Cuts =>
-  makeCuts(Float64Array.from({ length: 2 * cells }, (_, k) => ((k + 1) * stepM) / 2))
+  makeCuts(Float64Array.from({ length: 2 * cells + 1 }, (_, k) => (k < 2 * cells ? ((k + 1) * stepM) / 2 : Number.POSITIVE_INFINITY)))
 
 /** Cells of one length around any centres, m; they may overlap. A cell never reaches behind the site. */
 export function cutsAround(centresM: readonly number[], cellM: number): RayCellCuts {
@@ -28,17 +28,15 @@ export function cutsAround(centresM: readonly number[], cellM: number): RayCellC
 /** Slope as per mille in 16 bits. */
 export const packSlope = (slope: number): number => Math.max(-32767, Math.min(32767, Math.floor(1000 * slope + 0.5)))
 
-/** Ground at the cell centres of one ray; unknown cells keep what the arrays held. */
+/** Ground and slope at the cell centres of one ray; unknown cells keep what the arrays held. */
 export interface GroundCells {
   readonly groundM: Float32Array
   readonly slopePermille: Int16Array
 }
-export function writeGround(p: StraightProfile, c: RayCellCuts, out: GroundCells, offset: number): void {
-  for (let j = 0; j < c.cells; j++) {
-    const k = c.centre[j]
-    if (k >= p.cuts) continue
-    out.groundM[offset + j] = p.cutGroundM[k]
-    out.slopePermille[offset + j] = packSlope(p.cutSlope[k])
+export function writeGround(groundM: Float64Array, slope: Float64Array, known: number, out: GroundCells, offset: number): void {
+  for (let j = 0; j < known; j++) {
+    out.groundM[offset + j] = groundM[j]
+    out.slopePermille[offset + j] = packSlope(slope[j])
   }
 }
 

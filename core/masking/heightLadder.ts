@@ -1,31 +1,25 @@
+import type { CellProfile } from './cellProfile.ts'
 import { touchingSlope } from './heightToSee.ts'
-import type { StraightProfile } from './profile.ts'
+import type { Cuts } from './profile.ts'
 import { ALLOWANCE_REACH, SIGHT_ALLOWANCE_M } from './sightState.ts'
-import { heightOfY } from './straight.ts'
 
-/** Scratch of the upper hull of one ray. */
-export interface HullScratch {
-  readonly x: Float64Array
-  readonly y: Float64Array
-  /** Point of the profile, or the point before the middle of a segment. */
-  readonly point: Int32Array
-}
-export const makeHull = (points: number): HullScratch => ({
-  x: new Float64Array(2 * points + 2),
-  y: new Float64Array(2 * points + 2),
-  point: new Int32Array(2 * points + 2),
-})
+/** Scratch of the upper hull of one ray: X, Y and the crossing (or the one before, for the middle of a segment), three numbers per corner. */
+export type HullScratch = Float64Array
+export const makeHull = (track: number, cells: number): HullScratch => new Float64Array(2 * track + 3 * cells + 6)
 /** Segments that rise this far above their ends also put their middle on the hull, m. */
 const MIDDLE_M = 0.02
+/** Segments that rise less than this above their ends are not looked at for a touching line, m. */
+const BULGE_M = 0.001
 
 /**
- * Height to see at every second cut (the cell centres of a sweep) along a ray, in O(n): the tangent from a place to the upper hull of everything nearer,
- * carried back to the mast. The hull holds the points and the middles of hollow-downward segments; the tangent is then settled in closed form on the two
- * segments at the hull point it touches. Writes metres above the site's ground, at least 0.
+ * Height to see of each cell centre of a ray, in O(n): the tangent from a place to the upper hull of everything nearer, carried back to the mast. On the
+ * hull go crossings that stand above the chord of their neighbours, middles of hollow-downward segments, and the centres themselves (no other crossing
+ * can be touched from beyond its neighbour); the tangent is then settled in closed form on the segments at the corner it touches. Writes metres above the
+ * site's ground, at least 0.
  */
 export function heightsToSee(
-  p: StraightProfile,
-  cells: number,
+  p: CellProfile,
+  cuts: Cuts,
   siteGroundM: number,
   inverse: number,
   postingM: number,
@@ -33,49 +27,118 @@ export function heightsToSee(
   out: Float32Array,
   offset: number,
 ): void {
-  const { x, y, bend, cutPoint } = p
-  const { x: hx, y: hy, point: hp } = h
+  const { line, at, known } = p
+  const cutX = cuts.x
   const nearM = ALLOWANCE_REACH * postingM
+  // the last two corners in hand, those before in the scratch; n = 3 × corners in the scratch, tail excluded
   let n = 0
-  hx[0] = 0
-  hy[0] = siteGroundM / (1 + siteGroundM * inverse)
-  hp[0] = 0
+  let ax = 0
+  let ay = 0
+  let bx = 0
+  let by = siteGroundM / (1 + siteGroundM * inverse)
+  let bAt = 0
+  let aAt = -1
   let k = 1
-  for (let j = 0; j < cells; j++) {
-    const centre = cutPoint[2 * j]
-    for (; k <= centre; k++) {
-      const px = x[k]
-      const py = y[k]
-      const c = bend[k - 1]
-      if (c < 0) {
-        const half = 0.5 * (px - x[k - 1])
-        const rise = -c * half * half
-        if (rise > MIDDLE_M) {
-          const mx = px - half
-          const my = 0.5 * (py + y[k - 1]) + rise
-          while (n >= 1 && (hy[n] - hy[n - 1]) * (mx - hx[n]) <= (my - hy[n]) * (hx[n] - hx[n - 1])) n--
-          n++
-          hx[n] = mx
-          hy[n] = my
-          hp[n] = k - 1
+  for (let j = 0; j < known; j++) {
+    const ends = at[2 * j]
+    for (; k < ends; k++) {
+      const i = 3 * k
+      const x = line[i]
+      const y = line[i + 1]
+      const c = line[i - 1]
+      const dx = x - line[i - 3]
+      const rise = -0.25 * c * dx * dx
+      const mx = x - 0.5 * dx
+      // not behind a centre in the same segment
+      if (rise > MIDDLE_M && mx > bx) {
+        const my = 0.5 * (y + line[i - 2]) + rise
+        while (aAt >= 0 && (by - ay) * (mx - bx) <= (my - by) * (bx - ax)) {
+          bx = ax
+          by = ay
+          bAt = aAt
+          n -= 3
+          ax = h[n]
+          ay = h[n + 1]
+          aAt = h[n + 2]
         }
+        h[n] = ax
+        h[n + 1] = ay
+        h[n + 2] = aAt
+        n += 3
+        ax = bx
+        ay = by
+        aAt = bAt
+        bx = mx
+        by = my
+        bAt = k - 1
       }
-      while (n >= 1 && (hy[n] - hy[n - 1]) * (px - hx[n]) <= (py - hy[n]) * (hx[n] - hx[n - 1])) n--
-      n++
-      hx[n] = px
-      hy[n] = py
-      hp[n] = k
+      if ((y - line[i - 2]) * (line[i + 3] - x) < (line[i + 4] - y) * dx) continue
+      while (aAt >= 0 && (by - ay) * (x - bx) <= (y - by) * (bx - ax)) {
+        bx = ax
+        by = ay
+        bAt = aAt
+        n -= 3
+        ax = h[n]
+        ay = h[n + 1]
+        aAt = h[n + 2]
+      }
+      h[n] = ax
+      h[n + 1] = ay
+      h[n + 2] = aAt
+      n += 3
+      ax = bx
+      ay = by
+      aAt = bAt
+      bx = x
+      by = y
+      bAt = k
     }
-    // the centre itself is now the last of the hull: the one before it is what the tangent touches
-    const xd = x[centre]
-    const yd = y[centre]
-    const near = xd - nearM
-    const q = hp[n - 1]
-    const raised = yd + SIGHT_ALLOWANCE_M
-    let least = ((hx[n - 1] >= near ? raised : yd) - hy[n - 1]) / (xd - hx[n - 1])
-    for (let s = q > 0 ? q - 1 : 0; s <= q && s < centre; s++)
-      if (bend[s] < 0) least = Math.min(least, touchingSlope(p, s, xd, x[s + 1] >= near ? raised : yd))
-    if (q < centre - 1 && bend[centre - 1] < 0) least = Math.min(least, touchingSlope(p, centre - 1, xd, raised))
-    out[offset + j] = Math.max(0, heightOfY(yd - least * xd, 0, inverse) - siteGroundM)
+    // the segment from crossing `ends - 1` holds the centre
+    const i = 3 * (ends - 1)
+    const sx = line[i]
+    const sy = line[i + 1]
+    const c = line[i + 2]
+    const length = line[i + 3] - sx
+    const x = cutX[2 * j]
+    const u = x - sx
+    const slope = length > 0 ? (line[i + 4] - sy) / length - c * length : 0
+    const y = sy + u * (slope + c * u)
+    while (aAt >= 0 && (by - ay) * (x - bx) <= (y - by) * (bx - ax)) {
+      bx = ax
+      by = ay
+      bAt = aAt
+      n -= 3
+      ax = h[n]
+      ay = h[n + 1]
+      aAt = h[n + 2]
+    }
+    const near = x - nearM
+    let least = ((bx >= near ? y + SIGHT_ALLOWANCE_M : y) - by) / (x - bx)
+    // the segment of the centre itself: touched inside it, or at its start
+    const touched = c < 0 ? Math.sqrt(-c * SIGHT_ALLOWANCE_M) : 0
+    let own = least
+    if (touched > 0 && touched < -c * u) own = slope + 2 * (c * u + touched)
+    else if (u > 0) own = slope + c * u + (sx >= near ? SIGHT_ALLOWANCE_M / u : 0)
+    if (own < least) least = own
+    for (let m = bAt > 0 ? bAt - 1 : 0; m <= bAt && m < ends - 1; m++) {
+      const dx = line[3 * m + 3] - line[3 * m]
+      if (-0.25 * line[3 * m + 2] * dx * dx > BULGE_M) {
+        const touch = touchingSlope(line, m, x, y)
+        if (touch < least) least = touch
+      }
+    }
+    const lowest = y - least * x
+    const heightM = lowest / (1 - lowest * inverse) - siteGroundM
+    out[offset + j] = heightM > 0 ? heightM : 0
+    h[n] = ax
+    h[n + 1] = ay
+    h[n + 2] = aAt
+    n += 3
+    ax = bx
+    ay = by
+    aAt = bAt
+    bx = x
+    by = y
+    bAt = ends - 1
   }
 }

@@ -7,36 +7,33 @@ import { ALLOWANCE_REACH, SIGHT_ALLOWANCE_M } from './sightState.ts'
  * nearer the radar, carried back to the mast, with the allowance of isInSight. `NO_TANGENT` when nothing stands between.
  */
 export function lowestAntennaY(p: StraightProfile, point: number, postingM: number): number {
-  const { x, y } = p
-  const xd = x[point]
-  const yd = y[point]
+  const { line } = p
+  const xd = line[3 * point]
+  const yd = line[3 * point + 1]
   const raised = yd + SIGHT_ALLOWANCE_M
   const near = xd - ALLOWANCE_REACH * postingM
   // least slope from any nearer place to the point
   let least = Number.POSITIVE_INFINITY
   for (let j = 0; j < point; j++) {
-    const t = xd - x[j]
-    if (t > 0) {
-      const s = ((x[j] >= near ? raised : yd) - y[j]) / t
-      if (s < least) least = s
-    }
-    const touch = touchingSlope(p, j, xd, x[j + 1] >= near ? raised : yd)
-    if (touch < least) least = touch
+    const x = line[3 * j]
+    if (xd > x) least = Math.min(least, ((x >= near ? raised : yd) - line[3 * j + 1]) / (xd - x))
+    least = Math.min(least, touchingSlope(line, j, xd, line[3 * j + 3] >= near ? raised : yd))
   }
   return least === Number.POSITIVE_INFINITY ? NO_TANGENT : yd - least * xd
 }
 
 /**
- * Slope of the line from (xd, yd) that touches from above, at a place inside it, the segment that starts at point j; Infinity where there is none. At the
+ * Slope of the line from (xd, yd) that touches from above, at a place inside it, the segment of a line of points (X, Y,
+ * bend) that starts at point j; Infinity where there is none. At the
  * segment that ends in the point itself it is the surface's own slope there.
  */
-export function touchingSlope(p: StraightProfile, j: number, xd: number, yd: number): number {
-  const bend = p.bend[j]
-  const x0 = p.x[j]
-  const length = p.x[j + 1] - x0
+export function touchingSlope(line: Float64Array, j: number, xd: number, yd: number): number {
+  const x0 = line[3 * j]
+  const y0 = line[3 * j + 1]
+  const bend = line[3 * j + 2]
+  const length = line[3 * j + 3] - x0
   if (!(bend < 0) || !(length > 0)) return Number.POSITIVE_INFINITY
-  const y0 = p.y[j]
-  const slope = (p.y[j + 1] - y0) / length - bend * length
+  const slope = (line[3 * j + 4] - y0) / length - bend * length
   const t0 = xd - x0
   const t1 = t0 - length
   // in t = xd − x: y = alpha + beta t + bend t²

@@ -1,9 +1,9 @@
 import type { Earth } from '../geodesy/index.ts'
 import { CELL, type PolarShape } from '../polar/index.ts'
 import type { Ground, Site } from '../terrain/index.ts'
+import { fillCells, makeCellProfile } from './cellProfile.ts'
 import { uniformCuts } from './cells.ts'
 import { horizonRow } from './horizon.ts'
-import { straighten } from './profile.ts'
 import { makeRunner, setAntenna, setEarth } from './ray.ts'
 import { sightPass } from './sightPass.ts'
 import { RUN } from './sightRun.ts'
@@ -19,7 +19,9 @@ export function previewSweep(g: Ground, site: Site, heightM: number, grid: Polar
   const coarse: PolarShape = { ...grid, azimuths, azimuthStepDeg: 360 / azimuths }
   const { ranges } = grid
   const cuts = uniformCuts(ranges, grid.rangeStepM)
-  const r = makeRunner(g, site, ranges * grid.rangeStepM, 2 * ranges, coarse.azimuthStepDeg)
+  const r = makeRunner(g, site, ranges * grid.rangeStepM, 0, coarse.azimuthStepDeg)
+  const track = r.tracer.track
+  const p = makeCellProfile(track.surface.length, ranges)
   const mask = makeSight(coarse, heightM, '')
   const whole = new Uint8Array(ranges)
   for (let i = 0; i < azimuths; i++) {
@@ -27,12 +29,11 @@ export function previewSweep(g: Ground, site: Site, heightM: number, grid: Polar
     const offset = i * ranges
     r.tracer.trace(azimuthDeg)
     setEarth(r, earth, azimuthDeg)
-    straighten(r.tracer.track, r.inverse, cuts, r.profile)
-    const known = Math.min(ranges, (r.profile.cuts + 1) >> 1)
+    fillCells(track, r.inverse, cuts, p)
     whole.fill(0)
     setAntenna(r, heightM)
-    sightPass(r, cuts, known, whole, r.run.end, mask, offset)
-    markUnknown(mask, offset + known, offset + ranges, r.tracer.track.unknownWhy === 'void' ? CELL.beyondVoid : CELL.outside)
+    sightPass(r, p, cuts, whole, r.run.end, mask, offset)
+    markUnknown(mask, offset + p.known, offset + ranges, track.unknownWhy === 'void' ? CELL.beyondVoid : CELL.outside)
     mask.horizon.push(horizonRow(r, azimuthDeg, r.siteGroundM + heightM, r.run.end[RUN.tangent], r.run.end[RUN.controlX]))
   }
   return mask

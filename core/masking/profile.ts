@@ -1,5 +1,5 @@
 import type { TracedRay } from '../terrain/index.ts'
-import { straightDrop, straightX } from './straight.ts'
+import { straightDrop, straightX, straightY } from './straight.ts'
 
 /** Distances a profile is cut at (cell edges and centres), ascending, with their places in the straight plane for one effective radius. */
 export interface Cuts {
@@ -23,15 +23,13 @@ export function placeCuts(cuts: Cuts, inverse: number): void {
 }
 
 /**
- * One ray in the straight plane, shared by all antenna heights: the crossings, and the cuts on the same surface. From point p to the next the surface is
- * the chord plus bend·(x−X)·(x−X'). Scratch, filled again for each ray.
+ * One ray in the straight plane: the crossings, and the cuts on the same surface. Scratch, filled again for each ray.
+ *
+ * `line` holds three numbers per point: X, Y, and the quadratic term of the surface from this point to the next (1/m).
  */
 export interface StraightProfile {
   count: number
-  readonly x: Float64Array
-  readonly y: Float64Array
-  /** Quadratic term from this point to the next, 1/m. */
-  readonly bend: Float64Array
+  readonly line: Float64Array
   /** Cuts that lie on known ground. */
   cuts: number
   /** Point of each cut; ground there, its slope along the ray, and the surface, m. */
@@ -39,23 +37,18 @@ export interface StraightProfile {
   readonly cutGroundM: Float64Array
   readonly cutSlope: Float64Array
   readonly cutSurfaceM: Float64Array
-  /** Highest Y of the surface from the cut before to this one, bulges included. */
-  readonly cutTop: Float64Array
 }
 
-export function makeStraightProfile(points: number, cuts: number): StraightProfile {
-  const n = points + cuts
+/** Room for a track array of this length and so many cuts. */
+export function makeStraightProfile(track: number, cuts: number): StraightProfile {
   return {
     count: 0,
-    x: new Float64Array(n),
-    y: new Float64Array(n),
-    bend: new Float64Array(n),
+    line: new Float64Array(track + 3 * cuts),
     cuts: 0,
     cutPoint: new Int32Array(cuts),
     cutGroundM: new Float64Array(cuts),
     cutSlope: new Float64Array(cuts),
     cutSurfaceM: new Float64Array(cuts),
-    cutTop: new Float64Array(cuts),
   }
 }
 
@@ -65,8 +58,8 @@ export function makeStraightProfile(points: number, cuts: number): StraightProfi
  */
 export function straighten(t: TracedRay, inverse: number, cuts: Cuts, out: StraightProfile): void {
   placeCuts(cuts, inverse)
-  const { distM, surfaceM, bendPerM, groundM, groundBendPerM, count } = t
-  const { x, y, bend, cutPoint, cutGroundM, cutSlope, cutSurfaceM, cutTop } = out
+  const { surface, count } = t
+  const { line, cutPoint, cutSurfaceM } = out
   const { m: cutM, x: cutX, drop: cutDrop } = cuts
   const total = cutM.length
   const half = 0.5 * inverse
@@ -74,97 +67,56 @@ export function straighten(t: TracedRay, inverse: number, cuts: Cuts, out: Strai
   out.cuts = 0
   if (count === 0) return
   let k = 0
-  let nextCut = total > 0 ? cutM[0] : Number.POSITIVE_INFINITY
-  let s0 = 0
-  let z0 = surfaceM[0]
-  let w = z0 * inverse
-  let x0 = 0
-  let y0 = z0 * (1 - w * (1 - w * (1 - w)))
-  x[0] = 0
-  y[0] = y0
-  let top = y0
   let p = 0
+  line[0] = 0
+  line[1] = straightY(surface[1], 0, inverse)
   for (let j = 1; j < count; j++) {
-    const s1 = distM[j]
-    const z1 = surfaceM[j]
-    const q = bendPerM[j - 1]
-    const c = q - half
-    if (nextCut <= s1) {
-      const length = s1 - s0
-      const rise = length > 0 ? (z1 - z0) / length - q * length : 0
-      do {
-        const u = nextCut - s0
-        const z = z0 + u * (rise + q * u)
-        cutSurfaceM[k] = z
-        cutGroundM[k] = z
-        cutSlope[k] = rise + 2 * q * u
-        const xc = cutX[k]
-        w = z * inverse
-        const yc = (z - cutDrop[k]) * (1 - w * (1 - w * (1 - w)))
-        const lx = xc - x0
-        if (lx > 0) {
-          const bulge = c < 0 ? -0.25 * c * lx * lx : 0
-          bend[p] = c
-          const high = (yc > y0 ? yc : y0) + bulge
-          if (high > top) top = high
-          p++
-          x[p] = xc
-          y[p] = yc
-          x0 = xc
-          y0 = yc
-        }
-        cutPoint[k] = p
-        cutTop[k] = top
-        top = y0
-        k++
-        nextCut = k < total ? cutM[k] : Number.POSITIVE_INFINITY
-      } while (nextCut <= s1)
+    const s0 = surface[3 * j - 3]
+    const z0 = surface[3 * j - 2]
+    const q = surface[3 * j - 1]
+    const s1 = surface[3 * j]
+    const z1 = surface[3 * j + 1]
+    const length = s1 - s0
+    const rise = length > 0 ? (z1 - z0) / length - q * length : 0
+    for (; k < total && cutM[k] <= s1; k++) {
+      const u = cutM[k] - s0
+      const z = z0 + u * (rise + q * u)
+      cutSurfaceM[k] = z
+      if (cutX[k] > line[3 * p]) {
+        line[3 * p + 2] = q - half
+        p++
+        line[3 * p] = cutX[k]
+        line[3 * p + 1] = straightY(z, cutDrop[k], inverse)
+      }
+      cutPoint[k] = p
     }
-    const a = s1 * inverse
-    const pp = a * a
-    const x1 = s1 * (1 + pp * (1 / 3 + pp * (2 / 15)))
-    w = z1 * inverse
-    const y1 = (z1 - 0.5 * s1 * a * (1 + pp * (5 / 12 + pp * (61 / 360)))) * (1 - w * (1 - w * (1 - w)))
-    const lx = x1 - x0
+    const x1 = straightX(s1, inverse)
     // a cut on the crossing itself is not doubled; an upright step (an obstacle) is kept
-    if (lx > 0 || s1 === s0) {
-      const bulge = c < 0 ? -0.25 * c * lx * lx : 0
-      bend[p] = c
-      const high = (y1 > y0 ? y1 : y0) + bulge
-      if (high > top) top = high
+    if (x1 > line[3 * p] || length <= 0) {
+      line[3 * p + 2] = q - half
       p++
-      x[p] = x1
-      y[p] = y1
-      x0 = x1
-      y0 = y1
+      line[3 * p] = x1
+      line[3 * p + 1] = straightY(z1, straightDrop(s1, inverse), inverse)
     }
-    s0 = s1
-    z0 = z1
   }
-  bend[p] = 0
+  line[3 * p + 2] = 0
   out.count = p + 1
   out.cuts = k
-  if (groundM !== surfaceM) cutGround(distM, groundM, groundBendPerM, cutM, k, cutGroundM, cutSlope)
+  cutGround(t.ground, cutM, k, out.cutGroundM, out.cutSlope)
 }
 
-/** Ground and its slope at the cuts where the surface is not the ground. */
-function cutGround(
-  distM: Float64Array,
-  groundM: Float64Array,
-  bendPerM: Float64Array,
-  cutM: Float64Array,
-  cuts: number,
-  outM: Float64Array,
-  outSlope: Float64Array,
-): void {
+/** Ground and its slope along the ray at ascending distances that the ray reaches. */
+export function cutGround(ground: Float64Array, cutM: Float64Array, cuts: number, outM: Float64Array, outSlope: Float64Array): void {
   let j = 1
   for (let k = 0; k < cuts; k++) {
-    while (distM[j] < cutM[k]) j++
-    const length = distM[j] - distM[j - 1]
-    const q = bendPerM[j - 1]
-    const rise = length > 0 ? (groundM[j] - groundM[j - 1]) / length - q * length : 0
-    const u = cutM[k] - distM[j - 1]
-    outM[k] = groundM[j - 1] + u * (rise + q * u)
+    while (ground[3 * j] < cutM[k]) j++
+    const s0 = ground[3 * j - 3]
+    const z0 = ground[3 * j - 2]
+    const q = ground[3 * j - 1]
+    const length = ground[3 * j] - s0
+    const rise = length > 0 ? (ground[3 * j + 1] - z0) / length - q * length : 0
+    const u = cutM[k] - s0
+    outM[k] = z0 + u * (rise + q * u)
     outSlope[k] = rise + 2 * q * u
   }
 }

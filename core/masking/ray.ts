@@ -27,7 +27,7 @@ export function makeRunner(g: Ground, site: Site, maxRangeM: number, cuts: numbe
     siteGroundM: siteGround(g, site),
     tracer,
     run: makeSightRun(cuts),
-    profile: makeStraightProfile(tracer.track.distM.length, cuts),
+    profile: makeStraightProfile(tracer.track.surface.length, cuts),
     effectiveRadiusM: 0,
     inverse: 0,
     antennaY: 0,
@@ -66,25 +66,25 @@ export interface Controlling {
 const COVER_NAMED_M = 0.05
 
 export function controllingOf(r: RayRunner, tangent: number, controlX: number): Controlling {
-  const t = r.tracer.track
+  const { spikes, count, ground: t } = r.tracer.track
   const rangeM = rangeOfX(controlX, r.inverse)
   const heightM = heightOfY(r.antennaY + tangent * controlX, straightDrop(rangeM, r.inverse), r.inverse)
-  for (const spike of t.spikes)
+  for (const spike of spikes)
     if (Math.abs(spike.distM - rangeM) < 1e-4) {
       const o = r.g.obstacles[spike.obstacle]
       return { rangeM, heightM, obstacle: o.name, errorM: o.verticalErrorM ?? r.g.verticalErrorM }
     }
   let j = 0
-  let high = t.count - 1
+  let high = count - 1
   while (high - j > 1) {
     const mid = (j + high) >> 1
-    if (t.distM[mid] <= rangeM) j = mid
+    if (t[3 * mid] <= rangeM) j = mid
     else high = mid
   }
-  const length = t.distM[j + 1] - t.distM[j]
-  const u = rangeM - t.distM[j]
-  const q = t.groundBendPerM[j]
-  const ground = length > 0 ? t.groundM[j] + u * ((t.groundM[j + 1] - t.groundM[j]) / length + q * (u - length)) : t.groundM[j]
+  const length = t[3 * j + 3] - t[3 * j]
+  const u = rangeM - t[3 * j]
+  const z = t[3 * j + 1]
+  const ground = length > 0 ? z + u * ((t[3 * j + 4] - z) / length + t[3 * j + 2] * (u - length)) : z
   const obstacle = heightM - ground > COVER_NAMED_M ? 'cover' : 'terrain'
   return { rangeM, heightM, obstacle, errorM: r.g.verticalErrorM }
 }

@@ -31,8 +31,8 @@ export function sightAlong(g: Ground, site: Site, heightM: number, earth: Earth,
   const t = held.tracer.track
   held.tracer.traceTo(azimuthDeg, toRangeM)
   const known = t.count
-  const cutM = t.distM.slice(0, known)
-  const r = { ...held, profile: makeStraightProfile(t.distM.length, known), run: makeSightRun(known) }
+  const cutM = Float64Array.from({ length: known }, (_, k) => t.ground[3 * k])
+  const r = { ...held, profile: makeStraightProfile(t.surface.length, known), run: makeSightRun(known) }
   runRay(r, earth, azimuthDeg, heightM, makeCuts(cutM))
   const antennaM = r.siteGroundM + heightM
   const tail = t.unknownWhy === null ? 0 : 2
@@ -53,14 +53,15 @@ export function sightAlong(g: Ground, site: Site, heightM: number, earth: Earth,
   for (let k = 0; k < known; k++) {
     const rangeM = cutM[k]
     out.distM[k] = rangeM
-    out.groundM[k] = t.groundM[k]
-    out.surfaceM[k] = t.surfaceM[k]
+    const surfaceM = t.surface[3 * k + 1]
+    out.groundM[k] = t.ground[3 * k + 1]
+    out.surfaceM[k] = surfaceM
     const controlM = rangeOfX(r.run.controlX[k], r.inverse)
-    const lineM = controlM > 0 ? heightOnLine(r.antennaY, r.run.tangent[k], rangeM, r.inverse) : t.surfaceM[k]
-    const seen = isInSight(lineM - t.surfaceM[k], rangeM - controlM, g.postingM)
+    const lineM = controlM > 0 ? heightOnLine(r.antennaY, r.run.tangent[k], rangeM, r.inverse) : surfaceM
+    const seen = isInSight(lineM - surfaceM, rangeM - controlM, g.postingM)
     const errorM = controlErrorM(r, r.run.controlX[k])
     out.inSight[k] = seen ? 1 : 0
-    out.floorM[k] = seen ? t.surfaceM[k] : lineM
+    out.floorM[k] = seen ? surfaceM : lineM
     out.floorBandM[k] = seen ? errorM : floorBand(rangeM, controlM, errorM, g.verticalErrorM)
   }
   if (tail > 0) {

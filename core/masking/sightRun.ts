@@ -3,7 +3,10 @@ import type { StraightProfile } from './profile.ts'
 /** Lower than any line to a surface: nothing met yet. */
 export const NO_TANGENT = -1e300
 
-/** State of a run outward, in one array so that the hot loops pass no numbers about: see the indices below. */
+/**
+ * State of a run outward from one antenna, in one array so that hot loops pass no numbers about; the indices below. `from…` and `to…` are the segment
+ * that `raise` is asked about.
+ */
 export type RunState = Float64Array
 export const RUN = {
   /** Y of the antenna. */
@@ -14,7 +17,13 @@ export const RUN = {
   controlX: 2,
   /** X-length in sight so far. */
   seenX: 3,
+  fromX: 4,
+  fromY: 5,
+  toX: 6,
+  toY: 7,
+  bend: 8,
 } as const
+export const makeRunState = (): RunState => new Float64Array(9)
 export function startRun(s: RunState, antennaY: number): void {
   s[RUN.antennaY] = antennaY
   s[RUN.tangent] = NO_TANGENT
@@ -23,22 +32,23 @@ export function startRun(s: RunState, antennaY: number): void {
 }
 
 /**
- * The segment that ends at point j comes up through the highest line so far: finds its own highest line, at its end or, where it is hollow downward, where
- * a line from the antenna touches it (closed form), and adds the part in sight: from where it comes up through the old line to where it touches the new.
+ * A segment may come up through the highest line so far: finds its own highest line, at its end or, where it is hollow downward, where a line from the
+ * antenna touches it (closed form), and adds the part in sight: from where it comes up through the old line to where it touches the new.
  */
-export function raise(p: StraightProfile, j: number, s: RunState): void {
-  const { x, y, bend } = p
-  const antennaY = s[RUN.antennaY]
-  const old = s[RUN.tangent]
-  const x0 = x[j - 1]
-  const x1 = x[j]
+export function raise(s: RunState): void {
+  const antennaY = s[0]
+  const old = s[1]
+  const x0 = s[4]
+  const y0 = s[5]
+  const x1 = s[6]
+  const y1 = s[7]
+  const c = s[8]
   const length = x1 - x0
-  const c = bend[j - 1]
-  const slope = length > 0 ? (y[j] - y[j - 1]) / length - c * length : 0
-  let top = (y[j] - antennaY) / x1
+  const slope = length > 0 ? (y1 - y0) / length - c * length : 0
+  let top = (y1 - antennaY) / x1
   let topX = x1
   if (c < 0 && length > 0) {
-    const a = y[j - 1] - antennaY - x0 * (slope - c * x0)
+    const a = y0 - antennaY - x0 * (slope - c * x0)
     if (a < c * x0 * x0 && a > c * x1 * x1) {
       const xs = Math.sqrt(a / c)
       const g = a / xs + slope - 2 * c * x0 + c * xs
@@ -49,17 +59,20 @@ export function raise(p: StraightProfile, j: number, s: RunState): void {
     }
   }
   if (!(top > old)) return
-  const gap = Math.min(0, y[j - 1] - antennaY - old * x0)
+  const gap = y0 - antennaY - old * x0
   const steep = slope - old
   const most = topX - x0
   let from = 0
   if (gap < 0 || steep < 0) {
-    const root = Math.sqrt(Math.max(0, steep * steep - 4 * c * gap))
-    from = Math.min(most, steep > 0 ? (-2 * gap) / (steep + root) : c > 0 ? (root - steep) / (2 * c) : most)
+    const under = gap < 0 ? gap : 0
+    const square = steep * steep - 4 * c * under
+    const root = square > 0 ? Math.sqrt(square) : 0
+    from = steep > 0 ? (-2 * under) / (steep + root) : c > 0 ? (root - steep) / (2 * c) : most
+    if (from > most) from = most
   }
-  s[RUN.seenX] += most - from
-  s[RUN.tangent] = top
-  s[RUN.controlX] = topX
+  s[3] += most - from
+  s[1] = top
+  s[2] = topX
 }
 
 /** What one antenna height gives along one ray: the state of the run at each cut of the profile and at its end. */
@@ -74,24 +87,23 @@ export const makeSightRun = (cuts: number): SightRun => ({
   tangent: new Float64Array(cuts),
   controlX: new Float64Array(cuts),
   seenX: new Float64Array(cuts),
-  end: new Float64Array(4),
+  end: makeRunState(),
 })
 
 /** Runs outward over a whole profile from an antenna at Y = antennaY. */
 export function runSight(p: StraightProfile, antennaY: number, out: SightRun): void {
-  const { x, y, bend, cutPoint, count, cuts } = p
+  const { line, cutPoint, count, cuts } = p
   const s = out.end
   startRun(s, antennaY)
   let j = 0
   for (let k = 0; k <= cuts; k++) {
-    const to = k < cuts ? cutPoint[k] : count - 1
-    for (; j < to; ) {
-      j++
-      const m = s[RUN.tangent]
-      const g0 = y[j - 1] - antennaY - m * x[j - 1]
-      const g1 = y[j] - antennaY - m * x[j]
-      const length = x[j] - x[j - 1]
-      if (Math.max(g0, g1) + Math.max(0, -0.25 * bend[j - 1] * length * length) > 0) raise(p, j, s)
+    for (const to = k < cuts ? cutPoint[k] : count - 1; j < to; j++) {
+      s[4] = line[3 * j]
+      s[5] = line[3 * j + 1]
+      s[6] = line[3 * j + 3]
+      s[7] = line[3 * j + 4]
+      s[8] = line[3 * j + 2]
+      raise(s)
     }
     if (k < cuts) {
       out.tangent[k] = s[RUN.tangent]

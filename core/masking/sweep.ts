@@ -2,10 +2,11 @@ import type { Earth } from '../geodesy/index.ts'
 import { CELL, type PolarShape } from '../polar/index.ts'
 import { type Ground, RELIEF, type Site } from '../terrain/index.ts'
 import type { Work } from '../work/index.ts'
-import { packSlope, type SeenCells, uniformCuts } from './cells.ts'
+import { type CellProfile, fillCells, makeCellProfile } from './cellProfile.ts'
+import { type GroundCells, packSlope, type SeenCells, uniformCuts, writeGround } from './cells.ts'
 import { heightsToSee, makeHull } from './heightLadder.ts'
 import { horizonRow } from './horizon.ts'
-import { straighten } from './profile.ts'
+import { cutGround } from './profile.ts'
 import { makeRunner, setAntenna, setEarth } from './ray.ts'
 import { sightPass } from './sightPass.ts'
 import { RUN } from './sightRun.ts'
@@ -34,8 +35,10 @@ export function* sweep(
 ): Work<{ site: SiteCells; masks: SightCells[] }> {
   const { azimuths, ranges } = grid
   const cuts = uniformCuts(ranges, grid.rangeStepM)
-  const r = makeRunner(g, site, ranges * grid.rangeStepM, 2 * ranges, grid.azimuthStepDeg)
-  const hull = makeHull(r.profile.x.length)
+  const r = makeRunner(g, site, ranges * grid.rangeStepM, 0, grid.azimuthStepDeg)
+  const track = r.tracer.track
+  const p = makeCellProfile(track.surface.length, ranges)
+  const hull = makeHull(track.surface.length, ranges)
   const cells = azimuths * ranges
   const siteCells = {
     kind: 'site' as const,
@@ -53,6 +56,8 @@ export function* sweep(
   const masks = heightsM.map((heightM, h) => makeSight(grid, heightM, options.keys?.masks?.[h] ?? ''))
   const ascending = [...masks].sort((a, b) => a.heightM - b.heightM)
   const centres = Float64Array.from({ length: ranges }, (_, j) => (j + 0.5) * grid.rangeStepM)
+  const groundM = new Float64Array(ranges)
+  const slope = new Float64Array(ranges)
   const whole = new Uint8Array(ranges)
   let points = 0
   for (let i = 0; i < azimuths; i++) {
@@ -61,28 +66,28 @@ export function* sweep(
     r.tracer.trace(azimuthDeg)
     setEarth(r, earth, azimuthDeg)
     siteCells.effectiveRadiusM[i] = r.effectiveRadiusM
-    straighten(r.tracer.track, r.inverse, cuts, r.profile)
-    const known = Math.min(ranges, (r.profile.cuts + 1) >> 1)
-    const { cutGroundM, cutSlope } = r.profile
-    for (let j = 0; j < known; j++) {
-      siteCells.groundM[offset + j] = cutGroundM[2 * j]
-      siteCells.slopePermille[offset + j] = packSlope(cutSlope[2 * j])
+    fillCells(track, r.inverse, cuts, p)
+    const { known } = p
+    if (track.ground === track.surface) groundOfCells(p, siteCells, offset)
+    else {
+      cutGround(track.ground, centres, known, groundM, slope)
+      writeGround(groundM, slope, known, siteCells, offset)
     }
     r.tracer.sampleCells(centres, known, siteCells.code, siteCells.relief, offset)
-    heightsToSee(r.profile, known, r.siteGroundM, r.inverse, g.postingM, hull, siteCells.heightToSeeM, offset)
+    heightsToSee(p, cuts, r.siteGroundM, r.inverse, g.postingM, hull, siteCells.heightToSeeM, offset)
     siteCells.groundM.fill(Number.NaN, offset + known, offset + ranges)
     siteCells.code.fill(255, offset + known, offset + ranges)
     siteCells.relief.fill(RELIEF.unknown, offset + known, offset + ranges)
     siteCells.heightToSeeM.fill(Number.NaN, offset + known, offset + ranges)
-    const unknownState = r.tracer.track.unknownWhy === 'void' ? CELL.beyondVoid : CELL.outside
+    const unknownState = track.unknownWhy === 'void' ? CELL.beyondVoid : CELL.outside
     whole.fill(0)
     for (const mask of ascending) {
       setAntenna(r, mask.heightM)
-      sightPass(r, cuts, known, whole, r.run.end, mask, offset)
+      sightPass(r, p, cuts, whole, r.run.end, mask, offset)
       markUnknown(mask, offset + known, offset + ranges, unknownState)
       mask.horizon.push(horizonRow(r, azimuthDeg, r.siteGroundM + mask.heightM, r.run.end[RUN.tangent], r.run.end[RUN.controlX]))
     }
-    points += r.profile.count * (2 + 0.3 * masks.length)
+    points += p.count * (2 + 0.3 * masks.length)
     if (points > POINTS_PER_TURN) {
       points = 0
       yield { done: i + 1, total: azimuths }
@@ -91,6 +96,15 @@ export function* sweep(
   return { site: siteCells, masks }
 }
 
+/** Ground at the cell centres where it is the surface. */
+function groundOfCells(p: CellProfile, out: GroundCells, offset: number): void {
+  const { cell, known } = p
+  const { groundM, slopePermille } = out
+  for (let j = 0; j < known; j++) {
+    groundM[offset + j] = cell[3 * j]
+    slopePermille[offset + j] = packSlope(cell[3 * j + 1])
+  }
+}
 /** Empty result of one height. */
 export const makeSight = (grid: PolarShape, heightM: number, key: string) => {
   const cells = grid.azimuths * grid.ranges

@@ -45,10 +45,12 @@ export function sweepRays(
   const held = heldRunner(g, site, reachM)
   const r = {
     ...held,
-    profile: makeStraightProfile(held.tracer.track.distM.length, count),
+    profile: makeStraightProfile(held.tracer.track.surface.length, count),
     run: makeSightRun(count),
   }
   const centres = Float64Array.from(centresM)
+  const groundM = new Float64Array(n)
+  const slope = new Float64Array(n)
   const out = {
     azimuthsDeg,
     centresM: centres,
@@ -69,9 +71,14 @@ export function sweepRays(
     r.tracer.traceTo(azimuthDeg, reachM)
     runRay(r, earth, azimuthDeg, heightM, cuts.cuts)
     out.effectiveRadiusM[i] = r.effectiveRadiusM
-    writeGround(r.profile, cuts, out, offset)
     let known = 0
     while (known < n && cuts.centre[known] < r.profile.cuts) known++
+    for (let j = 0; j < known; j++) {
+      groundM[j] = r.profile.cutGroundM[cuts.centre[j]]
+      slope[j] = r.profile.cutSlope[cuts.centre[j]]
+    }
+    writeGround(groundM, slope, known, out, offset)
+    if (!g.code) out.code.fill(0, offset, offset + known)
     r.tracer.sampleCells(centres, known, out.code, out.relief, offset)
     writeSeen(r, r.run, cuts, out, offset, r.tracer.track.unknownWhy === 'void' ? CELL.beyondVoid : CELL.outside)
   })

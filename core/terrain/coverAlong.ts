@@ -22,18 +22,8 @@ export interface Clearing {
   readonly rowNorthM: number
 }
 
-/** Adds the bilinear cover to a walked ray: surface height and bend, and the code of the nearest post. */
-export function coverAlong(
-  p: CoverPosts,
-  count: number,
-  patches: WalkedPatches,
-  distM: Float64Array,
-  groundM: Float64Array,
-  groundBendPerM: Float64Array,
-  surfaceM: Float64Array,
-  bendPerM: Float64Array,
-  nearestCode: Uint8Array,
-): void {
+/** Surface of a walked ray: ground and the bilinear cover on it. */
+export function coverAlong(p: CoverPosts, count: number, patches: WalkedPatches, ground: Float64Array, surface: Float64Array): void {
   const { width, code, coverM } = p
   const cleared = p.clearing.reachM
   for (let k = 0; k < count; k++) {
@@ -44,7 +34,7 @@ export function coverAlong(
     let c01: number
     let c10: number
     let c11: number
-    if (distM[k] > cleared) {
+    if (ground[3 * k] > cleared) {
       c00 = coverM[code ? code[at] : 0]
       c01 = coverM[code ? code[at + 1] : 0]
       c10 = coverM[code ? code[at + width] : 0]
@@ -55,10 +45,9 @@ export function coverAlong(
       c10 = coverNear(p, at + width)
       c11 = coverNear(p, at + width + 1)
     }
-    surfaceM[k] = groundM[k] + (c00 * (1 - u) + c01 * u) * (1 - v) + (c10 * (1 - u) + c11 * u) * v
-    bendPerM[k] = groundBendPerM[k] + (c00 - c01 - c10 + c11) * patches.bendPerTwist[k]
-    const nearest = at + (u < 0.5 ? 0 : 1) + (v < 0.5 ? 0 : width)
-    nearestCode[k] = code ? code[nearest] : 0
+    surface[3 * k] = ground[3 * k]
+    surface[3 * k + 1] = ground[3 * k + 1] + (c00 * (1 - u) + c01 * u) * (1 - v) + (c10 * (1 - u) + c11 * u) * v
+    surface[3 * k + 2] = ground[3 * k + 2] + (c00 - c01 - c10 + c11) * patches.bendPerTwist[k]
   }
 }
 

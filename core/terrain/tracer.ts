@@ -8,11 +8,8 @@ import { reliefAt, reliefBlockOf } from './relief.ts'
 import type { Ground, RayTrack, Site } from './types.ts'
 import { WALK_END, type WalkedPatches, walkCapacity, walkRay } from './walkRay.ts'
 
-/** The track with what the kernels beside it need: the ground's own bend and the obstacles standing in this ray. */
+/** The track with the obstacles standing in this ray, nearest first. */
 export interface TracedRay extends RayTrack {
-  /** Quadratic term of the ground between this crossing and the next, 1/m. */
-  groundBendPerM: Float64Array
-  /** Obstacles in this ray, nearest first: range and index into Ground.obstacles. */
   spikes: readonly Spike[]
 }
 export interface TracerOptions {
@@ -27,7 +24,10 @@ export interface Tracer {
   traceTo(azimuthDeg: number, rangeM: number): void
   /** Place on the geodesic. */
   place(distM: number, azimuthDeg: number): LonLat
-  /** Ground code and relief at ascending distances along the traced ray: fills code[offset + i] and relief[offset + i] for i < count. */
+  /**
+   * Ground code and relief at ascending distances along the traced ray: sets code[offset + i] and relief[offset + i] for i < count. Where the ground is
+   * uniform its code is 0 and the codes are left alone.
+   */
   sampleCells(distM: Float64Array, count: number, code: Uint8Array, relief: Uint8Array, offset: number): void
   /** Pixel position of a distance along the traced ray. */
   pixelAt(distM: number): [number, number]
@@ -63,24 +63,11 @@ export function makeTracer(g: Ground, site: Site, maxRangeM: number, options: Tr
         bendPerTwist: new Float64Array(capacity),
       }
     : null
+  const ground = new Float64Array(3 * capacity)
   const separate = covered || g.obstacles.length > 0
-  const groundM = new Float64Array(capacity)
-  const groundBendPerM = new Float64Array(capacity)
-  const track: TracedRay & { patches: WalkedPatches | null } = {
-    count: 0,
-    distM: new Float64Array(capacity),
-    groundM,
-    groundBendPerM,
-    surfaceM: separate ? new Float64Array(capacity) : groundM,
-    bendPerM: separate ? new Float64Array(capacity) : groundBendPerM,
-    code: new Uint8Array(capacity),
-    unknownFromM: Number.POSITIVE_INFINITY,
-    unknownWhy: null,
-    end: 'maxRange',
-    spikes: [],
-    patches,
-  }
-  const walk = { count: 0, end: 0, distM: track.distM, groundM, groundBendPerM, patches }
+  const surface = separate ? new Float64Array(3 * capacity) : ground
+  const track: TracedRay = { count: 0, ground, surface, unknownFromM: Number.POSITIVE_INFINITY, unknownWhy: null, spikes: [] }
+  const walk = { count: 0, end: 0, ground, patches }
   const cover: CoverPosts | null = covered
     ? {
         code: g.code,
@@ -94,21 +81,19 @@ export function makeTracer(g: Ground, site: Site, maxRangeM: number, options: Tr
     walkRay(heightM, shape.width, shape.height, points, walk)
     const n = walk.count
     track.count = n
-    const last = n > 0 ? track.distM[n - 1] : 0
+    const last = n > 0 ? ground[3 * (n - 1)] : 0
     const ended = last < rangeM - END_SLACK_M
-    if (!ended && n > 0) track.distM[n - 1] = rangeM
+    if (!ended && n > 0) ground[3 * (n - 1)] = rangeM
     track.unknownFromM = ended ? last : Number.POSITIVE_INFINITY
     track.unknownWhy = ended ? (walk.end === WALK_END.void ? 'void' : 'edge') : null
-    track.end = track.unknownWhy === 'edge' ? 'edge' : 'maxRange'
-    if (cover && patches) coverAlong(cover, n, patches, track.distM, groundM, groundBendPerM, track.surfaceM, track.bendPerM, track.code)
-    else if (separate) {
-      track.surfaceM.set(groundM.subarray(0, n))
-      track.bendPerM.set(groundBendPerM.subarray(0, n))
-    }
+    if (cover && patches) coverAlong(cover, n, patches, ground, surface)
+    else if (separate) surface.set(ground.subarray(0, 3 * n))
     track.spikes = blockers.along(azimuthDeg)
     if (track.spikes.length > 0) insertSpikes(track)
   }
   const block = reliefBlockOf(g)
+  const blockCol = Int32Array.from({ length: shape.width }, (_, c) => Math.floor(c / block.cols))
+  const blockRow = Int32Array.from({ length: shape.height }, (_, r) => Math.floor(r / block.rows) * g.relief.width)
 
   const cut: ControlPoints = {
     count: 0,
@@ -144,19 +129,23 @@ export function makeTracer(g: Ground, site: Site, maxRangeM: number, options: Tr
       const { col, row, distM: at } = current
       const { width, height } = shape
       const blocks = g.relief.samples
-      const blockWidth = g.relief.width
+      const codes = g.code
       let i = 0
       for (let m = 0; m + 1 < current.count && i < count; m++) {
         const perM = 1 / (at[m + 1] - at[m])
         const dc = (col[m + 1] - col[m]) * perM
         const dr = (row[m + 1] - row[m]) * perM
-        for (; i < count && distM[i] <= at[m + 1]; i++) {
-          const s = distM[i] - at[m]
-          const c = Math.floor(col[m] + s * dc + 0.5)
-          const r = Math.floor(row[m] + s * dr + 0.5)
-          if (c < 0 || r < 0 || c >= width || r >= height) continue
-          if (code.length > 0) code[offset + i] = g.code ? g.code[r * width + c] : 0
-          relief[offset + i] = blocks[((r / block.rows) | 0) * blockWidth + ((c / block.cols) | 0)]
+        const c0 = col[m] - at[m] * dc + 0.5
+        const r0 = row[m] - at[m] * dr + 0.5
+        const end = at[m + 1]
+        for (; i < count; i++) {
+          const s = distM[i]
+          if (s > end) break
+          const c = (c0 + s * dc) | 0
+          const r = (r0 + s * dr) | 0
+          if (c >= width || r >= height) continue
+          if (codes) code[offset + i] = codes[r * width + c]
+          relief[offset + i] = blocks[blockRow[r] + blockCol[c]]
         }
       }
     },
@@ -218,45 +207,54 @@ function cutAt(from: ControlPoints, rangeM: number, to: ControlPoints): void {
   to.count = m
 }
 
+/** Height on a track between entry j and the next. */
+function heightBetween(t: Float64Array, j: number, distM: number): number {
+  const length = t[3 * j + 3] - t[3 * j]
+  const z = t[3 * j + 1]
+  if (!(length > 0)) return z
+  const u = distM - t[3 * j]
+  return z + u * ((t[3 * j + 4] - z) / length + t[3 * j + 2] * (u - length))
+}
+
 /** Puts the obstacles of this ray into the track: up to the top and down again within 2 mm. */
 function insertSpikes(t: TracedRay): void {
+  const { ground, surface } = t
   for (const spike of t.spikes) {
     const n = t.count
-    if (!(spike.distM > 0 && spike.distM <= t.distM[n - 1])) continue
+    if (!(spike.distM > 0 && spike.distM <= ground[3 * (n - 1)])) continue
+    // the spike stands between entries j and j + 1
     let j = 0
     let high = n - 1
     while (high - j > 1) {
       const mid = (j + high) >> 1
-      if (t.distM[mid] < spike.distM) j = mid
+      if (ground[3 * mid] < spike.distM) j = mid
       else high = mid
     }
-    // the spike stands in the segment from j to j + 1
-    const length = t.distM[j + 1] - t.distM[j]
-    const at = (distM: number, z: Float64Array, bend: Float64Array): number => {
-      if (!(length > 0)) return z[j]
-      const u = distM - t.distM[j]
-      return z[j] + u * ((z[j + 1] - z[j]) / length + bend[j] * (u - length))
-    }
-    const groundM = at(spike.distM, t.groundM, t.groundBendPerM)
-    const topM = spike.aboveGround ? groundM + spike.topM : spike.topM
-    if (topM <= at(spike.distM, t.surfaceM, t.bendPerM)) continue
-    const before = Math.max(t.distM[j], spike.distM - SPIKE_HALF_M)
-    const after = Math.min(t.distM[j + 1], spike.distM + SPIKE_HALF_M)
-    const rows: [number, number, number, number, number][] = [
-      [before, at(before, t.groundM, t.groundBendPerM), t.groundBendPerM[j], at(before, t.surfaceM, t.bendPerM), 0],
-      [spike.distM, groundM, t.groundBendPerM[j], topM, 0],
-      [after, at(after, t.groundM, t.groundBendPerM), t.groundBendPerM[j], at(after, t.surfaceM, t.bendPerM), t.bendPerM[j]],
+    const footM = heightBetween(ground, j, spike.distM)
+    const topM = spike.aboveGround ? footM + spike.topM : spike.topM
+    if (topM <= heightBetween(surface, j, spike.distM)) continue
+    const before = Math.max(ground[3 * j], spike.distM - SPIKE_HALF_M)
+    const after = Math.min(ground[3 * j + 3], spike.distM + SPIKE_HALF_M)
+    const q = ground[3 * j + 2]
+    const rows = [before, heightBetween(ground, j, before), q, spike.distM, footM, q, after, heightBetween(ground, j, after), q]
+    const tops = [
+      before,
+      heightBetween(surface, j, before),
+      0,
+      spike.distM,
+      topM,
+      0,
+      after,
+      heightBetween(surface, j, after),
+      surface[3 * j + 2],
     ]
-    for (const a of [t.distM, t.groundM, t.groundBendPerM, t.surfaceM, t.bendPerM, t.code]) a.copyWithin(j + 4, j + 1, n)
-    rows.forEach(([distM, ground, groundBend, surface, bend], i) => {
-      const k = j + 1 + i
-      t.distM[k] = distM
-      t.groundM[k] = ground
-      t.groundBendPerM[k] = groundBend
-      t.surfaceM[k] = surface
-      t.bendPerM[k] = bend
-      t.code[k] = t.code[j]
-    })
+    for (const [a, values] of [
+      [ground, rows],
+      [surface, tops],
+    ] as const) {
+      a.copyWithin(3 * (j + 4), 3 * (j + 1), 3 * n)
+      a.set(values, 3 * (j + 1))
+    }
     t.count = n + 3
   }
 }

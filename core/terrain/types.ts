@@ -30,21 +30,18 @@ export interface Site {
   readonly groundHeightM: number | null
   readonly clearingRadiusM: number
 }
-/** Scratch of one ray, filled again for each azimuth; never leaves the kernel. All mast heights read the same track. */
+/** Where the numbers of one entry of a RayTrack lie: entry k starts at TRACK.stride * k. */
+export const TRACK = { stride: 3, distM: 0, heightM: 1, bendPerM: 2 } as const
+/**
+ * Scratch of one ray, filled again for each azimuth; never leaves the kernel. All mast heights read the same track. One entry per crossing: ground range
+ * from the site (m), height (m MSL) and the quadratic term of the height between this crossing and the next (1/m), side by side for the hot loops.
+ */
 export interface RayTrack {
   count: number
-  /** Ground range from the site, m. */
-  distM: Float64Array
-  /** Ground, m MSL. */
-  groundM: Float64Array
-  /** Ground + cover + obstacles, m MSL. */
-  surfaceM: Float64Array
-  /** Quadratic term of the surface between this crossing and the next, 1/m. */
-  bendPerM: Float64Array
-  /** Ground code of the nearest cell. */
-  code: Uint8Array
+  readonly ground: Float64Array
+  /** Ground + cover + obstacles; the same array where there is neither. */
+  readonly surface: Float64Array
   /** Where the ray stopped being known: crossed a void or left the raster, m; Infinity if neither. */
   unknownFromM: number
   unknownWhy: 'void' | 'edge' | null
-  end: 'maxRange' | 'edge'
 }

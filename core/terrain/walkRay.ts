@@ -7,10 +7,8 @@ export const WALK_END = { reach: 0, edge: 1, void: 2 } as const
 export interface Walk {
   count: number
   end: number
-  distM: Float64Array
-  groundM: Float64Array
-  /** Quadratic term of the ground from this entry to the next, 1/m. */
-  groundBendPerM: Float64Array
+  /** Distance, ground height and bend to the next entry: three numbers per entry. */
+  readonly ground: Float64Array
   /** Kept only for ground with cover. */
   readonly patches: WalkedPatches | null
 }
@@ -28,159 +26,153 @@ export const walkCapacity = (width: number, height: number, controls: number): n
 /**
  * Walks one ray over the bilinear surface through the posts. Between two crossings the height is z₀ + b(s−s₀) + q(s−s₀)², q = twist of the patch along the
  * ray; at each crossing it is linear between two posts. Stops at the last line of posts (edge) or before a patch with a void post.
+ *
+ * Each stretch between control points is walked as if toward growing columns and rows: `near` and `far` are meant along the ray, u and v grow along it.
  */
 export function walkRay(heightM: Float32Array, width: number, height: number, control: ControlPoints, out: Walk): void {
-  const { distM, groundM, groundBendPerM, patches } = out
+  const { ground, patches } = out
   const lastCol = width - 2
   const lastRow = height - 2
   let k = 0
-  let byCol = false
   out.end = WALK_END.reach
   for (let i = 0; i + 1 < control.count; i++) {
     const c0 = control.col[i]
     const r0 = control.row[i]
     const s0 = control.distM[i]
+    const ds = control.distM[i + 1] - s0
     const dc = control.col[i + 1] - c0
     const dr = control.row[i + 1] - r0
-    const ds = control.distM[i + 1] - s0
-    const right = dc > 0
-    const down = dr > 0
-    const stepC = dc === 0 ? Number.POSITIVE_INFINITY : 1 / Math.abs(dc)
-    const stepR = dr === 0 ? Number.POSITIVE_INFINITY : 1 / Math.abs(dr)
-    const moveC = right ? 1 : -1
-    const moveR = down ? 1 : -1
-    // the patch the ray enters here
-    let pc = right ? Math.floor(c0) : dc < 0 ? Math.ceil(c0) - 1 : Math.min(Math.floor(c0), lastCol)
-    let pr = down ? Math.floor(r0) : dr < 0 ? Math.ceil(r0) - 1 : Math.min(Math.floor(r0), lastRow)
+    const right = dc >= 0
+    const down = dr >= 0
+    // patch the stretch starts in; on a line of posts, the one ahead
+    const pc = right ? Math.min(Math.floor(c0), dc > 0 ? width : lastCol) : Math.ceil(c0) - 1
+    const pr = down ? Math.min(Math.floor(r0), dr > 0 ? height : lastRow) : Math.ceil(r0) - 1
     if (!(pc >= 0 && pr >= 0 && pc <= lastCol && pr <= lastRow && Number.isFinite(dc) && Number.isFinite(dr))) {
       out.end = WALK_END.edge
       break
     }
-    let tc = dc === 0 ? Number.POSITIVE_INFINITY : (right ? pc + 1 - c0 : c0 - pc) * stepC
-    let tr = dr === 0 ? Number.POSITIVE_INFINITY : (down ? pr + 1 - r0 : r0 - pr) * stepR
-    let at = pr * width + pc
-    let z00 = heightM[at]
-    let z01 = heightM[at + 1]
-    let z10 = heightM[at + width]
-    let z11 = heightM[at + width + 1]
-    const twistScale = (dc * dr) / (ds * ds)
-    let twist = z00 - z01 - z10 + z11
+    const across = Math.abs(dc)
+    const along = Math.abs(dr)
+    const stepC = across > 0 ? 1 / across : Number.POSITIVE_INFINITY
+    const stepR = along > 0 ? 1 / along : Number.POSITIVE_INFINITY
+    const toCol = right ? 1 : -1
+    const toRow = down ? width : -width
+    let colsLeft = right ? lastCol - pc : pc
+    let rowsLeft = down ? lastRow - pr : pr
+    // place in the patch, 0 at the near post
+    let u0 = right ? c0 - pc : pc + 1 - c0
+    let v0 = down ? r0 - pr : pr + 1 - r0
+    let tc = across > 0 ? (1 - u0) * stepC : Number.POSITIVE_INFINITY
+    let tr = along > 0 ? (1 - v0) * stepR : Number.POSITIVE_INFINITY
+    let at = (pr + (down ? 0 : 1)) * width + pc + (right ? 0 : 1)
+    let nn = heightM[at]
+    let fn = heightM[at + toCol]
+    let nf = heightM[at + toRow]
+    let ff = heightM[at + toCol + toRow]
+    const bendPerTwist = (across * along) / (ds * ds)
+    let twist = nn - fn - nf + ff
     if (Number.isNaN(twist)) {
       out.end = WALK_END.void
       break
     }
-    const u0 = c0 - pc
-    const v0 = r0 - pr
-    distM[k] = s0
-    groundM[k] = (z00 * (1 - u0) + z01 * u0) * (1 - v0) + (z10 * (1 - u0) + z11 * u0) * v0
-    groundBendPerM[k] = twist * twistScale
-    if (patches) {
-      patches.post[k] = at
-      patches.u[k] = u0
-      patches.v[k] = v0
-      patches.bendPerTwist[k] = twistScale
-    }
+    ground[3 * k] = s0
+    ground[3 * k + 1] = (nn * (1 - u0) + fn * u0) * (1 - v0) + (nf * (1 - u0) + ff * u0) * v0
+    ground[3 * k + 2] = twist * bendPerTwist
+    if (patches) keep(patches, k, at, u0, v0, right, down, width, bendPerTwist)
     k++
+    // the crossing at hand: distance, height, and place in the patch behind it
+    let s = 0
+    let z = 0
+    let u = 0
+    let v = 0
     for (;;) {
       if (tc <= tr) {
         if (tc >= 1) break
-        const v = r0 + tc * dr - pr
-        const z = right ? z01 + v * (z11 - z01) : z00 + v * (z10 - z00)
-        distM[k] = s0 + tc * ds
-        groundM[k] = z
-        if (patches) {
-          byCol = true
-          patches.u[k] = right ? 0 : 1
-          patches.v[k] = v
-        }
-        pc += moveC
-        if (pc < 0 || pc > lastCol) {
+        u = 1
+        v = v0 + tc * along
+        z = fn + v * (ff - fn)
+        s = s0 + tc * ds
+        tc += stepC
+        u0 -= 1
+        if (--colsLeft < 0) {
           out.end = WALK_END.edge
           break
         }
-        at += moveC
-        if (right) {
-          z00 = z01
-          z10 = z11
-          z01 = heightM[at + 1]
-          z11 = heightM[at + width + 1]
-        } else {
-          z01 = z00
-          z11 = z10
-          z00 = heightM[at]
-          z10 = heightM[at + width]
+        at += toCol
+        nn = fn
+        nf = ff
+        fn = heightM[at + toCol]
+        ff = heightM[at + toCol + toRow]
+        twist = nn - fn - nf + ff
+        if (Number.isNaN(twist)) {
+          at -= toCol
+          out.end = WALK_END.void
+          break
         }
-        tc += stepC
+        if (patches) keep(patches, k, at, 0, v, right, down, width, bendPerTwist)
       } else {
         if (tr >= 1) break
-        const u = c0 + tr * dc - pc
-        const z = down ? z10 + u * (z11 - z10) : z00 + u * (z01 - z00)
-        distM[k] = s0 + tr * ds
-        groundM[k] = z
-        if (patches) {
-          byCol = false
-          patches.u[k] = u
-          patches.v[k] = down ? 0 : 1
-        }
-        pr += moveR
-        if (pr < 0 || pr > lastRow) {
+        u = u0 + tr * across
+        v = 1
+        z = nf + u * (ff - nf)
+        s = s0 + tr * ds
+        tr += stepR
+        v0 -= 1
+        if (--rowsLeft < 0) {
           out.end = WALK_END.edge
           break
         }
-        if (down) {
-          at += width
-          z00 = z10
-          z01 = z11
-          z10 = heightM[at + width]
-          z11 = heightM[at + width + 1]
-        } else {
-          at -= width
-          z10 = z00
-          z11 = z01
-          z00 = heightM[at]
-          z01 = heightM[at + 1]
+        at += toRow
+        nn = nf
+        fn = ff
+        nf = heightM[at + toRow]
+        ff = heightM[at + toCol + toRow]
+        twist = nn - fn - nf + ff
+        if (Number.isNaN(twist)) {
+          at -= toRow
+          out.end = WALK_END.void
+          break
         }
-        tr += stepR
+        if (patches) keep(patches, k, at, u, 0, right, down, width, bendPerTwist)
       }
-      twist = z00 - z01 - z10 + z11
-      if (Number.isNaN(twist)) {
-        out.end = WALK_END.void
-        break
-      }
-      groundBendPerM[k] = twist * twistScale
-      if (patches) {
-        patches.post[k] = at
-        patches.bendPerTwist[k] = twistScale
-      }
+      ground[3 * k] = s
+      ground[3 * k + 1] = z
+      ground[3 * k + 2] = twist * bendPerTwist
       k++
     }
-    if (out.end !== WALK_END.reach) {
-      // the crossing itself is the last known place
-      groundBendPerM[k] = 0
-      if (patches) {
-        // no patch ahead (edge), or one with a void: keep the one behind
-        if (byCol) patches.u[k] = right ? 1 : 0
-        else patches.v[k] = down ? 1 : 0
-        patches.post[k] = patches.post[k - 1]
-        patches.bendPerTwist[k] = 0
-      }
-      k++
-      break
+    const ended = out.end !== WALK_END.reach
+    if (!ended && i + 2 < control.count) continue
+    if (!ended) {
+      s = s0 + ds
+      u = u0 + across
+      v = v0 + along
+      z = (nn * (1 - u) + fn * u) * (1 - v) + (nf * (1 - u) + ff * u) * v
     }
-    if (i + 2 === control.count) {
-      const u = control.col[i + 1] - pc
-      const v = control.row[i + 1] - pr
-      distM[k] = control.distM[i + 1]
-      groundM[k] = (z00 * (1 - u) + z01 * u) * (1 - v) + (z10 * (1 - u) + z11 * u) * v
-      groundBendPerM[k] = 0
-      if (patches) {
-        patches.post[k] = at
-        patches.u[k] = u
-        patches.v[k] = v
-        patches.bendPerTwist[k] = 0
-      }
-      k++
-    }
+    // the last known place of the ray
+    ground[3 * k] = s
+    ground[3 * k + 1] = z
+    ground[3 * k + 2] = 0
+    if (patches) keep(patches, k, at, u, v, right, down, width, 0)
+    k++
+    break
   }
   out.count = k
+}
+
+/** Notes the patch of an entry from its first post in the raster's own order; `near` is the post the ray comes from, u and v grow along the ray. */
+function keep(
+  p: WalkedPatches,
+  k: number,
+  near: number,
+  u: number,
+  v: number,
+  right: boolean,
+  down: boolean,
+  width: number,
+  bendPerTwist: number,
+): void {
+  p.post[k] = near - (right ? 0 : 1) - (down ? 0 : width)
+  p.u[k] = right ? u : 1 - u
+  p.v[k] = down ? v : 1 - v
+  p.bendPerTwist[k] = right === down ? bendPerTwist : -bendPerTwist
 }
