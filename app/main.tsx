@@ -8,6 +8,8 @@ import './ui/theme.css'
 import './ui/controls.css'
 import './steps/steps.css'
 
+// the map's own code comes down while the session starts
+void import('./map/index.ts')
 const session = await startSession(createStudyClient(), makeGroundReader())
 createRoot(document.getElementById('root') as HTMLElement).render(
   <StrictMode>

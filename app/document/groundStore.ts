@@ -14,6 +14,8 @@ export interface GroundState {
   readonly trouble: string
   /** What the study worker said of the ground it holds. */
   readonly ground: NonNullable<Answer['ground']> | null
+  /** Posts of the ground; a very large file is read in a window around the candidates. */
+  readonly posts: number
   /** What was read, a line per file. */
   readonly notes: readonly string[]
   readonly obstacles: readonly Obstacle[]
@@ -28,6 +30,7 @@ export const NO_GROUND: GroundState = {
   reading: null,
   trouble: '',
   ground: null,
+  posts: 0,
   notes: [],
   obstacles: [],
   roads: [],

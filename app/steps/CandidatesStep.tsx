@@ -73,6 +73,9 @@ export function CandidatesStep() {
   )
 }
 
+/** A ground of this size may be a window of its file, read around the candidates there were. */
+const WINDOWED_POSTS = 30e6
+
 /** Letter ring as the map draws it. */
 export const Ring = () => (
   <svg className="ring" width="18" height="18" viewBox="0 0 18 18" aria-hidden>
@@ -89,6 +92,7 @@ function Card({ candidate: c, onSelect }: { candidate: CandidateDoc; onSelect: (
   const system = useView((v) => v.units)
   const groundM = useGround((g) => g.candidateM.get(c.id))
   const hasGround = useGround((g) => g.state === 'ready')
+  const windowed = useGround((g) => g.posts > WINDOWED_POSTS)
   const tilts = useDoc((d) => settledOf(d)?.candidates.find((x) => x.id === c.id)?.tiltsDeg)
   const on = option?.candidate === c.id
   const heightM = c.groundHeightM ?? groundM
@@ -113,9 +117,11 @@ function Card({ candidate: c, onSelect }: { candidate: CandidateDoc; onSelect: (
       {hasGround && groundM === null ? (
         <div className="row">
           <span className="mark">no ground known here: outside the terrain or over a void</span>
-          <Button small look="quiet" onPress={session.readAgain}>
-            read again
-          </Button>
+          {windowed ? (
+            <Button small onPress={session.readAgain}>
+              Read the ground here
+            </Button>
+          ) : null}
         </div>
       ) : null}
       <fieldset className="chips" aria-label={`Mast heights of ${c.id}`}>

@@ -1,7 +1,7 @@
 import type { TerrainFileDoc } from '../../core/index.ts'
 import { setField } from '../document/index.ts'
 import { takeOut } from '../files/index.ts'
-import { Button, Caution, CommitField, Mark, Notice, NumberField, ProgressBar, Select } from '../ui/index.ts'
+import { Button, Caution, CommitField, Notice, NumberField, ProgressBar, Select } from '../ui/index.ts'
 import {
   CAUTIONS,
   EMPTY_WORDS,
@@ -204,7 +204,7 @@ function AddFile({ what, words }: { what: 'terrain' | 'landCover' | 'obstacles' 
       <Button small onPress={picker.open}>
         {words}
       </Button>
-      {what === 'terrain' ? null : <Mark>optional</Mark>}
+      {what === 'terrain' ? null : <span className="ink-3 small">optional</span>}
       {picker.input}
     </div>
   )

@@ -1,6 +1,6 @@
 import type { CellLedger, LedgerLine } from '../../core/index.ts'
 import { Caution, Mark } from '../ui/index.ts'
-import { cautionsFor, formatAzimuth, formatMast, formatNumber, formatPlaceRange, textOf } from '../words/index.ts'
+import { cautionsFor, formatAzimuth, formatMast, formatNumber, formatPlaceRange, NO_VALUE, textOf } from '../words/index.ts'
 import { useView } from './session/index.ts'
 
 const SIGN = { start: '', add: '+', subtract: '−', info: '' } as const
@@ -20,27 +20,33 @@ export function Ledger({ ledger }: { ledger: CellLedger }) {
         Cell at azimuth {textOf(formatAzimuth(at.azimuthDeg))}, {textOf(formatPlaceRange(at.rangeM, units))}, {option.candidate} at{' '}
         {textOf(formatMast(option.heightM))}
       </h3>
-      <div className="ledger-columns">
+      <table className="table">
+        <thead className="visually-hidden">
+          <tr>
+            <th scope="col">Step</th>
+            <th scope="col">Value</th>
+            <th scope="col">Model and source</th>
+          </tr>
+        </thead>
         {[...groups].map(([of, rows]) => (
-          <table key={of} className="table">
-            <caption className="visually-hidden">{of || 'Context'}</caption>
-            <tbody>
-              {rows.map((line) => (
-                <tr key={line.key}>
-                  <td className="text">
-                    {line.label} {line.mark ? <Mark>{line.mark}</Mark> : null}
-                    <span className="source">{[line.model, line.source].filter(Boolean).join(' · ')}</span>
-                  </td>
-                  <td>
-                    {SIGN[line.op]} {shownValue(line)}
-                    {line.unit ? <span className="unit">{`\u202f${line.unit}`}</span> : null}
-                  </td>
-                </tr>
-              ))}
-            </tbody>
-          </table>
+          <tbody key={of}>
+            {rows.map((line) => (
+              <tr key={line.key}>
+                <td className="text">{line.label}</td>
+                <td>
+                  {SIGN[line.op]} {shownValue(line)}
+                  {line.unit && line.value !== null ? (
+                    <span className="unit">{(line.unit === '°' ? '' : '\u202f') + line.unit}</span>
+                  ) : null}
+                </td>
+                <td className="text source">
+                  {line.mark ? <Mark>{line.mark}</Mark> : null} {[line.model, line.source].filter(Boolean).join(' · ')}
+                </td>
+              </tr>
+            ))}
+          </tbody>
         ))}
-      </div>
+      </table>
       {cautionsFor('clutter').map((c) => (
         <Caution key={c}>{c}</Caution>
       ))}
@@ -50,7 +56,7 @@ export function Ledger({ ledger }: { ledger: CellLedger }) {
 
 const shownValue = (line: LedgerLine): string => {
   if (typeof line.value === 'string') return line.value
-  if (line.value === null) return 'undefined'
+  if (line.value === null || !Number.isFinite(line.value)) return NO_VALUE
   const size = Math.abs(line.value)
-  return formatNumber(line.value, size >= 1000 ? 0 : size >= 10 ? 1 : 2)
+  return formatNumber(line.value, size >= 1000 || Number.isInteger(line.value) ? 0 : size >= 10 ? 1 : 2)
 }

@@ -3,10 +3,10 @@ import type { LonLat } from '../../core/index.ts'
 import { addCandidate, hasStartingRadar, moveCandidate, optionKey, setMastHeights, settleOption } from '../document/index.ts'
 import type { MapCandidate, MapHub, MapNeed } from '../map/index.ts'
 import { EMPTY_WORDS } from '../words/index.ts'
-import { LowerPanel } from './LowerPanel.tsx'
 import { useDoc, useGround, useResults, useSession, useView } from './session/index.ts'
 import { settledOf } from './settled.ts'
 
+const LowerPanel = lazy(() => import('./LowerPanel.tsx').then((m) => ({ default: m.LowerPanel })))
 const MapPane = lazy(() => import('../map/index.ts').then((m) => ({ default: m.MapPane })))
 const Ruler = lazy(() => import('../map/index.ts').then((m) => ({ default: m.Ruler })))
 const HorizonStrip = lazy(() => import('../map/index.ts').then((m) => ({ default: m.HorizonStrip })))
@@ -102,7 +102,13 @@ export function MapSlot({ hub }: { hub: MapHub }) {
         profileAzimuthDeg={chart === 'profile' ? profileAzimuthDeg : null}
         progress={null}
         onStop={session.stop}
-        lower={chart && option ? <LowerPanel hub={hub} /> : null}
+        lower={
+          chart && option ? (
+            <Suspense fallback={null}>
+              <LowerPanel hub={hub} />
+            </Suspense>
+          ) : null
+        }
         onLowerClose={() => set({ chart: null, cell: null })}
         empty={<NoGround />}
       />
@@ -112,7 +118,23 @@ export function MapSlot({ hub }: { hub: MapHub }) {
 
 function NoGround() {
   const state = useGround((g) => g.state)
+  const missing = useGround((g) => g.missing)
+  const named = useDoc((d) => d.terrain.length > 0)
   if (state === 'reading') return <p className="ink-2">Reading terrain</p>
+  if (state === 'failed')
+    return (
+      <>
+        <h3>The ground could not be read</h3>
+        <p className="ink-2">The Ground step says why and what to do</p>
+      </>
+    )
+  if (named && missing.length > 0)
+    return (
+      <>
+        <h3>Terrain is missing</h3>
+        <p className="ink-2">Drop {missing[0]} here: the study names it</p>
+      </>
+    )
   return (
     <>
       <h3>{EMPTY_WORDS.ground.title}</h3>

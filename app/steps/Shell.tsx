@@ -1,30 +1,25 @@
-import { type ComponentType, useEffect, useState } from 'react'
+import { type ComponentType, lazy, Suspense, useEffect, useState } from 'react'
 import { useStore } from 'zustand'
 import { redo, type StepId, undo } from '../document/index.ts'
-import { createMapHub } from '../map/index.ts'
+import { createMapHub } from '../map/hub.ts'
 import { Button, Caution, Notice } from '../ui/index.ts'
 import { cautionsForLayer, STEP_WORDS } from '../words/index.ts'
-import { CandidatesStep } from './CandidatesStep.tsx'
-import { CompareStep } from './CompareStep.tsx'
 import { FaultBoundary } from './FaultBoundary.tsx'
-import { GroundStep } from './GroundStep.tsx'
 import { MapSlot, RulerSlot, StripSlot } from './MapSlot.tsx'
 import { MemoAside } from './memo/MemoAside.tsx'
-import { MemoStep } from './memo/MemoStep.tsx'
-import { NeedStep } from './NeedStep.tsx'
-import { RadarStep } from './RadarStep.tsx'
 import { StepIndex } from './StepIndex.tsx'
 import { useSession, useView } from './session/index.ts'
 import { TopBar } from './TopBar.tsx'
 import { useDrop } from './useDrop.ts'
 
+/** Forms come down after the page stands: each on its first use. */
 const FORMS: Record<StepId, ComponentType> = {
-  ground: GroundStep,
-  radar: RadarStep,
-  need: NeedStep,
-  candidates: CandidatesStep,
-  compare: CompareStep,
-  memo: MemoStep,
+  ground: lazy(() => import('./GroundStep.tsx').then((m) => ({ default: m.GroundStep }))),
+  radar: lazy(() => import('./RadarStep.tsx').then((m) => ({ default: m.RadarStep }))),
+  need: lazy(() => import('./NeedStep.tsx').then((m) => ({ default: m.NeedStep }))),
+  candidates: lazy(() => import('./CandidatesStep.tsx').then((m) => ({ default: m.CandidatesStep }))),
+  compare: lazy(() => import('./CompareStep.tsx').then((m) => ({ default: m.CompareStep }))),
+  memo: lazy(() => import('./memo/MemoStep.tsx').then((m) => ({ default: m.MemoStep }))),
 }
 /** Steps whose form takes the whole sheet beside the ruler. */
 const WHOLE_SHEET: ReadonlySet<StepId> = new Set(['compare', 'memo'])
@@ -59,7 +54,9 @@ export function Shell() {
           )}
         </header>
         <FaultBoundary key={step}>
-          <Form />
+          <Suspense fallback={null}>
+            <Form />
+          </Suspense>
         </FaultBoundary>
       </section>
       <div className="strip">

@@ -1,12 +1,13 @@
-import { useRef } from 'react'
+import { lazy, Suspense } from 'react'
 import { useStore } from 'zustand'
 import { redo, renameStudy, undo, undoWords } from '../document/index.ts'
-import { Button, CommitField, Menu } from '../ui/index.ts'
+import { Button, CommitField } from '../ui/index.ts'
 import { UNIT_SYSTEM_NAMES } from '../words/index.ts'
 import { PrimaryAction } from './PrimaryAction.tsx'
 import { useDoc, useSave, useSession, useView } from './session/index.ts'
 import { RunLine } from './Working.tsx'
 
+const FileMenu = lazy(() => import('./FileMenu.tsx').then((m) => ({ default: m.FileMenu })))
 const clock = new Intl.DateTimeFormat('en-GB', { hour: '2-digit', minute: '2-digit' })
 
 function Saved() {
@@ -45,36 +46,6 @@ function UndoRedo() {
   )
 }
 
-function FileMenu() {
-  const session = useSession()
-  const picker = useRef<HTMLInputElement>(null)
-  return (
-    <>
-      <Menu
-        words="File"
-        entries={[
-          { id: 'open', words: 'Open…', hint: 'a study, with its files, or a package', run: () => picker.current?.click() },
-          { id: 'save', words: 'Save study', hint: 'the .json alone', run: session.saveStudy },
-          { id: 'package', words: 'Save package', hint: 'study and files in one .zip', run: () => void session.savePackage() },
-          { id: 'new', words: 'New study', run: session.newStudy },
-          { id: 'demo', words: 'Open the demo study', run: () => void session.openDemo() },
-        ]}
-      />
-      <input
-        ref={picker}
-        type="file"
-        multiple
-        hidden
-        data-testid="open-files"
-        onChange={(e) => {
-          void session.take([...(e.target.files ?? [])])
-          e.target.value = ''
-        }}
-      />
-    </>
-  )
-}
-
 export function TopBar() {
   const { view, study } = useSession()
   const name = useDoc((d) => d.name)
@@ -99,7 +70,9 @@ export function TopBar() {
           }}
         />
       </div>
-      <FileMenu />
+      <Suspense fallback={<span className="word">File</span>}>
+        <FileMenu />
+      </Suspense>
       <Saved />
       <RunLine />
       <span className="spacer" />

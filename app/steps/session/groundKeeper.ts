@@ -40,7 +40,8 @@ export function keepGround(
       const answer = await client.ask('ground', got.ground, transfer)
       if (mine !== round) return
       const { notes, roads, obstacles } = got
-      ground.setState({ state: 'ready', reading: null, ground: answer, notes, roads, obstacles })
+      const posts = got.ground.shape.width * got.ground.shape.height
+      ground.setState({ state: 'ready', reading: null, ground: answer, posts, notes, roads, obstacles })
       onGround()
     } catch (error) {
       if (mine === round) ground.setState({ ...NO_GROUND, state: 'failed', trouble: sentenceOf(error), missing })

@@ -11,6 +11,8 @@ export interface NoticeState {
   readonly shown: readonly NoticeWords[]
   say(text: string, tone?: 'warn' | 'bad'): void
   close(id: number): void
+  /** The user goes on to something else: what was said is over. */
+  clear(): void
 }
 const MOST = 4
 
@@ -23,6 +25,7 @@ export function createNoticeStore() {
       const others = get().shown.filter((n) => n.text !== text)
       set({ shown: [...others, { id: next++, tone, text }].slice(-MOST) })
     },
+    clear: () => set({ shown: [] }),
     close: (id) => set({ shown: get().shown.filter((n) => n.id !== id) }),
   }))
 }

@@ -78,6 +78,7 @@ export async function startSession(client: StudyClient, readGround: ReadGround):
       say(`${missing.join(', ')}: named by the study, not here yet; drop ${missing.length > 1 ? 'them' : 'it'} on the page`)
   }
   const guarded = async (work: () => Promise<void>) => {
+    notices.getState().clear()
     try {
       await work()
     } catch (error) {
@@ -107,6 +108,7 @@ export async function startSession(client: StudyClient, readGround: ReadGround):
       }),
     openDemo: () => guarded(openDemo),
     newStudy: () => {
+      notices.getState().clear()
       files.getState().replace([])
       study.getState().load(emptyStudy())
       opened([], [])

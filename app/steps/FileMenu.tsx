@@ -1,0 +1,34 @@
+import { useRef } from 'react'
+import { Menu } from '../ui/index.ts'
+import { useSession } from './session/index.ts'
+
+/** Open, save, package, new, demo. */
+export function FileMenu() {
+  const session = useSession()
+  const picker = useRef<HTMLInputElement>(null)
+  return (
+    <>
+      <Menu
+        words="File"
+        entries={[
+          { id: 'open', words: 'Open…', hint: 'a study, with its files, or a package', run: () => picker.current?.click() },
+          { id: 'save', words: 'Save study', hint: 'the .json alone', run: session.saveStudy },
+          { id: 'package', words: 'Save package', hint: 'study and files in one .zip', run: () => void session.savePackage() },
+          { id: 'new', words: 'New study', run: session.newStudy },
+          { id: 'demo', words: 'Open the demo study', run: () => void session.openDemo() },
+        ]}
+      />
+      <input
+        ref={picker}
+        type="file"
+        multiple
+        hidden
+        data-testid="open-files"
+        onChange={(e) => {
+          void session.take([...(e.target.files ?? [])])
+          e.target.value = ''
+        }}
+      />
+    </>
+  )
+}
