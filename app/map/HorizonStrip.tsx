@@ -9,8 +9,8 @@ import { useChannel } from './useChannel.ts'
 import './ruler.css'
 
 const SIZE = 12
-/** The strip can be stretched to this many times its height. */
-const STRETCH = 2.6
+/** Height of the stretched strip; the shell's grid takes it from `--strip`. */
+const STRETCHED_HEIGHT = '224px'
 
 /** The horizon wraps the map: its profile along the map's upper edge, azimuth by azimuth, pointer linked both ways. */
 export function HorizonStrip({ hub, rows, units, onPick }: HorizonStripProps) {
@@ -21,6 +21,13 @@ export function HorizonStrip({ hub, rows, units, onPick }: HorizonStripProps) {
   const [pointed, setPointed] = useState(false)
   const [stretched, setStretched] = useState(false)
   const answer = useChannel(hub.trialAnswer)
+  useLayoutEffect(() => {
+    const { style } = document.documentElement
+    if (stretched) style.setProperty('--strip', STRETCHED_HEIGHT)
+    return () => {
+      style.removeProperty('--strip')
+    }
+  }, [stretched])
   useLayoutEffect(() => {
     const host = box.current
     if (!host) return
@@ -35,7 +42,7 @@ export function HorizonStrip({ hub, rows, units, onPick }: HorizonStripProps) {
   // the pointer's own words take the place of the names; a preview knows no names
   const labels = tried || pointed ? 0 : undefined
   const { width } = size
-  const height = Math.round(size.height * (stretched ? STRETCH : 1))
+  const height = size.height
   const geometry = useMemo(
     () =>
       width > 0 && shown.length > 0
@@ -58,7 +65,7 @@ export function HorizonStrip({ hub, rows, units, onPick }: HorizonStripProps) {
   return (
     <div ref={box} className={`horizon-strip${stretched ? ' stretched' : ''}`}>
       {geometry ? (
-        <div className="horizon-chart" style={{ height }}>
+        <div className="horizon-chart">
           <HorizonChart
             rows={shown}
             width={width}

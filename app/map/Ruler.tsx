@@ -2,7 +2,7 @@ import { useId, useLayoutEffect, useMemo, useRef, useState } from 'react'
 import { Button } from 'react-aria-components'
 import { type Ladder, ladderHeightsM } from '../../core/index.ts'
 import { ladderGeometry, textWidth } from '../charts/index.ts'
-import { formatAreaUp, formatHeight, formatMast, formatMetPct, MAP_WORDS, textOf } from '../words/index.ts'
+import { formatAreaUp, formatHeight, formatMast, formatMetPct, MAP_WORDS, NO_VALUE, textOf } from '../words/index.ts'
 import { RulerScale } from './ruler/RulerScale.tsx'
 import { BETWEEN_STEP_M, nextStated, snapped } from './ruler/rulerGeometry.ts'
 import { useLadder } from './ruler/useLadder.ts'
@@ -84,11 +84,11 @@ export function Ruler(props: RulerProps) {
       <dl className="ruler-now">
         <div className="in-sight">
           <dt>{MAP_WORDS.strips.inSight}</dt>
-          <dd>{now ? textOf(formatMetPct(now.inSightPct)) : ''}</dd>
+          <dd>{now ? textOf(formatMetPct(now.inSightPct)) : NO_VALUE}</dd>
         </div>
         <div className="clutter">
           <dt>{MAP_WORDS.strips.clutter}</dt>
-          <dd>{now ? textOf(formatAreaUp(now.over40Km2, units)) : ''}</dd>
+          <dd>{now ? textOf(formatAreaUp(now.over40Km2, units)) : NO_VALUE}</dd>
         </div>
       </dl>
       <div ref={box} className="ruler-box">

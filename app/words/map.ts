@@ -40,6 +40,8 @@ export const MAP_WORDS = {
   left: 'left',
   close: 'Close',
   north: 'N',
+  /** What stands under a place that another chart's pointer gives. */
+  pointing: { map: '', horizon: 'controls the horizon', profile: 'on the profile' },
   pointHint: 'Point at the map for azimuth, range and value',
   placing: 'Click where the candidate stands · Esc to leave',
   movingByKeys: 'Arrows move it, Shift for small steps · Enter sets it, Esc puts it back',
@@ -50,7 +52,7 @@ export const MAP_WORDS = {
   horizon: 'Horizon',
   horizonOf: 'Horizon profile, azimuth by azimuth',
   horizonEmpty: 'The horizon profile appears here once a candidate is on known ground',
-  stretch: 'Vertical stretch',
+  stretch: 'Stretch',
   mast: 'Mast, m',
   mastOf: 'Mast height, m above ground',
   strips: { inSight: 'in sight', clutter: 'over 40 dB' },

@@ -65,7 +65,7 @@ export function ReadOut({
         return
       }
       if (!p.at) {
-        write(placeLine(p.azimuthDeg, p.rangeM, undefined, units))
+        write(placeLine(p.azimuthDeg, p.rangeM, undefined, units), '', '', MAP_WORDS.pointing[p.from])
         return
       }
       if (!known && site) {
