@@ -11,12 +11,10 @@ interface ColumnProps {
   /** A number was clicked: key of the figure (`Figures.flat`) and the words beside it. */
   readonly onExplain?: (key: string, label: string) => void
 }
-/** Figures the column leaves to the map and the horizon strip beside it, and a table that is only for print. */
-const PRINT_ONLY = new Set(['horizon-sectors'])
 /** Tables with more columns than this are set as label and number, row by row. */
 const MOST_COLUMNS = 2
 
-/** The memo's own words and tables for the option on show, in the order of the PDF. */
+/** The memo's own words and tables for the option on show, in the order of the PDF; figures are left to the map and the horizon strip beside it. */
 export function MemoColumn({ model, option, onExplain }: ColumnProps) {
   const own = option && model.sections.find((s) => s.option && sameOption(s.option, option))
   const summary = model.sections[0]
@@ -86,7 +84,7 @@ function BlockText({ block, onExplain }: { block: Block; onExplain: ColumnProps[
         </>
       )
     case 'table':
-      return PRINT_ONLY.has(block.id) ? null : <Table table={block} onExplain={onExplain} />
+      return <Table table={block} onExplain={onExplain} />
   }
 }
 

@@ -19,7 +19,8 @@ export const CAUTIONS = {
   clutterMean: 'Clutter is a cell mean over land only; single cells spread by many decibels around it.',
   sightOnly: 'In sight is line of sight only: not detectable, not usable, not confirmed.',
   headlineK: 'For one effective-earth factor; pass is not stated until other factors are run.',
-  requiredRatio: 'Required ratio 13 dB is a default: it stands for beam-shape and straddle losses until detection is computed.',
+  requiredRatio:
+    'A required ratio not stated is worked out from Pd, Pfa, fluctuation and the pulses of one scan; residue is taken as noise.',
   coverDefault: 'Ground cover is a default: give land cover or a uniform terrain before relying on clutter.',
   unknownGround: 'Unknown ground counts against a need: it is never in sight and never free of clutter.',
   floorBand: 'The floor is nominal; the error band beside it is 90 %, from the raster and obstacle errors.',

@@ -12,7 +12,7 @@ export const NOT_ASSESSED: readonly NotAssessed[] = [
   { what: 'Other refraction', so: 'one effective-earth factor; no ducting' },
   { what: 'Second-time-around clutter', so: 'ground beyond the unambiguous range is not folded in' },
   { what: 'Doppler processing and blind speeds', so: 'suppression is taken as stated, not computed' },
-  { what: 'Detection probability', so: 'a required ratio stands in; nothing here is detectable or usable' },
+  { what: 'Detection by place', so: 'the required ratio follows from Pd and Pfa; which places are detectable or usable is not stated' },
   { what: 'Discrete echoes and building returns', so: 'masts, turbines and walls mask but return nothing' },
   { what: 'Roads and moving vehicles', so: 'roads are drawn, vehicles are not counted' },
   { what: 'Reflections and false targets', so: 'no facade is traced' },

@@ -44,7 +44,7 @@ describe('the PDF', () => {
       'Needs, line of sight',
       'Needs, suppression',
       'Coverage floor',
-      'Horizon, the highest within',
+      'Annex: horizon by azimuth',
       'Files',
       'Defaults used',
     ])

@@ -1,5 +1,6 @@
 import type { OptionRef } from '../../../core/index.ts'
 import { CAUTIONS, formatDate } from '../../words/index.ts'
+import { annexBlocks } from './annexSection.ts'
 import { candidateBlocks } from './candidatesSection.ts'
 import { optionName } from './cells.ts'
 import { cautionBlocks, comparisonBlocks, modelBlocks, notAssessedBlocks } from './closingSections.ts'
@@ -21,7 +22,8 @@ export function buildMemo(input: MemoInput): MemoModel {
   add('need', 'Need', needBlocks(input), { newPage: true })
   add('data', 'Data and assumptions', dataBlocks(input))
   add('candidates', 'Candidates', candidateBlocks(input))
-  for (const r of inStudyOrder(input))
+  const ordered = inStudyOrder(input)
+  for (const r of ordered)
     add(`option-${r.ref.candidate}-${r.ref.heightM}-${r.ref.tiltDeg}`, optionTitle(input, r.ref), optionBlocks(input, r, figure), {
       option: r.ref,
       finding: optionFinding(input, r),
@@ -31,6 +33,12 @@ export function buildMemo(input: MemoInput): MemoModel {
   add('not-assessed', 'Not assessed', notAssessedBlocks())
   add('cautions', 'Cautions', cautionBlocks())
   add('models', 'Models and sources', modelBlocks(input))
+  add(
+    'annex',
+    'Annex: horizon by azimuth',
+    annexBlocks(input, ordered, (r) => optionTitle(input, r.ref)),
+    { newPage: true },
+  )
   const candidates = input.study.candidates.map((c) => c.id).join(', ')
   return {
     title: input.study.name,

@@ -1,18 +1,19 @@
 import type { SettledNeed } from '../../../core/index.ts'
 import {
   FOUR_WORDS,
+  formatDbUp,
   formatHeight,
   formatMetPct,
+  formatPd,
   formatRange,
   formatRcs,
   formatSector,
-  formatSetting,
   textOf,
   type UnitSystem,
   withMetric,
 } from '../../words/index.ts'
-import { capital, inSentence } from './cells.ts'
-import type { Block, Cell, MemoInput } from './types.ts'
+import { capital, inSentence, value } from './cells.ts'
+import type { Block, Cell, MemoInput, Value } from './types.ts'
 
 /** What must be seen, as stated. */
 export function needBlocks(input: MemoInput): Block[] {
@@ -30,7 +31,7 @@ export function needBlocks(input: MemoInput): Block[] {
     heightWords(n, input.system),
     n.kind === 'layer' ? rangeWords(n, input.system) : `by ${n.kind}`,
     formatRcs(n.rcsM2),
-    { text: formatSetting(n.requiredRatioDb, 'dB').value, unit: 'dB', ...(n.requiredRatioMark ? { mark: n.requiredRatioMark } : {}) },
+    ratioCell(n),
     textOf(formatMetPct(n.requiredPct)),
   ])
   const { inSight, detectable, usable, confirmed } = FOUR_WORDS
@@ -56,6 +57,11 @@ export function needBlocks(input: MemoInput): Block[] {
       text: `Four words are kept apart in this memo. ${words.map(capital).join('. ')}. This version states the first only.`,
     },
   ]
+}
+/** The ratio and what it comes from; a worked-out one is rounded up. */
+function ratioCell(n: SettledNeed): Value {
+  const from = n.requiredRatioBy === 'stated' ? 'stated' : `Pd ${formatPd(n.pd).value}, case ${n.swerling}`
+  return value(formatDbUp(n.requiredRatioDb, 'dB', 0.1), { also: from, ...(n.requiredRatioMark ? { mark: n.requiredRatioMark } : {}) })
 }
 function heightWords(n: SettledNeed, system: UnitSystem): string {
   if (n.levelsM.length === 0) return '–'

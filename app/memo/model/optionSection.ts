@@ -1,4 +1,4 @@
-import type { HorizonRow, NeedFigure, OptionResult } from '../../../core/index.ts'
+import type { NeedFigure, OptionResult } from '../../../core/index.ts'
 import { horizonChart, isAtLeast, ringChart, ringFinding, whyAtLeast } from '../../charts/index.ts'
 import {
   CAUTIONS,
@@ -65,7 +65,6 @@ export function optionBlocks(input: MemoInput, r: OptionResult, figure: () => nu
     left: [floorTable(input, r), { kind: 'caution', texts: cautionsFor('floor') }],
     right: [{ kind: 'figure', id: 'rings', number: figure(), caption: `${ringFinding(r.figures.rings, input.system)}.`, drawing: rings }],
   })
-  blocks.push(sectorTable(input, r))
   return blocks
 }
 const sameRef = (a: OptionResult['ref'], b: OptionResult['ref']): boolean =>
@@ -74,8 +73,8 @@ const sameRef = (a: OptionResult['ref'], b: OptionResult['ref']): boolean =>
 const landCaution = (input: MemoInput): string[] => (input.study.lowAngleLandTable === null ? [CAUTIONS.landTable] : [])
 const clutterCautions = (input: MemoInput): string[] => [...landCaution(input), CAUTIONS.clutterMean]
 const suppressionCautions = (input: MemoInput): string[] => {
-  const usesDefault = input.study.needs.some((n) => n.requiredRatioMark !== null)
-  return [...(usesDefault ? [CAUTIONS.requiredRatio] : []), ...landCaution(input)]
+  const workedOut = input.study.needs.some((n) => n.requiredRatioBy !== 'stated')
+  return [...(workedOut ? [CAUTIONS.requiredRatio] : []), ...landCaution(input)]
 }
 
 /** What stands at the head of an option and at the top of the app's memo column. */
@@ -144,42 +143,6 @@ function horizonFigure(input: MemoInput, r: OptionResult, number: number): Block
       ? 'No azimuth has a known horizon.'
       : `The horizon stands highest at azimuth ${textOf(formatAzimuth(highest.azimuthDeg, 1))}: ${textOf(formatScreening(highest.elevationDeg))}, ${isAtLeast(highest) ? `at least (${whyAtLeast(highest)})` : `set by ${highest.obstacle}`} at ${withMetric((s) => formatPlaceRange(highest.rangeM, s), input.system)}; half of all azimuths lie at or under ${textOf(formatScreening(medianDeg))}.`
   return { kind: 'figure', id: 'horizon', number, caption: finding, drawing }
-}
-
-/** Sectors of the horizon table, deg. */
-const SECTOR_DEG = 10
-/** The highest point of the horizon in each sector, sectors centred on round azimuths, in three runs of twelve. */
-function sectorTable(input: MemoInput, r: OptionResult): TableBlock {
-  const count = 360 / SECTOR_DEG
-  const highest: (HorizonRow | null)[] = Array.from({ length: count }, () => null)
-  for (const row of r.figures.horizon.rows) {
-    const i = Math.round(row.azimuthDeg / SECTOR_DEG) % count
-    const top = highest[i]
-    if (Number.isFinite(row.elevationDeg) && (top === null || row.elevationDeg > top.elevationDeg)) highest[i] = row
-  }
-  const cells = (i: number): Cell[] => {
-    const row = highest[i]
-    const azimuth = textOf(formatAzimuth(i * SECTOR_DEG, 1))
-    if (row === null) return [azimuth, NO_VALUE, NO_VALUE, { text: 'unknown', light: true }]
-    const bound = isAtLeast(row)
-    const far = formatPlaceRange(row.rangeM, input.system)
-    const elevation = formatScreening(row.elevationDeg).value
-    return [azimuth, bound ? `≥ ${elevation}` : elevation, far.value, bound ? { text: whyAtLeast(row), light: true } : row.obstacle]
-  }
-  const third = count / 3
-  const columns: Column[] = Array.from({ length: 3 }, (): Column[] => [
-    { head: 'Azimuth', align: 'right' },
-    { head: 'deg', align: 'right' },
-    { head: unitOf('range', input.system), align: 'right' },
-    { head: 'Set by', width: 'fill' },
-  ]).flat()
-  return {
-    kind: 'table',
-    id: 'horizon-sectors',
-    title: `Horizon, the highest within ±\u202f${SECTOR_DEG / 2}° of each azimuth`,
-    columns,
-    rows: Array.from({ length: third }, (_, i) => [...cells(i), ...cells(i + third), ...cells(i + 2 * third)]),
-  }
 }
 
 function floorTable(input: MemoInput, r: OptionResult): TableBlock {
