@@ -1,4 +1,4 @@
-import { type ComponentType, lazy, Suspense, useEffect, useState } from 'react'
+import { type ComponentType, lazy, Suspense, useEffect, useLayoutEffect, useState } from 'react'
 import { useStore } from 'zustand'
 import { redo, type StepId, undo } from '../document/index.ts'
 import { createMapHub } from '../map/hub.ts'
@@ -8,7 +8,7 @@ import { FaultBoundary } from './FaultBoundary.tsx'
 import { MapSlot, RulerSlot, StripSlot } from './MapSlot.tsx'
 import { MemoAside } from './memo/MemoAside.tsx'
 import { StepIndex } from './StepIndex.tsx'
-import { useSession, useView } from './session/index.ts'
+import { useDoc, useSession, useView } from './session/index.ts'
 import { TopBar } from './TopBar.tsx'
 import { useDrop } from './useDrop.ts'
 
@@ -34,10 +34,14 @@ export function Shell() {
   const layer = useView((v) => v.layer)
   const [hub] = useState(createMapHub)
   const dragging = useDrop()
-  useUndoKeys()
-  useEffect(() => {
+  useKeys()
+  const name = useDoc((d) => d.name)
+  useLayoutEffect(() => {
     document.documentElement.dataset.theme = theme
   }, [theme])
+  useEffect(() => {
+    document.title = `${name} · Sightfell`
+  }, [name])
   const Form = FORMS[step]
   const whole = WHOLE_SHEET.has(step)
   return (
@@ -105,13 +109,18 @@ function Notices() {
   )
 }
 
-/** Ctrl+Z and Ctrl+Shift+Z (or Ctrl+Y), unless a text field is being edited. */
-function useUndoKeys() {
-  const { study } = useSession()
+/** Ctrl+S saves; Ctrl+Z and Ctrl+Shift+Z (or Ctrl+Y) undo and redo, unless a text field is being edited. */
+function useKeys() {
+  const { study, saveStudy } = useSession()
   useEffect(() => {
     const onKey = (e: KeyboardEvent) => {
       if (!(e.ctrlKey || e.metaKey) || e.altKey) return
       const key = e.key.toLowerCase()
+      if (key === 's') {
+        e.preventDefault()
+        saveStudy()
+        return
+      }
       if (key !== 'z' && key !== 'y') return
       const typing = e.target instanceof HTMLElement && e.target.closest('input, textarea')
       if (typing) return
@@ -121,5 +130,5 @@ function useUndoKeys() {
     }
     window.addEventListener('keydown', onKey)
     return () => window.removeEventListener('keydown', onKey)
-  }, [study])
+  }, [study, saveStudy])
 }

@@ -43,7 +43,7 @@ export function Working() {
         </>
       ) : (
         <>
-          <span>Stopped: changes wait</span>
+          <span>Held: changes wait</span>
           <Button small onPress={session.run}>
             Run
           </Button>
