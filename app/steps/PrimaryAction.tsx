@@ -1,5 +1,5 @@
 import { addNeed, type StepId } from '../document/index.ts'
-import { Button } from '../ui/index.ts'
+import { Button } from '../ui/Button.tsx'
 import { useMemoExport } from './memo/useMemoExport.ts'
 import { useDoc, useGround, useSession, useView } from './session/index.ts'
 import { useFilePicker } from './useFilePicker.tsx'

@@ -1,4 +1,4 @@
-import { Button } from '../ui/index.ts'
+import { Button } from '../ui/Button.tsx'
 import { formatDuration } from '../words/index.ts'
 import { useMemoExport } from './memo/useMemoExport.ts'
 import { useGround, useResults, useSession, useView } from './session/index.ts'

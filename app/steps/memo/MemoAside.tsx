@@ -1,5 +1,5 @@
 import { lazy, Suspense } from 'react'
-import { Caution } from '../../ui/index.ts'
+import { Caution } from '../../ui/Marks.tsx'
 import { CAUTIONS, formatMast, textOf } from '../../words/index.ts'
 import { useSession, useView } from '../session/index.ts'
 import { useMemoModel } from './useMemoModel.ts'
