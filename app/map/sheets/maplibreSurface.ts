@@ -1,12 +1,12 @@
 import * as maplibregl from 'maplibre-gl'
 import 'maplibre-gl/dist/maplibre-gl.css'
 import workerUrl from 'maplibre-gl/dist/maplibre-gl-worker.mjs?worker&url'
-import { latFromWorldY, lonFromWorldX, type View, WORLD_WIDTH_M } from '../../../core/index.ts'
+import type { View } from '../../../core/index.ts'
 import type { GroundPainter, MapSurface } from './mapSurface.ts'
+import { cameraOf, TILE_PX, tileView } from './tiles.ts'
 
 maplibregl.setWorkerUrl(workerUrl)
 
-const TILE_PX = 512
 const SCHEME = 'sightfell-ground'
 let surfaces = 0
 
@@ -83,26 +83,4 @@ export function maplibreSurface(paint: GroundPainter, onError: (error: unknown) 
   }
 }
 
-/** Centre and zoom of a view: at zoom 0 one tile of 512 px is the world. */
-export function cameraOf(view: View): { center: [number, number]; zoom: number } {
-  return {
-    center: [
-      lonFromWorldX(view.worldX + (view.width / 2) * view.worldPerPx),
-      latFromWorldY(view.worldY - (view.height / 2) * view.worldPerPx),
-    ],
-    zoom: Math.log2(WORLD_WIDTH_M / TILE_PX / view.worldPerPx),
-  }
-}
-/** The view of one map tile. */
-export function tileView(z: number, x: number, y: number, night: boolean): View {
-  const side = WORLD_WIDTH_M / 2 ** z
-  return {
-    width: TILE_PX,
-    height: TILE_PX,
-    worldX: x * side - WORLD_WIDTH_M / 2,
-    worldY: WORLD_WIDTH_M / 2 - y * side,
-    worldPerPx: side / TILE_PX,
-    night,
-  }
-}
 const emptyTile = (): Promise<ImageBitmap> => createImageBitmap(new ImageData(1, 1))
