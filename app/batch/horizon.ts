@@ -3,10 +3,12 @@ import { type CommandLine, numberOption, usageError } from './arguments.ts'
 import { csvLine, csvNumber } from './csv.ts'
 import { loadGround } from './loadGround.ts'
 import { candidateNamed, heightOption, loadStudy, sayWarnings } from './loadStudy.ts'
-import type { Progress } from './progress.ts'
+import { makeTurns, type Progress } from './progress.ts'
 
 export const HORIZON_COLUMNS = ['azimuth_deg', 'elevation_deg', 'range_m', 'height_m', 'lon', 'lat', 'obstacle'] as const
 const MOST_AZIMUTHS = 360_000
+/** Azimuths between two turns of the event loop. */
+const BATCH = 360
 
 /** Rows of a horizon as CSV. */
 export const horizonCsv = (rows: readonly HorizonRow[]): string =>
@@ -41,7 +43,14 @@ export async function horizon(line: CommandLine, progress: Progress): Promise<vo
   const heightM = heightOption(line.options.height as string)
   const azimuths = azimuthsAsked(line.options.step, line.options.azimuths)
   const { ground, warnings } = await loadGround(loaded, [candidate], progress)
-  const rows = horizonAt(ground, siteOf(candidate), heightM, earthOf(loaded.study), azimuths, loaded.study.run.maxRangeM)
+  progress.inputIsGood()
+  const turn = makeTurns(progress, 'Horizon')
+  const rows: HorizonRow[] = []
+  for (let at = 0; at < azimuths.length; at += BATCH) {
+    const asked = azimuths.slice(at, at + BATCH)
+    rows.push(...horizonAt(ground, siteOf(candidate), heightM, earthOf(loaded.study), asked, loaded.study.run.maxRangeM))
+    await turn(rows.length, azimuths.length)
+  }
   process.stdout.write(horizonCsv(rows))
   sayWarnings([...loaded.warnings, ...warnings])
 }

@@ -16,7 +16,7 @@ import type { CommandLine } from './arguments.ts'
 import { csvLine, csvNumber } from './csv.ts'
 import { loadGround } from './loadGround.ts'
 import { candidateNamed, heightOption, loadStudy, readText, sayWarnings, tiltOption } from './loadStudy.ts'
-import type { Progress } from './progress.ts'
+import { makeTurns, type Progress } from './progress.ts'
 
 export const POINT_COLUMNS = [
   'lon',
@@ -87,9 +87,12 @@ export async function points(line: CommandLine, progress: Progress): Promise<voi
   const options = read.landTable === null ? {} : { landTable: read.landTable }
   const clutterAt = pointClutter(ground, site, heightM, earth, study.radar, tiltDeg, polarShape(study.run), options)
   const out: string[] = [csvLine(POINT_COLUMNS)]
-  for (const at of places) {
+  progress.inputIsGood()
+  const turn = makeTurns(progress, 'Points')
+  for (const [n, at] of places.entries()) {
     const s = sightPoint(ground, site, heightM, earth, at)
     out.push(pointLine(at, s, s.unknown === null ? clutterAt(at, s) : null))
+    await turn(n + 1, places.length)
   }
   process.stdout.write(out.join(''))
   sayWarnings([...loaded.warnings, ...warnings])

@@ -34,15 +34,27 @@ export class Progress {
 /** Milliseconds of work between two turns of the event loop, so that an interrupt is heard. */
 const SLICE_MS = 50
 
+/** Gives the event loop a turn now and then; call it often. */
+export function makeTurns(progress: Progress, doing: string): (done: number, total: number) => Promise<void> | undefined {
+  let last = performance.now()
+  return (done, total) => {
+    if (performance.now() - last < SLICE_MS) return undefined
+    progress.say(doing, done, total)
+    return new Promise<void>((resume) =>
+      setImmediate(() => {
+        last = performance.now()
+        resume()
+      }),
+    )
+  }
+}
+
 /** Runs a piece of work to its end, with progress and turns for signals. */
 export async function drive<T>(work: Work<T>, progress: Progress, doing: string): Promise<T> {
-  let turn = performance.now()
+  const turn = makeTurns(progress, doing)
   for (;;) {
     const step = work.next()
     if (step.done) return step.value
-    if (performance.now() - turn < SLICE_MS) continue
-    progress.say(doing, step.value.done, step.value.total)
-    await new Promise<void>((resume) => setImmediate(resume))
-    turn = performance.now()
+    await turn(step.value.done, step.value.total)
   }
 }
