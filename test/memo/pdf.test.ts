@@ -13,6 +13,15 @@ const fonts: PdfFonts = {
   semibold: font('600SemiBold/SourceSans3_600SemiBold.ttf'),
 }
 const hasPoppler = spawnSync('pdftotext', ['-v']).error === undefined
+function fileOf(bytes: Uint8Array): string {
+  const path = join(mkdtempSync(join(tmpdir(), 'memo-')), 'memo.pdf')
+  writeFileSync(path, bytes)
+  return path
+}
+function textOf(bytes: Uint8Array): string {
+  const { stdout } = spawnSync('pdftotext', ['-layout', fileOf(bytes), '-'], { encoding: 'utf8' })
+  return stdout.replaceAll('\u202f', ' ').replace(/ +/g, ' ')
+}
 const input = sampleMemo('nautical', 60)
 const model = buildMemo(input)
 let pdf: Uint8Array
@@ -34,11 +43,36 @@ describe('the PDF', () => {
     expect(again.length).toBe(pdf.length)
     expect(again.every((b, i) => b === pdf[i])).toBe(true)
   }, 120_000)
+  it.skipIf(!hasPoppler)(
+    'loses nothing where names are long and needs many (skipped without pdftotext)',
+    async () => {
+      const long = 'a rather long name that somebody gave to this thing in a hurry'
+      const needs = Array.from({ length: 9 }, (_, i) => ({ ...input.study.needs[0], id: `n${i}`, name: `Need ${i}, ${long}` }))
+      const results = input.results.slice(0, 3).map((r) => {
+        const own = needs.map((n, i) => ({ ...r.figures.needs[i % 2], needId: n.id, name: n.name }))
+        return { ...r, figures: { ...r.figures, needs: own, obstaclesInSight: [long, long] } }
+      })
+      const files = Array.from({ length: 30 }, (_, i) => ({ ...input.files[0], name: `terrain-${i}.tif`, describe: long.repeat(3) }))
+      const warnings = Array.from({ length: 8 }, (_, i) => `warning ${i}: ${long}`)
+      const study = { ...input.study, needs }
+      const text = textOf(await makePdf(buildMemo({ ...input, study, results, files, warnings }), fonts))
+      for (const f of files) expect(text).toContain(f.name)
+      for (const w of warnings) expect(text).toContain(w.slice(0, 12))
+      for (const [title, times] of [
+        ['Needs, line of sight', 3],
+        ['Needs, suppression', 3],
+        ['Coverage floor', 3],
+        ['Elevation of the horizon', 3],
+        ['Ground by ring', 3],
+      ] as const)
+        expect(text.split(title).length - 1, title).toBeGreaterThanOrEqual(times)
+      for (let i = 0; i < 9; i++) expect(text.split(`Need ${i}`).length - 1).toBeGreaterThanOrEqual(7)
+    },
+    120_000,
+  )
   it.skipIf(!hasPoppler)('holds every title, heading and page number as text (read with pdftotext; skipped without it)', () => {
-    const dir = mkdtempSync(join(tmpdir(), 'memo-'))
-    const path = join(dir, 'memo.pdf')
-    writeFileSync(path, pdf)
-    const text = spawnSync('pdftotext', ['-layout', path, '-'], { encoding: 'utf8' }).stdout.replaceAll('\u202f', ' ').replace(/ +/g, ' ')
+    const path = fileOf(pdf)
+    const text = textOf(pdf)
     for (const s of model.sections) expect(text).toContain(s.title.replaceAll('\u202f', ' '))
     for (const title of [
       'Needs, line of sight',

@@ -45,6 +45,10 @@ export function inWords(items: readonly string[]): string {
   if (items.length < 2) return items.join('')
   return `${items.slice(0, -1).join(', ')} and ${items[items.length - 1]}`
 }
+/** The first few in words, the rest counted. */
+export function someInWords(items: readonly string[], most: number): string {
+  return items.length <= most ? inWords(items) : `${items.slice(0, most).join(', ')} and ${items.length - most} more`
+}
 const SMALL = ['no', 'one', 'two', 'three', 'four', 'five', 'six', 'seven', 'eight', 'nine', 'ten', 'eleven', 'twelve']
 export const countWord = (n: number): string => SMALL[n] ?? String(n)
 export const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1)

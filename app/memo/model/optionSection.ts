@@ -22,7 +22,7 @@ import {
   unitOf,
   withMetric,
 } from '../../words/index.ts'
-import { bare, bothUnits, capital, dual, dualBare, inWords, NO_HEADS, optionName, value } from './cells.ts'
+import { bare, bothUnits, capital, dual, dualBare, NO_HEADS, optionName, someInWords, value } from './cells.ts'
 import { mapDrawing } from './mapFigure.ts'
 import { reaches } from './ranking.ts'
 import { hasTilts } from './summarySection.ts'
@@ -92,7 +92,7 @@ export function optionFinding(input: MemoInput, r: OptionResult): string {
     first.worst && first.worstMarginM !== null && first.worstMarginM < 0
       ? ` Its worst place lies ${withMetric((s) => formatBand(-(first.worstMarginM as number), s), input.system)} under the floor at azimuth ${textOf(formatAzimuth(first.worst.azimuthDeg, 1))}, ${textOf(formatPlaceRange(first.worst.rangeM, input.system))}, behind ${first.worst.obstacle}.`
       : ''
-  const rest = others.length > 0 ? `, and ${inWords(others.map(words))}` : ''
+  const rest = others.length > 0 ? `, and ${someInWords(others.map(words), 2)}` : ''
   return `${from}: ${words(first)} in sight${rest}; ${over} of ground stand over 40\u202fdB.${worst}`
 }
 function mapCaption(input: MemoInput, r: OptionResult): string {

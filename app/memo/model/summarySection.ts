@@ -10,7 +10,7 @@ import {
   textOf,
   withMetric,
 } from '../../words/index.ts'
-import { capital, countWord, inSentence, inWords, optionName } from './cells.ts'
+import { capital, countWord, inSentence, inWords, optionName, someInWords } from './cells.ts'
 import { comparisonTable } from './comparisonTable.ts'
 import { inOrder, mustNeeds, ORDER_SENTENCE, reaches, shortfallPct } from './ranking.ts'
 import type { Block, MemoInput } from './types.ts'
@@ -57,7 +57,7 @@ function leadSentence(input: MemoInput, ordered: readonly OptionResult[]): strin
   if (needs.length === 0)
     return `No must need is assessed, so nothing sets one option before another; least ground stands over 40\u202fdB from ${name}, ${clutter}.`
   const reaching = ordered.filter((r) => shortfallPct(r) === 0)
-  const shares = inWords(needs.map(shareWords))
+  const shares = someInWords(needs.map(shareWords), 3)
   if (reaching.length === 0)
     return `None of the ${countWord(ordered.length)} options computed brings the share asked of every must need into sight. ${name} comes nearest: ${shares}, ${clutter}.`
   const many =
