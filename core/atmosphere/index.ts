@@ -1,3 +1,5 @@
 export * from './gasLoss.ts'
+export * from './pathLoss.ts'
 export * from './rainLoss.ts'
 export * from './refractivity.ts'
+export * from './weather.ts'

@@ -1,6 +1,7 @@
 export * from './equation.ts'
 export * from './exposure.ts'
 export * from './limits.ts'
+export * from './polarisation.ts'
 export * from './stc.ts'
 export * from './target.ts'
 export * from './targets.ts'

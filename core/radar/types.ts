@@ -1,4 +1,5 @@
 import type { AntennaInput } from '../antenna/index.ts'
+import type { CircularInput } from './polarisation.ts'
 
 export type { AntennaInput } from '../antenna/index.ts'
 
@@ -30,6 +31,8 @@ export interface RadarInput {
   readonly prfMode: 'single' | 'pulseStagger' | 'dwellStagger'
   readonly coherentTransmitter: boolean
   readonly polarisation: 'H' | 'V' | 'circular'
+  /** What circular polarisation takes off; the defaults where absent. */
+  readonly circular?: CircularInput
   readonly rotationRpm: number
   readonly noiseFigureDb: number
   readonly systemLossDb: number

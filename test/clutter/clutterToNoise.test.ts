@@ -1,16 +1,19 @@
 import { describe, expect, it } from 'vitest'
 import {
+  BUILT_IN_LAND_TABLE,
   clutterMarks,
   clutterToNoise,
   decibel,
   elevationTangent,
   gateWeights,
   type ImprovementDb,
+  meanStrengthDb,
   slantSquared,
 } from '../../core/clutter/index.ts'
 import { elevationAngleDeg, slantRangeM } from '../../core/geodesy/index.ts'
 import { CELL, type PolarShape } from '../../core/polar/index.ts'
 import { gateLengthM, radarConstantDb } from '../../core/radar/index.ts'
+import { RELIEF } from '../../core/terrain/index.ts'
 import { fromDb, RAD_PER_DEG, toDb } from '../../core/units/index.ts'
 import { finish } from '../../core/work/index.ts'
 import { sBandRadar, testRadar } from '../radar/testRadar.ts'
@@ -138,10 +141,42 @@ describe('clutter-to-noise over polar cells', () => {
     expect(long - plain).toBeCloseTo(10, 4)
   })
 
-  it('has no strength on water, and says so', () => {
+  it('has no strength on water without a weather, and says so', () => {
     const { cnrDb, notes } = clutterOf(flatCells(GRID, 20), RADAR, [codeOf('water')])
     expect(cnrDb.every(Number.isNaN)).toBe(true)
     expect(notes.map((n) => n.about)).toContain('sea clutter not assessed')
+  })
+
+  it('takes steep ground at its local slope', () => {
+    const cells = flatCells(GRID, 100)
+    const j = 7 // 562 m: 10.2°
+    const code = [codeOf('farmland')]
+    const short = testRadar({ pulseWidthS: 75 / (299_792_458 / 2), antenna: RADAR.antenna })
+    const level = clutterOf(cells, short, code).cnrDb[at(2, j)]
+    cells.site.slopePermille.fill(200)
+    const rising = clutterOf(cells, short, code).cnrDb[at(2, j)]
+    const depression = (deg: number) => (100 / 562.5 - 562.5 / (2 * (4 / 3) * 6_371_000)) / RAD_PER_DEG + deg
+    const sine = (deg: number) => toDb(Math.sin(depression(deg) * RAD_PER_DEG))
+    expect(rising - level).toBeCloseTo(sine(Math.atan(0.2) / RAD_PER_DEG) - sine(0), 3)
+  })
+
+  it('takes urban ground over open ground by what lies toward the radar', () => {
+    const codes = [codeOf('open'), codeOf('urban'), codeOf('rural')]
+    const cells = flatCells(GRID, 20)
+    const town = (ground: number, from: number) => {
+      for (let i = 0; i < GRID.azimuths; i++) for (let j = 0; j < GRID.ranges; j++) cells.site.code[at(i, j)] = j >= from ? 1 : ground
+      return clutterOf(cells, RADAR, codes).cnrDb
+    }
+    // 20 m over level ground is under 0.25° beyond 4 km; a town that starts at 7.5 km, seen 3.75 km deep and 6 km deep
+    const overOpen = town(0, 100)
+    const overRural = town(2, 100)
+    const [onL, onS] = [BUILT_IN_LAND_TABLE.rows['urban over open ground'][0], BUILT_IN_LAND_TABLE.rows.urban[0]].map((b) =>
+      meanStrengthDb(b, RADAR.frequencyHz),
+    )
+    expect(overOpen[at(5, 150)] - overRural[at(5, 150)]).toBeCloseTo(onL - onS, 3)
+    expect(overOpen[at(5, 180)]).toBeCloseTo(overRural[at(5, 180)], 3)
+    cells.site.relief.fill(RELIEF.high)
+    expect(town(0, 100)[at(5, 150)]).toBeCloseTo(overRural[at(5, 150)], 3)
   })
 
   it('takes elevation gain at the cell, two-way, with the side-lobe floor', () => {
@@ -162,10 +197,18 @@ describe('clutter-to-noise over polar cells', () => {
       return clutterOf(cells, testRadar(over)).notes.map((n) => `${n.mark}: ${n.about}`)
     }
     expect(about({}, 100, 15)).toEqual(['from memory: land clutter table: Billingsley, Low-Angle Radar Land Clutter (2002), from memory'])
-    expect(about({}, 100, 90).join()).toContain('depression over 8°')
+    expect(about({}, 100, 90).join()).toContain('depression over 8°: the land clutter table runs over into γ·sin ψ')
     expect(about({}, 300, 20).join()).toContain('above the antenna horizontal')
     expect(about({ frequencyHz: 15e9 }, 100, 15).join()).toContain('frequency beyond its bands')
     expect(() => about({ frequencyHz: 20e6 }, 100, 5)).toThrow(/30 MHz to 40 GHz/)
+    const water = [codeOf('water')]
+    const weather = { gas: 'none', rainRateMmH: 0, rainTopM: 4000, rainExtentM: 15_000, seaState: 3, tideM: 0 } as const
+    expect(
+      clutterMarks(water, RADAR, false, weather)
+        .map((m) => m.about)
+        .join(),
+    ).not.toContain('sea')
+    expect(clutterMarks(water, testRadar({ frequencyHz: 435e6 }), false, weather).map((m) => m.about)).toContain('sea clutter not assessed')
     const marks = clutterMarks([{ ...codeOf('rural'), mark: 'default' }, codeOf('water')], RADAR, true)
     expect(marks.map((m) => m.mark)).toEqual(['by hand', 'default', 'outside model'])
   })

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { BUILT_IN_LAND_TABLE, chooseRow, meanStrengthDb, readLandTable, strengthByCode } from '../../core/clutter/index.ts'
-import { TERRAIN_NAMES } from '../../core/landcover/index.ts'
+import { TERRAIN_NAMES, type TerrainName } from '../../core/landcover/index.ts'
 import { RELIEF } from '../../core/terrain/index.ts'
 import { codeOf } from './flatCells.ts'
 
@@ -16,7 +16,7 @@ describe('choice of the land table row (table from memory: Billingsley 2002)', (
     ['rural', low, 0.1, 'rural low relief', -33],
     ['rural', low, 0.25, 'rural low relief', -32],
     ['rural', low, 0.2499, 'rural low relief', -33],
-    ['rural', low, 12, 'rural low relief', -25],
+    ['rural', low, 7.99, 'rural low relief', -25],
     ['rural', high, 3, 'rural high relief', -24],
     ['forest', low, 0.1, 'forest low relief', -39],
     ['forest', low, 5, 'forest low relief', -24],
@@ -53,12 +53,35 @@ describe('choice of the land table row (table from memory: Billingsley 2002)', (
   })
 
   it('marks steep, negative and unknown relief', () => {
-    const about = (...a: Parameters<typeof chooseRow>) => chooseRow(...a).notes.map((n) => n.mark)
-    expect(about('rural', low, 8, S)).toEqual([])
-    expect(about('rural', low, 8.01, S)).toEqual(['outside model'])
-    expect(about('rural', low, -0.1, S)).toEqual(['outside model'])
-    expect(about('rural', unknown, 1, S)).toEqual(['default'])
-    expect(about('water', low, 1, S)).toEqual(['outside model'])
+    const marks = (...a: Parameters<typeof chooseRow>) => chooseRow(...a).notes.map((n) => n.mark)
+    const about = (...a: Parameters<typeof chooseRow>) =>
+      chooseRow(...a)
+        .notes.map((n) => n.about)
+        .join()
+    expect(marks('rural', low, 7.99, S)).toEqual([])
+    expect(about('rural', low, 8.01, S)).toContain('γ·sin ψ')
+    expect(about('rural', low, 61, S)).toContain('over 60°')
+    expect(marks('rural', low, -0.1, S)).toEqual(['from memory'])
+    expect(about('rural', low, -0.1, S)).toContain('low confidence')
+    expect(about('farmland', low, -0.1, S)).toContain('engineering fallback')
+    expect(marks('forest', high, -3, S)).toEqual([])
+    expect(marks('rural', unknown, 1, S)).toEqual(['default'])
+    expect(marks('water', low, 1, S)).toEqual(['outside model'])
+  })
+
+  it('runs over into γ·sin ψ from 8° to 10° depression, linear in dB, ψ with the local slope (γ from memory: Barton 1985)', () => {
+    const sine = (deg: number) => 10 * Math.log10(Math.sin((deg * Math.PI) / 180))
+    const at = (terrain: TerrainName, relief: number, depressionDeg: number, grazingDeg?: number) =>
+      chooseRow(terrain, relief, depressionDeg, S, grazingDeg === undefined ? {} : { grazingDeg }).meanDb
+    expect(at('rural', low, 8)).toBeCloseTo(-25, 9)
+    expect(at('rural', low, 10)).toBeCloseTo(-15 + sine(10), 9)
+    expect(at('farmland', low, 9, 12)).toBeCloseTo((-25 + -15 + sine(12)) / 2, 9)
+    expect(at('forest', high, 15, 25)).toBeCloseTo(-10 + sine(25), 9)
+    expect(at('rural', high, 15, 25)).toBeCloseTo(-12 + sine(25), 9)
+    expect(at('open', mountains, 15, 25)).toBeCloseTo(-5 + sine(25), 9)
+    expect(at('urban', low, 30)).toBeCloseTo(-5 + sine(30), 9)
+    expect(at('rural', low, 12, -3)).toBeCloseTo(-15 + sine(0.1), 9)
+    expect(at('rural', low, 57, 120)).toBeCloseTo(-15, 9)
   })
 
   it('is linear in log frequency between bands and held beyond', () => {

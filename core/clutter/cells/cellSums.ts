@@ -1,16 +1,18 @@
 import { type GainTable, twoWayGain } from '../../antenna/index.ts'
 import type { SightCells, SiteCells } from '../../masking/index.ts'
-import { bandOf, reliefSlot, type StrengthTable } from '../land/strengthTable.ts'
+import { bandOf, CODE_KIND, ownSigma, reliefSlot, type StrengthTable } from '../land/strengthTable.ts'
 
 /**
  * Azimuth × range cells as clutter reads them: the polar grid, or a few rays around one point. Row i holds `centresM.length` cells of equal
  * depth; ground heights NaN where unknown.
  */
 export interface CellRows
-  extends Pick<SiteCells, 'groundM' | 'code' | 'relief' | 'effectiveRadiusM' | 'siteGroundM'>,
-    Pick<SightCells, 'inSight'> {
+  extends Pick<SiteCells, 'groundM' | 'code' | 'relief' | 'slopePermille' | 'effectiveRadiusM' | 'siteGroundM'>,
+    Pick<SightCells, 'inSight' | 'floorM'> {
   /** Ground range of the cell centres, m, > 0. */
   readonly centresM: Float64Array
+  /** Cells before this one of a row only tell what lies toward the radar; 0 when absent. */
+  readonly first?: number
 }
 /** Tables and numbers shared by every row of cells of one option. */
 export interface CellModel {
@@ -21,6 +23,8 @@ export interface CellModel {
   readonly nearestM: number
   /** What suppression leaves of each ground code's clutter, 1/I, ratio. */
   readonly left: Float64Array
+  /** Water stands this much above the raster, m. */
+  readonly tideM: number
 }
 /** Where one row of cells is written; null = not wanted. */
 export interface RowSums {
@@ -58,18 +62,18 @@ export function elevationTangent(antennaM: number, heightM: number, rangeM: numb
  * ground, m. Adds the ground in sight that took each entry of the strength table to `use` (in proportion to area).
  */
 export function cellClutter(model: CellModel, cells: CellRows, i: number, out: RowSums, use: Float64Array): void {
-  const { antennaM, strength, gain, nearestM, left } = model
-  const { edgesRad, bands, sigma } = strength
+  const { antennaM, strength, gain, nearestM, left, tideM } = model
+  const { edgesRad, bands, sigma, kinds } = strength
   const { groundM, code, relief, inSight, centresM } = cells
   const { patterned, residual, plain } = out
   const ranges = centresM.length
   const c = 1 / cells.effectiveRadiusM[i]
   const from = i * ranges
   let band = bands >> 1
-  for (let j = 0; j < ranges; j++) {
+  for (let j = cells.first ?? 0; j < ranges; j++) {
     const at = from + j
     const seen = inSight[at]
-    const ground = groundM[at]
+    let ground = groundM[at]
     if (seen === 0 || code[at] === 255 || Number.isNaN(ground)) {
       patterned[j] = 0
       if (residual) residual[j] = 0
@@ -77,12 +81,20 @@ export function cellClutter(model: CellModel, cells: CellRows, i: number, out: R
       continue
     }
     const r = centresM[j]
-    const depression = (antennaM - ground) / r - 0.5 * r * c
+    let depression = (antennaM - ground) / r - 0.5 * r * c
     band = bandOf(edgesRad, depression, band)
     const entry = (code[at] * 4 + reliefSlot(relief[at])) * bands + band
     if (r >= nearestM) use[entry] += r * seen
+    let mean = sigma[entry]
+    if (mean < 0) {
+      if (kinds[code[at]] & CODE_KIND.water) {
+        ground += tideM
+        depression -= tideM / r
+      }
+      mean = ownSigma(strength, cells, from, j, entry, depression)
+    }
     const slant = Math.sqrt(slantSquared(antennaM, ground, r, c) * (1 + depression * depression))
-    const value = sigma[entry] * seen * (1 / 65535) * slant
+    const value = mean * seen * (1 / 65535) * slant
     const gained = value === 0 ? 0 : value * twoWayGain(gain, elevationTangent(antennaM, ground, r, c))
     patterned[j] = gained
     if (residual) residual[j] = gained * left[code[at]]

@@ -1,17 +1,29 @@
-import { azimuthKernel } from '../../antenna/index.ts'
-import { depressionAtTerrainDeg, type Earth, type LonLat } from '../../geodesy/index.ts'
+import type { Earth, LonLat } from '../../geodesy/index.ts'
 import { type SightPoint, sightPoint } from '../../masking/index.ts'
-import { isUnknown, type PolarShape } from '../../polar/index.ts'
+import type { PolarShape } from '../../polar/index.ts'
 import type { RadarInput } from '../../radar/index.ts'
 import type { Ground, Site } from '../../terrain/index.ts'
 import { toDb } from '../../units/index.ts'
-import { chooseRow, type LandChoice } from '../land/landRow.ts'
+import type { LandChoice } from '../land/landRow.ts'
 import { weibullSpread } from '../land/weibull.ts'
 import type { ModelNote } from '../types.ts'
-import { cellClutter, slantSquared } from './cellSums.ts'
+import { cellClutter } from './cellSums.ts'
 import { type ClutterLine, clutterLines } from './clutterLines.ts'
 import { optionNotes } from './clutterToNoise.ts'
-import { type GateCells, gateCells, type PointOption, type PointOptions, pointOption, sideLobes } from './pointCells.ts'
+import {
+  choiceOf,
+  discretesAt,
+  type GateCells,
+  gateCells,
+  lossesOf,
+  type PointOption,
+  type PointOptions,
+  perSquareMetre,
+  pointOption,
+  rainOf,
+  sideLobes,
+  slantOf,
+} from './pointCells.ts'
 
 /** Clutter at one place, on its own rays and range; null = undefined. */
 export interface PointClutter {
@@ -21,7 +33,7 @@ export interface PointClutter {
   readonly slantRangeM: number | null
   /** Table row of the place itself ('sea' for water); null where the ground is unknown. */
   readonly rowName: LandChoice['rowName'] | null
-  /** Mean σ°F⁴ of the place itself, dB; null where it is masked, water, unknown, or inside cτ/2. */
+  /** Mean σ°F⁴ of the place itself, dB; null where it is masked, unknown, inside cτ/2, or water the sea model does not assess. */
   readonly strengthDb: number | null
   /** Clutter RCS of the resolution cell centred on the place, without antenna gain, dBsm; null if nothing in it is in sight. */
   readonly rcsDbsm: number | null
@@ -29,6 +41,10 @@ export interface PointClutter {
   readonly cnrDb: number | null
   readonly mainCnrDb: number | null
   readonly sideLobeCnrDb: number | null
+  /** What the main beam brings back from the ground, from rain and from discrete echoes, dB over noise. */
+  readonly groundCnrDb: number | null
+  readonly rainCnrDb: number | null
+  readonly discreteCnrDb: number | null
   /** What suppression leaves of `cnrDb`: each kind of clutter divided by its improvement factor, dB over noise. */
   readonly residueDb: number | null
   /** Area of the whole resolution cell, m², and share of its ground in sight. */
@@ -59,10 +75,9 @@ export function pointClutter(
   options: PointOptions = {},
 ): PointEvaluator {
   const o = pointOption(g, site, heightM, earth, r, tiltDeg, grid, options)
-  const { model } = o
-  const kernel = azimuthKernel(r.antenna.azimuthBeamwidthDeg, grid.azimuthStepDeg)
+  const { kernel } = o
   const reach = kernel.length >> 1
-  const sideLobeAt = sideLobes(o, options)
+  const sideLobeAt = sideLobes(o)
 
   return (at, sight = sightPoint(g, site, heightM, earth, at)) => {
     const { azimuthDeg, rangeM } = sight
@@ -73,9 +88,11 @@ export function pointClutter(
     const own = choiceOf(o, cells, reach, cells.middle)
     const middle = reach * cells.gate.length + cells.middle
     const slantRangeM = slantOf(o, cells, reach)
-    if (!(slantRangeM >= model.nearestM)) return { ...nothing, slantRangeM, rowName: own?.rowName ?? null }
+    if (!(slantRangeM >= o.cell.nearestM)) return { ...nothing, slantRangeM, rowName: own?.rowName ?? null }
 
-    const sums = sumCell(o, cells, kernel, slantRangeM)
+    const sums = sumCell(o, cells, slantRangeM)
+    const discrete = discretesAt(o, azimuthDeg, rangeM)
+    const main = sums.ground + sums.rain + discrete
     const sideLobe = sideLobeAt(rangeM)
     const db = (ratio: number): number | null => (ratio > 0 ? toDb(ratio) : null)
     const numbers = {
@@ -85,70 +102,60 @@ export function pointClutter(
       rowName: own?.rowName ?? null,
       strengthDb: sight.inSight ? (own?.meanDb ?? null) : null,
       rcsDbsm: db(sums.rcsM2),
-      cnrDb: db(sums.main + sideLobe.all),
-      mainCnrDb: db(sums.main),
+      cnrDb: db(main + sideLobe.all),
+      mainCnrDb: db(main),
       sideLobeCnrDb: db(sideLobe.all),
-      residueDb: db(sums.left + sideLobe.left),
+      groundCnrDb: db(sums.ground),
+      rainCnrDb: db(sums.rain),
+      discreteCnrDb: db(discrete),
+      residueDb: db(sums.left + discrete * o.left.discrete + sideLobe.left),
       cellAreaM2: sums.areaM2,
       shareInSight: sums.share,
       spread: sums.rcsM2 > 0 ? sums.spread / sums.rcsM2 : null,
     }
-    const notes = optionNotes(model, sums.use, earth)
+    const notes = optionNotes(o, sums.use, earth)
     for (const note of own?.notes ?? []) if (!notes.some((n) => n.about === note.about)) notes.push(note)
     if (g.codes[cells.code[middle]]?.mark === 'default') notes.push({ mark: 'default', about: 'land cover not stated' })
-    return { ...numbers, lines: clutterLines(numbers, r, o.table), notes }
+    return { ...numbers, lines: clutterLines({ ...numbers, ...lossesOf(o, cells, reach) }, r, o.table), notes }
   }
 }
 
-/** Slant range to the middle cell of a row, m; NaN where its ground is unknown. */
-function slantOf({ model }: PointOption, cells: GateCells, row: number): number {
-  const { middle, gate } = cells
-  const groundM = cells.groundM[row * gate.length + middle]
-  return Math.sqrt(slantSquared(model.antennaM, groundM, cells.centresM[middle], 1 / cells.effectiveRadiusM[row]))
-}
-
-/** Row of the land table one cell takes; null where its ground code is unknown. */
-function choiceOf({ g, model, r, table }: PointOption, cells: GateCells, row: number, k: number): LandChoice | null {
-  const at = row * cells.gate.length + k
-  const code = g.codes[cells.code[at]]
-  if (!code) return null
-  const depressionDeg = depressionAtTerrainDeg(model.antennaM - cells.groundM[at], cells.centresM[k], cells.effectiveRadiusM[row])
-  return chooseRow(code.terrain, cells.relief[at], depressionDeg, r.frequencyHz, {}, table)
-}
-
-/** Sums over the resolution cell: clutter RCS, its C/N in the main beam, share in sight, spread weighted by RCS, table entries in use. */
-function sumCell(o: PointOption, cells: GateCells, kernel: Float64Array, slantRangeM: number) {
-  const { model, constant, gateM, beamRad } = o
-  const { gate, middle } = cells
+/** Sums over the resolution cell: clutter RCS, C/N of ground and rain in the main beam, what is left, share in sight, spread weighted by RCS. */
+function sumCell(o: PointOption, cells: GateCells, slantRangeM: number) {
+  const { cell, kernel, gateM, beamRad, left } = o
+  const { gate } = cells
   const patterned = new Float64Array(gate.length)
   const plain = new Float64Array(gate.length)
   const residual = new Float64Array(gate.length)
-  const use = new Float64Array(model.strength.sigma.length)
+  const use = new Float64Array(cell.strength.sigma.length)
   const areaM2 = slantRangeM * beamRad * gateM * secantOf(o, cells, kernel.length >> 1)
-  let [rcsM2, main, left, share, spread] = [0, 0, 0, 0, 0]
+  const sums = { rcsM2: 0, ground: 0, rain: 0, left: 0, share: 0, spread: 0 }
   for (let n = 0; n < kernel.length; n++) {
-    cellClutter(model, cells, n, { patterned, plain, residual }, use)
+    cellClutter(cell, cells, n, { patterned, plain, residual }, use)
     const at0 = n * gate.length
-    const perRange4 = isUnknown(cells.state[at0 + middle]) ? 0 : constant / slantOf(o, cells, n) ** 4
-    for (let k = 0; k < gate.length; k++) {
+    const factor = perSquareMetre(o, cells, n)
+    const rain = kernel[n] * rainOf(o, cells, n) * factor
+    sums.rain += rain
+    sums.left += rain * left.rain
+    for (let k = cells.first; k < gate.length; k++) {
       const w = kernel[n] * gate[k]
-      share += (w * cells.inSight[at0 + k]) / 65535
+      sums.share += (w * cells.inSight[at0 + k]) / 65535
       if (plain[k] === 0) continue
-      rcsM2 += w * plain[k]
-      main += w * patterned[k] * perRange4
-      left += w * residual[k] * perRange4
+      sums.rcsM2 += w * plain[k]
+      sums.ground += w * patterned[k] * factor
+      sums.left += w * residual[k] * factor
       const band = choiceOf(o, cells, n, k)?.band
-      if (band) spread += w * plain[k] * weibullSpread(band, areaM2)
+      if (band) sums.spread += w * plain[k] * weibullSpread(band, areaM2)
     }
   }
-  return { areaM2, rcsM2, main, left, share: share / (beamRad * gateM), spread, use }
+  return { ...sums, areaM2, share: sums.share / (beamRad * gateM), use }
 }
 
 /** sec ψ of the middle cell of a row, ψ the depression at the ground. */
-function secantOf({ model }: PointOption, cells: GateCells, row: number): number {
+function secantOf({ cell }: PointOption, cells: GateCells, row: number): number {
   const { middle, gate } = cells
   const rangeM = cells.centresM[middle]
-  const tangent = (model.antennaM - cells.groundM[row * gate.length + middle]) / rangeM - rangeM / (2 * cells.effectiveRadiusM[row])
+  const tangent = (cell.antennaM - cells.groundM[row * gate.length + middle]) / rangeM - rangeM / (2 * cells.effectiveRadiusM[row])
   return Math.sqrt(1 + tangent * tangent)
 }
 
@@ -177,6 +184,9 @@ const emptyPoint = (azimuthDeg: number, rangeM: number): PointClutter => ({
   cnrDb: null,
   mainCnrDb: null,
   sideLobeCnrDb: null,
+  groundCnrDb: null,
+  rainCnrDb: null,
+  discreteCnrDb: null,
   residueDb: null,
   cellAreaM2: null,
   shareInSight: 0,

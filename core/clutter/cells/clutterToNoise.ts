@@ -1,29 +1,19 @@
-import { azimuthKernel, clutterGainTable } from '../../antenna/index.ts'
 import type { Earth } from '../../geodesy/index.ts'
 import type { GroundCode } from '../../landcover/index.ts'
 import type { SightCells, SiteCells } from '../../masking/index.ts'
 import { CELL, type PolarShape } from '../../polar/index.ts'
-import { gateLengthM, minimumRangeM, type RadarInput, radarConstantDb } from '../../radar/index.ts'
+import type { RadarInput } from '../../radar/index.ts'
 import type { Site } from '../../terrain/index.ts'
-import { fromDb, RAD_PER_DEG, toDb } from '../../units/index.ts'
+import { fromDb, toDb } from '../../units/index.ts'
 import type { Work } from '../../work/index.ts'
-import type { LandTable } from '../land/landTable.ts'
-import { BUILT_IN_LAND_TABLE } from '../land/landTableData.ts'
-import { notesInUse, strengthTable } from '../land/strengthTable.ts'
-import type { ClutterCells, ImprovementDb, ModelNote } from '../types.ts'
+import { notesInUse } from '../land/strengthTable.ts'
+import type { ClutterCells, ModelNote } from '../types.ts'
 import { azimuthSum } from './azimuthSum.ts'
-import { type CellModel, type CellRows, cellClutter, gateSums, gateWeights, slantSquared } from './cellSums.ts'
+import { type CellModel, type CellRows, cellClutter, gateSums } from './cellSums.ts'
 import { decibel } from './decibelTable.ts'
-import { leftOf } from './residue.ts'
+import { addDiscretes, addRain, addToGates, gatesOfRow, makeGates, passedOver, tooNear } from './gates.ts'
+import { type ClutterOptions, type OptionModel, optionModel } from './optionModel.ts'
 
-export interface ClutterOptions {
-  /** Low-angle land table in place of the built-in one. */
-  readonly landTable?: LandTable
-  /** Suppression by kind of clutter, dB; absent = none, and the residue is all of the clutter. */
-  readonly improvementDb?: ImprovementDb
-  /** Key of the result; '' when the caller keeps none. */
-  readonly key?: string
-}
 /** Cells summed between two yields: a few milliseconds. */
 const CELLS_PER_YIELD = 60_000
 
@@ -38,20 +28,24 @@ export const centresOf = (grid: PolarShape): Float64Array =>
 export const electricalCentreM = (site: Site, siteGroundM: number, heightM: number): number => (site.groundHeightM ?? siteGroundM) + heightM
 
 /** The words that hold for a whole option, from the entries of the strength table its cells took. */
-export function optionNotes(model: CellModel, use: Float64Array, earth: Earth): ModelNote[] {
+export function optionNotes(o: OptionModel, use: Float64Array, earth: Earth): ModelNote[] {
   const k = earth.effectiveEarthFactor
-  return k > 0 && k <= 10 ? notesInUse(model.strength, use) : [...notesInUse(model.strength, use), NOTE_FLAT]
+  const flat = k > 0 && k <= 10 ? [] : [NOTE_FLAT]
+  return [...notesInUse(o.cell.strength, use), ...o.notes, ...flat]
 }
 
+/** Two-way azimuth side-lobe level, ratio to the peak. */
+export const sideLobeLevel = (r: RadarInput): number => fromDb(2 * r.antenna.sidelobeDb)
 /** Side lobes all round against the main beam: two-way level × 360°/θ, ratio. */
-export const sideLobeShare = (r: RadarInput): number => fromDb(2 * r.antenna.sidelobeDb) * (360 / r.antenna.azimuthBeamwidthDeg)
+export const sideLobeShare = (r: RadarInput): number => sideLobeLevel(r) * (360 / r.antenna.azimuthBeamwidthDeg)
 
 /**
  * Clutter-to-noise of every cell of a polar grid for one option, dB, one pulse, before STC, integration and suppression: radar equation with
  * σ°F⁴·A over the ground in sight of the resolution cell centred on the cell (A = R·θaz·cτc/2·sec ψ; two-way Gaussian azimuth kernel; cells
- * weighted by their overlap with the gate; elevation gain at cell centres with the side-lobe floor), plus one side-lobe term per gate. The
- * residue is the same sum with each kind of clutter divided by its improvement factor. NaN where sight is unknown and inside cτ/2. Holds within LAND_LIMITS; beyond them notes say so. Throws InputError for a frequency outside
- * 30 MHz to 40 GHz or a pattern that is refused.
+ * weighted by their overlap with the gate; elevation gain at cell centres with the side-lobe floor), plus rain, discrete echoes, and one
+ * side-lobe term per gate (of all of these); gas and rain loss as the weather says. The residue is the same sum with each kind of clutter
+ * divided by its improvement factor. NaN where sight is unknown and inside cτ/2. Holds within LAND_LIMITS, SEA_LIMITS and RAIN_LIMITS; beyond
+ * them notes say so. Throws InputError for a frequency outside 30 MHz to 40 GHz or a pattern that is refused.
  */
 export function* clutterToNoise(
   s: SiteCells,
@@ -66,51 +60,44 @@ export function* clutterToNoise(
 ): Work<ClutterCells> {
   const { grid } = s
   const { azimuths, ranges } = grid
-  const centresM = centresOf(grid)
-  const cells: CellRows = { ...pick(s), inSight: m.inSight, centresM }
-  const left = leftOf(codes, options.improvementDb)
-  const model: CellModel = {
-    antennaM: electricalCentreM(site, s.siteGroundM, heightM),
-    strength: strengthTable(codes, r.frequencyHz, options.landTable ?? BUILT_IN_LAND_TABLE),
-    gain: clutterGainTable(r.antenna, tiltDeg),
-    nearestM: minimumRangeM(r),
-    left: left.byCode,
-  }
-  const { antennaM, nearestM } = model
-  const constant = fromDb(radarConstantDb(r))
+  const cells: CellRows = { ...pick(s), inSight: m.inSight, floorM: m.floorM, centresM: centresOf(grid) }
+  const o = optionModel(codes, electricalCentreM(site, s.siteGroundM, heightM), r, tiltDeg, grid, options)
+  const { left, weights, kernel } = o
+  const beamwidthDeg = r.antenna.azimuthBeamwidthDeg
+  const passed = passedOver(o, cells, grid)
   const rowsPerYield = Math.max(1, Math.floor(CELLS_PER_YIELD / ranges))
   const total = 2 * azimuths
 
   // First pass: clutter of each gate on one azimuth and its mean round the ring; twice over where kinds of clutter differ in suppression.
-  const weights = gateWeights(gateLengthM(r), grid.rangeStepM)
   const known = new Uint32Array(ranges)
-  const all = makeGates(azimuths, ranges)
-  const rest = left.same === null ? makeGates(azimuths, ranges) : null
+  const all = makeGates(grid)
+  const rest = left.same === null ? makeGates(grid) : null
   const out = { patterned: all.row, residual: rest?.row ?? null, plain: null }
-  const use = new Float64Array(model.strength.sigma.length)
+  const use = new Float64Array(o.cell.strength.sigma.length)
   for (let i = 0; i < azimuths; i++) {
-    cellClutter(model, cells, i, out, use)
+    cellClutter(o.cell, cells, i, out, use)
     gateSums(all.row, weights, all.sums)
     if (rest) gateSums(rest.row, weights, rest.sums)
-    gatesOfRow(i, cells, m.state, antennaM, nearestM, constant, all, rest, known)
+    addRain(i, o, cells, m.state, all, rest)
+    gatesOfRow(i, o, cells, m.state, passed, all, rest, known)
     if ((i + 1) % rowsPerYield === 0) yield { done: i + 1, total }
   }
-  const kernel = azimuthKernel(r.antenna.azimuthBeamwidthDeg, grid.azimuthStepDeg)
-  const ringScale = r.antenna.azimuthBeamwidthDeg * RAD_PER_DEG * sideLobeShare(r)
-  const sideLobe = all.ring.map((sum, j) => (known[j] > 0 ? (ringScale * sum) / known[j] : 0))
-  const sideLobeLeft = rest ? rest.ring.map((sum, j) => (known[j] > 0 ? (ringScale * sum) / known[j] : 0)) : null
+  const sideLobe = sideLobesOf(o, r, all.ring, known, grid.rangeStepM, 1)
+  const sideLobeLeft = rest ? sideLobesOf(o, r, rest.ring, known, grid.rangeStepM, left.discrete) : null
 
-  // Second pass: the azimuth beam, the radar equation, dB.
+  // Second pass: the azimuth beam, discrete echoes, dB.
   const cnrDb = new Float32Array(azimuths * ranges)
   const residueDb = left.same === 1 ? cnrDb : new Float32Array(azimuths * ranges)
   const sameDb = left.same === null ? 0 : toDb(left.same)
   for (let i = 0; i < azimuths; i++) {
     azimuthSum(all.gates, azimuths, i, kernel, all.row)
-    toDecibels(cnrDb, all.row, i, cells, m.state, antennaM, nearestM, sideLobe)
+    addDiscretes(i, o, grid, beamwidthDeg, 1, all.row)
+    toDecibels(cnrDb, all.row, i, o.cell, cells, m.state, sideLobe)
     const from = i * ranges
     if (rest && sideLobeLeft) {
       azimuthSum(rest.gates, azimuths, i, kernel, rest.row)
-      toDecibels(residueDb, rest.row, i, cells, m.state, antennaM, nearestM, sideLobeLeft)
+      addDiscretes(i, o, grid, beamwidthDeg, left.discrete, rest.row)
+      toDecibels(residueDb, rest.row, i, o.cell, cells, m.state, sideLobeLeft)
     } else if (residueDb !== cnrDb) for (let at = from; at < from + ranges; at++) residueDb[at] = cnrDb[at] + sameDb
     if ((i + 1) % rowsPerYield === 0) yield { done: azimuths + i + 1, total }
   }
@@ -126,79 +113,41 @@ export function* clutterToNoise(
     residueDb,
     sideLobeCnrDb,
     sideLobeResidueDb: sideLobeLeft ? Float32Array.from(sideLobeLeft, decibel) : sideLobeCnrDb.map((v) => v + sameDb),
-    notes: optionNotes(model, use, earth),
+    notes: optionNotes(o, use, earth),
   }
 }
 
-const pick = ({ groundM, code, relief, effectiveRadiusM, siteGroundM }: SiteCells) => ({
+const pick = ({ groundM, code, relief, slopePermille, effectiveRadiusM, siteGroundM }: SiteCells) => ({
   groundM,
   code,
   relief,
+  slopePermille,
   effectiveRadiusM,
   siteGroundM,
 })
 
-/** One kind of sum, all of the clutter or what suppression leaves: a row of cells and its gates, every gate of the grid, sums round the rings. */
-interface Gates {
-  readonly row: Float64Array
-  readonly sums: Float64Array
-  /** Clutter-to-noise of the gates per radian of azimuth, ratio. */
-  readonly gates: Float32Array
-  readonly ring: Float64Array
-}
-const makeGates = (azimuths: number, ranges: number): Gates => ({
-  row: new Float64Array(ranges),
-  sums: new Float64Array(ranges),
-  gates: new Float32Array(azimuths * ranges),
-  ring: new Float64Array(ranges),
-})
-
-/** Is the cell nearer than the pulse allows? The slant range is worked out only where it can decide. */
-function tooNear(nearestM: number, antennaM: number, groundM: number, rangeM: number, c: number): boolean {
-  return rangeM <= 1.01 * nearestM && slantSquared(antennaM, groundM, rangeM, c) < nearestM * nearestM
-}
-
-/** Radar equation of the gates on one azimuth, each at the slant range of its middle cell; counts the cells known in each ring. */
-function gatesOfRow(
-  i: number,
-  cells: CellRows,
-  state: Uint8Array,
-  antennaM: number,
-  nearestM: number,
-  constant: number,
-  all: Gates,
-  rest: Gates | null,
+/** Side-lobe term of each gate, ratio: its mean round the ring and every discrete echo at the two-way level. */
+function sideLobesOf(
+  o: OptionModel,
+  r: RadarInput,
+  ring: Float64Array,
   known: Uint32Array,
-): void {
-  const { centresM, groundM } = cells
-  const { sums, gates, ring } = all
-  const n = centresM.length
-  const c = 1 / cells.effectiveRadiusM[i]
-  for (let j = 0, at = i * n; j < n; j++, at++) {
-    if (state[at] >= CELL.beyondVoid || tooNear(nearestM, antennaM, groundM[at], centresM[j], c)) continue
-    known[j]++
-    if (sums[j] === 0) continue
-    const r2 = slantSquared(antennaM, groundM[at], centresM[j], c)
-    const factor = constant / (r2 * r2)
-    const v = sums[j] * factor
-    ring[j] += v
-    gates[at] = v
-    if (rest) {
-      const w = rest.sums[j] * factor
-      rest.ring[j] += w
-      rest.gates[at] = w
-    }
-  }
+  rangeStepM: number,
+  discreteLeft: number,
+): Float64Array {
+  const scale = o.beamRad * sideLobeShare(r)
+  const out = ring.map((sum, j) => (known[j] > 0 ? (scale * sum) / known[j] : 0))
+  for (const echo of o.discretes) addToGates(echo.rangeM, echo.reachM, rangeStepM, echo.ratio * sideLobeLevel(r) * discreteLeft, out)
+  return out
 }
 
 function toDecibels(
   out: Float32Array,
   main: Float64Array,
   i: number,
+  { antennaM, nearestM }: CellModel,
   cells: CellRows,
   state: Uint8Array,
-  antennaM: number,
-  nearestM: number,
   sideLobe: Float64Array,
 ): void {
   const { centresM, groundM } = cells

@@ -1,18 +1,20 @@
-import { clutterGainTable } from '../../antenna/index.ts'
-import type { Earth } from '../../geodesy/index.ts'
+import { KERNEL_REACH_BEAMWIDTHS } from '../../antenna/index.ts'
+import { twoWayLossParts } from '../../atmosphere/index.ts'
+import { depressionAtTerrainDeg, type Earth } from '../../geodesy/index.ts'
 import { sweep, sweepRays } from '../../masking/index.ts'
 import { isUnknown, type PolarShape } from '../../polar/index.ts'
-import { gateLengthM, minimumRangeM, type RadarInput, radarConstantDb } from '../../radar/index.ts'
+import type { RadarInput } from '../../radar/index.ts'
 import { type Ground, type Site, siteGround } from '../../terrain/index.ts'
-import { fromDb, RAD_PER_DEG } from '../../units/index.ts'
+import { fromDb } from '../../units/index.ts'
 import { finish } from '../../work/index.ts'
-import type { LandTable } from '../land/landTable.ts'
-import { BUILT_IN_LAND_TABLE } from '../land/landTableData.ts'
-import { strengthTable } from '../land/strengthTable.ts'
+import { towardEcho } from '../discretes/discreteEchoes.ts'
+import { chooseRow, type LandChoice } from '../land/landRow.ts'
+import { CODE_KIND, grazingDegOf, isOverOpen, OVER_OPEN_WITHIN_M } from '../land/strengthTable.ts'
+import { rainPerMetre } from '../rain/rainBeam.ts'
 import type { ClutterCells } from '../types.ts'
-import { type CellModel, type CellRows, cellClutter, gateWeights, slantSquared } from './cellSums.ts'
-import { type ClutterOptions, clutterToNoise, electricalCentreM, sideLobeShare } from './clutterToNoise.ts'
-import { leftOf } from './residue.ts'
+import { type CellRows, cellClutter, slantSquared } from './cellSums.ts'
+import { clutterToNoise, electricalCentreM, sideLobeLevel, sideLobeShare } from './clutterToNoise.ts'
+import { type ClutterOptions, type OptionModel, optionModel } from './optionModel.ts'
 
 export interface PointOptions extends ClutterOptions {
   /** Side-lobe term per gate of the grid and what is left of it, from `clutterToNoise` for the same option; worked out when absent. */
@@ -20,7 +22,7 @@ export interface PointOptions extends ClutterOptions {
   readonly sideLobeResidueDb?: Float32Array
 }
 /** One option as single places need it; tables are made once. */
-export interface PointOption {
+export interface PointOption extends OptionModel {
   readonly g: Ground
   readonly site: Site
   readonly heightM: number
@@ -28,13 +30,7 @@ export interface PointOption {
   readonly r: RadarInput
   readonly tiltDeg: number
   readonly grid: PolarShape
-  readonly table: LandTable
-  readonly model: CellModel
-  /** Echo-to-noise ratio of 1 m² at 1 m. */
-  readonly constant: number
-  readonly gateM: number
-  readonly beamRad: number
-  readonly weights: Float64Array
+  readonly options: PointOptions
 }
 
 export function pointOption(
@@ -45,53 +41,111 @@ export function pointOption(
   r: RadarInput,
   tiltDeg: number,
   grid: PolarShape,
-  options: ClutterOptions = {},
+  options: PointOptions = {},
 ): PointOption {
-  const table = options.landTable ?? BUILT_IN_LAND_TABLE
-  const gateM = gateLengthM(r)
-  const model = {
-    antennaM: electricalCentreM(site, siteGround(g, site), heightM),
-    strength: strengthTable(g.codes, r.frequencyHz, table),
-    gain: clutterGainTable(r.antenna, tiltDeg),
-    nearestM: minimumRangeM(r),
-    left: leftOf(g.codes, options.improvementDb).byCode,
-  }
-  const constant = fromDb(radarConstantDb(r))
-  const beamRad = r.antenna.azimuthBeamwidthDeg * RAD_PER_DEG
-  return { g, site, heightM, earth, r, tiltDeg, grid, table, model, constant, gateM, beamRad, weights: gateWeights(gateM, grid.rangeStepM) }
+  const model = optionModel(g.codes, electricalCentreM(site, siteGround(g, site), heightM), r, tiltDeg, grid, options)
+  return { ...model, g, site, heightM, earth, r, tiltDeg, grid, options }
 }
 
 /** Cells on chosen azimuths that share in the gate around a ground range. */
 export interface GateCells extends CellRows {
+  readonly first: number
   readonly state: Uint8Array
-  /** Weight of each cell of a row, m. */
+  /** Weight of each cell of a row, m; 0 for those that only tell what lies toward the radar. */
   readonly gate: readonly number[]
   /** Which of them lies on the range asked for. */
   readonly middle: number
 }
 export function gateCells(o: PointOption, azimuthsDeg: readonly number[], rangeM: number): GateCells {
-  const { grid, weights } = o
+  const { grid, weights, cell } = o
   const half = weights.length >> 1
+  const urban = cell.strength.kinds.some((k) => k & CODE_KIND.urban)
+  const before = urban ? Math.ceil(OVER_OPEN_WITHIN_M / grid.rangeStepM) : 0
   // Cells behind the site are left out; the rest stand for the gate.
-  const offsets = Array.from(weights, (_, k) => k - half).filter((k) => rangeM + k * grid.rangeStepM > 0)
+  const offsets: number[] = []
+  for (let k = -half - before; k <= half; k++) if (rangeM + k * grid.rangeStepM > 0) offsets.push(k)
   const centres = offsets.map((k) => rangeM + k * grid.rangeStepM)
-  const own = offsets.map((k) => weights[k + half])
+  const own = offsets.map((k) => weights[k + half] ?? 0)
   const whole = o.gateM / own.reduce((s, w) => s + w, 0)
   const swept = sweepRays(o.g, o.site, o.heightM, o.earth, azimuthsDeg, centres, grid.rangeStepM)
-  return { ...swept, centresM: Float64Array.from(centres), gate: own.map((w) => w * whole), middle: offsets.indexOf(0) }
+  return {
+    ...swept,
+    centresM: Float64Array.from(centres),
+    first: offsets.findIndex((k) => k >= -half),
+    gate: own.map((w) => w * whole),
+    middle: offsets.indexOf(0),
+  }
+}
+
+/** Slant range to the middle cell of a row, m; NaN where its ground is unknown. */
+export function slantOf({ cell }: PointOption, cells: GateCells, row: number): number {
+  const { middle, gate } = cells
+  const groundM = cells.groundM[row * gate.length + middle]
+  return Math.sqrt(slantSquared(cell.antennaM, groundM, cells.centresM[middle], 1 / cells.effectiveRadiusM[row]))
+}
+
+/** Row of the land table one cell takes; null where its ground code is unknown. */
+export function choiceOf(o: PointOption, cells: GateCells, row: number, k: number): LandChoice | null {
+  const from = row * cells.gate.length
+  const at = from + k
+  const code = o.g.codes[cells.code[at]]
+  if (!code) return null
+  const { strength, antennaM, tideM } = o.cell
+  const { weather } = o.options
+  const groundM = cells.groundM[at] + (code.terrain === 'water' ? tideM : 0)
+  const depressionDeg = depressionAtTerrainDeg(antennaM - groundM, cells.centresM[k], cells.effectiveRadiusM[row])
+  const context = {
+    urbanOverOpen: code.terrain === 'urban' && isOverOpen(strength, cells, from, k),
+    grazingDeg: grazingDegOf(depressionDeg, cells.slopePermille[at] / 1000),
+    ...(weather ? { sea: { seaState: weather.seaState, polarisation: o.r.polarisation } } : {}),
+  }
+  return chooseRow(code.terrain, cells.relief[at], depressionDeg, o.r.frequencyHz, context, o.table)
+}
+
+/** Two-way losses of the weather to the middle cell of a row, dB. */
+export function lossesOf(o: PointOption, cells: GateCells, row: number): { gasDb: number; rainDb: number } {
+  const { middle, gate, centresM } = cells
+  if (!o.loss) return { gasDb: 0, rainDb: 0 }
+  return twoWayLossParts(o.loss, o.cell.antennaM, cells.groundM[row * gate.length + middle], centresM[middle], slantOf(o, cells, row))
+}
+
+/** Radar equation with losses for 1 m² in the middle cell of a row; 0 where its ground is unknown. */
+export function perSquareMetre(o: PointOption, cells: GateCells, row: number): number {
+  if (isUnknown(cells.state[row * cells.gate.length + cells.middle])) return 0
+  const { gasDb, rainDb } = lossesOf(o, cells, row)
+  return (o.constant * fromDb(-gasDb - rainDb)) / slantOf(o, cells, row) ** 4
+}
+
+/** Echo of the rain in the gate of a row, m² per radian of azimuth. */
+export function rainOf(o: PointOption, cells: GateCells, row: number): number {
+  const { middle, gate, centresM } = cells
+  const at = row * gate.length + middle
+  if (!o.rain || isUnknown(cells.state[at])) return 0
+  const c = 1 / cells.effectiveRadiusM[row]
+  return o.gateM * rainPerMetre(o.rain, o.cell.antennaM, cells.floorM[at], centresM[middle], slantOf(o, cells, row), c)
+}
+
+/** Discrete echoes in the gate and beam of a place, ratio to noise. */
+export function discretesAt(o: PointOption, azimuthDeg: number, rangeM: number): number {
+  const width = o.r.antenna.azimuthBeamwidthDeg
+  return o.discretes.reduce(
+    (sum, e) =>
+      Math.abs(rangeM - e.rangeM) > e.reachM ? sum : sum + e.ratio * towardEcho(azimuthDeg, e, width, KERNEL_REACH_BEAMWIDTHS * width),
+    0,
+  )
 }
 
 /** Side-lobe term by ground range, ratios to noise, 0 nil: the gate of the grid that holds it, beyond the grid a gate of its own ring. */
-export function sideLobes(o: PointOption, options: PointOptions): (rangeM: number) => SideLobe {
+export function sideLobes(o: PointOption): (rangeM: number) => SideLobe {
+  const { sideLobeCnrDb, sideLobeResidueDb, improvementDb } = o.options
   let ofGrid: Pick<ClutterCells, 'sideLobeCnrDb' | 'sideLobeResidueDb'> | null = null
-  const { sideLobeCnrDb, sideLobeResidueDb } = options
-  if (sideLobeCnrDb && (sideLobeResidueDb || !options.improvementDb))
+  if (sideLobeCnrDb && (sideLobeResidueDb || !improvementDb))
     ofGrid = { sideLobeCnrDb, sideLobeResidueDb: sideLobeResidueDb ?? sideLobeCnrDb }
   const beyond = new Map<number, SideLobe>()
   return (rangeM) => {
     const j = Math.floor(rangeM / o.grid.rangeStepM)
     if (j < o.grid.ranges) {
-      ofGrid ??= sideLobesOfGrid(o, options)
+      ofGrid ??= sideLobesOfGrid(o)
       return { all: fromDb(ofGrid.sideLobeCnrDb[j]) || 0, left: fromDb(ofGrid.sideLobeResidueDb[j]) || 0 }
     }
     const term = beyond.get(j) ?? sideLobeOfRing(o, (j + 0.5) * o.grid.rangeStepM)
@@ -105,30 +159,33 @@ export interface SideLobe {
   readonly left: number
 }
 
-function sideLobesOfGrid(o: PointOption, options: ClutterOptions): ClutterCells {
+function sideLobesOfGrid(o: PointOption): ClutterCells {
   const { site, masks } = finish(sweep(o.g, o.site, [o.heightM], o.grid, o.earth))
-  return finish(clutterToNoise(site, masks[0], o.g.codes, o.site, o.heightM, o.earth, o.r, o.tiltDeg, options))
+  return finish(clutterToNoise(site, masks[0], o.g.codes, o.site, o.heightM, o.earth, o.r, o.tiltDeg, o.options))
 }
 
 function sideLobeOfRing(o: PointOption, rangeM: number): SideLobe {
-  const { model, grid } = o
+  const { cell, grid } = o
   const azimuths = Array.from({ length: grid.azimuths }, (_, i) => i * grid.azimuthStepDeg)
   const cells = gateCells(o, azimuths, rangeM)
   const patterned = new Float64Array(cells.gate.length)
   const residual = new Float64Array(cells.gate.length)
-  const use = new Float64Array(model.strength.sigma.length)
+  const use = new Float64Array(cell.strength.sigma.length)
   let [all, left, known] = [0, 0, 0]
   for (let i = 0; i < azimuths.length; i++) {
-    const at = i * patterned.length + cells.middle
-    if (isUnknown(cells.state[at])) continue
+    if (isUnknown(cells.state[i * patterned.length + cells.middle])) continue
     known++
-    cellClutter(model, cells, i, { patterned, residual, plain: null }, use)
-    const r2 = slantSquared(model.antennaM, cells.groundM[at], rangeM, 1 / cells.effectiveRadiusM[i])
-    for (let k = 0; k < patterned.length; k++) {
-      all += (cells.gate[k] * patterned[k]) / (r2 * r2)
-      left += (cells.gate[k] * residual[k]) / (r2 * r2)
+    cellClutter(cell, cells, i, { patterned, residual, plain: null }, use)
+    const factor = perSquareMetre(o, cells, i)
+    const rain = rainOf(o, cells, i)
+    all += rain * factor
+    left += rain * o.left.rain * factor
+    for (let k = cells.first; k < patterned.length; k++) {
+      all += cells.gate[k] * patterned[k] * factor
+      left += cells.gate[k] * residual[k] * factor
     }
   }
-  const scale = known > 0 ? (o.constant * o.beamRad * sideLobeShare(o.r)) / known : 0
-  return { all: all * scale, left: left * scale }
+  const scale = known > 0 ? (o.beamRad * sideLobeShare(o.r)) / known : 0
+  const discrete = sideLobeLevel(o.r) * o.discretes.reduce((s, e) => (Math.abs(rangeM - e.rangeM) > e.reachM ? s : s + e.ratio), 0)
+  return { all: all * scale + discrete, left: left * scale + discrete * o.left.discrete }
 }

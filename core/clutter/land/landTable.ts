@@ -38,7 +38,7 @@ export interface LandTable {
 export const LAND_LIMITS = {
   /** Unmarked inside; clamped to the nearest band and marked outside. */
   frequencyHz: { low: 167e6, high: 9.2e9 },
-  /** The table is for depression angles up to this; beyond, the last band is held and marked. */
+  /** The table is for depression angles up to this; beyond, it runs over into γ·sin ψ. */
   highestDepressionDeg: 8,
 } as const
 

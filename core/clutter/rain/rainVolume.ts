@@ -1,4 +1,4 @@
-import { RAD_PER_DEG, SPEED_OF_LIGHT_MS, toDb } from '../units/index.ts'
+import { RAD_PER_DEG, SPEED_OF_LIGHT_MS, toDb } from '../../units/index.ts'
 
 /** Z = 200 R^1.6 (Marshall and Palmer, 1948) and |K|² of water. Rayleigh regime, up to about X band. */
 const MARSHALL_PALMER = { a: 200, b: 1.6 } as const
