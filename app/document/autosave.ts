@@ -63,11 +63,13 @@ function readJournal(journal: Journal | null): KeptStudy | null {
 export function autosave(study: StudyStore, given: FileStore, save: SaveStore, shelf: Shelf, journal: Journal | null, now: () => number) {
   let timer: ReturnType<typeof setTimeout> | undefined
   let running: Promise<void> = Promise.resolve()
-  let unsaved = false
+  /** Changes so far, and how many of them are on the shelf. */
+  let changes = 0
+  let kept = 0
   const onShelf = new Map<string, Blob>()
 
   const write = async () => {
-    unsaved = false
+    const upTo = changes
     const { doc } = study.getState()
     const { files } = given.getState()
     try {
@@ -83,10 +85,10 @@ export function autosave(study: StudyStore, given: FileStore, save: SaveStore, s
           await shelf.del(key)
           onShelf.delete(key.slice(FILE_KEY.length))
         }
-      journal?.removeItem(JOURNAL_KEY)
-      save.setState({ state: unsaved ? 'saving' : 'saved', at: now(), trouble: '' })
+      kept = upTo
+      if (kept === changes) journal?.removeItem(JOURNAL_KEY)
+      save.setState({ state: kept === changes ? 'saved' : 'saving', at: now(), trouble: '' })
     } catch (error) {
-      unsaved = true
       save.setState({ state: 'failed', trouble: troubleOf(error) })
     }
   }
@@ -97,7 +99,7 @@ export function autosave(study: StudyStore, given: FileStore, save: SaveStore, s
     return running
   }
   const changed = () => {
-    unsaved = true
+    changes++
     save.setState({ state: 'saving' })
     clearTimeout(timer)
     timer = setTimeout(start, QUIET_MS)
@@ -108,7 +110,7 @@ export function autosave(study: StudyStore, given: FileStore, save: SaveStore, s
   ]
   return {
     flush(): Promise<void> {
-      if (!unsaved) return running
+      if (kept === changes) return running
       try {
         journal?.setItem(JOURNAL_KEY, JSON.stringify({ version: 1, at: now(), doc: study.getState().doc } satisfies KeptStudy))
       } catch {

@@ -41,8 +41,8 @@ export type ResultsStore = ReturnType<typeof createResultsStore>
 export function takeTell(store: ResultsStore, tell: WorkerTell, now: number): void {
   const state = store.getState()
   if (tell.kind === 'figures') {
-    const byOption = new Map(state.byOption)
-    for (const r of tell.results) byOption.set(optionKey(r.ref), r)
+    // always the whole list: what is not in it no longer holds
+    const byOption = new Map(tell.results.map((r) => [optionKey(r.ref), r]))
     store.setState({ byOption, serial: state.serial + 1, failure: null })
   } else if (tell.kind === 'status') {
     const over = tell.done >= tell.total

@@ -16,6 +16,7 @@ import {
 } from '../words/index.ts'
 import { ClassTable } from './ClassTable.tsx'
 import { DocChoice, Group } from './fields.tsx'
+import { Remarks } from './Remarks.tsx'
 import { useDoc, useGround, useSession, useView } from './session/index.ts'
 import { useFilePicker } from './useFilePicker.tsx'
 
@@ -41,6 +42,7 @@ export function GroundStep() {
         </Group>
       ) : null}
       {state === 'ready' ? <WhatWasRead notes={notes} /> : null}
+      <Remarks about={['terrain', 'landCover', 'facades', 'obstacles', 'roads', 'tables']} />
       {terrain.length > 0 ? (
         <>
           <LandCover />

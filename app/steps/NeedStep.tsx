@@ -3,6 +3,7 @@ import { addNeed, removeNeed, setField } from '../document/index.ts'
 import { Button, Caution, Check, CommitField, Mark, NumberField, Select } from '../ui/index.ts'
 import { CAUTIONS, DB, DEG, EMPTY_WORDS, formatSetting, PLAIN, SWERLING_CASES, textOf } from '../words/index.ts'
 import { faceOf } from './fields.tsx'
+import { Remarks } from './Remarks.tsx'
 import { useDoc, useSession, useView } from './session/index.ts'
 import { settledOf } from './settled.ts'
 
@@ -26,6 +27,7 @@ export function NeedStep() {
       {needs.map((need, i) => (
         <Need key={need.id} need={need} at={i} />
       ))}
+      <Remarks about={['needs']} />
       <div className="row">
         <Button onPress={() => addNeed(study)}>Add a layer need</Button>
       </div>
@@ -71,7 +73,6 @@ function Need({ need, at }: { need: NeedDoc; at: number }) {
       <Check value={need.must ?? true} onChange={(v) => set('must', v)}>
         Must be met
       </Check>
-      {need.kind !== 'layer' ? <Caution>A need of kind {need.kind} is kept, not assessed yet.</Caution> : null}
       <NumberField
         label="Height"
         value={heights[0]}

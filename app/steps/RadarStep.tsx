@@ -1,4 +1,4 @@
-import { hasStartingRadar, setField, valueAt } from '../document/index.ts'
+import { setField, valueAt } from '../document/index.ts'
 import { Caution, Check, CommitField, Mark } from '../ui/index.ts'
 import {
   COSECANT_FIELD,
@@ -14,6 +14,7 @@ import {
 } from '../words/index.ts'
 import { DocChoice, DocNumber, DocNumbers, Group } from './fields.tsx'
 import { PairsField } from './PairsField.tsx'
+import { Remarks } from './Remarks.tsx'
 import { useDoc, useSession } from './session/index.ts'
 
 const HZ = { unit: 'Hz', size: 1 }
@@ -22,7 +23,6 @@ const HZ = { unit: 'Hz', size: 1 }
 export function RadarStep() {
   const { study } = useSession()
   const name = useDoc((d) => d.radar.name ?? '')
-  const starting = useDoc(hasStartingRadar)
   const coherent = useDoc((d) => d.radar.coherentTransmitter)
   const pattern = useDoc((d) => d.radar.antenna.elevationPattern ?? 'gaussian')
   const suppression = useDoc((d) => d.radar.suppression?.kind ?? 'none')
@@ -38,7 +38,7 @@ export function RadarStep() {
           return null
         }}
       />
-      {starting ? <Caution>Round starting values, not a radar: enter yours and name it before relying on any figure.</Caution> : null}
+      <Remarks about={['radar', 'atmosphere', 'run']} />
       <Group title="Transmitter">
         {RADAR_FIELDS.transmitter.map((f) => (
           <DocNumber key={f.path} of={f} />

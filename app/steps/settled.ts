@@ -1,4 +1,4 @@
-import { type SettledStudy, type StudyDoc, settle } from '../../core/index.ts'
+import { checkStudy, type SettledStudy, type StudyDoc, settle } from '../../core/index.ts'
 import { problemsOf } from '../document/index.ts'
 
 const settled = new WeakMap<StudyDoc, SettledStudy | null>()
@@ -10,4 +10,10 @@ export function settledOf(doc: StudyDoc): SettledStudy | null {
     settled.set(doc, study)
   }
   return study
+}
+
+/** Remarks on a sound study: what is kept but not assessed, and numbers that do not fit each other. */
+export function remarksOf(doc: StudyDoc): string[] {
+  const study = settledOf(doc)
+  return study ? checkStudy(study, doc) : []
 }

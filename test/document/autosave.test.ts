@@ -84,6 +84,15 @@ describe('autosave', () => {
     const back = await restore(shelf, journal)
     expect(back?.doc.candidates.map((c) => c.id)).toEqual(['A', 'B'])
   })
+  it('a page that goes away while a save is under way has its document in the journal', async () => {
+    const { study, shelf, journal, saver } = setUp()
+    vi.spyOn(shelf, 'set').mockImplementation(() => new Promise(() => {}))
+    addCandidate(study, { lon: 1, lat: 1 })
+    await vi.advanceTimersByTimeAsync(600)
+    void saver.flush()
+    const back = await restore(shelf, journal)
+    expect(back?.doc.candidates.map((c) => c.id)).toEqual(['A'])
+  })
   it('drops files of an earlier study from the shelf', async () => {
     const { files, kept } = setUp()
     files.getState().give([{ name: 'old.tif', blob: dem }])

@@ -15,7 +15,7 @@ import {
 import { keepGround, type ReadGround } from '../../app/steps/session/groundKeeper.ts'
 import { createNoticeStore } from '../../app/steps/session/notices.ts'
 import { keepRunning } from '../../app/steps/session/runKeeper.ts'
-import type { Ask } from '../../core/index.ts'
+import { type Ask, WGS84 } from '../../core/index.ts'
 
 const ANSWER = { serial: 7, minM: 0, maxM: 100, voidPct: 0, corners: [] }
 
@@ -116,7 +116,14 @@ describe('running by itself', () => {
 describe('keeping the ground', () => {
   const parts = (name: string) =>
     ({
-      ground: { shape: { width: 2, height: 1 }, heightM: new Float32Array(2), code: null, codes: [], obstacles: [], verticalErrorM: 10 },
+      ground: {
+        shape: { width: 2, height: 1, crs: WGS84, x0: 10, y0: 50, colX: 0.5, colY: 0, rowX: 0, rowY: -0.5 },
+        heightM: new Float32Array(2),
+        code: null,
+        codes: [],
+        obstacles: [],
+        verticalErrorM: 10,
+      },
       roads: [],
       obstacles: [],
       notes: [name],
@@ -129,7 +136,8 @@ describe('keeping the ground', () => {
     expect(s.ground.getState()).toMatchObject({ state: 'none', missing: ['dem.tif'] })
     s.files.getState().give([{ name: 'dem.tif', blob: new Blob(['x']) }])
     await settled()
-    expect(s.ground.getState()).toMatchObject({ state: 'ready', ground: ANSWER, notes: ['read'] })
+    expect(s.ground.getState()).toMatchObject({ state: 'ready', ground: { serial: 7 }, notes: ['read'] })
+    expect(s.ground.getState().ground?.corners[0]).toEqual({ lon: 9.75, lat: 50.25 })
     addCandidate(s.study, { lon: 1, lat: 1 })
     expect(read).toHaveBeenCalledTimes(1)
     setField(s.study, 'terrain[0].unit', 'ft', 'stated the unit')

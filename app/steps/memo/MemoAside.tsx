@@ -1,7 +1,10 @@
-import { lazy, Suspense } from 'react'
+import { lazy, Suspense, useRef } from 'react'
+import type { OptionRef } from '../../../core/index.ts'
+import { optionKey, sameOption } from '../../document/index.ts'
+import type { MemoModel } from '../../memo/model/index.ts'
 import { Caution } from '../../ui/Marks.tsx'
 import { CAUTIONS, formatMast, textOf } from '../../words/index.ts'
-import { useSession, useView } from '../session/index.ts'
+import { useResults, useSession, useView } from '../session/index.ts'
 import { useMemoModel } from './useMemoModel.ts'
 
 const MemoColumn = lazy(() => import('../../memo/MemoColumn.tsx').then((m) => ({ default: m.MemoColumn })))
@@ -10,7 +13,7 @@ const MemoColumn = lazy(() => import('../../memo/MemoColumn.tsx').then((m) => ({
 export function MemoAside() {
   const { view } = useSession()
   const option = useView((v) => v.option)
-  const model = useMemoModel()
+  const { model, stale } = useLastModel()
   if (!model)
     return (
       <>
@@ -26,7 +29,21 @@ export function MemoAside() {
     )
   return (
     <Suspense fallback={null}>
-      <MemoColumn model={model} option={option} onExplain={(figure) => view.getState().set({ chart: 'figure', figure })} />
+      {stale ? <p className="mark">changed: figures below are of before</p> : null}
+      <div className={stale ? 'stale' : undefined} aria-busy={stale}>
+        <MemoColumn model={model} option={option} onExplain={(figure) => view.getState().set({ chart: 'figure', figure })} />
+      </div>
     </Suspense>
   )
+}
+
+/** The memo; while the option on show is being computed again, the memo as it was, marked so. */
+function useLastModel(): { model: MemoModel | null; stale: boolean } {
+  const model = useMemoModel()
+  const option = useView((v) => v.option)
+  const computed = useResults((r) => (option ? r.byOption.has(optionKey(option)) : true))
+  const last = useRef<{ model: MemoModel; option: OptionRef | null } | null>(null)
+  if (model && computed) last.current = { model, option }
+  if (computed || !last.current || !sameOption(last.current.option, option)) return { model, stale: false }
+  return { model: last.current.model, stale: true }
 }

@@ -14,7 +14,7 @@ import { filesOf, optionKey, studyOptions } from '../../document/index.ts'
 import { fitted, openingView } from '../../map/camera.ts'
 import type { MemoFile, MemoInput, MemoMap } from '../../memo/model/index.ts'
 import type { Session } from '../session/index.ts'
-import { settledOf } from '../settled.ts'
+import { remarksOf, settledOf } from '../settled.ts'
 
 /** Layer of the memo's maps, and their size in pixels. */
 const MAP_LAYER: LayerId = 'clutter-to-noise'
@@ -98,6 +98,6 @@ export function memoInput(session: Session, files: readonly MemoFile[], maps: re
     system: session.view.getState().units,
     date,
     version,
-    warnings: session.results.getState().warnings,
+    warnings: remarksOf(doc),
   }
 }

@@ -1,4 +1,4 @@
-import type { StudyDoc } from '../../../core/index.ts'
+import { type GridShape, gridPosition, type LonLat, loadCrs, type StudyDoc } from '../../../core/index.ts'
 import type { StudyClient } from '../../compute/client.ts'
 import type { makeGroundReader } from '../../compute/intakeClient.ts'
 import { type FileStore, filesOf, type GivenFile, type GroundStore, NO_GROUND, type StudyStore } from '../../document/index.ts'
@@ -41,7 +41,15 @@ export function keepGround(
       if (mine !== round) return
       const { notes, roads, obstacles } = got
       const posts = got.ground.shape.width * got.ground.shape.height
-      ground.setState({ state: 'ready', reading: null, ground: answer, posts, notes, roads, obstacles })
+      ground.setState({
+        state: 'ready',
+        reading: null,
+        ground: answer && { ...answer, corners: await cornersOf(got.ground.shape) },
+        posts,
+        notes,
+        roads,
+        obstacles,
+      })
       onGround()
     } catch (error) {
       if (mine === round) ground.setState({ ...NO_GROUND, state: 'failed', trouble: sentenceOf(error), missing })
@@ -57,6 +65,14 @@ export function keepGround(
       void look()
     },
   }
+}
+
+/** Outer corners of the ground, for the map's first view. */
+async function cornersOf(shape: GridShape): Promise<LonLat[]> {
+  await loadCrs(shape.crs)
+  const { toLonLat } = gridPosition(shape)
+  const [right, bottom] = [shape.width - 0.5, shape.height - 0.5]
+  return [toLonLat(-0.5, -0.5), toLonLat(right, -0.5), toLonLat(right, bottom), toLonLat(-0.5, bottom)].map(([lon, lat]) => ({ lon, lat }))
 }
 
 const serials = new WeakMap<Blob, number>()

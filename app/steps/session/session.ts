@@ -67,7 +67,10 @@ export async function startSession(client: StudyClient, readGround: ReadGround):
   const shelf = await openShelf().catch(() => noShelf())
   const saver = autosave(study, files, save, shelf, window.localStorage, Date.now)
 
-  client.listen((tell) => takeTell(results, tell, Date.now()))
+  client.listen((tell) => {
+    takeTell(results, tell, Date.now())
+    if (tell.kind === 'failure') say(tell.error.message, 'bad')
+  })
   const runner = keepRunning(study, view, ground, results, client, notices)
 
   const opened = (warnings: readonly string[], missing: readonly string[]) => {
