@@ -1,4 +1,4 @@
-import type { WalkedPatches } from './walkRay.ts'
+import type { WalkedPatches } from './patches.ts'
 
 /** Cover heights at posts of one ground as seen from one site: none inside the clearing radius. */
 export interface CoverPosts {

@@ -4,9 +4,10 @@ import { makeBlockers, type Spike } from './blockers.ts'
 import { codeAt, positionOf } from './buildGround.ts'
 import { type ControlPoints, directControl, fanControl, setInside } from './controlPoints.ts'
 import { type Clearing, type CoverPosts, coverAlong } from './coverAlong.ts'
+import type { WalkedPatches } from './patches.ts'
 import { reliefAt, reliefBlockOf } from './relief.ts'
 import type { Ground, RayTrack, Site } from './types.ts'
-import { WALK_END, type WalkedPatches, walkCapacity, walkRay } from './walkRay.ts'
+import { WALK_END, walkCapacity, walkRay } from './walkRay.ts'
 
 /** The track with the obstacles standing in this ray, nearest first. */
 export interface TracedRay extends RayTrack {

@@ -1,24 +1,9 @@
 import type { ControlPoints } from './controlPoints.ts'
+import { keepPatch, type Walk } from './patches.ts'
+import { isInner, strideStretch } from './stride.ts'
 
 /** Where a ray's ground is known to, and why it ends. */
 export const WALK_END = { reach: 0, edge: 1, void: 2 } as const
-
-/** What the walk writes: one entry per grid line crossed, with the start, the control points and the end. */
-export interface Walk {
-  count: number
-  end: number
-  /** Distance, ground height and bend to the next entry: three numbers per entry. */
-  readonly ground: Float64Array
-  /** Kept only for ground with cover. */
-  readonly patches: WalkedPatches | null
-}
-/** For each entry the patch ahead (its first post), the place in it (columns, rows from that post, 0..1) and twist -> bend, 1/m². */
-export interface WalkedPatches {
-  readonly post: Int32Array
-  readonly u: Float64Array
-  readonly v: Float64Array
-  readonly bendPerTwist: Float64Array
-}
 
 /** Largest number of entries a walk over a raster of this size can write for a given number of control points. */
 export const walkCapacity = (width: number, height: number, controls: number): number => 2 * (width + height) + 4 * controls + 16
@@ -78,8 +63,16 @@ export function walkRay(heightM: Float32Array, width: number, height: number, co
     ground[3 * k] = s0
     ground[3 * k + 1] = (nn * (1 - u0) + fn * u0) * (1 - v0) + (nf * (1 - u0) + ff * u0) * v0
     ground[3 * k + 2] = twist * bendPerTwist
-    if (patches) keep(patches, k, at, u0, v0, right, down, width, bendPerTwist)
+    if (patches) keepPatch(patches, k, at, u0, v0, right, down, width, bendPerTwist)
     k++
+    if (isInner(control, i, width, height)) {
+      const after = strideStretch(heightM, width, control, i, out, k)
+      if (after > 0) {
+        k = after
+        if (i + 2 === control.count) k = endInside(heightM, width, control, i + 1, right, down, bendPerTwist, out, k)
+        continue
+      }
+    }
     // the crossing at hand: distance, height, and place in the patch behind it
     let s = 0
     let z = 0
@@ -109,7 +102,7 @@ export function walkRay(heightM: Float32Array, width: number, height: number, co
           out.end = WALK_END.void
           break
         }
-        if (patches) keep(patches, k, at, 0, v, right, down, width, bendPerTwist)
+        if (patches) keepPatch(patches, k, at, 0, v, right, down, width, bendPerTwist)
       } else {
         if (tr >= 1) break
         u = u0 + tr * across
@@ -133,7 +126,7 @@ export function walkRay(heightM: Float32Array, width: number, height: number, co
           out.end = WALK_END.void
           break
         }
-        if (patches) keep(patches, k, at, u, 0, right, down, width, bendPerTwist)
+        if (patches) keepPatch(patches, k, at, u, 0, right, down, width, bendPerTwist)
       }
       ground[3 * k] = s
       ground[3 * k + 1] = z
@@ -152,27 +145,37 @@ export function walkRay(heightM: Float32Array, width: number, height: number, co
     ground[3 * k] = s
     ground[3 * k + 1] = z
     ground[3 * k + 2] = 0
-    if (patches) keep(patches, k, at, u, v, right, down, width, 0)
+    if (patches) keepPatch(patches, k, at, u, v, right, down, width, 0)
     k++
     break
   }
   out.count = k
 }
 
-/** Notes the patch of an entry from its first post in the raster's own order; `near` is the post the ray comes from, u and v grow along the ray. */
-function keep(
-  p: WalkedPatches,
-  k: number,
-  near: number,
-  u: number,
-  v: number,
+/** Writes the last place of a ray that ends inside the raster. */
+function endInside(
+  heightM: Float32Array,
+  width: number,
+  control: ControlPoints,
+  i: number,
   right: boolean,
   down: boolean,
-  width: number,
   bendPerTwist: number,
-): void {
-  p.post[k] = near - (right ? 0 : 1) - (down ? 0 : width)
-  p.u[k] = right ? u : 1 - u
-  p.v[k] = down ? v : 1 - v
-  p.bendPerTwist[k] = right === down ? bendPerTwist : -bendPerTwist
+  out: Walk,
+  k: number,
+): number {
+  const nearCol = right ? Math.ceil(control.col[i]) - 1 : Math.floor(control.col[i]) + 1
+  const nearRow = down ? Math.ceil(control.row[i]) - 1 : Math.floor(control.row[i]) + 1
+  const u = right ? control.col[i] - nearCol : nearCol - control.col[i]
+  const v = down ? control.row[i] - nearRow : nearRow - control.row[i]
+  const at = nearRow * width + nearCol
+  const toCol = right ? 1 : -1
+  const toRow = down ? width : -width
+  const top = heightM[at] * (1 - u) + heightM[at + toCol] * u
+  const low = heightM[at + toRow] * (1 - u) + heightM[at + toCol + toRow] * u
+  out.ground[3 * k] = control.distM[i]
+  out.ground[3 * k + 1] = top * (1 - v) + low * v
+  out.ground[3 * k + 2] = 0
+  if (out.patches) keepPatch(out.patches, k, at, u, v, right, down, width, bendPerTwist)
+  return k + 1
 }
