@@ -6,6 +6,7 @@ import { createStudyClient } from './compute/studyClient.ts'
 import { startSession } from './steps/index.ts'
 import './ui/theme.css'
 import './ui/controls.css'
+import './ui/fields.css'
 import './steps/steps.css'
 
 // the map's own code comes down while the session starts

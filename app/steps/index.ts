@@ -1,2 +1,2 @@
-export { Shell } from './Shell.tsx'
 export { type ReadGround, type Session, SessionProvider, startSession } from './session/index.ts'
+export { Shell } from './shell/Shell.tsx'

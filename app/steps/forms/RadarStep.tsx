@@ -1,5 +1,5 @@
-import { setField, valueAt } from '../document/index.ts'
-import { Caution, Check, CommitField, Mark } from '../ui/index.ts'
+import { setField, valueAt } from '../../document/index.ts'
+import { Caution, Check, CommitField, Mark } from '../../ui/index.ts'
 import {
   COSECANT_FIELD,
   ELEVATION_PATTERNS,
@@ -11,11 +11,11 @@ import {
   STC_KINDS,
   SUPPRESSION_FIELDS,
   SUPPRESSION_KINDS,
-} from '../words/index.ts'
+} from '../../words/index.ts'
+import { useDoc, useSession } from '../session/index.ts'
 import { DocChoice, DocNumber, DocNumbers, Group } from './fields.tsx'
 import { PairsField } from './PairsField.tsx'
 import { Remarks } from './Remarks.tsx'
-import { useDoc, useSession } from './session/index.ts'
 
 const HZ = { unit: 'Hz', size: 1 }
 

@@ -1,7 +1,7 @@
-import { Button } from '../ui/Button.tsx'
-import { formatDuration } from '../words/index.ts'
-import { useMemoExport } from './memo/useMemoExport.ts'
-import { useGround, useResults, useSession, useView } from './session/index.ts'
+import { Button } from '../../ui/Button.tsx'
+import { formatDuration } from '../../words/index.ts'
+import { useMemoExport } from '../memo/useMemoExport.ts'
+import { useGround, useResults, useSession, useView } from '../session/index.ts'
 
 /** Reading files, writing the memo, or computing: the one that holds the others up. */
 function useWork() {

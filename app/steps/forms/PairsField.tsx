@@ -1,9 +1,9 @@
-import { limitOf } from '../../core/index.ts'
-import { setField, valueAt } from '../document/index.ts'
-import { CommitField, fieldText, readNumber } from '../ui/index.ts'
-import { DB, type FieldWords } from '../words/index.ts'
+import { limitOf } from '../../../core/index.ts'
+import { setField, valueAt } from '../../document/index.ts'
+import { CommitField, fieldText, readNumber } from '../../ui/index.ts'
+import { DB, type FieldWords } from '../../words/index.ts'
+import { useDoc, useSession, useView } from '../session/index.ts'
 import { faceOf } from './fields.tsx'
-import { useDoc, useSession, useView } from './session/index.ts'
 
 /** A table of pairs, a row per line: first column in `first`, second in dB. */
 export function PairsField({ path, label, first, example }: { path: string; label: string; first: FieldWords['face']; example: string }) {

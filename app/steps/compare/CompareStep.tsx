@@ -1,10 +1,10 @@
 import { useLayoutEffect, useRef, useState } from 'react'
 import { Button as AriaButton } from 'react-aria-components'
-import { M_PER_NM, type OptionRef, type OptionResult } from '../../core/index.ts'
-import { inSightPctOf } from '../charts/index.ts'
-import { OptionsChart } from '../charts/printers.tsx'
-import { optionKey, sameOption, studyOptions } from '../document/index.ts'
-import { Button, Caution, FigureButton, Select, Value } from '../ui/index.ts'
+import { M_PER_NM, type OptionRef, type OptionResult } from '../../../core/index.ts'
+import { inSightPctOf } from '../../charts/index.ts'
+import { OptionsChart } from '../../charts/printers.tsx'
+import { optionKey, sameOption, studyOptions } from '../../document/index.ts'
+import { Button, Caution, FigureButton, Select, Value } from '../../ui/index.ts'
 import {
   cautionsFor,
   EMPTY_WORDS,
@@ -21,10 +21,10 @@ import {
   toFace,
   type UnitSystem,
   unitOf,
-} from '../words/index.ts'
+} from '../../words/index.ts'
+import { useDoc, useResults, useSession, useView } from '../session/index.ts'
 import { Explain } from './Explain.tsx'
 import { FLOOR_RANGE_M, floorNear, needOf } from './figuresOf.ts'
-import { useDoc, useResults, useSession, useView } from './session/index.ts'
 
 interface Column {
   readonly id: string

@@ -1,15 +1,15 @@
 import { lazy, Suspense, useMemo } from 'react'
-import type { LonLat } from '../../core/index.ts'
-import { addCandidate, hasStartingRadar, moveCandidate, optionKey, setMastHeights, settleOption } from '../document/index.ts'
-import type { MapCandidate, MapHub, MapNeed } from '../map/index.ts'
-import { EMPTY_WORDS } from '../words/index.ts'
-import { useDoc, useGround, useResults, useSession, useView } from './session/index.ts'
-import { settledOf } from './settled.ts'
+import type { LonLat } from '../../../core/index.ts'
+import { addCandidate, hasStartingRadar, moveCandidate, optionKey, setMastHeights, settleOption } from '../../document/index.ts'
+import type { MapCandidate, MapHub, MapNeed } from '../../map/index.ts'
+import { EMPTY_WORDS } from '../../words/index.ts'
+import { useDoc, useGround, useResults, useSession, useView } from '../session/index.ts'
+import { settledOf } from '../settled.ts'
 
 const LowerPanel = lazy(() => import('./LowerPanel.tsx').then((m) => ({ default: m.LowerPanel })))
-const MapPane = lazy(() => import('../map/index.ts').then((m) => ({ default: m.MapPane })))
-const Ruler = lazy(() => import('../map/index.ts').then((m) => ({ default: m.Ruler })))
-const HorizonStrip = lazy(() => import('../map/index.ts').then((m) => ({ default: m.HorizonStrip })))
+const MapPane = lazy(() => import('../../map/index.ts').then((m) => ({ default: m.MapPane })))
+const Ruler = lazy(() => import('../../map/index.ts').then((m) => ({ default: m.Ruler })))
+const HorizonStrip = lazy(() => import('../../map/index.ts').then((m) => ({ default: m.HorizonStrip })))
 
 const NO_CORNERS: readonly LonLat[] = []
 const NO_ROWS: never[] = []

@@ -1,8 +1,8 @@
-import { addNeed, type StepId } from '../document/index.ts'
-import { Button } from '../ui/Button.tsx'
-import { useMemoExport } from './memo/useMemoExport.ts'
-import { useDoc, useGround, useSession, useView } from './session/index.ts'
-import { useFilePicker } from './useFilePicker.tsx'
+import { addNeed, type StepId } from '../../document/index.ts'
+import { Button } from '../../ui/Button.tsx'
+import { useFilePicker } from '../forms/useFilePicker.tsx'
+import { useMemoExport } from '../memo/useMemoExport.ts'
+import { useDoc, useGround, useSession, useView } from '../session/index.ts'
 
 /** One primary action per step: what comes next. */
 export function PrimaryAction() {

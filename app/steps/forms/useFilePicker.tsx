@@ -1,6 +1,6 @@
 import { useRef } from 'react'
-import type { FileRole } from '../files/index.ts'
-import { useSession } from './session/index.ts'
+import type { FileRole } from '../../files/index.ts'
+import { useSession } from '../session/index.ts'
 
 /** A hidden file input and the function that opens it. `as` says what the picked files are. */
 export function useFilePicker(as?: FileRole, accept?: string) {

@@ -1,10 +1,10 @@
 import type { ReactNode } from 'react'
-import { type DefaultUsed, limitOf, type StudyDoc } from '../../core/index.ts'
-import { problemsOf, setField, valueAt } from '../document/index.ts'
-import { CommitField, Mark, NumberField, readNumbers, Select } from '../ui/index.ts'
-import { type FaceUnit, type FieldWords, fromFace, type UnitSystem, unitOf } from '../words/index.ts'
-import { useDoc, useSession, useView } from './session/index.ts'
-import { settledOf } from './settled.ts'
+import { type DefaultUsed, limitOf, type StudyDoc } from '../../../core/index.ts'
+import { problemsOf, setField, valueAt } from '../../document/index.ts'
+import { CommitField, Mark, NumberField, readNumbers, Select } from '../../ui/index.ts'
+import { type FaceUnit, type FieldWords, fromFace, type UnitSystem, unitOf } from '../../words/index.ts'
+import { useDoc, useSession, useView } from '../session/index.ts'
+import { settledOf } from '../settled.ts'
 
 const defaultAt = (doc: StudyDoc, path: string): DefaultUsed['value'] | undefined =>
   settledOf(doc)?.defaults.find((d) => d.path === path)?.value

@@ -1,7 +1,7 @@
-import type { TerrainFileDoc } from '../../core/index.ts'
-import { setField } from '../document/index.ts'
-import { takeOut } from '../files/index.ts'
-import { Button, Caution, CommitField, Notice, NumberField, ProgressBar, Select } from '../ui/index.ts'
+import type { TerrainFileDoc } from '../../../core/index.ts'
+import { setField } from '../../document/index.ts'
+import { takeOut } from '../../files/index.ts'
+import { Button, Caution, CommitField, Notice, NumberField, ProgressBar, Select } from '../../ui/index.ts'
 import {
   CAUTIONS,
   EMPTY_WORDS,
@@ -13,11 +13,11 @@ import {
   METRES,
   TERRAIN_CHOICES,
   textOf,
-} from '../words/index.ts'
+} from '../../words/index.ts'
+import { useDoc, useGround, useSession, useView } from '../session/index.ts'
 import { ClassTable } from './ClassTable.tsx'
 import { DocChoice, Group } from './fields.tsx'
 import { Remarks } from './Remarks.tsx'
-import { useDoc, useGround, useSession, useView } from './session/index.ts'
 import { useFilePicker } from './useFilePicker.tsx'
 
 /** Terrain, land cover, obstacles and roads: what was given, what was read, what has to be stated. */

@@ -1,11 +1,11 @@
-import { limitOf, type NeedDoc } from '../../core/index.ts'
-import { addNeed, removeNeed, setField } from '../document/index.ts'
-import { Button, Caution, Check, CommitField, Mark, NumberField, Select } from '../ui/index.ts'
-import { CAUTIONS, DB, DEG, EMPTY_WORDS, formatSetting, PLAIN, SWERLING_CASES, textOf } from '../words/index.ts'
+import { limitOf, type NeedDoc } from '../../../core/index.ts'
+import { addNeed, removeNeed, setField } from '../../document/index.ts'
+import { Button, Caution, Check, CommitField, Mark, NumberField, Select } from '../../ui/index.ts'
+import { CAUTIONS, DB, DEG, EMPTY_WORDS, formatSetting, PLAIN, SWERLING_CASES, textOf } from '../../words/index.ts'
+import { useDoc, useSession, useView } from '../session/index.ts'
+import { settledOf } from '../settled.ts'
 import { faceOf } from './fields.tsx'
 import { Remarks } from './Remarks.tsx'
-import { useDoc, useSession, useView } from './session/index.ts'
-import { settledOf } from './settled.ts'
 
 const HEIGHT_ABOVE = [
   { id: 'sea', words: 'above sea level' },

@@ -1,7 +1,7 @@
-import { setField } from '../document/index.ts'
-import { NumberField, Select } from '../ui/index.ts'
-import { METRES, TERRAIN_CHOICES } from '../words/index.ts'
-import { useDoc, useSession } from './session/index.ts'
+import { setField } from '../../document/index.ts'
+import { NumberField, Select } from '../../ui/index.ts'
+import { METRES, TERRAIN_CHOICES } from '../../words/index.ts'
+import { useDoc, useSession } from '../session/index.ts'
 
 const COVER_LIMIT = { what: 'cover height', unit: 'm', low: 0, high: 150 }
 

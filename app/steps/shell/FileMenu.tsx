@@ -1,6 +1,6 @@
 import { useRef } from 'react'
-import { Menu } from '../ui/index.ts'
-import { useSession } from './session/index.ts'
+import { Menu } from '../../ui/index.ts'
+import { useSession } from '../session/index.ts'
 
 /** Open, save, package, new, demo. */
 export function FileMenu() {

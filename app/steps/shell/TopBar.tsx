@@ -1,11 +1,11 @@
 import { lazy, Suspense } from 'react'
 import { useStore } from 'zustand'
-import { redo, renameStudy, undo, undoWords } from '../document/index.ts'
-import { Button } from '../ui/Button.tsx'
-import { CommitField } from '../ui/CommitField.tsx'
-import { UNIT_SYSTEM_NAMES } from '../words/index.ts'
+import { redo, renameStudy, undo, undoWords } from '../../document/index.ts'
+import { Button } from '../../ui/Button.tsx'
+import { CommitField } from '../../ui/CommitField.tsx'
+import { UNIT_SYSTEM_NAMES } from '../../words/index.ts'
+import { useDoc, useSave, useSession, useView } from '../session/index.ts'
 import { PrimaryAction } from './PrimaryAction.tsx'
-import { useDoc, useSave, useSession, useView } from './session/index.ts'
 import { RunLine } from './Working.tsx'
 
 const FileMenu = lazy(() => import('./FileMenu.tsx').then((m) => ({ default: m.FileMenu })))

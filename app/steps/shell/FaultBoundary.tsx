@@ -1,5 +1,5 @@
 import { Component, type ReactNode } from 'react'
-import { Notice } from '../ui/Marks.tsx'
+import { Notice } from '../../ui/Marks.tsx'
 
 /** A fault in one part of the page leaves the others, and the document, as they are. */
 export class FaultBoundary extends Component<{ children: ReactNode }, { fault: Error | null }> {

@@ -1,7 +1,7 @@
 import { Button } from 'react-aria-components'
-import { hasStartingRadar, optionKey, problemsOf, STEPS, type StepId, studyOptions } from '../document/index.ts'
-import { STEP_WORDS } from '../words/index.ts'
-import { useDoc, useGround, useResults, useSession, useView } from './session/index.ts'
+import { hasStartingRadar, optionKey, problemsOf, STEPS, type StepId, studyOptions } from '../../document/index.ts'
+import { STEP_WORDS } from '../../words/index.ts'
+import { useDoc, useGround, useResults, useSession, useView } from '../session/index.ts'
 import { Working } from './Working.tsx'
 
 interface StepState {

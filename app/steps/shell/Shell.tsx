@@ -1,26 +1,26 @@
 import { type ComponentType, lazy, Suspense, useEffect, useLayoutEffect, useState } from 'react'
 import { useStore } from 'zustand'
-import { redo, type StepId, undo } from '../document/index.ts'
-import { createMapHub } from '../map/hub.ts'
-import { Button } from '../ui/Button.tsx'
-import { Caution, Notice } from '../ui/Marks.tsx'
-import { cautionsForLayer, STEP_WORDS } from '../words/index.ts'
+import { redo, type StepId, undo } from '../../document/index.ts'
+import { createMapHub } from '../../map/hub.ts'
+import { Button } from '../../ui/Button.tsx'
+import { Caution, Notice } from '../../ui/Marks.tsx'
+import { cautionsForLayer, STEP_WORDS } from '../../words/index.ts'
+import { MemoAside } from '../memo/MemoAside.tsx'
+import { MapSlot, RulerSlot, StripSlot } from '../panes/MapSlot.tsx'
+import { useDoc, useSession, useView } from '../session/index.ts'
 import { FaultBoundary } from './FaultBoundary.tsx'
-import { MapSlot, RulerSlot, StripSlot } from './MapSlot.tsx'
-import { MemoAside } from './memo/MemoAside.tsx'
 import { StepIndex } from './StepIndex.tsx'
-import { useDoc, useSession, useView } from './session/index.ts'
 import { TopBar } from './TopBar.tsx'
 import { useDrop } from './useDrop.ts'
 
 /** Forms come down after the page stands: each on its first use. */
 const FORMS: Record<StepId, ComponentType> = {
-  ground: lazy(() => import('./GroundStep.tsx').then((m) => ({ default: m.GroundStep }))),
-  radar: lazy(() => import('./RadarStep.tsx').then((m) => ({ default: m.RadarStep }))),
-  need: lazy(() => import('./NeedStep.tsx').then((m) => ({ default: m.NeedStep }))),
-  candidates: lazy(() => import('./CandidatesStep.tsx').then((m) => ({ default: m.CandidatesStep }))),
-  compare: lazy(() => import('./CompareStep.tsx').then((m) => ({ default: m.CompareStep }))),
-  memo: lazy(() => import('./memo/MemoStep.tsx').then((m) => ({ default: m.MemoStep }))),
+  ground: lazy(() => import('../forms/GroundStep.tsx').then((m) => ({ default: m.GroundStep }))),
+  radar: lazy(() => import('../forms/RadarStep.tsx').then((m) => ({ default: m.RadarStep }))),
+  need: lazy(() => import('../forms/NeedStep.tsx').then((m) => ({ default: m.NeedStep }))),
+  candidates: lazy(() => import('../forms/CandidatesStep.tsx').then((m) => ({ default: m.CandidatesStep }))),
+  compare: lazy(() => import('../compare/CompareStep.tsx').then((m) => ({ default: m.CompareStep }))),
+  memo: lazy(() => import('../memo/MemoStep.tsx').then((m) => ({ default: m.MemoStep }))),
 }
 /** Steps whose form takes the whole sheet beside the ruler. */
 const WHOLE_SHEET: ReadonlySet<StepId> = new Set(['compare', 'memo'])

@@ -1,7 +1,7 @@
 import { useMemo } from 'react'
-import { Caution } from '../ui/Marks.tsx'
-import { useDoc } from './session/index.ts'
-import { remarksOf } from './settled.ts'
+import { Caution } from '../../ui/Marks.tsx'
+import { useDoc } from '../session/index.ts'
+import { remarksOf } from '../settled.ts'
 
 /** The study's own remarks that concern a step: those whose key path begins with one of `about`. */
 export function Remarks({ about }: { about: readonly string[] }) {

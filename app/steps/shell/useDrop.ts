@@ -1,5 +1,5 @@
 import { useEffect, useState } from 'react'
-import { useSession } from './session/index.ts'
+import { useSession } from '../session/index.ts'
 
 /** Files dropped anywhere on the page are taken in; true while some are held over it. */
 export function useDrop(): boolean {

@@ -1,6 +1,6 @@
 import { useState } from 'react'
 import { Button as AriaButton } from 'react-aria-components'
-import { type CandidateDoc, limitOf } from '../../core/index.ts'
+import { type CandidateDoc, limitOf } from '../../../core/index.ts'
 import {
   addCandidate,
   moveCandidate,
@@ -9,11 +9,11 @@ import {
   sameOption,
   setCandidateField,
   setMastHeights,
-} from '../document/index.ts'
-import { Button, Caution, CommitField, Notice, NumberField, PositionField, readNumbers } from '../ui/index.ts'
-import { CAUTIONS, DEG, EMPTY_WORDS, formatHeight, formatPosition, METRES, textOf } from '../words/index.ts'
-import { useDoc, useGround, useSession, useView } from './session/index.ts'
-import { settledOf } from './settled.ts'
+} from '../../document/index.ts'
+import { Button, Caution, CommitField, Notice, NumberField, PositionField, readNumbers } from '../../ui/index.ts'
+import { CAUTIONS, DEG, EMPTY_WORDS, formatHeight, formatPosition, METRES, textOf } from '../../words/index.ts'
+import { useDoc, useGround, useSession, useView } from '../session/index.ts'
+import { settledOf } from '../settled.ts'
 
 /** Places where the radar could stand, with their mast heights. */
 export function CandidatesStep() {

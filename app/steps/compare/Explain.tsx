@@ -1,8 +1,8 @@
-import type { OptionResult } from '../../core/index.ts'
-import { optionKey } from '../document/index.ts'
-import { Button, Value } from '../ui/index.ts'
-import { figureWords, formatAzimuth, formatMast, formatPlaceRange, needKey, textOf } from '../words/index.ts'
-import { useResults, useSession, useView } from './session/index.ts'
+import type { OptionResult } from '../../../core/index.ts'
+import { optionKey } from '../../document/index.ts'
+import { Button, Value } from '../../ui/index.ts'
+import { figureWords, formatAzimuth, formatMast, formatPlaceRange, needKey, textOf } from '../../words/index.ts'
+import { useResults, useSession, useView } from '../session/index.ts'
 
 /** What a figure is, what sets it, and the way to where it comes from. */
 export function Explain() {

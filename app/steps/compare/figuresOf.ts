@@ -1,4 +1,4 @@
-import { type FloorFigure, M_PER_NM, type NeedFigure, type OptionResult } from '../../core/index.ts'
+import { type FloorFigure, M_PER_NM, type NeedFigure, type OptionResult } from '../../../core/index.ts'
 
 /** Ground range of the floor that stands for an option in comparisons. */
 export const FLOOR_RANGE_M = 20 * M_PER_NM

@@ -1,13 +1,13 @@
 import { useEffect, useLayoutEffect, useRef, useState } from 'react'
-import type { CellLedger, Profile } from '../../core/index.ts'
-import { terrainChart } from '../charts/index.ts'
-import { moveCursor, TerrainChart } from '../charts/printers.tsx'
-import type { MapHub } from '../map/index.ts'
-import { Notice } from '../ui/index.ts'
-import { formatAzimuth, formatMast, textOf } from '../words/index.ts'
-import { Explain } from './Explain.tsx'
+import type { CellLedger, Profile } from '../../../core/index.ts'
+import { terrainChart } from '../../charts/index.ts'
+import { moveCursor, TerrainChart } from '../../charts/printers.tsx'
+import type { MapHub } from '../../map/index.ts'
+import { Notice } from '../../ui/index.ts'
+import { formatAzimuth, formatMast, textOf } from '../../words/index.ts'
+import { Explain } from '../compare/Explain.tsx'
+import { sentenceOf, useResults, useSession, useView } from '../session/index.ts'
 import { Ledger } from './Ledger.tsx'
-import { sentenceOf, useResults, useSession, useView } from './session/index.ts'
 
 /** What stands over the lower half of the map: the terrain profile of an azimuth, the ledger of a cell, or what a figure means. */
 export function LowerPanel({ hub }: { hub: MapHub }) {

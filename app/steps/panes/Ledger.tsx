@@ -1,7 +1,7 @@
-import type { CellLedger, LedgerLine } from '../../core/index.ts'
-import { Caution, Mark } from '../ui/index.ts'
-import { cautionsFor, formatAzimuth, formatMast, formatNumber, formatPlaceRange, NO_VALUE, textOf } from '../words/index.ts'
-import { useView } from './session/index.ts'
+import type { CellLedger, LedgerLine } from '../../../core/index.ts'
+import { Caution, Mark } from '../../ui/index.ts'
+import { cautionsFor, formatAzimuth, formatMast, formatNumber, formatPlaceRange, NO_VALUE, textOf } from '../../words/index.ts'
+import { useView } from '../session/index.ts'
 
 const SIGN = { start: '', add: '+', subtract: '−', info: '' } as const
 
