@@ -64,7 +64,7 @@ describe('the memo', () => {
     expect(files).toContain(input.files[0].sha256)
   })
   it('marks what is default, from memory and outside a model beside the figures', () => {
-    expect(textOfTable(tableOf(model, 'need', 'needs'))).toMatch(/\d dB \(Pd 0\.80, case 1\)/)
+    expect(textOfTable(tableOf(model, 'need', 'needs'))).toMatch(/\d dB,\nPd 0\.80, case 1/)
     const figures = textOfTable(tableOf(model, 'option-A-24-1.5', 'figures'))
     expect(figures).toMatch(/Low-angle land table \|.*from memory/)
     expect(figures).toMatch(/Depression over 8°.*outside model/)

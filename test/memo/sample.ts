@@ -2,11 +2,13 @@
 import {
   type Figures,
   type HorizonRow,
+  type NeedFigure,
   type OptionResult,
   type Profile,
   type SettledStudy,
   type StudyDoc,
   settle,
+  suppressionBy,
 } from '../../core/index.ts'
 
 export const sampleDoc: StudyDoc = {
@@ -75,6 +77,39 @@ export function sampleRows(screen: number, stepDeg: number): HorizonRow[] {
   return rows
 }
 
+/** What detection adds to a need of which `pct` is in sight. */
+function physics(pct: number): Omit<NeedFigure, 'needId' | 'name' | 'must' | 'requiredPct' | 'inSightPct' | 'suppression' | 'notAssessed'> {
+  const usablePct = Math.max(0, pct - 9)
+  return {
+    measure: 'area',
+    amount: 0,
+    areaKm2: 0,
+    detectablePct: Math.max(0, pct - 2),
+    usablePct,
+    inSightKm2: 0,
+    detectableKm2: 0,
+    usableKm2: 0,
+    atLowK: { k: 1, inSightPct: Math.max(0, pct - 1), detectablePct: Math.max(0, pct - 3), usablePct: Math.max(0, pct - 11) },
+    met: false,
+    passes: false,
+    required: sampleStudy.needs[0].required,
+    marginalKm2: 0,
+    unknownKm2: 0,
+    groundAboveKm2: 0,
+    worstMarginM: null,
+    tenthMarginM: null,
+    worst: null,
+    signal: { worstDb: -14.2, tenthDb: 0.6, worst: null },
+    losses: [
+      { cause: 'masked', pct: 100 - pct, amount: 48.7 * (100 - pct) },
+      { cause: 'clutter', pct: pct - usablePct, amount: 48.7 * (pct - usablePct) },
+    ],
+    coneOfSilence: [{ levelM: 250, radiusM: 410 }],
+    fixes: null,
+    track: null,
+  }
+}
+
 function sampleFigures(siteGroundM: number, heightM: number, screen: number, seen: number): Figures {
   const rows = sampleRows(screen, 2)
   const rings = Array.from({ length: 6 }, (_, i) => {
@@ -102,6 +137,8 @@ function sampleFigures(siteGroundM: number, heightM: number, screen: number, see
     p99Db: 44.7 + heightM / 5,
     availableDb: 38,
     shortKm2: 41 + 6 * heightM,
+    shortP90Db: 0,
+    shortP99Db: 6.7 + heightM / 5,
     maskedPct: 100 - pct,
     tooWeakPct: 3.2,
   }
@@ -113,6 +150,9 @@ function sampleFigures(siteGroundM: number, heightM: number, screen: number, see
     maskedKm2: all - sight - 240,
     unknownKm2: 240,
     horizon: { medianDeg: -0.098, p90Deg: 0.214, highest, rows },
+    lowK: null,
+    floorsLowK: null,
+    suppressionBy: suppressionBy(sampleStudy.radar, sampleStudy.atmosphere, []),
     floors: [5, 10, 20, 40, 60].map((nm) => ({
       rangeM: nm * 1852,
       bestM: nm === 60 ? null : 20 + 1.2 * nm * nm,
@@ -127,6 +167,7 @@ function sampleFigures(siteGroundM: number, heightM: number, screen: number, see
     cnrPeakDb: 71.3,
     needs: [
       {
+        ...physics(pct),
         needId: 'n1',
         name: 'Ferry approach',
         must: true,
@@ -144,6 +185,7 @@ function sampleFigures(siteGroundM: number, heightM: number, screen: number, see
         notAssessed: null,
       },
       {
+        ...physics(pct - 22),
         needId: 'n2',
         name: 'Low flyers, east',
         must: false,
@@ -161,6 +203,7 @@ function sampleFigures(siteGroundM: number, heightM: number, screen: number, see
         notAssessed: null,
       },
       {
+        ...physics(0),
         needId: 'n3',
         name: 'Harbour fixes',
         must: true,
@@ -189,7 +232,7 @@ function sampleFigures(siteGroundM: number, heightM: number, screen: number, see
 
 const result = (candidate: string, heightM: number, groundM: number, screen: number, seen: number): OptionResult => ({
   ref: { candidate, heightM, tiltDeg: 1.5 },
-  keys: { site: candidate, mask: `${candidate}${heightM}`, clutter: `${candidate}${heightM}`, needs: 'n' },
+  keys: { site: candidate, mask: `${candidate}${heightM}`, lowK: '', clutter: `${candidate}${heightM}`, needs: 'n' },
   figures: sampleFigures(groundM, heightM, screen, seen),
   held: true,
 })

@@ -26,7 +26,7 @@ export function buildMemo(input: MemoInput): MemoModel {
   for (const r of ordered)
     add(`option-${r.ref.candidate}-${r.ref.heightM}-${r.ref.tiltDeg}`, optionTitle(input, r.ref), optionBlocks(input, r, figure), {
       option: r.ref,
-      finding: optionFinding(input, r),
+      finding: optionFinding(input, r).lead,
       newPage: true,
     })
   add('comparison', 'Comparison', comparisonBlocks(input, figure), { newPage: true })

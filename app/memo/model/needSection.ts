@@ -12,8 +12,8 @@ import {
   type UnitSystem,
   withMetric,
 } from '../../words/index.ts'
-import { capital, inSentence, value } from './cells.ts'
-import type { Block, Cell, MemoInput, Value } from './types.ts'
+import { capital, inSentence } from './cells.ts'
+import type { Block, Cell, MemoInput } from './types.ts'
 
 /** What must be seen, as stated. */
 export function needBlocks(input: MemoInput): Block[] {
@@ -59,9 +59,11 @@ export function needBlocks(input: MemoInput): Block[] {
   ]
 }
 /** The ratio and what it comes from; a worked-out one is rounded up. */
-function ratioCell(n: SettledNeed): Value {
+function ratioCell(n: SettledNeed): Cell {
+  const ratio = textOf(formatDbUp(n.requiredRatioDb, 'dB', 0.1))
   const from = n.requiredRatioBy === 'stated' ? 'stated' : `Pd ${formatPd(n.pd).value}, case ${n.swerling}`
-  return value(formatDbUp(n.requiredRatioDb, 'dB', 0.1), { also: from, ...(n.requiredRatioMark ? { mark: n.requiredRatioMark } : {}) })
+  const text = `${ratio},\n${from}`
+  return n.requiredRatioMark ? { text, mark: n.requiredRatioMark } : text
 }
 function heightWords(n: SettledNeed, system: UnitSystem): string {
   if (n.levelsM.length === 0) return '–'
@@ -69,10 +71,10 @@ function heightWords(n: SettledNeed, system: UnitSystem): string {
   const low = n.levelsM[0]
   const high = n.levelsM[n.levelsM.length - 1]
   const above = n.heightAbove === 'sea' ? 'MSL' : 'above ground'
-  return low === high ? `${words(low)} ${above}` : `${words(low)} to ${words(high)} ${above}, ${n.levelsM.length} levels`
+  return low === high ? `${words(low)}\n${above}` : `${words(low)} to ${words(high)}\n${above}, ${n.levelsM.length} levels`
 }
 function rangeWords(n: SettledNeed, system: UnitSystem): string {
   const to = withMetric((s) => formatRange(n.toRangeM, s), system)
   const reach = n.fromRangeM > 0 ? `${withMetric((s) => formatRange(n.fromRangeM, s), system)} to ${to}` : `to ${to}`
-  return `${reach}, ${formatSector(n.sectorDeg)}`
+  return `${reach},\n${formatSector(n.sectorDeg)}`
 }

@@ -22,7 +22,7 @@ import {
   unitOf,
   withMetric,
 } from '../../words/index.ts'
-import { bare, bothUnits, capital, dual, dualBare, NO_HEADS, optionName, someInWords, value } from './cells.ts'
+import { bare, bothUnits, capital, dual, dualBare, NO_HEADS, optionName, value } from './cells.ts'
 import { mapDrawing } from './mapFigure.ts'
 import { reaches } from './ranking.ts'
 import { hasTilts } from './summarySection.ts'
@@ -32,7 +32,11 @@ const MAP_PT = 256
 
 /** One option: map and figures, horizon, needs, floors and rings, with their cautions. `figure` numbers figures through the memo. */
 export function optionBlocks(input: MemoInput, r: OptionResult, figure: () => number): Block[] {
-  const blocks: Block[] = [{ kind: 'paragraph', role: 'lead', text: optionFinding(input, r) }]
+  const { lead, rest } = optionFinding(input, r)
+  const blocks: Block[] = [
+    { kind: 'paragraph', role: 'lead', text: lead },
+    { kind: 'paragraph', text: rest },
+  ]
   const map = input.maps.find((m) => sameRef(m.ref, r.ref))
   const figures = figureTable(input, r)
   if (map) {
@@ -77,24 +81,31 @@ const suppressionCautions = (input: MemoInput): string[] => {
   return [...(workedOut ? [CAUTIONS.requiredRatio] : []), ...landCaution(input)]
 }
 
-/** What stands at the head of an option and at the top of the app's memo column. */
-export function optionFinding(input: MemoInput, r: OptionResult): string {
+/** The finding at the head of an option, and of the app's memo column; `rest` follows it in lighter setting. */
+export function optionFinding(input: MemoInput, r: OptionResult): { lead: string; rest: string } {
+  const { system } = input
   const place = input.study.candidates.find((c) => c.id === r.ref.candidate)?.name ?? r.ref.candidate
-  const over = withMetric((s) => formatAreaUp(r.figures.clutterOverKm2.over40, s), input.system)
-  const assessed = r.figures.needs.filter((n) => n.notAssessed === null)
-  const from = `From ${place}, ${optionName(r.ref, hasTilts(input)).replace(/^\S+ at /, '')} of mast`
-  if (assessed.length === 0)
-    return `${from}: ${withMetric((s) => formatAreaDown(r.figures.groundInSightKm2, s), input.system)} of ground in sight, ${over} of it with C/N over 40\u202fdB.`
-  const [first, ...others] = assessed
-  const words = (n: NeedFigure): string =>
-    `${textOf(formatMetPct(n.inSightPct))} of ${n.name}${reaches(n) ? '' : ` against ${textOf(formatMetPct(n.requiredPct))} asked`}`
-  const worst =
-    first.worst && first.worstMarginM !== null && first.worstMarginM < 0
-      ? ` Its worst place lies ${withMetric((s) => formatBand(-(first.worstMarginM as number), s), input.system)} under the floor at azimuth ${textOf(formatAzimuth(first.worst.azimuthDeg, 1))}, ${textOf(formatPlaceRange(first.worst.rangeM, input.system))}, behind ${first.worst.obstacle}.`
-      : ''
-  const rest = others.length > 0 ? `, and ${someInWords(others.map(words), 2)}` : ''
-  return `${from}: ${words(first)} in sight${rest}; ${over} of ground stand over 40\u202fdB.${worst}`
+  const mast = optionName(r.ref, hasTilts(input)).replace(/^\S+ at /, '')
+  const over = `${withMetric((s) => formatAreaUp(r.figures.clutterOverKm2.over40, s), system)} of ground stand over 40\u202fdB.`
+  const [first, ...others] = r.figures.needs.filter((n) => n.notAssessed === null)
+  if (!first) {
+    const seen = withMetric((s) => formatAreaDown(r.figures.groundInSightKm2, s), system)
+    return { lead: `From ${place} a mast of ${mast} brings ${seen} of ground into sight.`, rest: capital(over) }
+  }
+  const asked = (n: NeedFigure): string => (reaches(n) ? ', as asked' : `, against ${textOf(formatMetPct(n.requiredPct))} asked`)
+  const lead = `From ${place} a mast of ${mast} brings ${textOf(formatMetPct(first.inSightPct))} of ${first.name} into sight${asked(first)}.`
+  const rest = [over]
+  const words = (n: NeedFigure): string => `${n.name} ${textOf(formatMetPct(n.inSightPct))}${asked(n)}`
+  if (others.length > 0) rest.push(`In sight of the other needs: ${others.slice(0, MOST_OTHERS).map(words).join('; ')}.`)
+  if (first.worst && first.worstMarginM !== null && first.worstMarginM < 0) {
+    const under = withMetric((s) => formatBand(-(first.worstMarginM as number), s), system)
+    const where = `azimuth ${textOf(formatAzimuth(first.worst.azimuthDeg, 1))}, ${textOf(formatPlaceRange(first.worst.rangeM, system))}`
+    rest.push(`The worst place of ${first.name} lies ${under} under the floor, at ${where}, behind ${first.worst.obstacle}.`)
+  }
+  return { lead, rest: rest.join(' ') }
 }
+/** Further needs named in the sentence; all stand in the tables. */
+const MOST_OTHERS = 2
 function mapCaption(input: MemoInput, r: OptionResult): string {
   const peak = textOf(formatDbUp(r.figures.cnrPeakDb))
   const over = withMetric((s) => formatAreaUp(r.figures.clutterOverKm2.over60, s), input.system)

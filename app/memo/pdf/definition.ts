@@ -117,9 +117,10 @@ function sectionContent(section: Section): Content[] {
     outline: true,
     outlineText: `${section.number}  ${section.title}`,
   }
-  const [first, second] = section.blocks
-  const kept = isLong(first) ? [] : first.kind === 'paragraph' && second && !isLong(second) ? [first, second] : [first]
-  if (section.blocks[kept.length]?.kind === 'caution') kept.push(section.blocks[kept.length])
+  // The paragraphs that open the section, the block they lead to, and its caution.
+  const opening = section.blocks.findIndex((b) => b.kind !== 'paragraph')
+  const reach = opening < 0 ? section.blocks.length : isLong(section.blocks[opening]) ? opening : opening + 1
+  const kept = section.blocks.slice(0, section.blocks[reach]?.kind === 'caution' ? reach + 1 : reach)
   const after = section.blocks.slice(kept.length)
   const head: Content = {
     stack: [heading, ...kept.map(blockContent)],
