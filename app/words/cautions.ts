@@ -62,6 +62,10 @@ const LAYER_TOPIC: Record<LayerId, CautionTopic> = {
   'clutter-strength': 'clutter',
   'clutter-to-noise': 'clutter',
   'suppression-needed': 'suppression',
+  usable: 'suppression',
+  'probability-of-detection': 'suppression',
+  'signal-margin': 'suppression',
+  'cause-of-loss': 'suppression',
 }
 /** Sentences to stand under a number of this topic. */
 export const cautionsFor = (topic: CautionTopic): readonly string[] => CAUTIONS_OF[topic].map((id) => CAUTIONS[id])

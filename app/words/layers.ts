@@ -1,4 +1,4 @@
-import type { LayerId, LayerInfo } from '../../core/index.ts'
+import type { LayerId, LayerInfo, LossCause } from '../../core/index.ts'
 
 /** What the map's sentence and legend say of a layer. Its ramp and rounding side are core's (`LayerInfo`). */
 export interface LayerWords {
@@ -73,11 +73,59 @@ export const LAYER_WORDS: Record<LayerId, LayerWords> = {
     note: 'bare: none needed or too weak · hatched: masked · land table from memory',
     meaning: 'Improvement factor that lets the target of the need stand above mean clutter and noise',
   },
+  usable: {
+    short: 'in sight, detectable, usable',
+    title: 'In sight, detectable, usable',
+    of: 'for the need on show',
+    ends: ['in sight', 'usable'],
+    note: 'bare: masked or outside the need · land table from memory',
+    meaning:
+      'Where the target of the need is in sight, where its echo stands over noise, and where over clutter and noise after suppression',
+  },
+  'probability-of-detection': {
+    short: 'probability of detection',
+    title: 'Probability of detection',
+    of: 'one scan, for the need on show',
+    ends: ['low', 'high'],
+    note: 'bare: unknown or outside the need · land table from memory',
+    meaning: 'Chance that one scan detects the target of the need over mean clutter and noise, at its worst level',
+  },
+  'signal-margin': {
+    short: 'signal margin',
+    title: 'Signal margin',
+    of: 'dB over the required ratio',
+    ends: ['short', 'ample'],
+    note: 'bare: target masked or outside the need · land table from memory',
+    meaning: 'Echo over residue and noise, less the ratio the need asks for, at its worst level',
+  },
+  'cause-of-loss': {
+    short: 'cause of loss',
+    title: 'Cause of loss',
+    of: 'for the need on show',
+    ends: null,
+    note: 'bare: usable or outside the need · land table from memory',
+    meaning: 'First cause that keeps the target of the need from being usable',
+  },
+}
+/** Causes of loss by id, as the layer, the probe and the figures name them. */
+export const LOSS_WORDS: Record<LossCause, string> = {
+  unknown: 'unknown ground',
+  'out-of-range': 'out of range',
+  masked: 'masked',
+  marginal: 'marginal',
+  'short-range-sensitivity': 'short-range sensitivity',
+  'above-beam': 'above the beam',
+  'below-beam': 'below the beam',
+  clutter: 'clutter',
+  'blind-speed': 'blind speed',
+  'too-weak': 'too weak',
+  several: 'several causes together',
 }
 /** The map's families, in the words of its sentence. */
 export const FAMILY_WORDS: Record<LayerInfo['family'], string> = {
   hidden: 'what is hidden',
   seen: 'what is seen',
   echo: 'what comes back',
+  lost: 'what is lost',
   takes: 'what it takes',
 }

@@ -2,11 +2,13 @@ import type { LayerId, Probe } from '../../core/index.ts'
 import {
   formatAngle,
   formatAzimuth,
+  formatDbDown,
   formatDbUp,
   formatFloor,
   formatHeight,
   formatHeightToSee,
   formatNumber,
+  formatPd,
   formatPlaceRange,
   type Quantity,
   textOf,
@@ -79,7 +81,13 @@ export function probeValue(layer: LayerId, value: number | null, units: UnitSyst
       return formatHeightToSee(value)
     case 'depression':
       return formatAngle(value)
+    case 'probability-of-detection':
+      return formatPd(value)
+    case 'signal-margin':
+      return formatDbDown(value)
     case 'masked':
+    case 'usable':
+    case 'cause-of-loss':
       return { value: '', unit: '' }
   }
 }

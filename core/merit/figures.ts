@@ -1,21 +1,39 @@
 import { geodesicInverse } from '../geodesy/index.ts'
 import { sightPoint } from '../masking/index.ts'
-import type { SettledNeed } from '../study/index.ts'
-import { floorFigures, groundSums, RING_WIDTH_M } from './groundFigures.ts'
-import { cellsOfNeed, needFigure } from './needFigure.ts'
+import { canonicalJson, type SettledNeed } from '../study/index.ts'
+import { flatFigures } from './flatFigures.ts'
+import { floorFigures, type GroundSums, groundSums, RING_WIDTH_M } from './groundFigures.ts'
+import { needFigure } from './needs/needFigure.ts'
 import { antennaM, type OptionCells } from './optionCells.ts'
 import { percentile } from './percentile.ts'
-import type { Figures, NeedFigure } from './types.ts'
+import { overloadNotes } from './signal/receiverLimits.ts'
+import type { Figures, FloorFigure, NeedFigure } from './types.ts'
 
-/** Figures of merit of one option. `marks` are the words that must stand beside its clutter figures. */
+/** What of an option's figures does not hang on its needs, kept with the polar grids it was made from. */
+interface Kept {
+  sums: GroundSums | null
+  notes: Figures['marks'] | null
+  readonly needs: Map<string, NeedFigure>
+}
+const keptByClutter = new WeakMap<object, Kept>()
+interface KeptSight {
+  readonly floors: FloorFigure[]
+  readonly obstacles: string[]
+}
+const keptByMask = new WeakMap<object, KeptSight>()
+
+/** Figures of merit of one option. `marks` are the words that must stand beside its clutter figures. A change of need leaves the rest as it was. */
 export function optionFigures(o: OptionCells, needs: readonly SettledNeed[], marks: Figures['marks']): Figures {
-  const sums = groundSums(o)
+  const kept = keptOf(o)
+  kept.sums ??= groundSums(o)
+  kept.notes ??= overloadNotes(o)
+  const { sums } = kept
+  const sight = sightOf(o)
   const elevations = o.mask.horizon.map((h) => h.elevationDeg)
   const highest = o.mask.horizon.reduce<Figures['horizon']['highest']>(
     (best, row) => (Number.isFinite(row.elevationDeg) && (!best || row.elevationDeg > best.elevationDeg) ? row : best),
     null,
   )
-  const needFigures = needs.map((need) => needFigure(o, need, cellsOfNeed(o, need)))
   const figures: Omit<Figures, 'flat'> = {
     siteGroundM: o.site.siteGroundM,
     antennaM: antennaM(o),
@@ -23,16 +41,61 @@ export function optionFigures(o: OptionCells, needs: readonly SettledNeed[], mar
     maskedKm2: sums.maskedKm2,
     unknownKm2: sums.unknownKm2,
     horizon: { medianDeg: percentile(elevations, 0.5), p90Deg: percentile(elevations, 0.9), highest, rows: o.mask.horizon },
-    floors: floorFigures(o),
+    floors: sight.floors,
+    lowK: o.lowK?.k ?? null,
+    floorsLowK: o.lowK?.floors ?? null,
+    suppressionBy: o.suppression,
     rings: sums.rings,
     ringWidthM: RING_WIDTH_M,
     clutterOverKm2: sums.over,
     cnrPeakDb: sums.peakDb,
-    needs: needFigures,
-    obstaclesInSight: obstaclesInSight(o),
-    marks,
+    needs: needFigures(o, needs),
+    obstaclesInSight: sight.obstacles,
+    marks: [...marks, ...o.suppression.notes, ...kept.notes],
   }
-  return { ...figures, flat: flatten(figures) }
+  return { ...figures, flat: flatFigures(figures) }
+}
+
+function keptOf(o: OptionCells): Kept {
+  let kept = keptByClutter.get(o.clutter)
+  if (!kept) {
+    kept = { sums: null, notes: null, needs: new Map() }
+    keptByClutter.set(o.clutter, kept)
+  }
+  return kept
+}
+
+/** Figures of needs; those already worked out for the same cells, need and radar are taken again. */
+export function needFigures(o: OptionCells, needs: readonly SettledNeed[]): NeedFigure[] {
+  const { needs: known } = keptOf(o)
+  const rest = canonicalJson([o.radar, o.suppression.rows, o.lowK?.key ?? null])
+  const wanted = new Map<string, NeedFigure>()
+  const out = needs.map((need) => {
+    const places = o.places.find((p) => p.needId === need.id)
+    const key = `${canonicalJson(need)}|${rest}|${places ? serialOf(places) : ''}`
+    const figure = known.get(key) ?? needFigure(o, need)
+    wanted.set(key, figure)
+    return figure
+  })
+  known.clear()
+  for (const [key, figure] of wanted) known.set(key, figure)
+  return out
+}
+const serials = new WeakMap<object, number>()
+let nextSerial = 1
+function serialOf(places: object): number {
+  const known = serials.get(places) ?? nextSerial++
+  serials.set(places, known)
+  return known
+}
+
+function sightOf(o: OptionCells): KeptSight {
+  let kept = keptByMask.get(o.mask)
+  if (!kept) {
+    kept = { floors: floorFigures(o.mask, o.site.grid), obstacles: obstaclesInSight(o) }
+    keptByMask.set(o.mask, kept)
+  }
+  return kept
 }
 
 /** Names of the obstacles whose top is in sight, each on its own ray, nearest first. */
@@ -49,49 +112,3 @@ function obstaclesInSight(o: OptionCells): string[] {
   }
   return seen.sort((a, b) => a.rangeM - b.rangeM).map((s) => s.name)
 }
-
-function flatten(f: Omit<Figures, 'flat'>): Record<string, number | null> {
-  const flat: Record<string, number | null> = {
-    site_ground_m: f.siteGroundM,
-    antenna_m: f.antennaM,
-    ground_in_sight_km2: f.groundInSightKm2,
-    masked_km2: f.maskedKm2,
-    unknown_km2: f.unknownKm2,
-    horizon_median_deg: f.horizon.medianDeg,
-    horizon_p90_deg: f.horizon.p90Deg,
-    horizon_highest_deg: f.horizon.highest?.elevationDeg ?? null,
-    clutter_over_0_km2: f.clutterOverKm2.over0,
-    clutter_over_20_km2: f.clutterOverKm2.over20,
-    clutter_over_40_km2: f.clutterOverKm2.over40,
-    clutter_over_60_km2: f.clutterOverKm2.over60,
-    clutter_to_noise_peak_db: f.cnrPeakDb,
-  }
-  for (const floor of f.floors) {
-    const nm = Math.round(floor.rangeM / 1852)
-    flat[`floor_${nm}nm_best_m`] = floor.bestM
-    flat[`floor_${nm}nm_median_m`] = floor.medianM
-    flat[`floor_${nm}nm_worst_m`] = floor.worstM
-  }
-  for (const need of f.needs) for (const [key, value] of Object.entries(needFlat(need))) flat[`need_${need.needId}_${key}`] = value
-  return flat
-}
-
-const needFlat = (n: NeedFigure): Record<string, number | null> =>
-  n.notAssessed
-    ? {}
-    : {
-        area_km2: n.areaKm2,
-        in_sight_pct: n.inSightPct,
-        in_sight_km2: n.inSightKm2,
-        marginal_km2: n.marginalKm2,
-        unknown_km2: n.unknownKm2,
-        ground_above_km2: n.groundAboveKm2,
-        worst_margin_m: n.worstMarginM,
-        tenth_margin_m: n.tenthMarginM,
-        suppression_needed_50_db: n.suppression.p50Db,
-        suppression_needed_90_db: n.suppression.p90Db,
-        suppression_needed_99_db: n.suppression.p99Db,
-        suppression_available_db: n.suppression.availableDb,
-        suppression_short_km2: n.suppression.shortKm2,
-        too_weak_pct: n.suppression.tooWeakPct,
-      }

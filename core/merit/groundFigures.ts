@@ -1,4 +1,5 @@
-import { CELL, cellAreasM2 } from '../polar/index.ts'
+import type { SightCells } from '../masking/index.ts'
+import { CELL, cellAreasM2, type PolarShape } from '../polar/index.ts'
 import { fromDb, M_PER_NM, toDb } from '../units/index.ts'
 import type { OptionCells } from './optionCells.ts'
 import { percentile } from './percentile.ts'
@@ -97,8 +98,8 @@ function ratioTable(): Float64Array {
 const ratioOf = (t: Float64Array, db: number): number => t[Math.min(5000, Math.max(0, Math.round((db + 100) * 20)))]
 
 /** Coverage floor at 5, 10, 20, 40 and 60 NM, as far as the grid goes: best, median and worst azimuth. */
-export function floorFigures(o: OptionCells): FloorFigure[] {
-  const { azimuths, ranges, rangeStepM, azimuthStepDeg } = o.site.grid
+export function floorFigures(mask: Pick<SightCells, 'floorM' | 'floorBandM'>, grid: PolarShape): FloorFigure[] {
+  const { azimuths, ranges, rangeStepM, azimuthStepDeg } = grid
   const out: FloorFigure[] = []
   for (const nm of FLOOR_RANGES_NM) {
     const rangeM = nm * M_PER_NM
@@ -107,18 +108,18 @@ export function floorFigures(o: OptionCells): FloorFigure[] {
     const floors: number[] = []
     let worst = -1
     for (let i = 0; i < azimuths; i++) {
-      const v = o.mask.floorM[i * ranges + j]
-      if (v !== v) continue
+      const v = mask.floorM[i * ranges + j]
+      if (Number.isNaN(v)) continue
       floors.push(v)
-      if (worst < 0 || v > o.mask.floorM[worst * ranges + j]) worst = i
+      if (worst < 0 || v > mask.floorM[worst * ranges + j]) worst = i
     }
     out.push({
       rangeM,
       bestM: percentile(floors, 0),
       medianM: percentile(floors, 0.5),
-      worstM: worst < 0 ? null : o.mask.floorM[worst * ranges + j],
+      worstM: worst < 0 ? null : mask.floorM[worst * ranges + j],
       worstAzimuthDeg: worst < 0 ? null : worst * azimuthStepDeg,
-      worstBandM: worst < 0 ? null : o.mask.floorBandM[worst * ranges + j],
+      worstBandM: worst < 0 ? null : mask.floorBandM[worst * ranges + j],
     })
   }
   return out

@@ -1,6 +1,6 @@
 import type { SettledNeed } from '../study/index.ts'
 import { groundSums } from './groundFigures.ts'
-import { cellsOfNeed, needFigure } from './needFigure.ts'
+import { needFigure } from './needs/needFigure.ts'
 import type { OptionCells } from './optionCells.ts'
 import type { Ladder } from './types.ts'
 
@@ -8,34 +8,60 @@ import type { Ladder } from './types.ts'
 export interface Rung {
   readonly heightM: number
   readonly inSightPct: number
+  readonly usablePct: number
   readonly over40Km2: number
+  readonly shortKm2: number
   readonly needs: readonly { readonly needId: string; readonly name: string; readonly met: boolean }[]
 }
 
-/** In sight % is of the first layer need, or of the known ground where there is none. */
+/**
+ * In sight and usable % are of the first need, or of the known ground (in sight) where there is none. A need is met when it passes at the study's
+ * k and at the smaller one; at the study's alone where the smaller was not worked out.
+ */
 export function rung(o: OptionCells, needs: readonly SettledNeed[]): Rung {
   const sums = groundSums(o)
-  const figures = needs.filter((n) => n.kind === 'layer').map((need) => needFigure(o, need, cellsOfNeed(o, need)))
+  const figures = needs.map((need) => needFigure(o, need)).filter((f) => f.notAssessed === null)
   const known = sums.inSightKm2 + sums.maskedKm2
   return {
     heightM: o.heightM,
     inSightPct: figures[0]?.inSightPct ?? (known > 0 ? (100 * sums.inSightKm2) / known : 0),
+    usablePct: figures[0]?.usablePct ?? 0,
     over40Km2: sums.over.over40,
-    needs: figures.map((f) => ({ needId: f.needId, name: f.name, met: f.inSightPct >= f.requiredPct })),
+    shortKm2: figures.reduce((s, f) => s + f.suppression.shortKm2, 0),
+    needs: figures.map((f) => ({ needId: f.needId, name: f.name, met: f.passes ?? f.met })),
   }
 }
 
 export function ladderOf(rungs: readonly Rung[]): Ladder {
+  const needs = rungs[0]?.needs ?? []
   return {
     heightsM: rungs.map((r) => r.heightM),
     inSightPct: rungs.map((r) => r.inSightPct),
+    usablePct: rungs.map((r) => r.usablePct),
     over40Km2: rungs.map((r) => r.over40Km2),
-    needMetAtM: (rungs[0]?.needs ?? []).map(({ needId, name }, k) => ({
+    shortKm2: rungs.map((r) => r.shortKm2),
+    needMet: needs.map(({ needId, name }, k) => ({ needId, name, intervals: intervalsOf(rungs, k) })),
+    needMetAtM: needs.map(({ needId, name }, k) => ({
       needId,
       name,
       heightM: rungs.find((r) => r.needs[k].met)?.heightM ?? null,
     })),
   }
+}
+
+/** Runs of rungs in which a need is met, from the first to the last height of each. */
+function intervalsOf(rungs: readonly Rung[], need: number): [number, number][] {
+  const out: [number, number][] = []
+  let open = false
+  for (const { heightM, needs } of rungs) {
+    if (!needs[need].met) open = false
+    else if (open) out[out.length - 1][1] = heightM
+    else {
+      out.push([heightM, heightM])
+      open = true
+    }
+  }
+  return out
 }
 
 /** Heights of the ruler: ten to sixteen even steps that reach past the tallest stated mast, with the stated ones among them. */

@@ -1,8 +1,29 @@
 import type { ClutterCells, LandTable } from '../clutter/index.ts'
+import type { SuppressionBy } from '../doppler/index.ts'
 import type { Earth } from '../geodesy/index.ts'
 import type { SightCells, SiteCells } from '../masking/index.ts'
+import type { Held } from '../polar/index.ts'
 import type { RadarInput } from '../radar/index.ts'
+import type { SettledStudy } from '../study/index.ts'
 import type { Ground, Site } from '../terrain/index.ts'
+import type { NeedPlaces } from './needs/places/types.ts'
+import type { FloorFigure } from './types.ts'
+
+/** The smaller effective-earth factor at which cover is worked out as well: a need passes only at both. */
+export const LOW_K = 1
+
+/** Cover of one mast height at the smaller k. */
+export interface LowKCells extends Held {
+  readonly kind: 'lowK'
+  readonly heightM: number
+  readonly k: number
+  /** Lowest height that clears the coverage floor by its error band, m MSL; NaN unknown. */
+  readonly clearM: Float32Array
+  readonly floors: readonly FloorFigure[]
+  readonly earth: Earth
+  /** Mean effective radius over the azimuths, m. */
+  readonly meanRadiusM: number
+}
 
 /** Everything known about one option (candidate × mast height × tilt): what figures and layers are read from. */
 export interface OptionCells {
@@ -10,6 +31,7 @@ export interface OptionCells {
   readonly place: Site
   readonly earth: Earth
   readonly radar: RadarInput
+  readonly atmosphere: SettledStudy['atmosphere']
   /** The study's own land table; null for the built-in one. */
   readonly landTable: LandTable | null
   readonly heightM: number
@@ -17,6 +39,12 @@ export interface OptionCells {
   readonly site: SiteCells
   readonly mask: SightCells
   readonly clutter: ClutterCells
+  /** What suppression does to each kind of clutter. `clutter.residueDb` holds it only where kinds differ: read it through `residueOf`. */
+  readonly suppression: SuppressionBy
+  /** Null where cover at the smaller k is not worked out. */
+  readonly lowK: LowKCells | null
+  /** What the files of needs hold. */
+  readonly places: readonly NeedPlaces[]
 }
 
 /** Electrical centre, m MSL. */
@@ -27,4 +55,10 @@ export function meanEffectiveRadiusM(site: SiteCells): number {
   let sum = 0
   for (const r of site.effectiveRadiusM) sum += r
   return sum / site.effectiveRadiusM.length
+}
+
+/** Residue over noise per cell, dB, before STC: `cells` less `lessDb`. */
+export function residueOf(o: Pick<OptionCells, 'clutter' | 'suppression'>): { readonly cells: Float32Array; readonly lessDb: number } {
+  const { uniformDb } = o.suppression
+  return uniformDb === null ? { cells: o.clutter.residueDb, lessDb: 0 } : { cells: o.clutter.cnrDb, lessDb: uniformDb }
 }

@@ -1,13 +1,7 @@
+import type { SuppressionBy } from '../doppler/index.ts'
 import type { HorizonRow } from '../masking/index.ts'
+import type { NeedFigure } from './needs/needTypes.ts'
 
-export interface PlaceRef {
-  readonly lon: number
-  readonly lat: number
-  readonly azimuthDeg: number
-  readonly rangeM: number
-  /** Controlling obstacle toward the place: 'terrain', 'cover' or a name. */
-  readonly obstacle: string
-}
 /** Lowest height covered at one ground range, over all azimuths, m MSL. null where nothing is known. */
 export interface FloorFigure {
   readonly rangeM: number
@@ -28,39 +22,6 @@ export interface RingFigure {
   readonly cnrMeanDb: number | null
   readonly cnrMaxDb: number | null
 }
-export interface SuppressionFigure {
-  /** Needed at 50 / 90 / 99 % of the places in sight with S/N > D0, dB; null when there are none. */
-  readonly p50Db: number | null
-  readonly p90Db: number | null
-  readonly p99Db: number | null
-  readonly availableDb: number
-  /** Area where more is needed than available, km². */
-  readonly shortKm2: number
-  readonly maskedPct: number
-  readonly tooWeakPct: number
-}
-/** A layer need against one option. Percentages of the need's area. */
-export interface NeedFigure {
-  readonly needId: string
-  readonly name: string
-  readonly must: boolean
-  readonly areaKm2: number
-  /** Share that must be met, %, as the need states it. */
-  readonly requiredPct: number
-  readonly inSightPct: number
-  readonly inSightKm2: number
-  readonly marginalKm2: number
-  readonly unknownKm2: number
-  /** Ground that stands above the level, left out of both, km². */
-  readonly groundAboveKm2: number
-  /** Height margin: worst place and 10 % level, m. */
-  readonly worstMarginM: number | null
-  readonly tenthMarginM: number | null
-  readonly worst: PlaceRef | null
-  readonly suppression: SuppressionFigure
-  /** Set when this kind of need is not assessed yet; says so in a clause. */
-  readonly notAssessed: string | null
-}
 export interface Figures {
   readonly siteGroundM: number
   readonly antennaM: number
@@ -75,6 +36,11 @@ export interface Figures {
     readonly rows: readonly HorizonRow[]
   }
   readonly floors: readonly FloorFigure[]
+  /** The smaller k that cover is also worked out at, and its floors; null where that was not done. */
+  readonly lowK: number | null
+  readonly floorsLowK: readonly FloorFigure[] | null
+  /** What suppression does to each kind of clutter. */
+  readonly suppressionBy: SuppressionBy
   readonly rings: readonly RingFigure[]
   readonly ringWidthM: number
   /** Area with C/N over 0, 20, 40, 60 dB. */
@@ -94,6 +60,17 @@ export interface Ladder {
   readonly inSightPct: readonly number[]
   /** Ground with C/N over 40 dB, km². */
   readonly over40Km2: readonly number[]
-  /** Lowest height of the ladder from which the required share of each layer need is in sight; null = not within the ladder. */
+  /** First need's area that is usable, %; 0 when there is none. */
+  readonly usablePct: readonly number[]
+  /** Area of all needs where suppression is short, km². */
+  readonly shortKm2: readonly number[]
+  /** Every interval of the ladder in which a need is met at the study's k and at k = 1; a taller mast can lose one. */
+  readonly needMet: readonly {
+    readonly needId: string
+    readonly name: string
+    readonly intervals: readonly (readonly [fromM: number, toM: number])[]
+  }[]
+  /** Lowest height of the ladder at which each need is met; null = not within the ladder. */
   readonly needMetAtM: readonly { readonly needId: string; readonly name: string; readonly heightM: number | null }[]
 }
+export * from './needs/needTypes.ts'

@@ -1,11 +1,12 @@
 import { clutterToNoise } from '../clutter/index.ts'
 import { sightAlong, sweep } from '../masking/index.ts'
-import { ladderHeightsM, ladderOf, type OptionCells, type Rung, rung } from '../merit/index.ts'
+import { LOW_K, ladderHeightsM, ladderOf, type OptionCells, type Rung, rung } from '../merit/index.ts'
 import { polarShape } from '../polar/index.ts'
 import { buildGround, groundAt } from '../terrain/index.ts'
 import { share, type Work } from '../work/index.ts'
-import { candidateOf, type Engine, earthOf, landOption, siteOf } from './engine.ts'
+import type { Engine } from './engine.ts'
 import { cellLedger } from './ledger.ts'
+import { candidateOf, clutterOptions, earthOf, lowEarthOf, lowKOf, siteOf, suppressionOf } from './optionParts.ts'
 import { paintGround, paintOption, paintSheet } from './pictures.ts'
 import { type ProbeCache, probeAt } from './probe.ts'
 import type { Answer, Ask, Profile, Tell } from './types.ts'
@@ -54,9 +55,9 @@ export class Answers {
   }
 
   private *takeGround(body: Ask['ground']): Work<EngineAnswer['ground']> {
-    const { landTable, ...parts } = body
+    const { landTable, needPlaces, ...parts } = body
     const ground = yield* buildGround({ serial: ++serial, ...parts })
-    this.engine.setGround(ground, landTable ?? null)
+    this.engine.setGround(ground, landTable ?? null, needPlaces)
     this.preview = null
     let min = Number.POSITIVE_INFINITY
     let max = Number.NEGATIVE_INFINITY
@@ -100,19 +101,23 @@ export class Answers {
       earth,
       study.radar,
       tiltDeg,
-      landOption(landTable),
+      clutterOptions(study, ground, landTable),
     )
     this.preview = {
       ground,
       place: site,
       earth,
       radar: study.radar,
+      atmosphere: study.atmosphere,
       landTable,
       heightM: body.heightM,
       tiltDeg,
       site: swept.site,
       mask,
       clutter,
+      suppression: suppressionOf(study, ground),
+      lowK: null,
+      places: this.engine.needPlaces,
     }
     const siteGroundM = swept.site.siteGroundM
     return {
@@ -171,8 +176,9 @@ export class Answers {
   // biome-ignore lint/correctness/useYield: an answer that needs no slices
   private *ledger(body: Ask['ledger']): Work<EngineAnswer['ledger']> {
     const { ground, study } = this.engine.ready()
-    const sideLobeCnrDb = this.engine.cells(body.option)?.clutter.sideLobeCnrDb
-    const options = { ...landOption(this.engine.landTable), ...(sideLobeCnrDb ? { sideLobeCnrDb } : {}) }
+    const held = this.engine.cells(body.option)?.clutter
+    const sideLobes = held ? { sideLobeCnrDb: held.sideLobeCnrDb, sideLobeResidueDb: held.sideLobeResidueDb } : {}
+    const options = { ...clutterOptions(study, ground, this.engine.landTable), ...sideLobes }
     return cellLedger(ground, study, body.option, body.at, options)
   }
 
@@ -183,18 +189,27 @@ export class Answers {
     const earth = earthOf(study)
     const tiltDeg = this.engine.shown.option?.tiltDeg ?? candidate.tiltsDeg[0]
     const heights = ladderHeightsM(candidate.mastHeightsM)
-    const { landTable } = this.engine
+    const { landTable, needPlaces: places } = this.engine
+    const { radar, atmosphere } = study
+    const suppression = suppressionOf(study, ground)
+    const options = clutterOptions(study, ground, landTable)
+    const grid = polarShape(study.run)
+    const lowEarth = earth.effectiveEarthFactor > 0 && earth.effectiveEarthFactor <= LOW_K ? null : lowEarthOf(study)
     const rungs: Rung[] = []
     for (let n = 0; n < heights.length; n += LADDER_BATCH) {
       const batch = heights.slice(n, n + LADDER_BATCH)
-      const swept = yield* share(sweep(ground, place, batch, polarShape(study.run), earth), n, n + batch.length / 2, heights.length)
-      for (const mask of swept.masks) {
+      const { site, masks } = yield* share(sweep(ground, place, batch, grid, earth), n, n + batch.length / 3, heights.length)
+      const low =
+        lowEarth && (yield* share(sweep(ground, place, batch, grid, lowEarth), n + batch.length / 3, n + batch.length / 2, heights.length))
+      for (const [h, mask] of masks.entries()) {
         const { heightM } = mask
-        const clutter = yield* silently(
-          clutterToNoise(swept.site, mask, ground.codes, place, heightM, earth, study.radar, tiltDeg, landOption(landTable)),
-        )
+        const clutter = yield* silently(clutterToNoise(site, mask, ground.codes, place, heightM, earth, radar, tiltDeg, options))
+        const lowK = low && lowEarth && lowKOf(low.site, low.masks[h], lowEarth, '')
         rungs.push(
-          rung({ ground, place, earth, radar: study.radar, landTable, heightM, tiltDeg, site: swept.site, mask, clutter }, study.needs),
+          rung(
+            { ground, place, earth, radar, atmosphere, landTable, heightM, tiltDeg, site, mask, clutter, suppression, lowK, places },
+            study.needs,
+          ),
         )
         yield { done: rungs.length, total: heights.length }
       }

@@ -1,13 +1,14 @@
 import { type ClutterCells, clutterMarks, clutterToNoise, type LandTable } from '../clutter/index.ts'
+import type { SuppressionBy } from '../doppler/index.ts'
 import { isInputError } from '../errors/index.ts'
-import type { Earth } from '../geodesy/index.ts'
 import { type SightCells, type SiteCells, sweep } from '../masking/index.ts'
-import { type OptionCells, optionFigures } from '../merit/index.ts'
+import { isAreaNeed, LOW_K, type LowKCells, type NeedPlaces, type OptionCells, optionFigures } from '../merit/index.ts'
 import { polarShape } from '../polar/index.ts'
-import { type SettledCandidate, type SettledNeed, type SettledStudy, type StudyDoc, settle } from '../study/index.ts'
-import type { Ground, Site } from '../terrain/index.ts'
+import { type SettledNeed, type SettledStudy, type StudyDoc, settle } from '../study/index.ts'
+import type { Ground } from '../terrain/index.ts'
 import { share, type Work } from '../work/index.ts'
 import { keysOf, optionId, optionsOfStudy } from './keys.ts'
+import { candidateOf, clutterOptions, earthOf, lowEarthOf, lowKOf, siteOf, suppressionOf } from './optionParts.ts'
 import { PolarCache } from './polarCache.ts'
 import type { LayerId, OptionRef, OptionResult, Tell } from './types.ts'
 
@@ -25,10 +26,14 @@ export class Engine {
   ground: Ground | null = null
   /** The study's own land table; null for the built-in one. */
   landTable: LandTable | null = null
+  /** What the files of needs hold. */
+  needPlaces: readonly NeedPlaces[] = []
   study: SettledStudy | null = null
   shown: Shown = { option: null, layer: 'clutter-to-noise' }
   hold = false
   private readonly cache: PolarCache
+  private filesSerial = 0
+  private suppression: { readonly study: SettledStudy; readonly by: SuppressionBy } | null = null
   private readonly results = new Map<string, OptionResult>()
   private readonly failed = new Set<string>()
 
@@ -36,9 +41,12 @@ export class Engine {
     this.cache = new PolarCache(cacheBytes)
   }
 
-  setGround(ground: Ground, landTable: LandTable | null): void {
+  setGround(ground: Ground, landTable: LandTable | null, needPlaces: readonly NeedPlaces[] = []): void {
     this.ground = ground
     this.landTable = landTable
+    this.needPlaces = needPlaces
+    this.filesSerial++
+    this.suppression = null
     this.cache.clear()
     this.results.clear()
     this.failed.clear()
@@ -89,23 +97,20 @@ export class Engine {
     if (!this.ground || !this.study || this.hold) return null
     const all = optionsOfStudy(this.study)
     const shown = this.shown.option && all.find((r) => optionId(r) === optionId(this.shown.option as OptionRef))
-    const first = shown && (!this.result(shown) || !this.cells(shown)) && !this.failed.has(optionId(shown)) ? shown : null
+    if (shown && !this.failed.has(optionId(shown))) {
+      // the picture first: figures take another sweep at the smaller k
+      if (!this.cells(shown)) return this.guarded(shown, this.makeCells(shown))
+      if (!this.result(shown)) return this.guarded(shown, this.makeFigures(shown))
+    }
     const sameCandidate = (r: OptionRef) => (shown && r.candidate === shown.candidate ? 0 : 1)
     const rest = all.filter((r) => !this.result(r) && !this.failed.has(optionId(r))).sort((a, b) => sameCandidate(a) - sameCandidate(b))
-    const ref = first ?? rest[0]
-    return ref ? this.workOn(ref) : null
+    return rest[0] ? this.guarded(rest[0], this.makeFigures(rest[0])) : null
   }
 
-  private *workOn(ref: OptionRef): Work<Tell[]> {
-    const study = this.study as SettledStudy
+  /** Bad input of one option is told and leaves the others alone. */
+  private *guarded(ref: OptionRef, work: Work<Tell[]>): Work<Tell[]> {
     try {
-      const cells = yield* this.compute(ref)
-      const keys = this.keys(ref)
-      if (this.study !== study || !keys) return []
-      const figures = optionFigures(cells, study.needs, clutterMarks(cells.ground.codes, study.radar, this.landTable !== null))
-      this.results.set(optionId(ref), { ref, keys, figures, held: true })
-      const isShown = this.shown.option !== null && optionId(this.shown.option) === optionId(ref)
-      return isShown ? [this.figures(), { kind: 'dirty' }] : [this.figures()]
+      return yield* work
     } catch (error) {
       if (!isInputError(error)) throw error
       this.failed.add(optionId(ref))
@@ -114,86 +119,129 @@ export class Engine {
     }
   }
 
+  private *makeCells(ref: OptionRef): Work<Tell[]> {
+    yield* this.compute(ref)
+    return [{ kind: 'dirty' }]
+  }
+
+  private *makeFigures(ref: OptionRef): Work<Tell[]> {
+    const study = this.study as SettledStudy
+    const cells = yield* share(this.compute(ref), 0, 0.7, 1)
+    const lowK = yield* share(this.computeLowK(ref), 0.7, 1, 1)
+    const keys = this.keys(ref)
+    if (this.study !== study || !keys) return []
+    const figures = optionFigures({ ...cells, lowK }, study.needs, clutterMarks(cells.ground.codes, study.radar, this.landTable !== null))
+    this.results.set(optionId(ref), { ref, keys, figures, held: true })
+    const isShown = this.shown.option !== null && optionId(this.shown.option) === optionId(ref)
+    return isShown ? [this.figures(), { kind: 'dirty' }] : [this.figures()]
+  }
+
   /** Polar grids of an option, from the cache or worked out now; masks of all heights of the candidate come from one sampling. */
   *compute(ref: OptionRef): Work<OptionCells> {
     const { ground, study } = this.ready()
     const candidate = candidateOf(study, ref.candidate)
-    const keys = keysOf(ground.serial, study, candidate, ref)
+    const keysAt = (heightM: number) => keysOf(ground.serial, this.filesSerial, study, candidate, { ...ref, heightM })
+    const keys = keysAt(ref.heightM)
     const place = siteOf(candidate)
     const earth = earthOf(study)
-    const keep = new Set([keys.site, keys.mask, keys.clutter])
-    if (this.shown.option && this.shown.option.candidate === ref.candidate) {
-      const k = this.keys(this.shown.option)
-      if (k) for (const key of [k.mask, k.clutter]) keep.add(key)
-    }
+    const keep = this.keepWhile(ref)
     let site = this.cache.get<SiteCells>(keys.site)
     let mask = this.cache.get<SightCells>(keys.mask)
     if (!site || !mask) {
-      const missing = new Set([ref.heightM])
-      for (const heightM of candidate.mastHeightsM)
-        if (!this.cache.has(keysOf(ground.serial, study, candidate, { ...ref, heightM }).mask)) missing.add(heightM)
-      const heights = [...missing].sort((a, b) => a - b)
+      const heights = this.missingHeights(candidate.mastHeightsM, ref.heightM, (h) => keysAt(h).mask)
       const swept = yield* share(sweep(ground, place, heights, polarShape(study.run), earth), 0, 0.6, 1)
       site = swept.site
       this.cache.put(keys.site, site, keep)
-      swept.masks.forEach((m) => {
-        this.cache.put(keysOf(ground.serial, study, candidate, { ...ref, heightM: m.heightM }).mask, m, keep)
+      for (const m of swept.masks) {
+        this.cache.put(keysAt(m.heightM).mask, m, keep)
         if (m.heightM === ref.heightM) mask = m
-      })
+      }
     }
     if (!mask) throw new Error('a sweep left out a height')
     let clutter = this.cache.get<ClutterCells>(keys.clutter)
     if (!clutter) {
-      clutter = yield* share(
-        clutterToNoise(site, mask, ground.codes, place, ref.heightM, earth, study.radar, ref.tiltDeg, landOption(this.landTable)),
-        0.6,
-        1,
-        1,
-      )
+      const options = clutterOptions(study, ground, this.landTable)
+      const work = clutterToNoise(site, mask, ground.codes, place, ref.heightM, earth, study.radar, ref.tiltDeg, options)
+      clutter = yield* share(work, 0.6, 1, 1)
       this.cache.put(keys.clutter, clutter, keep)
     }
+    return this.option(ref, site, mask, clutter)
+  }
+
+  /** Cover of an option at the smaller k; null where the study's own k is no larger than that. */
+  private *computeLowK(ref: OptionRef): Work<LowKCells | null> {
+    const { ground, study } = this.ready()
+    const k = study.atmosphere.effectiveEarthFactor
+    if (k > 0 && k <= LOW_K) return null
+    const candidate = candidateOf(study, ref.candidate)
+    const keyAt = (heightM: number) => keysOf(ground.serial, this.filesSerial, study, candidate, { ...ref, heightM }).lowK
+    let cover = this.cache.get<LowKCells>(keyAt(ref.heightM))
+    if (cover) return cover
+    const keep = this.keepWhile(ref)
+    const heights = this.missingHeights(candidate.mastHeightsM, ref.heightM, keyAt)
+    const earth = lowEarthOf(study)
+    const { site, masks } = yield* sweep(ground, siteOf(candidate), heights, polarShape(study.run), earth)
+    for (const m of masks) {
+      const own = lowKOf(site, m, earth, keyAt(m.heightM))
+      this.cache.put(own.key, own, keep)
+      if (m.heightM === ref.heightM) cover = own
+      yield { done: 1, total: 1 }
+    }
+    if (!cover) throw new Error('a sweep left out a height')
+    return cover
+  }
+
+  /** Cells of an option if all of them are still held; cover at the smaller k only if it is there. */
+  cells(ref: OptionRef): OptionCells | null {
+    const keys = this.keys(ref)
+    if (!keys) return null
+    const site = this.cache.get<SiteCells>(keys.site)
+    const mask = this.cache.get<SightCells>(keys.mask)
+    const clutter = this.cache.get<ClutterCells>(keys.clutter)
+    return site && mask && clutter ? this.option(ref, site, mask, clutter) : null
+  }
+
+  private option(ref: OptionRef, site: SiteCells, mask: SightCells, clutter: ClutterCells): OptionCells {
+    const { ground, study } = this.ready()
+    const keys = this.keys(ref)
+    if (this.suppression?.study !== study) this.suppression = { study, by: suppressionOf(study, ground) }
     return {
       ground,
-      place,
-      earth,
+      place: siteOf(candidateOf(study, ref.candidate)),
+      earth: earthOf(study),
       radar: study.radar,
+      atmosphere: study.atmosphere,
       landTable: this.landTable,
       heightM: ref.heightM,
       tiltDeg: ref.tiltDeg,
       site,
       mask,
       clutter,
+      suppression: this.suppression.by,
+      lowK: (keys && this.cache.get<LowKCells>(keys.lowK)) ?? null,
+      places: this.needPlaces,
     }
   }
 
-  /** Cells of an option if all of them are still held. */
-  cells(ref: OptionRef): OptionCells | null {
-    if (!this.ground || !this.study) return null
-    const candidate = this.study.candidates.find((c) => c.id === ref.candidate)
-    const keys = this.keys(ref)
-    if (!candidate || !keys) return null
-    const site = this.cache.get<SiteCells>(keys.site)
-    const mask = this.cache.get<SightCells>(keys.mask)
-    const clutter = this.cache.get<ClutterCells>(keys.clutter)
-    if (!site || !mask || !clutter) return null
-    const { heightM, tiltDeg } = ref
-    return {
-      ground: this.ground,
-      place: siteOf(candidate),
-      earth: earthOf(this.study),
-      radar: this.study.radar,
-      landTable: this.landTable,
-      heightM,
-      tiltDeg,
-      site,
-      mask,
-      clutter,
-    }
+  /** Heights of a candidate that are not in the cache, with the one asked for, rising. */
+  private missingHeights(heightsM: readonly number[], heightM: number, keyAt: (heightM: number) => string): number[] {
+    return [...new Set([heightM, ...heightsM.filter((h) => !this.cache.has(keyAt(h)))])].sort((a, b) => a - b)
+  }
+
+  /** Grids that must stay while an option is worked out: its own and those of the option on show of the same candidate. */
+  private keepWhile(ref: OptionRef): ReadonlySet<string> {
+    const shown = this.shown.option?.candidate === ref.candidate ? this.shown.option : null
+    return new Set(
+      [ref, ...(shown ? [shown] : [])].flatMap((r) => {
+        const k = this.keys(r)
+        return k ? [k.site, k.mask, k.lowK, k.clutter] : []
+      }),
+    )
   }
 
   /** The need a layer is drawn for: the one named, else the first layer need. */
   needOnShow(id: string | undefined): SettledNeed | null {
-    const layers = (this.study?.needs ?? []).filter((n) => n.kind === 'layer')
+    const layers = (this.study?.needs ?? []).filter(isAreaNeed)
     return layers.find((n) => n.id === id) ?? layers[0] ?? null
   }
 
@@ -204,24 +252,6 @@ export class Engine {
 
   private keys(ref: OptionRef): OptionResult['keys'] | null {
     const candidate = this.study?.candidates.find((c) => c.id === ref.candidate)
-    return this.ground && this.study && candidate ? keysOf(this.ground.serial, this.study, candidate, ref) : null
+    return this.ground && this.study && candidate ? keysOf(this.ground.serial, this.filesSerial, this.study, candidate, ref) : null
   }
 }
-
-export const siteOf = (c: SettledCandidate): Site => ({
-  lon: c.lon,
-  lat: c.lat,
-  groundHeightM: c.groundHeightM,
-  clearingRadiusM: c.clearingRadiusM,
-})
-export const earthOf = (study: SettledStudy): Earth => ({
-  effectiveEarthFactor: study.atmosphere.effectiveEarthFactor,
-  earthRadiusM: study.atmosphere.earthRadiusM,
-})
-export function candidateOf(study: SettledStudy, id: string): SettledCandidate {
-  const found = study.candidates.find((c) => c.id === id)
-  if (!found) throw new Error(`no candidate ${id}`)
-  return found
-}
-
-export const landOption = (landTable: LandTable | null): { landTable?: LandTable } => (landTable ? { landTable } : {})

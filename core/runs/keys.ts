@@ -1,16 +1,25 @@
+import { LOW_K } from '../merit/index.ts'
 import { canonicalJson, type SettledCandidate, type SettledStudy } from '../study/index.ts'
 import type { Keys, OptionRef } from './types.ts'
 
-/** Key of what one option's results were made from; equal keys mean equal results. */
-export function keysOf(serial: number, study: SettledStudy, candidate: SettledCandidate, ref: OptionRef): Keys {
-  const { lon, lat, groundHeightM, clearingRadiusM } = candidate
-  const { effectiveEarthFactor, earthRadiusM, gas, rainRateMmH, windMs, seaState } = study.atmosphere
-  const site = canonicalJson([serial, lon, lat, groundHeightM, clearingRadiusM, effectiveEarthFactor, earthRadiusM, study.run])
+/** Key of what one option's results were made from; equal keys mean equal results. `filesSerial` stands for the files of needs. */
+export function keysOf(serial: number, filesSerial: number, study: SettledStudy, candidate: SettledCandidate, ref: OptionRef): Keys {
+  const { effectiveEarthFactor, ...air } = study.atmosphere
+  const site = siteKey(serial, study, candidate, effectiveEarthFactor)
   const mask = `${site}|${ref.heightM}`
   const { antenna, ...radar } = study.radar
-  const clutter = `${mask}|${canonicalJson([radar, { ...antenna, tiltDeg: ref.tiltDeg }, gas, rainRateMmH, windMs, seaState, study.lowAngleLandTable])}`
-  return { site, mask, clutter, needs: `${clutter}|${canonicalJson(study.needs)}` }
+  const clutter = `${mask}|${canonicalJson([radar, { ...antenna, tiltDeg: ref.tiltDeg }, air, study.lowAngleLandTable])}`
+  return {
+    site,
+    mask,
+    lowK: `${siteKey(serial, study, candidate, LOW_K)}|${ref.heightM}|cover`,
+    clutter,
+    needs: `${clutter}|${filesSerial}|${canonicalJson(study.needs)}`,
+  }
 }
+
+const siteKey = (serial: number, study: SettledStudy, c: SettledCandidate, k: number): string =>
+  canonicalJson([serial, c.lon, c.lat, c.groundHeightM, c.clearingRadiusM, k, study.atmosphere.earthRadiusM, study.run])
 
 export const optionId = (ref: OptionRef): string => `${ref.candidate}|${ref.heightM}|${ref.tiltDeg}`
 

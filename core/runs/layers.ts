@@ -1,6 +1,6 @@
 import { strengthByCode } from '../clutter/index.ts'
-import { cellsOfNeed, type OptionCells } from '../merit/index.ts'
-import { makeRamp } from '../paint/index.ts'
+import { cellsOfNeed, LOSS_CAUSES, type NeedCells, type OptionCells, PLACE, pdOf } from '../merit/index.ts'
+import { makeRamp, type Ramp } from '../paint/index.ts'
 import { CELL } from '../polar/index.ts'
 import type { SettledNeed } from '../study/index.ts'
 import { DEG_PER_RAD } from '../units/index.ts'
@@ -15,6 +15,41 @@ const layer = (
   hatchMasked: boolean,
 ): LayerInfo => ({ id, family, unit, safe, ramp, hatchMasked })
 
+/** One flat colour per class, classes numbered from 1. */
+function classRamp(hexes: readonly string[]): Ramp {
+  const colours = hexes.map((hex) => {
+    const [r, g, b] = [1, 3, 5].map((at) => Number.parseInt(hex.slice(at, at + 2), 16))
+    return ((255 << 24) | (b << 16) | (g << 8) | r) >>> 0
+  })
+  return {
+    stops: hexes.map((_, n) => n + 1),
+    rgba: Uint32Array.from({ length: 256 }, (_, n) => colours[Math.floor((n * colours.length) / 256)]),
+    low: 0.5,
+    high: hexes.length + 0.5,
+    below: 'bare',
+  }
+}
+const classes = (id: LayerId, family: LayerInfo['family'], hexes: readonly string[]): LayerInfo => ({
+  ...layer(id, family, '', 'down', classRamp(hexes), false),
+  classes: true,
+})
+/** In sight, detectable, usable. */
+const USABLE_HEXES = ['#d3e8e4', '#81bcbf', '#235877']
+/** By LOSS_CAUSES: greys for what is hidden or not known, then a hue per kind of cause, two tones where kinds belong together. */
+const CAUSE_HEXES: Readonly<Record<(typeof LOSS_CAUSES)[number], string>> = {
+  unknown: '#c9c6be',
+  'out-of-range': '#8f8a7d',
+  masked: '#41494e',
+  marginal: '#7a8086',
+  'short-range-sensitivity': '#7b5ea7',
+  'above-beam': '#2f7d87',
+  'below-beam': '#8fc7c9',
+  clutter: '#b8482c',
+  'blind-speed': '#e0a13c',
+  'too-weak': '#355f9e',
+  several: '#8a2f5c',
+}
+
 /** Fixed ramps with round stops, so that two maps, two candidates and the memo compare by eye. */
 export const LAYERS: Readonly<Record<LayerId, LayerInfo>> = {
   masked: layer('masked', 'hidden', '', 'up', makeRamp('ink', [0, 1], 'bare'), true),
@@ -24,7 +59,30 @@ export const LAYERS: Readonly<Record<LayerId, LayerInfo>> = {
   'clutter-strength': layer('clutter-strength', 'echo', 'dB', 'up', makeRamp('warm', [-60, -50, -40, -30, -20, -10], 'bare'), true),
   'clutter-to-noise': layer('clutter-to-noise', 'echo', 'dB', 'up', makeRamp('warm', [0, 10, 20, 30, 40, 50, 60, 70], 'bare'), true),
   'suppression-needed': layer('suppression-needed', 'takes', 'dB', 'up', makeRamp('warm', [0, 10, 20, 30, 40, 50, 60, 70], 'bare'), true),
+  usable: classes('usable', 'seen', USABLE_HEXES),
+  'probability-of-detection': layer(
+    'probability-of-detection',
+    'seen',
+    '',
+    'down',
+    makeRamp('cool', [0, 0.2, 0.4, 0.6, 0.8, 1], 'hold', true),
+    false,
+  ),
+  'signal-margin': layer('signal-margin', 'seen', 'dB', 'down', makeRamp('cool', [-30, -20, -10, 0, 10, 20, 30], 'hold', true), false),
+  'cause-of-loss': classes(
+    'cause-of-loss',
+    'lost',
+    LOSS_CAUSES.map((c) => CAUSE_HEXES[c]),
+  ),
 }
+/** Layers drawn for one need, of kind layer or polygon. */
+export const NEED_LAYERS: readonly LayerId[] = [
+  'suppression-needed',
+  'usable',
+  'probability-of-detection',
+  'signal-margin',
+  'cause-of-loss',
+]
 export const layerInfo = (id: LayerId): LayerInfo => LAYERS[id]
 export const isLayerId = (id: string): id is LayerId => (LAYER_IDS as readonly string[]).includes(id)
 
@@ -49,13 +107,40 @@ export function fillLayer(id: LayerId, o: OptionCells, need: SettledNeed | null,
     case 'clutter-strength':
       fillStrength(o, out)
       return
-    case 'suppression-needed': {
+    default: {
       const cells = need ? cellsOfNeed(o, need) : null
-      if (cells) out.set(cells.neededDb)
+      if (cells && need) fillNeed(id, cells, need, out)
       else out.fill(Number.NaN)
     }
   }
 }
+
+/** Layers of one need. Usable: 1 in sight, 2 detectable, 3 usable. Pd is 0 where the target is hidden or not heard. */
+function fillNeed(id: LayerId, cells: NeedCells, need: SettledNeed, out: Float32Array): void {
+  const { place, cause, signalDb, neededDb } = cells
+  const pd = pdOf(need.required)
+  for (let at = 0; at < out.length; at++) {
+    const bits = place[at]
+    const known = bits & PLACE.inNeed && !(bits & (PLACE.groundAbove | PLACE.unknown))
+    switch (id) {
+      case 'usable':
+        out[at] = bits & PLACE.usable ? 3 : bits & PLACE.detectable ? 2 : bits & PLACE.inSight ? 1 : Number.NaN
+        break
+      case 'cause-of-loss':
+        out[at] = cause[at] > 0 ? cause[at] : Number.NaN
+        break
+      case 'probability-of-detection':
+        out[at] = !known ? Number.NaN : bits & PLACE.inSight && cause[at] !== OUT_OF_RANGE ? pd(signalDb[at]) : 0
+        break
+      case 'signal-margin':
+        out[at] = signalDb[at]
+        break
+      default:
+        out[at] = neededDb[at]
+    }
+  }
+}
+const OUT_OF_RANGE = LOSS_CAUSES.indexOf('out-of-range') + 1
 
 /** Depression at the patch on the smooth effective earth, slope not included: h/r − r/2ka, deg; NaN where the ground is unknown or masked. */
 function fillDepression(o: OptionCells, out: Float32Array): void {

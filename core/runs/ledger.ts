@@ -7,7 +7,7 @@ import { type RadarInput, radarConstantDb, stcDb } from '../radar/index.ts'
 import type { SettledNeed, SettledStudy } from '../study/index.ts'
 import { type Ground, siteGround } from '../terrain/index.ts'
 import { toDb } from '../units/index.ts'
-import { candidateOf, earthOf, siteOf } from './engine.ts'
+import { candidateOf, earthOf, siteOf } from './optionParts.ts'
 import type { CellLedger, LedgerLine, OptionRef } from './types.ts'
 
 type Line = Omit<LedgerLine, 'mark' | 'source'> & Partial<Pick<LedgerLine, 'mark' | 'source'>>

@@ -1,7 +1,8 @@
 import type { ClutterCells } from '../clutter/index.ts'
 import type { SightCells, SiteCells } from '../masking/index.ts'
+import type { LowKCells } from '../merit/index.ts'
 
-type Cells = SiteCells | SightCells | ClutterCells
+type Cells = SiteCells | SightCells | ClutterCells | LowKCells
 const LIMIT_BYTES = 256 * 2 ** 20
 
 /** Polar grids by key, bounded in bytes; the least recently used go first, but never one named in `keep`. */
@@ -45,8 +46,11 @@ export class PolarCache {
   }
 }
 
+/** Arrays that stand for two fields are counted once. */
 function bytesOf(cells: Cells): number {
+  const buffers = new Set<ArrayBufferLike>()
+  for (const v of Object.values(cells)) if (ArrayBuffer.isView(v)) buffers.add(v.buffer)
   let sum = 0
-  for (const v of Object.values(cells)) if (ArrayBuffer.isView(v)) sum += v.byteLength
+  for (const b of buffers) sum += b.byteLength
   return sum
 }

@@ -1,16 +1,16 @@
 import { geodesicInverse, type LonLat } from '../geodesy/index.ts'
-import { cellsOfNeed, type OptionCells, PLACE } from '../merit/index.ts'
+import { cellsOfNeed, lossCauseAt, type OptionCells, PLACE } from '../merit/index.ts'
 import { CELL } from '../polar/index.ts'
 import type { SettledNeed } from '../study/index.ts'
 import { groundAt } from '../terrain/index.ts'
-import { fillLayer } from './layers.ts'
+import { fillLayer, NEED_LAYERS } from './layers.ts'
 import type { LayerId, Probe } from './types.ts'
 
 /** Values of the layer on show, kept so that a moving pointer does not fill the layer again. */
 export interface ProbeCache {
   key: string
   values: Float32Array
-  words: Uint8Array | null
+  words: Uint16Array | null
 }
 
 /** What the map shows under a point: read from the polar cell it lies in, so that number and colour agree. */
@@ -20,7 +20,7 @@ export function probeAt(o: OptionCells, layer: LayerId, need: SettledNeed | null
     cache.key = key
     cache.values = new Float32Array(o.site.groundM.length)
     fillLayer(layer, o, need, cache.values)
-    cache.words = layer === 'suppression-needed' && need ? (cellsOfNeed(o, need)?.place ?? null) : null
+    cache.words = NEED_LAYERS.includes(layer) && need ? (cellsOfNeed(o, need)?.place ?? null) : null
   }
   const { azimuths, ranges, azimuthStepDeg, rangeStepM } = o.site.grid
   const { azimuthDeg, distanceM } = geodesicInverse(o.place, at)
@@ -42,16 +42,22 @@ function wordOf(layer: LayerId, state: number, value: number, place: number): st
   if (layer === 'masked')
     return state === CELL.inSight ? 'in sight' : state === CELL.partly ? 'partly in sight' : state === CELL.marginal ? 'marginal' : 'masked'
   if (layer === 'coverage-floor' || layer === 'height-to-see') return Number.isFinite(value) ? null : 'unknown'
-  if (layer === 'suppression-needed') {
-    if (!(place & PLACE.inNeed)) return 'outside the need'
-    if (place & PLACE.groundAbove) return 'ground above the level'
-    if (!(place & PLACE.inSight)) return 'target masked'
-    if (!Number.isFinite(value)) return 'too weak'
-    return value === 0 ? 'none needed' : null
-  }
+  if (NEED_LAYERS.includes(layer)) return needWord(layer, value, place)
   if (layer === 'clutter-to-noise') {
     if (!Number.isFinite(value)) return hidden ? 'masked' : 'no clutter modelled'
     return hidden ? 'masked, side lobes only' : value < 0 ? 'below noise' : null
   }
   return Number.isFinite(value) ? null : hidden ? 'masked' : 'not modelled'
+}
+
+/** Words of the layers of a need; a cause of loss is told by its id. */
+function needWord(layer: LayerId, value: number, place: number): string | null {
+  if (!(place & PLACE.inNeed)) return 'outside the need'
+  if (place & PLACE.groundAbove) return 'ground above the level'
+  if (layer === 'cause-of-loss') return lossCauseAt(value) ?? 'usable'
+  if (layer === 'usable') return value === 3 ? 'usable' : value === 2 ? 'detectable' : value === 1 ? 'in sight' : 'target masked'
+  if (!(place & PLACE.inSight)) return 'target masked'
+  if (layer !== 'suppression-needed') return null
+  if (!Number.isFinite(value)) return 'too weak'
+  return value === 0 ? 'none needed' : null
 }

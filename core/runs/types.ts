@@ -1,7 +1,7 @@
 import type { LandTable, ModelMark } from '../clutter/index.ts'
 import type { LonLat } from '../geodesy/index.ts'
 import type { GroundCode } from '../landcover/index.ts'
-import type { Figures, Ladder } from '../merit/index.ts'
+import type { Figures, Ladder, NeedPlaces } from '../merit/index.ts'
 import type { Obstacle } from '../obstacles/index.ts'
 import type { Ramp, View } from '../paint/index.ts'
 import type { GridShape } from '../raster/index.ts'
@@ -16,6 +16,8 @@ export interface OptionRef {
 export interface Keys {
   readonly site: string
   readonly mask: string
+  /** Cover at the smaller k. */
+  readonly lowK: string
   readonly clutter: string
   readonly needs: string
 }
@@ -36,12 +38,18 @@ export const LAYER_IDS = [
   'clutter-strength',
   'clutter-to-noise',
   'suppression-needed',
+  'usable',
+  'probability-of-detection',
+  'signal-margin',
+  'cause-of-loss',
 ] as const
 export type LayerId = (typeof LAYER_IDS)[number]
 export interface LayerInfo {
   readonly id: LayerId
-  readonly family: 'echo' | 'seen' | 'hidden' | 'takes'
+  readonly family: 'echo' | 'seen' | 'hidden' | 'takes' | 'lost'
   readonly unit: 'dB' | 'm' | 'deg' | ''
+  /** Values are classes with a colour each, not a quantity. */
+  readonly classes?: boolean
   /** Which way the value is rounded at the face. */
   readonly safe: 'up' | 'down'
   readonly ramp: Ramp
@@ -105,6 +113,8 @@ export interface Ask {
     verticalErrorM: number
     /** The study's own low-angle land table; null or absent for the built-in one. */
     landTable?: LandTable | null
+    /** What the files of needs hold. */
+    needPlaces?: readonly NeedPlaces[]
   }
   /** Replaces the last one whole: this is also the cancel. */
   study: { doc: StudyDoc; show: { option: OptionRef | null; layer: LayerId; need?: string }; hold: boolean }

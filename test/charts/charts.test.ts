@@ -112,6 +112,13 @@ describe('ladder', () => {
     heightsM: [5, 15, 25, 40],
     inSightPct: [40, 60, 90, 100],
     over40Km2: [10, 30, 50, 80],
+    usablePct: [20, 40, 80, 90],
+    shortKm2: [1, 2, 3, 4],
+    needMet: [
+      { needId: 'n1', name: 'one', intervals: [[24, 40] as const] },
+      { needId: 'n2', name: 'two', intervals: [[25, 40] as const] },
+      { needId: 'n3', name: 'three', intervals: [] },
+    ],
     needMetAtM: [
       { needId: 'n1', name: 'one', heightM: 24 },
       { needId: 'n2', name: 'two', heightM: 25 },

@@ -1,5 +1,5 @@
 import { Button, Menu, MenuItem, MenuTrigger, Popover } from 'react-aria-components'
-import { LAYER_IDS, type LayerId, type LayerInfo, layerInfo } from '../../../core/index.ts'
+import { LAYER_IDS, type LayerId, type LayerInfo, layerInfo, NEED_LAYERS } from '../../../core/index.ts'
 import { FAMILY_WORDS, formatAngle, formatMast, LAYER_WORDS, MAP_WORDS, textOf } from '../../words/index.ts'
 import type { MapCandidate, MapNeed, MapShow, Trial } from '../types.ts'
 
@@ -48,7 +48,7 @@ function Word({
   )
 }
 
-const FAMILIES: readonly LayerInfo['family'][] = ['hidden', 'seen', 'echo', 'takes']
+const FAMILIES: readonly LayerInfo['family'][] = ['hidden', 'seen', 'echo', 'lost', 'takes']
 const layersOf = (family: LayerInfo['family']): LayerId[] => LAYER_IDS.filter((id) => layerInfo(id).family === family)
 /** C/N is what most come for: it stands for its family. */
 const firstOf = (family: LayerInfo['family']): LayerId => (family === 'echo' ? 'clutter-to-noise' : layersOf(family)[0]!)
@@ -95,7 +95,7 @@ export function Sentence({ show, candidates, needs, trial, onShow, onSelect }: S
         choices={layersOf(family).map((l) => ({ id: l, words: LAYER_WORDS[l].short, hint: LAYER_WORDS[l].meaning }))}
         onChoose={(l) => onShow({ layer: l as LayerId })}
       />
-      {layer === 'suppression-needed' && need ? (
+      {NEED_LAYERS.includes(layer) && need ? (
         <>
           {' '}
           {s.against}{' '}

@@ -1,0 +1,217 @@
+import { elevationAngleDeg, effectiveRadiusM as radiusOf, slantRangeM } from '../../../geodesy/index.ts'
+import { type SightPoint, sightPoint } from '../../../masking/index.ts'
+import { cellAt } from '../../../polar/index.ts'
+import type { SettledNeed } from '../../../study/index.ts'
+import { RAD_PER_DEG, toDb, wavelengthM } from '../../../units/index.ts'
+import { antennaM, type OptionCells, residueOf } from '../../optionCells.ts'
+import { aboveNoiseDb } from '../../signal/decibelTables.ts'
+import { twoWayEdgeLossDb } from '../../signal/edgeLoss.ts'
+import { pdOf } from '../../signal/pdOf.ts'
+import { overloadOf } from '../../signal/receiverLimits.ts'
+import { gainAt, isHeard, stcAt, type TargetSignal, targetSignal } from '../../signal/targetSignal.ts'
+import { signalLoss, signalMarginDb } from '../lossCause.ts'
+import { type FixFigure, lossCauseAt, lossCode } from '../needTypes.ts'
+import type { NeedPlace } from './types.ts'
+
+/** Sight of a place at the study's k and, where cover is worked out at it, at the smaller one. */
+export interface PlaceSight {
+  readonly sight: SightPoint
+  readonly low: SightPoint | null
+}
+/** Rays of places do not depend on tilt, need or radar: kept with the mask they belong to. */
+const kept = new WeakMap<object, Map<string, PlaceSight>>()
+const keyOf = (p: { lon: number; lat: number }): string => `${p.lon},${p.lat}`
+
+export function sightOf(o: OptionCells, at: NeedPlace): PlaceSight {
+  const owner = o.lowK ?? o.mask
+  let own = kept.get(owner)
+  if (!own) {
+    own = new Map()
+    kept.set(owner, own)
+  }
+  const key = keyOf(at)
+  let found = own.get(key)
+  if (!found) {
+    found = {
+      sight: sightPoint(o.ground, o.place, o.heightM, o.earth, at),
+      low: o.lowK ? sightPoint(o.ground, o.place, o.heightM, o.lowK.earth, at) : null,
+    }
+    own.set(key, found)
+  }
+  return found
+}
+
+/** Target height at a place, m MSL; NaN where it stands on unknown ground. */
+export const heightAt = (at: NeedPlace, groundM: number): number => (at.above === 'sea' ? at.altM : groundM + at.altM)
+
+export type Visible = FixFigure['visible']
+/** In sight by the error band: above the floor by at least it, below by at least it, or between. */
+export function visibleFrom(s: SightPoint, targetM: number): Visible {
+  if (s.unknown !== null || !Number.isFinite(targetM)) return 'unknown'
+  const margin = targetM - s.floorM
+  return margin >= s.floorBandM ? 'yes' : margin > -s.floorBandM ? 'marginal' : 'no'
+}
+
+/** What holds for every place of a need. */
+export interface PlaceModel {
+  readonly o: OptionCells
+  readonly need: SettledNeed
+  readonly signal: TargetSignal
+  readonly noiseGainDb: number
+}
+export function placeModel(o: OptionCells, need: SettledNeed): PlaceModel {
+  const { ranges, rangeStepM } = o.site.grid
+  const signal = targetSignal(o.radar, o.tiltDeg, need.rcsM2, Math.max(ranges * rangeStepM, o.radar.instrumentedRangeM) * 1.5 + 50_000)
+  return { o, need, signal, noiseGainDb: toDb(o.suppression.noiseGain) }
+}
+
+/** Response of the processing to the target's own speed, dB over its mean: on the echo, or on the improvement of a bank. */
+export interface Response {
+  readonly echoDb: number
+  readonly residueDb: number
+}
+export const MEAN_RESPONSE: Response = { echoDb: 0, residueDb: 0 }
+
+interface Echo {
+  readonly slantM: number
+  readonly elevationDeg: number
+  readonly headDb: number
+  readonly gainDb: number
+  readonly stcDb: number
+  readonly edgeDb: number
+  readonly above: boolean
+}
+function echoOf(m: PlaceModel, s: SightPoint, targetM: number, radiusM: number): Echo {
+  const { o, signal, need } = m
+  const mast = antennaM(o)
+  const elevationDeg = elevationAngleDeg(mast, targetM, s.rangeM, radiusM)
+  const tan = Math.tan(elevationDeg * RAD_PER_DEG)
+  const slantM = slantRangeM(mast, targetM, s.rangeM, radiusM)
+  const gainDb = gainAt(signal, tan)
+  const stcDb = stcAt(signal, slantM)
+  const edgeDb = twoWayEdgeLossDb(targetM - s.floorM, s.rangeM, s.controlling.rangeM, wavelengthM(o.radar.frequencyHz))
+  const snrDb = signal.atOneMetreDb + gainDb - 40 * Math.log10(slantM) - stcDb - edgeDb
+  return { slantM, elevationDeg, gainDb, stcDb, edgeDb, headDb: snrDb - need.requiredRatioDb + m.noiseGainDb, above: tan > signal.tanTilt }
+}
+
+/** Clutter of the resolution cell a target shares: residue over noise before STC, dB, NaN where none; null beyond the grid, where nothing was worked out. */
+function residueAt(o: OptionCells, s: SightPoint, slantM: number, stcDb: number): number | null {
+  const { grid, groundM } = o.site
+  const own = cellAt(grid, s.azimuthDeg, s.rangeM)
+  if (own < 0) return null
+  const row = Math.floor(own / grid.ranges) * grid.ranges
+  const j = own - row
+  const groundSlantM = slantRangeM(antennaM(o), groundM[own], s.rangeM, o.site.effectiveRadiusM[row / grid.ranges])
+  const shift = Number.isFinite(groundSlantM) ? Math.round((slantM - groundSlantM) / grid.rangeStepM) : 0
+  const gate = row + Math.min(grid.ranges - 1, Math.max(0, j + shift))
+  const overload = overloadOf(o)
+  const cnr = o.clutter.cnrDb[gate]
+  if (overload && cnr - stcDb + overload.excessDb[gate] > overload.limitDb) return cnr
+  const residue = residueOf(o)
+  return residue.cells[gate] - residue.lessDb
+}
+
+/** One place against one option on its own ray. */
+export function checkPlace(m: PlaceModel, at: NeedPlace, seen: PlaceSight, response: Response = MEAN_RESPONSE): FixFigure {
+  const { o } = m
+  const { sight, low } = seen
+  const base = { name: at.name, lon: at.lon, lat: at.lat, azimuthDeg: sight.azimuthDeg, rangeM: sight.rangeM }
+  const targetM = heightAt(at, sight.groundM)
+  const visible = visibleFrom(sight, targetM)
+  const finite = (x: number): number | null => (Number.isFinite(x) ? x : null)
+  const altM = finite(targetM)
+  if (visible === 'unknown')
+    return {
+      ...base,
+      ...NOTHING,
+      altM,
+      altAglM: finite(targetM - sight.groundM),
+      visible,
+      visibleLowK: low && 'unknown',
+      detectableLowK: low && false,
+      usableLowK: low && false,
+      cause: 'unknown',
+    }
+  const echo = echoOf(m, sight, targetM, radiusOf(o.earth, o.place.lat, sight.azimuthDeg))
+  const residueDb = residueAt(o, sight, echo.slantM, echo.stcDb)
+  const heard = isHeard(m.signal.reach, echo.slantM)
+  const parts = {
+    headDb: echo.headDb,
+    gainDb: echo.gainDb,
+    stcDb: echo.stcDb,
+    residueDb: residueDb ?? Number.NaN,
+    noiseGainDb: m.noiseGainDb,
+    above: echo.above,
+    echoResponseDb: response.echoDb,
+    residueResponseDb: response.residueDb,
+  }
+  const marginDb = signalMarginDb(parts)
+  const detectable = visible === 'yes' && heard && echo.headDb >= 0
+  const usable = detectable && residueDb !== null && marginDb >= 0
+  const cause = usable
+    ? 0
+    : !heard
+      ? lossCode('out-of-range')
+      : visible !== 'yes'
+        ? lossCode(visible === 'marginal' ? 'marginal' : 'masked')
+        : residueDb === null
+          ? lossCode('unknown')
+          : echo.edgeDb > 0 && signalMarginDb({ ...parts, headDb: echo.headDb + echo.edgeDb }) >= 0
+            ? lossCode('masked')
+            : signalLoss(parts)
+  return {
+    ...base,
+    slantRangeM: echo.slantM,
+    altM,
+    altAglM: targetM - sight.groundM,
+    floorM: sight.floorM,
+    floorAglM: sight.floorM - sight.groundM,
+    floorBandM: sight.floorBandM,
+    marginM: targetM - sight.floorM,
+    visible,
+    snrDb: echo.headDb + m.need.requiredRatioDb - m.noiseGainDb,
+    signalMarginDb: residueDb === null ? null : marginDb,
+    pd: residueDb === null || visible !== 'yes' ? null : pdOf(m.need.required)(marginDb),
+    detectable,
+    usable,
+    ...atLowK(m, targetM, low, residueDb, response),
+    cause: lossCauseAt(cause),
+    obstacle: sight.controlling.obstacle,
+    obstacleRangeM: sight.controlling.rangeM,
+  }
+}
+
+function atLowK(
+  m: PlaceModel,
+  targetM: number,
+  low: SightPoint | null,
+  residueDb: number | null,
+  response: Response,
+): Pick<FixFigure, 'visibleLowK' | 'detectableLowK' | 'usableLowK'> {
+  const { o } = m
+  if (!low || !o.lowK) return { visibleLowK: null, detectableLowK: null, usableLowK: null }
+  const visibleLowK = visibleFrom(low, targetM)
+  if (visibleLowK !== 'yes') return { visibleLowK, detectableLowK: false, usableLowK: false }
+  const echo = echoOf(m, low, targetM, radiusOf(o.lowK.earth, o.place.lat, low.azimuthDeg))
+  const detectableLowK = isHeard(m.signal.reach, echo.slantM) && echo.headDb >= 0
+  const over =
+    residueDb === null
+      ? Number.NEGATIVE_INFINITY
+      : echo.headDb + response.echoDb - aboveNoiseDb(residueDb - response.residueDb - echo.stcDb + m.noiseGainDb)
+  return { visibleLowK, detectableLowK, usableLowK: detectableLowK && over >= 0 }
+}
+
+const NOTHING = {
+  slantRangeM: null,
+  floorM: null,
+  floorAglM: null,
+  floorBandM: null,
+  marginM: null,
+  snrDb: null,
+  signalMarginDb: null,
+  pd: null,
+  detectable: false,
+  usable: false,
+  obstacle: '',
+  obstacleRangeM: null,
+} as const

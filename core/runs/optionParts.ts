@@ -1,0 +1,64 @@
+import type { ClutterOptions, LandTable } from '../clutter/index.ts'
+import { improvementDb, type SuppressionBy, suppressionBy } from '../doppler/index.ts'
+import type { Earth } from '../geodesy/index.ts'
+import type { SightCells, SiteCells } from '../masking/index.ts'
+import { floorFigures, LOW_K, type LowKCells, meanEffectiveRadiusM } from '../merit/index.ts'
+import type { SettledCandidate, SettledStudy } from '../study/index.ts'
+import type { Ground, Site } from '../terrain/index.ts'
+
+export const siteOf = (c: SettledCandidate): Site => ({
+  lon: c.lon,
+  lat: c.lat,
+  groundHeightM: c.groundHeightM,
+  clearingRadiusM: c.clearingRadiusM,
+})
+export const earthOf = (study: SettledStudy): Earth => ({
+  effectiveEarthFactor: study.atmosphere.effectiveEarthFactor,
+  earthRadiusM: study.atmosphere.earthRadiusM,
+})
+/** The earth of the smaller factor at which cover is worked out too. */
+export const lowEarthOf = (study: SettledStudy): Earth => ({ ...earthOf(study), effectiveEarthFactor: LOW_K })
+
+export function candidateOf(study: SettledStudy, id: string): SettledCandidate {
+  const found = study.candidates.find((c) => c.id === id)
+  if (!found) throw new Error(`no candidate ${id}`)
+  return found
+}
+
+/** What the study's radar does to each kind of clutter on this ground. */
+export const suppressionOf = (study: SettledStudy, ground: Ground): SuppressionBy =>
+  suppressionBy(study.radar, study.atmosphere, ground.codes)
+
+/**
+ * Options of the clutter kernels. With `residue` 'where-kinds-differ' a suppression that all kinds share is left to `residueOf`: it costs no pass
+ * and no grid of its own.
+ */
+export function clutterOptions(
+  study: SettledStudy,
+  ground: Ground,
+  landTable: LandTable | null,
+  residue: 'where-kinds-differ' | 'always' = 'where-kinds-differ',
+): ClutterOptions {
+  const by = suppressionOf(study, ground)
+  return {
+    ...(landTable ? { landTable } : {}),
+    ...(residue === 'always' || by.uniformDb === null ? { improvementDb: improvementDb(by, ground.codes) } : {}),
+  }
+}
+
+/** Cover of one mast height at the smaller k, from its sweep. */
+export function lowKOf(site: SiteCells, mask: SightCells, earth: Earth, key: string): LowKCells {
+  const { grid, floorM, floorBandM } = mask
+  return {
+    kind: 'lowK',
+    version: 1,
+    key,
+    grid,
+    heightM: mask.heightM,
+    k: earth.effectiveEarthFactor,
+    clearM: floorM.map((f, at) => f + floorBandM[at]),
+    floors: floorFigures(mask, grid),
+    earth,
+    meanRadiusM: meanEffectiveRadiusM(site),
+  }
+}
