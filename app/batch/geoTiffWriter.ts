@@ -1,7 +1,7 @@
 import { promisify } from 'node:util'
 import { deflate } from 'node:zlib'
 import type { GridShape } from '../../core/index.ts'
-import { geoKeysOf } from './geoKeys.ts'
+import { geoKeysOf } from './rasters/geoKeys.ts'
 
 const squeeze = promisify(deflate)
 

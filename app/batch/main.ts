@@ -19,13 +19,13 @@ process.stdout.on('error', (error: NodeJS.ErrnoException) => process.exit(error.
 async function run(line: CommandLine): Promise<void> {
   switch (line.command) {
     case 'points':
-      return (await import('./points.ts')).points(line, progress)
+      return (await import('./commands/points.ts')).points(line, progress)
     case 'horizon':
-      return (await import('./horizon.ts')).horizon(line, progress)
+      return (await import('./commands/horizon.ts')).horizon(line, progress)
     case 'cell':
-      return (await import('./cell.ts')).cell(line, progress)
+      return (await import('./commands/cell.ts')).cell(line, progress)
     case 'run':
-      return (await import('./run.ts')).run(line, progress)
+      return (await import('./commands/run.ts')).run(line, progress)
   }
 }
 

@@ -2,7 +2,7 @@ import type { Work } from '../../core/index.ts'
 
 /** Says on stderr how far things are: one line rewritten on a terminal, a few lines elsewhere once the input is known to be good. */
 export class Progress {
-  #last = 0
+  #last = performance.now()
   #shown = ''
   #lasting = false
   readonly #terminal = process.stderr.isTTY === true

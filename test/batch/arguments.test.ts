@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { readArguments } from '../../app/batch/arguments.ts'
+import { readPoints } from '../../app/batch/commands/points.ts'
 import { csvLine, csvNumber } from '../../app/batch/csv.ts'
-import { readPoints } from '../../app/batch/points.ts'
 
 describe('the command line', () => {
   it('is read into command, study and options', () => {

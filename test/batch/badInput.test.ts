@@ -1,4 +1,4 @@
-import { mkdtempSync, writeFileSync } from 'node:fs'
+import { mkdtempSync, readFileSync, writeFileSync } from 'node:fs'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { beforeAll, describe, expect, it } from 'vitest'
@@ -23,6 +23,17 @@ const cases: Case[] = [
     name: 'missing file',
     doc: tinyDoc({ terrain: [{ file: 'hill.tif' }] }),
     says: /^hill\.tif, terrain\[0\]\.file: there is no such file/,
+  },
+  {
+    name: 'huge declared size',
+    prepare: (dir) => {
+      const path = join(dir, 'moor.tif')
+      const bytes = readFileSync(path)
+      // Values of the first two tags, width and height.
+      for (const at of [18, 30]) bytes.writeUInt32LE(2_000_000, at)
+      writeFileSync(path, bytes)
+    },
+    says: /^moor\.tif.*2000000 × 2000000/,
   },
   {
     name: 'all no data',
@@ -105,7 +116,6 @@ describe('bad input ends with 2 and one sentence', () => {
   })
   it('a file cut short', async () => {
     const { dir, path } = await tinyStudy()
-    const { readFileSync } = await import('node:fs')
     const whole = readFileSync(join(dir, 'moor.tif'))
     writeFileSync(join(dir, 'moor.tif'), whole.subarray(0, whole.length - 200))
     const { code, err } = await batchLater('horizon', path, '--candidate', 'A', '--height', '20')

@@ -4,8 +4,8 @@ import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { describe, expect, it } from 'vitest'
 import { FileSource } from '../../app/batch/fileSource.ts'
-import { mapLattice } from '../../app/batch/mapLattice.ts'
-import { NO_PERCENT, sightRaster } from '../../app/batch/sightRaster.ts'
+import { mapLattice } from '../../app/batch/rasters/mapLattice.ts'
+import { NO_PERCENT, sightRaster } from '../../app/batch/rasters/sightRaster.ts'
 import { buildGround, finish, type Ground, openTerrain, postingM, readClasses, uniformCode } from '../../core/index.ts'
 
 // in-sight.tif against two other ways to the same answer, on real ground, with a 4/3 earth of 6 378 137 m (GDAL: curvature coefficient 0.75):

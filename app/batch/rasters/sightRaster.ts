@@ -12,7 +12,7 @@ import {
   type Site,
   sweepRays,
   type Work,
-} from '../../core/index.ts'
+} from '../../../core/index.ts'
 
 /** What one mast height sees, cell by cell of a lattice. */
 export interface SightRaster {

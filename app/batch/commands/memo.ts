@@ -15,8 +15,8 @@ import {
   WORLD_WIDTH_M,
   worldXFromLon,
   worldYFromLat,
-} from '../../core/index.ts'
-import { buildMemo, type MemoFile, type MemoMap, makePdf, pngDataUrl } from '../memo/index.ts'
+} from '../../../core/index.ts'
+import { buildMemo, type MemoFile, type MemoMap, makePdf, pngDataUrl } from '../../memo/index.ts'
 
 /** Size of a map picture and its margin, pixels: as in the app. */
 const MAP_PX = { width: 920, height: 920 }
@@ -47,7 +47,7 @@ export function memoMap(cells: OptionCells, result: OptionResult, radiusM: numbe
 
 /** Version of the program. */
 async function programVersion(): Promise<string> {
-  const text = await readFile(new URL('../../package.json', import.meta.url), 'utf8')
+  const text = await readFile(new URL('../../../package.json', import.meta.url), 'utf8')
   return (JSON.parse(text) as { version: string }).version
 }
 

@@ -1,4 +1,4 @@
-import { DEG_PER_RAD, type GridShape, type LonLat, type PolarShape, wrap360 } from '../../core/index.ts'
+import { DEG_PER_RAD, type GridShape, type LonLat, type PolarShape, wrap360 } from '../../../core/index.ts'
 import { eachFromSite } from './mapLattice.ts'
 
 /** Polar cell under the centre of each cell of a lattice; -1 beyond the grid. Made once per candidate. */

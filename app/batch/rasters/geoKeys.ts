@@ -1,4 +1,4 @@
-import type { Crs } from '../../core/index.ts'
+import type { Crs } from '../../../core/index.ts'
 
 /** GeoTIFF key directory of a CRS: three tags' worth of numbers and text (OGC GeoTIFF 1.1). */
 export interface GeoKeyTags {

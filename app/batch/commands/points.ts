@@ -11,12 +11,12 @@ import {
   type SightPoint,
   sightPoint,
   siteOf,
-} from '../../core/index.ts'
-import type { CommandLine } from './arguments.ts'
-import { csvLine, csvNumber } from './csv.ts'
-import { loadGround } from './loadGround.ts'
-import { candidateNamed, heightOption, loadStudy, readText, sayWarnings, tiltOption } from './loadStudy.ts'
-import { makeTurns, type Progress } from './progress.ts'
+} from '../../../core/index.ts'
+import type { CommandLine } from '../arguments.ts'
+import { csvLine, csvNumber } from '../csv.ts'
+import { loadGround } from '../loadGround.ts'
+import { candidateNamed, heightOption, loadStudy, readText, sayWarnings, tiltOption } from '../loadStudy.ts'
+import { makeTurns, type Progress } from '../progress.ts'
 
 export const POINT_COLUMNS = [
   'lon',

@@ -1,8 +1,8 @@
-import { cellLedger } from '../../core/index.ts'
-import { type CommandLine, numberOption, usageError } from './arguments.ts'
-import { loadGround } from './loadGround.ts'
-import { candidateNamed, heightOption, loadStudy, sayWarnings, tiltOption } from './loadStudy.ts'
-import type { Progress } from './progress.ts'
+import { cellLedger } from '../../../core/index.ts'
+import { type CommandLine, numberOption, usageError } from '../arguments.ts'
+import { loadGround } from '../loadGround.ts'
+import { candidateNamed, heightOption, loadStudy, sayWarnings, tiltOption } from '../loadStudy.ts'
+import type { Progress } from '../progress.ts'
 
 /** `cell`: the ledger of one place as JSON. */
 export async function cell(line: CommandLine, progress: Progress): Promise<void> {

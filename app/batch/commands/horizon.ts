@@ -1,9 +1,9 @@
-import { earthOf, type HorizonRow, horizonAt, siteOf } from '../../core/index.ts'
-import { type CommandLine, numberOption, usageError } from './arguments.ts'
-import { csvLine, csvNumber } from './csv.ts'
-import { loadGround } from './loadGround.ts'
-import { candidateNamed, heightOption, loadStudy, sayWarnings } from './loadStudy.ts'
-import { makeTurns, type Progress } from './progress.ts'
+import { earthOf, type HorizonRow, horizonAt, siteOf } from '../../../core/index.ts'
+import { type CommandLine, numberOption, usageError } from '../arguments.ts'
+import { csvLine, csvNumber } from '../csv.ts'
+import { loadGround } from '../loadGround.ts'
+import { candidateNamed, heightOption, loadStudy, sayWarnings } from '../loadStudy.ts'
+import { makeTurns, type Progress } from '../progress.ts'
 
 export const HORIZON_COLUMNS = ['azimuth_deg', 'elevation_deg', 'range_m', 'height_m', 'lon', 'lat', 'obstacle'] as const
 const MOST_AZIMUTHS = 360_000

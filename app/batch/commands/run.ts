@@ -13,19 +13,19 @@ import {
   type SettledStudy,
   type StudyDoc,
   settle,
-} from '../../core/index.ts'
-import type { MemoMap } from '../memo/index.ts'
-import type { CommandLine } from './arguments.ts'
+} from '../../../core/index.ts'
+import type { MemoMap } from '../../memo/index.ts'
+import type { CommandLine } from '../arguments.ts'
+import { encodeGeoTiff } from '../geoTiffWriter.ts'
+import { loadGround } from '../loadGround.ts'
+import { loadStudy, sayWarnings } from '../loadStudy.ts'
+import { openOutFolder, SUMMARY_FORMAT } from '../outFolder.ts'
+import { drive, type Progress } from '../progress.ts'
+import { mapLattice } from '../rasters/mapLattice.ts'
+import { polarCells, polarRaster } from '../rasters/polarRaster.ts'
+import { NO_PERCENT, sightRaster } from '../rasters/sightRaster.ts'
 import { chooseLayers, chooseOptions, EXTRA_LAYERS, narrowed } from './chooseOptions.ts'
-import { encodeGeoTiff } from './geoTiffWriter.ts'
 import { horizonCsv } from './horizon.ts'
-import { loadGround } from './loadGround.ts'
-import { loadStudy, sayWarnings } from './loadStudy.ts'
-import { mapLattice } from './mapLattice.ts'
-import { openOutFolder, SUMMARY_FORMAT } from './outFolder.ts'
-import { polarCells, polarRaster } from './polarRaster.ts'
-import { drive, type Progress } from './progress.ts'
-import { NO_PERCENT, sightRaster } from './sightRaster.ts'
 
 /** `run`: every option picked, one after the other, into a folder that appears whole at the end. */
 export async function run(line: CommandLine, progress: Progress): Promise<void> {

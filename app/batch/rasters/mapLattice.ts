@@ -1,4 +1,4 @@
-import { type GridShape, geodesicInverse, gridPosition, type LonLat, postingM, RAD_PER_DEG } from '../../core/index.ts'
+import { type GridShape, geodesicInverse, gridPosition, type LonLat, postingM, RAD_PER_DEG } from '../../../core/index.ts'
 
 /** A terrain cell this much finer than asked for still counts as equal. */
 const EQUAL = 0.01

@@ -1,6 +1,6 @@
-import { LAYER_IDS, type LayerId, type OptionRef, optionsOf, type StudyDoc } from '../../core/index.ts'
-import { numberOption, usageError } from './arguments.ts'
-import { candidateNamed, type LoadedStudy } from './loadStudy.ts'
+import { LAYER_IDS, type LayerId, type OptionRef, optionsOf, type StudyDoc } from '../../../core/index.ts'
+import { numberOption, usageError } from '../arguments.ts'
+import { candidateNamed, type LoadedStudy } from '../loadStudy.ts'
 
 /** Rasters that every run writes, by file name without ending. */
 const STANDARD = ['in-sight', 'coverage-floor', 'clutter-to-noise'] as const
