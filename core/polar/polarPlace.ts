@@ -26,7 +26,7 @@ export const gaussianRadiusM = (latDeg: number): number => Math.sqrt(radiusOfCur
 
 /**
  * Area of one cell of each ring, m²: geodesic ring 2πR²(cos φ₁ − cos φ₂) shared by the azimuths, φ = ground range / R, on the sphere of Gaussian
- * curvature at the site (within 1 in 10⁵ of the ellipsoid to 500 km).
+ * curvature at the site (within 1 in 10⁵ of the ellipsoid to 100 km).
  */
 export function cellAreasM2(grid: PolarShape, siteLatDeg: number): Float64Array {
   const r = gaussianRadiusM(siteLatDeg)

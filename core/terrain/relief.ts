@@ -25,7 +25,7 @@ export function reliefBlock(shape: GridShape): { cols: number; rows: number; col
 /**
  * Relief per block of the raster (COMPUTE §4): heights without cover averaged in blocks, slope by central differences of blocks (one-sided at an
  * edge), relief slope = mean slope within 1 km, at least 2° = high, high with over 300 m between blocks within 1 km = mountains. A block needs 25 %
- * of its posts, a disc 25 % of its blocks, else unknown.
+ * of its posts within the raster, a disc 25 % of its blocks, else unknown.
  */
 export function* buildRelief(shape: GridShape, heightM: Float32Array): Work<RasterGrid<Uint8Array>> {
   const { cols, rows, colM, rowM } = reliefBlock(shape)
@@ -33,7 +33,6 @@ export function* buildRelief(shape: GridShape, heightM: Float32Array): Work<Rast
   const height = Math.ceil(shape.height / rows)
   const steps = 2 * height
   const mean = new Float32Array(width * height).fill(Number.NaN)
-  const least = LEAST_SHARE * cols * rows
   const sum = new Float64Array(width)
   const count = new Int32Array(width)
   for (let by = 0; by < height; by++) {
@@ -55,10 +54,14 @@ export function* buildRelief(shape: GridShape, heightM: Float32Array): Work<Rast
         count[bx] += n
       }
     }
-    for (let bx = 0; bx < width; bx++) if (count[bx] >= least) mean[by * width + bx] = sum[bx] / count[bx]
+    const tall = Math.min(rows, shape.height - by * rows)
+    for (let bx = 0; bx < width; bx++) {
+      const least = LEAST_SHARE * tall * Math.min(cols, shape.width - bx * cols)
+      if (count[bx] >= least) mean[by * width + bx] = sum[bx] / count[bx]
+    }
     yield { done: by + 1, total: steps }
   }
-  const slope = slopeDeg(mean, width, height, colM, rowM)
+  const slope = slopeDeg(mean, middlesM(width, cols, shape.width, colM / cols), middlesM(height, rows, shape.height, rowM / rows))
   const samples = new Uint8Array(width * height).fill(RELIEF.unknown)
   const disc = discSpans(colM, rowM)
   for (let by = 0; by < height; by++) {
@@ -81,20 +84,26 @@ export function* buildRelief(shape: GridShape, heightM: Float32Array): Work<Rast
   }
 }
 
+/** Middles of the blocks along one axis, m; the last block may hold fewer posts. */
+const middlesM = (blocks: number, posts: number, size: number, postM: number): Float64Array =>
+  Float64Array.from({ length: blocks }, (_, b) => (b * posts + (Math.min(posts, size - b * posts) - 1) / 2) * postM)
+
 /** Slope of the block means, degrees; NaN where the block or both neighbours of an axis are unknown. */
-function slopeDeg(mean: Float32Array, width: number, height: number, colM: number, rowM: number): Float32Array {
+function slopeDeg(mean: Float32Array, xM: Float64Array, yM: Float64Array): Float32Array {
+  const width = xM.length
+  const height = yM.length
   const out = new Float32Array(mean.length)
   const known = (bx: number, by: number): number => (bx >= 0 && by >= 0 && bx < width && by < height ? mean[by * width + bx] : Number.NaN)
-  const rise = (before: number, here: number, after: number, stepM: number): number => {
-    if (!Number.isNaN(before + after)) return (after - before) / (2 * stepM)
-    if (!Number.isNaN(after)) return (after - here) / stepM
-    return (here - before) / stepM
+  const rise = (before: number, here: number, after: number, at: Float64Array, b: number): number => {
+    if (!Number.isNaN(before + after)) return (after - before) / (at[b + 1] - at[b - 1])
+    if (!Number.isNaN(after)) return (after - here) / (at[b + 1] - at[b])
+    return (here - before) / (at[b] - at[b - 1])
   }
   for (let by = 0; by < height; by++)
     for (let bx = 0; bx < width; bx++) {
       const here = mean[by * width + bx]
-      const dx = width === 1 ? 0 : rise(known(bx - 1, by), here, known(bx + 1, by), colM)
-      const dy = height === 1 ? 0 : rise(known(bx, by - 1), here, known(bx, by + 1), rowM)
+      const dx = width === 1 ? 0 : rise(known(bx - 1, by), here, known(bx + 1, by), xM, bx)
+      const dy = height === 1 ? 0 : rise(known(bx, by - 1), here, known(bx, by + 1), yM, by)
       out[by * width + bx] = Math.atan(Math.sqrt(dx * dx + dy * dy)) * DEG_PER_RAD
     }
   return out
