@@ -2,7 +2,7 @@ import { useEffect, useRef } from 'react'
 import { geodesicInverse, type LonLat, type Probe } from '../../../core/index.ts'
 import type { StudyClient } from '../../compute/client.ts'
 import { formatHeight, formatPosition, MAP_WORDS, placeLine, textOf, type UnitSystem, valueLine } from '../../words/index.ts'
-import type { MapHub } from '../types.ts'
+import type { MapHub, PointerPlace } from '../types.ts'
 
 /** Pointer read-out. Written to the page by the pointer itself, never by render. */
 export function ReadOut({
@@ -24,13 +24,14 @@ export function ReadOut({
     let asking = false
     let latest: LonLat | null = null
     let known: Probe | null = null
+    let gone = false
     const write = (first: string, name = '', number = '', word = '') => {
       if (place.current) place.current.textContent = first
       if (!value.current) return
       value.current.replaceChildren(...lineOf(name, number, word))
     }
     const reply = (probe: Probe | null, at: LonLat) => {
-      if (!probe || !latest) return
+      if (gone || !probe || !latest) return
       known = probe
       const line = valueLine(probe, units)
       write(
@@ -50,14 +51,14 @@ export function ReadOut({
         .then((probe) => {
           asking = false
           reply(probe, at)
-          if (!probe && at !== latest) ask()
+          if (!gone && !probe && at !== latest) ask()
         })
         .catch(() => {
           // the shell reports failures of the worker; the read-out keeps to what it knows
           asking = false
         })
     }
-    const stop = hub.pointer.listen((p) => {
+    const follow = (p: PointerPlace | null) => {
       latest = p?.at ?? null
       if (!p) {
         known = null
@@ -73,7 +74,7 @@ export function ReadOut({
         write(placeLine(to.azimuthDeg, to.distanceM, undefined, units))
       }
       ask()
-    })
+    }
     // a candidate in the hand: where it would stand
     const writeTrial = () => {
       const trial = hub.trial.get()
@@ -85,9 +86,16 @@ export function ReadOut({
       const ground = groundM === undefined ? '' : groundM === null ? MAP_WORDS.noGroundHere : textOf(formatHeight(groundM, units))
       write(formatPosition(trial), groundM === null ? '' : MAP_WORDS.ground, ground)
     }
-    const stops = [stop, hub.trial.listen(writeTrial), hub.trialAnswer.listen(writeTrial)]
-    write(hint)
+    const stops = [
+      hub.pointer.listen(follow),
+      hub.trial.listen(writeTrial),
+      hub.trialAnswer.listen(writeTrial),
+      // new results under a pointer that rests
+      client.listen((tell) => tell.kind === 'dirty' && ask()),
+    ]
+    follow(hub.pointer.get())
     return () => {
+      gone = true
       for (const end of stops) end()
     }
   }, [client, hub, site, units, hint])
