@@ -1,8 +1,8 @@
 import { beforeAll, describe, expect, it } from 'vitest'
-import { type ClutterCells, clutterToNoise, pointClutter } from '../../core/clutter/index.ts'
+import { type ClutterCells, clutterToNoise, discreteEchoes, pointClutter } from '../../core/clutter/index.ts'
 import type { Earth } from '../../core/geodesy/index.ts'
 import { type SightCells, type SiteCells, sweep } from '../../core/masking/index.ts'
-import { CELL, cellCentre, isMasked, isUnknown, type PolarShape } from '../../core/polar/index.ts'
+import { azimuthIndexOf, CELL, cellCentre, isMasked, isUnknown, type PolarShape } from '../../core/polar/index.ts'
 import type { Ground, Site } from '../../core/terrain/index.ts'
 import { finish } from '../../core/work/index.ts'
 import { testRadar } from '../radar/testRadar.ts'
@@ -73,6 +73,44 @@ describe('clutter at a point', () => {
       expect(improvement).toBeLessThan(40 + 1e-4)
       compared++
     }
+  })
+
+  it('equals the cell with gas, rain, a tide and discrete echoes, and its factors add up', async () => {
+    const masts = [
+      { col: 330, row: 260, rcsM2: 5_000 },
+      { col: 250, row: 350, rcsM2: 20_000 },
+    ]
+    const wet = await hills(masts)
+    const swept = finish(sweep(wet.ground, wet.site, [HEIGHT_M], GRID, EARTH))
+    const discretes = discreteEchoes(wet.ground, wet.site, HEIGHT_M, EARTH, 20_000)
+    expect(discretes.length).toBeGreaterThan(0)
+    const options = {
+      weather: { gas: 'p676', rainRateMmH: 5, rainTopM: 3_000, rainExtentM: 9_000, seaState: 4, tideM: 1 },
+      discretes,
+      improvementDb: { byCode: [20, 25, 30, 40, 0], sea: 10, rain: 5, discrete: 45, folded: 0 },
+    } as const
+    const all = finish(clutterToNoise(swept.site, swept.masks[0], wet.ground.codes, wet.site, HEIGHT_M, EARTH, RADAR, 1, options))
+    const { sideLobeCnrDb, sideLobeResidueDb } = all
+    const at = pointClutter(wet.ground, wet.site, HEIGHT_M, EARTH, RADAR, 1, GRID, { ...options, sideLobeCnrDb, sideLobeResidueDb })
+    const random = randomNumbers(5)
+    const near = discretes.map((d) => azimuthIndexOf(GRID, d.azimuthDeg) * GRID.ranges + Math.floor(d.rangeM / GRID.rangeStepM))
+    const places = [...near, ...Array.from({ length: 600 }, () => Math.floor(random() * all.cnrDb.length))]
+    let compared = 0
+    for (const cell of places) {
+      if (isUnknown(swept.masks[0].state[cell]) || Number.isNaN(all.cnrDb[cell])) continue
+      const point = at(cellCentre(wet.site, GRID, cell))
+      expect(Math.abs((point.cnrDb ?? Number.NaN) - all.cnrDb[cell]), `cell ${cell}`).toBeLessThanOrEqual(0.05)
+      expect(Math.abs((point.residueDb ?? Number.NaN) - all.residueDb[cell]), `residue of cell ${cell}`).toBeLessThanOrEqual(0.05)
+      const sum = point.lines.reduce(
+        (s, l) => (l.of !== 'clutter_to_noise_db' || l.op === 'info' ? s : l.op === 'subtract' ? s - l.value : s + l.value),
+        0,
+      )
+      expect(sum).toBeCloseTo(point.cnrDb ?? Number.NaN, 6)
+      compared++
+    }
+    expect(compared).toBeGreaterThan(400)
+    const onMast = at(cellCentre(wet.site, GRID, near[0])).lines.map((l) => l.key)
+    for (const key of ['gas_loss', 'rain_loss', 'rain', 'discretes', 'side_lobes']) expect(onMast).toContain(key)
   })
 
   it('works out the side-lobe term itself, in the grid and beyond it', () => {

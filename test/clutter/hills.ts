@@ -23,7 +23,7 @@ export function randomNumbers(first: number): () => number {
 }
 
 /** Invented hills, 36 km square at 60 m posting in UTM 33N, with patches of land cover and one lake of voids; the site stands in the middle. */
-export async function hills(): Promise<{ ground: Ground; site: Site }> {
+export async function hills(masts: readonly { col: number; row: number; rcsM2: number }[] = []): Promise<{ ground: Ground; site: Site }> {
   const width = 600
   const height = 600
   const crs = await crsFromEpsg(32633)
@@ -45,7 +45,12 @@ export async function hills(): Promise<{ ground: Ground; site: Site }> {
       heightM[at] = (col - 420) ** 2 + (row - 200) ** 2 < 400 ? Number.NaN : z
       code[at] = (Math.floor(col / 17) + Math.floor(row / 23) * 3) % HILL_CODES.length
     }
-  const ground = finish(buildGround({ serial: 1, shape, heightM, code, codes: HILL_CODES, obstacles: [], verticalErrorM: 10 }))
-  const [lon, lat] = gridPosition(shape).toLonLat(300, 300)
+  const place = gridPosition(shape)
+  const obstacles = masts.map(({ col, row, rcsM2 }, n) => {
+    const [lon, lat] = place.toLonLat(col, row)
+    return { name: `mast ${n + 1}`, path: [{ lon, lat }], heightM: 60, topM: null, widthM: 30, rcsM2, verticalErrorM: null }
+  })
+  const ground = finish(buildGround({ serial: 1, shape, heightM, code, codes: HILL_CODES, obstacles, verticalErrorM: 10 }))
+  const [lon, lat] = place.toLonLat(300, 300)
   return { ground, site: { lon, lat, groundHeightM: null, clearingRadiusM: 50 } }
 }
