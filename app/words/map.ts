@@ -44,7 +44,7 @@ export const MAP_WORDS = {
   north: 'N',
   /** What stands under a place that another chart's pointer gives. */
   pointing: { map: '', horizon: 'controls the horizon', profile: 'on the profile' },
-  pointHint: 'Point at the map for azimuth, range and value',
+  pointHint: 'Point at the map to read a place',
   placing: 'Click where the candidate stands · Esc to leave',
   movingByKeys: 'Arrows move it, Shift for small steps · Enter sets it, Esc puts it back',
   cell: 'cell of the ledger',
@@ -57,7 +57,7 @@ export const MAP_WORDS = {
   stretch: 'Stretch',
   mast: 'Mast, m',
   mastOf: 'Mast height, m above ground',
-  strips: { inSight: 'in sight', clutter: 'over 40 dB' },
+  strips: { inSight: 'in sight', clutter: '> 40\u202fdB' },
   dragMast: 'drag the mast',
   mastKeys: 'Arrows step through stated heights, Shift for 0.5 m between',
   addHeight: (text: string) => `Add ${text}`,
@@ -126,6 +126,7 @@ export function legendStops(
   return { unit: '', labels: stops.map((v) => ({ at: share(v), text: formatNumber(v, Number.isInteger(v) ? 0 : 1) })) }
 }
 
+const ABOUT_SUPPRESSION = /^suppression/i
 const ABOUT_CLUTTER = /clutter|land table/i
 const CLUTTER_LAYERS: readonly LayerId[] = ['clutter-strength', 'clutter-to-noise', 'suppression-needed']
 
@@ -136,7 +137,9 @@ export function legendMarks(
 ): { readonly note: string; readonly warned: readonly string[] } {
   const parts = LAYER_WORDS[layer].note.split(' · ')
   const own = parts.filter((p) => p.includes('from memory'))
-  const concerns = marks.filter((m) => CLUTTER_LAYERS.includes(layer) || !ABOUT_CLUTTER.test(m.about))
+  const concerns = marks.filter((m) =>
+    ABOUT_SUPPRESSION.test(m.about) ? layer === 'suppression-needed' : CLUTTER_LAYERS.includes(layer) || !ABOUT_CLUTTER.test(m.about),
+  )
   const others = concerns
     .filter((m) => !(m.mark === 'from memory' && own.length > 0 && /land/i.test(m.about)))
     .map((m) => `${(m.about.split(/[:,;(]/)[0] ?? '').trim()} · ${m.mark}`)

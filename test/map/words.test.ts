@@ -38,6 +38,7 @@ describe('words of the map', () => {
       { mark: 'from memory', about: 'land clutter table: a book' },
       { mark: 'outside model', about: 'sea clutter not assessed' },
       { mark: 'default', about: 'uniform terrain' },
+      { mark: 'by hand', about: 'Suppression: as stated for the radar' },
     ]
     expect(legendMarks('clutter-to-noise', marks).warned).toEqual([
       'land table from memory',
@@ -45,6 +46,7 @@ describe('words of the map', () => {
       'uniform terrain · default',
     ])
     expect(legendMarks('clutter-to-noise', marks).note).not.toContain('memory')
+    expect(legendMarks('suppression-needed', marks).warned).toContain('Suppression · by hand')
     expect(legendMarks('coverage-floor', marks).warned).toEqual(['uniform terrain · default'])
   })
   it('leaves out what is not known, and says where no ground is known', () => {
