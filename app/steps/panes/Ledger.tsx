@@ -30,7 +30,7 @@ export function Ledger({ ledger }: { ledger: CellLedger }) {
         </thead>
         {[...groups].map(([of, rows]) => (
           <tbody key={of}>
-            {rows.map((line) => (
+            {rows.map((line, i) => (
               <tr key={line.key}>
                 <td className="text">{line.label}</td>
                 <td>
@@ -40,7 +40,7 @@ export function Ledger({ ledger }: { ledger: CellLedger }) {
                   ) : null}
                 </td>
                 <td className="text source">
-                  {line.mark ? <Mark>{line.mark}</Mark> : null} {[line.model, line.source].filter(Boolean).join(' · ')}
+                  {line.mark ? <Mark>{line.mark}</Mark> : null} {i > 0 && originOf(rows[i - 1]) === originOf(line) ? '' : originOf(line)}
                 </td>
               </tr>
             ))}
@@ -53,6 +53,9 @@ export function Ledger({ ledger }: { ledger: CellLedger }) {
     </div>
   )
 }
+
+/** Model and source; said once for a run of lines that share them. */
+const originOf = (line: LedgerLine): string => [line.model, line.source].filter(Boolean).join(' · ')
 
 const shownValue = (line: LedgerLine): string => {
   if (typeof line.value === 'string') return line.value

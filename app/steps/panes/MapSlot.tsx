@@ -54,7 +54,7 @@ export function MapSlot({ hub }: { hub: MapHub }) {
   const session = useSession()
   const { study, view, client } = session
   const set = view.getState().set
-  const { option, layer, need, units, theme, placing, cell, chart, profileAzimuthDeg } = useView((v) => v)
+  const { step, option, layer, need, units, theme, placing, cell, chart, profileAzimuthDeg } = useView((v) => v)
   const ground = useGround((g) => g.ground)
   const obstacles = useGround((g) => g.obstacles)
   const roads = useGround((g) => g.roads)
@@ -62,6 +62,8 @@ export function MapSlot({ hub }: { hub: MapHub }) {
   const maxRangeM = useDoc((d) => settledOf(d)?.run.maxRangeM ?? d.radar.instrumentedRangeM ?? 60_000)
   const candidates = useMapCandidates()
   const needs = useMapNeeds(maxRangeM)
+  // a whole-sheet step lies over the map and explains figures itself
+  const sheet = step === 'compare' || step === 'memo'
   const starting = useDoc(hasStartingRadar)
   const shownMarks = useMemo(() => (starting ? [...marks, { mark: 'default', about: 'radar: starting values' }] : marks), [marks, starting])
   const select = (id: string) => {
@@ -103,7 +105,7 @@ export function MapSlot({ hub }: { hub: MapHub }) {
         progress={null}
         onStop={session.stop}
         lower={
-          chart && option ? (
+          chart && option && !sheet ? (
             <Suspense fallback={null}>
               <LowerPanel hub={hub} />
             </Suspense>

@@ -47,8 +47,12 @@ export function Shell() {
   const whole = WHOLE_SHEET.has(step)
   return (
     <div className="shell" data-form={formOpen ? 'open' : 'closed'} data-memo={memoOpen ? 'open' : 'closed'}>
-      <TopBar />
-      <StepIndex />
+      <FaultBoundary>
+        <TopBar />
+      </FaultBoundary>
+      <FaultBoundary>
+        <StepIndex />
+      </FaultBoundary>
       <section className={whole ? 'sheet' : 'form'} aria-label={STEP_WORDS[step].name}>
         <header>
           <h2>{STEP_WORDS[step].name}</h2>
