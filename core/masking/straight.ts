@@ -1,6 +1,6 @@
 // Plane in which every straight ray over the effective sphere is a straight line, for every antenna height: a point at ground range s and height z
 // goes to X = R tan(s/R), Y = R − R²/((R + z) cos(s/R)). This is a projective map of the vertical plane, so lines stay lines exactly; verticals stay
-// vertical and higher stays higher. Written with D(s) = R (1/cos(s/R) − 1): Y = (z − D)/(1 + z/R). The series below are good to 1 mm at 500 km and
+// vertical and higher stays higher. Written with D(s) = R (1/cos(s/R) − 1): Y = (z − D)/(1 + z/R). The series below are good to 1 mm at 250 km and
 // 9 km height, to micrometres at 150 km. R infinite (flat earth): X = s, Y = z.
 
 /** X of a ground range, m. `inverse` = 1/R. */
