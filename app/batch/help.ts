@@ -14,7 +14,8 @@ run      Works out every option of the study (candidate, mast height, tilt) and 
          --height M       only this mast height of the study, m above ground
          --tilt DEG       only this tilt of the study, deg
          --layers LIST    further rasters beside the standard ones, by name with commas, or all:
-                          height-to-see, depression, clutter-strength, suppression-needed
+                          height-to-see, depression, clutter-strength; for each need of a layer or polygon
+                          suppression-needed, usable, probability-of-detection, signal-margin, cause-of-loss
          --no-memo        leave out memo.pdf
          In DIR: summary.json, memo.pdf; in DIR/<candidate>/<height>m: horizon.csv, in-sight.tif (per cent of the
          cell's ground in sight), coverage-floor.tif (m above mean sea level); below it in <tilt>deg:

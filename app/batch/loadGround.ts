@@ -35,6 +35,7 @@ export async function loadGround(loaded: LoadedStudy, candidates: readonly Settl
       obstacles: study.obstacles,
       roads: study.roads,
       lowAngleLandTable: study.lowAngleLandTable,
+      needs: loaded.doc.needs ?? [],
       circles: candidates.map((c) => ({ lon: c.lon, lat: c.lat, radiusM: study.run.maxRangeM })),
     }
     const read = await readGround(request, door, (doing, done, total) => progress.say(doing, done, total))

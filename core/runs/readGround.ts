@@ -2,9 +2,10 @@ import { type LandTable, readLandTable } from '../clutter/index.ts'
 import { InputError } from '../errors/index.ts'
 import { type ByteSource, openTerrain, type Progress, readClasses, readFeatures } from '../intake/index.ts'
 import { type GroundCode, groundCodes, type TerrainName, uniformCode } from '../landcover/index.ts'
+import { type NeedPlaces, readPlaces } from '../merit/index.ts'
 import { type Obstacle, type Road, readObstacles, readRoads } from '../obstacles/index.ts'
 import { type Circle, type GridShape, planGround, postingM } from '../raster/index.ts'
-import type { LandCoverDoc, TerrainFileDoc } from '../study/index.ts'
+import type { LandCoverDoc, NeedDoc, TerrainFileDoc } from '../study/index.ts'
 
 /** What of a study makes its ground. */
 export interface GroundRequest {
@@ -16,6 +17,8 @@ export interface GroundRequest {
   readonly lowAngleLandTable: string | null
   /** Circles of the candidates: they choose the window where the terrain is too large to be read whole. */
   readonly circles: readonly Circle[]
+  /** Needs as the study states them; the files of fixes, tracks and polygons are read. */
+  readonly needs?: readonly NeedDoc[]
 }
 /** What reading the files of a study gives. The arrays are fresh and may be transferred. */
 export interface GroundRead {
@@ -26,6 +29,8 @@ export interface GroundRead {
   readonly obstacles: readonly Obstacle[]
   readonly roads: readonly Road[]
   readonly landTable: LandTable | null
+  /** What the files of needs hold, in the order of the needs. */
+  readonly needPlaces: readonly NeedPlaces[]
   readonly verticalErrorM: number
   /** A line per file: what was read. */
   readonly files: readonly { readonly name: string; readonly describe: string }[]
@@ -99,9 +104,26 @@ export async function readGround(
   if (roadFile) files.push({ name: roadFile, describe: `${roads.length} roads and railways` })
   const landTable = tableFile ? readLandTable(jsonOf(await door.text(tableFile, 'tables.lowAngleLand'), tableFile), tableFile) : null
   if (tableFile) files.push({ name: tableFile, describe: 'low-angle land clutter table' })
+  const needPlaces: NeedPlaces[] = []
+  for (const [i, need] of (request.needs ?? []).entries()) {
+    const { id, kind, file } = need
+    if (kind === 'layer' || file === undefined) continue
+    const heightM = typeof need.heightM === 'number' ? need.heightM : (need.heightM?.[0] ?? null)
+    const asked = { id, kind, file, heightM, heightAbove: need.heightAbove ?? 'sea', qnhHpa: need.qnhHpa ?? null } as const
+    const read = readPlaces(await door.text(file, `needs[${i}].file`), asked)
+    needPlaces.push(read)
+    files.push({ name: file, describe: placesWords(read) })
+  }
   const verticalErrorM = request.terrain.reduce((worst, t) => Math.max(worst, t.verticalErrorM ?? DEFAULT_VERTICAL_ERROR_M), 0)
-  return { shape, heightM, code, codes, obstacles, roads, landTable, verticalErrorM, files, warnings }
+  return { shape, heightM, code, codes, obstacles, roads, landTable, needPlaces, verticalErrorM, files, warnings }
 }
+
+const placesWords = ({ kind, places, rings }: NeedPlaces): string =>
+  kind === 'polygon'
+    ? `outline of ${rings.length} rings`
+    : kind === 'track'
+      ? `track of ${places.length} corners`
+      : `${places.length} fixes`
 
 const told =
   (onProgress: (doing: string, done: number, total: number) => void, doing: string): Progress =>

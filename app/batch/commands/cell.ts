@@ -1,4 +1,4 @@
-import { cellLedger } from '../../../core/index.ts'
+import { cellLedger, clutterOptions, siteOf } from '../../../core/index.ts'
 import { type CommandLine, numberOption, usageError } from '../arguments.ts'
 import { loadGround } from '../loadGround.ts'
 import { candidateNamed, heightOption, loadStudy, sayWarnings, tiltOption } from '../loadStudy.ts'
@@ -18,12 +18,13 @@ export async function cell(line: CommandLine, progress: Progress): Promise<void>
     lat: numberOption('at', parts[1] as string, -90, 90, 'latitude'),
   }
   const { ground, read, warnings } = await loadGround(loaded, [candidate], progress)
+  const { study } = loaded
   const ledger = cellLedger(
     ground,
-    loaded.study,
+    study,
     { candidate: candidate.id, heightM, tiltDeg },
     at,
-    read.landTable ? { landTable: read.landTable } : {},
+    clutterOptions(study, ground, read.landTable, siteOf(candidate), heightM, 'always'),
   )
   process.stdout.write(`${JSON.stringify(ledger, null, 2)}\n`)
   sayWarnings([...loaded.warnings, ...warnings])

@@ -1,4 +1,4 @@
-import { LAYER_IDS, type LayerId, type OptionRef, optionsOf, type StudyDoc } from '../../../core/index.ts'
+import { LAYER_IDS, type LayerId, NEED_LAYERS, type OptionRef, optionsOfStudy, type StudyDoc } from '../../../core/index.ts'
 import { numberOption, usageError } from '../arguments.ts'
 import { candidateNamed, type LoadedStudy } from '../loadStudy.ts'
 
@@ -10,7 +10,13 @@ export const EXTRA_LAYERS: Readonly<Partial<Record<LayerId, 'height' | 'tilt'>>>
   depression: 'height',
   'clutter-strength': 'height',
   'suppression-needed': 'tilt',
+  usable: 'tilt',
+  'probability-of-detection': 'tilt',
+  'signal-margin': 'tilt',
+  'cause-of-loss': 'tilt',
 }
+/** Written for every need of a layer or polygon. */
+export const ofNeed = (id: LayerId): boolean => (NEED_LAYERS as readonly LayerId[]).includes(id)
 
 interface Picks {
   readonly candidate?: string
@@ -20,7 +26,7 @@ interface Picks {
 
 /** Options of the study that the command line picks, in the study's order. @throws InputError where none is left */
 export function chooseOptions(loaded: LoadedStudy, picks: Picks): OptionRef[] {
-  const all = optionsOf(loaded.study)
+  const all = optionsOfStudy(loaded.study)
   const candidate = picks.candidate === undefined ? null : candidateNamed(loaded, picks.candidate).id
   const height = picks.height === undefined ? null : numberOption('height', picks.height, 0, 1000, 'mast height', true)
   const tilt = picks.tilt === undefined ? null : numberOption('tilt', picks.tilt, -90, 90, 'tilt')

@@ -1,5 +1,6 @@
 import { basename, resolve } from 'node:path'
 import {
+  clutterOptions,
   DEG_PER_RAD,
   earthOf,
   InputError,
@@ -84,7 +85,7 @@ export async function points(line: CommandLine, progress: Progress): Promise<voi
   const { ground, read, warnings } = await loadGround(loaded, [candidate], progress)
   const site = siteOf(candidate)
   const earth = earthOf(study)
-  const options = read.landTable === null ? {} : { landTable: read.landTable }
+  const options = clutterOptions(study, ground, read.landTable, site, heightM)
   const clutterAt = pointClutter(ground, site, heightM, earth, study.radar, tiltDeg, polarShape(study.run), options)
   const out: string[] = [csvLine(POINT_COLUMNS)]
   progress.inputIsGood()

@@ -5,7 +5,9 @@ import {
   Engine,
   fillLayer,
   type GridShape,
+  isAreaNeed,
   type LayerId,
+  LOSS_CAUSES,
   layerInfo,
   type OptionCells,
   type OptionRef,
@@ -24,7 +26,7 @@ import { drive, type Progress } from '../progress.ts'
 import { mapLattice } from '../rasters/mapLattice.ts'
 import { polarCells, polarRaster } from '../rasters/polarRaster.ts'
 import { NO_PERCENT, sightRaster } from '../rasters/sightRaster.ts'
-import { chooseLayers, chooseOptions, EXTRA_LAYERS, narrowed } from './chooseOptions.ts'
+import { chooseLayers, chooseOptions, EXTRA_LAYERS, narrowed, ofNeed } from './chooseOptions.ts'
 import { horizonCsv } from './horizon.ts'
 
 /** `run`: every option picked, one after the other, into a folder that appears whole at the end. */
@@ -45,7 +47,7 @@ export async function run(line: CommandLine, progress: Progress): Promise<void> 
   progress.inputIsGood()
 
   const engine = new Engine()
-  engine.setGround(ground, read.landTable)
+  engine.setGround(ground, read.landTable, read.needPlaces)
   const lattice = mapLattice(ground.shape, study.run.rangeStepM)
   const results: OptionResult[] = []
   const maps: MemoMap[] = []
@@ -125,15 +127,15 @@ class RunWriter {
     for (const id of this.layers) if (EXTRA_LAYERS[id] === 'height') await this.#layer(dir, ref, cells, id)
   }
 
-  /** A layer on request; suppression needed is written for each layer need. */
+  /** A layer on request; one that asks for a need is written for each need of a layer or polygon. */
   async #layer(dir: string, ref: OptionRef, cells: OptionCells, id: LayerId): Promise<void> {
     const values = new Float32Array(cells.site.groundM.length)
     const { unit } = layerInfo(id)
-    if (id !== 'suppression-needed') {
+    if (!ofNeed(id)) {
       fillLayer(id, cells, null, values)
       return this.#raster(dir, ref, id, unit, this.#onLattice(cells, ref, values))
     }
-    for (const need of this.study.needs.filter((n) => n.kind === 'layer')) {
+    for (const need of this.study.needs.filter(isAreaNeed)) {
       fillLayer(id, cells, need, values)
       await this.#raster(dir, ref, `${id}-${need.id}`, unit, this.#onLattice(cells, ref, values))
     }
@@ -150,6 +152,8 @@ class RunWriter {
       STUDY: this.study.name,
       OPTION: `candidate ${ref.candidate}, mast ${ref.heightM} m, tilt ${ref.tiltDeg} deg`,
       ...(unit === 'm' ? { VERTICAL_DATUM: name === 'height-to-see' ? 'ground at the mast' : 'mean sea level' } : {}),
+      ...(name.startsWith('cause-of-loss') ? { CLASSES: LOSS_CAUSES.map((cause, i) => `${i + 1} ${cause}`).join(', ') } : {}),
+      ...(name.startsWith('usable') ? { CLASSES: '1 in sight, 2 detectable, 3 usable' } : {}),
       CAUTION: 'Prediction from a raster and models, to be confirmed by survey and trial. Not for navigation or operational use.',
     }
     const nodata = samples instanceof Uint8Array ? NO_PERCENT : Number.NaN
@@ -160,15 +164,25 @@ class RunWriter {
 
 /** Names, digests and descriptions of the files that were read. */
 async function filesOf(dir: string, study: SettledStudy, read: readonly { name: string; describe: string }[]) {
-  const named = [...study.terrain.map((t) => t.file), study.landCover?.file, study.obstacles, study.roads, study.lowAngleLandTable].filter(
-    (n) => typeof n === 'string',
-  )
+  const needs = study.needs.filter((n) => n.kind !== 'layer').map((n) => n.file)
+  const named = [
+    ...study.terrain.map((t) => t.file),
+    study.landCover?.file,
+    study.obstacles,
+    study.roads,
+    study.lowAngleLandTable,
+    ...needs,
+  ]
+    .filter((n) => typeof n === 'string')
+    .map((name, i) => ({ name, describe: read[i]?.describe ?? '' }))
   return Promise.all(
-    named.map(async (name, i) => {
-      const hash = createHash('sha256')
-      for await (const chunk of createReadStream(resolve(dir, name))) hash.update(chunk as Buffer)
-      return { name, sha256: hash.digest('hex'), describe: read[i]?.describe ?? '' }
-    }),
+    named
+      .filter(({ name }, i) => named.findIndex((n) => n.name === name) === i)
+      .map(async ({ name, describe }) => {
+        const hash = createHash('sha256')
+        for await (const chunk of createReadStream(resolve(dir, name))) hash.update(chunk as Buffer)
+        return { name, sha256: hash.digest('hex'), describe }
+      }),
   )
 }
 
