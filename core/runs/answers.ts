@@ -101,7 +101,7 @@ export class Answers {
       earth,
       study.radar,
       tiltDeg,
-      clutterOptions(study, ground, landTable),
+      clutterOptions(study, ground, landTable, site, body.heightM),
     )
     this.preview = {
       ground,
@@ -176,9 +176,10 @@ export class Answers {
   // biome-ignore lint/correctness/useYield: an answer that needs no slices
   private *ledger(body: Ask['ledger']): Work<EngineAnswer['ledger']> {
     const { ground, study } = this.engine.ready()
+    const place = siteOf(candidateOf(study, body.option.candidate))
     const held = this.engine.cells(body.option)?.clutter
     const sideLobes = held ? { sideLobeCnrDb: held.sideLobeCnrDb, sideLobeResidueDb: held.sideLobeResidueDb } : {}
-    const options = { ...clutterOptions(study, ground, this.engine.landTable), ...sideLobes }
+    const options = { ...clutterOptions(study, ground, this.engine.landTable, place, body.option.heightM), ...sideLobes }
     return cellLedger(ground, study, body.option, body.at, options)
   }
 
@@ -192,7 +193,6 @@ export class Answers {
     const { landTable, needPlaces: places } = this.engine
     const { radar, atmosphere } = study
     const suppression = suppressionOf(study, ground)
-    const options = clutterOptions(study, ground, landTable)
     const grid = polarShape(study.run)
     const lowEarth = earth.effectiveEarthFactor > 0 && earth.effectiveEarthFactor <= LOW_K ? null : lowEarthOf(study)
     const rungs: Rung[] = []
@@ -203,6 +203,7 @@ export class Answers {
         lowEarth && (yield* share(sweep(ground, place, batch, grid, lowEarth), n + batch.length / 3, n + batch.length / 2, heights.length))
       for (const [h, mask] of masks.entries()) {
         const { heightM } = mask
+        const options = clutterOptions(study, ground, landTable, place, heightM)
         const clutter = yield* silently(clutterToNoise(site, mask, ground.codes, place, heightM, earth, radar, tiltDeg, options))
         const lowK = low && lowEarth && lowKOf(low.site, low.masks[h], lowEarth, '')
         rungs.push(

@@ -130,7 +130,8 @@ export class Engine {
     const lowK = yield* share(this.computeLowK(ref), 0.7, 1, 1)
     const keys = this.keys(ref)
     if (this.study !== study || !keys) return []
-    const figures = optionFigures({ ...cells, lowK }, study.needs, clutterMarks(cells.ground.codes, study.radar, this.landTable !== null))
+    const marks = clutterMarks(cells.ground.codes, study.radar, this.landTable !== null, study.atmosphere)
+    const figures = optionFigures({ ...cells, lowK }, study.needs, marks)
     this.results.set(optionId(ref), { ref, keys, figures, held: true })
     const isShown = this.shown.option !== null && optionId(this.shown.option) === optionId(ref)
     return isShown ? [this.figures(), { kind: 'dirty' }] : [this.figures()]
@@ -160,7 +161,7 @@ export class Engine {
     if (!mask) throw new Error('a sweep left out a height')
     let clutter = this.cache.get<ClutterCells>(keys.clutter)
     if (!clutter) {
-      const options = clutterOptions(study, ground, this.landTable)
+      const options = clutterOptions(study, ground, this.landTable, place, ref.heightM)
       const work = clutterToNoise(site, mask, ground.codes, place, ref.heightM, earth, study.radar, ref.tiltDeg, options)
       clutter = yield* share(work, 0.6, 1, 1)
       this.cache.put(keys.clutter, clutter, keep)

@@ -1,4 +1,4 @@
-import type { ClutterOptions, LandTable } from '../clutter/index.ts'
+import { type ClutterOptions, discreteEchoes, type LandTable } from '../clutter/index.ts'
 import { improvementDb, type SuppressionBy, suppressionBy } from '../doppler/index.ts'
 import type { Earth } from '../geodesy/index.ts'
 import type { SightCells, SiteCells } from '../masking/index.ts'
@@ -30,17 +30,21 @@ export const suppressionOf = (study: SettledStudy, ground: Ground): SuppressionB
   suppressionBy(study.radar, study.atmosphere, ground.codes)
 
 /**
- * Options of the clutter kernels. With `residue` 'where-kinds-differ' a suppression that all kinds share is left to `residueOf`: it costs no pass
+ * Options of the clutter kernels for a place and mast height: weather, echoes of obstacles, land table, suppression. With `residue` 'where-kinds-differ' a suppression that all kinds share is left to `residueOf`: it costs no pass
  * and no grid of its own.
  */
 export function clutterOptions(
   study: SettledStudy,
   ground: Ground,
   landTable: LandTable | null,
+  place: Site,
+  heightM: number,
   residue: 'where-kinds-differ' | 'always' = 'where-kinds-differ',
 ): ClutterOptions {
   const by = suppressionOf(study, ground)
   return {
+    weather: study.atmosphere,
+    discretes: discreteEchoes(ground, place, heightM, earthOf(study), study.run.maxRangeM),
     ...(landTable ? { landTable } : {}),
     ...(residue === 'always' || by.uniformDb === null ? { improvementDb: improvementDb(by, ground.codes) } : {}),
   }
@@ -49,6 +53,8 @@ export function clutterOptions(
 /** Cover of one mast height at the smaller k, from its sweep. */
 export function lowKOf(site: SiteCells, mask: SightCells, earth: Earth, key: string): LowKCells {
   const { grid, floorM, floorBandM } = mask
+  const clearM = new Float32Array(floorM.length)
+  for (let at = 0; at < clearM.length; at++) clearM[at] = floorM[at] + floorBandM[at]
   return {
     kind: 'lowK',
     version: 1,
@@ -56,7 +62,7 @@ export function lowKOf(site: SiteCells, mask: SightCells, earth: Earth, key: str
     grid,
     heightM: mask.heightM,
     k: earth.effectiveEarthFactor,
-    clearM: floorM.map((f, at) => f + floorBandM[at]),
+    clearM,
     floors: floorFigures(mask, grid),
     earth,
     meanRadiusM: meanEffectiveRadiusM(site),

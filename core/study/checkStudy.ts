@@ -21,8 +21,6 @@ export function checkStudy(study: SettledStudy, doc?: StudyDoc): string[] {
     if (n.fromRangeM >= n.toRangeM) out.push(`needs[${i}] "${n.name}" lies wholly beyond the grid of ${quantity(run.maxRangeM, 'm')}`)
   })
   if (doc?.facades) out.push('facades: kept, not assessed yet')
-  if (air.rainRateMmH > 0) out.push('atmosphere.rainRateMmH: kept, rain is not assessed yet')
-  if (air.gas !== 'none') out.push('atmosphere.gas: kept, gas loss is not assessed yet')
   const unambiguous = SPEED_OF_LIGHT_MS / (2 * Math.max(...r.prfHz))
   if (r.instrumentedRangeM > unambiguous * 1.001)
     out.push(

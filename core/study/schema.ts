@@ -49,6 +49,9 @@ const atmosphere = z.looseObject({
   rainRateMmH: num('atmosphere.rainRateMmH').optional(),
   windMs: num('atmosphere.windMs').optional(),
   seaState: num('atmosphere.seaState').optional(),
+  rainTopM: num('atmosphere.rainTopM').optional(),
+  rainExtentM: num('atmosphere.rainExtentM').optional(),
+  tideM: num('atmosphere.tideM').optional(),
   seaSpreadMs: num('atmosphere.seaSpreadMs').nullable().optional(),
   seaMeanMs: num('atmosphere.seaMeanMs').nullable().optional(),
   rainSpreadMs: num('atmosphere.rainSpreadMs').nullable().optional(),
@@ -78,6 +81,9 @@ const radar = z.looseObject({
   prfMode: z.enum(['single', 'pulseStagger', 'dwellStagger']).optional(),
   coherentTransmitter: z.boolean().optional(),
   polarisation: z.enum(['H', 'V', 'circular']).optional(),
+  circular: z
+    .looseObject({ rainLossDb: num('radar.circular.rainLossDb').optional(), targetLossDb: num('radar.circular.targetLossDb').optional() })
+    .optional(),
   rotationRpm: num('radar.rotationRpm').optional(),
   noiseFigureDb: num('radar.noiseFigureDb').optional(),
   systemLossDb: num('radar.systemLossDb').optional(),
@@ -173,6 +179,7 @@ export const studySchema = z.looseObject({
       maxRangeM: num('run.maxRangeM').optional(),
       rangeStepM: num('run.rangeStepM').optional(),
       azimuthStepDeg: num('run.azimuthStepDeg').optional(),
+      foldRangeM: num('run.foldRangeM').optional(),
     })
     .optional(),
 })

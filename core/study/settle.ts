@@ -1,11 +1,23 @@
+import { WEATHER_DEFAULTS } from '../atmosphere/index.ts'
+import { defaultFoldRangeM } from '../clutter/index.ts'
 import { DEFAULT_STRADDLE_LOSS_DB, requiredRatio } from '../detection/index.ts'
 import { InputError } from '../errors/index.ts'
-import type { RadarInput } from '../radar/index.ts'
+import { CIRCULAR_DEFAULTS, type CircularInput, type RadarInput } from '../radar/index.ts'
 import { checkDoc } from './checkDoc.ts'
 import { instrumentedRangeOf } from './crossChecks.ts'
 import { defaultAzimuthStepDeg, defaultRangeStepM, evenStepDeg, gateOfM } from './grid.ts'
 import { limitOf } from './limits.ts'
-import type { CandidateDoc, DefaultUsed, NeedDoc, RadarDoc, SettledCandidate, SettledNeed, SettledStudy, StudyDoc } from './types.ts'
+import type {
+  AtmosphereDoc,
+  CandidateDoc,
+  DefaultUsed,
+  NeedDoc,
+  RadarDoc,
+  SettledCandidate,
+  SettledNeed,
+  SettledStudy,
+  StudyDoc,
+} from './types.ts'
 
 /** Takes what is stated, else the default, and writes the default down. */
 class Defaults {
@@ -37,6 +49,7 @@ function settleRadar(r: RadarDoc, instrumentedRangeM: number, d: Defaults): Rada
     prfMode: d.take('radar.prfMode', r.prfMode, 'single'),
     coherentTransmitter: d.take('radar.coherentTransmitter', r.coherentTransmitter, false),
     polarisation: d.take('radar.polarisation', r.polarisation, 'V'),
+    ...(r.polarisation === 'circular' ? { circular: settleCircular(r, d) } : {}),
     rotationRpm: d.take('radar.rotationRpm', r.rotationRpm, 10),
     noiseFigureDb: d.take('radar.noiseFigureDb', r.noiseFigureDb, 4),
     systemLossDb: d.take('radar.systemLossDb', r.systemLossDb, 6),
@@ -72,6 +85,26 @@ function settleRadar(r: RadarDoc, instrumentedRangeM: number, d: Defaults): Rada
     cfarReferenceCells: r.cfarReferenceCells ?? null,
     recoveryS: d.take('radar.recoveryS', r.recoveryS, 0),
     receiverLinearRangeDb: r.receiverLinearRangeDb ?? null,
+  }
+}
+
+function settleCircular(r: RadarDoc, d: Defaults): CircularInput {
+  return {
+    rainLossDb: d.take('radar.circular.rainLossDb', r.circular?.rainLossDb, CIRCULAR_DEFAULTS.rainLossDb),
+    targetLossDb: d.take('radar.circular.targetLossDb', r.circular?.targetLossDb, CIRCULAR_DEFAULTS.targetLossDb),
+  }
+}
+
+/** Where it rains and how the water stands; what a dry study leaves unstated is no default that anything rests on. */
+function settleRainAndTide(air: AtmosphereDoc | undefined, d: Defaults) {
+  const { rainTopM, rainExtentM, tideM } = WEATHER_DEFAULTS
+  const wet = (air?.rainRateMmH ?? 0) > 0
+  const rain = (key: 'rainTopM' | 'rainExtentM', value: number): number =>
+    wet ? d.take(`atmosphere.${key}`, air?.[key], value) : (air?.[key] ?? value)
+  return {
+    rainTopM: rain('rainTopM', rainTopM),
+    rainExtentM: rain('rainExtentM', rainExtentM),
+    tideM: d.take('atmosphere.tideM', air?.tideM, tideM),
   }
 }
 
@@ -152,6 +185,7 @@ export function settle(doc: StudyDoc, fileName?: string): SettledStudy {
     rainRateMmH: d.take('atmosphere.rainRateMmH', air?.rainRateMmH, 0),
     windMs: d.take('atmosphere.windMs', air?.windMs, 8),
     seaState: d.take('atmosphere.seaState', air?.seaState, 3),
+    ...settleRainAndTide(air, d),
     seaSpreadMs: air?.seaSpreadMs ?? null,
     seaMeanMs: air?.seaMeanMs ?? null,
     rainSpreadMs: air?.rainSpreadMs ?? null,
@@ -184,6 +218,7 @@ export function settle(doc: StudyDoc, fileName?: string): SettledStudy {
     needs: (doc.needs ?? []).map((n, i) => settleNeed(n, i, radar, maxRangeM, d)),
     candidates: doc.candidates.map((c, i) => settleCandidate(c, i, radar.antenna.tiltDeg, d)),
     run: { maxRangeM, rangeStepM, azimuthStepDeg },
+    foldRangeM: d.take('run.foldRangeM', doc.run?.foldRangeM, defaultFoldRangeM(radar)),
     defaults: d.used,
   }
 }

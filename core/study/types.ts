@@ -39,6 +39,8 @@ export interface RadarDoc {
   prfMode?: 'single' | 'pulseStagger' | 'dwellStagger'
   coherentTransmitter?: boolean
   polarisation?: 'H' | 'V' | 'circular'
+  /** What circular polarisation takes off rain clutter and targets, dB. */
+  circular?: { rainLossDb?: number; targetLossDb?: number }
   rotationRpm?: number
   noiseFigureDb?: number
   systemLossDb?: number
@@ -100,6 +102,11 @@ export interface AtmosphereDoc {
   rainRateMmH?: number
   windMs?: number
   seaState?: number
+  /** Rain top, m MSL; how far it rains from the radar, m. */
+  rainTopM?: number
+  rainExtentM?: number
+  /** Water stands this much above the raster, m. */
+  tideM?: number
   /** How sea and rain echoes move, m/s: spread and mean radial velocity; absent = worked out from the wind. */
   seaSpreadMs?: number | null
   seaMeanMs?: number | null
@@ -110,6 +117,8 @@ export interface RunDoc {
   maxRangeM?: number
   rangeStepM?: number
   azimuthStepDeg?: number
+  /** How far clutter from beyond the unambiguous range is looked for, m. */
+  foldRangeM?: number
 }
 export interface StudyDoc {
   format: 'sightfell-study'
@@ -197,6 +206,9 @@ export interface SettledStudy {
     readonly rainRateMmH: number
     readonly windMs: number
     readonly seaState: number
+    readonly rainTopM: number
+    readonly rainExtentM: number
+    readonly tideM: number
     readonly seaSpreadMs: number | null
     readonly seaMeanMs: number | null
     readonly rainSpreadMs: number | null
@@ -206,5 +218,7 @@ export interface SettledStudy {
   readonly needs: readonly SettledNeed[]
   readonly candidates: readonly SettledCandidate[]
   readonly run: { readonly maxRangeM: number; readonly rangeStepM: number; readonly azimuthStepDeg: number }
+  /** Slant range to which clutter that folds is looked for, m. */
+  readonly foldRangeM: number
   readonly defaults: readonly DefaultUsed[]
 }

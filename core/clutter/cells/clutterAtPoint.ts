@@ -13,6 +13,7 @@ import { optionNotes } from './clutterToNoise.ts'
 import {
   choiceOf,
   discretesAt,
+  foldedAt,
   type GateCells,
   gateCells,
   lossesOf,
@@ -45,6 +46,8 @@ export interface PointClutter {
   readonly groundCnrDb: number | null
   readonly rainCnrDb: number | null
   readonly discreteCnrDb: number | null
+  /** Second-time-around clutter in the gate, dB over noise; null where none was given. */
+  readonly foldedCnrDb: number | null
   /** What suppression leaves of `cnrDb`: each kind of clutter divided by its improvement factor, dB over noise. */
   readonly residueDb: number | null
   /** Area of the whole resolution cell, m², and share of its ground in sight. */
@@ -92,6 +95,7 @@ export function pointClutter(
 
     const sums = sumCell(o, cells, slantRangeM)
     const discrete = discretesAt(o, azimuthDeg, rangeM)
+    const folded = foldedAt(o, azimuthDeg, rangeM)
     const main = sums.ground + sums.rain + discrete
     const sideLobe = sideLobeAt(rangeM)
     const db = (ratio: number): number | null => (ratio > 0 ? toDb(ratio) : null)
@@ -102,13 +106,14 @@ export function pointClutter(
       rowName: own?.rowName ?? null,
       strengthDb: sight.inSight ? (own?.meanDb ?? null) : null,
       rcsDbsm: db(sums.rcsM2),
-      cnrDb: db(main + sideLobe.all),
+      cnrDb: db(main + folded + sideLobe.all),
       mainCnrDb: db(main),
       sideLobeCnrDb: db(sideLobe.all),
       groundCnrDb: db(sums.ground),
       rainCnrDb: db(sums.rain),
       discreteCnrDb: db(discrete),
-      residueDb: db(sums.left + discrete * o.left.discrete + sideLobe.left),
+      residueDb: db(sums.left + discrete * o.left.discrete + folded * o.left.folded + sideLobe.left),
+      foldedCnrDb: db(folded),
       cellAreaM2: sums.areaM2,
       shareInSight: sums.share,
       spread: sums.rcsM2 > 0 ? sums.spread / sums.rcsM2 : null,
@@ -187,6 +192,7 @@ const emptyPoint = (azimuthDeg: number, rangeM: number): PointClutter => ({
   groundCnrDb: null,
   rainCnrDb: null,
   discreteCnrDb: null,
+  foldedCnrDb: null,
   residueDb: null,
   cellAreaM2: null,
   shareInSight: 0,

@@ -23,6 +23,7 @@ interface Numbers {
   readonly rainCnrDb: number | null
   readonly discreteCnrDb: number | null
   readonly sideLobeCnrDb: number | null
+  readonly foldedCnrDb: number | null
   readonly gasDb: number
   readonly rainDb: number
   readonly cellAreaM2: number
@@ -81,6 +82,7 @@ export function clutterLines(n: Numbers, r: RadarInput, table: LandTable): Clutt
     ['rain', 'Rain in the beam and gate', n.rainCnrDb, RAIN],
     ['discretes', 'Discrete echoes of obstacles', n.discreteCnrDb, DISCRETES],
     ['side_lobes', 'Azimuth side lobes all round', n.sideLobeCnrDb, SIDE_LOBES],
+    ['folded', 'Second-time-around clutter', n.foldedCnrDb, FOLDED],
   ]
   for (const [key, label, db, model] of others) {
     if (db === null) continue
@@ -92,6 +94,7 @@ export function clutterLines(n: Numbers, r: RadarInput, table: LandTable): Clutt
   return lines
 }
 const SIDE_LOBES = ['side-lobe term', 'ring mean × two-way level × 360°/θaz'] as const
+const FOLDED = ['range ambiguity', 'sum over R + n·c/2f, strength and gain of the true place'] as const
 const DISCRETES = ['discrete echo', 'stated RCS through pattern and gate'] as const
 const RAIN = ['rain clutter', 'Marshall and Palmer (1948), Rayleigh scattering, beam after Probert-Jones (1962)'] as const
 const SEA = ['sea clutter', 'Gregers-Hansen and Mital, NRL/MR/5310--12-9346 (2012)'] as const

@@ -43,7 +43,7 @@ export const sideLobeShare = (r: RadarInput): number => sideLobeLevel(r) * (360 
  * Clutter-to-noise of every cell of a polar grid for one option, dB, one pulse, before STC, integration and suppression: radar equation with
  * σ°F⁴·A over the ground in sight of the resolution cell centred on the cell (A = R·θaz·cτc/2·sec ψ; two-way Gaussian azimuth kernel; cells
  * weighted by their overlap with the gate; elevation gain at cell centres with the side-lobe floor), plus rain, discrete echoes, and one
- * side-lobe term per gate (of all of these); gas and rain loss as the weather says. The residue is the same sum with each kind of clutter
+ * side-lobe term per gate (of all of these), and folded clutter where it is given; gas and rain loss as the weather says. The residue is the same sum with each kind of clutter
  * divided by its improvement factor. NaN where sight is unknown and inside cτ/2. Holds within LAND_LIMITS, SEA_LIMITS and RAIN_LIMITS; beyond
  * them notes say so. Throws InputError for a frequency outside 30 MHz to 40 GHz or a pattern that is refused.
  */
@@ -63,6 +63,7 @@ export function* clutterToNoise(
   const cells: CellRows = { ...pick(s), inSight: m.inSight, floorM: m.floorM, centresM: centresOf(grid) }
   const o = optionModel(codes, electricalCentreM(site, s.siteGroundM, heightM), r, tiltDeg, grid, options)
   const { left, weights, kernel } = o
+  const folded = options.foldedRatio
   const beamwidthDeg = r.antenna.azimuthBeamwidthDeg
   const passed = passedOver(o, cells, grid)
   const rowsPerYield = Math.max(1, Math.floor(CELLS_PER_YIELD / ranges))
@@ -92,11 +93,13 @@ export function* clutterToNoise(
   for (let i = 0; i < azimuths; i++) {
     azimuthSum(all.gates, azimuths, i, kernel, all.row)
     addDiscretes(i, o, grid, beamwidthDeg, 1, all.row)
-    toDecibels(cnrDb, all.row, i, o.cell, cells, m.state, sideLobe)
     const from = i * ranges
+    if (folded) for (let j = 0; j < ranges; j++) all.row[j] += folded[from + j]
+    toDecibels(cnrDb, all.row, i, o.cell, cells, m.state, sideLobe)
     if (rest && sideLobeLeft) {
       azimuthSum(rest.gates, azimuths, i, kernel, rest.row)
       addDiscretes(i, o, grid, beamwidthDeg, left.discrete, rest.row)
+      if (folded) for (let j = 0; j < ranges; j++) rest.row[j] += folded[from + j] * left.folded
       toDecibels(residueDb, rest.row, i, o.cell, cells, m.state, sideLobeLeft)
     } else if (residueDb !== cnrDb) for (let at = from; at < from + ranges; at++) residueDb[at] = cnrDb[at] + sameDb
     if ((i + 1) % rowsPerYield === 0) yield { done: azimuths + i + 1, total }

@@ -19,6 +19,8 @@ export interface ClutterOptions {
   readonly weather?: Weather
   /** Obstacles that send back echoes of their own, from `discreteEchoes`; absent: none. */
   readonly discretes?: readonly DiscreteEcho[]
+  /** Second-time-around clutter per cell of the grid over noise, ratio, from `foldedClutter`; absent: none is added. */
+  readonly foldedRatio?: Float32Array
   /** Suppression by kind of clutter, dB; absent = none, and the residue is all of the clutter. */
   readonly improvementDb?: ImprovementDb
   /** Key of the result; '' when the caller keeps none. */

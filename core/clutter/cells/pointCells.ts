@@ -2,7 +2,7 @@ import { KERNEL_REACH_BEAMWIDTHS } from '../../antenna/index.ts'
 import { twoWayLossParts } from '../../atmosphere/index.ts'
 import { depressionAtTerrainDeg, type Earth } from '../../geodesy/index.ts'
 import { sweep, sweepRays } from '../../masking/index.ts'
-import { isUnknown, type PolarShape } from '../../polar/index.ts'
+import { cellAt, isUnknown, type PolarShape } from '../../polar/index.ts'
 import type { RadarInput } from '../../radar/index.ts'
 import { type Ground, type Site, siteGround } from '../../terrain/index.ts'
 import { fromDb } from '../../units/index.ts'
@@ -133,6 +133,13 @@ export function discretesAt(o: PointOption, azimuthDeg: number, rangeM: number):
       Math.abs(rangeM - e.rangeM) > e.reachM ? sum : sum + e.ratio * towardEcho(azimuthDeg, e, width, KERNEL_REACH_BEAMWIDTHS * width),
     0,
   )
+}
+
+/** Second-time-around clutter in the cell of the grid that holds a place, ratio to noise; 0 beyond the grid. */
+export function foldedAt(o: PointOption, azimuthDeg: number, rangeM: number): number {
+  const { foldedRatio } = o.options
+  const cell = foldedRatio ? cellAt(o.grid, azimuthDeg, rangeM) : -1
+  return foldedRatio && cell >= 0 ? foldedRatio[cell] : 0
 }
 
 /** Side-lobe term by ground range, ratios to noise, 0 nil: the gate of the grid that holds it, beyond the grid a gate of its own ring. */
