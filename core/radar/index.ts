@@ -1,5 +1,6 @@
 export * from './equation.ts'
 export * from './exposure.ts'
+export * from './exposureOf.ts'
 export * from './limits.ts'
 export * from './polarisation.ts'
 export * from './stc.ts'
