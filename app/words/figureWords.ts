@@ -1,4 +1,4 @@
-import type { LayerId } from '../../core/index.ts'
+import { type LayerId, LOSS_CAUSES } from '../../core/index.ts'
 import {
   formatAreaDown,
   formatAreaUp,
@@ -9,9 +9,14 @@ import {
   formatLossPct,
   formatMargin,
   formatMetPct,
+  formatRange,
+  formatRangeUp,
   formatScreening,
+  NO_VALUE,
   type Quantity,
 } from './format.ts'
+import { formatDuration } from './formatStated.ts'
+import { LOSS_MEANINGS, LOSS_WORDS } from './layers.ts'
 import type { UnitSystem } from './units.ts'
 
 /** What a figure of merit is called, what it means, and which map layer shows where it comes from. */
@@ -94,12 +99,53 @@ const FLOOR_SHARE: Readonly<Record<string, string>> = {
   median: 'on the median azimuth',
   worst: 'on the worst azimuth',
 }
-const floorAt = (nm: string, which: string): FigureWords => ({
-  label: `Floor at ${nm} NM, ${which}`,
-  meaning: `Lowest height in sight above sea level at ${nm} NM of ground range, ${FLOOR_SHARE[which] ?? ''}; nominal, ${UP}`,
+const floorAt = (nm: string, which: string, lowK: boolean): FigureWords => ({
+  label: `Floor at ${nm} NM, ${which}${lowK ? ', k = 1' : ''}`,
+  meaning: `Lowest height in sight above sea level at ${nm} NM of ground range, ${FLOOR_SHARE[which] ?? ''}${lowK ? ', at k = 1' : ''}; nominal, ${UP}`,
   layer: 'coverage-floor',
   format: formatFloor,
 })
+const improvementOn = (about: string): FigureWords => ({
+  label: `Suppression of ${about}`,
+  meaning: `Improvement factor on clutter of ${about === 'folded' ? 'an earlier pulse' : about}, with the limits of the equipment; ${DOWN}`,
+  layer: 'suppression-needed',
+  format: (v) => formatDbDown(v),
+})
+const share = (label: string, meaning: string): FigureWords => ({
+  label,
+  meaning: `${meaning}; ${DOWN}`,
+  layer: 'usable',
+  format: (v) => formatMetPct(v),
+})
+const dbMargin = (label: string, where: string): FigureWords => ({
+  label,
+  meaning: `Echo over residue and noise less the required ratio, ${where}; ${DOWN}`,
+  layer: 'signal-margin',
+  format: (v) => formatDbDown(v),
+})
+const lengthOf = (label: string, meaning: string): FigureWords => ({
+  label,
+  meaning: `${meaning}; ${UP}`,
+  layer: 'cause-of-loss',
+  format: formatRangeUp,
+})
+const shortDb = (pct: string): FigureWords => ({
+  label: `Suppression short, ${pct} %`,
+  meaning: `Decibels missing at ${pct} % of the places in sight that are strong enough; 0 is enough; ${UP}`,
+  layer: 'suppression-needed',
+  format: (v) => formatDbUp(v),
+})
+const LOST: Readonly<Record<string, FigureWords>> = Object.fromEntries(
+  LOSS_CAUSES.map((cause): [string, FigureWords] => [
+    `lost_${cause.replaceAll('-', '_')}_pct`,
+    {
+      label: `Lost: ${LOSS_WORDS[cause]}`,
+      meaning: `Share of the need that is not usable for this cause. ${LOSS_MEANINGS[cause]}; ${UP}`,
+      layer: 'cause-of-loss',
+      format: (v) => formatLossPct(v),
+    },
+  ]),
+)
 const NEED: Readonly<Record<string, FigureWords>> = {
   area_km2: {
     label: 'Area',
@@ -113,6 +159,58 @@ const NEED: Readonly<Record<string, FigureWords>> = {
     layer: 'coverage-floor',
     format: (v) => formatMetPct(v),
   },
+  detectable_pct: share('Detectable', 'Share of the need in sight, within range, with echo over noise by the required ratio'),
+  usable_pct: share(
+    'Usable',
+    'Share of the need detectable, with echo over residue and noise by the required ratio; the need is met by it',
+  ),
+  in_sight_k1_pct: share('In sight, k = 1', 'Share of the need in sight at k = 1'),
+  detectable_k1_pct: share('Detectable, k = 1', 'Share of the need detectable at k = 1'),
+  usable_k1_pct: share('Usable, k = 1', 'Share of the need usable at k = 1; pass asks for it too'),
+  required_ratio_db: {
+    label: 'Required ratio',
+    meaning: `Echo over noise, or over residue and noise, that one pulse must reach: D₀ and its losses, or as stated; ${UP}`,
+    layer: 'signal-margin',
+    format: (v) => formatDbUp(v, 'dB', 0.1),
+  },
+  worst_signal_margin_db: dbMargin('Worst signal margin', 'at the worst place in sight'),
+  tenth_signal_margin_db: dbMargin('Signal margin, 10 %', 'exceeded at nine tenths of the places in sight'),
+  length_m: {
+    label: 'Length of the track',
+    meaning: `Ground distance along the track; ${DOWN}`,
+    layer: 'usable',
+    format: formatRange,
+  },
+  longest_gap_m: lengthOf('Longest gap', 'Longest stretch of the track in a row that is not usable'),
+  longest_gap_s: {
+    label: 'Longest gap',
+    meaning: 'The same at the speed of the need',
+    layer: 'cause-of-loss',
+    format: (v) => ({ value: v === null ? NO_VALUE : formatDuration(Math.ceil(v)), unit: '' }),
+  },
+  tangential_m: lengthOf('Tangential', 'Length flown across the beam, where the radial speed is near zero'),
+  blind_m: lengthOf('Blind speeds', 'Length flown at other speeds that the processing does not pass'),
+  detectable_km2: {
+    label: 'Detectable',
+    meaning: `Area of the need that is detectable; ${DOWN}`,
+    layer: 'usable',
+    format: formatAreaDown,
+  },
+  usable_km2: {
+    label: 'Usable',
+    meaning: `Area of the need that is usable; ${DOWN}`,
+    layer: 'usable',
+    format: formatAreaDown,
+  },
+  cone_of_silence_m: {
+    label: 'Cone of silence',
+    meaning: `Largest ground range inside which nothing passes because of the elevation pattern, over the levels of the need; ${UP}`,
+    layer: 'cause-of-loss',
+    format: formatRangeUp,
+  },
+  suppression_short_90_db: shortDb('90'),
+  suppression_short_99_db: shortDb('99'),
+  ...LOST,
   in_sight_km2: {
     label: 'In sight',
     meaning: `Area of the need whose height is in sight, line of sight only; ${DOWN}`,
@@ -151,7 +249,7 @@ const NEED: Readonly<Record<string, FigureWords>> = {
   },
   suppression_available_db: {
     label: 'Suppression available',
-    meaning: `Improvement factor as stated for the radar; ${DOWN}`,
+    meaning: `What the radar takes off the clutter of the need’s places together, by its kinds; ${DOWN}`,
     layer: 'suppression-needed',
     format: (v) => formatDbDown(v),
   },
@@ -179,12 +277,14 @@ const suppressionNeeded = (share: string): FigureWords => ({
 export function figureWords(key: string): FigureWords | undefined {
   const over = /^clutter_over_(\d+)_km2$/.exec(key)
   if (over) return clutterOver(over[1])
-  const floor = /^floor_(\d+)nm_(best|median|worst)_m$/.exec(key)
-  if (floor) return floorAt(floor[1], floor[2])
+  const floor = /^floor_(\d+)nm(_k1)?_(best|median|worst)_m$/.exec(key)
+  if (floor) return floorAt(floor[1], floor[3], floor[2] !== undefined)
+  const improvement = /^improvement_(.+)_db$/.exec(key)
+  if (improvement) return improvementOn(improvement[1])
   const need = needKey(key)
   if (!need) return PLAIN[key]
-  const share = /^suppression_needed_(\d+)_db$/.exec(need.of)
-  return share ? suppressionNeeded(share[1]) : NEED[need.of]
+  const places = /^suppression_needed_(\d+)_db$/.exec(need.of)
+  return places ? suppressionNeeded(places[1]) : NEED[need.of]
 }
 
 const NEED_TAILS = [...Object.keys(NEED), 'suppression_needed_50_db', 'suppression_needed_90_db', 'suppression_needed_99_db']

@@ -54,7 +54,7 @@ export const LAYER_WORDS: Record<LayerId, LayerWords> = {
     of: 'dB, mean',
     ends: ['faint', 'severe'],
     note: 'hatched: masked, none modelled · land table from memory',
-    meaning: 'Mean ground clutter strength per unit area, propagation included',
+    meaning: 'Mean clutter strength per unit area of land or sea, propagation included',
   },
   'clutter-to-noise': {
     short: 'C/N',
@@ -63,7 +63,7 @@ export const LAYER_WORDS: Record<LayerId, LayerWords> = {
     ends: ['faint', 'severe'],
     note: 'bare: below noise · hatched: masked · land table from memory',
     meaning:
-      'Mean ground clutter against receiver noise in each resolution cell, per pulse, before suppression and short-range sensitivity',
+      'Mean clutter of land, sea, rain and single obstacles against receiver noise in each resolution cell, per pulse, before suppression and short-range sensitivity',
   },
   'suppression-needed': {
     short: 'suppression needed',
@@ -120,6 +120,20 @@ export const LOSS_WORDS: Record<LossCause, string> = {
   'blind-speed': 'blind speed',
   'too-weak': 'too weak',
   several: 'several causes together',
+}
+/** What each cause means, for help and the memo. */
+export const LOSS_MEANINGS: Record<LossCause, string> = {
+  unknown: 'Beyond a void or past the edge of the terrain',
+  'out-of-range': 'Beyond the instrumented range, inside the minimum range, or eclipsed by a later pulse',
+  masked: 'Behind ground, cover or an obstacle',
+  marginal: 'Inside the error band of the coverage floor',
+  'short-range-sensitivity': 'Usable but for the short-range sensitivity setting',
+  'above-beam': 'Usable but for the elevation pattern, above the peak',
+  'below-beam': 'Usable but for the elevation pattern, below the peak',
+  clutter: 'Usable but for clutter left after suppression',
+  'blind-speed': 'Usable but for a blind speed or a path across the beam',
+  'too-weak': 'Under the required ratio on the beam peak without clutter or short-range sensitivity',
+  several: 'Several causes together; none alone would make it usable',
 }
 /** The map's families, in the words of its sentence. */
 export const FAMILY_WORDS: Record<LayerInfo['family'], string> = {

@@ -10,8 +10,12 @@ export const MARK_WORDS: Record<ModelMark, { readonly word: string; readonly mea
 /** The four words, never swapped. */
 export const FOUR_WORDS = {
   inSight: { word: 'in sight', meaning: 'Line of sight only' },
-  detectable: { word: 'detectable', meaning: 'Enough signal over noise' },
-  usable: { word: 'usable', meaning: 'Enough over clutter plus noise after suppression and short-range sensitivity' },
+  detectable: { word: 'detectable', meaning: 'In sight, within range, and enough signal over noise' },
+  usable: {
+    word: 'usable',
+    meaning:
+      'Detectable, and enough over clutter plus noise after suppression and short-range sensitivity; a need is met by what is usable',
+  },
   confirmed: { word: 'confirmed', meaning: 'Measured on site or in trial; entered, never computed' },
 } as const
 /** Words that stand where there is no number. */

@@ -5,20 +5,20 @@ export interface NotAssessed {
   readonly so: string
 }
 export const NOT_ASSESSED: readonly NotAssessed[] = [
-  { what: 'Sea clutter', so: 'water returns nothing here; a coastal radar will see more than the maps show' },
-  { what: 'Rain clutter and rain loss', so: 'no level of rain is in any figure' },
-  { what: 'Gas loss', so: 'echo and clutter are both without it' },
-  { what: 'Propagation factor', so: 'targets are taken in free space: no lobing, no diffraction' },
-  { what: 'Other refraction', so: 'one effective-earth factor; no ducting' },
+  {
+    what: 'Lobing and diffraction',
+    so: 'a target in sight has its free-space echo, less a knife edge near the mask; no reflection off water or ground',
+  },
+  { what: 'Ducting and other refraction', so: 'the k of the study and k = 1 only; no bent layers' },
   { what: 'Second-time-around clutter', so: 'ground beyond the unambiguous range is not folded in' },
-  { what: 'Doppler processing and blind speeds', so: 'suppression is taken as stated, not computed' },
-  { what: 'Detection by place', so: 'the required ratio follows from Pd and Pfa; which places are detectable or usable is not stated' },
-  { what: 'Discrete echoes and building returns', so: 'masts, turbines and walls mask but return nothing' },
+  { what: 'Pulse compression side lobes', so: 'clutter enters through the compressed pulse alone' },
+  { what: 'Spiky clutter', so: 'every decision is for the mean of the cell; the spread is not in the shares' },
+  { what: 'Receiver range', so: 'clutter beyond the linear range of the receiver is not counted against it' },
   { what: 'Roads and moving vehicles', so: 'roads are drawn, vehicles are not counted' },
   { what: 'Reflections and false targets', so: 'no facade is traced' },
-  { what: 'Wind turbines', so: 'neither blades nor shadow sectors' },
+  { what: 'Wind turbines', so: 'neither turning blades nor shadow sectors' },
   { what: 'Beam blockage', so: 'an obstacle masks or does not; no partial loss of the beam' },
-  { what: 'RF exposure', so: 'no keep-clear distance is given' },
-  { what: 'Fixes, tracks and polygons as needs', so: 'only layer needs are checked' },
+  { what: 'Measured horizon and trials', so: 'nothing in this memo is confirmed' },
+  { what: 'Pulse-peak exposure', so: 'keep-clear distances are for average power' },
   { what: 'Cost, access, power, link and land', so: 'left to the site visit' },
 ]

@@ -105,8 +105,8 @@ export const ELEVATION_PATTERNS: readonly Choice<'gaussian' | 'cosecant-squared'
 export const SUPPRESSION_KINDS: readonly Choice<'none' | 'stated' | 'canceller' | 'filterBank'>[] = [
   { id: 'none', words: 'none' },
   { id: 'stated', words: 'stated' },
-  { id: 'canceller', words: 'canceller', hint: 'kept, not assessed yet' },
-  { id: 'filterBank', words: 'filter bank', hint: 'kept, not assessed yet' },
+  { id: 'canceller', words: 'canceller' },
+  { id: 'filterBank', words: 'filter bank' },
 ]
 export const STC_KINDS: readonly Choice<'none' | 'curve' | 'rtoFourth'>[] = [
   { id: 'none', words: 'none' },
@@ -115,7 +115,7 @@ export const STC_KINDS: readonly Choice<'none' | 'curve' | 'rtoFourth'>[] = [
 ]
 export const GAS_KINDS: readonly Choice<'none' | 'p676'>[] = [
   { id: 'none', words: 'none' },
-  { id: 'p676', words: 'ITU-R P.676', hint: 'kept, not assessed yet' },
+  { id: 'p676', words: 'ITU-R P.676' },
 ]
 export const TERRAIN_CHOICES: readonly Choice<'rural' | 'forest' | 'farmland' | 'open' | 'urban' | 'water'>[] = [
   { id: 'rural', words: 'rural (general)' },
