@@ -6,7 +6,7 @@ import { placeAroundPoints } from './labels.ts'
 
 export interface OptionsInput {
   readonly results: readonly OptionResult[]
-  /** Need whose area in sight is the vertical axis; null: the first need, or ground in sight where there is none. */
+  /** Need that both axes are about; null: all needs of an area together. Where none is assessed: ground in sight against C/N over 40 dB. */
   readonly needId: string | null
   readonly selected: OptionRef | null
   readonly width: number
@@ -30,14 +30,30 @@ export function inSightPctOf(result: OptionResult, needId: string | null): numbe
   return all > 0 ? (100 * groundInSightKm2) / all : null
 }
 
+/** Both axes of one option: usable share and area short of suppression, of one need or of all needs of an area, each by its area. */
+export function coverageOf(result: OptionResult, needId: string | null): { usablePct: number; shortKm2: number } | null {
+  const areas = result.figures.needs.filter((n) => n.notAssessed === null && n.measure === 'area')
+  const chosen = areas.filter((n) => n.needId === needId)
+  const needs = chosen.length > 0 ? chosen : areas
+  const areaKm2 = needs.reduce((sum, n) => sum + n.areaKm2, 0)
+  if (areaKm2 === 0) return null
+  return {
+    usablePct: needs.reduce((sum, n) => sum + n.usablePct * n.areaKm2, 0) / areaKm2,
+    shortKm2: needs.reduce((sum, n) => sum + n.suppression.shortKm2, 0),
+  }
+}
+
 /** Coverage against clutter: every option as a named point, mast heights of one candidate joined. */
 export function optionsChart(input: OptionsInput): OptionsGeometry {
   const { results, width, height, system, size } = input
   const box: Box = { left: 3.8 * size, right: width - 1.6 * size, top: 2.2 * size, bottom: height - 3 * size }
   const tilts = new Set(results.map((r) => r.ref.tiltDeg)).size > 1
+  const asked = results.every((r) => coverageOf(r, input.needId) !== null)
   const known = results.flatMap((r) => {
-    const pct = inSightPctOf(r, input.needId)
-    return pct === null ? [] : [{ ref: r.ref, pct, area: toFace('area', r.figures.clutterOverKm2.over40, system) }]
+    const both = asked ? coverageOf(r, input.needId) : null
+    const pct = both?.usablePct ?? inSightPctOf(r, input.needId)
+    const km2 = both?.shortKm2 ?? r.figures.clutterOverKm2.over40
+    return pct === null ? [] : [{ ref: r.ref, pct, area: toFace('area', km2, system) }]
   })
   const pcts = known.map((k) => k.pct)
   const low = Math.min(100, ...pcts)
@@ -46,18 +62,19 @@ export function optionsChart(input: OptionsInput): OptionsGeometry {
   const x = niceTicks(0, 1.12 * Math.max(0.1, ...known.map((k) => k.area)), 5)
   const across = scaleOf(0, x.to, box.left, box.right)
   const up = scaleOf(y.from, Math.min(100, y.to), box.bottom, box.top)
-  const needName = results[0]?.figures.needs.find(
-    (n) => n.notAssessed === null && (input.needId === null || n.needId === input.needId),
-  )?.name
+  const names = (results[0]?.figures.needs ?? []).filter((n) => n.notAssessed === null && n.measure === 'area')
+  const own = names.find((n) => n.needId === input.needId) ?? (names.length === 1 ? names[0] : undefined)
+  const upWords = asked ? `Usable, % of the area of ${own?.name ?? 'all needs'}` : 'Ground in sight, %'
+  const acrossWords = asked ? 'Area short of suppression' : 'Ground with C/N over 40 dB'
   const items: Item[] = [
     ...yAxis(
       box,
       up,
       y.ticks.filter((t) => t.at <= 100),
-      needName ? `In sight of ${needName}, % of its area` : 'Ground in sight, %',
+      upWords,
       size,
     ),
-    ...xAxis(box, across, x.ticks, `Ground with C/N over 40 dB, ${unitOf('area', system)}`, size),
+    ...xAxis(box, across, x.ticks, `${acrossWords}, ${unitOf('area', system)}`, size),
   ]
   const points = known.map((k) => ({
     ref: k.ref,

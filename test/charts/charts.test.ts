@@ -107,6 +107,17 @@ describe('options plot', () => {
   })
 })
 
+describe('coverage against clutter', () => {
+  it('weighs the usable shares of all needs by their area, and adds up what is short', () => {
+    const { needs } = sampleResults[1].figures
+    const [one, two] = needs
+    const all = c.coverageOf(sampleResults[1], null)!
+    expect(all.usablePct).toBeCloseTo((one.usablePct * 4870 + two.usablePct * 590) / 5460, 9)
+    expect(all.shortKm2).toBe(one.suppression.shortKm2 + two.suppression.shortKm2)
+    expect(c.coverageOf(sampleResults[1], 'n2')).toEqual({ usablePct: two.usablePct, shortKm2: two.suppression.shortKm2 })
+  })
+})
+
 describe('ladder', () => {
   const ladder = {
     heightsM: [5, 15, 25, 40],
@@ -115,7 +126,7 @@ describe('ladder', () => {
     usablePct: [20, 40, 80, 90],
     shortKm2: [1, 2, 3, 4],
     needMet: [
-      { needId: 'n1', name: 'one', intervals: [[24, 40] as const] },
+      { needId: 'n1', name: 'one', intervals: [[10, 14] as const, [24, 40] as const] },
       { needId: 'n2', name: 'two', intervals: [[25, 40] as const] },
       { needId: 'n3', name: 'three', intervals: [] },
     ],
@@ -136,8 +147,15 @@ describe('ladder', () => {
     expect(g.met[0].y).toBe(160)
     expect(g.notMet.map((n) => n.needId)).toEqual(['n3'])
   })
+  it('draws every stretch in which a need is met: a taller mast can lose one', () => {
+    expect(g.intervals[0].stretches).toEqual([
+      [260, 300],
+      [0, 160],
+    ])
+    expect(g.intervals[2].stretches).toEqual([])
+  })
   it('reads between the rungs and nothing outside them', () => {
-    expect(g.valuesAt(20)).toEqual({ inSightPct: 75, over40Km2: 40 })
+    expect(g.valuesAt(20)).toEqual({ inSightPct: 75, over40Km2: 40, usablePct: 60, shortKm2: 2.5 })
     expect(g.valuesAt(2)).toBeNull()
   })
 })
