@@ -82,13 +82,16 @@ function TableView({ table }: { table: TableBlock }) {
         {heads ? (
           <thead>
             <tr>
-              {table.columns.map((c, i) => (
-                // biome-ignore lint/suspicious/noArrayIndexKey: columns have no names of their own
-                <th key={i} scope="col" className={align(i)}>
-                  {c.head}
-                  {c.unit ? <span className="unit"> {c.unit}</span> : null}
-                </th>
-              ))}
+              {table.columns.map((c, i) => {
+                const Head = c.head === '' ? 'td' : 'th'
+                return (
+                  // biome-ignore lint/suspicious/noArrayIndexKey: columns have no names of their own
+                  <Head key={i} scope={c.head === '' ? undefined : 'col'} className={align(i)}>
+                    {c.head}
+                    {c.unit ? <span className="unit"> {c.unit}</span> : null}
+                  </Head>
+                )
+              })}
             </tr>
           </thead>
         ) : null}

@@ -53,7 +53,8 @@ export function Shell() {
       <FaultBoundary>
         <StepIndex />
       </FaultBoundary>
-      <section className={whole ? 'sheet' : 'form'} aria-label={STEP_WORDS[step].name}>
+      {/* biome-ignore lint/a11y/noNoninteractiveTabindex: a sheet without controls is scrolled by keys */}
+      <section className={whole ? 'sheet' : 'form'} aria-label={STEP_WORDS[step].name} tabIndex={whole ? 0 : undefined}>
         <header>
           <h2>{STEP_WORDS[step].name}</h2>
           {whole ? null : (
@@ -68,18 +69,18 @@ export function Shell() {
           </Suspense>
         </FaultBoundary>
       </section>
-      <div className="strip">
+      <section className="strip" aria-label="Horizon">
         <FaultBoundary>
           <StripSlot hub={hub} />
         </FaultBoundary>
-      </div>
+      </section>
       <main className="map">
         <FaultBoundary>
           <MapSlot hub={hub} />
         </FaultBoundary>
         <Notices />
       </main>
-      <div className="ruler-column">
+      <section className="ruler-column" aria-label="Mast">
         <FaultBoundary>
           <RulerSlot hub={hub} />
         </FaultBoundary>
@@ -88,7 +89,7 @@ export function Shell() {
             <Caution key={c}>{c}</Caution>
           ))}
         </div>
-      </div>
+      </section>
       <aside className="memo" aria-label="Memo of the option on show">
         <FaultBoundary>
           <MemoAside />
