@@ -9,7 +9,7 @@ import {
   percentileOverMeanDb,
   pointClutter,
 } from '../../core/clutter/index.ts'
-import { addToMixture, levelOfMixture, makeMixture, meanOfMixture } from '../../core/clutter/levels/mixture.ts'
+import { addCells, levelsOfMixture, type Mixture, makeMixture, meanOfMixture } from '../../core/clutter/levels/mixture.ts'
 import { sweep } from '../../core/masking/index.ts'
 import { CELL, cellCentre, type PolarShape } from '../../core/polar/index.ts'
 import { fromDb, toDb } from '../../core/units/index.ts'
@@ -18,9 +18,12 @@ import { testRadar } from '../radar/testRadar.ts'
 import { flatCells } from './flatCells.ts'
 import { hills, randomNumbers } from './hills.ts'
 
+const levelOfMixture = (x: Mixture, p: number) => levelsOfMixture(x, [p])[0]
 const cells = (...parts: [meanDb: number, spread: number, area: number][]) => {
   const x = makeMixture()
-  for (const [db, spread, area] of parts) addToMixture(x, fromDb(db), db, spread, area)
+  const column = (k: number) => parts.map((part) => part[k])
+  addCells(x, Float32Array.from(column(0)), Float32Array.from(column(1)), 0, 0, parts.length, Float64Array.from(column(2)))
+  x.whole = column(2).reduce((s, v) => s + v, 0)
   return x
 }
 
@@ -29,14 +32,13 @@ describe('levels of a mixture of clutter', () => {
     const x = cells([31.3, spread, 7])
     expect(meanOfMixture(x)).toBeCloseTo(31.3, 4)
     for (const p of [0.5, 0.9, 0.99])
-      expect(Math.abs((levelOfMixture(x, p) ?? Number.NaN) - 31.3 - percentileOverMeanDb(spread, p)), `${p}`).toBeLessThan(0.06)
+      expect(Math.abs((levelOfMixture(x, p) ?? Number.NaN) - 31.3 - percentileOverMeanDb(spread, p)), `${p}`).toBeLessThan(0.2)
   })
 
   it('at a spread of 5.4 the 90 % level lies below the mean', () => expect(levelOfMixture(cells([20, 5.4, 1]), 0.9)).toBeLessThan(20))
 
   it('counts clutter-free ground as zero', () => {
-    const x = cells([20, 2, 1])
-    addToMixture(x, 0, Number.NaN, 1, 3)
+    const x = cells([20, 2, 1], [Number.NaN, 1, 3])
     expect(meanOfMixture(x)).toBeCloseTo(20 + toDb(0.25), 4)
     // exp[−(xΓ(3)/m)^½]·¼ = 0.1
     expect(levelOfMixture(x, 0.9)).toBeCloseTo(20 + toDb((-Math.log(0.4)) ** 2 / gammaFunction(3)), 1)

@@ -3,7 +3,6 @@ import type { SightCells, SiteCells } from '../../masking/index.ts'
 import { gateLengthM, type RadarInput } from '../../radar/index.ts'
 import type { Site } from '../../terrain/index.ts'
 import { RAD_PER_DEG } from '../../units/index.ts'
-import { slantSquared } from '../cells/cellSums.ts'
 import { centresOf, electricalCentreM } from '../cells/clutterToNoise.ts'
 import { decibel } from '../cells/decibelTable.ts'
 import type { ClutterOptions } from '../cells/optionModel.ts'
@@ -40,6 +39,8 @@ export function fillCellStrength(
   const cells = { code: s.code, relief: s.relief, slopePermille: s.slopePermille, centresM: centresOf(s.grid) }
   const antennaM = electricalCentreM(site, s.siteGroundM, heightM)
   const perRange = r.antenna.azimuthBeamwidthDeg * RAD_PER_DEG * gateLengthM(r)
+  // Where the cell's area lies between 10³ and 10⁶ m²; ground range stands for slant range, a_w within 0.01.
+  const decades = cells.centresM.map((rangeM) => Math.min(1, Math.max(0, (Math.log10(rangeM * perRange) - 3) / 3)))
   let band = bands >> 1
   for (let i = 0; i < azimuths; i++) {
     const c = 1 / s.effectiveRadiusM[i]
@@ -63,9 +64,7 @@ export function fillCellStrength(
       }
       if (out.spread) {
         const row = spreads[entry]
-        const areaDb = row ? decibel(perRange * Math.sqrt(slantSquared(antennaM, ground, range, c) * (1 + depression * depression))) : 0
-        const share = Math.min(1, Math.max(0, (areaDb / 10 - 3) / 3))
-        out.spread[at] = row ? row.spread1e3 + (row.spread1e6 - row.spread1e3) * share : 1
+        out.spread[at] = row ? row.spread1e3 + (row.spread1e6 - row.spread1e3) * decades[j] : 1
       }
     }
   }

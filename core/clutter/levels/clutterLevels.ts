@@ -1,9 +1,9 @@
 import type { SightCells } from '../../masking/index.ts'
 import { CELL, cellAreasM2 } from '../../polar/index.ts'
-import { fromDb, M_PER_NM } from '../../units/index.ts'
+import { M_PER_NM } from '../../units/index.ts'
 import { percentileOverMeanDb } from '../land/weibull.ts'
 import type { ClutterCells } from '../types.ts'
-import { addMixture, addToMixture, levelOfMixture, type Mixture, makeMixture, meanOfMixture } from './mixture.ts'
+import { addCells, addMixture, levelsOfMixture, type Mixture, makeMixture, meanOfMixture } from './mixture.ts'
 
 /** Rings a study may be told in, m. */
 export const LEVEL_RING_M = { nm: 5 * M_PER_NM, km: 10_000 } as const
@@ -55,30 +55,43 @@ export function clutterLevels(
   const parts = Array.from({ length: rings * 8 }, makeMixture)
   const over40 = new Float64Array(rings * 8)
   const excess = Float64Array.from({ length: 801 }, (_, n) => percentileOverMeanDb(Math.max(0.1, n / 100), 0.99))
-  const ratios = Float64Array.from({ length: 6001 }, (_, n) => fromDb(n / 20 - 100))
+  const { cnrDb } = c
+  const less = lessDb ?? null
+  const ringEnds = Array.from({ length: rings }, (_, k) => Math.min(ranges, Math.ceil(((k + 1) * ringM) / rangeStepM - 0.5)))
+  const db = new Float32Array(ranges)
   let peak: ClutterLevels['peak'] = null
+  let highest = Number.NEGATIVE_INFINITY
   for (let i = 0; i < azimuths; i++) {
     const octant = Math.floor((i * azimuthStepDeg) / 45 + 0.5) % 8
-    for (let j = 0; j < ranges; j++) {
-      const at = i * ranges + j
-      if (m.state[at] === 0 || m.state[at] >= CELL.beyondVoid) continue
-      const part = Math.floor(((j + 0.5) * rangeStepM) / ringM) * 8 + octant
-      const db = c.cnrDb[at] - (lessDb ? lessDb[j] : 0)
-      const ratio = db > -100 ? ratios[Math.min(6000, Math.round((db + 100) * 20))] : 0
-      addToMixture(parts[part], ratio, db, spread[at], areas[j])
-      if (db > 40) over40[part] += areas[j]
-      const p99 = db + excess[Math.min(800, Math.round(100 * spread[at]))]
-      if (p99 > (peak?.p99Db ?? Number.NEGATIVE_INFINITY))
-        peak = { meanDb: db, p99Db: p99, azimuthDeg: i * azimuthStepDeg, rangeM: (j + 0.5) * rangeStepM }
+    const at0 = i * ranges
+    for (let k = 0, j = 0; k < rings; k++) {
+      const part = k * 8 + octant
+      const from = j
+      let over = 0
+      let whole = 0
+      for (; j < ringEnds[k]; j++) {
+        const s = m.state[at0 + j]
+        const known = s > 0 && s < CELL.beyondVoid
+        db[j] = known ? cnrDb[at0 + j] - (less ? less[j] : 0) : Number.NaN
+        if (!known) continue
+        whole += areas[j]
+        if (!(db[j] > -100)) continue
+        if (db[j] > 40) over += areas[j]
+        const p99 = db[j] + excess[Math.min(800, (100 * spread[at0 + j] + 0.5) | 0)]
+        if (p99 > highest) {
+          highest = p99
+          peak = { meanDb: db[j], p99Db: p99, azimuthDeg: i * azimuthStepDeg, rangeM: (j + 0.5) * rangeStepM }
+        }
+      }
+      over40[part] += over
+      parts[part].whole += whole
+      addCells(parts[part], db, spread, at0, from, j, areas)
     }
   }
-  const level = (x: Mixture, over: number): ClutterLevel => ({
-    knownKm2: x.whole / 1e6,
-    over40Pct: x.whole > 0 ? (100 * over) / x.whole : 0,
-    meanDb: meanOfMixture(x),
-    p90Db: levelOfMixture(x, 0.9),
-    p99Db: levelOfMixture(x, 0.99),
-  })
+  const level = (x: Mixture, over: number): ClutterLevel => {
+    const [p90Db, p99Db] = levelsOfMixture(x, [0.9, 0.99])
+    return { knownKm2: x.whole / 1e6, over40Pct: x.whole > 0 ? (100 * over) / x.whole : 0, meanDb: meanOfMixture(x), p90Db, p99Db }
+  }
   const sumOf = (which: readonly number[]): ClutterLevel => {
     const all = makeMixture()
     for (const k of which) addMixture(all, parts[k])
