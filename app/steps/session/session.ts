@@ -69,7 +69,11 @@ export async function startSession(client: StudyClient, readGround: ReadGround):
 
   client.listen((tell) => {
     takeTell(results, tell, Date.now())
-    if (tell.kind === 'failure') say(tell.error.message, 'bad')
+    if (tell.kind !== 'failure') return
+    const { message, remedy } = tell.error
+    say(remedy === undefined ? sentenceOf(new Error(message)) : message, 'bad')
+    // a fault of ours ends the run: it is not tried again by itself
+    if (remedy === undefined) runner.stop()
   })
   const runner = keepRunning(study, view, ground, results, client, notices)
 

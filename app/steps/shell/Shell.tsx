@@ -53,7 +53,6 @@ export function Shell() {
       <FaultBoundary>
         <StepIndex />
       </FaultBoundary>
-      {/* biome-ignore lint/a11y/noNoninteractiveTabindex: a sheet without controls is scrolled by keys */}
       <section className={whole ? 'sheet' : 'form'} aria-label={STEP_WORDS[step].name} tabIndex={whole ? 0 : undefined}>
         <header>
           <h2>{STEP_WORDS[step].name}</h2>

@@ -7,10 +7,11 @@ import { useGround, useResults, useSession, useView } from '../session/index.ts'
 function useWork() {
   const status = useResults((r) => r.status)
   const reading = useGround((g) => g.reading)
+  const hold = useView((v) => v.hold)
   const { progress } = useMemoExport()
   if (reading) return { ...reading, secondsLeft: null, canStop: false }
   if (progress) return { doing: 'writing the memo', ...progress, secondsLeft: null, canStop: false }
-  return status ? { ...status, canStop: true } : null
+  return status && !hold ? { ...status, canStop: true } : null
 }
 
 /** How far the work is, along the foot of the top bar. */
