@@ -24,7 +24,8 @@ const POINTS_PER_TURN = 60_000
 /**
  * Sight from one site over the whole polar grid for any number of mast heights (m above the site's ground), all on one sampling of the ground: state,
  * share in sight, coverage floor with its error band and horizon per height; ground, code, relief, slope and height to see once. Every crossing of every
- * ray is visited; geometry is exact on the effective sphere. NaN and CELL.beyondVoid or CELL.outside where the ground is not known.
+ * ray is visited; geometry is exact on the effective sphere. NaN and CELL.beyondVoid or CELL.outside where the ground is not known. `sightOnly` leaves
+ * out what no mast height changes (ground, code, relief, slope, height to see): another effective earth has no use for it.
  */
 export function* sweep(
   g: Ground,
@@ -32,7 +33,7 @@ export function* sweep(
   heightsM: readonly number[],
   grid: PolarShape,
   earth: Earth,
-  options: { readonly keys?: SweepKeys } = {},
+  options: { readonly keys?: SweepKeys; readonly sightOnly?: boolean } = {},
 ): Work<{ site: SiteCells; masks: SightCells[] }> {
   const { azimuths, ranges } = grid
   const cuts = uniformCuts(ranges, grid.rangeStepM)
@@ -40,7 +41,7 @@ export function* sweep(
   const track = r.tracer.track
   const p = makeCellProfile(track.surface.length, ranges)
   const hull = makeHull(track.surface.length, ranges)
-  const cells = azimuths * ranges
+  const cells = options.sightOnly ? 0 : azimuths * ranges
   const siteCells = {
     kind: 'site' as const,
     version: 1 as const,
@@ -69,17 +70,7 @@ export function* sweep(
     siteCells.effectiveRadiusM[i] = r.effectiveRadiusM
     fillCells(track, r.inverse, cuts, p)
     const { known } = p
-    if (track.ground === track.surface) groundOfCells(p, siteCells, offset)
-    else {
-      cutGround(track.ground, centres, known, groundM, slope)
-      writeGround(groundM, slope, known, siteCells, offset)
-    }
-    r.tracer.sampleCells(centres, known, siteCells.code, siteCells.relief, offset)
-    heightsToSee(p, cuts, r.siteGroundM, r.inverse, g.postingM, hull, siteCells.heightToSeeM, offset)
-    siteCells.groundM.fill(Number.NaN, offset + known, offset + ranges)
-    siteCells.code.fill(255, offset + known, offset + ranges)
-    siteCells.relief.fill(RELIEF.unknown, offset + known, offset + ranges)
-    siteCells.heightToSeeM.fill(Number.NaN, offset + known, offset + ranges)
+    if (!options.sightOnly) writeSite(known, offset)
     const unknownState = track.unknownWhy === 'void' ? CELL.beyondVoid : CELL.outside
     whole.fill(0)
     for (const mask of ascending) {
@@ -95,6 +86,20 @@ export function* sweep(
     }
   }
   return { site: siteCells, masks }
+
+  function writeSite(known: number, offset: number): void {
+    if (track.ground === track.surface) groundOfCells(p, siteCells, offset)
+    else {
+      cutGround(track.ground, centres, known, groundM, slope)
+      writeGround(groundM, slope, known, siteCells, offset)
+    }
+    r.tracer.sampleCells(centres, known, siteCells.code, siteCells.relief, offset)
+    heightsToSee(p, cuts, r.siteGroundM, r.inverse, g.postingM, hull, siteCells.heightToSeeM, offset)
+    siteCells.groundM.fill(Number.NaN, offset + known, offset + ranges)
+    siteCells.code.fill(255, offset + known, offset + ranges)
+    siteCells.relief.fill(RELIEF.unknown, offset + known, offset + ranges)
+    siteCells.heightToSeeM.fill(Number.NaN, offset + known, offset + ranges)
+  }
 }
 
 /** Ground at the cell centres where it is the surface. */

@@ -2,20 +2,19 @@
 export interface AreaHistogram {
   readonly low: number
   readonly step: number
+  readonly perStep: number
+  readonly last: number
   readonly areas: Float64Array
-  total: number
 }
 
 export function areaHistogram(low: number, high: number, step: number): AreaHistogram {
-  return { low, step, areas: new Float64Array(Math.ceil((high - low) / step) + 1), total: 0 }
+  const areas = new Float64Array(Math.ceil((high - low) / step) + 1)
+  return { low, step, perStep: 1 / step, last: areas.length - 1, areas }
 }
 
 /** Adds one cell; values beyond the ends go to the end bins. */
 export function addArea(h: AreaHistogram, value: number, area: number): void {
-  const last = h.areas.length - 1
-  const bin = Math.floor((value - h.low) / h.step)
-  h.areas[bin < 0 ? 0 : bin > last ? last : bin] += area
-  h.total += area
+  h.areas[Math.min(h.last, Math.max(0, (value - h.low) * h.perStep)) | 0] += area
 }
 
 /**
@@ -23,14 +22,15 @@ export function addArea(h: AreaHistogram, value: number, area: number): void {
  * null when the histogram is empty.
  */
 export function areaPercentile(h: AreaHistogram, share: number, safe: 'up' | 'down'): number | null {
-  if (!(h.total > 0)) return null
-  const wanted = share * h.total
+  const total = h.areas.reduce((s, area) => s + area, 0)
+  if (!(total > 0)) return null
+  const wanted = share * total
   let sum = 0
   let bin = 0
   for (; bin < h.areas.length; bin++) {
     sum += h.areas[bin]
-    if (sum >= wanted - 1e-9 * h.total) break
+    if (sum >= wanted - 1e-9 * total) break
   }
-  const lower = h.low + Math.min(bin, h.areas.length - 1) * h.step
+  const lower = h.low + Math.min(bin, h.last) * h.step
   return safe === 'up' ? lower + h.step : lower
 }

@@ -1,8 +1,9 @@
 import type { SightCells } from '../masking/index.ts'
 import { CELL, cellAreasM2, type PolarShape } from '../polar/index.ts'
-import { fromDb, M_PER_NM, toDb } from '../units/index.ts'
+import { M_PER_NM, toDb } from '../units/index.ts'
 import type { OptionCells } from './optionCells.ts'
 import { percentile } from './percentile.ts'
+import { ratioOfDb } from './signal/decibelTables.ts'
 import type { Figures, FloorFigure, RingFigure } from './types.ts'
 
 /** Rings are 5 NM wide. */
@@ -24,78 +25,67 @@ export function groundSums(o: OptionCells): GroundSums {
   const areas = cellAreasM2(o.site.grid, o.place.lat)
   const ringOf = (j: number) => Math.floor(((j + 0.5) * rangeStepM) / RING_WIDTH_M)
   const ringCount = ringOf(ranges - 1) + 1
-  const ground = new Float64Array(ringCount)
-  const seen = new Float64Array(ringCount)
-  const unknown = new Float64Array(ringCount)
-  const power = new Float64Array(ringCount)
-  const powerArea = new Float64Array(ringCount)
-  const max = new Float64Array(ringCount).fill(Number.NEGATIVE_INFINITY)
-  const over = { over0: 0, over20: 0, over40: 0, over60: 0 }
-  const ratio = ratioTable()
+  // by range cell, in cells: areas come in at the end
+  const seen = new Float64Array(ranges)
+  const unknown = new Float64Array(ranges)
+  const power = new Float64Array(ranges)
+  const powerCells = new Float64Array(ranges)
+  const max = new Float64Array(ranges).fill(Number.NEGATIVE_INFINITY)
+  const over = [new Float64Array(ranges), new Float64Array(ranges), new Float64Array(ranges), new Float64Array(ranges)]
   const { state, inSight } = o.mask
   const { cnrDb } = o.clutter
-  for (let j = 0; j < ranges; j++) {
-    const area = areas[j]
-    const ring = ringOf(j)
-    for (let i = 0; i < azimuths; i++) {
+  for (let i = 0; i < azimuths; i++)
+    for (let j = 0; j < ranges; j++) {
       const at = i * ranges + j
       const s = state[at]
-      ground[ring] += area
       if (s === CELL.beyondVoid || s === CELL.outside || s === 0) {
-        unknown[ring] += area
+        unknown[j]++
         continue
       }
       const share = inSight[at] / 65535
-      seen[ring] += area * share
+      seen[j] += share
       const cnr = cnrDb[at]
       if (!(cnr > -100)) continue
       if (share > 0) {
-        power[ring] += area * share * ratioOf(ratio, cnr)
-        powerArea[ring] += area * share
-        if (cnr > max[ring]) max[ring] = cnr
+        power[j] += share * ratioOfDb(cnr)
+        powerCells[j] += share
+        if (cnr > max[j]) max[j] = cnr
       }
-      if (cnr > 0) {
-        over.over0 += area
-        if (cnr > 20) {
-          over.over20 += area
-          if (cnr > 40) {
-            over.over40 += area
-            if (cnr > 60) over.over60 += area
-          }
-        }
-      }
+      if (cnr > 0) over[cnr > 60 ? 3 : cnr > 40 ? 2 : cnr > 20 ? 1 : 0][j]++
     }
+  const ringSum = (of: Float64Array): Float64Array => {
+    const sums = new Float64Array(ringCount)
+    for (let j = 0; j < ranges; j++) sums[ringOf(j)] += of[j] * areas[j]
+    return sums
   }
+  const ground = ringSum(new Float64Array(ranges).fill(azimuths))
+  const [seenM2, unknownM2, powerM2, powerAreaM2] = [seen, unknown, power, powerCells].map(ringSum)
+  const ringMax = new Float64Array(ringCount).fill(Number.NEGATIVE_INFINITY)
+  for (let j = 0; j < ranges; j++) ringMax[ringOf(j)] = Math.max(ringMax[ringOf(j)], max[j])
+  const overM2 = over.map((of) => ringSum(of).reduce((t, v) => t + v, 0))
+  const overFrom = (n: number): number => overM2.slice(n).reduce((t, v) => t + v, 0) / 1e6
   const rings: RingFigure[] = []
   for (let k = 0; k < ringCount; k++)
     rings.push({
       fromM: k * RING_WIDTH_M,
       toM: Math.min((k + 1) * RING_WIDTH_M, ranges * rangeStepM),
       groundKm2: ground[k] / 1e6,
-      inSightKm2: seen[k] / 1e6,
-      unknownKm2: unknown[k] / 1e6,
-      cnrMeanDb: powerArea[k] > 0 ? toDb(power[k] / powerArea[k]) : null,
-      cnrMaxDb: Number.isFinite(max[k]) ? max[k] : null,
+      inSightKm2: seenM2[k] / 1e6,
+      unknownKm2: unknownM2[k] / 1e6,
+      cnrMeanDb: powerAreaM2[k] > 0 ? toDb(powerM2[k] / powerAreaM2[k]) : null,
+      cnrMaxDb: Number.isFinite(ringMax[k]) ? ringMax[k] : null,
     })
   const sum = (a: Float64Array) => a.reduce((t, v) => t + v, 0) / 1e6
   const peak = max.reduce((a, b) => Math.max(a, b), Number.NEGATIVE_INFINITY)
   return {
     rings,
-    inSightKm2: sum(seen),
-    maskedKm2: sum(ground) - sum(unknown) - sum(seen),
-    unknownKm2: sum(unknown),
-    over: { over0: over.over0 / 1e6, over20: over.over20 / 1e6, over40: over.over40 / 1e6, over60: over.over60 / 1e6 },
+    inSightKm2: sum(seenM2),
+    maskedKm2: sum(ground) - sum(unknownM2) - sum(seenM2),
+    unknownKm2: sum(unknownM2),
+    over: { over0: overFrom(0), over20: overFrom(1), over40: overFrom(2), over60: overFrom(3) },
     peakDb: Number.isFinite(peak) ? peak : null,
   }
 }
-
-/** Power ratios for −100…150 dB in steps of 0.05 dB. */
-function ratioTable(): Float64Array {
-  const t = new Float64Array(5001)
-  for (let i = 0; i < t.length; i++) t[i] = fromDb(i / 20 - 100)
-  return t
-}
-const ratioOf = (t: Float64Array, db: number): number => t[Math.min(5000, Math.max(0, Math.round((db + 100) * 20)))]
 
 /** Coverage floor at 5, 10, 20, 40 and 60 NM, as far as the grid goes: best, median and worst azimuth. */
 export function floorFigures(mask: Pick<SightCells, 'floorM' | 'floorBandM'>, grid: PolarShape): FloorFigure[] {

@@ -200,7 +200,13 @@ export class Answers {
       const batch = heights.slice(n, n + LADDER_BATCH)
       const { site, masks } = yield* share(sweep(ground, place, batch, grid, earth), n, n + batch.length / 3, heights.length)
       const low =
-        lowEarth && (yield* share(sweep(ground, place, batch, grid, lowEarth), n + batch.length / 3, n + batch.length / 2, heights.length))
+        lowEarth &&
+        (yield* share(
+          sweep(ground, place, batch, grid, lowEarth, { sightOnly: true }),
+          n + batch.length / 3,
+          n + batch.length / 2,
+          heights.length,
+        ))
       for (const [h, mask] of masks.entries()) {
         const { heightM } = mask
         const options = clutterOptions(study, ground, landTable, place, heightM)
@@ -218,7 +224,6 @@ export class Answers {
     return ladderOf(rungs)
   }
 
-  // biome-ignore lint/correctness/useYield: an answer that needs no slices
   private *groundAt(body: Ask['groundAt']): Work<EngineAnswer['groundAt']> {
     const { ground } = this.engine
     return body.at.map((p) => {

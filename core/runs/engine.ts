@@ -181,7 +181,7 @@ export class Engine {
     const keep = this.keepWhile(ref)
     const heights = this.missingHeights(candidate.mastHeightsM, ref.heightM, keyAt)
     const earth = lowEarthOf(study)
-    const { site, masks } = yield* sweep(ground, siteOf(candidate), heights, polarShape(study.run), earth)
+    const { site, masks } = yield* sweep(ground, siteOf(candidate), heights, polarShape(study.run), earth, { sightOnly: true })
     for (const m of masks) {
       const own = lowKOf(site, m, earth, keyAt(m.heightM))
       this.cache.put(own.key, own, keep)

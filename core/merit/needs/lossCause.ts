@@ -1,5 +1,5 @@
 import { aboveNoiseDb } from '../signal/decibelTables.ts'
-import { type LossCause, lossCode } from './needTypes.ts'
+import { lossCode } from './needTypes.ts'
 
 /** What the signal of one place is made of, dB; `headDb` is S/N after pattern and STC less the required ratio (with a bank's gain). */
 export interface SignalParts {
@@ -11,35 +11,34 @@ export interface SignalParts {
   readonly noiseGainDb: number
   readonly above: boolean
   /** Response of the processing to the target's own speed, dB; on the echo for a canceller, on the residue for a bank. */
-  readonly echoResponseDb?: number
-  readonly residueResponseDb?: number
+  readonly echoResponseDb: number
+  readonly residueResponseDb: number
 }
 
 /** Signal margin S/(C/I+N) less the required ratio, dB. */
-export function signalMarginDb(p: SignalParts): number {
-  const head = p.headDb + (p.echoResponseDb ?? 0)
-  return head - aboveNoiseDb(p.residueDb - (p.residueResponseDb ?? 0) - p.stcDb + p.noiseGainDb)
-}
+export const signalMarginDb = (p: SignalParts): number =>
+  p.headDb + p.echoResponseDb - aboveNoiseDb(p.residueDb - p.residueResponseDb - p.stcDb + p.noiseGainDb)
 
-const CODE = (cause: LossCause): number => lossCode(cause)
-const TOO_WEAK = CODE('too-weak')
-const STC = CODE('short-range-sensitivity')
-const ABOVE = CODE('above-beam')
-const BELOW = CODE('below-beam')
-const CLUTTER = CODE('clutter')
-const BLIND = CODE('blind-speed')
-const SEVERAL = CODE('several')
+const TOO_WEAK = lossCode('too-weak')
+const STC = lossCode('short-range-sensitivity')
+const ABOVE = lossCode('above-beam')
+const BELOW = lossCode('below-beam')
+const CLUTTER = lossCode('clutter')
+const BLIND = lossCode('blind-speed')
+const SEVERAL = lossCode('several')
 
 /**
  * Why a place in sight and in range is not usable, as a code of LOSS_CAUSES: too weak even on the beam peak without short-range sensitivity;
  * else the first of short-range sensitivity, elevation pattern, clutter, speed whose removal alone makes it pass; else several together.
  */
 export function signalLoss(p: SignalParts): number {
-  const passes = (change: Partial<SignalParts>): boolean => signalMarginDb({ ...p, ...change }) >= 0
-  if (p.headDb + p.stcDb - p.gainDb < 0) return TOO_WEAK
-  if (p.stcDb > 0 && passes({ headDb: p.headDb + p.stcDb, stcDb: 0 })) return STC
-  if (passes({ headDb: p.headDb - p.gainDb })) return p.above ? ABOVE : BELOW
-  if (passes({ residueDb: Number.NaN })) return CLUTTER
-  if (passes({ echoResponseDb: 0, residueResponseDb: 0 })) return BLIND
+  const { headDb, gainDb, stcDb, echoResponseDb: echo, residueResponseDb } = p
+  const residue = p.residueDb + p.noiseGainDb
+  const left = residue - residueResponseDb
+  if (headDb + stcDb - gainDb < 0) return TOO_WEAK
+  if (stcDb > 0 && headDb + stcDb + echo >= aboveNoiseDb(left)) return STC
+  if (headDb - gainDb + echo >= aboveNoiseDb(left - stcDb)) return p.above ? ABOVE : BELOW
+  if (headDb + echo >= 0) return CLUTTER
+  if (headDb >= aboveNoiseDb(residue - stcDb)) return BLIND
   return SEVERAL
 }

@@ -1,15 +1,15 @@
 import { geodesicDirect } from '../../geodesy/index.ts'
 import { sightPoint } from '../../masking/index.ts'
-import { cellAreasM2 } from '../../polar/index.ts'
 import type { SettledNeed } from '../../study/index.ts'
 import { toDb } from '../../units/index.ts'
-import { addArea, areaHistogram, areaPercentile } from '../areaHistogram.ts'
+import { type AreaHistogram, areaPercentile } from '../areaHistogram.ts'
 import type { OptionCells } from '../optionCells.ts'
-import { ratioOfDb } from '../signal/decibelTables.ts'
+import { areaSums } from './areaSums.ts'
 import { conesOf } from './cone.ts'
-import { type NeedCells, needCells, PLACE } from './needCells.ts'
-import { LOSS_CAUSES, type NeedFigure, type PlaceRef, type SuppressionFigure } from './needTypes.ts'
+import { type NeedCells, needCells, scanNeed } from './needCells.ts'
+import { lossCode, type NeedFigure, type PlaceRef, type SuppressionFigure } from './needTypes.ts'
 import { lossesOf, outcome } from './outcome.ts'
+import { PLACE } from './place.ts'
 import { fixesFigure, trackFigure } from './places/placesFigure.ts'
 
 /** Is a need tested in the cells of the polar grid? Fixes and tracks have rays of their own. */
@@ -34,77 +34,21 @@ export function needFigure(o: OptionCells, need: SettledNeed): NeedFigure {
 
 /** Sums over the cells of a layer or polygon need. */
 function areaFigure(o: OptionCells, need: SettledNeed, base: NeedFigure): NeedFigure {
-  const cells = needCells(o, need)
-  const { azimuths, ranges, azimuthStepDeg, rangeStepM } = o.site.grid
-  const areas = cellAreasM2(o.site.grid, o.place.lat)
-  const margins = areaHistogram(-2000, 20000, 1)
-  const signals = areaHistogram(-150, 150, 0.1)
-  const needed = areaHistogram(0, 200, 0.1)
-  const shortBy = areaHistogram(0, 200, 0.1)
-  const lost = new Float64Array(LOSS_CAUSES.length + 1)
-  // by bit of PLACE
-  const sum = new Float64Array(10)
-  let total = 0
-  let above = 0
-  let short = 0
-  let clutter = 0
-  let left = 0
-  const height: Worst = { value: Number.POSITIVE_INFINITY, cell: -1 }
-  const signal: Worst = { value: Number.POSITIVE_INFINITY, cell: -1 }
-  for (let i = 0; i < azimuths; i++) {
-    const pairs = cells.spans.pairs[i]
-    for (let p = 0; pairs && p < pairs.length; p += 2)
-      for (let j = pairs[p]; j < pairs[p + 1]; j++) {
-        const at = i * ranges + j
-        const bits = cells.place[at]
-        const area = areas[j]
-        if (bits & PLACE.groundAbove) {
-          above += area
-          continue
-        }
-        total += area
-        for (let b = 1; b < 10; b++) if (bits & (1 << b)) sum[b] += area
-        if (cells.cause[at] > 0) lost[cells.cause[at]] += area
-        if (bits & PLACE.unknown) continue
-        const margin = cells.marginM[at]
-        addArea(margins, margin, area)
-        if (margin < height.value) {
-          height.value = margin
-          height.cell = at
-        }
-        const over = cells.signalDb[at]
-        if (!Number.isNaN(over)) {
-          addArea(signals, over, area)
-          if (over < signal.value) {
-            signal.value = over
-            signal.cell = at
-          }
-        }
-        const wanted = cells.neededDb[at]
-        if (Number.isNaN(wanted)) continue
-        const available = cells.availableDb[at]
-        addArea(needed, wanted, area)
-        addArea(shortBy, Math.max(0, wanted - available), area)
-        if (wanted > available) short += area
-        if (o.suppression.uniformDb === null) {
-          const cnr = ratioOfDb(o.clutter.cnrDb[at])
-          clutter += area * cnr
-          left += area * cnr * ratioOfDb(-available)
-        }
-      }
-  }
-  const beyond = cells.spans.beyondM2
-  total += beyond
-  const of = (bit: number): number => sum[Math.log2(bit)]
-  const unknown = of(PLACE.unknown) + beyond
-  lost[1] += beyond
+  const sums = areaSums(o)
+  const { beyondM2 } = scanNeed(o, need, sums.add)
+  const { margins, signals, needed, shortBy, lost, lowestMargin, lowestSignal } = sums
+  const of = (bit: number): number => sums.by.reduce((s, area, bits) => (bits & bit ? s + area : s), 0)
+  const above = of(PLACE.groundAbove)
+  const total = of(PLACE.inNeed) - above + beyondM2
+  const unknown = of(PLACE.unknown) + beyondM2
+  lost[lossCode('unknown')] += beyondM2
   const pct = (m2: number): number => (total > 0 ? (100 * m2) / total : 0)
   const suppression: SuppressionFigure = {
     p50Db: levelAt(needed, 0.5),
     p90Db: levelAt(needed, 0.9),
     p99Db: levelAt(needed, 0.99),
-    availableDb: o.suppression.uniformDb ?? (left > 0 ? toDb(clutter / left) : 0),
-    shortKm2: short / 1e6,
+    availableDb: o.suppression.uniformDb ?? (sums.total.left > 0 ? toDb(sums.total.clutter / sums.total.left) : 0),
+    shortKm2: sums.total.short / 1e6,
     shortP90Db: levelAt(shortBy, 0.9),
     shortP99Db: levelAt(shortBy, 0.99),
     maskedPct: pct(total - unknown - of(PLACE.inSight)),
@@ -116,8 +60,6 @@ function areaFigure(o: OptionCells, need: SettledNeed, base: NeedFigure): NeedFi
     detectablePct: pct(of(PLACE.lowDetectable)),
     usablePct: pct(of(PLACE.lowUsable)),
   }
-  const placeOf = (w: Worst): PlaceRef | null =>
-    w.cell < 0 ? null : placeAt(o, Math.floor(w.cell / ranges) * azimuthStepDeg, ((w.cell % ranges) + 0.5) * rangeStepM)
   return {
     ...base,
     ...outcome(o, need, shares, lowShares),
@@ -129,30 +71,31 @@ function areaFigure(o: OptionCells, need: SettledNeed, base: NeedFigure): NeedFi
     marginalKm2: of(PLACE.marginal) / 1e6,
     unknownKm2: unknown / 1e6,
     groundAboveKm2: above / 1e6,
-    worstMarginM: height.cell < 0 ? null : height.value,
+    worstMarginM: lowestMargin.cell < 0 ? null : lowestMargin.value,
     tenthMarginM: areaPercentile(margins, 0.1, 'down'),
-    worst: placeOf(height),
+    worst: placeAt(o, lowestMargin.cell),
     signal: {
-      worstDb: signal.cell < 0 ? null : signal.value,
+      worstDb: lowestSignal.cell < 0 ? null : lowestSignal.value,
       tenthDb: areaPercentile(signals, 0.1, 'down'),
-      worst: placeOf(signal),
+      worst: placeAt(o, lowestSignal.cell),
     },
     losses: lossesOf(lost, total, 1e6),
     suppression,
   }
 }
-interface Worst {
-  value: number
-  cell: number
-}
 
-const levelAt = (h: ReturnType<typeof areaHistogram>, share: number): number | null => {
+const levelAt = (h: AreaHistogram, share: number): number | null => {
   const v = areaPercentile(h, share, 'up')
   // The first bin holds the places that need nothing.
   return v === null ? null : v <= h.step + 1e-9 ? 0 : v
 }
 
-function placeAt(o: OptionCells, azimuthDeg: number, rangeM: number): PlaceRef {
+/** Centre of a cell; null for −1. */
+function placeAt(o: OptionCells, cell: number): PlaceRef | null {
+  if (cell < 0) return null
+  const { ranges, azimuthStepDeg, rangeStepM } = o.site.grid
+  const azimuthDeg = Math.floor(cell / ranges) * azimuthStepDeg
+  const rangeM = ((cell % ranges) + 0.5) * rangeStepM
   const at = geodesicDirect(o.place, azimuthDeg, rangeM)
   const sight = sightPoint(o.ground, o.place, o.heightM, o.earth, at)
   return { lon: at.lon, lat: at.lat, azimuthDeg, rangeM, obstacle: sight.controlling?.obstacle ?? 'terrain' }

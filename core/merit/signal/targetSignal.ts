@@ -26,19 +26,30 @@ export interface TargetSignal {
 
 /** Tables for one radar, tilt and target. Side-lobe floors are for clutter only and are not used here. */
 export function targetSignal(radar: RadarInput, tiltDeg: number, rcsM2: number, longestSlantM: number): TargetSignal {
-  const gainDb = new Float32Array(GAIN_ENTRIES + 2)
-  for (let i = 0; i < gainDb.length; i++) gainDb[i] = exactGainDb(radar, tiltDeg, i / GAIN_PER_UNIT - GAIN_TO)
   const stc = new Float32Array(Math.ceil(longestSlantM / STC_STEP_M) + 3)
   if (radar.stc.kind !== 'none') for (let i = 0; i < stc.length; i++) stc[i] = stcDb(radar, i * STC_STEP_M)
   return {
     radar,
     tiltDeg,
     atOneMetreDb: signalToNoiseDb(radar, { rcsM2, slantRangeM: 1 }),
-    gainDb,
+    gainDb: gainTable(radar, tiltDeg),
     stcDb: stc,
     tanTilt: Math.tan(tiltDeg * RAD_PER_DEG),
     reach: reachOf(radar),
   }
+}
+
+/** Gain tables of a radar by tilt: the same for every need and mast height. */
+const gainTables = new WeakMap<RadarInput, Map<number, Float32Array>>()
+function gainTable(radar: RadarInput, tiltDeg: number): Float32Array {
+  const own = gainTables.get(radar) ?? new Map<number, Float32Array>()
+  gainTables.set(radar, own)
+  let table = own.get(tiltDeg)
+  if (!table) {
+    table = Float32Array.from({ length: GAIN_ENTRIES + 2 }, (_, i) => exactGainDb(radar, tiltDeg, i / GAIN_PER_UNIT - GAIN_TO))
+    own.set(tiltDeg, table)
+  }
+  return table
 }
 
 function exactGainDb(radar: RadarInput, tiltDeg: number, tanElevation: number): number {
@@ -162,18 +173,4 @@ export function fillLevelRow(
     row.heard[j] = isHeard(signal.reach, slant) ? 1 : 0
     row.above[j] = tan > signal.tanTilt ? 1 : 0
   }
-}
-
-/** Slant ranges of the ground itself along a row, m: a target shares the gate of the ground at its own slant range. */
-export function fillGroundSlants(
-  groundM: Float32Array,
-  from: number,
-  first: number,
-  last: number,
-  mastM: number,
-  c: number,
-  rangeStepM: number,
-  out: Float32Array,
-): void {
-  for (let j = first; j < last; j++) out[j] = Math.sqrt(slantSquared(mastM, groundM[from + j], (j + 0.5) * rangeStepM, c))
 }

@@ -1,0 +1,149 @@
+import { aboveNoiseDb, roomOverNoiseDb } from '../signal/decibelTables.ts'
+import { twoWayEdgeLossDb } from '../signal/edgeLoss.ts'
+import type { Overload } from '../signal/receiverLimits.ts'
+import type { LevelRow } from '../signal/targetSignal.ts'
+import { signalLoss } from './lossCause.ts'
+import { lossCode } from './needTypes.ts'
+import { PLACE } from './place.ts'
+import type { RayRow } from './rayRow.ts'
+
+/** One level of a need against the cells of one option; rows are those of the azimuth at hand. */
+export interface LevelTest {
+  readonly levelM: number
+  readonly aboveSea: boolean
+  readonly row: LevelRow
+  /** The same at the smaller k; null where that is not worked out. */
+  readonly rowLow: LevelRow | null
+  readonly ray: RayRow
+  readonly groundM: Float32Array
+  readonly floorM: Float32Array
+  readonly floorBandM: Float32Array
+  readonly clearLowM: Float32Array | null
+  readonly cnrDb: Float32Array
+  readonly residueDb: Float32Array
+  readonly residueLessDb: number
+  readonly overload: Overload | null
+  readonly noiseGainDb: number
+  readonly wavelengthM: number
+  readonly rangeStepM: number
+  readonly ranges: number
+}
+
+/** What the levels of a need found in the cells of one row: while they are tested, what holds so far. Fields as in NeedCells. */
+export interface NeedRow {
+  /** Levels above the ground. */
+  readonly tested: Uint8Array
+  /** PLACE.marginal where any is. */
+  readonly marginal: Uint8Array
+  /** Bits of PLACE that hold at every level. */
+  readonly place: Uint16Array
+  /** Why the first level that fails fails. */
+  readonly cause: Uint8Array
+  readonly marginM: Float32Array
+  readonly signalDb: Float32Array
+  readonly neededDb: Float32Array
+  readonly availableDb: Float32Array
+}
+export const makeNeedRow = (ranges: number): NeedRow => ({
+  tested: new Uint8Array(ranges),
+  marginal: new Uint8Array(ranges),
+  place: new Uint16Array(ranges),
+  cause: new Uint8Array(ranges),
+  marginM: new Float32Array(ranges),
+  signalDb: new Float32Array(ranges),
+  neededDb: new Float32Array(ranges),
+  availableDb: new Float32Array(ranges),
+})
+const EVERY = PLACE.inSight | PLACE.detectable | PLACE.usable | PLACE.lowInSight | PLACE.lowDetectable | PLACE.lowUsable
+export function startRow(r: NeedRow, first: number, last: number): void {
+  r.tested.fill(0, first, last)
+  r.marginal.fill(0, first, last)
+  r.place.fill(EVERY, first, last)
+  r.cause.fill(0, first, last)
+  r.marginM.fill(Number.POSITIVE_INFINITY, first, last)
+  r.signalDb.fill(Number.POSITIVE_INFINITY, first, last)
+  r.neededDb.fill(-1, first, last)
+}
+
+const OUT_OF_RANGE = lossCode('out-of-range')
+const MASKED = lossCode('masked')
+const MARGINAL = lossCode('marginal')
+
+/** Tests one level in cells first … last−1 of a row that starts at `from`. Unknown ground counts as hidden; the caller tells it apart. */
+export function testLevel(t: LevelTest, out: NeedRow, first: number, last: number, from: number): void {
+  const { levelM, aboveSea, row, rowLow, groundM, floorM, floorBandM, clearLowM, cnrDb, residueDb, residueLessDb, overload } = t
+  const { noiseGainDb, wavelengthM, rangeStepM, ranges } = t
+  const { obstacleM, groundSlantM, rangeM } = t.ray
+  const { tested, place, marginal, cause: why, marginM, signalDb, neededDb, availableDb } = out
+  const perStep = 1 / rangeStepM
+  for (let j = first; j < last; j++) {
+    const at = from + j
+    const ground = groundM[at]
+    const target = aboveSea ? levelM : ground + levelM
+    if (target < ground) continue
+    tested[j]++
+    const margin = target - floorM[at]
+    const band = floorBandM[at]
+    if (margin < marginM[j]) marginM[j] = margin
+    const heard = row.heard[j] === 1
+    if (!heard && why[j] === 0) why[j] = OUT_OF_RANGE
+
+    // A target shares the gate of the ground at its own slant range.
+    const gate = from + Math.min(ranges - 1, Math.max(0, j + Math.round((row.slantM[j] - groundSlantM[j]) * perStep)))
+    const cnr = cnrDb[gate]
+    const stc = row.stcDb[j]
+    const overloaded = overload !== null && cnr - stc + overload.excessDb[gate] > overload.limitDb
+    const left = overloaded ? cnr : residueDb[gate] - residueLessDb
+    const residue = left - stc
+    let bits = 0
+
+    if (rowLow !== null && clearLowM !== null && target >= clearLowM[at]) {
+      bits |= PLACE.lowInSight
+      const edge = twoWayEdgeLossDb(target - clearLowM[at] + band, rangeM[j], obstacleM[j], wavelengthM)
+      const strength = rowLow.headDb[j] - edge
+      if (strength >= 0 && rowLow.heard[j] === 1) {
+        bits |= PLACE.lowDetectable
+        const room = edge > 0 ? roomOverNoiseDb(strength) - noiseGainDb : rowLow.roomDb[j]
+        if (!(residue > room)) bits |= PLACE.lowUsable
+      }
+    }
+    if (margin >= band) {
+      bits |= PLACE.inSight
+      const edge = twoWayEdgeLossDb(margin, rangeM[j], obstacleM[j], wavelengthM)
+      const strength = row.headDb[j] - edge
+      const over = strength - aboveNoiseDb(residue + noiseGainDb)
+      if (over < signalDb[j]) signalDb[j] = over
+      if (strength >= 0 && heard) {
+        bits |= PLACE.detectable
+        const room = edge > 0 ? roomOverNoiseDb(strength) - noiseGainDb : row.roomDb[j]
+        const needed = cnr - stc > room ? cnr - stc - room : 0
+        if (needed > neededDb[j]) {
+          neededDb[j] = needed
+          availableDb[j] = cnr >= left ? cnr - left : residueLessDb
+        }
+        if (over >= 0) bits |= PLACE.usable
+      }
+      if (!(bits & PLACE.usable) && why[j] === 0) {
+        // what only the loss close over the mask takes away is the mask's
+        const free = edge > 0 && row.headDb[j] >= aboveNoiseDb(residue + noiseGainDb)
+        why[j] = free
+          ? MASKED
+          : signalLoss({
+              headDb: strength,
+              gainDb: row.gainDb[j],
+              stcDb: stc,
+              residueDb: left,
+              noiseGainDb,
+              above: row.above[j] === 1,
+              echoResponseDb: 0,
+              residueResponseDb: 0,
+            })
+      }
+    } else {
+      const isMarginal = margin > -band
+      if (isMarginal) marginal[j] = PLACE.marginal
+      if (why[j] === 0) why[j] = isMarginal ? MARGINAL : MASKED
+    }
+    place[j] &= bits
+  }
+}
