@@ -1,9 +1,8 @@
 import type { TracedRay } from '../terrain/index.ts'
 import { type Cuts, placeCuts } from './profile.ts'
-import { straightY } from './straight.ts'
 
-// The sweep's form of a ray in the straight plane: crossings only, with the polar cells noted beside them, so that whole cells can be passed over.
-// Numbers that are read together lie side by side.
+// The sweep's form of a ray in the straight plane: crossings only, with the polar cells noted beside them, so that whole cells can be passed over. The
+// loops are short, hold few arrays, and have no branch the processor would have to guess: that, not the arithmetic, is what a crossing costs.
 
 /** One ray cut into contiguous cells. Scratch, filled again for each ray; shared by all antenna heights. */
 export interface CellProfile {
@@ -12,10 +11,12 @@ export interface CellProfile {
   readonly line: Float64Array
   /** Cells whose centre lies on known ground. */
   known: number
-  /** Per cell: surface at the centre (m), its slope along the ray, and the highest Y of the segments that touch the cell. */
+  /** Per cell: surface at the centre (m), its slope along the ray, and a height Y that no segment touching the cell exceeds. */
   readonly cell: Float64Array
   /** Per cell: the crossing that ends the segment holding the centre, and the one that ends the segment holding the far edge. */
   readonly at: Int32Array
+  /** Highest Y of the segments that end in a cell; one cell more for what lies beyond. */
+  readonly top: Float64Array
 }
 export const makeCellProfile = (track: number, cells: number): CellProfile => ({
   count: 0,
@@ -23,78 +24,111 @@ export const makeCellProfile = (track: number, cells: number): CellProfile => ({
   known: 0,
   cell: new Float64Array(3 * cells),
   at: new Int32Array(2 * cells),
+  top: new Float64Array(cells + 1),
 })
 
+/** Rounding allowed for where a highest Y is put together from sums, m. */
+const TOP_SLACK_M = 1e-6
+/** Below any surface. */
+const LOWEST_M = -1e6
+
 /**
- * Fills the profile from a traced ray. `cuts` holds centre and far edge of each cell in turn. Heights go through the exact map; inside a segment the
- * surface is the parabola of the patch less 1/2R, which differs from the mapped patch by under a thousandth of its own bulge.
+ * Fills the profile from a traced ray. `cuts` holds centre and far edge of each cell in turn, evenly spaced. Heights go through the exact map; inside a
+ * segment the surface is the parabola of the patch less 1/2R, which differs from the mapped patch by under a thousandth of its own bulge.
  */
 export function fillCells(t: TracedRay, inverse: number, cuts: Cuts, out: CellProfile): void {
   placeCuts(cuts, inverse)
-  const { surface, count } = t
-  const { line, cell, at } = out
-  const cutM = cuts.m
-  const half = 0.5 * inverse
-  out.count = count
+  out.count = t.count
   out.known = 0
-  if (count === 0) return
-  let k = 0
-  let next = cutM[0]
-  let s0 = 0
-  let z0 = surface[1]
-  let q = surface[2]
-  let x0 = 0
-  let y0 = straightY(z0, 0, inverse)
-  line[0] = 0
-  line[1] = y0
-  let top = y0
+  if (t.count === 0) return
+  const marks = out.at.length
+  const perMark = 1 / cuts.m[0]
+  out.at.fill(0)
+  out.top.fill(LOWEST_M)
+  straightenLine(t.surface, t.count, inverse, out.line)
+  noteCells(t.surface, t.count, out.line, perMark, marks, out.at, out.top)
+  // marks the ray reaches
+  const lastM = t.surface[3 * t.count - 3]
+  const reached = Math.min(marks, Math.floor(lastM * perMark + 1e-9))
+  out.known = (reached + 1) >> 1
+  settleCells(t.surface, t.count, cuts.m, out, reached)
+}
+
+/** straightX, straightDrop and straightY of every crossing: the hottest lines of the sweep. */
+function straightenLine(surface: Float64Array, count: number, inverse: number, line: Float64Array): void {
+  const half = 0.5 * inverse
   const end = 3 * count
-  for (let i = 3, ends = 1; i < end; i += 3, ends++) {
-    const s1 = surface[i]
-    const z1 = surface[i + 1]
-    // straightX, straightDrop and straightY written out: the hottest lines of the sweep
-    const a = s1 * inverse
+  for (let i = 0; i < end; i += 3) {
+    const s = surface[i]
+    const z = surface[i + 1]
+    const a = s * inverse
     const p = a * a
-    const x1 = s1 + s1 * p * (1 / 3 + p * (2 / 15))
-    const w = z1 * inverse
-    const y1 = (z1 - 0.5 * s1 * a * (1 + p * (5 / 12 + p * (61 / 360)))) * (1 - w * (1 - w * (1 - w)))
-    const c = q - half
-    line[i - 1] = c
-    line[i] = x1
-    line[i + 1] = y1
-    const length = x1 - x0
-    const bulge = -0.25 * c * length * length
-    const high = (y0 > y1 ? y0 : y1) + (bulge > 0 ? bulge : 0)
-    if (high > top) top = high
-    if (next <= s1) {
-      const metres = s1 - s0
-      const rise = metres > 0 ? (z1 - z0) / metres - q * metres : 0
-      do {
-        at[k] = ends
-        const j = k >> 1
-        if ((k & 1) === 0) {
-          const u = next - s0
-          cell[3 * j] = z0 + u * (rise + q * u)
-          cell[3 * j + 1] = rise + 2 * q * u
-        } else {
-          cell[3 * j + 2] = top
-          top = high
-        }
-        k++
-        next = cutM[k]
-      } while (next <= s1)
-    }
-    s0 = s1
-    z0 = z1
-    q = surface[i + 2]
-    x0 = x1
-    y0 = y1
+    const w = z * inverse
+    line[i] = s + s * p * (1 / 3 + p * (2 / 15))
+    line[i + 1] = (z - 0.5 * s * a * (1 + p * (5 / 12 + p * (61 / 360)))) * (1 - w * (1 - w * (1 - w)))
+    line[i + 2] = surface[i + 2] - half
   }
-  line[end - 1] = 0
-  out.known = (k + 1) >> 1
-  if ((k & 1) === 1) {
-    // the last known cell ends with the ray
-    at[k] = count - 1
-    cell[3 * (k >> 1) + 2] = top
+}
+
+/** Last crossing of each half cell, and the highest Y of the segments that end in each cell (greater of two without a branch: half of sum and difference). */
+function noteCells(
+  surface: Float64Array,
+  count: number,
+  line: Float64Array,
+  perMark: number,
+  marks: number,
+  last: Int32Array,
+  top: Float64Array,
+): void {
+  let x0 = 0
+  let y0 = line[1]
+  let c = line[2]
+  for (let k = 1; k < count; k = (k + 1) | 0) {
+    const i = Math.imul(k, 3)
+    const x = line[i]
+    const y = line[(i + 1) | 0]
+    const length = x - x0
+    const high = 0.5 * (y + y0 + Math.abs(y - y0)) + 0.25 * Math.abs(c * length * length)
+    const mark = (surface[i] * perMark) | 0
+    if (mark >= marks) break
+    last[mark] = k
+    const j = mark >> 1
+    const before = top[j]
+    top[j] = 0.5 * (high + before + Math.abs(high - before))
+    x0 = x
+    y0 = y
+    c = line[(i + 2) | 0]
+  }
+}
+
+/** From the last crossings to where each mark lies, the surface and slope at the centres, and the tops of all segments that touch a cell. */
+function settleCells(surface: Float64Array, count: number, cutM: Float64Array, out: CellProfile, reached: number): void {
+  const { at, cell, top, line } = out
+  const lastCell = top.length - 1
+  let ends = 0
+  for (let k = 0; k < reached; k++) {
+    const more = (at[k] - ends) | 0
+    ends = (ends + (more & ~(more >> 31))) | 0
+    at[k] = Math.min(ends + 1, count - 1)
+  }
+  if ((reached & 1) === 1) at[reached] = count - 1
+  for (let j = 0; j < out.known; j++) {
+    const i = 3 * at[2 * j]
+    const s0 = surface[i - 3]
+    const z0 = surface[i - 2]
+    const q = surface[i - 1]
+    const metres = surface[i] - s0
+    const rise = metres > 0 ? (surface[i + 1] - z0) / metres - q * metres : 0
+    const u = cutM[2 * j] - s0
+    cell[3 * j] = z0 + u * (rise + q * u)
+    cell[3 * j + 1] = rise + 2 * q * u
+    // the segment over the far edge ends in a later cell
+    const f = 3 * at[2 * j + 1]
+    const length = line[f] - line[f - 3]
+    const y0 = line[f - 2]
+    const y1 = line[f + 1]
+    const over = 0.5 * (y0 + y1 + Math.abs(y1 - y0)) + 0.25 * Math.abs(line[f - 1] * length * length)
+    const own = top[j < lastCell ? j : lastCell]
+    cell[3 * j + 2] = (over > own ? over : own) + TOP_SLACK_M
   }
 }

@@ -15,7 +15,7 @@ export function makeHull(track: number, cells: number): Hull {
 }
 
 /** A hollow-downward segment is put on the hull as points so close that the chords lie this little under it, m. */
-const ARC_M = 0.002
+const ARC_M = 0.02
 const MOST_ARC_POINTS = 15
 
 /** Takes from the hull what can no longer be touched from places beyond (x, y). */

@@ -4,10 +4,12 @@ import type { SeenCells } from './cells.ts'
 import type { Cuts } from './profile.ts'
 import { controlErrorM, type RayRunner } from './ray.ts'
 import { RUN, type RunState, raise, startRun } from './sightRun.ts'
-import { isInSight, knownState, packShare, SIGHT_ALLOWANCE_M, WHOLE_CELL } from './sightState.ts'
+import { isInSight, packShare, SIGHT_ALLOWANCE_M, WHOLE_CELL } from './sightState.ts'
 
 /** A share this near 1 is a cell seen without a break. */
 const UNBROKEN = 1 - 1e-9
+/** A surface this little under the line stands on it, m: rounding. */
+const ON_LINE_M = 1e-9
 
 /**
  * Sight of the contiguous cells of one ray from one antenna height: the numbers of runSight and writeSeen, with the cells passed over that lie wholly under
@@ -19,103 +21,97 @@ export function sightPass(r: RayRunner, p: CellProfile, cuts: Cuts, whole: Uint8
   const { x: cutX, drop } = cuts
   const { state, inSight, floorM, floorBandM } = out
   const { inverse, antennaY } = r
-  const antennaErrorM = r.g.verticalErrorM
+  const groundErrorM = r.g.verticalErrorM
   const postingM = r.g.postingM
   const spiked = r.tracer.track.spikes.length > 0
   startRun(s, antennaY)
+  s[RUN.errorM] = groundErrorM
   let m = s[RUN.tangent]
-  let controlX = 0
-  let perControlX = 0
-  let errorM = antennaErrorM
   let nearX = 0
+  let passed = false
   for (let j = 0; j < known; j++) {
-    const centreX = cutX[2 * j]
-    const farX = cutX[2 * j + 1]
-    const surfaceM = cell[3 * j]
     const i = offset + j
+    const farX = cutX[2 * j + 1]
     if (whole[j] === 1) {
-      // seen to its far edge, so the highest line ends there
-      farEnd(line, at[2 * j + 1], farX, s)
-      m = (s[RUN.toY] - antennaY) / s[RUN.toX]
-      controlX = s[RUN.toX]
-      perControlX = 1 / controlX
-      s[RUN.tangent] = m
-      s[RUN.controlX] = controlX
-      if (spiked) errorM = controlErrorM(r, controlX)
       state[i] = CELL.inSight
       inSight[i] = 65535
-      floorM[i] = surfaceM
-      floorBandM[i] = errorM
+      floorM[i] = cell[3 * j]
+      floorBandM[i] = groundErrorM
       nearX = farX
+      passed = true
       continue
     }
+    if (passed) {
+      // a run of cells seen whole has ended: the highest line is the one to its far edge
+      passed = false
+      surfaceAt(line, at[2 * j - 1], nearX, s)
+      s[RUN.controlX] = nearX
+      s[RUN.tangent] = (s[RUN.toY] - antennaY) / nearX
+      m = s[RUN.tangent]
+    }
+    const centreX = cutX[2 * j]
+    const surfaceM = cell[3 * j]
     let share = 0
+    let tangent = m
+    let touchedX = s[RUN.controlX]
     if (cell[3 * j + 2] > antennaY + m * (m > 0 ? nearX : farX)) {
       s[RUN.seenX] = 0
       walk(line, j > 0 ? at[2 * j - 1] : 1, nearX, at[2 * j], centreX, s)
-      m = s[RUN.tangent]
-      if (s[RUN.controlX] !== controlX) {
-        controlX = s[RUN.controlX]
-        perControlX = 1 / controlX
-        if (spiked) errorM = controlErrorM(r, controlX)
-      }
+      tangent = s[RUN.tangent]
+      touchedX = s[RUN.controlX]
       walk(line, at[2 * j], centreX, at[2 * j + 1], farX, s)
       share = s[RUN.seenX] / (farX - nearX)
       if (share >= UNBROKEN) whole[j] = 1
+      m = s[RUN.tangent]
     }
+    if (spiked) s[RUN.errorM] = controlErrorM(r, touchedX)
+    const errorM = s[RUN.errorM]
     // the line so far at the centre, back to metres (heightOfY)
-    const y = antennaY + m * centreX
+    const y = antennaY + tangent * centreX
     const lineM = (y + drop[2 * j]) / (1 - y * inverse)
     const depthM = lineM - surfaceM
-    if (depthM <= SIGHT_ALLOWANCE_M && isInSight(depthM, centreX - controlX, postingM)) {
-      floorM[i] = surfaceM
-      floorBandM[i] = errorM
-      state[i] = knownState(share, depthM, errorM)
+    let bandM = errorM
+    if (depthM <= SIGHT_ALLOWANCE_M && isInSight(depthM, centreX - touchedX, postingM)) floorM[i] = surfaceM
+    else {
+      const t = centreX / touchedX
+      const a = errorM * t
+      const b = groundErrorM * (1 - t)
+      bandM = Math.sqrt(a * a + b * b)
+      floorM[i] = lineM
+    }
+    floorBandM[i] = bandM
+    nearX = farX
+    if (share > 0) {
+      state[i] = share >= WHOLE_CELL ? CELL.inSight : CELL.partly
       inSight[i] = packShare(share)
     } else {
-      const t = centreX * perControlX
-      const a = errorM * t
-      const b = antennaErrorM * (1 - t)
-      const bandM = Math.sqrt(a * a + b * b)
-      floorM[i] = lineM
-      floorBandM[i] = bandM
-      if (share > 0) {
-        state[i] = share >= WHOLE_CELL ? CELL.inSight : CELL.partly
-        inSight[i] = packShare(share)
-      } else {
-        state[i] = depthM < bandM ? CELL.marginal : CELL.masked
-        inSight[i] = 0
-      }
+      state[i] = depthM < bandM ? CELL.marginal : CELL.masked
+      inSight[i] = 0
     }
-    m = s[RUN.tangent]
-    if (s[RUN.controlX] !== controlX) {
-      controlX = s[RUN.controlX]
-      perControlX = 1 / controlX
-      if (spiked) errorM = controlErrorM(r, controlX)
-    }
-    nearX = farX
+  }
+  if (passed) {
+    surfaceAt(line, at[2 * known - 1], nearX, s)
+    s[RUN.controlX] = nearX
+    s[RUN.tangent] = (s[RUN.toY] - antennaY) / nearX
   }
   // a ray that ends in the middle of a cell: the horizon needs the rest
   if (p.count > 1) walk(line, known > 0 ? at[2 * known - 1] : 1, nearX, p.count - 1, line[3 * p.count - 3], s)
 }
 
-/** Sets to… of the state to the surface at X inside the segment that ends at crossing `ends`, and bend to its quadratic term. */
-function farEnd(line: Float64Array, ends: number, x: number, s: RunState): void {
+/** Sets to… of the state to the surface at X inside the segment that ends at crossing `ends`. */
+function surfaceAt(line: Float64Array, ends: number, x: number, s: RunState): void {
   const i = 3 * ends
   const x0 = line[i - 3]
   const y0 = line[i - 2]
-  const c = line[i - 1]
-  const x1 = line[i]
-  s[RUN.bend] = c
-  if (x >= x1) {
-    s[RUN.toX] = x1
+  const length = line[i] - x0
+  const u = x - x0
+  if (u >= length) {
+    s[RUN.toX] = line[i]
     s[RUN.toY] = line[i + 1]
     return
   }
-  const length = x1 - x0
-  const u = x - x0
   s[RUN.toX] = x
-  s[RUN.toY] = y0 + u * ((line[i + 1] - y0) / length + c * (u - length))
+  s[RUN.toY] = y0 + u * ((line[i + 1] - y0) / length + line[i - 1] * (u - length))
 }
 
 /**
@@ -124,35 +120,49 @@ function farEnd(line: Float64Array, ends: number, x: number, s: RunState): void 
  */
 function walk(line: Float64Array, first: number, fromX: number, last: number, toX: number, s: RunState): void {
   const antennaY = s[RUN.antennaY]
-  farEnd(line, first, fromX, s)
-  let m = s[RUN.tangent]
+  surfaceAt(line, last, toX, s)
+  const endX = s[RUN.toX]
+  const endY = s[RUN.toY]
+  surfaceAt(line, first, fromX, s)
   let x0 = s[RUN.toX]
   let y0 = s[RUN.toY]
+  let m = s[RUN.tangent]
   let g0 = y0 - antennaY - m * x0
-  for (let k = first; k <= last; k++) {
-    const i = 3 * k
-    let x1 = line[i]
-    let y1 = line[i + 1]
-    const c = line[i - 1]
-    if (k === last) {
-      farEnd(line, k, toX, s)
-      x1 = s[RUN.toX]
-      y1 = s[RUN.toY]
-    }
+  let seenX = s[RUN.seenX]
+  for (let k = first; k <= last; k = (k + 1) | 0) {
+    const i = Math.imul(k, 3)
+    const x1 = k === last ? endX : line[i]
+    const y1 = k === last ? endY : line[(i + 1) | 0]
+    const c = line[(i - 1) | 0]
     const length = x1 - x0
+    const bow = Math.abs(c) * length * length
     let g1 = y1 - antennaY - m * x1
-    if (g1 > 0 || (c < 0 && (g0 > g1 ? g0 : g1) > 0.25 * c * length * length)) {
-      s[RUN.fromX] = x0
-      s[RUN.fromY] = y0
-      s[RUN.toX] = x1
-      s[RUN.toY] = y1
-      s[RUN.bend] = c
-      raise(s)
-      m = s[RUN.tangent]
-      g1 = y1 - antennaY - m * x1
+    if (g1 > 0 || (g0 > g1 ? g0 : g1) + 0.25 * bow > 0) {
+      // from the line on, and rising faster than the line to its end throughout: all of it in sight
+      const f = (y1 - antennaY) / x1
+      if (g0 > -ON_LINE_M && y1 - y0 - bow > f * length) {
+        seenX += length
+        m = f
+        s[RUN.controlX] = x1
+        g1 = 0
+      } else {
+        s[RUN.fromX] = x0
+        s[RUN.fromY] = y0
+        s[RUN.toX] = x1
+        s[RUN.toY] = y1
+        s[RUN.bend] = c
+        s[RUN.tangent] = m
+        s[RUN.seenX] = seenX
+        raise(s)
+        m = s[RUN.tangent]
+        seenX = s[RUN.seenX]
+        g1 = y1 - antennaY - m * x1
+      }
     }
     x0 = x1
     y0 = y1
     g0 = g1
   }
+  s[RUN.tangent] = m
+  s[RUN.seenX] = seenX
 }

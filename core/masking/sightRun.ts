@@ -22,8 +22,10 @@ export const RUN = {
   toX: 6,
   toY: 7,
   bend: 8,
+  /** 90 % error of what the line touches, m (the sweep's). */
+  errorM: 9,
 } as const
-export const makeRunState = (): RunState => new Float64Array(9)
+export const makeRunState = (): RunState => new Float64Array(10)
 export function startRun(s: RunState, antennaY: number): void {
   s[RUN.antennaY] = antennaY
   s[RUN.tangent] = NO_TANGENT

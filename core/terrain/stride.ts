@@ -21,11 +21,14 @@ export const isInner = (control: ControlPoints, i: number, width: number, height
   )
 }
 
+/** Scratch: for each line of the minor axis, the last line of the major axis before it. */
+let lastMajor = new Int32Array(64)
+
 /**
  * The crossings of one stretch, as walkRay's own loop writes them, made without a branch that depends on the ray's course: which grid line comes next is as
- * good as random to the processor, and guessing wrong costs more than the arithmetic. The ray steps along the axis it runs along more (`major`). In each
- * step the crossing of the other axis is written in any case and kept by moving on (0 or 1). Returns the new number of entries, or -1 where a post beside
- * the ray is void: the stretch is then to be walked with care.
+ * good as random to the processor, and guessing wrong costs more than the arithmetic. The lines of the axis the ray runs along more (`major`) are written
+ * first, each at its own place in the sequence: its number plus the number of lines of the other axis met before it; then those others, likewise. Returns
+ * the new number of entries, or -1 where a post beside the ray is void: the stretch is then to be walked with care.
  */
 export function strideStretch(heightM: Float32Array, width: number, control: ControlPoints, i: number, out: Walk, entries: number): number {
   const { ground, patches } = out
@@ -53,74 +56,65 @@ export function strideStretch(heightM: Float32Array, width: number, control: Con
   const stepR = down ? width : -width
   const stepA = (byCol ? stepC : stepR) | 0
   const stepB = (byCol ? stepR : stepC) | 0
-  // never a whole line per step, so that no step meets two
+  const stepAB = (stepA + stepB) | 0
+  // place on the minor axis at major line n: bA + n·ratio; never a whole line per step, so that no step meets two
   const ratio = Math.min(minor / major, 1 - 1e-12)
-  const perRatio = 1 / ratio
-  const perA = ds / major
-  const perB = ds / minor
-  const bendPerTwist = (across * along) / (ds * ds)
-  const sA = s0 - a0 * perA
-  const sB = s0 - b0 * perB
   const bA = b0 - a0 * ratio
-  const steps = (Math.ceil(a0 + major) - 1) | 0
-  // post on the last major line below the ray, and the two posts there beside the ray; `| 0` keeps whole numbers whole for the compiler
-  let at = (pr * width + pc) | 0
-  let z0 = heightM[at]
-  let z1 = heightM[at + stepB]
-  let k = (3 * entries) | 0
-  let line = 0
-  let b = bA
+  const perA = ds / major
+  const sA = s0 - a0 * perA
+  const bendPerTwist = (across * along) / (ds * ds)
+  const base = (pr * width + pc) | 0
+  const first = (3 * (entries - 1)) | 0
+  const majors = (Math.ceil(a0 + major) - 1) | 0
+  const minors = (Math.ceil(b0 + minor) - 1) | 0
+  if (lastMajor.length < minors + 2) lastMajor = new Int32Array(2 * minors + 2)
+  const last = lastMajor
+  last[0] = 0
   let checked = 0
-  for (let n = 1; n <= steps; n = (n + 1) | 0) {
-    // posts on the major line ahead, and the third of the line behind: the patches on either side of the next minor line
-    const a1 = (at + stepA) | 0
-    const z2 = heightM[(at + stepB + stepB) | 0]
-    const y0 = heightM[a1]
-    const y1 = heightM[(a1 + stepB) | 0]
-    const y2 = heightM[(a1 + stepB + stepB) | 0]
-    const twist = z0 - y0 - z1 + y1
-    const twistB = z1 - y1 - z2 + y2
-    ground[(k - 1) | 0] = twist * bendPerTwist
-    // the next minor line, wherever it is crossed
-    const next = (line + 1) | 0
-    const u = (next - b) * perRatio
-    ground[k] = sB + next * perB
-    ground[(k + 1) | 0] = z1 + u * (y1 - z1)
-    ground[(k + 2) | 0] = twistB * bendPerTwist
-    if (patches) keepPatch(patches, k / 3, at + stepB, byCol ? u : 0, byCol ? 0 : u, right, down, width, bendPerTwist)
-    // the major line; was the minor one crossed before it?
-    b = bA + n * ratio
-    const moved = ((b | 0) - line) | 0
-    line = (line + moved) | 0
-    k = (k + Math.imul(moved, 3)) | 0
-    at = (a1 + Math.imul(moved, stepB)) | 0
-    z0 = heightM[at]
-    z1 = heightM[(at + stepB) | 0]
-    const v = b - line
+  for (let n = 1; n <= majors; n = (n + 1) | 0) {
+    const b = bA + n * ratio
+    const line = b | 0
+    const at = (base + Math.imul(n, stepA) + Math.imul(line, stepB)) | 0
+    const z0 = heightM[at]
+    const z1 = heightM[(at + stepB) | 0]
+    const twist = z0 - z1 - heightM[(at + stepA) | 0] + heightM[(at + stepAB) | 0]
+    const k = (first + Math.imul(3, n + line)) | 0
     ground[k] = sA + n * perA
-    ground[(k + 1) | 0] = z0 + v * (z1 - z0)
-    if (patches) keepPatch(patches, k / 3, at, byCol ? 0 : v, byCol ? v : 0, right, down, width, bendPerTwist)
-    k = (k + 3) | 0
-    checked += twist + twistB
+    ground[(k + 1) | 0] = z0 + (b - line) * (z1 - z0)
+    ground[(k + 2) | 0] = twist * bendPerTwist
+    last[line] = n
+    checked += twist
   }
-  // the patch the stretch ends in, and a last minor line before its end
-  const z2 = heightM[at + stepB + stepB]
-  const y0 = heightM[at + stepA]
-  const y1 = heightM[at + stepA + stepB]
-  const y2 = heightM[at + stepA + stepB + stepB]
-  const twist = z0 - y0 - z1 + y1
-  const twistB = z1 - y1 - z2 + y2
-  ground[k - 1] = twist * bendPerTwist
-  checked += twist
-  if (line + 1 < b0 + minor) {
-    const u = (line + 1 - b) * perRatio
-    ground[k] = sB + (line + 1) * perB
-    ground[k + 1] = z1 + u * (y1 - z1)
-    ground[k + 2] = twistB * bendPerTwist
-    if (patches) keepPatch(patches, k / 3, at + stepB, byCol ? u : 0, byCol ? 0 : u, right, down, width, bendPerTwist)
-    k += 3
-    checked += twistB
+  const perRatio = 1 / ratio
+  const perB = ds / minor
+  const sB = s0 - b0 * perB
+  for (let m = 1; m <= minors; m = (m + 1) | 0) {
+    const n = last[(m - 1) | 0]
+    const at = (base + Math.imul(n, stepA) + Math.imul(m, stepB)) | 0
+    const z0 = heightM[at]
+    const z1 = heightM[(at + stepA) | 0]
+    const twist = z0 - z1 - heightM[(at + stepB) | 0] + heightM[(at + stepAB) | 0]
+    const k = (first + Math.imul(3, n + m)) | 0
+    ground[k] = sB + m * perB
+    ground[(k + 1) | 0] = z0 + (m - bA - n * ratio) * perRatio * (z1 - z0)
+    ground[(k + 2) | 0] = twist * bendPerTwist
+    checked += twist
   }
-  const e = k / 3
-  return Number.isNaN(checked) ? -1 : e
+  if (Number.isNaN(checked)) return -1
+  if (patches) {
+    for (let n = 1; n <= majors; n++) {
+      const b = bA + n * ratio
+      const line = b | 0
+      const v = b - line
+      const near = base + n * stepA + line * stepB
+      keepPatch(patches, entries - 1 + n + line, near, byCol ? 0 : v, byCol ? v : 0, right, down, width, bendPerTwist)
+    }
+    for (let m = 1; m <= minors; m++) {
+      const n = last[m - 1]
+      const u = (m - bA - n * ratio) * perRatio
+      const near = base + n * stepA + m * stepB
+      keepPatch(patches, entries - 1 + n + m, near, byCol ? u : 0, byCol ? 0 : u, right, down, width, bendPerTwist)
+    }
+  }
+  return entries + majors + minors
 }
