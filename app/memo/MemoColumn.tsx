@@ -96,8 +96,10 @@ function Table({ table, onExplain }: { table: TableBlock; onExplain: ColumnProps
       {pairs ? (
         <Pairs rows={table.rows.map((row) => ({ label: wordsOf(row[0]), cell: row[1] ?? '' }))} onExplain={onExplain} />
       ) : (
-        table.rows.map((row) => (
-          <div key={wordsOf(row[0])}>
+        table.rows.map((row, i) => (
+          // A table may name the same thing in several rows.
+          // biome-ignore lint/suspicious/noArrayIndexKey: see above
+          <div key={i}>
             <p className="memo-row">
               {wordsOf(row[0])}
               {typeof row[0] !== 'string' && row[0].unit !== undefined ? textOf({ value: '', unit: row[0].unit }) : ''}
@@ -125,8 +127,9 @@ const headOf = (column: Column): string => (column.unit === undefined ? column.h
 function Pairs({ rows, onExplain }: { rows: readonly Pair[]; onExplain: ColumnProps['onExplain'] }) {
   return (
     <dl>
-      {rows.map(({ label, cell }) => (
-        <div key={label}>
+      {rows.map(({ label, cell }, i) => (
+        // biome-ignore lint/suspicious/noArrayIndexKey: two columns may share a head
+        <div key={i}>
           <dt>{label}</dt>
           <dd>
             <CellText cell={cell} label={label} onExplain={onExplain} />

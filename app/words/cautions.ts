@@ -24,7 +24,7 @@ export const CAUTIONS = {
   edgeOnly: 'Toward the target only the knife edge near the mask is taken: no lobing over water or level ground.',
   requiredRatio:
     'A required ratio not stated is worked out from Pd, Pfa, fluctuation and the pulses of one scan; residue is taken as noise.',
-  statedSuppression: 'Suppression that is stated is taken as stated, the same for every kind of clutter.',
+  statedSuppression: 'Suppression that is stated is taken as stated, not worked out from the waveform.',
   blindSpeeds: 'Blind speeds are in tracks only: areas and fixes take the mean response over all speeds.',
   coverDefault: 'Ground cover is a default: give land cover or a uniform terrain before relying on clutter.',
   unknownGround: 'Unknown ground counts against a need: it is never in sight and never free of clutter.',

@@ -15,12 +15,16 @@ describe('the memo column', () => {
     const own = model.sections.find((s) => s.id === 'option-B-24-1.5')!
     expect(html).toContain(own.finding!.replaceAll("'", '&#x27;'))
   })
+  it('gives in sight, detectable and usable together, at both k', () => {
+    for (const head of ['In sight, %', 'Detectable, %', 'Usable, %', 'At k = 1, the same three, %'])
+      expect(html).toContain(`<dt>${head}</dt>`)
+  })
   it('makes every number with a figure behind it a button', () => {
     expect(html).toMatch(/<button[^>]*class="memo-number"[^>]*>[^<]*<span class="unit">/)
     expect(html.match(/class="memo-number"/g)!.length).toBeGreaterThan(20)
   })
   it('keeps the cautions with the numbers, in full', () => {
-    for (const id of ['landTable', 'sightOnly', 'floorBand', 'nearMast'] as const)
+    for (const id of ['landTable', 'threeWords', 'meanUsable', 'headlineK', 'floorBand', 'nearMast'] as const)
       expect(html).toContain(CAUTIONS[id].replaceAll('"', '&quot;').replaceAll("'", '&#x27;'))
   })
   it('says so where the option is not computed yet', () => {

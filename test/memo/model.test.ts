@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { type Block, buildMemo, cellText, inOrder, type MemoModel, type TableBlock } from '../../app/memo/model/index.ts'
 import { CAUTIONS, NOT_ASSESSED } from '../../app/words/index.ts'
+import type { FixFigure, NeedFigure } from '../../core/index.ts'
 import { sampleResults, sampleStudy } from './sample.ts'
 import { sampleMemo } from './sampleMemo.ts'
 
@@ -33,6 +34,7 @@ describe('the memo', () => {
       'option-B-24-1.5',
       'option-C-24-1.5',
       'comparison',
+      'exposure',
       'not-assessed',
       'cautions',
       'models',
@@ -47,13 +49,14 @@ describe('the memo', () => {
       expect(words).toContain(CAUTIONS[id])
     for (const n of NOT_ASSESSED) expect(words.toLowerCase()).toContain(n.what.toLowerCase())
   })
-  it('leads with the option that misses least of the must needs, and never says pass', () => {
+  it('leads with the option that misses least of the must needs, its three shares together, and says pass of none', () => {
     expect(inOrder(sampleResults)[0].ref).toEqual({ candidate: 'A', heightM: 24, tiltDeg: 1.5 })
     const words = wordsOf(model, 'summary')
-    expect(words).toContain('None of the five options computed brings the share asked of every must need into sight.')
-    expect(words).toContain('A at 24 m comes nearest: 89 % of Ferry approach in sight (95 % asked)')
-    expect(words).toContain('Harbour fixes (needs of fixes are not assessed yet)')
-    expect(words).not.toMatch(/\bpass(es|ed)?\b|\busable in\b/)
+    expect(words).toContain('None of the five options computed passes every must need, at the k of the study and at k = 1.')
+    expect(words).toContain('A at 24 m comes nearest: Ferry approach 89 % in sight, 87 % detectable and 80 % usable (95 % asked)')
+    expect(words).toContain('Harbour fixes (its file has not been read)')
+    for (const n of ['A-12', 'A-24', 'B-12'])
+      expect(textOfTable(tableOf(model, `option-${n}-1.5`, 'option-nested'))).not.toMatch(/\bpass\b/)
   })
   it('lists every default of the study and every file with its digest', () => {
     const defaults = textOfTable(tableOf(model, 'data', 'defaults'))
@@ -73,7 +76,7 @@ describe('the memo', () => {
   it('prints numbers on the safe side: C/N up, share in sight down, floor up', () => {
     const figures = textOfTable(tableOf(model, 'option-A-24-1.5', 'figures'))
     expect(figures).toContain('C/N, highest | 72 dB')
-    expect(textOfTable(tableOf(model, 'option-A-24-1.5', 'option-sight'))).toContain('Ferry approach | 95 | 89')
+    expect(textOfTable(tableOf(model, 'option-A-24-1.5', 'option-nested'))).toContain('Ferry approach | 89 | 87 | 80 | 88 / 86 / 78 | 95')
     expect(textOfTable(tableOf(model, 'option-A-24-1.5', 'floors'))).toContain('20 NM | 1 700 (500)')
   })
   it('gives each option a map with its legend, a horizon profile and rings, captioned with what they show', () => {
@@ -87,22 +90,113 @@ describe('the memo', () => {
   it('says of each option where it falls short', () => {
     const short = textOfTable(tableOf(model, 'comparison', 'rejected'))
     expect(short.split('\n')).toHaveLength(5)
-    expect(short).toContain('C at 24 m | Ferry approach: 69 % in sight, 95 % asked, worst behind cover at azimuth 104°')
+    expect(short).toContain(
+      'C at 24 m | Ferry approach: 69 % in sight, 67 % detectable and 60 % usable, 95 % asked; most lost: masked 31 %',
+    )
   })
   it('has no line about the built-in land table where the study brings its own', () => {
     const own = buildMemo({ ...input, study: { ...sampleStudy, lowAngleLandTable: 'ours.json' } })
     for (const s of own.sections) expect(wordsOf(own, s.id)).not.toContain(CAUTIONS.landTable)
     expect(textOfTable(tableOf(own, 'models', 'models'))).toContain("The study's own: ours.json")
   })
-  it('speaks of options whose every must need is in sight over the share asked', () => {
-    const results = sampleResults.map((r) => ({
-      ...r,
-      figures: { ...r.figures, needs: r.figures.needs.map((n) => (n.needId === 'n1' ? { ...n, requiredPct: 80 } : n)) },
-    }))
-    const words = wordsOf(buildMemo({ ...input, results }), 'summary')
-    expect(words).toContain(
-      'Three of five options bring the share asked of every must need into sight; A at 12 m has the least clutter of them',
+  const withNeed = (change: (n: NeedFigure) => Partial<NeedFigure>): MemoModel =>
+    buildMemo({
+      ...input,
+      results: sampleResults.map((r) => ({
+        ...r,
+        figures: { ...r.figures, needs: r.figures.needs.map((n) => (n.needId === 'n1' ? { ...n, ...change(n) } : n)) },
+      })),
+    })
+  it('says pass only where both k are known', () => {
+    const passing = withNeed((n) => ({ requiredPct: 60, met: true, passes: n.usablePct > 70 }))
+    expect(wordsOf(passing, 'summary')).toContain(
+      'Three of five options pass every must need, at the k of the study and at k = 1; A at 12 m comes first of them',
     )
+    expect(textOfTable(tableOf(passing, 'option-A-24-1.5', 'option-nested'))).toMatch(/Ferry approach .*\| pass/)
+    expect(textOfTable(tableOf(passing, 'option-C-24-1.5', 'option-nested'))).toMatch(/Ferry approach .*\| short at k = 1/)
+    const open = withNeed(() => ({ requiredPct: 50, met: true, passes: null, atLowK: null }))
+    expect(wordsOf(open, 'summary')).toContain('Five of five options meet every must need at the k of the study')
+    expect(textOfTable(tableOf(open, 'option-A-24-1.5', 'option-nested'))).toMatch(/\| not run \| .*met; k = 1 not run/)
+    for (const s of open.sections.filter((x) => x.option)) expect(wordsOf(open, s.id)).not.toMatch(/as asked/)
+  })
+  it('gives causes of loss that add up, both margins with their place, and what suppression is there', () => {
+    const losses = textOfTable(tableOf(model, 'option-A-24-1.5', 'option-losses'))
+    expect(losses).toMatch(/Ferry approach \| Masked 11 %, .*; clutter 9 %/)
+    const margins = textOfTable(tableOf(model, 'option-A-24-1.5', 'option-margins'))
+    expect(margins).toContain('Ferry approach: height over the floor | −534 ft | 40 ft | 104°, 20.8 NM | cover')
+    expect(margins).toContain('Ferry approach: signal over the required ratio | −15 dB | 0 dB | 061°, 6.6 NM | terrain')
+    expect(wordsOf(model, 'option-A-24-1.5')).toMatch(
+      /Available by kind of clutter: forest 38 dB, rain 38 dB, discrete 38 dB, from an earlier pulse \d+ dB\./,
+    )
+  })
+  it('works out the required ratio from D₀ and its losses', () => {
+    const { required } = sampleStudy.needs[0]
+    const row = tableOf(model, 'need', 'ratios').rows[0].map(cellText)
+    expect(Number(row[7])).toBeCloseTo(required.d0Db + required.beamShapeDb + required.straddleDb + required.cfarDb, 0)
+    expect(Number(row[7])).toBeGreaterThanOrEqual(required.ratioDb)
+  })
+  it('lists fixes worst first and a track by stretch', () => {
+    const fix = (name: string, marginM: number): FixFigure => ({
+      name,
+      lon: -121.2,
+      lat: -38.4,
+      azimuthDeg: 104,
+      rangeM: 20_000,
+      slantRangeM: 20_000,
+      altM: 300,
+      altAglM: 200,
+      floorM: 300 - marginM,
+      floorAglM: 200 - marginM,
+      floorBandM: 5,
+      marginM,
+      visible: marginM > 0 ? 'yes' : 'no',
+      snrDb: 20,
+      signalMarginDb: 4.9,
+      pd: 0.917,
+      detectable: marginM > 0,
+      usable: marginM > 0,
+      visibleLowK: null,
+      detectableLowK: null,
+      usableLowK: null,
+      cause: marginM > 0 ? null : 'masked',
+      obstacle: 'cover',
+      obstacleRangeM: 7_000,
+    })
+    const fixes = withNeed(() => ({ measure: 'fixes', amount: 2, fixes: [fix('Low one', -42.2), fix('High one', 61)] }))
+    const table = textOfTable(tableOf(fixes, 'option-A-24-1.5', 'fixes')).split('\n')
+    expect(table[0]).toMatch(/^Low one \| 104°, 10\.8 NM .*\| masked \| cover$/)
+    expect(table[1]).toMatch(/\| 4 \| 0\.91 \| usable \| cover$/)
+    const stretch = { tangential: false, blind: false, fromRangeM: 9_000, toRangeM: 5_000, fromAltM: 300, toAltM: 250 }
+    const track = withNeed(() => ({
+      measure: 'length',
+      amount: 10,
+      track: {
+        lengthM: 10_000,
+        pieces: [],
+        segments: [
+          { ...stretch, fromM: 0, toM: 4_000, cause: null },
+          { ...stretch, fromM: 4_000, toM: 10_000, cause: 'clutter', tangential: true },
+        ],
+        longestGapM: 6_000,
+        longestGapS: 100,
+        tangentialM: 6_000,
+        blindM: 0,
+        seenFrom: null,
+        lostAt: null,
+      },
+    }))
+    expect(textOfTable(tableOf(track, 'option-A-24-1.5', 'track'))).toContain('clutter, tangential')
+    expect(wordsOf(track, 'option-A-24-1.5')).toContain('longest gap 3.3 NM (6.0 km), 1 min 40 s')
+  })
+  it('gives a keep-clear distance with its limit and basis beside the caution, and none where the aperture is not stated', () => {
+    expect(wordsOf(model, 'exposure')).toContain('No keep-clear distance is given')
+    const antenna = { ...sampleStudy.radar.antenna, apertureWidthM: 4, apertureHeightM: 1.5 }
+    const stated = buildMemo({ ...input, study: { ...sampleStudy, radar: { ...sampleStudy.radar, antenna } } })
+    const table = textOfTable(tableOf(stated, 'exposure', 'exposure'))
+    expect(table).toMatch(/^Keep clear, antenna stopped, main beam \| \d+ m from memory\nAntenna turning/)
+    expect(table).toContain('Pulse-peak limits | not assessed')
+    for (const id of ['exposure', 'structure'] as const) expect(wordsOf(stated, 'exposure')).toContain(CAUTIONS[id])
+    expect(textOfTable(tableOf(stated, 'option-A-24-1.5', 'figures'))).toMatch(/Keep clear, antenna stopped \| \d+ m from memory/)
   })
   it('holds the study alone while nothing is computed', () => {
     const empty = buildMemo({ ...input, results: [], maps: [] })

@@ -59,8 +59,8 @@ describe('the PDF', () => {
       for (const f of files) expect(text).toContain(f.name)
       for (const w of warnings) expect(text).toContain(w.slice(0, 12))
       for (const [title, times] of [
-        ['Needs, line of sight', 3],
-        ['Needs, suppression', 3],
+        ['Causes of loss', 3],
+        ['Suppression needed against available', 3],
         ['Coverage floor', 3],
         ['Elevation of the horizon', 3],
         ['Ground by ring', 3],
@@ -75,8 +75,8 @@ describe('the PDF', () => {
     const text = textOf(pdf)
     for (const s of model.sections) expect(text).toContain(s.title.replaceAll('\u202f', ' '))
     for (const title of [
-      'Needs, line of sight',
-      'Needs, suppression',
+      'Causes of loss',
+      'Suppression needed against available',
       'Coverage floor',
       'Annex: horizon by azimuth',
       'Files',

@@ -9,6 +9,7 @@ import {
   type StudyDoc,
   settle,
   suppressionBy,
+  uniformCode,
 } from '../../core/index.ts'
 
 export const sampleDoc: StudyDoc = {
@@ -99,7 +100,7 @@ function physics(pct: number): Omit<NeedFigure, 'needId' | 'name' | 'must' | 're
     worstMarginM: null,
     tenthMarginM: null,
     worst: null,
-    signal: { worstDb: -14.2, tenthDb: 0.6, worst: null },
+    signal: { worstDb: -14.2, tenthDb: 0.6, worst: { lon: -121.2, lat: -38.4, azimuthDeg: 61, rangeM: 12_300, obstacle: 'terrain' } },
     losses: [
       { cause: 'masked', pct: 100 - pct, amount: 48.7 * (100 - pct) },
       { cause: 'clutter', pct: pct - usablePct, amount: 48.7 * (pct - usablePct) },
@@ -152,7 +153,7 @@ function sampleFigures(siteGroundM: number, heightM: number, screen: number, see
     horizon: { medianDeg: -0.098, p90Deg: 0.214, highest, rows },
     lowK: null,
     floorsLowK: null,
-    suppressionBy: suppressionBy(sampleStudy.radar, sampleStudy.atmosphere, []),
+    suppressionBy: suppressionBy(sampleStudy.radar, sampleStudy.atmosphere, [uniformCode('forest', null)]),
     floors: [5, 10, 20, 40, 60].map((nm) => ({
       rangeM: nm * 1852,
       bestM: nm === 60 ? null : 20 + 1.2 * nm * nm,
@@ -175,6 +176,8 @@ function sampleFigures(siteGroundM: number, heightM: number, screen: number, see
         requiredPct: 95,
         inSightPct: pct,
         inSightKm2: 48.7 * pct,
+        detectableKm2: 48.7 * (pct - 2),
+        usableKm2: 48.7 * (pct - 9),
         marginalKm2: 64,
         unknownKm2: 0,
         groundAboveKm2: 12,
@@ -193,6 +196,8 @@ function sampleFigures(siteGroundM: number, heightM: number, screen: number, see
         requiredPct: 100,
         inSightPct: pct - 22,
         inSightKm2: 5.9 * (pct - 22),
+        detectableKm2: 5.9 * (pct - 24),
+        usableKm2: 5.9 * (pct - 31),
         marginalKm2: 21,
         unknownKm2: 4,
         groundAboveKm2: 0,
@@ -218,7 +223,7 @@ function sampleFigures(siteGroundM: number, heightM: number, screen: number, see
         tenthMarginM: null,
         worst: null,
         suppression: { ...suppression, p50Db: null, p90Db: null, p99Db: null, shortKm2: 0 },
-        notAssessed: 'needs of fixes are not assessed yet',
+        notAssessed: 'its file has not been read',
       },
     ],
     obstaclesInSight: ['Grey mast', 'Silo at Wend'],

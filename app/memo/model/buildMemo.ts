@@ -3,8 +3,10 @@ import { CAUTIONS, formatDate } from '../../words/index.ts'
 import { annexBlocks } from './annexSection.ts'
 import { candidateBlocks } from './candidatesSection.ts'
 import { optionName } from './cells.ts'
-import { cautionBlocks, comparisonBlocks, modelBlocks, notAssessedBlocks } from './closingSections.ts'
+import { cautionBlocks, comparisonBlocks, notAssessedBlocks } from './closingSections.ts'
 import { dataBlocks } from './dataSection.ts'
+import { exposureBlocks } from './exposureSection.ts'
+import { modelBlocks } from './modelsSection.ts'
 import { needBlocks } from './needSection.ts'
 import { optionBlocks, optionFinding } from './optionSection.ts'
 import { hasTilts, summaryBlocks } from './summarySection.ts'
@@ -30,6 +32,7 @@ export function buildMemo(input: MemoInput): MemoModel {
       newPage: true,
     })
   add('comparison', 'Comparison', comparisonBlocks(input, figure), { newPage: true })
+  add('exposure', 'RF exposure', exposureBlocks(input))
   add('not-assessed', 'Not assessed', notAssessedBlocks())
   add('cautions', 'Cautions', cautionBlocks())
   add('models', 'Models and sources', modelBlocks(input))

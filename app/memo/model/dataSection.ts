@@ -86,9 +86,18 @@ function assumptions(input: MemoInput): string[] {
       ? 'No obstacles were given'
       : `Obstacles from ${study.obstacles}: each masks the azimuths it stands in and at least one`,
     table,
-    `No gas loss, no rain; targets and ground in free space but for masking`,
+    airWords(input),
+    `Cover is worked out at k = 1 too; pass asks for both`,
     `In sight: the line of sight over ground, cover and obstacles. Ground beyond a void or the end of the terrain is unknown`,
   ]
+}
+
+/** Gas, rain and sea of the study, in a clause. */
+function airWords({ study }: MemoInput): string {
+  const { gas, rainRateMmH, seaState, windMs } = study.atmosphere
+  const air = gas === 'p676' ? 'Gas loss after ITU-R P.676' : 'No gas loss'
+  const rain = rainRateMmH > 0 ? `rain of ${formatNumber(rainRateMmH, 1)}\u202fmm/h, as echo and as loss` : 'no rain'
+  return `${air}, ${rain}; sea state ${formatNumber(seaState, 1).replace(/\.0$/, '')}, wind ${formatNumber(windMs, 1).replace(/\.0$/, '')}\u202fm/s. Toward targets a knife edge near the mask, else free space`
 }
 
 type Pair = readonly [label: string, cell: Cell]
@@ -126,7 +135,11 @@ function antennaRows(input: MemoInput): Pair[] {
   const a = radar.antenna
   const s = radar.suppression
   const suppression =
-    s.kind === 'none' ? 'none' : s.kind === 'stated' ? value(formatSetting(s.statedDb, 'dB')) : `${s.kind}, ${s.pulses} pulses`
+    s.kind === 'none'
+      ? 'none'
+      : s.kind === 'stated'
+        ? value(formatSetting(s.statedDb, 'dB'))
+        : `${s.kind === 'canceller' ? 'canceller' : `filter bank (${s.window ?? 'hamming'})`}, ${s.pulses} pulses`
   const rows: Pair[] = [
     ['Gain', value(formatSetting(a.gainDbi, 'dBi'))],
     ['Azimuth beamwidth', value(formatSetting(a.azimuthBeamwidthDeg, '°', 2))],
@@ -135,7 +148,8 @@ function antennaRows(input: MemoInput): Pair[] {
     ['Tilt of the peak', value(formatAngle(a.tiltDeg, 0.1))],
     ['Azimuth side lobes', value(formatSetting(a.sidelobeDb, 'dB'))],
     ['Elevation floor, clutter only', value(formatSetting(a.elevationSidelobeDb, 'dB'))],
-    ['Suppression available', suppression],
+    [s.kind === 'stated' ? 'Suppression, as stated' : 'Suppression', suppression],
+    ['Aperture', apertureWords(a)],
     ['Short-range sensitivity (STC)', radar.stc.kind === 'rtoFourth' ? 'fourth power of range' : radar.stc.kind],
     ['Polar grid, range step', value(formatSetting(run.rangeStepM, 'm', 2))],
     ['Polar grid, azimuth step', value(formatSetting(run.azimuthStepDeg, '°', 4))],
@@ -143,6 +157,11 @@ function antennaRows(input: MemoInput): Pair[] {
   ]
   return rows
 }
+
+const apertureWords = (a: MemoInput['study']['radar']['antenna']): Cell =>
+  a.apertureWidthM === null || a.apertureHeightM === null
+    ? { text: 'not stated', light: true }
+    : `${formatNumber(a.apertureWidthM, 2)} × ${formatNumber(a.apertureHeightM, 2)}\u202fm`
 
 /** Defaults in two columns, read down the left one first. */
 function inTwo(defaults: readonly DefaultUsed[]): Cell[][] {

@@ -4,7 +4,9 @@ import {
   formatDbUp,
   formatHeight,
   formatMetPct,
+  formatNumber,
   formatPd,
+  formatPfa,
   formatRange,
   formatRcs,
   formatSector,
@@ -13,7 +15,7 @@ import {
   withMetric,
 } from '../../words/index.ts'
 import { capital, inSentence } from './cells.ts'
-import type { Block, Cell, MemoInput } from './types.ts'
+import type { Block, Cell, MemoInput, TableBlock } from './types.ts'
 
 /** What must be seen, as stated. */
 export function needBlocks(input: MemoInput): Block[] {
@@ -29,10 +31,10 @@ export function needBlocks(input: MemoInput): Block[] {
     n.name,
     n.must ? 'must' : 'wish',
     heightWords(n, input.system),
-    n.kind === 'layer' ? rangeWords(n, input.system) : `by ${n.kind}`,
+    n.kind === 'layer' ? rangeWords(n, input.system) : `${KIND[n.kind]}\n${n.file ?? 'no file'}`,
     formatRcs(n.rcsM2),
     ratioCell(n),
-    textOf(formatMetPct(n.requiredPct)),
+    `${textOf(formatMetPct(n.requiredPct))}\n${MEASURE[n.kind]}`,
   ])
   const { inSight, detectable, usable, confirmed } = FOUR_WORDS
   const words = [inSight, detectable, usable, confirmed].map((w) => `${w.word}: ${inSentence(w.meaning)}`)
@@ -47,16 +49,58 @@ export function needBlocks(input: MemoInput): Block[] {
         { head: 'Where' },
         { head: 'Target RCS' },
         { head: 'Required ratio' },
-        { head: 'Asked of area', align: 'right' },
+        { head: 'Asked', align: 'right' },
       ],
       rows,
+    },
+    ratioTable(needs),
+    {
+      kind: 'paragraph',
+      role: 'small',
+      text: 'Required ratio: echo over noise of one pulse for one scan, D₀ and its losses added up; a stated ratio stands for all of them. Hits are the pulses in the half-power beam, integrated those that count.',
     },
     {
       kind: 'paragraph',
       role: 'small',
-      text: `Four words are kept apart in this memo. ${words.map(capital).join('. ')}. This version states the first only.`,
+      text: `Four words are kept apart in this memo. ${words.map(capital).join('. ')}. The first three are worked out here, together; the fourth never is. A need passes where the share asked is usable at the k of the study and at k = 1.`,
     },
   ]
+}
+const MEASURE: Record<SettledNeed['kind'], string> = { layer: 'of area', polygon: 'of area', fixes: 'of fixes', track: 'of length' }
+const KIND = { polygon: 'outline', fixes: 'fixes', track: 'track' } as const
+/** How each required ratio comes about: D₀ and its losses. */
+function ratioTable(needs: readonly SettledNeed[]): TableBlock {
+  const db = (x: number): Cell => ({ text: formatDbUp(x, 'dB', 0.01).value })
+  const unit = { unit: 'dB', align: 'right' } as const
+  return {
+    kind: 'table',
+    id: 'ratios',
+    title: 'Required ratio, worked out',
+    columns: [
+      { head: 'Need', width: 'fill' },
+      { head: 'Target', width: 104 },
+      { head: 'Hits, integrated', align: 'right' },
+      { head: 'D₀', ...unit },
+      { head: 'Beam shape', ...unit },
+      { head: 'Straddling', ...unit },
+      { head: 'Threshold', ...unit },
+      { head: 'Required', ...unit },
+    ],
+    rows: needs.map(({ name, required: r }): Cell[] => {
+      const target = `Pd ${formatPd(r.pd).value}, Pfa ${formatPfa(r.pfa)}, case ${r.swerling}`
+      if (r.by === 'stated') return [name, target, { text: 'stated, all losses in it', light: true, span: 5 }, db(r.ratioDb)]
+      return [
+        name,
+        target,
+        `${formatNumber(r.hits, 1)}, ${formatNumber(r.pulses)}`,
+        db(r.d0Db),
+        db(r.beamShapeDb),
+        db(r.straddleDb),
+        db(r.cfarDb),
+        db(r.ratioDb),
+      ]
+    }),
+  }
 }
 /** The ratio and what it comes from; a worked-out one is rounded up. */
 function ratioCell(n: SettledNeed): Cell {

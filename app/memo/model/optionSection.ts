@@ -7,26 +7,28 @@ import {
   formatAreaUp,
   formatAzimuth,
   formatBand,
-  formatDbDown,
   formatDbUp,
   formatFloor,
   formatHeight,
   formatLossPct,
-  formatMargin,
   formatMetPct,
   formatPlaceRange,
   formatScreening,
+  LOSS_WORDS,
   NO_VALUE,
   textOf,
   toFace,
   unitOf,
   withMetric,
 } from '../../words/index.ts'
-import { bare, bothUnits, capital, dual, dualBare, NO_HEADS, optionName, value } from './cells.ts'
+import { bothUnits, capital, dual, dualBare, NO_HEADS, optionName, value } from './cells.ts'
+import { exposureCell } from './exposureSection.ts'
 import { mapDrawing } from './mapFigure.ts'
-import { reaches } from './ranking.ts'
+import { availableWords, lossTable, marginTable, nestedTable, suppressionTable } from './needTables.ts'
+import { nestedWords } from './needWords.ts'
+import { placeBlocks } from './placeTables.ts'
 import { hasTilts } from './summarySection.ts'
-import { type Block, type Cell, type Column, type MemoInput, SMALL_PT, type TableBlock, TEXT_WIDTH_PT } from './types.ts'
+import { type Block, type Cell, type MemoInput, SMALL_PT, type TableBlock, TEXT_WIDTH_PT } from './types.ts'
 
 const MAP_PT = 256
 
@@ -37,6 +39,7 @@ export function optionBlocks(input: MemoInput, r: OptionResult, figure: () => nu
     { kind: 'paragraph', role: 'lead', text: lead },
     { kind: 'paragraph', text: rest },
   ]
+  if (r.figures.needs.length > 0) blocks.push(nestedTable(input, r), { kind: 'caution', texts: cautionsFor('need') })
   const map = input.maps.find((m) => sameRef(m.ref, r.ref))
   const figures = figureTable(input, r)
   if (map) {
@@ -56,11 +59,12 @@ export function optionBlocks(input: MemoInput, r: OptionResult, figure: () => nu
     })
   } else blocks.push(figures)
   blocks.push({ kind: 'caution', texts: clutterCautions(input) })
+  if (r.figures.needs.length > 0) blocks.push(marginTable(input, r))
   blocks.push(horizonFigure(input, r, figure()))
   blocks.push({ kind: 'caution', texts: cautionsFor('horizon') })
   if (r.figures.needs.length > 0) {
-    blocks.push(sightTable(input, r), { kind: 'caution', texts: cautionsFor('need') })
-    blocks.push(suppressionTable(input, r), { kind: 'caution', texts: suppressionCautions(input) })
+    blocks.push(lossTable(input, r), ...placeBlocks(input, r), suppressionTable(input, r))
+    blocks.push({ kind: 'paragraph', role: 'small', text: availableWords(r) }, { kind: 'caution', texts: suppressionCautions(input) })
   }
   const rings = ringChart({ rings: r.figures.rings, width: 182, height: 172, system: input.system, size: SMALL_PT - 1 })
   blocks.push({
@@ -78,7 +82,12 @@ const landCaution = (input: MemoInput): string[] => (input.study.lowAngleLandTab
 const clutterCautions = (input: MemoInput): string[] => [...landCaution(input), CAUTIONS.clutterMean]
 const suppressionCautions = (input: MemoInput): string[] => {
   const workedOut = input.study.needs.some((n) => n.requiredRatioBy !== 'stated')
-  return [...(workedOut ? [CAUTIONS.requiredRatio] : []), ...landCaution(input)]
+  const { kind } = input.study.radar.suppression
+  return [
+    ...(workedOut ? [CAUTIONS.requiredRatio] : []),
+    ...(kind === 'stated' ? [CAUTIONS.statedSuppression] : kind === 'none' ? [] : [CAUTIONS.blindSpeeds]),
+    ...landCaution(input),
+  ]
 }
 
 /** The finding at the head of an option, and of the app's memo column; `rest` follows it in lighter setting. */
@@ -86,17 +95,29 @@ export function optionFinding(input: MemoInput, r: OptionResult): { lead: string
   const { system } = input
   const place = input.study.candidates.find((c) => c.id === r.ref.candidate)?.name ?? r.ref.candidate
   const mast = optionName(r.ref, hasTilts(input)).replace(/^\S+ at /, '')
-  const over = `${withMetric((s) => formatAreaUp(r.figures.clutterOverKm2.over40, s), system)} of ground stand over 40\u202fdB.`
+  const over = `${withMetric((s) => formatAreaUp(r.figures.clutterOverKm2.over40, s), system)} stand over 40\u202fdB of clutter-to-noise.`
   const [first, ...others] = r.figures.needs.filter((n) => n.notAssessed === null)
   if (!first) {
     const seen = withMetric((s) => formatAreaDown(r.figures.groundInSightKm2, s), system)
     return { lead: `From ${place} a mast of ${mast} brings ${seen} of ground into sight.`, rest: capital(over) }
   }
-  const asked = (n: NeedFigure): string => (reaches(n) ? ', as asked' : `, against ${textOf(formatMetPct(n.requiredPct))} asked`)
-  const lead = `From ${place} a mast of ${mast} brings ${textOf(formatMetPct(first.inSightPct))} of ${first.name} into sight${asked(first)}.`
+  const asked = (n: NeedFigure): string => {
+    const share = `${textOf(formatMetPct(n.requiredPct))} asked`
+    if (n.passes) return `as asked (${share}) at both k`
+    if (!n.met) return `against ${share}`
+    return n.passes === null ? `${share}, k = 1 not run` : `${share}, but short of it at k = 1`
+  }
+  const lead = `From ${place} a mast of ${mast} has ${nestedWords(first)} of ${first.name}, ${asked(first)}.`
   const rest = [over]
-  const words = (n: NeedFigure): string => `${n.name} ${textOf(formatMetPct(n.inSightPct))}${asked(n)}`
-  if (others.length > 0) rest.push(`In sight of the other needs: ${others.slice(0, MOST_OTHERS).map(words).join('; ')}.`)
+  if (others.length > 0)
+    rest.push(
+      `${others
+        .slice(0, MOST_OTHERS)
+        .map((n) => `${n.name}: ${nestedWords(n)}, ${asked(n)}`)
+        .join('. ')}.`,
+    )
+  if (first.losses.length > 0)
+    rest.push(`Largest cause of loss: ${LOSS_WORDS[first.losses[0].cause]}, ${textOf(formatLossPct(first.losses[0].pct))}.`)
   if (first.worst && first.worstMarginM !== null && first.worstMarginM < 0) {
     const under = withMetric((s) => formatBand(-(first.worstMarginM as number), s), system)
     const where = `azimuth ${textOf(formatAzimuth(first.worst.azimuthDeg, 1))}, ${textOf(formatPlaceRange(first.worst.rangeM, system))}`
@@ -133,6 +154,7 @@ export function figureTable(input: MemoInput, r: OptionResult): TableBlock {
     ['C/N, highest', value(formatDbUp(f.cnrPeakDb), { explain: 'clutter_to_noise_peak_db' })],
   ]
   if (f.obstaclesInSight.length > 0) rows.push(['Obstacles in sight', obstacleWords(f.obstaclesInSight)])
+  rows.push(['Keep clear, antenna stopped', exposureCell(input, r.ref)])
   for (const m of f.marks) rows.push([capital(m.about.replace(`, ${m.mark}`, '')), { text: '', mark: m.mark }])
   return { kind: 'table', id: 'figures', columns: NO_HEADS, rows }
 }
@@ -158,6 +180,11 @@ function horizonFigure(input: MemoInput, r: OptionResult, number: number): Block
 
 function floorTable(input: MemoInput, r: OptionResult): TableBlock {
   const { system } = input
+  const atLowK = r.figures.floorsLowK
+  const low = (rangeM: number): Cell => {
+    const m = atLowK?.find((f) => f.rangeM === rangeM)?.worstM ?? null
+    return m === null ? NO_VALUE : dualBare((s) => formatFloor(m, s), system, `floor_${Math.round(rangeM / 1852)}nm_k1_worst_m`)
+  }
   const rows = r.figures.floors.map((f): Cell[] => {
     const nm = Math.round(f.rangeM / 1852)
     const floor = (m: number | null, which: string): Cell =>
@@ -168,6 +195,7 @@ function floorTable(input: MemoInput, r: OptionResult): TableBlock {
       floor(f.medianM, 'median'),
       floor(f.worstM, 'worst'),
       f.worstBandM === null ? NO_VALUE : { ...dualBare((s) => formatBand(f.worstBandM, s), system), light: true },
+      low(f.rangeM),
       f.worstAzimuthDeg === null ? { text: 'unknown', light: true } : { text: textOf(formatAzimuth(f.worstAzimuthDeg, 1)) },
     ]
   })
@@ -181,69 +209,9 @@ function floorTable(input: MemoInput, r: OptionResult): TableBlock {
       { head: 'Median', align: 'right' },
       { head: 'Worst', align: 'right' },
       { head: 'Band ±', align: 'right' },
+      { head: 'Worst, k = 1', align: 'right' },
       { head: 'At', align: 'right' },
     ],
     rows,
   }
-}
-
-type NeedRow = (n: NeedFigure, key: (what: string) => { explain: string }) => Cell[]
-function needRows(r: OptionResult, columns: number, row: NeedRow): Cell[][] {
-  return r.figures.needs.map((n) => {
-    if (n.notAssessed === null) return [n.name, ...row(n, (what) => ({ explain: `need_${n.needId}_${what}` }))]
-    return [n.name, { text: 'not assessed', light: true, span: columns - 1 }]
-  })
-}
-/** Needs of one option by line of sight: shares, unknown ground, margins. */
-export function sightTable(input: MemoInput, r: OptionResult): TableBlock {
-  const { system } = input
-  const area = { unit: unitOf('area', system), align: 'right' } as const
-  const columns: Column[] = [
-    { head: 'Need', width: 'fill' },
-    { head: 'Asked', unit: '%', align: 'right' },
-    { head: 'In sight', unit: '%', align: 'right' },
-    { head: 'In sight', ...area },
-    { head: 'Marginal', ...area },
-    { head: 'Unknown', ...area },
-    { head: 'Unknown', unit: '%', align: 'right' },
-    { head: 'Worst margin', unit: unitOf('height', system), align: 'right' },
-    { head: '10\u202f% level', unit: unitOf('height', system), align: 'right' },
-  ]
-  const rows = needRows(r, columns.length, (n, key) => [
-    bare(formatMetPct(n.requiredPct)),
-    bare(formatMetPct(n.inSightPct), key('in_sight_pct')),
-    bare(formatAreaDown(n.inSightKm2, system), key('in_sight_km2')),
-    bare(formatAreaUp(n.marginalKm2, system), key('marginal_km2')),
-    bare(formatAreaUp(n.unknownKm2, system), key('unknown_km2')),
-    bare(formatLossPct(n.areaKm2 > 0 ? (100 * n.unknownKm2) / n.areaKm2 : null)),
-    bare(formatMargin(n.worstMarginM, system), key('worst_margin_m')),
-    bare(formatMargin(n.tenthMarginM, system), key('tenth_margin_m')),
-  ])
-  return { kind: 'table', id: 'option-sight', title: 'Needs, line of sight', columns, rows }
-}
-/** Suppression each need asks for: shares of its places in sight, with what is masked and too weak beside them. */
-export function suppressionTable(input: MemoInput, r: OptionResult): TableBlock {
-  const { system } = input
-  const db = { unit: 'dB', align: 'right' } as const
-  const pct = { unit: '%', align: 'right' } as const
-  const columns: Column[] = [
-    { head: 'Need', width: 'fill' },
-    { head: 'Needed at 50\u202f%', ...db },
-    { head: '90\u202f%', ...db },
-    { head: '99\u202f%', ...db },
-    { head: 'Available', ...db },
-    { head: 'Short', unit: unitOf('area', system), align: 'right' },
-    { head: 'Masked', ...pct },
-    { head: 'Too weak', ...pct },
-  ]
-  const rows = needRows(r, columns.length, ({ suppression: s }, key) => [
-    bare(formatDbUp(s.p50Db), key('suppression_needed_50_db')),
-    bare(formatDbUp(s.p90Db), key('suppression_needed_90_db')),
-    bare(formatDbUp(s.p99Db), key('suppression_needed_99_db')),
-    bare(formatDbDown(s.availableDb), key('suppression_available_db')),
-    bare(formatAreaUp(s.shortKm2, system), key('suppression_short_km2')),
-    bare(formatLossPct(s.maskedPct)),
-    bare(formatLossPct(s.tooWeakPct), key('too_weak_pct')),
-  ])
-  return { kind: 'table', id: 'option-suppression', title: 'Needs, suppression', columns, rows }
 }

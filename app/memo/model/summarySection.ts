@@ -5,6 +5,7 @@ import {
   formatAreaUp,
   formatDbDown,
   formatDbUp,
+  formatExposure,
   formatMetPct,
   NOT_ASSESSED,
   textOf,
@@ -12,7 +13,9 @@ import {
 } from '../../words/index.ts'
 import { capital, countWord, inSentence, inWords, optionName, someInWords } from './cells.ts'
 import { comparisonTable } from './comparisonTable.ts'
-import { inOrder, mustNeeds, ORDER_SENTENCE, reaches, shortfallPct } from './ranking.ts'
+import { exposureFor } from './exposureSection.ts'
+import { nestedWords } from './needWords.ts'
+import { inOrder, mustNeeds, ORDER_SENTENCE, reaches, shortKm2 } from './ranking.ts'
 import type { Block, MemoInput } from './types.ts'
 
 /** Options the study asks for. */
@@ -53,22 +56,28 @@ function leadSentence(input: MemoInput, ordered: readonly OptionResult[]): strin
   const best = ordered[0]
   const needs = mustNeeds(best)
   const name = optionName(best.ref, tilts)
-  const clutter = `with ${withMetric((s) => formatAreaUp(best.figures.clutterOverKm2.over40, s), input.system)} of ground over 40\u202fdB`
+  const short = shortKm2(best)
+  const clutter =
+    short > 0
+      ? `with ${withMetric((s) => formatAreaUp(short, s), input.system)} of all needs short of suppression`
+      : 'with no area of the needs short of suppression'
   if (needs.length === 0)
-    return `No must need is assessed, so nothing sets one option before another; least ground stands over 40\u202fdB from ${name}, ${clutter}.`
-  const reaching = ordered.filter((r) => shortfallPct(r) === 0)
-  const shares = someInWords(needs.map(shareWords), 3)
+    return `No must need is assessed, so nothing sets one option before another; least is short of suppression from ${name}, ${clutter}.`
+  const reaching = ordered.filter((r) => mustNeeds(r).every(reaches))
+  const shares = someInWords(needs.map(shareWords), 2)
+  const open = needs.some((n) => n.passes === null)
+  const meets = open ? 'meets every must need at the k of the study' : 'passes every must need, at the k of the study and at k = 1'
   if (reaching.length === 0)
-    return `None of the ${countWord(ordered.length)} options computed brings the share asked of every must need into sight. ${name} comes nearest: ${shares}, ${clutter}.`
+    return ordered.length === 1
+      ? `${name}, the one option computed, ${meets.replace(/^(meet|passe)s/, (w) => (w === 'meets' ? 'does not meet' : 'does not pass'))}: ${shares}, ${clutter}.`
+      : `None of the ${countWord(ordered.length)} options computed ${meets}. ${name} comes nearest: ${shares}, ${clutter}.`
   const many =
-    reaching.length === 1 ? `Only ${name} brings` : `${capital(countWord(reaching.length))} of ${countWord(ordered.length)} options bring`
-  const lead = `${many} the share asked of every must need into sight`
-  return reaching.length === 1
-    ? `${lead}: ${shares}, ${clutter}.`
-    : `${lead}; ${name} has the least clutter of them: ${shares}, ${clutter}.`
+    reaching.length === 1
+      ? `Only ${name} ${meets}`
+      : `${capital(countWord(reaching.length))} of ${countWord(ordered.length)} options ${meets.replace(/^(meet|passe)s/, (w) => (w === 'meets' ? 'meet' : 'pass'))}`
+  return reaching.length === 1 ? `${many}: ${shares}, ${clutter}.` : `${many}; ${name} comes first of them: ${shares}, ${clutter}.`
 }
-const shareWords = (n: NeedFigure): string =>
-  `${textOf(formatMetPct(n.inSightPct))} of ${n.name} in sight (${textOf(formatMetPct(n.requiredPct))} asked)`
+const shareWords = (n: NeedFigure): string => `${n.name} ${nestedWords(n)} (${textOf(formatMetPct(n.requiredPct))} asked)`
 
 function restSentences(input: MemoInput, ordered: readonly OptionResult[]): string {
   const out: string[] = []
@@ -78,10 +87,17 @@ function restSentences(input: MemoInput, ordered: readonly OptionResult[]): stri
     const { p90Db, availableDb, shortKm2 } = need.suppression
     const asked = p90Db <= 0 ? 'no suppression is needed' : `${textOf(formatDbUp(p90Db))} of suppression is needed`
     const short = shortKm2 > 0 ? `${withMetric((s) => formatAreaUp(shortKm2, s), input.system)} need more` : 'no place needs more'
-    out.push(`At 90\u202f% of the places in sight of ${need.name} ${asked}; with ${textOf(formatDbDown(availableDb))} available, ${short}.`)
+    out.push(
+      `At 90\u202f% of the places in sight of ${need.name} that are strong enough ${asked}; with ${textOf(formatDbDown(availableDb))} available, ${short}.`,
+    )
   }
   const lower = best && lowestReaching(ordered, best)
-  if (lower) out.push(`The lowest mast that still does so is ${optionName(lower.ref, hasTilts(input))}.`)
+  if (lower) out.push(`The lowest mast that does so too is ${optionName(lower.ref, hasTilts(input))}.`)
+  const clear = best && exposureFor(input, best.ref)
+  if (clear)
+    out.push(
+      `With the antenna stopped the main beam is to be kept clear to ${textOf(formatExposure(clear.stoppedM))} (limit ${clear.limit.basis === 'read' ? `from ${clear.limit.source}` : clear.limit.basis}).`,
+    )
   const open = best?.figures.needs.filter((n) => n.notAssessed !== null) ?? []
   if (open.length > 0) out.push(`Not part of this: ${inWords(open.map((n) => `${n.name} (${n.notAssessed})`))}.`)
   const total = optionCount(input)
