@@ -14,6 +14,7 @@ import { Button, Caution, CommitField, Notice, NumberField, PositionField, readN
 import { CAUTIONS, DEG, EMPTY_WORDS, formatHeight, formatPosition, METRES, textOf } from '../../words/index.ts'
 import { useDoc, useGround, useSession, useView } from '../session/index.ts'
 import { settledOf } from '../settled.ts'
+import { Problems } from './Problems.tsx'
 
 /** Places where the radar could stand, with their mast heights. */
 export function CandidatesStep() {
@@ -94,6 +95,7 @@ function Card({ candidate: c, onSelect }: { candidate: CandidateDoc; onSelect: (
   const hasGround = useGround((g) => g.state === 'ready')
   const windowed = useGround((g) => g.posts > WINDOWED_POSTS)
   const tilts = useDoc((d) => settledOf(d)?.candidates.find((x) => x.id === c.id)?.tiltsDeg)
+  const at = useDoc((d) => d.candidates.findIndex((x) => x.id === c.id))
   const on = option?.candidate === c.id
   const heightM = c.groundHeightM ?? groundM
   const choose = (mastM: number, tiltDeg = on ? option.tiltDeg : (tilts?.[0] ?? 0)) =>
@@ -114,6 +116,7 @@ function Card({ candidate: c, onSelect }: { candidate: CandidateDoc; onSelect: (
           </Button>
         ) : null}
       </div>
+      <Problems where={(path) => path.startsWith(`candidates[${at}]`)} />
       {hasGround && groundM === null ? (
         <div className="row">
           <span className="mark">no ground known here: outside the terrain or over a void</span>

@@ -17,6 +17,7 @@ import {
 import { useDoc, useGround, useSession, useView } from '../session/index.ts'
 import { ClassTable } from './ClassTable.tsx'
 import { DocChoice, Group } from './fields.tsx'
+import { Problems } from './Problems.tsx'
 import { Remarks } from './Remarks.tsx'
 import { useFilePicker } from './useFilePicker.tsx'
 
@@ -26,6 +27,7 @@ export function GroundStep() {
   const { state, reading, trouble, notes, obstacles, roads } = useGround((g) => g)
   return (
     <>
+      <Problems where={(path) => !/^(radar|atmosphere|run|needs|candidates)\b/.test(path)} />
       {terrain.length === 0 ? <NoTerrain /> : null}
       {state === 'failed' ? (
         <Notice tone="bad" title="The ground could not be read">

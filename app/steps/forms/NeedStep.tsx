@@ -5,6 +5,7 @@ import { CAUTIONS, DB, DEG, EMPTY_WORDS, formatSetting, PLAIN, SWERLING_CASES, t
 import { useDoc, useSession, useView } from '../session/index.ts'
 import { settledOf } from '../settled.ts'
 import { faceOf } from './fields.tsx'
+import { Problems } from './Problems.tsx'
 import { Remarks } from './Remarks.tsx'
 
 const HEIGHT_ABOVE = [
@@ -70,6 +71,7 @@ function Need({ need, at }: { need: NeedDoc; at: number }) {
           remove
         </Button>
       </div>
+      <Problems where={(p) => p.startsWith(path)} />
       <Check value={need.must ?? true} onChange={(v) => set('must', v)}>
         Must be met
       </Check>

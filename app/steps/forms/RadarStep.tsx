@@ -15,6 +15,7 @@ import {
 import { useDoc, useSession } from '../session/index.ts'
 import { DocChoice, DocNumber, DocNumbers, Group } from './fields.tsx'
 import { PairsField } from './PairsField.tsx'
+import { Problems } from './Problems.tsx'
 import { Remarks } from './Remarks.tsx'
 
 const HZ = { unit: 'Hz', size: 1 }
@@ -38,6 +39,7 @@ export function RadarStep() {
           return null
         }}
       />
+      <Problems where={(path) => /^(radar|atmosphere|run)\b/.test(path)} />
       <Remarks about={['radar', 'atmosphere', 'run']} />
       <Group title="Transmitter">
         {RADAR_FIELDS.transmitter.map((f) => (

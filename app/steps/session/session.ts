@@ -15,6 +15,7 @@ import {
   type GroundStore,
   openShelf,
   packStudy,
+  problemsOf,
   type ResultsStore,
   restore,
   type SaveStore,
@@ -81,6 +82,8 @@ export async function startSession(client: StudyClient, readGround: ReadGround):
     forgetResults(results)
     view.getState().set({ cell: null, chart: null, placing: false })
     for (const w of warnings) say(w)
+    const problem = problemsOf(study.getState().doc)[0]
+    if (problem) say(`${problem.path}: ${problem.message}`, 'bad')
     if (missing.length > 0)
       say(`${missing.join(', ')}: named by the study, not here yet; drop ${missing.length > 1 ? 'them' : 'it'} on the page`)
   }

@@ -90,6 +90,9 @@ export function Shell() {
         </div>
       </section>
       <aside className="memo" aria-label="Memo of the option on show">
+        <Button small look="quiet" className="fold" label="Close the memo column" onPress={() => view.getState().set({ memoOpen: false })}>
+          close
+        </Button>
         <FaultBoundary>
           <MemoAside />
         </FaultBoundary>

@@ -4,6 +4,12 @@ import { STEP_WORDS } from '../../words/index.ts'
 import { useDoc, useGround, useResults, useSession, useView } from '../session/index.ts'
 import { Working } from './Working.tsx'
 
+/** Which step corrects a key path. */
+const RADAR = /^(radar|atmosphere|run)\b/
+const NEEDS = /^needs\b/
+const CANDIDATES = /^candidates\b/
+const GROUND = /^(?!(radar|atmosphere|run|needs|candidates)\b)/
+
 interface StepState {
   readonly words: string
   readonly tone: 'ready' | 'missing' | 'changed'
@@ -20,7 +26,7 @@ function useStepStates(): Record<StepId, StepState> {
   const running = useResults((r) => r.status !== null)
   const hold = useView((v) => v.hold)
   const problems = problemsOf(doc)
-  const wrong = (part: string) => problems.filter((p) => p.path.startsWith(part)).length
+  const wrong = (part: RegExp) => problems.filter((p) => part.test(p.path)).length
   const options = studyOptions(doc)
   const done = options.filter((o) => byOption.has(optionKey(o))).length
   const needs = doc.needs?.length ?? 0
@@ -31,16 +37,18 @@ function useStepStates(): Record<StepId, StepState> {
         ? missing('not readable')
         : ground.state === 'reading'
           ? changed('reading')
-          : doc.terrain.length === 0
-            ? missing('missing')
-            : ground.missing.length > 0
-              ? missing(`${ground.missing.length} file${ground.missing.length > 1 ? 's' : ''} missing`)
-              : ready('ready'),
-    radar: wrong('radar') > 0 ? toCorrect(wrong('radar')) : hasStartingRadar(doc) ? changed('starting values') : ready('ready'),
-    need: wrong('needs') > 0 ? toCorrect(wrong('needs')) : needs === 0 ? missing('none stated') : ready(`${needs} stated`),
+          : wrong(GROUND) > 0
+            ? toCorrect(wrong(GROUND))
+            : doc.terrain.length === 0
+              ? missing('missing')
+              : ground.missing.length > 0
+                ? missing(`${ground.missing.length} file${ground.missing.length > 1 ? 's' : ''} missing`)
+                : ready('ready'),
+    radar: wrong(RADAR) > 0 ? toCorrect(wrong(RADAR)) : hasStartingRadar(doc) ? changed('starting values') : ready('ready'),
+    need: wrong(NEEDS) > 0 ? toCorrect(wrong(NEEDS)) : needs === 0 ? missing('none stated') : ready(`${needs} stated`),
     candidates:
-      wrong('candidates') > 0
-        ? toCorrect(wrong('candidates'))
+      wrong(CANDIDATES) > 0
+        ? toCorrect(wrong(CANDIDATES))
         : doc.candidates.length === 0
           ? missing('none placed')
           : ready(`${doc.candidates.length} placed`),
