@@ -33,7 +33,8 @@ describe('run', () => {
 
   it('writes one folder per candidate, height and tilt, and leaves nothing beside it', () => {
     expect(ran).toMatchObject({ code: 0, out: '' })
-    const tilt = ['clutter-to-noise.tif', 'suppression-needed-n1.tif']
+    const needed = ['suppression-needed', 'usable', 'probability-of-detection', 'signal-margin', 'cause-of-loss']
+    const tilt = ['clutter-to-noise.tif', ...needed.map((name) => `${name}-n1.tif`)]
     const height = ['clutter-strength.tif', 'coverage-floor.tif', 'depression.tif', 'height-to-see.tif', 'horizon.csv', 'in-sight.tif']
     const folders = ['10m', '40m'].flatMap((h) => [
       ...['0deg', '2deg'].flatMap((t) => tilt.map((f) => `A/${h}/${t}/${f}`)),
@@ -92,6 +93,37 @@ describe('run', () => {
     })
     expect(Number.isNaN(samples[40 * 81 + 79])).toBe(true)
   })
+  it('usable is 1, 2 or 3 where the need is in sight, and what is not usable has a cause', async () => {
+    const usable = await floats(join(out, 'A/40m/0deg/usable-n1.tif'))
+    const cause = await floats(join(out, 'A/40m/0deg/cause-of-loss-n1.tif'))
+    const seen = new Set([...usable.samples].filter((v) => !Number.isNaN(v)))
+    expect([...seen].every((v) => v === 1 || v === 2 || v === 3)).toBe(true)
+    expect(seen.has(3)).toBe(true)
+    for (const [i, v] of usable.samples.entries()) if (v === 3) expect(cause.samples[i]).toBeNaN()
+    for (const [i, v] of usable.samples.entries()) if (v === 1 || v === 2) expect(cause.samples[i]).toBeGreaterThan(0)
+  })
+  it('files of fixes and tracks beside the study are read, listed and judged', async () => {
+    const needs = [
+      { id: 'f', name: 'Fixes', kind: 'fixes' as const, file: 'fixes.csv' },
+      { id: 't', name: 'Run in', kind: 'track' as const, file: 'track.csv', speedMs: 50 },
+    ]
+    const own = await tinyStudy(tinyDoc({ needs, candidates: [{ ...tinyDoc().candidates[0]!, mastHeightsM: [40] }] }))
+    writeFileSync(join(own.dir, 'fixes.csv'), 'name,lon,lat,alt_m_msl\nover,15.01,48.75,900\nlow behind,15.035,48.7516,120\n')
+    writeFileSync(join(own.dir, 'track.csv'), 'lon,lat,alt_m_msl\n15.02,48.75159,400\n15.005,48.75159,400\n')
+    const { code, err } = await batchLater('run', own.path, '--out', join(own.dir, 'fixed'), '--no-memo')
+    expect(err).not.toMatch(/fault/)
+    expect(code).toBe(0)
+    const { files, options } = JSON.parse(readFileSync(join(own.dir, 'fixed/summary.json'), 'utf8'))
+    expect(files.map((f: { name: string }) => f.name)).toEqual(['moor.tif', 'fixes.csv', 'track.csv'])
+    // one of two fixes lies under the line over the crest: (160 − 140 m) at 2 km gives about 175 m at 2.6 km
+    expect(options[0].figures.need_f_in_sight_pct).toBe(50)
+    expect(options[0].figures.need_t_length_m).toBeGreaterThan(1_050)
+    expect(options[0].figures.need_t_length_m).toBeLessThan(1_150)
+    writeFileSync(join(own.dir, 'fixes.csv'), 'lon,lat,flight_level\n15,48.75,30\n')
+    const refused = await batchLater('run', own.path, '--out', join(own.dir, 'refused'), '--no-memo')
+    expect(refused.code).toBe(2)
+    expect(refused.err).toMatch(/fixes\.csv.*qnhHpa/)
+  }, 120_000)
   it('an earlier run is replaced; options are picked; the memo may be left out', async () => {
     const again = await batchLater('run', path, '--out', out, '--height', '40', '--tilt', '2', '--no-memo')
     expect(again).toMatchObject({ code: 0, out: '' })
