@@ -17,7 +17,7 @@ export function gaussianBeam(offset: number, beamwidth: number): number {
  * Introduction to Radar Systems); joined at the upper half-power point.
  */
 export function elevationGain(a: AntennaInput, elevationDeg: number, tiltDeg: number = a.tiltDeg): number {
-  const offset = elevationDeg - tiltDeg
+  const offset = elevationDeg - tiltDeg - (a.offsetDeg ?? 0)
   switch (a.elevationPattern) {
     case 'gaussian':
       return gaussianBeam(offset, a.elevationBeamwidthDeg)

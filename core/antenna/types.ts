@@ -13,6 +13,8 @@ export interface AntennaInput {
   readonly elevationSidelobeDb: number
   /** Elevation of the beam peak, negative down. */
   readonly tiltDeg: number
+  /** This beam's peak over the tilt, for stacked beams; 0 when absent. */
+  readonly offsetDeg?: number
   readonly apertureWidthM: number | null
   readonly apertureHeightM: number | null
 }

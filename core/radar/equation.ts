@@ -12,12 +12,13 @@ export const compressionGainDb = (r: RadarInput): number => toDb(r.pulseWidthS /
 
 /**
  * Everything of the radar equation but the reflector and the range, dB: echo-to-noise ratio of 1 m² at 1 m on the beam peak, one pulse after
- * compression. Pt·G²·λ²·(τ/τc) / [(4π)³·kT₀·B·Fn·L]; no gas, no propagation factor, no STC. Source: monostatic radar equation (Skolnik).
+ * compression. Pt·G_T·G_R·λ²·(τ/τc) / [(4π)³·kT₀·B·Fn·L]; no gas, no propagation factor, no STC. Source: monostatic radar equation (Skolnik).
  */
 export function radarConstantDb(r: RadarInput): number {
   return (
     toDb(r.peakPowerW) +
-    2 * r.antenna.gainDbi +
+    r.antenna.gainDbi +
+    (r.receiveAntenna ?? r.antenna).gainDbi +
     20 * Math.log10(wavelengthM(r.frequencyHz)) +
     compressionGainDb(r) -
     FOUR_PI_CUBED_DB -

@@ -3,6 +3,30 @@ import type { CircularInput } from './polarisation.ts'
 
 export type { AntennaInput } from '../antenna/index.ts'
 
+/** One transmitted pulse and the slant ranges its echoes are taken from. */
+export interface PulseInput {
+  readonly widthS: number
+  readonly compressedWidthS: number
+  readonly noiseBandwidthHz: number
+  readonly fromRangeM: number
+  readonly toRangeM: number
+  /** Range side lobes of the compressed pulse, dB relative to its peak; null = none counted. */
+  readonly rangeSidelobeDb: number | null
+}
+/** One of several beams of an antenna, stacked in elevation. */
+export interface BeamInput
+  extends Pick<AntennaInput, 'gainDbi' | 'elevationBeamwidthDeg' | 'elevationPattern' | 'cosecantLimitDeg' | 'elevationTable'> {
+  readonly name: string
+  /** Its peak over the antenna's tilt. */
+  readonly offsetDeg: number
+}
+/** Which beams are in use from one apparent slant range to another. */
+export interface BeamSwitchInput {
+  readonly fromRangeM: number
+  readonly toRangeM: number
+  readonly transmit: string
+  readonly receive: string
+}
 export interface SuppressionInput {
   readonly kind: 'none' | 'stated' | 'canceller' | 'filterBank'
   readonly statedDb: number
@@ -38,6 +62,13 @@ export interface RadarInput {
   readonly systemLossDb: number
   readonly pfa: number
   readonly antenna: AntennaInput
+  /** The receiving antenna where it is not the transmitting one. */
+  readonly receiveAntenna?: AntennaInput
+  /** Pulses by range; absent or empty: the one of pulseWidthS at every range. */
+  readonly pulses?: readonly PulseInput[]
+  /** Stacked beams and the ranges they are used at; absent or empty: the antenna's own at every range. */
+  readonly beams?: readonly BeamInput[]
+  readonly beamSwitch?: readonly BeamSwitchInput[]
   readonly suppression: SuppressionInput
   readonly stc: StcInput
   readonly instrumentedRangeM: number

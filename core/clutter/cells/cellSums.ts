@@ -11,20 +11,21 @@ export interface CellRows
     Pick<SightCells, 'inSight' | 'floorM'> {
   /** Ground range of the cell centres, m, > 0. */
   readonly centresM: Float64Array
-  /** Cells before this one of a row only tell what lies toward the radar; 0 when absent. */
-  readonly first?: number
 }
 /** Tables and numbers shared by every row of cells of one option. */
 export interface CellModel {
   readonly antennaM: number
   readonly strength: StrengthTable
-  readonly gain: GainTable
-  /** Cells nearer than this do not count as used, m. */
-  readonly nearestM: number
   /** What suppression leaves of each ground code's clutter, 1/I, ratio. */
   readonly left: Float64Array
   /** Water stands this much above the raster, m. */
   readonly tideM: number
+}
+/** The pulse and beams a row is worked out for: two-way elevation gain, and the ranges whose cells count as used, m. */
+export interface RowUse {
+  readonly gain: GainTable
+  readonly fromM: number
+  readonly toM: number
 }
 /** Where one row of cells is written; null = not wanted. */
 export interface RowSums {
@@ -58,11 +59,20 @@ export function elevationTangent(antennaM: number, heightM: number, rangeM: numb
 }
 
 /**
- * Clutter of the cells of row i per metre of gate and radian of azimuth: σ°F⁴ × share in sight × slant range × sec ψ, ψ the depression at the
+ * Clutter of cells [first, end) of row i per metre of gate and radian of azimuth: σ°F⁴ × share in sight × slant range × sec ψ, ψ the depression at the
  * ground, m. Adds the ground in sight that took each entry of the strength table to `use` (in proportion to area).
  */
-export function cellClutter(model: CellModel, cells: CellRows, i: number, out: RowSums, use: Float64Array): void {
-  const { antennaM, strength, gain, nearestM, left, tideM } = model
+export function cellClutter(
+  model: CellModel,
+  { gain, fromM, toM }: RowUse,
+  cells: CellRows,
+  i: number,
+  out: RowSums,
+  use: Float64Array,
+  first = 0,
+  end = cells.centresM.length,
+): void {
+  const { antennaM, strength, left, tideM } = model
   const { edgesRad, bands, sigma, kinds } = strength
   const { groundM, code, relief, inSight, centresM } = cells
   const { patterned, residual, plain } = out
@@ -70,7 +80,7 @@ export function cellClutter(model: CellModel, cells: CellRows, i: number, out: R
   const c = 1 / cells.effectiveRadiusM[i]
   const from = i * ranges
   let band = bands >> 1
-  for (let j = cells.first ?? 0; j < ranges; j++) {
+  for (let j = first; j < end; j++) {
     const at = from + j
     const seen = inSight[at]
     let ground = groundM[at]
@@ -84,7 +94,7 @@ export function cellClutter(model: CellModel, cells: CellRows, i: number, out: R
     let depression = (antennaM - ground) / r - 0.5 * r * c
     band = bandOf(edgesRad, depression, band)
     const entry = (code[at] * 4 + reliefSlot(relief[at])) * bands + band
-    if (r >= nearestM) use[entry] += r * seen
+    if (r >= fromM && r < toM) use[entry] += r * seen
     let mean = sigma[entry]
     if (mean < 0) {
       if (kinds[code[at]] & CODE_KIND.water) {
@@ -116,12 +126,12 @@ export function gateWeights(gateM: number, rangeStepM: number): Float64Array {
   return weights
 }
 
-/** Sums of a row over the gate around each cell. Where the gate leaves the row, the part inside stands for all of it. */
-export function gateSums(row: Float64Array, weights: Float64Array, out: Float64Array): void {
+/** Sums of a row over the gate around cells [first, end). Where the gate leaves the row, the part inside stands for all of it. */
+export function gateSums(row: Float64Array, weights: Float64Array, out: Float64Array, first = 0, end = row.length): void {
   const n = row.length
   const half = weights.length >> 1
   const whole = weights.reduce((s, w) => s + w, 0)
-  for (let j = 0; j < n; j++) {
+  for (let j = first; j < end; j++) {
     const lo = Math.max(-half, -j)
     const hi = Math.min(half, n - 1 - j)
     let sum = 0

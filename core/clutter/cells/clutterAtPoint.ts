@@ -1,4 +1,4 @@
-import type { Earth, LonLat } from '../../geodesy/index.ts'
+import { type Earth, effectiveRadiusM, type LonLat } from '../../geodesy/index.ts'
 import { type SightPoint, sightPoint } from '../../masking/index.ts'
 import type { PolarShape } from '../../polar/index.ts'
 import type { RadarInput } from '../../radar/index.ts'
@@ -7,7 +7,7 @@ import { toDb } from '../../units/index.ts'
 import type { LandChoice } from '../land/landRow.ts'
 import { weibullSpread } from '../land/weibull.ts'
 import type { ModelNote } from '../types.ts'
-import { cellClutter } from './cellSums.ts'
+import { cellClutter, slantSquared } from './cellSums.ts'
 import { type ClutterLine, clutterLines } from './clutterLines.ts'
 import { optionNotes } from './clutterToNoise.ts'
 import {
@@ -22,9 +22,11 @@ import {
   perSquareMetre,
   pointOption,
   rainOf,
+  rangeLobesOf,
   sideLobes,
   slantOf,
 } from './pointCells.ts'
+import { segmentOf } from './segment.ts'
 
 /** Clutter at one place, on its own rays and range; null = undefined. */
 export interface PointClutter {
@@ -46,6 +48,8 @@ export interface PointClutter {
   readonly groundCnrDb: number | null
   readonly rainCnrDb: number | null
   readonly discreteCnrDb: number | null
+  /** What range side lobes bring into the gate from others, dB over noise. */
+  readonly rangeLobeCnrDb: number | null
   /** Second-time-around clutter in the gate, dB over noise; null where none was given. */
   readonly foldedCnrDb: number | null
   /** What suppression leaves of `cnrDb`: each kind of clutter divided by its improvement factor, dB over noise. */
@@ -87,16 +91,20 @@ export function pointClutter(
     const nothing = emptyPoint(azimuthDeg, rangeM)
     if (sight.unknown !== null || !(rangeM > 0)) return nothing
     const azimuthsDeg = Array.from(kernel, (_, n) => (azimuthDeg + (n - reach) * grid.azimuthStepDeg + 720) % 360)
-    const cells = gateCells(o, azimuthsDeg, rangeM)
+    const c = 1 / effectiveRadiusM(earth, site.lat, azimuthDeg)
+    const received = segmentOf(o.segments, Math.sqrt(slantSquared(o.cell.antennaM, sight.groundM, rangeM, c)))
+    const segment = received ?? o.segments[0]
+    if (!segment) return nothing
+    const cells = gateCells(o, segment, azimuthsDeg, rangeM)
     const own = choiceOf(o, cells, reach, cells.middle)
     const middle = reach * cells.gate.length + cells.middle
     const slantRangeM = slantOf(o, cells, reach)
-    if (!(slantRangeM >= o.cell.nearestM)) return { ...nothing, slantRangeM, rowName: own?.rowName ?? null }
+    if (!received) return { ...nothing, slantRangeM, rowName: own?.rowName ?? null }
 
     const sums = sumCell(o, cells, slantRangeM)
     const discrete = discretesAt(o, azimuthDeg, rangeM)
     const folded = foldedAt(o, azimuthDeg, rangeM)
-    const main = sums.ground + sums.rain + discrete
+    const main = sums.ground + sums.rain + sums.lobes + discrete
     const sideLobe = sideLobeAt(rangeM)
     const db = (ratio: number): number | null => (ratio > 0 ? toDb(ratio) : null)
     const numbers = {
@@ -112,6 +120,7 @@ export function pointClutter(
       groundCnrDb: db(sums.ground),
       rainCnrDb: db(sums.rain),
       discreteCnrDb: db(discrete),
+      rangeLobeCnrDb: db(sums.lobes),
       residueDb: db(sums.left + discrete * o.left.discrete + folded * o.left.folded + sideLobe.left),
       foldedCnrDb: db(folded),
       cellAreaM2: sums.areaM2,
@@ -121,31 +130,33 @@ export function pointClutter(
     const notes = optionNotes(o, sums.use, earth)
     for (const note of own?.notes ?? []) if (!notes.some((n) => n.about === note.about)) notes.push(note)
     if (g.codes[cells.code[middle]]?.mark === 'default') notes.push({ mark: 'default', about: 'land cover not stated' })
-    return { ...numbers, lines: clutterLines({ ...numbers, ...lossesOf(o, cells, reach) }, r, o.table), notes }
+    return { ...numbers, lines: clutterLines({ ...numbers, ...lossesOf(o, cells, reach) }, segment, o.table), notes }
   }
 }
 
 /** Sums over the resolution cell: clutter RCS, C/N of ground and rain in the main beam, what is left, share in sight, spread weighted by RCS. */
 function sumCell(o: PointOption, cells: GateCells, slantRangeM: number) {
-  const { cell, kernel, gateM, beamRad, left } = o
-  const { gate } = cells
+  const { cell, kernel, beamRad, left } = o
+  const { gate, segment } = cells
+  const { gateM } = segment
   const patterned = new Float64Array(gate.length)
   const plain = new Float64Array(gate.length)
   const residual = new Float64Array(gate.length)
   const use = new Float64Array(cell.strength.sigma.length)
   const areaM2 = slantRangeM * beamRad * gateM * secantOf(o, cells, kernel.length >> 1)
-  const sums = { rcsM2: 0, ground: 0, rain: 0, left: 0, share: 0, spread: 0 }
+  const sums = { rcsM2: 0, ground: 0, rain: 0, lobes: 0, left: 0, share: 0, spread: 0 }
   for (let n = 0; n < kernel.length; n++) {
-    cellClutter(cell, cells, n, { patterned, plain, residual }, use)
+    cellClutter(cell, segment, cells, n, { patterned, plain, residual }, use, cells.first)
     const at0 = n * gate.length
     const factor = perSquareMetre(o, cells, n)
     const rain = kernel[n] * rainOf(o, cells, n) * factor
     sums.rain += rain
-    sums.left += rain * left.rain
+    sums.lobes += kernel[n] * rangeLobesOf(o, cells, n, patterned, 1)
+    sums.left += rain * left.rain + kernel[n] * rangeLobesOf(o, cells, n, residual, left.rain)
     for (let k = cells.first; k < gate.length; k++) {
       const w = kernel[n] * gate[k]
       sums.share += (w * cells.inSight[at0 + k]) / 65535
-      if (plain[k] === 0) continue
+      if (w === 0 || plain[k] === 0) continue
       sums.rcsM2 += w * plain[k]
       sums.ground += w * patterned[k] * factor
       sums.left += w * residual[k] * factor
@@ -192,6 +203,7 @@ const emptyPoint = (azimuthDeg: number, rangeM: number): PointClutter => ({
   groundCnrDb: null,
   rainCnrDb: null,
   discreteCnrDb: null,
+  rangeLobeCnrDb: null,
   foldedCnrDb: null,
   residueDb: null,
   cellAreaM2: null,

@@ -1,7 +1,8 @@
-import { compressionGainDb, noiseDbw, type RadarInput } from '../../radar/index.ts'
+import { compressionGainDb, noiseDbw } from '../../radar/index.ts'
 import { fromDb, toDb, wavelengthM } from '../../units/index.ts'
 import type { LandTable } from '../land/landTable.ts'
 import type { ModelMark } from '../types.ts'
+import type { Segment } from './segment.ts'
 
 /** One factor of a clutter figure; start, add and subtract lines of one result (`of`) give it. */
 export interface ClutterLine {
@@ -22,6 +23,7 @@ interface Numbers {
   readonly groundCnrDb: number | null
   readonly rainCnrDb: number | null
   readonly discreteCnrDb: number | null
+  readonly rangeLobeCnrDb: number | null
   readonly sideLobeCnrDb: number | null
   readonly foldedCnrDb: number | null
   readonly gasDb: number
@@ -33,7 +35,7 @@ const RADAR_EQUATION = ['radar equation', 'Skolnik, Introduction to Radar System
 const CELL_AREA = ['resolution cell', 'A = R·θaz·cτc/2·sec ψ'] as const
 
 /** The factors of `clutter_rcs_dbsm` and `clutter_to_noise_db`, each with model and source. */
-export function clutterLines(n: Numbers, r: RadarInput, table: LandTable): ClutterLine[] {
+export function clutterLines(n: Numbers, { radar: r, beams }: Segment, table: LandTable): ClutterLine[] {
   const lines: ClutterLine[] = []
   const put = (
     of: string,
@@ -59,9 +61,10 @@ export function clutterLines(n: Numbers, r: RadarInput, table: LandTable): Clutt
   }
   let soFarDb: number | null = null
   if (n.groundCnrDb !== null && n.rcsDbsm !== null) {
+    const gainDb = r.antenna.gainDbi + (r.receiveAntenna ?? r.antenna).gainDbi
     const terms: [ClutterLine['op'], string, string, number, string, readonly [string, string]][] = [
       ['start', 'peak_power', 'Peak power', toDb(r.peakPowerW), 'dBW', RADAR_EQUATION],
-      ['add', 'antenna_gain', 'Antenna gain, both ways', 2 * r.antenna.gainDbi, 'dB', RADAR_EQUATION],
+      ['add', 'antenna_gain', beams ? `Antenna gain, beams ${beams}` : 'Antenna gain, both ways', gainDb, 'dB', RADAR_EQUATION],
       ['add', 'wavelength', 'Wavelength squared', 20 * Math.log10(wavelengthM(r.frequencyHz)), 'dB m²', RADAR_EQUATION],
       ['add', 'compression', 'Pulse compression τ/τc', compressionGainDb(r), 'dB', RADAR_EQUATION],
       ['add', 'clutter_rcs', 'Clutter RCS', n.rcsDbsm, 'dBsm', RADAR_EQUATION],
@@ -80,6 +83,7 @@ export function clutterLines(n: Numbers, r: RadarInput, table: LandTable): Clutt
   }
   const others: [string, string, number | null, readonly [string, string]][] = [
     ['rain', 'Rain in the beam and gate', n.rainCnrDb, RAIN],
+    ['range_side_lobes', 'Range side lobes of the pulse', n.rangeLobeCnrDb, RANGE_LOBES],
     ['discretes', 'Discrete echoes of obstacles', n.discreteCnrDb, DISCRETES],
     ['side_lobes', 'Azimuth side lobes all round', n.sideLobeCnrDb, SIDE_LOBES],
     ['folded', 'Second-time-around clutter', n.foldedCnrDb, FOLDED],
@@ -95,6 +99,7 @@ export function clutterLines(n: Numbers, r: RadarInput, table: LandTable): Clutt
 }
 const SIDE_LOBES = ['side-lobe term', 'ring mean × two-way level × 360°/θaz'] as const
 const FOLDED = ['range ambiguity', 'sum over R + n·c/2f, strength and gain of the true place'] as const
+const RANGE_LOBES = ['range side lobes', 'level × sum of the gates within the pulse'] as const
 const DISCRETES = ['discrete echo', 'stated RCS through pattern and gate'] as const
 const RAIN = ['rain clutter', 'Marshall and Palmer (1948), Rayleigh scattering, beam after Probert-Jones (1962)'] as const
 const SEA = ['sea clutter', 'Gregers-Hansen and Mital, NRL/MR/5310--12-9346 (2012)'] as const

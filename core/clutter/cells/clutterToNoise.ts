@@ -9,9 +9,9 @@ import type { Work } from '../../work/index.ts'
 import { notesInUse } from '../land/strengthTable.ts'
 import type { ClutterCells, ModelNote } from '../types.ts'
 import { azimuthSum } from './azimuthSum.ts'
-import { type CellModel, type CellRows, cellClutter, gateSums } from './cellSums.ts'
+import type { CellRows } from './cellSums.ts'
 import { decibel } from './decibelTable.ts'
-import { addDiscretes, addRain, addToGates, gatesOfRow, makeGates, passedOver, tooNear } from './gates.ts'
+import { addDiscretes, addToGates, isReceived, makeGates, passedOver, segmentRow } from './gates.ts'
 import { type ClutterOptions, type OptionModel, optionModel } from './optionModel.ts'
 
 /** Cells summed between two yields: a few milliseconds. */
@@ -62,7 +62,7 @@ export function* clutterToNoise(
   const { azimuths, ranges } = grid
   const cells: CellRows = { ...pick(s), inSight: m.inSight, floorM: m.floorM, centresM: centresOf(grid) }
   const o = optionModel(codes, electricalCentreM(site, s.siteGroundM, heightM), r, tiltDeg, grid, options)
-  const { left, weights, kernel } = o
+  const { left, kernel } = o
   const folded = options.foldedRatio
   const beamwidthDeg = r.antenna.azimuthBeamwidthDeg
   const passed = passedOver(o, cells, grid)
@@ -73,14 +73,9 @@ export function* clutterToNoise(
   const known = new Uint32Array(ranges)
   const all = makeGates(grid)
   const rest = left.same === null ? makeGates(grid) : null
-  const out = { patterned: all.row, residual: rest?.row ?? null, plain: null }
   const use = new Float64Array(o.cell.strength.sigma.length)
   for (let i = 0; i < azimuths; i++) {
-    cellClutter(o.cell, cells, i, out, use)
-    gateSums(all.row, weights, all.sums)
-    if (rest) gateSums(rest.row, weights, rest.sums)
-    addRain(i, o, cells, m.state, all, rest)
-    gatesOfRow(i, o, cells, m.state, passed, all, rest, known)
+    for (const segment of o.segments) segmentRow(i, o, segment, cells, m.state, passed, all, rest, known, use)
     if ((i + 1) % rowsPerYield === 0) yield { done: i + 1, total }
   }
   const sideLobe = sideLobesOf(o, r, all.ring, known, grid.rangeStepM, 1)
@@ -95,12 +90,12 @@ export function* clutterToNoise(
     addDiscretes(i, o, grid, beamwidthDeg, 1, all.row)
     const from = i * ranges
     if (folded) for (let j = 0; j < ranges; j++) all.row[j] += folded[from + j]
-    toDecibels(cnrDb, all.row, i, o.cell, cells, m.state, sideLobe)
+    toDecibels(cnrDb, all.row, i, o, cells, m.state, sideLobe)
     if (rest && sideLobeLeft) {
       azimuthSum(rest.gates, azimuths, i, kernel, rest.row)
       addDiscretes(i, o, grid, beamwidthDeg, left.discrete, rest.row)
       if (folded) for (let j = 0; j < ranges; j++) rest.row[j] += folded[from + j] * left.folded
-      toDecibels(residueDb, rest.row, i, o.cell, cells, m.state, sideLobeLeft)
+      toDecibels(residueDb, rest.row, i, o, cells, m.state, sideLobeLeft)
     } else if (residueDb !== cnrDb) for (let at = from; at < from + ranges; at++) residueDb[at] = cnrDb[at] + sameDb
     if ((i + 1) % rowsPerYield === 0) yield { done: azimuths + i + 1, total }
   }
@@ -148,7 +143,7 @@ function toDecibels(
   out: Float32Array,
   main: Float64Array,
   i: number,
-  { antennaM, nearestM }: CellModel,
+  { segments, cell: { antennaM } }: OptionModel,
   cells: CellRows,
   state: Uint8Array,
   sideLobe: Float64Array,
@@ -157,7 +152,7 @@ function toDecibels(
   const n = centresM.length
   const c = 1 / cells.effectiveRadiusM[i]
   for (let j = 0, at = i * n; j < n; j++, at++) {
-    const undefinedHere = state[at] >= CELL.beyondVoid || tooNear(nearestM, antennaM, groundM[at], centresM[j], c)
-    out[at] = undefinedHere ? Number.NaN : decibel(main[j] + sideLobe[j])
+    const received = state[at] < CELL.beyondVoid && isReceived(segments, antennaM, groundM[at], centresM[j], c)
+    out[at] = received ? decibel(main[j] + sideLobe[j]) : Number.NaN
   }
 }

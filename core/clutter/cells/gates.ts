@@ -2,9 +2,10 @@ import { KERNEL_REACH_BEAMWIDTHS } from '../../antenna/index.ts'
 import { type PathTable, passedTable, pathTableAt } from '../../atmosphere/index.ts'
 import { azimuthOf, CELL, type PolarShape } from '../../polar/index.ts'
 import { towardEcho } from '../discretes/discreteEchoes.ts'
-import { rainPerMetre } from '../rain/rainBeam.ts'
-import { type CellRows, slantSquared } from './cellSums.ts'
+import { type RainBeam, rainPerMetre } from '../rain/rainBeam.ts'
+import { type CellRows, cellClutter, gateSums, slantSquared } from './cellSums.ts'
 import type { OptionModel } from './optionModel.ts'
+import { cellsOfSegment, rangeLobes, reachOf, type Segment } from './segment.ts'
 
 /** One kind of sum, all of the clutter or what suppression leaves: a row of cells and its gates, every gate of the grid, sums round the rings. */
 export interface Gates {
@@ -22,61 +23,121 @@ export const makeGates = ({ azimuths, ranges }: PolarShape): Gates => ({
 })
 
 /** Is the cell nearer than the pulse allows? The slant range is worked out only where it can decide. */
-export function tooNear(nearestM: number, antennaM: number, groundM: number, rangeM: number, c: number): boolean {
+function tooNear(nearestM: number, antennaM: number, groundM: number, rangeM: number, c: number): boolean {
   return rangeM <= 1.01 * nearestM && slantSquared(antennaM, groundM, rangeM, c) < nearestM * nearestM
 }
-
-/** Adds the echo of the rain in the gates on one azimuth to their sums. */
-export function addRain(i: number, o: OptionModel, cells: CellRows, state: Uint8Array, all: Gates, rest: Gates | null): void {
-  const { rain, cell, gateM, left } = o
-  if (!rain) return
-  const { centresM, groundM, floorM } = cells
-  const n = centresM.length
-  const c = 1 / cells.effectiveRadiusM[i]
-  for (let j = 0, at = i * n; j < n && centresM[j] <= rain.extentM; j++, at++) {
-    if (state[at] >= CELL.beyondVoid) continue
-    const slantM = Math.sqrt(slantSquared(cell.antennaM, groundM[at], centresM[j], c))
-    const v = gateM * rainPerMetre(rain, cell.antennaM, floorM[at], centresM[j], slantM, c)
-    all.sums[j] += v
-    if (rest) rest.sums[j] += v * left.rain
-  }
+/** Is a cell at a place received with a segment's pulse and beams? */
+function isOwn(s: Segment, antennaM: number, groundM: number, rangeM: number, c: number): boolean {
+  if (s.alone) return !tooNear(s.fromM, antennaM, groundM, rangeM, c)
+  const r2 = slantSquared(antennaM, groundM, rangeM, c)
+  return r2 >= s.fromM * s.fromM && r2 < s.toM * s.toM
+}
+/** Is anything received from a cell? */
+export function isReceived(segments: readonly Segment[], antennaM: number, groundM: number, rangeM: number, c: number): boolean {
+  for (let k = 0; k < segments.length; k++) if (isOwn(segments[k], antennaM, groundM, rangeM, c)) return true
+  return false
 }
 
 /**
- * Radar equation and losses of the gates on one azimuth, each at the slant range of its middle cell; counts the cells known in each ring.
- * `passed`: what the weather lets through, by height and range.
+ * One azimuth of the first pass with one pulse and pair of beams: cells, gates, rain, radar equation and losses, each gate at the slant range of
+ * its middle cell, range side lobes; counts the cells known in each ring. `passed`: what the weather lets through, by height and range.
  */
-export function gatesOfRow(
+export function segmentRow(
   i: number,
   o: OptionModel,
+  segment: Segment,
   cells: CellRows,
   state: Uint8Array,
   passed: PathTable | null,
   all: Gates,
   rest: Gates | null,
   known: Uint32Array,
+  use: Float64Array,
 ): void {
-  const { constant } = o
-  const { antennaM, nearestM } = o.cell
+  const { antennaM } = o.cell
   const { centresM, groundM } = cells
-  const { sums, gates, ring } = all
   const n = centresM.length
   const c = 1 / cells.effectiveRadiusM[i]
-  for (let j = 0, at = i * n; j < n; j++, at++) {
-    if (state[at] >= CELL.beyondVoid || tooNear(nearestM, antennaM, groundM[at], centresM[j], c)) continue
-    known[j]++
-    if (sums[j] === 0) continue
+  const [first, end] = cellsOfSegment(segment, n, o.rangeStepM)
+  const reach = segment.alone ? 0 : reachOf(segment, o.rangeStepM)
+  const half = segment.alone ? 0 : segment.weights.length >> 1
+  const from = Math.max(0, first - reach)
+  const to = Math.min(n, end + reach)
+  cellClutter(o.cell, segment, cells, i, { patterned: all.row, residual: rest?.row ?? null, plain: null }, use, from, to)
+  const gateFrom = from === 0 ? 0 : from + half
+  const gateTo = to === n ? n : to - half
+  gateSums(all.row, segment.weights, all.sums, gateFrom, gateTo)
+  if (rest) gateSums(rest.row, segment.weights, rest.sums, gateFrom, gateTo)
+  if (segment.rain) addRain(i, o, segment, segment.rain, cells, state, all, rest, gateFrom, gateTo)
+  const { constant, fromM } = segment
+  for (let j = gateFrom, at = i * n + gateFrom; j < gateTo; j++, at++) {
+    if (all.sums[j] === 0) continue
+    if (state[at] >= CELL.beyondVoid || tooNear(segment.pulseM, antennaM, groundM[at], centresM[j], c)) {
+      all.sums[j] = 0
+      if (rest) rest.sums[j] = 0
+      continue
+    }
     const r2 = slantSquared(antennaM, groundM[at], centresM[j], c)
     const factor = passed ? (constant * pathTableAt(passed, j, groundM[at])) / (r2 * r2) : constant / (r2 * r2)
-    const v = sums[j] * factor
-    ring[j] += v
-    gates[at] = v
+    all.sums[j] *= factor
+    if (rest) rest.sums[j] *= factor
+  }
+  if (segment.lobe > 0) {
+    addRangeLobes(segment, o.rangeStepM, all.sums, gateFrom, gateTo)
+    if (rest) addRangeLobes(segment, o.rangeStepM, rest.sums, gateFrom, gateTo)
+  }
+  for (let j = first, at = i * n + first; j < end; j++, at++) {
+    if (state[at] >= CELL.beyondVoid) continue
+    if (segment.alone ? tooNear(fromM, antennaM, groundM[at], centresM[j], c) : !isOwn(segment, antennaM, groundM[at], centresM[j], c))
+      continue
+    known[j]++
+    const v = all.sums[j]
+    if (v === 0) continue
+    all.ring[j] += v
+    all.gates[at] = v
     if (rest) {
-      const w = rest.sums[j] * factor
-      rest.ring[j] += w
-      rest.gates[at] = w
+      rest.ring[j] += rest.sums[j]
+      rest.gates[at] = rest.sums[j]
     }
   }
+}
+
+/** Adds the echo of the rain in the gates on one azimuth to their sums. */
+function addRain(
+  i: number,
+  o: OptionModel,
+  { gateM }: Segment,
+  rain: RainBeam,
+  cells: CellRows,
+  state: Uint8Array,
+  all: Gates,
+  rest: Gates | null,
+  from: number,
+  to: number,
+): void {
+  const { antennaM } = o.cell
+  const { centresM, groundM, floorM } = cells
+  const n = centresM.length
+  const c = 1 / cells.effectiveRadiusM[i]
+  for (let j = from, at = i * n + from; j < to && centresM[j] <= rain.extentM; j++, at++) {
+    if (state[at] >= CELL.beyondVoid) continue
+    const slantM = Math.sqrt(slantSquared(antennaM, groundM[at], centresM[j], c))
+    const v = gateM * rainPerMetre(rain, antennaM, floorM[at], centresM[j], slantM, c)
+    all.sums[j] += v
+    if (rest) rest.sums[j] += v * o.left.rain
+  }
+}
+
+/** Adds to gates [from, to) what the range side lobes bring in from the others. */
+function addRangeLobes(s: Segment, rangeStepM: number, echoes: Float64Array, from: number, to: number): void {
+  const summed = runningSum(echoes, from, to)
+  for (let j = from; j < to; j++) echoes[j] += rangeLobes(s, summed, j - from, rangeStepM)
+}
+/** Sums of the first 0, 1, 2 … entries of [from, to). */
+export function runningSum(values: Float64Array, from: number, to: number): Float64Array {
+  const out = new Float64Array(to - from + 1)
+  for (let j = from; j < to; j++) out[j - from + 1] = out[j - from] + values[j]
+  return out
 }
 
 /** What the weather lets through of the power of ground echoes, ratio, in place of dB; null where it takes nothing. */

@@ -1,16 +1,17 @@
-import { azimuthKernel, clutterGainTable } from '../../antenna/index.ts'
+import { azimuthKernel } from '../../antenna/index.ts'
 import { GAS_LIMITS, type PathLoss, pathLoss, RAIN_LOSS_LIMITS, type Weather } from '../../atmosphere/index.ts'
 import type { GroundCode } from '../../landcover/index.ts'
-import { gateLengthM, minimumRangeM, type RadarInput, radarConstantDb } from '../../radar/index.ts'
-import { fromDb, RAD_PER_DEG } from '../../units/index.ts'
+import type { RadarInput } from '../../radar/index.ts'
+import { RAD_PER_DEG } from '../../units/index.ts'
 import { type DiscreteEcho, type PlacedEcho, placeEchoes } from '../discretes/discreteEchoes.ts'
 import type { LandTable } from '../land/landTable.ts'
 import { BUILT_IN_LAND_TABLE } from '../land/landTableData.ts'
 import { strengthTable } from '../land/strengthTable.ts'
-import { type RainBeam, rainBeam } from '../rain/rainBeam.ts'
+import type { RainBeam } from '../rain/rainBeam.ts'
 import type { ImprovementDb, ModelNote } from '../types.ts'
-import { type CellModel, gateWeights } from './cellSums.ts'
+import type { CellModel } from './cellSums.ts'
 import { type Left, leftOf } from './residue.ts'
+import { makeSegments, type Segment } from './segment.ts'
 
 export interface ClutterOptions {
   /** Low-angle land table in place of the built-in one. */
@@ -30,17 +31,15 @@ export interface ClutterOptions {
 /** One option's radar, tilt and weather with the tables its cells share: the same for a polar grid and for single points. */
 export interface OptionModel {
   readonly cell: CellModel
-  /** Echo-to-noise ratio of 1 m² at 1 m. */
-  readonly constant: number
-  readonly gateM: number
+  /** Pulses and beams by slant range, nearest first. */
+  readonly segments: readonly Segment[]
+  readonly rangeStepM: number
   readonly beamRad: number
-  /** Weights of neighbouring range cells in a gate, m, and of neighbouring azimuths in the beam, rad. */
-  readonly weights: Float64Array
+  /** Weights of neighbouring azimuths in the beam, rad. */
   readonly kernel: Float64Array
   readonly table: LandTable
   readonly left: Left
   readonly loss: PathLoss | null
-  readonly rain: RainBeam | null
   readonly discretes: readonly PlacedEcho[]
   /** Words of the weather. */
   readonly notes: readonly ModelNote[]
@@ -63,29 +62,24 @@ export function optionModel(
   const sea = weather ? { seaState: weather.seaState, polarisation: r.polarisation } : null
   const left = leftOf(codes, improvementDb)
   const loss = weather ? pathLoss(weather, r.frequencyHz, r.polarisation) : null
-  const rain = weather ? rainBeam(weather, r, tiltDeg) : null
-  const gateM = gateLengthM(r)
+  const segments = makeSegments(r, tiltDeg, grid.rangeStepM, weather)
   const { azimuthBeamwidthDeg } = r.antenna
   return {
     cell: {
       antennaM,
       strength: strengthTable(codes, r.frequencyHz, table, sea),
-      gain: clutterGainTable(r.antenna, tiltDeg),
-      nearestM: minimumRangeM(r),
       left: left.byCode,
       tideM: weather?.tideM ?? 0,
     },
-    constant: fromDb(radarConstantDb(r)),
-    gateM,
+    segments,
+    rangeStepM: grid.rangeStepM,
     beamRad: azimuthBeamwidthDeg * RAD_PER_DEG,
-    weights: gateWeights(gateM, grid.rangeStepM),
     kernel: azimuthKernel(azimuthBeamwidthDeg, grid.azimuthStepDeg),
     table,
     left,
     loss,
-    rain,
-    discretes: placeEchoes(discretes, antennaM, r, tiltDeg, loss, gateM, grid.rangeStepM),
-    notes: weather ? weatherNotes(weather, r.frequencyHz, rain) : [],
+    discretes: placeEchoes(discretes, antennaM, segments, tiltDeg, loss, grid.rangeStepM),
+    notes: weather ? weatherNotes(weather, r.frequencyHz, segments[0]?.rain ?? null) : [],
   }
 }
 

@@ -12,9 +12,11 @@ import { chooseRow, type LandChoice } from '../land/landRow.ts'
 import { CODE_KIND, grazingDegOf, isOverOpen, OVER_OPEN_WITHIN_M } from '../land/strengthTable.ts'
 import { rainPerMetre } from '../rain/rainBeam.ts'
 import type { ClutterCells } from '../types.ts'
-import { type CellRows, cellClutter, slantSquared } from './cellSums.ts'
+import { type CellRows, cellClutter, gateSums, slantSquared } from './cellSums.ts'
 import { clutterToNoise, electricalCentreM, sideLobeLevel, sideLobeShare } from './clutterToNoise.ts'
+import { runningSum } from './gates.ts'
 import { type ClutterOptions, type OptionModel, optionModel } from './optionModel.ts'
+import { rangeLobes, reachOf, type Segment, segmentOf } from './segment.ts'
 
 export interface PointOptions extends ClutterOptions {
   /** Side-lobe term per gate of the grid and what is left of it, from `clutterToNoise` for the same option; worked out when absent. */
@@ -47,41 +49,49 @@ export function pointOption(
   return { ...model, g, site, heightM, earth, r, tiltDeg, grid, options }
 }
 
-/** Cells on chosen azimuths that share in the gate around a ground range. */
+/** Cells on chosen azimuths that share in the gate around a ground range, for one pulse and pair of beams. */
 export interface GateCells extends CellRows {
+  readonly segment: Segment
+  /** Cells before this one of a row only tell what lies toward the radar. */
   readonly first: number
+  /** First cell whose own gate is whole. */
+  readonly gatesFrom: number
   readonly state: Uint8Array
   /** Weight of each cell of a row, m; 0 for those that only tell what lies toward the radar. */
   readonly gate: readonly number[]
   /** Which of them lies on the range asked for. */
   readonly middle: number
 }
-export function gateCells(o: PointOption, azimuthsDeg: readonly number[], rangeM: number): GateCells {
-  const { grid, weights, cell } = o
+export function gateCells(o: PointOption, segment: Segment, azimuthsDeg: readonly number[], rangeM: number): GateCells {
+  const { grid, cell } = o
+  const { weights, gateM } = segment
   const half = weights.length >> 1
+  const reach = reachOf(segment, grid.rangeStepM)
   const urban = cell.strength.kinds.some((k) => k & CODE_KIND.urban)
   const before = urban ? Math.ceil(OVER_OPEN_WITHIN_M / grid.rangeStepM) : 0
   // Cells behind the site are left out; the rest stand for the gate.
   const offsets: number[] = []
-  for (let k = -half - before; k <= half; k++) if (rangeM + k * grid.rangeStepM > 0) offsets.push(k)
+  for (let k = -reach - before; k <= reach; k++) if (rangeM + k * grid.rangeStepM > 0) offsets.push(k)
   const centres = offsets.map((k) => rangeM + k * grid.rangeStepM)
   const own = offsets.map((k) => weights[k + half] ?? 0)
-  const whole = o.gateM / own.reduce((s, w) => s + w, 0)
+  const whole = gateM / own.reduce((s, w) => s + w, 0)
   const swept = sweepRays(o.g, o.site, o.heightM, o.earth, azimuthsDeg, centres, grid.rangeStepM)
+  const first = offsets.findIndex((k) => k >= -reach)
   return {
     ...swept,
+    segment,
     centresM: Float64Array.from(centres),
-    first: offsets.findIndex((k) => k >= -half),
+    first,
+    gatesFrom: offsets[first] > -reach ? first : first + half,
     gate: own.map((w) => w * whole),
     middle: offsets.indexOf(0),
   }
 }
 
-/** Slant range to the middle cell of a row, m; NaN where its ground is unknown. */
-export function slantOf({ cell }: PointOption, cells: GateCells, row: number): number {
-  const { middle, gate } = cells
-  const groundM = cells.groundM[row * gate.length + middle]
-  return Math.sqrt(slantSquared(cell.antennaM, groundM, cells.centresM[middle], 1 / cells.effectiveRadiusM[row]))
+/** Slant range to cell k of a row, m; NaN where its ground is unknown. */
+export function slantOf({ cell }: PointOption, cells: GateCells, row: number, k = cells.middle): number {
+  const groundM = cells.groundM[row * cells.gate.length + k]
+  return Math.sqrt(slantSquared(cell.antennaM, groundM, cells.centresM[k], 1 / cells.effectiveRadiusM[row]))
 }
 
 /** Row of the land table one cell takes; null where its ground code is unknown. */
@@ -102,27 +112,40 @@ export function choiceOf(o: PointOption, cells: GateCells, row: number, k: numbe
   return chooseRow(code.terrain, cells.relief[at], depressionDeg, o.r.frequencyHz, context, o.table)
 }
 
-/** Two-way losses of the weather to the middle cell of a row, dB. */
-export function lossesOf(o: PointOption, cells: GateCells, row: number): { gasDb: number; rainDb: number } {
-  const { middle, gate, centresM } = cells
+/** Two-way losses of the weather to cell k of a row, dB. */
+export function lossesOf(o: PointOption, cells: GateCells, row: number, k = cells.middle): { gasDb: number; rainDb: number } {
   if (!o.loss) return { gasDb: 0, rainDb: 0 }
-  return twoWayLossParts(o.loss, o.cell.antennaM, cells.groundM[row * gate.length + middle], centresM[middle], slantOf(o, cells, row))
+  const groundM = cells.groundM[row * cells.gate.length + k]
+  return twoWayLossParts(o.loss, o.cell.antennaM, groundM, cells.centresM[k], slantOf(o, cells, row, k))
 }
 
-/** Radar equation with losses for 1 m² in the middle cell of a row; 0 where its ground is unknown. */
-export function perSquareMetre(o: PointOption, cells: GateCells, row: number): number {
-  if (isUnknown(cells.state[row * cells.gate.length + cells.middle])) return 0
-  const { gasDb, rainDb } = lossesOf(o, cells, row)
-  return (o.constant * fromDb(-gasDb - rainDb)) / slantOf(o, cells, row) ** 4
+/** Radar equation with losses for 1 m² in cell k of a row; 0 where its ground is unknown. */
+export function perSquareMetre(o: PointOption, cells: GateCells, row: number, k = cells.middle): number {
+  if (isUnknown(cells.state[row * cells.gate.length + k])) return 0
+  const { gasDb, rainDb } = lossesOf(o, cells, row, k)
+  return (cells.segment.constant * fromDb(-gasDb - rainDb)) / slantOf(o, cells, row, k) ** 4
 }
 
-/** Echo of the rain in the gate of a row, m² per radian of azimuth. */
-export function rainOf(o: PointOption, cells: GateCells, row: number): number {
-  const { middle, gate, centresM } = cells
-  const at = row * gate.length + middle
-  if (!o.rain || isUnknown(cells.state[at])) return 0
+/** Echo of the rain in the gate around cell k of a row, m² per radian of azimuth. */
+export function rainOf(o: PointOption, cells: GateCells, row: number, k = cells.middle): number {
+  const { gate, centresM, segment } = cells
+  const at = row * gate.length + k
+  if (!segment.rain || isUnknown(cells.state[at])) return 0
   const c = 1 / cells.effectiveRadiusM[row]
-  return o.gateM * rainPerMetre(o.rain, o.cell.antennaM, cells.floorM[at], centresM[middle], slantOf(o, cells, row), c)
+  return segment.gateM * rainPerMetre(segment.rain, o.cell.antennaM, cells.floorM[at], centresM[k], slantOf(o, cells, row, k), c)
+}
+
+/** What range side lobes bring into the middle gate of a row from its cells of clutter per metre, ratio per radian; `rainLeft` of the rain counts. */
+export function rangeLobesOf(o: PointOption, cells: GateCells, row: number, perMetre: Float64Array, rainLeft: number): number {
+  const { segment, gate, gatesFrom, middle } = cells
+  if (!(segment.lobe > 0)) return 0
+  const end = gate.length - (segment.weights.length >> 1)
+  const echoes = new Float64Array(gate.length)
+  gateSums(perMetre, segment.weights, echoes, gatesFrom, end)
+  for (let k = gatesFrom; k < end; k++)
+    echoes[k] =
+      slantOf(o, cells, row, k) < segment.pulseM ? 0 : (echoes[k] + rainOf(o, cells, row, k) * rainLeft) * perSquareMetre(o, cells, row, k)
+  return rangeLobes(segment, runningSum(echoes, gatesFrom, end), middle - gatesFrom, o.grid.rangeStepM)
 }
 
 /** Discrete echoes in the gate and beam of a place, ratio to noise. */
@@ -173,8 +196,10 @@ function sideLobesOfGrid(o: PointOption): ClutterCells {
 
 function sideLobeOfRing(o: PointOption, rangeM: number): SideLobe {
   const { cell, grid } = o
+  const segment = segmentOf(o.segments, rangeM)
+  if (!segment) return { all: 0, left: 0 }
   const azimuths = Array.from({ length: grid.azimuths }, (_, i) => i * grid.azimuthStepDeg)
-  const cells = gateCells(o, azimuths, rangeM)
+  const cells = gateCells(o, segment, azimuths, rangeM)
   const patterned = new Float64Array(cells.gate.length)
   const residual = new Float64Array(cells.gate.length)
   const use = new Float64Array(cell.strength.sigma.length)
@@ -182,11 +207,11 @@ function sideLobeOfRing(o: PointOption, rangeM: number): SideLobe {
   for (let i = 0; i < azimuths.length; i++) {
     if (isUnknown(cells.state[i * patterned.length + cells.middle])) continue
     known++
-    cellClutter(cell, cells, i, { patterned, residual, plain: null }, use)
+    cellClutter(cell, segment, cells, i, { patterned, residual, plain: null }, use, cells.first)
     const factor = perSquareMetre(o, cells, i)
     const rain = rainOf(o, cells, i)
-    all += rain * factor
-    left += rain * o.left.rain * factor
+    all += rain * factor + rangeLobesOf(o, cells, i, patterned, 1)
+    left += rain * o.left.rain * factor + rangeLobesOf(o, cells, i, residual, o.left.rain)
     for (let k = cells.first; k < patterned.length; k++) {
       all += cells.gate[k] * patterned[k] * factor
       left += cells.gate[k] * residual[k] * factor

@@ -2,9 +2,9 @@ import { elevationGainForClutter } from '../../antenna/index.ts'
 import { type PathLoss, twoWayLossDb } from '../../atmosphere/index.ts'
 import { type Earth, effectiveRadiusM, elevationAngleDeg, slantRangeM } from '../../geodesy/index.ts'
 import { sightPoint } from '../../masking/index.ts'
-import { type RadarInput, radarConstantDb } from '../../radar/index.ts'
 import { type Ground, type Site, siteGround } from '../../terrain/index.ts'
-import { fromDb, toDb, wrap180 } from '../../units/index.ts'
+import { fromDb, wrap180 } from '../../units/index.ts'
+import { type Segment, segmentOf } from '../cells/segment.ts'
 
 /** An obstacle with a radar cross-section, in sight from one mast height; its echo comes from its top. */
 export interface DiscreteEcho {
@@ -52,16 +52,19 @@ export interface PlacedEcho {
 export function placeEchoes(
   echoes: readonly DiscreteEcho[],
   antennaM: number,
-  r: RadarInput,
+  segments: readonly Segment[],
   tiltDeg: number,
   loss: PathLoss | null,
-  gateM: number,
   rangeStepM: number,
 ): PlacedEcho[] {
-  return echoes.map(({ name, azimuthDeg, rangeM, slantM, elevationDeg, topM, rcsM2 }) => {
-    const gainDb = 2 * toDb(elevationGainForClutter(r.antenna, elevationDeg, tiltDeg))
-    const lossDb = twoWayLossDb(loss, antennaM, topM, rangeM, slantM)
-    const ratio = fromDb(radarConstantDb(r) + toDb(rcsM2) + gainDb - lossDb - 40 * Math.log10(slantM))
+  return echoes.flatMap(({ name, azimuthDeg, rangeM, slantM, elevationDeg, topM, rcsM2 }) => {
+    const segment = segmentOf(segments, slantM)
+    if (!segment) return []
+    const { radar, constant, gateM } = segment
+    const transmit = elevationGainForClutter(radar.antenna, elevationDeg, tiltDeg)
+    const receive = radar.receiveAntenna ? elevationGainForClutter(radar.receiveAntenna, elevationDeg, tiltDeg) : transmit
+    const passed = fromDb(-twoWayLossDb(loss, antennaM, topM, rangeM, slantM))
+    const ratio = (constant * rcsM2 * transmit * receive * passed) / slantM ** 4
     return { name, azimuthDeg, rangeM, ratio: ratio * Math.min(1, gateM / rangeStepM), reachM: Math.max(gateM, rangeStepM) / 2 }
   })
 }

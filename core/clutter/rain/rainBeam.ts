@@ -1,4 +1,4 @@
-import { type AntennaInput, elevationGainForClutter } from '../../antenna/index.ts'
+import { elevationGainForClutter } from '../../antenna/index.ts'
 import type { Weather } from '../../atmosphere/index.ts'
 import { circularOf, type RadarInput } from '../../radar/index.ts'
 import { DEG_PER_RAD, fromDb } from '../../units/index.ts'
@@ -34,14 +34,17 @@ export function rainBeam(w: Weather, r: RadarInput, tiltDeg: number): RainBeam |
     eta: rainReflectivity(r.frequencyHz, w.rainRateMmH) * fromDb(-rejected),
     topM: w.rainTopM,
     extentM: w.rainExtentM,
-    upTo: gainIntegral(r.antenna, tiltDeg),
+    upTo: gainIntegral(r, tiltDeg),
     notes: outside ? [NOTE_RAIN_FREQUENCY] : [],
   }
 }
 
 /** Simpson's rule between the entries, in elevation. */
-function gainIntegral(antenna: AntennaInput, tiltDeg: number): Float64Array {
-  const twoWay = (e: number): number => elevationGainForClutter(antenna, e * DEG_PER_RAD, tiltDeg) ** 2
+function gainIntegral({ antenna, receiveAntenna }: RadarInput, tiltDeg: number): Float64Array {
+  const twoWay = (e: number): number => {
+    const g = elevationGainForClutter(antenna, e * DEG_PER_RAD, tiltDeg)
+    return g * (receiveAntenna ? elevationGainForClutter(receiveAntenna, e * DEG_PER_RAD, tiltDeg) : g)
+  }
   const out = new Float64Array(ENTRIES + 1)
   let from = -Math.PI / 2
   let before = twoWay(from)
