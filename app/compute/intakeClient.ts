@@ -14,6 +14,7 @@ export function groundRequest(doc: StudyDoc): GroundRequest {
     obstacles: doc.obstacles?.file ?? null,
     roads: doc.roads?.file ?? null,
     lowAngleLandTable: doc.tables?.lowAngleLand ?? null,
+    needs: doc.needs ?? [],
     circles: doc.candidates.map((c) => ({ lon: c.lon, lat: c.lat, radiusM })),
   }
 }
@@ -68,11 +69,26 @@ export function makeGroundReader(): (
   return async (files, doc, onProgress) => {
     stop()
     const blobs = new Map([...files].map(([name, file]) => [name, file.blob]))
-    const reading = readGroundInWorker(groundRequest(doc), blobs, onProgress)
+    const request = groundRequest(doc)
+    // a need whose file is not here yet is not assessed; the ground does not wait for it
+    const needs = (request.needs ?? []).filter((n) => n.file === undefined || blobs.has(n.file))
+    const reading = readGroundInWorker({ ...request, needs }, blobs, onProgress)
     stop = reading.stop
-    const { shape, heightM, code, codes, obstacles, roads, landTable, verticalErrorM, files: read, warnings } = await reading.result
+    const {
+      shape,
+      heightM,
+      code,
+      codes,
+      obstacles,
+      roads,
+      landTable,
+      needPlaces,
+      verticalErrorM,
+      files: read,
+      warnings,
+    } = await reading.result
     return {
-      ground: { shape, heightM, code, codes, obstacles, verticalErrorM, landTable },
+      ground: { shape, heightM, code, codes, obstacles, verticalErrorM, landTable, needPlaces },
       roads,
       obstacles,
       notes: [...read.map((f) => `${f.name}: ${f.describe}`), ...warnings],

@@ -1,8 +1,8 @@
 import { useCallback, useEffect, useLayoutEffect, useMemo, useRef, useState } from 'react'
 import { Button } from 'react-aria-components'
-import { geodesicDirect, type View } from '../../core/index.ts'
+import { geodesicDirect, type LonLat, pixelAtLonLat, type View } from '../../core/index.ts'
 import { MAP_WORDS } from '../words/index.ts'
-import { fitted, openingView, resized, zoomed } from './camera.ts'
+import { fitted, openingView, panned, resized, zoomed } from './camera.ts'
 import { Legend } from './face/Legend.tsx'
 import { Progress } from './face/Progress.tsx'
 import { ReadOut } from './face/ReadOut.tsx'
@@ -52,6 +52,8 @@ export function MapPane(props: MapPaneProps) {
   )
   const fits = (['range', 'candidates', 'ground'] as const).filter((f) => placesOf(f).length > (f === 'candidates' ? 1 : 0))
   useFirstFit(stage, camera, props, fits.includes('range') ? 'range' : 'ground', showWhole)
+  useFirstCandidate(site, props.groundSerial, () => showWhole('range'))
+  useFreePart(stage, camera, props.lower !== null, site, props.cell)
   const input = useMapInput(stage, cursor, camera, props, () => showWhole(fits.includes('ground') ? 'ground' : 'range'))
   const cards = useCards(stage, view, show.layer, props.lower !== null)
   const hint = props.placing ? MAP_WORDS.placing : input.nudging ? MAP_WORDS.movingByKeys : MAP_WORDS.pointHint
@@ -114,7 +116,7 @@ export function MapPane(props: MapPaneProps) {
       </div>
       {empty && props.empty ? <div className="map-empty">{props.empty}</div> : null}
       <div className="map-foot">
-        {empty ? <span /> : <Legend layer={show.layer} units={units} night={night} marks={props.marks} />}
+        {empty ? <span /> : <Legend layer={show.layer} units={units} night={night} marks={props.marks} losses={props.losses} />}
         <div className="map-corner">
           {empty ? null : <ScaleBar view={view} units={units} />}
           {empty ? null : <ReadOut client={props.client} hub={hub} site={site} units={units} hint={hint} />}
@@ -180,6 +182,55 @@ function useFirstFit(
   }, [stage, camera, once])
   // biome-ignore lint/correctness/useExhaustiveDependencies: a new ground is looked at whole
   useLayoutEffect(once, [props.groundSerial, props.corners])
+}
+
+/** The first candidate on a ground is shown with its whole range. */
+function useFirstCandidate(site: LonLat | null, serial: number | null, show: () => void) {
+  const before = useRef({ site, serial })
+  // biome-ignore lint/correctness/useExhaustiveDependencies: only a place where there was none
+  useEffect(() => {
+    const first = before.current.site === null && site !== null && before.current.serial === serial && serial !== null
+    before.current = { site, serial }
+    if (first) show()
+  }, [site, serial])
+}
+
+/** While a chart lies over the lower half, the candidate (with the cell, where both fit) stands in the middle of what is left; the view goes back after it, unless it was moved. */
+function useFreePart(
+  stage: React.RefObject<HTMLDivElement | null>,
+  camera: Channel<View>,
+  lower: boolean,
+  site: LonLat | null,
+  cell: LonLat | null,
+) {
+  const back = useRef<{ from: View; to: View } | null>(null)
+  const places = useRef({ site, cell })
+  places.current = { site, cell }
+  useEffect(() => {
+    const host = stage.current
+    const { site, cell } = places.current
+    if (!lower || !host?.parentElement || !site) return
+    const from = camera.get()
+    const view = resized(from, host.clientWidth, host.clientHeight)
+    const foot = host.parentElement.querySelector<HTMLElement>('.map-foot')?.offsetHeight ?? 0
+    const head = host.parentElement.querySelector<HTMLElement>('.map-head')?.offsetHeight ?? 0
+    const left = insetOf(host)
+    const free = { width: view.width - left, height: view.height - foot - head - 36 }
+    const [x, y] = pixelAtLonLat(view, site)
+    const [cx, cy] = cell ? pixelAtLonLat(view, cell) : [x, y]
+    const both = Math.abs(cx - x) < free.width - 48 && Math.abs(cy - y) < free.height - 48
+    const [px, py] = both ? [(x + cx) / 2, (y + cy) / 2] : [x, y]
+    const to = panned(view, left + free.width / 2 - px, head + 24 + free.height / 2 - py)
+    back.current = { from, to }
+    camera.set(to)
+    return () => {
+      const now = camera.get()
+      const then = back.current?.to
+      const still = then && now.worldX === then.worldX && now.worldY === then.worldY && now.worldPerPx === then.worldPerPx
+      if (back.current && still) camera.set({ ...back.current.from, night: now.night })
+      back.current = null
+    }
+  }, [stage, camera, lower])
 }
 
 /** Where cards lie over the map, so that ring labels keep clear of them. */

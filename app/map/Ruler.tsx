@@ -52,6 +52,10 @@ export function Ruler(props: RulerProps) {
   const heightM = mine?.heightM ?? option.heightM
   const isStated = stated.includes(heightM)
   const now = geometry.valuesAt(heightM)
+  // usable and short of suppression are shares of needs: without one the strips show the ground itself
+  const asked = (ladder?.needMet.length ?? 0) > 0
+  const seen = asked ? 'usable' : 'inSight'
+  const echo = asked ? 'short' : 'clutter'
   const place = { lon: candidate.lon, lat: candidate.lat }
   const tryHeight = (h: number, resting: boolean) => {
     if (resting && stated.includes(h)) {
@@ -83,12 +87,12 @@ export function Ruler(props: RulerProps) {
       <p className="ruler-title">{MAP_WORDS.mast}</p>
       <dl className="ruler-now">
         <div className="in-sight">
-          <dt>{MAP_WORDS.strips.inSight}</dt>
-          <dd>{now ? textOf(formatMetPct(now.inSightPct)) : NO_VALUE}</dd>
+          <dt title={MAP_WORDS.stripHints[seen]}>{MAP_WORDS.strips[seen]}</dt>
+          <dd>{now ? textOf(formatMetPct(asked ? now.usablePct : now.inSightPct)) : NO_VALUE}</dd>
         </div>
         <div className="clutter">
-          <dt>{MAP_WORDS.strips.clutter}</dt>
-          <dd>{now ? textOf(formatAreaUp(now.over40Km2, units)) : NO_VALUE}</dd>
+          <dt title={MAP_WORDS.stripHints[echo]}>{MAP_WORDS.strips[echo]}</dt>
+          <dd>{now ? textOf(formatAreaUp(asked ? now.shortKm2 : now.over40Km2, units)) : NO_VALUE}</dd>
         </div>
       </dl>
       <div ref={box} className="ruler-box">
@@ -99,6 +103,7 @@ export function Ruler(props: RulerProps) {
           topPad={TOP_PAD}
           stripPx={stripPx}
           geometry={geometry}
+          strips={asked ? [geometry.usable, geometry.short] : [geometry.inSight, geometry.clutter]}
           stated={stated}
           heightM={heightM}
           topM={topM}

@@ -1,5 +1,5 @@
 import type { ReactNode } from 'react'
-import type { Answer, HorizonRow, LayerId, LonLat, ModelMark, Obstacle, OptionRef, Road } from '../../core/index.ts'
+import type { Answer, HorizonRow, LayerId, LonLat, LossCause, ModelMark, Obstacle, OptionRef, Road } from '../../core/index.ts'
 import type { StudyClient } from '../compute/client.ts'
 import type { UnitSystem } from '../words/index.ts'
 
@@ -13,13 +13,14 @@ export interface MapCandidate {
   /** Never empty: the antenna's own tilt when none are stated. */
   readonly tiltsDeg: readonly number[]
 }
-/** A need as the map draws it: the ring piece it asks for around the candidate on show. */
+/** A need as the map draws it: the ring piece it asks for around the candidate on show; a polygon has none and is seen in its layers. */
 export interface MapNeed {
   readonly id: string
   readonly name: string
   readonly fromRangeM: number
   readonly toRangeM: number
   readonly sectorDeg: readonly [number, number]
+  readonly ring: boolean
 }
 /** What the sentence says. */
 export interface MapShow {
@@ -86,6 +87,8 @@ export interface MapPaneProps {
   readonly night: boolean
   /** Words that belong beside the legend, such as `from memory`. */
   readonly marks: readonly { readonly mark: ModelMark | string; readonly about: string }[]
+  /** What keeps the need on show from being usable, largest first, %; null while not worked out. For the legend of the causes. */
+  readonly losses: readonly { readonly cause: LossCause; readonly pct: number }[] | null
   /** The next click on the map places a candidate. */
   readonly placing: boolean
   readonly onPlace: (at: LonLat) => void

@@ -61,7 +61,7 @@ export const LAYER_WORDS: Record<LayerId, LayerWords> = {
     title: 'Clutter-to-noise',
     of: 'dB, mean, one pulse',
     ends: ['faint', 'severe'],
-    note: 'bare: below noise · hatched: masked · land table from memory',
+    note: 'bare: below noise · hatched: masked · colour under hatch: through side lobes · land table from memory',
     meaning:
       'Mean clutter of land, sea, rain and single obstacles against receiver noise in each resolution cell, per pulse, before suppression and short-range sensitivity',
   },

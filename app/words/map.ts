@@ -1,4 +1,4 @@
-import type { LayerId, Probe } from '../../core/index.ts'
+import { type LayerId, NEED_LAYERS, type Probe } from '../../core/index.ts'
 import {
   formatAngle,
   formatAzimuth,
@@ -57,7 +57,16 @@ export const MAP_WORDS = {
   stretch: 'Stretch',
   mast: 'Mast, m',
   mastOf: 'Mast height, m above ground',
-  strips: { inSight: 'in sight', clutter: '> 40\u202fdB' },
+  strips: { usable: 'usable', short: 'suppression short', inSight: 'in sight', clutter: '> 40\u202fdB' },
+  stripHints: {
+    usable: 'Share of the area of the first need that is usable',
+    short: 'Area of all needs where more suppression is needed than there is',
+    inSight: 'Share of known ground in sight',
+    clutter: 'Ground with C/N over 40 dB',
+  },
+  stripFull: '100\u202f%',
+  /** Classes of the layer `usable`, from 1. */
+  usableClasses: ['in sight', 'detectable', 'usable'],
   dragMast: 'drag the mast',
   mastKeys: 'Arrows step through stated heights, Shift for 0.5 m between',
   addHeight: (text: string) => `Add ${text}`,
@@ -128,7 +137,15 @@ export function legendStops(
 
 const ABOUT_SUPPRESSION = /^suppression/i
 const ABOUT_CLUTTER = /clutter|land table/i
-const CLUTTER_LAYERS: readonly LayerId[] = ['clutter-strength', 'clutter-to-noise', 'suppression-needed']
+const CLUTTER_LAYERS: readonly LayerId[] = [
+  'clutter-strength',
+  'clutter-to-noise',
+  'suppression-needed',
+  'usable',
+  'probability-of-detection',
+  'signal-margin',
+  'cause-of-loss',
+]
 
 /** The line under a legend, and the marks that stand under it in words: those of the layer itself, then those of the result that concern it. */
 export function legendMarks(
@@ -138,7 +155,7 @@ export function legendMarks(
   const parts = LAYER_WORDS[layer].note.split(' · ')
   const own = parts.filter((p) => p.includes('from memory'))
   const concerns = marks.filter((m) =>
-    ABOUT_SUPPRESSION.test(m.about) ? layer === 'suppression-needed' : CLUTTER_LAYERS.includes(layer) || !ABOUT_CLUTTER.test(m.about),
+    ABOUT_SUPPRESSION.test(m.about) ? NEED_LAYERS.includes(layer) : CLUTTER_LAYERS.includes(layer) || !ABOUT_CLUTTER.test(m.about),
   )
   const others = concerns
     .filter((m) => !(m.mark === 'from memory' && own.length > 0 && /land/i.test(m.about)))

@@ -1,69 +1,43 @@
-import { type LayerId, layerInfo, rampHex } from '../../../core/index.ts'
-import { LAYER_WORDS, legendMarks, legendStops, type UnitSystem } from '../../words/index.ts'
+import { type LayerId, LOSS_CAUSES, layerInfo, lossCode, rampHex } from '../../../core/index.ts'
+import { formatLossPct, LAYER_WORDS, LOSS_WORDS, legendMarks, legendStops, MAP_WORDS, textOf, type UnitSystem } from '../../words/index.ts'
 import type { MapPaneProps } from '../types.ts'
 
 const WIDTH = 232
 /** Labels nearer than this to the one before are left out, px. */
 const APART = 26
 
-/** Title, ramp with labelled stops, what bare and hatched mean, and marks in words. */
-export function Legend({
-  layer,
-  units,
-  night,
-  marks,
-}: {
-  layer: LayerId
-  units: UnitSystem
-  night: boolean
-  marks: MapPaneProps['marks']
-}) {
-  const { ramp, hatchMasked } = layerInfo(layer)
+export interface LegendProps {
+  readonly layer: LayerId
+  readonly units: UnitSystem
+  readonly night: boolean
+  readonly marks: MapPaneProps['marks']
+  readonly losses: MapPaneProps['losses']
+}
+/** Title, ramp with labelled stops or a colour per class, what bare and hatched mean, and marks in words. */
+export function Legend({ layer, units, night, marks, losses }: LegendProps) {
   const words = LAYER_WORDS[layer]
-  const { unit, labels } = legendStops(layer, ramp.stops, units)
+  const { unit } = legendStops(layer, layerInfo(layer).ramp.stops, units)
   const { note, warned } = legendMarks(layer, marks)
-  const colours = Array.from({ length: 33 }, (_, n) => rampHex(ramp, ramp.low + ((ramp.high - ramp.low) * n) / 32, night))
-  const kept: { at: number; text: string }[] = []
-  for (const l of labels) if (kept.length === 0 || (l.at - kept[kept.length - 1]!.at) * WIDTH >= APART) kept.push(l)
+  // beside an open chart only the unit stays of what the value is
+  const [short = '', ...more] = words.of.split(', ')
   return (
     <section className="map-card legend" aria-label={`Legend: ${words.title}`}>
       <h3>
-        {words.title} <span className="ink-3">{unit ? `${unit} ${words.of}` : words.of}</span>
+        {words.title}{' '}
+        <span className="ink-3">
+          {unit ? `${unit} ${short}` : short}
+          {more.length > 0 ? <span className="spare">, {more.join(', ')}</span> : null}
+        </span>
       </h3>
-      {layer === 'masked' ? (
-        <ul className="swatches">
-          <li>
-            <Swatch kind="masked" /> masked
-          </li>
-          <li>
-            <Swatch kind="marginal" /> marginal
-          </li>
-          <li>
-            <Swatch kind="unknown" /> unknown
-          </li>
-        </ul>
-      ) : (
-        <>
-          <div className="ramp" style={{ background: `linear-gradient(to right, ${colours.join(', ')})` }} />
-          <div className="stops" aria-hidden>
-            {kept.map((l) => (
-              <span key={l.at} style={{ left: `${l.at * 100}%` }} className={l.at < 0.02 ? 'first' : l.at > 0.98 ? 'last' : ''}>
-                {l.text}
-              </span>
-            ))}
-          </div>
-          {words.ends ? (
-            <div className="ends ink-3">
-              <span>{words.ends[0]}</span>
-              <span>{words.ends[1]}</span>
-            </div>
-          ) : null}
-        </>
-      )}
+      <Key layer={layer} units={units} night={night} losses={losses} />
       {layer === 'masked' ? null : (
         <p className="note">
-          {hatchMasked ? <Swatch kind="masked" /> : null}
-          <span>{note}</span>
+          {note.split(' · ').map((part) => (
+            <span key={part} className="part">
+              {part.startsWith('hatched: masked') ? <Swatch kind="masked" /> : null}
+              {part}
+            </span>
+          ))}
         </p>
       )}
       {warned.map((m) => (
@@ -73,6 +47,68 @@ export function Legend({
       ))}
     </section>
   )
+}
+
+/** What the colours mean: patterns of states, a colour per class, or a ramp. */
+function Key({ layer, units, night, losses }: Omit<LegendProps, 'marks'>) {
+  const { ramp, classes } = layerInfo(layer)
+  if (layer === 'masked')
+    return (
+      <ul className="swatches">
+        {(['masked', 'marginal', 'unknown'] as const).map((kind) => (
+          <li key={kind}>
+            <Swatch kind={kind} />
+            {kind}
+          </li>
+        ))}
+      </ul>
+    )
+  if (classes)
+    return (
+      <ul className="swatches classes">
+        {classesOf(layer, losses).map((c) => (
+          <li key={c.value}>
+            <i className="swatch" style={{ background: rampHex(ramp, c.value, night) ?? undefined }} aria-hidden />
+            {c.words} {c.share ? <span className="ink-3">{c.share}</span> : null}
+          </li>
+        ))}
+      </ul>
+    )
+  const { labels } = legendStops(layer, ramp.stops, units)
+  const ends = LAYER_WORDS[layer].ends
+  const colours = Array.from({ length: 33 }, (_, n) => rampHex(ramp, ramp.low + ((ramp.high - ramp.low) * n) / 32, night))
+  const kept: { at: number; text: string }[] = []
+  for (const l of labels) if (kept.length === 0 || (l.at - kept[kept.length - 1]!.at) * WIDTH >= APART) kept.push(l)
+  return (
+    <div className="scale-key">
+      <div className="ramp" style={{ background: `linear-gradient(to right, ${colours.join(', ')})` }} />
+      <div className="stops" aria-hidden>
+        {kept.map((l) => (
+          <span key={l.at} style={{ left: `${l.at * 100}%` }} className={l.at < 0.02 ? 'first' : l.at > 0.98 ? 'last' : ''}>
+            {l.text}
+          </span>
+        ))}
+      </div>
+      {ends ? (
+        <div className="ends ink-3">
+          <span>{ends[0]}</span>
+          <span>{ends[1]}</span>
+        </div>
+      ) : null}
+    </div>
+  )
+}
+
+interface ClassKey {
+  readonly value: number
+  readonly words: string
+  readonly share: string
+}
+/** Classes of a layer with their words; causes that the need on show has, with their share of it, or all while that is not known. */
+export function classesOf(layer: LayerId, losses: MapPaneProps['losses']): ClassKey[] {
+  if (layer === 'usable') return MAP_WORDS.usableClasses.map((words, n) => ({ value: n + 1, words, share: '' }))
+  if (losses) return losses.map((l) => ({ value: lossCode(l.cause), words: LOSS_WORDS[l.cause], share: textOf(formatLossPct(l.pct)) }))
+  return LOSS_CAUSES.map((cause) => ({ value: lossCode(cause), words: LOSS_WORDS[cause], share: '' }))
 }
 
 /** The hatch of a state, drawn as the painter draws it. */

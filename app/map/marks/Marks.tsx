@@ -39,7 +39,7 @@ export function Marks(p: MarksProps) {
   const site = useMemo(() => (lon === undefined || lat === undefined ? null : { lon, lat }), [lon, lat])
   const need = p.needs.find((n) => n.id === show.need) ?? p.needs[0]
   const ground = useMemo(() => p.roads[0]?.path[0] ?? p.obstacles[0]?.path[0] ?? null, [p.roads, p.obstacles])
-  const needD = useMemo(() => (site && need ? sectorPath(site, need.fromRangeM, need.toRangeM, need.sectorDeg) : ''), [site, need])
+  const needD = useMemo(() => (site && need?.ring ? sectorPath(site, need.fromRangeM, need.toRangeM, need.sectorDeg) : ''), [site, need])
   const rayD = useMemo(
     () => (site && p.profileAzimuthDeg !== null ? rayPath(site, p.profileAzimuthDeg, maxRangeM) : ''),
     [site, p.profileAzimuthDeg, maxRangeM],

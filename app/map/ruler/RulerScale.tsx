@@ -12,6 +12,8 @@ export interface RulerScaleProps {
   readonly topPad: number
   readonly stripPx: number
   readonly geometry: LadderGeometry
+  /** Outlines of the two strips: what is seen, what comes back. */
+  readonly strips: readonly [string, string]
   readonly stated: readonly number[]
   readonly heightM: number
   readonly topM: number
@@ -82,8 +84,8 @@ export function RulerScale(p: RulerScaleProps) {
       </defs>
       {(['up', 'down'] as const).map((part) => (
         <g key={part} className={`strips ${part}`} clipPath={`url(#${clip}-${part})`}>
-          <path className="in-sight" d={g.inSight} transform={`translate(${first} ${topPad})`} />
-          <path className="clutter" d={g.clutter} transform={`translate(${second} ${topPad})`} />
+          <path className="in-sight" d={p.strips[0]} transform={`translate(${first} ${topPad})`} />
+          <path className="clutter" d={p.strips[1]} transform={`translate(${second} ${topPad})`} />
         </g>
       ))}
       <g className="axis">
@@ -103,6 +105,21 @@ export function RulerScale(p: RulerScaleProps) {
         ))}
         <path className="foot" d={`M${axisX - 5} ${footY}H${right}`} />
       </g>
+      {p.strips[0] ? (
+        <g className="full" aria-hidden>
+          <path d={`M${first + stripPx} ${topPad}V${footY}`} />
+          <text x={first + stripPx} y={topPad - 2} textAnchor="end">
+            {MAP_WORDS.stripFull}
+          </text>
+        </g>
+      ) : null}
+      {g.intervals.map((need, n) =>
+        need.stretches.map(([top, bottom]) => (
+          <path key={`${need.needId} ${top}`} className="stretch-met" d={`M${right - 1 - 4 * n} ${topPad + top}V${topPad + bottom}`}>
+            <title>{MAP_WORDS.needMet(need.name)}</title>
+          </path>
+        )),
+      )}
       {g.met.map((m, n) => (
         <g key={m.needId} className="met">
           <path d={`M${axisX} ${topPad + m.y}H${right}`} />

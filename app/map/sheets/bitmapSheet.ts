@@ -20,7 +20,7 @@ const REST_MS = 140
 
 /**
  * One bitmap over the map. The last picture is moved by a transform until the next arrives; a changed content cross-fades, a changed view does not.
- * No picture comes back (null): one of another kin is taken away, one of the same kin is dimmed until there is a new one.
+ * A picture in the colours of the other theme is taken away at once. No picture comes back (null): one of another kin is taken away, one of the same kin is dimmed until there is a new one.
  */
 export class BitmapSheet {
   readonly element: HTMLDivElement
@@ -60,6 +60,8 @@ export class BitmapSheet {
     const before = this.wanted
     this.wanted = view
     this.serial++
+    // marks take the other theme's colours at once: a picture in the old ones would hide them
+    if (this.picture && this.picture.night !== view.night) this.clear()
     this.place()
     clearTimeout(this.rest)
     if (view.width < 1 || view.height < 1) return
@@ -112,7 +114,8 @@ export class BitmapSheet {
       .ask(view)
       .then((picture) => {
         if (this.removed) return picture?.bitmap.close()
-        if (picture) this.take(picture, content)
+        if (picture && picture.view.night !== this.wanted?.night) picture.bitmap.close()
+        else if (picture) this.take(picture, content)
         else if (content === this.content) this.missing(content)
       })
       .catch((error: unknown) => {

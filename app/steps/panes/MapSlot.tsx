@@ -37,13 +37,14 @@ function useMapNeeds(maxRangeM: number): readonly MapNeed[] {
   return useMemo(
     () =>
       (needs ?? [])
-        .filter((n) => n.kind === 'layer')
+        .filter((n) => n.kind === 'layer' || n.kind === 'polygon')
         .map((n) => ({
           id: n.id,
           name: n.name ?? n.id,
           fromRangeM: n.fromRangeM ?? 0,
           toRangeM: n.toRangeM ?? maxRangeM,
           sectorDeg: n.sectorDeg ?? [0, 360],
+          ring: n.kind === 'layer',
         })),
     [needs, maxRangeM],
   )
@@ -59,6 +60,10 @@ export function MapSlot({ hub }: { hub: MapHub }) {
   const obstacles = useGround((g) => g.obstacles)
   const roads = useGround((g) => g.roads)
   const marks = useResults((r) => (option ? r.byOption.get(optionKey(option))?.figures.marks : undefined)) ?? NO_MARKS
+  const losses = useResults((r) => {
+    const figures = option ? r.byOption.get(optionKey(option))?.figures.needs : undefined
+    return (figures?.find((n) => n.needId === need) ?? figures?.[0])?.losses ?? null
+  })
   const maxRangeM = useDoc((d) => settledOf(d)?.run.maxRangeM ?? d.radar.instrumentedRangeM ?? 60_000)
   const candidates = useMapCandidates()
   const needs = useMapNeeds(maxRangeM)
@@ -89,6 +94,7 @@ export function MapSlot({ hub }: { hub: MapHub }) {
         units={units}
         night={theme === 'night'}
         marks={shownMarks}
+        losses={losses}
         placing={placing}
         onPlace={(at) => {
           const id = addCandidate(study, at)

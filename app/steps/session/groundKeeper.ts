@@ -86,6 +86,8 @@ const serialOf = (blob: Blob | undefined): number => {
 /** Everything the ground is made from: what the study states about its files, and which files these are. */
 function groundKey(doc: StudyDoc, files: ReadonlyMap<string, GivenFile>): string {
   const names = [...doc.terrain.map((t) => t.file), doc.landCover?.file, doc.obstacles?.file, doc.roads?.file, doc.tables?.lowAngleLand]
+  const placed = (doc.needs ?? []).flatMap((n) => (n.file ? [[n.id, n.kind, n.file, n.heightM, n.heightAbove, n.qnhHpa]] : []))
+  names.push(...(doc.needs ?? []).map((n) => n.file))
   const blobs = names.map((n) => serialOf(n === undefined ? undefined : files.get(n)?.blob))
-  return JSON.stringify([doc.terrain, doc.landCover, doc.uniformTerrain, doc.obstacles, doc.roads, doc.tables, blobs])
+  return JSON.stringify([doc.terrain, doc.landCover, doc.uniformTerrain, doc.obstacles, doc.roads, doc.tables, placed, blobs])
 }

@@ -57,7 +57,7 @@ export function keepRunning(
     const settled = settleOption(doc, option)
     if (settled !== option) set({ option: settled })
     const needs = doc.needs ?? []
-    const wished = needs.some((n) => n.id === need) ? need : (needs.find((n) => n.kind === 'layer')?.id ?? null)
+    const wished = needs.some((n) => n.id === need) ? need : (needs.find((n) => n.kind === 'layer' || n.kind === 'polygon')?.id ?? null)
     if (wished !== need) set({ need: wished })
     keepOptions(results, studyOptions(doc))
   }
