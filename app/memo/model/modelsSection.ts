@@ -139,6 +139,22 @@ export function modelBlocks(input: MemoInput): Block[] {
       limits: 'spread by cell area',
     },
     SEA,
+    {
+      model: 'Clutter from earlier pulses',
+      source: 'Ground beyond the unambiguous range, folded by PRF and mode',
+      basis: 'computed',
+      limits: 'the fold range, or the end of the terrain',
+    },
+    ...(study.obstacles === null
+      ? []
+      : [
+          {
+            model: 'Echoes of single obstacles',
+            source: 'RCS as each obstacle states it',
+            basis: 'by hand',
+            limits: 'tops in sight',
+          } as const,
+        ]),
     ...(study.atmosphere.rainRateMmH > 0 ? RAIN : []),
     ...(study.atmosphere.gas === 'p676' ? [GAS] : []),
     ...GEOMETRY,
@@ -158,7 +174,12 @@ export function modelBlocks(input: MemoInput): Block[] {
     {
       kind: 'table',
       id: 'models',
-      columns: [{ head: 'Model', width: 150 }, { head: 'Source', width: 'fill' }, { head: 'Holds for', width: 120 }, { head: 'Basis' }],
+      columns: [
+        { head: 'Model', width: 138 },
+        { head: 'Source', width: 'fill' },
+        { head: 'Holds for', width: 120 },
+        { head: 'Basis', keep: true },
+      ],
       rows: used.map((m): Cell[] => [
         m.model,
         m.source,
