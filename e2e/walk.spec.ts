@@ -1,0 +1,189 @@
+import { mkdirSync, writeFileSync } from 'node:fs'
+import type { Page } from '@playwright/test'
+import { hasShared, sharedNote, sharedPath } from '../test/helpers/sharedData.ts'
+import { pdfPictures } from './made.ts'
+import { expect, test } from './page.ts'
+import { expectPainted, inkOf } from './sheets.ts'
+import {
+  choose,
+  chooseLayer,
+  dropFiles,
+  everythingRun,
+  exportMemo,
+  fileFrom,
+  form,
+  goTo,
+  LONG,
+  legend,
+  map,
+  nextAction,
+  openDemo,
+  openEmpty,
+  placeCandidate,
+  ringPlace,
+  STEP_NAMES,
+  setField,
+  setTheme,
+} from './user.ts'
+
+// The walk takes pictures of everything a user meets, for eyes to judge, and checks on each what a program can: nothing cut, nothing overlapping,
+// the next action named.
+const OUT = 'test-results/walk'
+const SIZES = [
+  { width: 1440, height: 900 },
+  { width: 1024, height: 768 },
+] as const
+const THEMES = ['paper', 'night'] as const
+
+test.beforeAll(() => mkdirSync(OUT, { recursive: true }))
+test.describe.configure({ timeout: 600_000 })
+
+/** One picture of what is there, in each size and theme. */
+async function pictures(page: Page, name: string): Promise<void> {
+  for (const size of SIZES) {
+    await page.setViewportSize(size)
+    for (const theme of THEMES) {
+      await setTheme(page, theme)
+      await page.mouse.move(2, 2)
+      await stillness(page, theme)
+      await page.screenshot({ path: `${OUT}/${name}-${size.width}-${theme}.png` })
+      expect(await flaws(page), `${name} at ${size.width} px, ${theme}`).toEqual([])
+      await expect(nextAction(page)).toBeVisible()
+    }
+  }
+  await page.setViewportSize(SIZES[0])
+  await setTheme(page, 'paper')
+}
+/** Waits until the map has the picture of this size and theme: no request of it is under way and nothing moves. */
+async function stillness(page: Page, theme: 'paper' | 'night'): Promise<void> {
+  // the ground is painted in the colours of the theme
+  const right = ({ painted, light }: { painted: number; light: number }) => painted === 0 || (theme === 'night' ? light < 110 : light > 120)
+  await expect.poll(async () => right(await inkOf(page, 'base')), { timeout: 60_000, message: `the map in ${theme} colours` }).toBe(true)
+  await page.waitForFunction(
+    () => {
+      const w = window as unknown as { last?: string; since?: number }
+      const now = [...document.querySelectorAll<HTMLCanvasElement>('.map-sheet canvas')]
+        .map((c) => `${c.width} ${c.height} ${c.style.visibility} ${c.style.transform}`)
+        .join('|')
+      const moving = document.getAnimations().some((a) => a.playState === 'running')
+      if (now !== w.last || moving) [w.last, w.since] = [now, performance.now()]
+      return performance.now() - (w.since ?? 0) > 400
+    },
+    null,
+    { polling: 100, timeout: 60_000 },
+  )
+}
+
+/** What a program can see of a bad layout: words cut by their own box or the window's edge, cards lying over each other, the page scrolling sideways. */
+function flaws(page: Page): Promise<string[]> {
+  return page.evaluate(() => {
+    const found: string[] = []
+    const shown = (e: Element) => e.checkVisibility({ checkOpacity: true, checkVisibilityCSS: true })
+    const name = (e: Element) =>
+      `${e.tagName.toLowerCase()}.${e.getAttribute('class') ?? ''} "${(e.textContent ?? '').trim().slice(0, 50)}"`
+    if (document.documentElement.scrollWidth > innerWidth + 1) found.push(`page is ${document.documentElement.scrollWidth} px wide`)
+    const hidden = (e: Element) => e.closest('.visually-hidden, [hidden], .popover') !== null
+    for (const e of document.querySelectorAll<HTMLElement>('p, span, button, dt, dd, h1, h2, h3, h4, td, th, label, li, b')) {
+      if (!shown(e) || hidden(e) || e.children.length > 0 || !e.textContent?.trim()) continue
+      const style = getComputedStyle(e)
+      if (style.overflow !== 'visible' && (e.scrollWidth > e.clientWidth + 1 || e.scrollHeight > e.clientHeight + 2))
+        found.push(`cut: ${name(e)}`)
+      const box = e.getBoundingClientRect()
+      // cut by a box that does not scroll
+      for (let up = e.parentElement; up; up = up.parentElement) {
+        const s = getComputedStyle(up)
+        if (s.overflowX === 'auto' || s.overflowX === 'scroll') break
+        const frame = up.getBoundingClientRect()
+        if (s.overflowX === 'hidden' || s.overflowX === 'clip') {
+          if (box.right > frame.right + 1.5 || box.left < frame.left - 1.5) found.push(`cut by ${up.className}: ${name(e)}`)
+          break
+        }
+      }
+      if (box.right > innerWidth + 1) found.push(`over the right edge: ${name(e)}`)
+    }
+    const cards = [...document.querySelectorAll<HTMLElement>('.map-card, .map-lower, .notice')].filter(shown)
+    for (const [i, a] of cards.entries())
+      for (const b of cards.slice(i + 1)) {
+        if (a.contains(b) || b.contains(a)) continue
+        const [p, q] = [a.getBoundingClientRect(), b.getBoundingClientRect()]
+        const [w, h] = [Math.min(p.right, q.right) - Math.max(p.left, q.left), Math.min(p.bottom, q.bottom) - Math.max(p.top, q.top)]
+        if (w > 1 && h > 1) found.push(`overlap of ${Math.round(w)} × ${Math.round(h)} px: ${name(a)} and ${name(b)}`)
+      }
+    for (const group of ['.ruler-scale', '.horizon-chart svg', 'svg.chart.options', 'svg.chart.terrain']) {
+      const texts = [...document.querySelectorAll<SVGTextElement>(`${group} text`)].filter((t) => shown(t) && (t.textContent ?? '').trim())
+      for (const [i, a] of texts.entries())
+        for (const b of texts.slice(i + 1)) {
+          const [p, q] = [a.getBoundingClientRect(), b.getBoundingClientRect()]
+          const [w, h] = [Math.min(p.right, q.right) - Math.max(p.left, q.left), Math.min(p.bottom, q.bottom) - Math.max(p.top, q.top)]
+          if (w > 2 && h > 5) found.push(`words over words in ${group}: ${name(a)} and ${name(b)}`)
+        }
+      for (const t of texts) {
+        const frame = t.ownerSVGElement?.getBoundingClientRect()
+        const box = t.getBoundingClientRect()
+        if (frame && (box.left < frame.left - 2 || box.right > frame.right + 2)) found.push(`cut in ${group}: ${name(t)}`)
+      }
+    }
+    return [...new Set(found)]
+  })
+}
+
+/** Every step, the figure, the ledger, the profile, and the memo's pages. */
+async function everySheet(page: Page, prefix: string, candidate: string): Promise<void> {
+  for (const step of STEP_NAMES) {
+    await goTo(page, step)
+    await pictures(page, `${prefix}-${step.toLowerCase()}`)
+  }
+  await goTo(page, 'Candidates')
+  await chooseLayer(page, 'what is seen', 'coverage floor')
+  await expect(legend(page)).toContainText('Coverage floor')
+  await pictures(page, `${prefix}-floor`)
+  await chooseLayer(page, 'what comes back', 'C/N')
+  const site = await ringPlace(page, candidate)
+  await page.mouse.click(site.x + 60, site.y + 25)
+  await expect(page.locator('.ledger')).toBeVisible()
+  await pictures(page, `${prefix}-ledger`)
+  await page.keyboard.press('Escape')
+  await page.getByRole('img', { name: /^Horizon/ }).click({ position: { x: 120, y: 40 } })
+  await expect(page.locator('svg.chart.terrain')).toBeVisible()
+  await pictures(page, `${prefix}-profile`)
+  await page.keyboard.press('Escape')
+  const memo = await exportMemo(page)
+  writeFileSync(`${OUT}/${prefix}-memo.pdf`, memo.bytes)
+  if (!pdfPictures(`${OUT}/${prefix}-memo.pdf`, `${OUT}/${prefix}-memo`)) console.log('no pdftoppm here: the memo is kept as PDF only')
+}
+
+test('walk through the demo', async ({ page }) => {
+  await openDemo(page)
+  await everythingRun(page)
+  await everySheet(page, 'demo', 'A')
+})
+
+test(`walk from the empty state with a real raster${sharedNote}`, async ({ page }) => {
+  test.skip(!hasShared, 'no ../shared/data beside this checkout')
+  await openEmpty(page)
+  await pictures(page, 'real-0-empty')
+  await goTo(page, 'Candidates')
+  await pictures(page, 'real-0-empty-candidates')
+  await goTo(page, 'Memo')
+  await pictures(page, 'real-0-empty-memo')
+  await goTo(page, 'Ground')
+  await dropFiles(page, fileFrom(sharedPath('dem/bigtujunga30.tif')))
+  await expectPainted(page, 'base')
+  await pictures(page, 'real-1-ground')
+  await goTo(page, 'Radar')
+  const radar = form(page, 'Radar')
+  await setField(radar, 'Name', 'Trial set')
+  await setField(radar, 'Range', '8')
+  await goTo(page, 'Need')
+  await nextAction(page).click()
+  const need = form(page, 'Need')
+  await setField(need, 'Height', '9000')
+  await choose(need, /Heights are/, 'above sea level')
+  await pictures(page, 'real-2-need')
+  const box = await map(page).boundingBox()
+  await placeCandidate(page, { x: (box?.width ?? 600) * 0.4, y: (box?.height ?? 600) * 0.5 })
+  await placeCandidate(page, '34°19′30″ N 118°02′30″ W')
+  await everythingRun(page)
+  await expect(map(page).getByRole('button', { name: /^Candidate / })).toHaveCount(2, { timeout: LONG })
+  await everySheet(page, 'real', 'A')
+})
