@@ -1,5 +1,6 @@
 import { MAX_POLAR_CELLS } from '../polar/index.ts'
 import { SPEED_OF_LIGHT_MS } from '../units/index.ts'
+import { checkPulses, shortestPulseS } from './checkPulses.ts'
 import { cellsOf, defaultAzimuthStepDeg, evenStepDeg, gateOfM, longestRangeStepM } from './grid.ts'
 import { quantity } from './limits.ts'
 import type { Problem } from './problems.ts'
@@ -220,7 +221,7 @@ function checkRun(radar: RadarDoc, run: RunDoc, say: Say): void {
       `use ${quantity(evenStepDeg(Math.min(longestStep, 90)), 'deg')} or less`,
     )
   const azimuthStep = stated === undefined ? defaultAzimuthStepDeg(beamwidth) : evenStepDeg(stated)
-  const gate = gateOfM(radar.compressedPulseWidthS ?? radar.pulseWidthS)
+  const gate = gateOfM(shortestPulseS(radar))
   const range = run.maxRangeM ?? instrumentedRangeOf(radar, run)
   const longest = longestRangeStepM(gate, range, azimuthStep)
   const step = run.rangeStepM
@@ -257,6 +258,7 @@ export function crossChecks(doc: StudyDoc, ok: (part: string) => boolean): Probl
   if (ok('landCover')) checkLandCover(doc, say)
   if (ok('radar')) {
     checkPulse(doc.radar, say)
+    checkPulses(doc.radar, say)
     checkAntenna(doc.radar, say)
     checkReceiver(doc.radar, say)
     if (ok('run') && doc.radar.prfHz.length > 0) checkRun(doc.radar, doc.run ?? {}, say)

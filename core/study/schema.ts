@@ -70,6 +70,29 @@ const antenna = z.looseObject({
   apertureWidthM: num('radar.antenna.apertureWidthM').nullable().optional(),
   apertureHeightM: num('radar.antenna.apertureHeightM').nullable().optional(),
 })
+const pulse = z.looseObject({
+  widthS: num('radar.pulses[].widthS'),
+  compressedWidthS: num('radar.pulses[].compressedWidthS').optional(),
+  noiseBandwidthHz: num('radar.pulses[].noiseBandwidthHz').optional(),
+  fromRangeM: num('radar.pulses[].fromRangeM'),
+  toRangeM: num('radar.pulses[].toRangeM'),
+  rangeSidelobeDb: num('radar.pulses[].rangeSidelobeDb').nullable().optional(),
+})
+const beam = z.looseObject({
+  name: id,
+  gainDbi: num('radar.antenna.gainDbi').optional(),
+  offsetDeg: num('radar.beams[].offsetDeg').optional(),
+  elevationBeamwidthDeg: num('radar.antenna.elevationBeamwidthDeg').optional(),
+  elevationPattern: z.enum(['cosecant-squared', 'gaussian', 'table']).optional(),
+  cosecantLimitDeg: num('radar.antenna.cosecantLimitDeg').optional(),
+  elevationTable: z.array(z.tuple([num('radar.antenna.elevationTable[][0]'), z.number()])).optional(),
+})
+const beamSwitch = z.looseObject({
+  fromRangeM: num('radar.beamSwitch[].fromRangeM'),
+  toRangeM: num('radar.beamSwitch[].toRangeM'),
+  transmit: z.string(),
+  receive: z.string(),
+})
 const radar = z.looseObject({
   name: z.string().optional(),
   frequencyHz: num('radar.frequencyHz'),
@@ -89,6 +112,9 @@ const radar = z.looseObject({
   systemLossDb: num('radar.systemLossDb').optional(),
   pfa: num('radar.pfa').optional(),
   antenna,
+  pulses: z.array(pulse).optional(),
+  beams: z.array(beam).optional(),
+  beamSwitch: z.array(beamSwitch).optional(),
   suppression: z
     .looseObject({
       kind: z.enum(['none', 'stated', 'canceller', 'filterBank']),

@@ -2,12 +2,15 @@ import { WEATHER_DEFAULTS } from '../atmosphere/index.ts'
 import { defaultFoldRangeM } from '../clutter/index.ts'
 import { DEFAULT_STRADDLE_LOSS_DB, requiredRatio } from '../detection/index.ts'
 import { InputError } from '../errors/index.ts'
-import { CIRCULAR_DEFAULTS, type CircularInput, type RadarInput } from '../radar/index.ts'
+import { type AntennaInput, CIRCULAR_DEFAULTS, type CircularInput, type RadarInput } from '../radar/index.ts'
 import { checkDoc } from './checkDoc.ts'
+import { shortestPulseS } from './checkPulses.ts'
 import { instrumentedRangeOf } from './crossChecks.ts'
 import { defaultAzimuthStepDeg, defaultRangeStepM, evenStepDeg, gateOfM } from './grid.ts'
 import { limitOf } from './limits.ts'
+import { settlePulses } from './settlePulses.ts'
 import type {
+  AntennaDoc,
   AtmosphereDoc,
   CandidateDoc,
   DefaultUsed,
@@ -19,6 +22,9 @@ import type {
   StudyDoc,
 } from './types.ts'
 
+/** End of a need that a file bounds, m: farther than any radar looks. */
+const FARTHEST_M = 2e6
+
 /** Takes what is stated, else the default, and writes the default down. */
 class Defaults {
   readonly used: DefaultUsed[] = []
@@ -29,12 +35,30 @@ class Defaults {
   }
 }
 
+/** The antenna with its defaults; a table needs no beamwidth. */
+function settleAntenna(a: AntennaDoc, d: Defaults): AntennaInput {
+  const pattern = d.take('radar.antenna.elevationPattern', a.elevationPattern, 'gaussian')
+  return {
+    gainDbi: a.gainDbi,
+    azimuthBeamwidthDeg: a.azimuthBeamwidthDeg,
+    elevationBeamwidthDeg:
+      pattern === 'table' ? (a.elevationBeamwidthDeg ?? 5) : d.take('radar.antenna.elevationBeamwidthDeg', a.elevationBeamwidthDeg, 5),
+    elevationPattern: pattern,
+    cosecantLimitDeg:
+      pattern === 'cosecant-squared' ? d.take('radar.antenna.cosecantLimitDeg', a.cosecantLimitDeg, 30) : (a.cosecantLimitDeg ?? 30),
+    elevationTable: a.elevationTable ?? [],
+    sidelobeDb: d.take('radar.antenna.sidelobeDb', a.sidelobeDb, -28),
+    elevationSidelobeDb: d.take('radar.antenna.elevationSidelobeDb', a.elevationSidelobeDb, -30),
+    tiltDeg: d.take('radar.antenna.tiltDeg', a.tiltDeg, 0),
+    apertureWidthM: a.apertureWidthM ?? null,
+    apertureHeightM: a.apertureHeightM ?? null,
+  }
+}
+
 function settleRadar(r: RadarDoc, instrumentedRangeM: number, d: Defaults): RadarInput {
-  const a = r.antenna
   const s = r.suppression
   const compressedPulseWidthS = d.take('radar.compressedPulseWidthS', r.compressedPulseWidthS, r.pulseWidthS)
-  const pattern = d.take('radar.antenna.elevationPattern', a.elevationPattern, 'gaussian')
-  const beamwidthUnused = pattern === 'table'
+  const antenna = settleAntenna(r.antenna, d)
   const kind = d.take('radar.suppression.kind', s?.kind, 'none')
   const stcKind = d.take('radar.stc.kind', r.stc?.kind, 'none')
   const takesPulses = kind === 'canceller' || kind === 'filterBank'
@@ -54,22 +78,8 @@ function settleRadar(r: RadarDoc, instrumentedRangeM: number, d: Defaults): Rada
     noiseFigureDb: d.take('radar.noiseFigureDb', r.noiseFigureDb, 4),
     systemLossDb: d.take('radar.systemLossDb', r.systemLossDb, 6),
     pfa: d.take('radar.pfa', r.pfa, 1e-6),
-    antenna: {
-      gainDbi: a.gainDbi,
-      azimuthBeamwidthDeg: a.azimuthBeamwidthDeg,
-      elevationBeamwidthDeg: beamwidthUnused
-        ? (a.elevationBeamwidthDeg ?? 5)
-        : d.take('radar.antenna.elevationBeamwidthDeg', a.elevationBeamwidthDeg, 5),
-      elevationPattern: pattern,
-      cosecantLimitDeg:
-        pattern === 'cosecant-squared' ? d.take('radar.antenna.cosecantLimitDeg', a.cosecantLimitDeg, 30) : (a.cosecantLimitDeg ?? 30),
-      elevationTable: a.elevationTable ?? [],
-      sidelobeDb: d.take('radar.antenna.sidelobeDb', a.sidelobeDb, -28),
-      elevationSidelobeDb: d.take('radar.antenna.elevationSidelobeDb', a.elevationSidelobeDb, -30),
-      tiltDeg: d.take('radar.antenna.tiltDeg', a.tiltDeg, 0),
-      apertureWidthM: a.apertureWidthM ?? null,
-      apertureHeightM: a.apertureHeightM ?? null,
-    },
+    antenna,
+    ...settlePulses(r, antenna),
     suppression: {
       kind,
       statedDb: s?.statedDb ?? 0,
@@ -137,7 +147,7 @@ function settleNeed(n: NeedDoc, i: number, radar: RadarInput, maxRangeM: number,
     levelsM: levels(n.heightM),
     heightAbove: d.take(path('heightAbove'), n.heightAbove, 'sea'),
     fromRangeM: d.take(path('fromRangeM'), n.fromRangeM, 0),
-    toRangeM: d.take(path('toRangeM'), n.toRangeM, maxRangeM),
+    toRangeM: n.kind === 'layer' ? d.take(path('toRangeM'), n.toRangeM, maxRangeM) : (n.toRangeM ?? FARTHEST_M),
     sectorDeg: n.sectorDeg ?? [0, 360],
     file: n.file ?? null,
     speedMs: n.speedMs ?? null,
@@ -202,7 +212,7 @@ export function settle(doc: StudyDoc, fileName?: string): SettledStudy {
   const rangeStepM = d.take(
     'run.rangeStepM',
     doc.run?.rangeStepM,
-    defaultRangeStepM(gateOfM(radar.compressedPulseWidthS), maxRangeM, azimuthStepDeg),
+    defaultRangeStepM(gateOfM(shortestPulseS(doc.radar)), maxRangeM, azimuthStepDeg),
   )
   return {
     name: doc.name,

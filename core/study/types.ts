@@ -28,6 +28,31 @@ export interface AntennaDoc {
   apertureWidthM?: number | null
   apertureHeightM?: number | null
 }
+/** One of several pulses, by slant range. */
+export interface PulseDoc {
+  widthS: number
+  compressedWidthS?: number
+  noiseBandwidthHz?: number
+  fromRangeM: number
+  toRangeM: number
+  rangeSidelobeDb?: number | null
+}
+/** A stacked beam; what it does not state is the antenna's. */
+export interface BeamDoc {
+  name: string
+  gainDbi?: number
+  offsetDeg?: number
+  elevationBeamwidthDeg?: number
+  elevationPattern?: 'cosecant-squared' | 'gaussian' | 'table'
+  cosecantLimitDeg?: number
+  elevationTable?: [number, number][]
+}
+export interface BeamSwitchDoc {
+  fromRangeM: number
+  toRangeM: number
+  transmit: string
+  receive: string
+}
 export interface RadarDoc {
   name?: string
   frequencyHz: number
@@ -46,6 +71,9 @@ export interface RadarDoc {
   systemLossDb?: number
   pfa?: number
   antenna: AntennaDoc
+  pulses?: PulseDoc[]
+  beams?: BeamDoc[]
+  beamSwitch?: BeamSwitchDoc[]
   suppression?: {
     kind: 'none' | 'stated' | 'canceller' | 'filterBank'
     statedDb?: number

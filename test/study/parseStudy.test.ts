@@ -161,8 +161,8 @@ describe('a study that is taken', () => {
     expect(read.warnings).toEqual(['radar.serialNumber: unknown key, kept but not used', 'projectOffice: unknown key, kept but not used'])
   })
   it('keeps keys of models that come later and says so', () => {
-    const read = parseStudy(pretty(withValue('radar.beams', [])), 'moor.json')
-    expect(read.warnings).toEqual(['radar.beams: kept, not assessed yet'])
+    const read = parseStudy(pretty(withValue('radar.scan', 'sector')), 'moor.json')
+    expect(read.warnings).toEqual(['radar.scan: kept, not assessed yet'])
   })
   it('accepts a step over a gate shorter than 15 m', () => {
     const short = withValue('run', { rangeStepM: 15, maxRangeM: 30_000 }, withValue('radar.pulseWidthS', 5e-8))
