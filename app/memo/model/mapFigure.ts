@@ -69,11 +69,23 @@ function candidateMark(id: string, [x, y]: Point, own: boolean, width: number, h
   ]
 }
 
+/** Widest line of the note under the ramp, pt. */
+const NOTE_PT = 138
+/** The parts of a note, as many to a line as fit. */
+function noteRows(note: string): string[] {
+  const rows: string[] = []
+  for (const part of note.split(' · ')) {
+    const joined = rows.length === 0 ? part : `${rows[rows.length - 1]} · ${part}`
+    if (rows.length > 0 && textWidth(joined, SIZE) <= NOTE_PT) rows[rows.length - 1] = joined
+    else rows.push(part)
+  }
+  return rows
+}
+
 function legend(map: MemoMap, system: UnitSystem, height: number): Item[] {
   const words = LAYER_WORDS[map.layer]
   const { labels, unit } = legendStops(map.layer, map.ramp.stops, system)
-  const note = words.note.split(' · ')
-  const rows = [note.slice(0, 2).join(' · '), note.slice(2).join(' · ')].filter((r) => r !== '')
+  const rows = noteRows(words.note)
   const bar = 118
   const pad = 5
   const title = words.title
