@@ -1,4 +1,12 @@
-import { type CandidateDoc, checkDoc, type FieldProblem, newStudy, STARTING_RADAR_NAME, type StudyDoc } from '../../core/index.ts'
+import {
+  type CandidateDoc,
+  checkDoc,
+  type FieldProblem,
+  type NeedDoc,
+  newStudy,
+  STARTING_RADAR_NAME,
+  type StudyDoc,
+} from '../../core/index.ts'
 
 /** A study with no files and no candidates, and a radar of round starting values that says so. */
 export const emptyStudy = (): StudyDoc => newStudy('Untitled study')
@@ -71,4 +79,11 @@ export function freeCandidateId(candidates: readonly CandidateDoc[]): string {
     const id = String.fromCharCode(65 + (n % 26)) + (n < 26 ? '' : Math.floor(n / 26))
     if (!taken.has(id)) return id
   }
+}
+
+/** n1, n2, …: the first that no need has. */
+export function freeNeedId(needs: readonly NeedDoc[]): string {
+  let n = needs.length + 1
+  while (needs.some((need) => need.id === `n${n}`)) n++
+  return `n${n}`
 }

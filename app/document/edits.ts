@@ -1,5 +1,5 @@
 import type { CandidateDoc, LonLat, NeedDoc, StudyDoc } from '../../core/index.ts'
-import { freeCandidateId, withValue } from './draft.ts'
+import { freeCandidateId, freeNeedId, withValue } from './draft.ts'
 import type { StudyStore } from './studyStore.ts'
 
 const DEFAULT_MASTS_M = [10, 20, 30]
@@ -72,10 +72,10 @@ export const setCandidateField = <K extends keyof CandidateDoc>(
 /** A new layer need; returns its id. */
 export function addNeed(store: StudyStore): string {
   const needs = store.getState().doc.needs ?? []
-  let n = needs.length + 1
-  while (needs.some((need) => need.id === `n${n}`)) n++
-  const need: NeedDoc = { id: `n${n}`, name: `Need ${n}`, must: true, kind: 'layer', heightM: 300, heightAbove: 'sea' }
-  store.getState().edit(`added need ${n}`, (doc) => ({ ...doc, needs: [...(doc.needs ?? []), need] }))
+  const id = freeNeedId(needs)
+  const name = `Need ${id.slice(1)}`
+  const need: NeedDoc = { id, name, must: true, kind: 'layer', heightM: 300, heightAbove: 'sea' }
+  store.getState().edit(`added ${name.toLowerCase()}`, (doc) => ({ ...doc, needs: [...(doc.needs ?? []), need] }))
   return need.id
 }
 export const removeNeed = (store: StudyStore, id: string): void =>

@@ -1,5 +1,5 @@
-import type { StudyDoc } from '../../core/index.ts'
-import { filesOf } from '../document/index.ts'
+import type { NeedDoc, StudyDoc } from '../../core/index.ts'
+import { filesOf, freeNeedId } from '../document/index.ts'
 import type { FileRole } from './types.ts'
 
 /** The study with a file in a role; the same object when the study names the file already. */
@@ -18,9 +18,19 @@ export function addToStudy(doc: StudyDoc, file: string, role: FileRole): StudyDo
       return { ...doc, facades: { file } }
     case 'landTable':
       return { ...doc, tables: { ...doc.tables, lowAngleLand: file } }
+    case 'fixes':
+    case 'track':
+    case 'polygon':
+      return { ...doc, needs: [...(doc.needs ?? []), needFromFile(doc, file, role)] }
     default:
       return doc
   }
+}
+
+function needFromFile(doc: StudyDoc, file: string, kind: 'fixes' | 'track' | 'polygon'): NeedDoc {
+  const id = freeNeedId(doc.needs ?? [])
+  const name = file.replace(/^.*\//, '').replace(/\.[^.]+$/, '')
+  return { id, name, must: true, kind, file, ...(kind === 'polygon' ? { heightM: 300, heightAbove: 'sea' } : {}) }
 }
 
 /** Takes a file out of every place of the study that names it. */
@@ -29,6 +39,7 @@ export function takeOut(doc: StudyDoc, file: string): StudyDoc {
   return {
     ...rest,
     terrain: doc.terrain.filter((t) => t.file !== file),
+    ...(doc.needs ? { needs: doc.needs.filter((n) => n.file !== file) } : {}),
     ...(landCover && landCover.file !== file ? { landCover } : {}),
     ...(obstacles && obstacles.file !== file ? { obstacles } : {}),
     ...(roads && roads.file !== file ? { roads } : {}),

@@ -1,5 +1,5 @@
 import { InputError, type StudyDoc } from '../../core/index.ts'
-import { type FileStore, type GivenFile, openPackage, openStudyText, type StudyStore } from '../document/index.ts'
+import { type FileStore, filesOf, type GivenFile, openPackage, openStudyText, type StudyStore } from '../document/index.ts'
 import { addToStudy } from './addToStudy.ts'
 import { fileRole } from './fileRole.ts'
 import type { FileRole } from './types.ts'
@@ -35,21 +35,15 @@ export async function takeIn(study: StudyStore, given: FileStore, dropped: reado
     throw new InputError({
       code: 'unknown-file',
       file: useless.file.name,
-      found: 'neither GeoTIFF, GeoJSON, study nor package',
-      remedy: 'give a .tif, .geojson, .json or .zip file',
+      found: 'neither GeoTIFF, GeoJSON, CSV, study nor package',
+      remedy: 'give a .tif, .geojson, .csv, .json or .zip file',
     })
   const doc = study.getState().doc
-  given.getState().give(sorted.map(({ file, role }) => ({ name: nameInStudy(doc, file.name, role), blob: file }) satisfies GivenFile))
+  given.getState().give(sorted.map(({ file }) => ({ name: nameInStudy(doc, file.name), blob: file }) satisfies GivenFile))
   const words = sorted.length === 1 ? `added ${sorted[0].file.name}` : `added ${sorted.length} files`
-  study.getState().edit(words, (before) => sorted.reduce((d, s) => addToStudy(d, nameInStudy(d, s.file.name, s.role), s.role), before))
+  study.getState().edit(words, (before) => sorted.reduce((d, s) => addToStudy(d, nameInStudy(d, s.file.name), s.role), before))
   return { opened: false, warnings: [], missing: [] }
 }
 
 /** A study may name a file with folders; a dropped file of that last name is that file. */
-function nameInStudy(doc: StudyDoc, name: string, role: FileRole): string {
-  const named =
-    role === 'terrain'
-      ? doc.terrain.map((t) => t.file)
-      : [doc.landCover?.file, doc.obstacles?.file, doc.roads?.file, doc.tables?.lowAngleLand]
-  return named.find((n) => n !== undefined && (n === name || n.endsWith(`/${name}`))) ?? name
-}
+const nameInStudy = (doc: StudyDoc, name: string): string => filesOf(doc).find((n) => n === name || n.endsWith(`/${name}`)) ?? name

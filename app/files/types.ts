@@ -1,2 +1,14 @@
 /** What a file is to the study. */
-export type FileRole = 'terrain' | 'landCover' | 'obstacles' | 'roads' | 'facades' | 'landTable' | 'study' | 'package' | 'unknown'
+export type FileRole =
+  | 'terrain'
+  | 'landCover'
+  | 'obstacles'
+  | 'roads'
+  | 'facades'
+  | 'landTable'
+  | 'fixes'
+  | 'track'
+  | 'polygon'
+  | 'study'
+  | 'package'
+  | 'unknown'

@@ -17,6 +17,8 @@ export interface NumberFieldProps {
   readonly fallback?: number | null
   /** Shown while empty when the default is no number: "pulse width". */
   readonly fallbackWords?: string
+  /** Word beside what stands in; *default* where none is given. */
+  readonly mark?: string
   /** The study cannot run without it. */
   readonly required?: boolean
   readonly help?: ReactNode
@@ -47,7 +49,7 @@ export function NumberField(props: NumberFieldProps) {
       unit={face.unit}
       numeric
       placeholder={stated ? undefined : required ? 'needed' : standIn}
-      marks={!stated && !required && typeof fallback === 'number' ? <Mark>default</Mark> : null}
+      marks={!stated && !required && typeof fallback === 'number' ? <Mark>{props.mark ?? 'default'}</Mark> : null}
       help={props.help}
       trouble={props.trouble}
       shape={props.shape}

@@ -52,19 +52,28 @@ export const RADAR_FIELDS = {
     field('radar.noiseFigureDb', 'Noise figure', DB),
     field('radar.systemLossDb', 'System loss', DB),
     field('radar.pfa', 'Pfa', PLAIN),
+    field('radar.straddleLossDb', 'Straddling loss', DB),
+    field('radar.cfarLossDb', 'Threshold loss', DB, { emptyWords: 'not stated' }),
+    field('radar.cfarReferenceCells', 'Reference cells', PLAIN, { emptyWords: 'not stated' }),
+    field('radar.recoveryS', 'Recovery time', face('µs', 1e-6)),
+    field('radar.receiverLinearRangeDb', 'Linear range', DB, { emptyWords: 'from bits' }),
     field('radar.instrumentedRangeM', 'Instrumented range', 'range'),
   ],
   air: [
     field('atmosphere.effectiveEarthFactor', 'Effective-earth k', PLAIN),
     field('atmosphere.earthRadiusM', 'Earth radius', face('km', 1e3), { emptyWords: 'by azimuth' }),
-    field('atmosphere.rainRateMmH', 'Rain rate', face('mm/h')),
     field('atmosphere.windMs', 'Wind', face('m/s')),
     field('atmosphere.seaState', 'Sea state', PLAIN),
+    field('atmosphere.tideM', 'Tide', METRES),
+    field('atmosphere.rainRateMmH', 'Rain rate', face('mm/h')),
+    field('atmosphere.rainTopM', 'Rain top', 'height'),
+    field('atmosphere.rainExtentM', 'Rain extent', 'range'),
   ],
   grid: [
     field('run.maxRangeM', 'Range', 'range'),
     field('run.rangeStepM', 'Range step', METRES),
     field('run.azimuthStepDeg', 'Azimuth step', DEG),
+    field('run.foldRangeM', 'Folded clutter to', 'range'),
   ],
 } as const satisfies Record<string, readonly FieldWords[]>
 
@@ -77,6 +86,17 @@ export const SUPPRESSION_FIELDS = {
     field('radar.suppression.bits', 'Converter bits', PLAIN, { emptyWords: 'none' }),
   ],
 } as const satisfies Record<string, readonly FieldWords[]>
+/** How echoes of sea and rain move; empty: worked out from the wind. */
+export const MOTION_FIELDS = [
+  field('atmosphere.seaMeanMs', 'Sea, mean', face('m/s'), { emptyWords: 'from wind' }),
+  field('atmosphere.seaSpreadMs', 'Sea, spread', face('m/s'), { emptyWords: 'from wind' }),
+  field('atmosphere.rainMeanMs', 'Rain, mean', face('m/s'), { emptyWords: 'from wind' }),
+  field('atmosphere.rainSpreadMs', 'Rain, spread', face('m/s'), { emptyWords: 'from wind' }),
+] as const satisfies readonly FieldWords[]
+export const CIRCULAR_FIELDS = [
+  field('radar.circular.rainLossDb', 'Rejection of rain', DB),
+  field('radar.circular.targetLossDb', 'Loss of a target', DB),
+] as const satisfies readonly FieldWords[]
 export const STC_FIELDS = [
   field('radar.stc.cornerM', 'Corner range', 'range', NEEDED),
   field('radar.stc.maxDb', 'Largest attenuation', DB, NEEDED),
@@ -107,6 +127,10 @@ export const SUPPRESSION_KINDS: readonly Choice<'none' | 'stated' | 'canceller' 
   { id: 'stated', words: 'stated' },
   { id: 'canceller', words: 'canceller' },
   { id: 'filterBank', words: 'filter bank' },
+]
+export const FILTER_WINDOWS: readonly Choice<'uniform' | 'hamming'>[] = [
+  { id: 'hamming', words: 'Hamming' },
+  { id: 'uniform', words: 'uniform' },
 ]
 export const STC_KINDS: readonly Choice<'none' | 'curve' | 'rtoFourth'>[] = [
   { id: 'none', words: 'none' },
@@ -142,6 +166,12 @@ export const FILE_ROLES: readonly Choice<'terrain' | 'landCover' | 'obstacles' |
   { id: 'landCover', words: 'land cover' },
   { id: 'obstacles', words: 'obstacles' },
   { id: 'roads', words: 'roads' },
+]
+export const NEED_KINDS: readonly Choice<'layer' | 'fixes' | 'track' | 'polygon'>[] = [
+  { id: 'layer', words: 'layer' },
+  { id: 'fixes', words: 'fixes', hint: 'a CSV of points with heights' },
+  { id: 'track', words: 'track', hint: 'a CSV of points in order' },
+  { id: 'polygon', words: 'polygon', hint: 'a GeoJSON area' },
 ]
 export const SWERLING_CASES: readonly Choice<'0' | '1' | '2' | '3' | '4'>[] = [
   { id: '0', words: 'steady (0)' },

@@ -34,6 +34,13 @@ describe('what a dropped file is', () => {
     ['roads.geojson', FEATURES, 'roads'],
     ['s.json', studyText(emptyStudy()), 'study'],
     ['p.zip', 'PK', 'package'],
+    ['points.csv', 'name,lon,lat,alt_m', 'fixes'],
+    ['approach.csv', 'name,lon,lat,alt_m', 'track'],
+    [
+      'area.geojson',
+      FEATURES.replace('"KEY":1', '"name":"x"').replace('{"type":"Feature",', '{"type":"Feature","geometry":{"type":"Polygon"},'),
+      'polygon',
+    ],
     ['notes.txt', 'hello', 'unknown'],
   ] as [string, BlobPart, string][])('%s', async (name, content, role) => expect(await fileRole(file(name, content))).toBe(role))
 })
@@ -61,6 +68,11 @@ describe('taking files in', () => {
     await takeIn(study, files, [file('dem.tif', tiff(16))])
     expect(study.getState().doc.terrain).toEqual([{ file: 'maps/dem.tif', unit: 'ft' }])
     expect([...files.getState().files.keys()]).toEqual(['maps/dem.tif'])
+  })
+  it('a file of fixes becomes a need of its own', async () => {
+    const study = createStudyStore()
+    await takeIn(study, createFileStore(), [file('fixes.csv', 'name,lon,lat,alt_m')])
+    expect(study.getState().doc.needs).toEqual([{ id: 'n1', name: 'fixes', must: true, kind: 'fixes', file: 'fixes.csv' }])
   })
   it('a study with its files replaces what is open', async () => {
     const study = createStudyStore()

@@ -1,12 +1,12 @@
 import { problemsOf, withValue } from '../../document/index.ts'
 import { Button } from '../../ui/Button.tsx'
-import { COSECANT_FIELD, RADAR_FIELDS, STC_FIELDS, SUPPRESSION_FIELDS } from '../../words/index.ts'
+import { CIRCULAR_FIELDS, COSECANT_FIELD, MOTION_FIELDS, RADAR_FIELDS, STC_FIELDS, SUPPRESSION_FIELDS } from '../../words/index.ts'
 import { useDoc, useSession } from '../session/index.ts'
 
 /** Fields that say themselves what is wrong with them. */
 const IN_PLACE = new Set([
   ...[RADAR_FIELDS, SUPPRESSION_FIELDS].flatMap((groups) => Object.values(groups).flat()).map((f) => f.path),
-  ...STC_FIELDS.map((f) => f.path),
+  ...[...STC_FIELDS, ...MOTION_FIELDS, ...CIRCULAR_FIELDS].map((f) => f.path),
   COSECANT_FIELD.path,
   'radar.prfHz',
 ])

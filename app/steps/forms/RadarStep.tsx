@@ -1,9 +1,12 @@
 import { setField, valueAt } from '../../document/index.ts'
-import { Caution, Check, CommitField, Mark } from '../../ui/index.ts'
+import { Check, CommitField, Mark } from '../../ui/index.ts'
 import {
+  CIRCULAR_FIELDS,
   COSECANT_FIELD,
   ELEVATION_PATTERNS,
+  FILTER_WINDOWS,
   GAS_KINDS,
+  MOTION_FIELDS,
   POLARISATIONS,
   PRF_MODES,
   RADAR_FIELDS,
@@ -27,6 +30,7 @@ export function RadarStep() {
   const coherent = useDoc((d) => d.radar.coherentTransmitter)
   const pattern = useDoc((d) => d.radar.antenna.elevationPattern ?? 'gaussian')
   const suppression = useDoc((d) => d.radar.suppression?.kind ?? 'none')
+  const circular = useDoc((d) => d.radar.polarisation === 'circular')
   const stc = useDoc((d) => d.radar.stc?.kind ?? 'none')
   return (
     <>
@@ -69,6 +73,7 @@ export function RadarStep() {
           <DocNumber key={f.path} of={f} />
         ))}
         <DocChoice path="radar.polarisation" label="Polarisation" choices={POLARISATIONS} fallback="V" />
+        {circular ? CIRCULAR_FIELDS.map((f) => <DocNumber key={f.path} of={f} />) : null}
       </Group>
       <Group title="Receiver">
         {RADAR_FIELDS.receiver.map((f) => (
@@ -91,8 +96,8 @@ export function RadarStep() {
         {suppression === 'canceller' || suppression === 'filterBank'
           ? SUPPRESSION_FIELDS.canceller.map((f) => <DocNumber key={f.path} of={f} />)
           : null}
-        {suppression === 'canceller' || suppression === 'filterBank' ? (
-          <Caution>Kept, not assessed yet: available suppression counts as 0 dB.</Caution>
+        {suppression === 'filterBank' ? (
+          <DocChoice path="radar.suppression.window" label="Filter window" choices={FILTER_WINDOWS} fallback="hamming" />
         ) : null}
       </Group>
       <Group title="Short-range sensitivity (STC)">
@@ -124,6 +129,9 @@ export function RadarStep() {
       </Group>
       <Group title="Air and earth">
         {RADAR_FIELDS.air.map((f) => (
+          <DocNumber key={f.path} of={f} />
+        ))}
+        {MOTION_FIELDS.map((f) => (
           <DocNumber key={f.path} of={f} />
         ))}
         <DocChoice path="atmosphere.gas" label="Gas loss" choices={GAS_KINDS} fallback="none" />

@@ -2,7 +2,7 @@ import type { ReactNode } from 'react'
 import { type DefaultUsed, limitOf, type StudyDoc } from '../../../core/index.ts'
 import { problemsOf, setField, valueAt } from '../../document/index.ts'
 import { CommitField, Mark, NumberField, readNumbers, Select } from '../../ui/index.ts'
-import { type FaceUnit, type FieldWords, fromFace, type UnitSystem, unitOf } from '../../words/index.ts'
+import { type FaceUnit, type FieldWords, fromFace, type UnitKind, type UnitSystem, unitOf } from '../../words/index.ts'
 import { useDoc, useSession, useView } from '../session/index.ts'
 import { settledOf } from '../settled.ts'
 
@@ -15,7 +15,7 @@ const troubleAt = (doc: StudyDoc, path: string): string | null => {
   return problem ? `${problem.found}; ${problem.remedy}` : null
 }
 /** Face unit of a field under the unit switch. */
-export const faceOf = (face: FieldWords['face'], system: UnitSystem): FaceUnit =>
+export const faceOf = (face: FieldWords['face'] | UnitKind, system: UnitSystem): FaceUnit =>
   typeof face === 'string' ? { unit: unitOf(face, system), size: fromFace(face, 1, system) } : face
 
 /** A number of the study at its key path, with unit, range, default and what is wrong with it. */
