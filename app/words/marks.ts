@@ -18,6 +18,15 @@ export const FOUR_WORDS = {
   },
   confirmed: { word: 'confirmed', meaning: 'Measured on site or in trial; entered, never computed' },
 } as const
+/** What a need comes to, in a word. *Passes* only where the smaller k is known too. */
+export const VERDICT_WORDS = {
+  passes: 'passes',
+  oneK: 'met, k = 1 not run yet',
+  notAtLowK: 'met, not at k = 1',
+  notMet: 'not met',
+} as const
+/** What the shares of a need are shares of. */
+export const MEASURE_WORDS = { area: 'its area', fixes: 'its fixes', length: 'its length' } as const
 /** Words that stand where there is no number. */
 export const STATE_WORDS = {
   masked: 'masked',

@@ -1,7 +1,7 @@
 import { useLayoutEffect, useRef, useState } from 'react'
 import { Button as AriaButton } from 'react-aria-components'
-import { M_PER_NM, type OptionRef, type OptionResult } from '../../../core/index.ts'
-import { inSightPctOf } from '../../charts/index.ts'
+import type { OptionRef, OptionResult } from '../../../core/index.ts'
+import { coverageOf } from '../../charts/index.ts'
 import { OptionsChart } from '../../charts/printers.tsx'
 import { optionKey, sameOption, studyOptions } from '../../document/index.ts'
 import { Button, Caution, FigureButton, Select, Value } from '../../ui/index.ts'
@@ -9,72 +9,17 @@ import {
   cautionsFor,
   EMPTY_WORDS,
   formatAngle,
-  formatAreaUp,
-  formatDbUp,
-  formatFloor,
-  formatMargin,
   formatMast,
   formatMetPct,
-  formatSetting,
+  MEASURE_WORDS,
   type Quantity,
   textOf,
-  toFace,
   type UnitSystem,
-  unitOf,
 } from '../../words/index.ts'
 import { useDoc, useResults, useSession, useView } from '../session/index.ts'
+import { columnGroups, GROUND_COLUMNS, NEED_COLUMNS, verdictOf } from './columns.ts'
 import { Explain } from './Explain.tsx'
-import { FLOOR_RANGE_M, floorNear, needOf } from './figuresOf.ts'
-
-interface Column {
-  readonly id: string
-  readonly head: string
-  value(result: OptionResult, need: string | null, system: UnitSystem): Quantity
-  /** Key of the figure in the summary, for its explanation. */
-  key(result: OptionResult, need: string | null): string | null
-}
-const needFigureKey = (result: OptionResult, need: string | null, tail: string): string | null => {
-  const of = needOf(result, need)
-  return of ? `need_${of.needId}_${tail}` : null
-}
-const COLUMNS: readonly Column[] = [
-  {
-    id: 'inSight',
-    head: 'In sight',
-    value: (r, need) => formatMetPct(inSightPctOf(r, need)),
-    key: (r, need) => needFigureKey(r, need, 'in_sight_pct') ?? 'ground_in_sight_km2',
-  },
-  {
-    id: 'margin',
-    head: 'Worst margin',
-    value: (r, need, system) => formatMargin(needOf(r, need)?.worstMarginM, system),
-    key: (r, need) => needFigureKey(r, need, 'worst_margin_m'),
-  },
-  {
-    id: 'over40',
-    head: 'C/N over 40 dB',
-    value: (r, _need, system) => formatAreaUp(r.figures.clutterOverKm2.over40, system),
-    key: () => 'clutter_over_40_km2',
-  },
-  {
-    id: 'suppression',
-    head: 'Suppression needed, 90 %',
-    value: (r, need) => formatDbUp(needOf(r, need)?.suppression.p90Db),
-    key: (r, need) => needFigureKey(r, need, 'suppression_needed_90_db'),
-  },
-  {
-    id: 'floor',
-    head: 'Floor at 20 NM, worst',
-    value: (r, _need, system) => formatFloor(floorNear(r)?.worstM, system),
-    key: (r) => {
-      const floor = floorNear(r)
-      return floor ? `floor_${Math.round(floor.rangeM / M_PER_NM)}nm_worst_m` : null
-    },
-  },
-]
-
-/** A stated range without decimals it does not have: `20 NM`, `37 km`. */
-const roundRange = (m: number, system: UnitSystem): string => textOf(formatSetting(toFace('range', m, system), unitOf('range', system), 1))
+import { needOf } from './figuresOf.ts'
 
 /** All options side by side; each figure says what it is and shows where it comes from. */
 export function CompareStep() {
@@ -86,7 +31,7 @@ export function CompareStep() {
   const system = useView((v) => v.units)
   const explaining = useView((v) => v.chart === 'figure')
   const options = studyOptions(doc)
-  const needs = (doc.needs ?? []).filter((n) => n.kind === 'layer')
+  const needs = doc.needs ?? []
   const withTilt = new Set(options.map((o) => o.tiltDeg)).size > 1
   const results = options.flatMap((o) => byOption.get(optionKey(o)) ?? [])
   const show = (option: OptionRef) => view.getState().set({ option })
@@ -98,8 +43,9 @@ export function CompareStep() {
         <Button onPress={() => view.getState().set({ step: 'candidates' })}>Place a candidate</Button>
       </div>
     )
-  const floorRange = results[0] ? floorNear(results[0])?.rangeM : undefined
-  const headOf = (c: Column) => (c.id === 'floor' ? `Floor at ${roundRange(floorRange ?? FLOOR_RANGE_M, system)}, worst` : c.head)
+  const asked = needs.length > 0 && results.every((r) => needOf(r, need))
+  const columns = asked ? NEED_COLUMNS : GROUND_COLUMNS
+  const assessed = results[0] && asked ? needOf(results[0], need) : undefined
   return (
     <div className="compare">
       {needs.length > 1 ? (
@@ -115,13 +61,27 @@ export function CompareStep() {
       <table className="table">
         <caption className="visually-hidden">Options compared</caption>
         <thead>
+          <tr className="groups">
+            <th colSpan={withTilt ? 3 : 2} />
+            {asked ? <th /> : null}
+            {columnGroups(columns).map((g) => (
+              <th key={g.group} scope="colgroup" colSpan={g.span}>
+                {g.group}
+              </th>
+            ))}
+          </tr>
           <tr>
             <th scope="col">Candidate</th>
             <th scope="col">Mast</th>
             {withTilt ? <th scope="col">Tilt</th> : null}
-            {COLUMNS.map((c) => (
+            {asked ? (
+              <th scope="col" className="text">
+                Need
+              </th>
+            ) : null}
+            {columns.map((c) => (
               <th key={c.id} scope="col">
-                {headOf(c)}
+                {c.head(results, system)}
               </th>
             ))}
           </tr>
@@ -133,6 +93,7 @@ export function CompareStep() {
             const first = i === 0 || options[i - 1].candidate !== o.candidate
             const name = doc.candidates.find((c) => c.id === o.candidate)?.name ?? ''
             const on = sameOption(o, shown)
+            const figure = result && asked ? needOf(result, need) : undefined
             return (
               <tr key={key} className={[on ? 'on' : '', first ? 'first' : ''].join(' ')}>
                 <td>
@@ -153,11 +114,12 @@ export function CompareStep() {
                   </AriaButton>
                 </td>
                 {withTilt ? <td>{textOf(formatAngle(o.tiltDeg, 0.1))}</td> : null}
-                {COLUMNS.map((c) => (
+                {asked ? <td className="text verdict">{figure ? verdictOf(figure) : ''}</td> : null}
+                {columns.map((c) => (
                   <td key={c.id}>
                     {result ? (
                       <FigureCell
-                        words={`${headOf(c)} of ${o.candidate} at ${o.heightM} m`}
+                        words={`${c.group}, ${c.head(results, system)}, of ${o.candidate} at ${o.heightM} m`}
                         value={c.value(result, need, system)}
                         onPress={() => {
                           const figure = c.key(result, need)
@@ -174,6 +136,12 @@ export function CompareStep() {
           })}
         </tbody>
       </table>
+      {assessed ? (
+        <p className="ink-2">
+          A need is met by what is usable: at least {textOf(formatMetPct(assessed.requiredPct))} of {MEASURE_WORDS[assessed.measure]}, at
+          the k of the study and at k = 1 to pass
+        </p>
+      ) : null}
       {explaining ? <Explain /> : null}
       <div className="cautions">
         {cautionsFor('compare').map((c) => (
@@ -202,6 +170,7 @@ function Plot(props: {
 }) {
   const box = useRef<HTMLDivElement>(null)
   const [width, setWidth] = useState(0)
+  const known = props.results.every((r) => coverageOf(r, props.need) !== null)
   useLayoutEffect(() => {
     const element = box.current
     if (!element) return
@@ -212,7 +181,9 @@ function Plot(props: {
   return (
     <figure className="plot" ref={box}>
       <figcaption className="ink-2">
-        Coverage against clutter, one line per candidate; more ground in sight is not better by itself
+        {known
+          ? 'Usable share of the need against the area short of suppression, one line per candidate'
+          : 'Ground in sight against clutter, one line per candidate; more ground in sight is not better by itself'}
       </figcaption>
       {width > 0 ? (
         <OptionsChart

@@ -1,19 +1,24 @@
-import type { CellLedger, LedgerLine } from '../../../core/index.ts'
-import { Caution, Mark } from '../../ui/index.ts'
-import { cautionsFor, formatAzimuth, formatMast, formatNumber, formatPlaceRange, NO_VALUE, textOf } from '../../words/index.ts'
-import { useView } from '../session/index.ts'
+import { useMemo } from 'react'
+import type { CellLedger } from '../../../core/index.ts'
+import { Caution, Mark, Value } from '../../ui/index.ts'
+import { cautionsFor, formatAzimuth, formatMast, formatPlaceRange, textOf } from '../../words/index.ts'
+import { useDoc, useView } from '../session/index.ts'
+import { type LedgerGroup, ledgerGroups } from './ledgerGroups.ts'
 
-const SIGN = { start: '', add: '+', subtract: '−', info: '' } as const
-
-/** Every step behind one cell's number: adding the lines of a result gives the result. */
+/** Every step behind one cell's number: each result with its total, and under it the lines that add up to it. */
 export function Ledger({ ledger }: { ledger: CellLedger }) {
   const units = useView((v) => v.units)
-  const { at, option, lines } = ledger
-  const groups = new Map<string, LedgerLine[]>()
-  for (const line of lines) {
-    const of = line.of ?? ''
-    groups.set(of, [...(groups.get(of) ?? []), line])
-  }
+  const needs = useDoc((d) => d.needs)
+  const { at, option } = ledger
+  const groups = useMemo(
+    () =>
+      ledgerGroups(
+        ledger,
+        (needs ?? []).map((n) => ({ id: n.id, name: n.name ?? n.id })),
+        units,
+      ),
+    [ledger, needs, units],
+  )
   return (
     <div className="ledger">
       <h3>
@@ -28,23 +33,8 @@ export function Ledger({ ledger }: { ledger: CellLedger }) {
             <th scope="col">Model and source</th>
           </tr>
         </thead>
-        {[...groups].map(([of, rows]) => (
-          <tbody key={of}>
-            {rows.map((line, i) => (
-              <tr key={line.key}>
-                <td className="text">{line.label}</td>
-                <td>
-                  {SIGN[line.op]} {shownValue(line)}
-                  {line.unit && line.value !== null ? (
-                    <span className="unit">{(line.unit === '°' ? '' : '\u202f') + line.unit}</span>
-                  ) : null}
-                </td>
-                <td className="text source">
-                  {line.mark ? <Mark>{line.mark}</Mark> : null} {i > 0 && originOf(rows[i - 1]) === originOf(line) ? '' : originOf(line)}
-                </td>
-              </tr>
-            ))}
-          </tbody>
+        {groups.map((g) => (
+          <Group key={g.key} group={g} />
         ))}
       </table>
       {cautionsFor('clutter').map((c) => (
@@ -54,12 +44,28 @@ export function Ledger({ ledger }: { ledger: CellLedger }) {
   )
 }
 
-/** Model and source; said once for a run of lines that share them. */
-const originOf = (line: LedgerLine): string => [line.model, line.source].filter(Boolean).join(' · ')
-
-const shownValue = (line: LedgerLine): string => {
-  if (typeof line.value === 'string') return line.value
-  if (line.value === null || !Number.isFinite(line.value)) return NO_VALUE
-  const size = Math.abs(line.value)
-  return formatNumber(line.value, size >= 1000 || Number.isInteger(line.value) ? 0 : size >= 10 ? 1 : 2)
+function Group({ group }: { group: LedgerGroup }) {
+  return (
+    <tbody>
+      <tr className="total">
+        <td className="text">{group.name}</td>
+        <td>{group.total ? <Value of={group.total} /> : null}</td>
+        <td className="text source">
+          {group.onMap ? <span className="on-map">{group.onMap} on the map</span> : null}
+          {group.origin}
+        </td>
+      </tr>
+      {group.rows.map((row) => (
+        <tr key={row.key}>
+          <td className="text">{row.label}</td>
+          <td>
+            {row.sign} <Value of={row.value} />
+          </td>
+          <td className="text source">
+            {row.mark ? <Mark>{row.mark}</Mark> : null} {row.origin}
+          </td>
+        </tr>
+      ))}
+    </tbody>
+  )
 }
