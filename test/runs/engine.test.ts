@@ -4,8 +4,10 @@ import {
   type Ask,
   type CellLedger,
   Engine,
+  fillLayer,
   finish,
   geodesicDirect,
+  type LayerId,
   type OptionRef,
   type OptionResult,
   optionsOfStudy,
@@ -150,10 +152,14 @@ describe('a polar cell and the point at its centre', () => {
 })
 
 describe('cell ledger', () => {
-  it('adds up: start, add and subtract lines of every result give it', () => {
-    const { engine, answers } = started(hillStudy())
+  it('adds up: start, add and subtract lines of every result give it, from range and angles to the signal margin', () => {
+    const doc = hillStudy()
+    doc.atmosphere = { gas: 'p676', rainRateMmH: 4 }
+    doc.radar.suppression = { kind: 'canceller', pulses: 3, stabilityLimitDb: 45, bits: 12 }
+    doc.radar.stc = { kind: 'rtoFourth', cornerM: 4000, maxDb: 40 }
+    const { engine, answers } = started(doc)
     runAll(engine)
-    let summed = 0
+    const summed = new Map<string, number>()
     for (let n = 0; n < 40; n++) {
       const at = geodesicDirect({ lon: 13.74, lat: 48.665 }, (n * 47) % 360, 700 + 160 * n)
       const ledger = finish(answers.ask('ledger', { at, option: A10 })) as CellLedger
@@ -162,10 +168,52 @@ describe('cell ledger', () => {
         if (lines.length === 0 || value === null) continue
         const sum = lines.reduce((s, l) => s + (l.op === 'subtract' ? -1 : 1) * (l.value as number), 0)
         expect(Math.abs(sum - value), `${key} at ${JSON.stringify(ledger.at)}: lines give ${sum}, result ${value}`).toBeLessThan(1e-6)
-        summed++
+        summed.set(key, (summed.get(key) ?? 0) + 1)
       }
     }
-    expect(summed).toBeGreaterThan(120)
+    for (const tail of ['height_margin_m', 'height_margin_k1_m', 'required_ratio_db', 'signal_to_noise_db', 'signal_margin_db'])
+      expect(summed.get(`need_n1_${tail}`), tail).toBe(40)
+    expect(summed.get('need_n1_residue_to_noise_db')).toBeGreaterThan(30)
+    expect(summed.get('need_n1_suppression_needed_db')).toBeGreaterThan(5)
+    expect(summed.get('clutter_to_noise_db')).toBeGreaterThan(30)
+  })
+
+  it('agrees with the layers of the need at cell centres: signal margin, Pd and outcome', () => {
+    const doc = hillStudy()
+    doc.atmosphere = { gas: 'p676', rainRateMmH: 2 }
+    doc.radar.suppression = { kind: 'canceller', pulses: 2 }
+    const { engine, answers } = started(doc)
+    runAll(engine)
+    const o = engine.cells(A10)
+    const need = engine.needOnShow(undefined)
+    if (!o || !need) throw new Error('cells are not held')
+    const layer = (id: LayerId): Float32Array => {
+      const values = new Float32Array(o.site.groundM.length)
+      fillLayer(id, o, need, values)
+      return values
+    }
+    const [margin, pd, outcome] = [layer('signal-margin'), layer('probability-of-detection'), layer('usable')]
+    const { grid } = o.site
+    let compared = 0
+    let worst = 0
+    for (let n = 0; n < 60; n++) {
+      const cell = ((n * 97) % grid.azimuths) * grid.ranges + 8 + ((n * 31) % 80)
+      if (Number.isNaN(margin[cell])) continue
+      const at = geodesicDirect(
+        o.place,
+        Math.floor(cell / grid.ranges) * grid.azimuthStepDeg,
+        ((cell % grid.ranges) + 0.5) * grid.rangeStepM,
+      )
+      const { results, lines } = finish(answers.ask('ledger', { at, option: A10 })) as CellLedger
+      worst = Math.max(worst, Math.abs((results.need_n1_signal_margin_db as number) - margin[cell]))
+      expect(results.need_n1_probability_of_detection).toBeCloseTo(pd[cell], 2)
+      const word = lines.find((l) => l.key === 'n1_outcome')?.value
+      expect(word).toBe(['', 'in sight', 'detectable', 'usable'][outcome[cell]])
+      compared++
+    }
+    console.log(`ledger against layer: ${compared} cells, worst signal margin ${worst.toFixed(4)} dB`)
+    expect(compared).toBeGreaterThan(40)
+    expect(worst).toBeLessThan(0.1)
   })
 })
 

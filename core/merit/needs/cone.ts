@@ -1,9 +1,8 @@
-import { elevationGain } from '../../antenna/index.ts'
 import { elevationAngleDeg, slantRangeM } from '../../geodesy/index.ts'
-import { signalToNoiseDb } from '../../radar/index.ts'
 import type { SettledNeed } from '../../study/index.ts'
-import { toDb } from '../../units/index.ts'
+import { RAD_PER_DEG, toDb } from '../../units/index.ts'
 import { antennaM, meanEffectiveRadiusM, type OptionCells } from '../optionCells.ts'
+import { echoAt, targetSignal } from '../signal/targetSignal.ts'
 import type { ConeFigure } from './needTypes.ts'
 
 const STEP_M = 50
@@ -18,14 +17,15 @@ export function conesOf(o: OptionCells, need: SettledNeed): ConeFigure[] {
   const radius = meanEffectiveRadiusM(o.site)
   const gainOfBankDb = toDb(o.suppression.noiseGain)
   const endM = Math.max(o.radar.instrumentedRangeM, o.site.grid.ranges * o.site.grid.rangeStepM)
+  const signal = targetSignal(o.radar, o.atmosphere, o.tiltDeg, need.rcsM2, endM)
   return need.levelsM.map((levelM) => {
     const targetM = need.heightAbove === 'sea' ? levelM : o.site.siteGroundM + levelM
     if (!(targetM > mast)) return { levelM, radiusM: null }
     const passes = (rangeM: number): boolean => {
-      const gain = elevationGain(o.radar.antenna, elevationAngleDeg(mast, targetM, rangeM, radius), o.tiltDeg)
       const slantM = slantRangeM(mast, targetM, rangeM, radius)
-      const snr = signalToNoiseDb(o.radar, { rcsM2: need.rcsM2, slantRangeM: slantM, transmitGain: gain, receiveGain: gain })
-      return snr + gainOfBankDb >= need.requiredRatioDb
+      const tan = Math.tan(elevationAngleDeg(mast, targetM, rangeM, radius) * RAD_PER_DEG)
+      const { snrDb, stcDb } = echoAt(signal, mast, targetM, rangeM, slantM, tan)
+      return snrDb + stcDb + gainOfBankDb >= need.requiredRatioDb
     }
     let rangeM = CLOSER_M
     if (passes(rangeM)) return { levelM, radiusM: 0 }

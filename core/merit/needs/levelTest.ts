@@ -1,7 +1,7 @@
 import { aboveNoiseDb, roomOverNoiseDb } from '../signal/decibelTables.ts'
 import { twoWayEdgeLossDb } from '../signal/edgeLoss.ts'
+import type { LevelRow } from '../signal/levelRow.ts'
 import type { Overload } from '../signal/receiverLimits.ts'
-import type { LevelRow } from '../signal/targetSignal.ts'
 import { signalLoss } from './lossCause.ts'
 import { lossCode } from './needTypes.ts'
 import { PLACE } from './place.ts'

@@ -2,9 +2,9 @@ import { CELL } from '../../polar/index.ts'
 import type { SettledNeed } from '../../study/index.ts'
 import { toDb, wavelengthM } from '../../units/index.ts'
 import { antennaM, meanEffectiveRadiusM, type OptionCells, residueOf } from '../optionCells.ts'
-import { roomOverNoiseDb } from '../signal/decibelTables.ts'
+import { fillLevelRow, lossesBetween, makeLevelRow, type RowModel } from '../signal/levelRow.ts'
 import { overloadOf } from '../signal/receiverLimits.ts'
-import { fillLevelRow, type HeadModel, makeLevelRow, targetSignal } from '../signal/targetSignal.ts'
+import { targetSignal } from '../signal/targetSignal.ts'
 import { type LevelTest, makeNeedRow, type NeedRow, startRow, testLevel } from './levelTest.ts'
 import { lossCode } from './needTypes.ts'
 import { PLACE } from './place.ts'
@@ -62,23 +62,29 @@ export function scanNeed(
   const mast = antennaM(o)
   const c = 1 / meanEffectiveRadiusM(o.site)
   const noiseGainDb = toDb(o.suppression.noiseGain)
-  const head: HeadModel = {
-    signal: targetSignal(o.radar, o.tiltDeg, need.rcsM2, ranges * rangeStepM * 1.5 + 50_000),
+  const signal = targetSignal(o.radar, o.atmosphere, o.tiltDeg, need.rcsM2, ranges * rangeStepM * 1.5 + 50_000)
+  const [lowM, highM] = signal.loss ? targetHeights(o, need) : [0, 0]
+  const rowModel = (curvature: number): RowModel => ({
+    signal,
     requiredDb: need.requiredRatioDb,
     noiseGainDb,
-    room: roomOverNoiseDb,
-  }
+    mastM: mast,
+    c: curvature,
+    rangeStepM,
+    loss: lossesBetween(signal, grid, mast, curvature, lowM, highM),
+  })
   const { floorM, floorBandM, state } = o.mask
   const residue = residueOf(o)
   const ray = makeRayRow(ranges, rangeStepM, mast, c)
   const aboveSea = need.heightAbove === 'sea'
-  const lowC = o.lowK ? 1 / o.lowK.meanRadiusM : null
+  const model = rowModel(c)
+  const lowModel = o.lowK ? rowModel(1 / o.lowK.meanRadiusM) : null
   const tests = need.levelsM.map(
     (levelM): LevelTest => ({
       levelM,
       aboveSea,
       row: makeLevelRow(ranges),
-      rowLow: lowC === null ? null : makeLevelRow(ranges),
+      rowLow: lowModel && makeLevelRow(ranges),
       ray,
       groundM,
       floorM,
@@ -96,8 +102,8 @@ export function scanNeed(
   )
   const fill = (first: number, last: number, ground: Float32Array | null, from: number): void => {
     for (const t of tests) {
-      fillLevelRow(head, t.row, mast, c, rangeStepM, first, last, t.levelM, ground, from)
-      if (t.rowLow && lowC !== null) fillLevelRow(head, t.rowLow, mast, lowC, rangeStepM, first, last, t.levelM, ground, from)
+      fillLevelRow(model, t.row, first, last, t.levelM, ground, from)
+      if (t.rowLow && lowModel) fillLevelRow(lowModel, t.rowLow, first, last, t.levelM, ground, from)
     }
   }
   if (aboveSea) fill(0, ranges, null, 0)
@@ -117,6 +123,20 @@ export function scanNeed(
     }
   }
   return spans
+}
+
+/** Lowest and highest target of a need, m MSL. */
+function targetHeights(o: OptionCells, need: SettledNeed): [number, number] {
+  const low = Math.min(...need.levelsM)
+  const high = Math.max(...need.levelsM)
+  if (need.heightAbove === 'sea') return [low, high]
+  let lowest = Number.POSITIVE_INFINITY
+  let highest = Number.NEGATIVE_INFINITY
+  for (const h of o.site.groundM) {
+    if (h < lowest) lowest = h
+    if (h > highest) highest = h
+  }
+  return highest >= lowest ? [lowest + low, highest + high] : [low, high]
 }
 
 const UNKNOWN = lossCode('unknown')

@@ -1,6 +1,6 @@
 import { elevationGain } from '../../antenna/index.ts'
-import { decibel, elevationTangent, slantSquared } from '../../clutter/index.ts'
-import { type RadarInput, signalToNoiseDb, stcDb } from '../../radar/index.ts'
+import { type PathLoss, pathLoss, twoWayLossDb, type Weather } from '../../atmosphere/index.ts'
+import { type RadarInput, type RangeSegment, radarConstantDb, rangeSegments, stcDb, targetPolarisationLossDb } from '../../radar/index.ts'
 import { DEG_PER_RAD, RAD_PER_DEG, SPEED_OF_LIGHT_MS, toDb } from '../../units/index.ts'
 
 const GAIN_TO = 0.6
@@ -10,60 +10,93 @@ const STC_STEP_M = 25
 /** Outside the pattern: no echo. */
 const NO_GAIN_DB = -200
 
-/** A radar, tilt and target as loops over places need them: tables of elevation gain and STC, ranges it listens to. */
-export interface TargetSignal {
+/** The radar over the slant ranges that one pulse and one pair of beams serve. */
+export interface SignalSegment {
+  readonly fromM: number
+  readonly toM: number
   readonly radar: RadarInput
-  readonly tiltDeg: number
-  /** S/N of one pulse at 1 m slant range on the beam peak, before STC, dB. */
+  /** Names of the beams; '' for the antenna's own. */
+  readonly beams: string
+  /** S/N of one pulse at 1 m slant range on the beam peak, before STC, without losses of the weather, dB. */
   readonly atOneMetreDb: number
   /** Two-way elevation gain by tangent of elevation from −0.6 to 0.6, dB. */
   readonly gainDb: Float32Array
+  /** Tangent of the elevation of the transmitting beam's peak. */
+  readonly tanPeak: number
+  /** Slant ranges inside this are under the pulse and its recovery; length of the pulse, m. */
+  readonly nearestM: number
+  readonly pulseM: number
+}
+/** A radar, tilt and target as loops over places need them. */
+export interface TargetSignal {
+  readonly radar: RadarInput
+  readonly tiltDeg: number
+  /** Nearest first; a range in none of them is not received. */
+  readonly segments: readonly SignalSegment[]
   /** Attenuation by slant range in steps of 25 m, dB. */
   readonly stcDb: Float32Array
-  readonly tanTilt: number
-  readonly reach: Reach
+  readonly loss: PathLoss | null
+  /** Unambiguous range of each PRF, m; an echo is eclipsed when it meets a later pulse on all of them, or on any where each dwell has to see it. */
+  readonly unambiguousM: readonly number[]
+  readonly anyEclipses: boolean
 }
 
 /** Tables for one radar, tilt and target. Side-lobe floors are for clutter only and are not used here. */
-export function targetSignal(radar: RadarInput, tiltDeg: number, rcsM2: number, longestSlantM: number): TargetSignal {
+export function targetSignal(radar: RadarInput, weather: Weather, tiltDeg: number, rcsM2: number, longestSlantM: number): TargetSignal {
   const stc = new Float32Array(Math.ceil(longestSlantM / STC_STEP_M) + 3)
   if (radar.stc.kind !== 'none') for (let i = 0; i < stc.length; i++) stc[i] = stcDb(radar, i * STC_STEP_M)
+  const targetDb = toDb(rcsM2) - targetPolarisationLossDb(radar)
   return {
     radar,
     tiltDeg,
-    atOneMetreDb: signalToNoiseDb(radar, { rcsM2, slantRangeM: 1 }),
-    gainDb: gainTable(radar, tiltDeg),
+    segments: segmentsOf(radar, tiltDeg).map((s) => ({ ...s, atOneMetreDb: s.atOneMetreDb + targetDb })),
     stcDb: stc,
-    tanTilt: Math.tan(tiltDeg * RAD_PER_DEG),
-    reach: reachOf(radar),
+    loss: pathLoss(weather, radar.frequencyHz, radar.polarisation),
+    unambiguousM: radar.prfHz.map((f) => SPEED_OF_LIGHT_MS / (2 * f)),
+    anyEclipses: radar.prfMode === 'dwellStagger',
   }
 }
 
-/** Gain tables of a radar by tilt: the same for every need and mast height. */
-const gainTables = new WeakMap<RadarInput, Map<number, Float32Array>>()
-function gainTable(radar: RadarInput, tiltDeg: number): Float32Array {
-  const own = gainTables.get(radar) ?? new Map<number, Float32Array>()
-  gainTables.set(radar, own)
-  let table = own.get(tiltDeg)
-  if (!table) {
-    table = Float32Array.from({ length: GAIN_ENTRIES + 2 }, (_, i) => exactGainDb(radar, tiltDeg, i / GAIN_PER_UNIT - GAIN_TO))
-    own.set(tiltDeg, table)
+/** Segments of a radar by tilt, for 1 m²: the same for every need and mast height. */
+const known = new WeakMap<RadarInput, Map<number, readonly SignalSegment[]>>()
+function segmentsOf(radar: RadarInput, tiltDeg: number): readonly SignalSegment[] {
+  const own = known.get(radar) ?? new Map<number, readonly SignalSegment[]>()
+  known.set(radar, own)
+  let segments = own.get(tiltDeg)
+  if (!segments) {
+    segments = rangeSegments(radar).map((s) => segmentOf(s, tiltDeg))
+    own.set(tiltDeg, segments)
   }
-  return table
+  return segments
+}
+function segmentOf({ fromM, toM, radar, beams }: RangeSegment, tiltDeg: number): SignalSegment {
+  return {
+    fromM,
+    toM,
+    radar,
+    beams,
+    atOneMetreDb: radarConstantDb(radar),
+    gainDb: Float32Array.from({ length: GAIN_ENTRIES + 2 }, (_, i) => exactGainDb(radar, tiltDeg, i / GAIN_PER_UNIT - GAIN_TO)),
+    tanPeak: Math.tan((tiltDeg + (radar.antenna.offsetDeg ?? 0)) * RAD_PER_DEG),
+    nearestM: (SPEED_OF_LIGHT_MS * (radar.pulseWidthS + (radar.recoveryS ?? 0))) / 2,
+    pulseM: (SPEED_OF_LIGHT_MS * radar.pulseWidthS) / 2,
+  }
 }
 
-function exactGainDb(radar: RadarInput, tiltDeg: number, tanElevation: number): number {
-  const gain = elevationGain(radar.antenna, Math.atan(tanElevation) * DEG_PER_RAD, tiltDeg)
-  return gain > 1e-10 ? 2 * toDb(gain) : NO_GAIN_DB
+function exactGainDb({ antenna, receiveAntenna }: RadarInput, tiltDeg: number, tanElevation: number): number {
+  const e = Math.atan(tanElevation) * DEG_PER_RAD
+  const transmit = elevationGain(antenna, e, tiltDeg)
+  const gain = transmit * (receiveAntenna ? elevationGain(receiveAntenna, e, tiltDeg) : transmit)
+  return gain > 1e-20 ? toDb(gain) : NO_GAIN_DB
 }
 
-/** Two-way elevation gain toward a target, dB relative to the peak; −200 outside the pattern. */
-export function gainAt(t: TargetSignal, tanElevation: number): number {
+/** Two-way elevation gain of a segment toward a target, dB relative to the peaks; −200 outside the pattern. */
+export function gainAt(t: TargetSignal, s: SignalSegment, tanElevation: number): number {
   const x = (tanElevation + GAIN_TO) * GAIN_PER_UNIT
   const i = x | 0
-  if (!(x >= 0) || i > GAIN_ENTRIES) return exactGainDb(t.radar, t.tiltDeg, tanElevation)
-  const v = t.gainDb[i]
-  return v + (x - i) * (t.gainDb[i + 1] - v)
+  if (!(x >= 0) || i > GAIN_ENTRIES) return exactGainDb(s.radar, t.tiltDeg, tanElevation)
+  const v = s.gainDb[i]
+  return v + (x - i) * (s.gainDb[i + 1] - v)
 }
 
 /** STC attenuation, dB, at a slant range, m. */
@@ -75,102 +108,60 @@ export function stcAt(t: TargetSignal, slantM: number): number {
   return v + Math.min(1, x - i) * (t.stcDb[i + 1] - v)
 }
 
-/** Slant ranges at which the receiver listens, m. */
-export interface Reach {
-  readonly nearestM: number
-  readonly farthestM: number
-  /** Unambiguous range of each PRF; an echo is eclipsed when it meets a later pulse on all of them, or on any where each dwell has to see it. */
-  readonly unambiguousM: readonly number[]
-  readonly anyEclipses: boolean
-  readonly pulseM: number
+/** Number of the segment that holds a slant range, looked for from a guess on; the nearest one where none holds it. */
+export function segmentIndex(t: TargetSignal, slantM: number, guess: number): number {
+  const { segments } = t
+  let s = guess
+  while (s + 1 < segments.length && slantM >= segments[s + 1].fromM) s++
+  while (s > 0 && slantM < segments[s].fromM) s--
+  return s
 }
-function reachOf(r: RadarInput): Reach {
-  const pulseM = (SPEED_OF_LIGHT_MS * r.pulseWidthS) / 2
-  return {
-    nearestM: (SPEED_OF_LIGHT_MS * (r.pulseWidthS + (r.recoveryS ?? 0))) / 2,
-    farthestM: r.instrumentedRangeM,
-    unambiguousM: r.prfHz.map((f) => SPEED_OF_LIGHT_MS / (2 * f)),
-    anyEclipses: r.prfMode === 'dwellStagger',
-    pulseM,
-  }
-}
-/** Is an echo from a slant range heard: past the pulse and its recovery, inside the instrumented range, not eclipsed by a later pulse? */
-export function isHeard(r: Reach, slantM: number): boolean {
-  if (slantM < r.nearestM || slantM > r.farthestM) return false
+
+/** Is an echo heard: in a segment, past the pulse and its recovery, inside the instrumented range, not eclipsed by a later pulse? */
+export function isHeard(t: TargetSignal, s: SignalSegment, slantM: number): boolean {
+  if (slantM < s.fromM || slantM >= s.toM || slantM < s.nearestM || slantM > t.radar.instrumentedRangeM) return false
   let eclipsed = 0
-  for (const u of r.unambiguousM) {
-    if (slantM + r.pulseM <= u) continue
+  for (const u of t.unambiguousM) {
+    if (slantM + s.pulseM <= u) continue
     const apparent = slantM % u
-    if (apparent < r.nearestM || apparent > u - r.pulseM) eclipsed++
+    if (apparent < s.nearestM || apparent > u - s.pulseM) eclipsed++
   }
-  return r.anyEclipses ? eclipsed === 0 : eclipsed < r.unambiguousM.length
+  return t.anyEclipses ? eclipsed === 0 : eclipsed < t.unambiguousM.length
 }
 
-/** Echo of a target at one level along a ray, by range cell. */
-export interface LevelRow {
-  readonly slantM: Float32Array
-  /** S/N after pattern and STC less the required ratio, with the gain of a filter bank, dB. */
-  readonly headDb: Float32Array
-  /** Residue over noise that the echo bears and still passes, dB; −Infinity where it is too weak. */
-  readonly roomDb: Float32Array
-  readonly gainDb: Float32Array
-  readonly stcDb: Float32Array
-  /** 1 where the receiver listens. */
-  readonly heard: Uint8Array
-  /** 1 where the target stands above the beam peak. */
-  readonly above: Uint8Array
+/** Echo of a target at one place; dB. */
+export interface TargetEcho {
+  readonly segment: SignalSegment
+  readonly gainDb: number
+  readonly stcDb: number
+  /** Gas and rain, both ways. */
+  readonly lossDb: number
+  /** S/N of one pulse after STC. */
+  readonly snrDb: number
+  readonly heard: boolean
+  /** Above the peak of the transmitting beam? */
+  readonly above: boolean
 }
-export const makeLevelRow = (ranges: number): LevelRow => ({
-  slantM: new Float32Array(ranges),
-  headDb: new Float32Array(ranges),
-  roomDb: new Float32Array(ranges),
-  gainDb: new Float32Array(ranges),
-  stcDb: new Float32Array(ranges),
-  heard: new Uint8Array(ranges),
-  above: new Uint8Array(ranges),
-})
-
-/** What turns geometry into `headDb`: the ratio asked for and the gain of a bank over noise, dB. */
-export interface HeadModel {
-  readonly signal: TargetSignal
-  readonly requiredDb: number
-  readonly noiseGainDb: number
-  readonly room: (headDb: number) => number
-}
-
-/**
- * Fills cells first … last−1 of a row: target at `aboveM` over sea level, or over the ground where `groundM` is given (its row starts at `from`).
- * `c` = 1 / effective earth radius, 0 = flat.
- */
-export function fillLevelRow(
-  m: HeadModel,
-  row: LevelRow,
-  mastM: number,
-  c: number,
-  rangeStepM: number,
-  first: number,
-  last: number,
-  aboveM: number,
-  groundM: Float32Array | null,
-  from: number,
-): void {
-  const { signal, requiredDb, noiseGainDb } = m
-  const base = signal.atOneMetreDb - requiredDb + noiseGainDb
-  for (let j = first; j < last; j++) {
-    const r = (j + 0.5) * rangeStepM
-    const targetM = groundM ? groundM[from + j] + aboveM : aboveM
-    const slant2 = slantSquared(mastM, targetM, r, c)
-    const slant = Math.sqrt(slant2)
-    const tan = elevationTangent(mastM, targetM, r, c)
-    const gain = gainAt(signal, tan)
-    const stc = stcAt(signal, slant)
-    const head = base + gain - 2 * decibel(slant2) - stc
-    row.slantM[j] = slant
-    row.gainDb[j] = gain
-    row.stcDb[j] = stc
-    row.headDb[j] = head
-    row.roomDb[j] = m.room(head) - noiseGainDb
-    row.heard[j] = isHeard(signal.reach, slant) ? 1 : 0
-    row.above[j] = tan > signal.tanTilt ? 1 : 0
+/** The echo of a target at a slant and ground range (m), an elevation (tangent, at the antenna) and a height (m MSL). Source: radar equation (Skolnik). */
+export function echoAt(
+  t: TargetSignal,
+  antennaM: number,
+  targetM: number,
+  rangeM: number,
+  slantM: number,
+  tanElevation: number,
+): TargetEcho {
+  const segment = t.segments[segmentIndex(t, slantM, 0)]
+  const gainDb = gainAt(t, segment, tanElevation)
+  const stc = stcAt(t, slantM)
+  const lossDb = twoWayLossDb(t.loss, antennaM, targetM, rangeM, slantM)
+  return {
+    segment,
+    gainDb,
+    stcDb: stc,
+    lossDb,
+    snrDb: segment.atOneMetreDb + gainDb - 40 * Math.log10(slantM) - stc - lossDb,
+    heard: isHeard(t, segment, slantM),
+    above: tanElevation > segment.tanPeak,
   }
 }

@@ -8,7 +8,7 @@ import { aboveNoiseDb } from '../../signal/decibelTables.ts'
 import { twoWayEdgeLossDb } from '../../signal/edgeLoss.ts'
 import { pdOf } from '../../signal/pdOf.ts'
 import { overloadOf } from '../../signal/receiverLimits.ts'
-import { gainAt, isHeard, stcAt, type TargetSignal, targetSignal } from '../../signal/targetSignal.ts'
+import { echoAt, type TargetEcho, type TargetSignal, targetSignal } from '../../signal/targetSignal.ts'
 import { signalLoss, signalMarginDb } from '../lossCause.ts'
 import { type FixFigure, lossCauseAt, lossCode } from '../needTypes.ts'
 import type { NeedPlace } from './types.ts'
@@ -61,7 +61,13 @@ export interface PlaceModel {
 }
 export function placeModel(o: OptionCells, need: SettledNeed): PlaceModel {
   const { ranges, rangeStepM } = o.site.grid
-  const signal = targetSignal(o.radar, o.tiltDeg, need.rcsM2, Math.max(ranges * rangeStepM, o.radar.instrumentedRangeM) * 1.5 + 50_000)
+  const signal = targetSignal(
+    o.radar,
+    o.atmosphere,
+    o.tiltDeg,
+    need.rcsM2,
+    Math.max(ranges * rangeStepM, o.radar.instrumentedRangeM) * 1.5 + 50_000,
+  )
   return { o, need, signal, noiseGainDb: toDb(o.suppression.noiseGain) }
 }
 
@@ -72,26 +78,21 @@ export interface Response {
 }
 export const MEAN_RESPONSE: Response = { echoDb: 0, residueDb: 0 }
 
-interface Echo {
+interface Echo extends TargetEcho {
   readonly slantM: number
-  readonly elevationDeg: number
-  readonly headDb: number
-  readonly gainDb: number
-  readonly stcDb: number
+  /** Loss close over the mask, dB. */
   readonly edgeDb: number
-  readonly above: boolean
+  /** S/N with that loss, less the required ratio, with a bank's gain, dB. */
+  readonly headDb: number
 }
 function echoOf(m: PlaceModel, s: SightPoint, targetM: number, radiusM: number): Echo {
   const { o, signal, need } = m
   const mast = antennaM(o)
-  const elevationDeg = elevationAngleDeg(mast, targetM, s.rangeM, radiusM)
-  const tan = Math.tan(elevationDeg * RAD_PER_DEG)
   const slantM = slantRangeM(mast, targetM, s.rangeM, radiusM)
-  const gainDb = gainAt(signal, tan)
-  const stcDb = stcAt(signal, slantM)
+  const tan = Math.tan(elevationAngleDeg(mast, targetM, s.rangeM, radiusM) * RAD_PER_DEG)
+  const echo = echoAt(signal, mast, targetM, s.rangeM, slantM, tan)
   const edgeDb = twoWayEdgeLossDb(targetM - s.floorM, s.rangeM, s.controlling.rangeM, wavelengthM(o.radar.frequencyHz))
-  const snrDb = signal.atOneMetreDb + gainDb - 40 * Math.log10(slantM) - stcDb - edgeDb
-  return { slantM, elevationDeg, gainDb, stcDb, edgeDb, headDb: snrDb - need.requiredRatioDb + m.noiseGainDb, above: tan > signal.tanTilt }
+  return { ...echo, slantM, edgeDb, headDb: echo.snrDb - edgeDb - need.requiredRatioDb + m.noiseGainDb }
 }
 
 /** Clutter of the resolution cell a target shares: residue over noise before STC, dB, NaN where none; null beyond the grid, where nothing was worked out. */
@@ -134,7 +135,7 @@ export function checkPlace(m: PlaceModel, at: NeedPlace, seen: PlaceSight, respo
     }
   const echo = echoOf(m, sight, targetM, radiusOf(o.earth, o.place.lat, sight.azimuthDeg))
   const residueDb = residueAt(o, sight, echo.slantM, echo.stcDb)
-  const heard = isHeard(m.signal.reach, echo.slantM)
+  const { heard } = echo
   const parts = {
     headDb: echo.headDb,
     gainDb: echo.gainDb,
@@ -193,7 +194,7 @@ function atLowK(
   const visibleLowK = visibleFrom(low, targetM)
   if (visibleLowK !== 'yes') return { visibleLowK, detectableLowK: false, usableLowK: false }
   const echo = echoOf(m, low, targetM, radiusOf(o.lowK.earth, o.place.lat, low.azimuthDeg))
-  const detectableLowK = isHeard(m.signal.reach, echo.slantM) && echo.headDb >= 0
+  const detectableLowK = echo.heard && echo.headDb >= 0
   const over =
     residueDb === null
       ? Number.NEGATIVE_INFINITY
