@@ -5,6 +5,8 @@ export interface CommitFieldProps {
   readonly label: ReactNode
   /** The stored value as text. */
   readonly text: string
+  /** Shorter text of the same value, shown while the field is not focused. */
+  readonly restText?: string
   /** Takes the typed text; returns why it cannot be used, or null. Called on Enter and on leaving, only when the text has changed. */
   readonly onCommit: (text: string) => string | null
   readonly placeholder?: string
@@ -30,6 +32,7 @@ export const SHAPES = { row: 'in-line', long: 'roomy', wide: 'under' } as const
 export function CommitField(props: CommitFieldProps) {
   const { text, onCommit, shape = 'row', numeric, rows, unit, marks, help, placeholder } = props
   const [typed, setTyped] = useState<string | null>(null)
+  const [focused, setFocused] = useState(false)
   const [refused, setWhy] = useState<string | null>(null)
   const why = refused ?? props.trouble ?? null
   const input = useRef<HTMLInputElement & HTMLTextAreaElement>(null)
@@ -64,11 +67,15 @@ export function CommitField(props: CommitFieldProps) {
       setWhy(null)
     }
   }
-  const shared = { ref: input, placeholder, onBlur: commit, onKeyDown, spellCheck: false }
+  const onBlur = () => {
+    setFocused(false)
+    commit()
+  }
+  const shared = { ref: input, placeholder, onFocus: () => setFocused(true), onBlur, onKeyDown, spellCheck: false }
   return (
     <AriaTextField
       className={`field ${SHAPES[shape]}`}
-      value={typed ?? text}
+      value={typed ?? (focused ? text : (props.restText ?? text))}
       onChange={setTyped}
       isInvalid={why !== null}
       aria-describedby={why || help ? helpId : undefined}
@@ -77,7 +84,7 @@ export function CommitField(props: CommitFieldProps) {
       {props.hideLabel ? null : (
         <Label>
           {props.label}
-          {marks ? <span className="marks">{marks}</span> : null}
+          {marks ? <span className="marks"> {marks}</span> : null}
         </Label>
       )}
       {rows ? <TextArea rows={rows} {...shared} /> : <Input className={numeric ? 'number' : ''} autoComplete="off" {...shared} />}

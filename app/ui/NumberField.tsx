@@ -3,7 +3,7 @@ import type { Limit } from '../../core/index.ts'
 import type { FaceUnit } from '../words/index.ts'
 import { CommitField } from './CommitField.tsx'
 import { Mark } from './Marks.tsx'
-import { allowedAtFace, fieldText, readNumber } from './readNumber.ts'
+import { allowedAtFace, fieldText, readNumber, restText } from './readNumber.ts'
 
 export interface NumberFieldProps {
   readonly label: ReactNode
@@ -33,7 +33,7 @@ export interface NumberFieldProps {
 export function NumberField(props: NumberFieldProps) {
   const { value, face, limit, fallback, fallbackWords, required } = props
   const stated = value !== undefined && value !== null
-  const standIn = fallbackWords ?? (fallback !== undefined && fallback !== null ? fieldText(fallback, face) : '')
+  const standIn = fallbackWords ?? (fallback !== undefined && fallback !== null ? restText(fallback, face) : '')
   const commit = (text: string): string | null => {
     const read = readNumber(text, face, limit)
     if (!read.ok) return read.why
@@ -45,6 +45,7 @@ export function NumberField(props: NumberFieldProps) {
     <CommitField
       label={props.label}
       text={fieldText(value, face)}
+      restText={restText(value, face)}
       onCommit={commit}
       unit={face.unit}
       numeric

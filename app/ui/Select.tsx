@@ -28,7 +28,7 @@ export function Select<T extends string>({ label, value, choices, onChange, mark
       {hideLabel ? null : (
         <Label className="label">
           {label}
-          {marks ? <span className="marks">{marks}</span> : null}
+          {marks ? <span className="marks"> {marks}</span> : null}
         </Label>
       )}
       <Button className="select-button">

@@ -15,6 +15,22 @@ export function fieldText(si: number | null | undefined, face: FaceUnit): string
   return String(Number((si / face.size).toPrecision(decimal(face.size) ? DIGITS : CONVERTED_DIGITS))).replace('-', '−')
 }
 
+/** The same while the field is not worked on: a converted value of five digits only shows what conversion did to it; three or four say as much. */
+export function restText(si: number | null | undefined, face: FaceUnit): string {
+  const whole = fieldText(si, face)
+  if (whole === '' || si === null || si === undefined || decimal(face.size)) return whole
+  if (
+    whole
+      .replace(/^−?0*\.?0*/, '')
+      .replace('.', '')
+      .replace(/0+$/, '').length <=
+    CONVERTED_DIGITS - 1
+  )
+    return whole
+  const value = si / face.size
+  return String(Number(value.toPrecision(Math.abs(value) >= 1000 ? 4 : 3))).replace('-', '−')
+}
+
 /** What may stand in a field, in face units: "give 0.03 to 40 GHz". */
 export function allowedAtFace(limit: Limit, face: FaceUnit): string {
   const low = fieldText(limit.low, face)

@@ -3,7 +3,7 @@ import type { LayerId } from '../../core/index.ts'
 /** What a result of a cell's ledger is called, and the map layer that shows it, rounded. */
 export interface LedgerWords {
   readonly name: string
-  readonly unit: 'dB' | 'dBsm' | 'm' | 'deg'
+  readonly unit: 'dB' | 'dBsm' | 'm' | 'deg' | ''
   readonly layer: LayerId | null
   /** Place in the ledger: what the reader came for stands first. */
   readonly rank: number
@@ -19,15 +19,20 @@ const RESULTS: Readonly<Record<string, LedgerWords>> = {
 }
 const NEED: readonly (readonly [tail: string, LedgerWords])[] = [
   ['suppression_needed_db', words('suppression needed', 'dB', 'suppression-needed', 0)],
-  ['signal_to_noise_db', words('S/N', 'dB', null, 1)],
-  ['height_margin_m', words('height margin', 'm', null, 2)],
+  ['signal_margin_db', words('signal margin', 'dB', 'signal-margin', 1)],
+  ['probability_of_detection', words('probability of detection', '', 'probability-of-detection', 2)],
+  ['signal_to_noise_db', words('S/N', 'dB', null, 3)],
+  ['residue_to_noise_db', words('residue over noise', 'dB', null, 4)],
+  ['required_ratio_db', words('required ratio', 'dB', null, 5)],
+  ['height_margin_m', words('height margin', 'm', null, 6)],
+  ['height_margin_k1_m', words('height margin at k = 1', 'm', null, 7)],
 ]
 /** Words of a result by its key; a need's result carries the need's name. Undefined for a key this version does not know. */
 export function ledgerWords(key: string, needs: readonly { readonly id: string; readonly name: string }[]): LedgerWords | undefined {
   if (RESULTS[key]) return RESULTS[key]
   for (const [at, { id, name }] of needs.entries())
     for (const [tail, w] of NEED)
-      if (key === `need_${id}_${tail}`) return { ...w, name: `${name}: ${w.name}`, rank: 2 + (w.rank + 3 * at) / 1000 }
+      if (key === `need_${id}_${tail}`) return { ...w, name: `${name}: ${w.name}`, rank: 2 + (w.rank + 8 * at) / 1000 }
   return undefined
 }
 /** Lines that are read by no result: where the place is and what stands between. */

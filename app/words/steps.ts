@@ -190,6 +190,9 @@ export const STEP_WORDS = {
   memo: { name: 'Memo' },
 } as const
 
+/** What to do about the radar of a new study; stands after the remark that it is none. */
+export const STARTING_ADVICE = ': enter yours and name it before relying on any figure'
+
 /** Empty states: the next action and a one-line reason. */
 export const EMPTY_WORDS = {
   ground: {

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { allowedAtFace, fieldText, readNumber, readNumbers } from '../../app/ui/readNumber.ts'
+import { allowedAtFace, fieldText, readNumber, readNumbers, restText } from '../../app/ui/readNumber.ts'
 import { limitOf } from '../../core/index.ts'
 
 const GHZ = { unit: 'GHz', size: 1e9 }
@@ -7,6 +7,16 @@ const FT = { unit: 'ft', size: 0.3048 }
 const frequency = limitOf('radar.frequencyHz')
 
 describe('number fields', () => {
+  it('show three or four digits of a converted value at rest, the whole value when worked on', () => {
+    expect(fieldText(90, FT)).toBe('295.28')
+    expect(restText(90, FT)).toBe('295')
+    expect(restText(800, FT)).toBe('2625')
+    expect(restText(30_000, { unit: 'NM', size: 1852 })).toBe('16.2')
+    expect(restText(1852 * 1.125, { unit: 'NM', size: 1852 })).toBe('1.125')
+    expect(restText(-90, FT)).toBe('−295')
+    expect(restText(2.7512345e9, GHZ)).toBe(fieldText(2.7512345e9, GHZ))
+    expect(restText(undefined, FT)).toBe('')
+  })
   it('take face units, keep SI', () => {
     expect(readNumber('2.75', GHZ, frequency)).toEqual({ ok: true, value: 2.75e9 })
     expect(readNumber('1000', FT)).toEqual({ ok: true, value: 304.8 })

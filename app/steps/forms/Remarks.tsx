@@ -1,6 +1,6 @@
 import { useMemo } from 'react'
 import { Caution } from '../../ui/Marks.tsx'
-import { COSECANT_FIELD, RADAR_FIELDS } from '../../words/index.ts'
+import { COSECANT_FIELD, RADAR_FIELDS, STARTING_ADVICE } from '../../words/index.ts'
 import { useDoc } from '../session/index.ts'
 import { remarksOf } from '../settled.ts'
 
@@ -12,7 +12,7 @@ function faceWords(remark: string): string {
   const path = PATH.exec(remark)?.[0] ?? ''
   const label = LABELS.get(path.replace(/:?\s+$/, ''))
   const rest = remark.slice(path.length)
-  const text = label ? `${label}: ${rest}` : rest
+  const text = label ? `${label}: ${rest}` : rest + (rest.startsWith('starting values') ? STARTING_ADVICE : '')
   return text.charAt(0).toUpperCase() + text.slice(1)
 }
 

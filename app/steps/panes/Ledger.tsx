@@ -51,7 +51,7 @@ function Group({ group }: { group: LedgerGroup }) {
         <td className="text">{group.name}</td>
         <td>{group.total ? <Value of={group.total} /> : null}</td>
         <td className="text source">
-          {group.onMap ? <span className="on-map">{group.onMap} on the map</span> : null}
+          {group.onMap ? <span className="on-map">rounded {group.onMap}</span> : null}
           {group.origin}
         </td>
       </tr>

@@ -28,7 +28,7 @@ export interface LedgerGroup {
   readonly key: string
   readonly name: string
   readonly total: Quantity | null
-  /** The same number as the map shows it, rounded to the safe side; '' where no layer shows it. */
+  /** The same number rounded to the safe side as its layer does; '' where no layer shows it. */
   readonly onMap: string
   /** Model and source of most of its lines. */
   readonly origin: string
@@ -88,5 +88,6 @@ function faceValue({ key, value, unit }: Pick<LedgerLine, 'key' | 'value' | 'uni
   if (unit === 'm' && (key === 'mast_height' || key === 'height_to_see_m')) return formatMast(value)
   if (unit === 'm' && key.includes('range')) return { value: formatNumber(toFace('range', value, units), 2), unit: unitOf('range', units) }
   if (unit === 'm') return { value: formatNumber(toFace('height', value, units), 1), unit: unitOf('height', units) }
+  if (key.endsWith('probability_of_detection')) return { value: formatNumber(value, 3), unit: '' }
   return { value: formatNumber(value, 2), unit }
 }

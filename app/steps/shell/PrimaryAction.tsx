@@ -15,7 +15,13 @@ export function PrimaryAction() {
   const picker = useFilePicker()
   const memo = useMemoExport()
   const go = (to: StepId) => () => view.getState().set({ step: to, formOpen: true })
+  const place = () => view.getState().set({ step: 'candidates', placing: true, formOpen: true })
   const action = ((): { words: string; run: () => void; disabled?: boolean } => {
+    // what these steps work on is not there yet: the action that brings it
+    if (step === 'candidates' || step === 'compare' || step === 'memo') {
+      if (!hasGround) return { words: 'Add terrain', run: picker.open }
+      if (candidates === 0 && !placing) return { words: step === 'candidates' ? 'Place on map' : 'Place a candidate', run: place }
+    }
     switch (step) {
       case 'ground':
         return hasGround ? { words: 'Radar next', run: go('radar') } : { words: 'Add terrain', run: picker.open }
@@ -27,7 +33,7 @@ export function PrimaryAction() {
         if (candidates > 0 && !placing) return { words: 'Compare', run: go('compare') }
         return placing
           ? { words: 'Stop placing', run: () => view.getState().set({ placing: false }) }
-          : { words: 'Place on map', run: () => view.getState().set({ placing: true, formOpen: true }), disabled: !hasGround }
+          : { words: 'Place on map', run: place }
       case 'compare':
         return { words: 'Write memo', run: go('memo') }
       case 'memo':

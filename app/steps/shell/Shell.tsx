@@ -46,7 +46,7 @@ export function Shell() {
   const Form = FORMS[step]
   const whole = WHOLE_SHEET.has(step)
   return (
-    <div className="shell" data-form={formOpen ? 'open' : 'closed'} data-memo={memoOpen ? 'open' : 'closed'}>
+    <div className="shell" data-step={step} data-form={formOpen ? 'open' : 'closed'} data-memo={memoOpen ? 'open' : 'closed'}>
       <FaultBoundary>
         <TopBar />
       </FaultBoundary>

@@ -79,14 +79,20 @@ export function TopBar() {
       <span className="spacer" />
       <Button
         look="quiet"
+        className="switch"
         onPress={() => set({ units: units === 'nautical' ? 'metric' : 'nautical' })}
         label={`Units: ${UNIT_SYSTEM_NAMES[units]}; press to change`}
       >
         {UNIT_SYSTEM_NAMES[units]}
       </Button>
-      <span className="word">true north</span>
+      <span className="plain">true north</span>
       <UndoRedo />
-      <Button look="quiet" onPress={() => set({ theme: theme === 'night' ? 'paper' : 'night' })} label={`Sheet: ${theme}; press to change`}>
+      <Button
+        look="quiet"
+        className="switch"
+        onPress={() => set({ theme: theme === 'night' ? 'paper' : 'night' })}
+        label={`Sheet: ${theme}; press to change`}
+      >
         {theme}
       </Button>
       <Button look="quiet" className="fold" active={memoOpen} onPress={() => set({ memoOpen: !memoOpen })}>
