@@ -29,6 +29,8 @@ export function sightPass(r: RayRunner, p: CellProfile, cuts: Cuts, whole: Uint8
   let m = s[RUN.tangent]
   let nearX = 0
   let passed = false
+  // does the state hold the surface at the near edge?
+  let ready = false
   for (let j = 0; j < known; j++) {
     const i = offset + j
     const farX = cutX[2 * j + 1]
@@ -39,12 +41,15 @@ export function sightPass(r: RayRunner, p: CellProfile, cuts: Cuts, whole: Uint8
       floorBandM[i] = groundErrorM
       nearX = farX
       passed = true
+      ready = false
       continue
     }
     if (passed) {
       // a run of cells seen whole has ended: the highest line is the one to its far edge
       passed = false
-      surfaceAt(line, at[2 * j - 1], nearX, s)
+      s[RUN.endX] = nearX
+      surfaceAt(line, at[2 * j - 1], s)
+      ready = true
       s[RUN.controlX] = nearX
       s[RUN.tangent] = (s[RUN.toY] - antennaY) / nearX
       m = s[RUN.tangent]
@@ -55,15 +60,24 @@ export function sightPass(r: RayRunner, p: CellProfile, cuts: Cuts, whole: Uint8
     let tangent = m
     let touchedX = s[RUN.controlX]
     if (cell[3 * j + 2] > antennaY + m * (m > 0 ? nearX : farX)) {
+      const first = j > 0 ? at[2 * j - 1] : 1
+      const middle = at[2 * j]
+      if (!ready) {
+        s[RUN.endX] = nearX
+        surfaceAt(line, first, s)
+        ready = true
+      }
       s[RUN.seenX] = 0
-      walk(line, j > 0 ? at[2 * j - 1] : 1, nearX, at[2 * j], centreX, s)
+      s[RUN.endX] = centreX
+      walk(line, first, middle, s)
       tangent = s[RUN.tangent]
       touchedX = s[RUN.controlX]
-      walk(line, at[2 * j], centreX, at[2 * j + 1], farX, s)
+      s[RUN.endX] = farX
+      walk(line, middle, at[2 * j + 1], s)
       share = s[RUN.seenX] / (farX - nearX)
       if (share >= UNBROKEN) whole[j] = 1
       m = s[RUN.tangent]
-    }
+    } else ready = false
     if (spiked) s[RUN.errorM] = controlErrorM(r, touchedX)
     const errorM = s[RUN.errorM]
     // the line so far at the centre, back to metres (heightOfY)
@@ -90,16 +104,23 @@ export function sightPass(r: RayRunner, p: CellProfile, cuts: Cuts, whole: Uint8
     }
   }
   if (passed) {
-    surfaceAt(line, at[2 * known - 1], nearX, s)
+    s[RUN.endX] = nearX
+    surfaceAt(line, at[2 * known - 1], s)
     s[RUN.controlX] = nearX
     s[RUN.tangent] = (s[RUN.toY] - antennaY) / nearX
   }
   // a ray that ends in the middle of a cell: the horizon needs the rest
-  if (p.count > 1) walk(line, known > 0 ? at[2 * known - 1] : 1, nearX, p.count - 1, line[3 * p.count - 3], s)
+  if (p.count < 2) return
+  const first = known > 0 ? at[2 * known - 1] : 1
+  s[RUN.endX] = nearX
+  surfaceAt(line, first, s)
+  s[RUN.endX] = line[3 * p.count - 3]
+  walk(line, first, p.count - 1, s)
 }
 
-/** Sets to… of the state to the surface at X inside the segment that ends at crossing `ends`. */
-function surfaceAt(line: Float64Array, ends: number, x: number, s: RunState): void {
+/** Sets to… of the state to the surface at X = endX inside the segment that ends at crossing `ends`. */
+function surfaceAt(line: Float64Array, ends: number, s: RunState): void {
+  const x = s[RUN.endX]
   const i = 3 * ends
   const x0 = line[i - 3]
   const y0 = line[i - 2]
@@ -115,15 +136,12 @@ function surfaceAt(line: Float64Array, ends: number, x: number, s: RunState): vo
 }
 
 /**
- * Runs from X = fromX, in the segment that ends at crossing `first`, to X = toX in the one that ends at `last`, raising the highest line. The surface at
- * both is taken inside the segments.
+ * Runs from the place in to… of the state, in the segment that ends at crossing `first`, to X = endX in the one that ends at `last`, raising the highest
+ * line; leaves the place there in to….
  */
-function walk(line: Float64Array, first: number, fromX: number, last: number, toX: number, s: RunState): void {
+function walk(line: Float64Array, first: number, last: number, s: RunState): void {
+  const toX = s[RUN.endX]
   const antennaY = s[RUN.antennaY]
-  surfaceAt(line, last, toX, s)
-  const endX = s[RUN.toX]
-  const endY = s[RUN.toY]
-  surfaceAt(line, first, fromX, s)
   let x0 = s[RUN.toX]
   let y0 = s[RUN.toY]
   let m = s[RUN.tangent]
@@ -131,10 +149,16 @@ function walk(line: Float64Array, first: number, fromX: number, last: number, to
   let seenX = s[RUN.seenX]
   for (let k = first; k <= last; k = (k + 1) | 0) {
     const i = Math.imul(k, 3)
-    const x1 = k === last ? endX : line[i]
-    const y1 = k === last ? endY : line[(i + 1) | 0]
+    let x1 = line[i]
+    let y1 = line[(i + 1) | 0]
     const c = line[(i - 1) | 0]
-    const length = x1 - x0
+    let length = x1 - x0
+    if (k === last && toX < x1) {
+      const u = toX - x0
+      y1 = y0 + u * ((y1 - y0) / length + c * (u - length))
+      x1 = toX
+      length = u
+    }
     const bow = Math.abs(c) * length * length
     let g1 = y1 - antennaY - m * x1
     if (g1 > 0 || (g0 > g1 ? g0 : g1) + 0.25 * bow > 0) {
@@ -163,6 +187,8 @@ function walk(line: Float64Array, first: number, fromX: number, last: number, to
     y0 = y1
     g0 = g1
   }
+  s[RUN.toX] = x0
+  s[RUN.toY] = y0
   s[RUN.tangent] = m
   s[RUN.seenX] = seenX
 }

@@ -4,7 +4,8 @@ import type { StraightProfile } from './profile.ts'
 export const NO_TANGENT = -1e300
 
 /**
- * State of a run outward from one antenna, in one array so that hot loops pass no numbers about; the indices below. `from…` and `to…` are the segment
+ * State of a run outward from one antenna, in one array: a number handed from function to function costs an object, one read from an array does not.
+ * Indices below; `from…` and `to…` are the segment
  * that `raise` is asked about.
  */
 export type RunState = Float64Array
@@ -24,8 +25,10 @@ export const RUN = {
   bend: 8,
   /** 90 % error of what the line touches, m (the sweep's). */
   errorM: 9,
+  /** Where a piece of the run ends (the sweep's). */
+  endX: 10,
 } as const
-export const makeRunState = (): RunState => new Float64Array(10)
+export const makeRunState = (): RunState => new Float64Array(11)
 export function startRun(s: RunState, antennaY: number): void {
   s[RUN.antennaY] = antennaY
   s[RUN.tangent] = NO_TANGENT

@@ -18,6 +18,13 @@ export interface SweepKeys {
   readonly site?: string
   readonly masks?: readonly string[]
 }
+export interface SweepOptions {
+  readonly keys?: SweepKeys
+  /** false leaves heightToSeeM empty (length 0), to be made by `heightToSeeCells` when it is asked for: it takes about as long as one height. */
+  readonly heightToSee?: boolean
+  /** true leaves all arrays of the site cells empty. */
+  readonly sightOnly?: boolean
+}
 /** About this many points of rays are run between two yields: a few milliseconds. */
 const POINTS_PER_TURN = 60_000
 
@@ -33,14 +40,14 @@ export function* sweep(
   heightsM: readonly number[],
   grid: PolarShape,
   earth: Earth,
-  options: { readonly keys?: SweepKeys; readonly sightOnly?: boolean } = {},
+  options: SweepOptions = {},
 ): Work<{ site: SiteCells; masks: SightCells[] }> {
   const { azimuths, ranges } = grid
   const cuts = uniformCuts(ranges, grid.rangeStepM)
   const r = makeRunner(g, site, ranges * grid.rangeStepM, 0, grid.azimuthStepDeg)
   const track = r.tracer.track
   const p = makeCellProfile(track.surface.length, ranges)
-  const hull = makeHull(track.surface.length, ranges)
+  const hull = options.heightToSee === false || options.sightOnly ? null : makeHull(track.surface.length, ranges)
   const cells = options.sightOnly ? 0 : azimuths * ranges
   const siteCells = {
     kind: 'site' as const,
@@ -51,7 +58,7 @@ export function* sweep(
     code: new Uint8Array(cells),
     relief: new Uint8Array(cells),
     slopePermille: new Int16Array(cells),
-    heightToSeeM: new Float32Array(cells),
+    heightToSeeM: new Float32Array(hull ? cells : 0),
     siteGroundM: r.siteGroundM,
     effectiveRadiusM: new Float64Array(azimuths),
   }
@@ -94,11 +101,11 @@ export function* sweep(
       writeGround(groundM, slope, known, siteCells, offset)
     }
     r.tracer.sampleCells(centres, known, siteCells.code, siteCells.relief, offset)
-    heightsToSee(p, cuts, r.siteGroundM, r.inverse, g.postingM, hull, siteCells.heightToSeeM, offset)
+    if (hull) heightsToSee(p, cuts, r.siteGroundM, r.inverse, g.postingM, hull, siteCells.heightToSeeM, offset)
     siteCells.groundM.fill(Number.NaN, offset + known, offset + ranges)
     siteCells.code.fill(255, offset + known, offset + ranges)
     siteCells.relief.fill(RELIEF.unknown, offset + known, offset + ranges)
-    siteCells.heightToSeeM.fill(Number.NaN, offset + known, offset + ranges)
+    if (hull) siteCells.heightToSeeM.fill(Number.NaN, offset + known, offset + ranges)
   }
 }
 
