@@ -45,13 +45,29 @@ export const OVER_OPEN_WITHIN_M = 5_000
 /** Slot of a relief value in the table. */
 export const reliefSlot = (relief: number): number => Math.min(relief, 3)
 
-/** Builds the table for the codes of a ground. Throws InputError for a frequency outside 30 MHz to 40 GHz. */
+interface Made {
+  readonly frequencyHz: number
+  readonly table: LandTable
+  readonly sea: SeaInput | null
+  readonly made: StrengthTable
+}
+const lastMade = new WeakMap<readonly GroundCode[], Made>()
+/** The table for the codes of a ground; the last one made for them is kept. Throws InputError for a frequency outside 30 MHz to 40 GHz. */
 export function strengthTable(
   codes: readonly GroundCode[],
   frequencyHz: number,
   table: LandTable = BUILT_IN_LAND_TABLE,
   sea: SeaInput | null = null,
 ): StrengthTable {
+  const last = lastMade.get(codes)
+  const sameSea = last?.sea?.seaState === sea?.seaState && last?.sea?.polarisation === sea?.polarisation
+  if (last && last.frequencyHz === frequencyHz && last.table === table && sameSea) return last.made
+  const made = makeTable(codes, frequencyHz, table, sea)
+  lastMade.set(codes, { frequencyHz, table, sea, made })
+  return made
+}
+
+function makeTable(codes: readonly GroundCode[], frequencyHz: number, table: LandTable, sea: SeaInput | null): StrengthTable {
   const inner = bandEdgesDeg(table)
   const edgesRad = Float64Array.from([Number.NEGATIVE_INFINITY, ...inner.map((d) => d * RAD_PER_DEG), Number.POSITIVE_INFINITY])
   const bands = edgesRad.length - 1
@@ -69,7 +85,8 @@ export function strengthTable(
       for (let b = 0; b < bands; b++) {
         const middle = middleDeg(edgesRad, b)
         const choice = chooseRow(terrain, relief, middle, frequencyHz, context, table)
-        const over = chooseRow(terrain, relief, middle, frequencyHz, { ...context, urbanOverOpen: true }, table)
+        const over =
+          terrain === 'urban' ? chooseRow(terrain, relief, middle, frequencyHz, { ...context, urbanOverOpen: true }, table) : choice
         const at = (c * 4 + slot) * bands + b
         plain[at] = choice.meanDb === null ? 0 : fromDb(choice.meanDb)
         overOpen[at] = over.meanDb === null ? 0 : fromDb(over.meanDb)
