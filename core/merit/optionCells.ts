@@ -11,6 +11,8 @@ import type { FloorFigure } from './types.ts'
 
 /** The smaller effective-earth factor at which cover is worked out as well: a need passes only at both. */
 export const LOW_K = 1
+/** Is a study's own factor no larger than that, so that cover needs no other? */
+export const isLowK = (k: number): boolean => k > 0 && k <= LOW_K
 
 /** Cover of one mast height at the smaller k. */
 export interface LowKCells extends Held {

@@ -1,6 +1,6 @@
 import { clutterToNoise } from '../clutter/index.ts'
 import { sightAlong, sweep } from '../masking/index.ts'
-import { LOW_K, ladderHeightsM, ladderOf, type OptionCells, type Rung, rung } from '../merit/index.ts'
+import { isLowK, ladderHeightsM, ladderOf, type OptionCells, type Rung, rung } from '../merit/index.ts'
 import { polarShape } from '../polar/index.ts'
 import { buildGround, groundAt } from '../terrain/index.ts'
 import { share, type Work } from '../work/index.ts'
@@ -194,7 +194,7 @@ export class Answers {
     const { radar, atmosphere } = study
     const suppression = suppressionOf(study, ground)
     const grid = polarShape(study.run)
-    const lowEarth = earth.effectiveEarthFactor > 0 && earth.effectiveEarthFactor <= LOW_K ? null : lowEarthOf(study)
+    const lowEarth = isLowK(earth.effectiveEarthFactor) ? null : lowEarthOf(study)
     const rungs: Rung[] = []
     for (let n = 0; n < heights.length; n += LADDER_BATCH) {
       const batch = heights.slice(n, n + LADDER_BATCH)

@@ -2,7 +2,7 @@ import { type ClutterCells, clutterMarks, clutterToNoise, type LandTable } from 
 import type { SuppressionBy } from '../doppler/index.ts'
 import { isInputError } from '../errors/index.ts'
 import { type SightCells, type SiteCells, sweep } from '../masking/index.ts'
-import { isAreaNeed, LOW_K, type LowKCells, type NeedPlaces, type OptionCells, optionFigures } from '../merit/index.ts'
+import { isAreaNeed, isLowK, type LowKCells, type NeedPlaces, type OptionCells, optionFigures } from '../merit/index.ts'
 import { polarShape } from '../polar/index.ts'
 import { type SettledNeed, type SettledStudy, type StudyDoc, settle } from '../study/index.ts'
 import type { Ground } from '../terrain/index.ts'
@@ -172,8 +172,7 @@ export class Engine {
   /** Cover of an option at the smaller k; null where the study's own k is no larger than that. */
   private *computeLowK(ref: OptionRef): Work<LowKCells | null> {
     const { ground, study } = this.ready()
-    const k = study.atmosphere.effectiveEarthFactor
-    if (k > 0 && k <= LOW_K) return null
+    if (isLowK(study.atmosphere.effectiveEarthFactor)) return null
     const candidate = candidateOf(study, ref.candidate)
     const keyAt = (heightM: number) => keysOf(ground.serial, this.filesSerial, study, candidate, { ...ref, heightM }).lowK
     let cover = this.cache.get<LowKCells>(keyAt(ref.heightM))

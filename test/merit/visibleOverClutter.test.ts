@@ -11,7 +11,12 @@ const LAND = uniformLand(-30)
 // D₀ 13 dB with all losses in it; 19.95 to 20.05 km is one ring of cells
 const need = layerNeed({ heightM: 60, requiredRatioDb: 13, fromRangeM: 19_900, toRangeM: 20_100 })
 const stated = (statedDb: number) =>
-  work(ground, { needs: [need], landTable: LAND, radar: { suppression: { kind: 'stated', statedDb } }, run: { maxRangeM: 22_000, rangeStepM: 75 } })
+  work(ground, {
+    needs: [need],
+    landTable: LAND,
+    radar: { suppression: { kind: 'stated', statedDb } },
+    run: { maxRangeM: 22_000, rangeStepM: 75 },
+  })
 
 describe('a 1 m² aircraft over land clutter at 20 km', () => {
   it('needs 31.5 dB: 28 dB falls 3.5 dB short, 48 dB leaves 16.5 dB', () => {

@@ -1,8 +1,8 @@
 import type { SettledNeed } from '../../study/index.ts'
-import type { OptionCells } from '../optionCells.ts'
+import { isLowK, type OptionCells } from '../optionCells.ts'
 import { LOSS_CAUSES, type LossFigure, type NeedFigure, type NestedPct } from './needTypes.ts'
 
-/** The three shares at both k, and whether the need is met and passes. */
+/** The three shares at both k, and whether the need is met and passes: a study whose own k is no larger than the smaller one needs no other. */
 export function outcome(
   o: OptionCells,
   need: SettledNeed,
@@ -11,7 +11,8 @@ export function outcome(
 ): NestedPct & Pick<NeedFigure, 'atLowK' | 'met' | 'passes'> {
   const met = reaches(shares.usablePct, need)
   const atLowK = o.lowK ? { k: o.lowK.k, ...lowShares } : null
-  return { ...shares, atLowK, met, passes: met ? atLowK && reaches(atLowK.usablePct, need) : false }
+  const passesLow = atLowK ? reaches(atLowK.usablePct, need) : isLowK(o.earth.effectiveEarthFactor) || null
+  return { ...shares, atLowK, met, passes: met ? passesLow : false }
 }
 /** Sums of areas come out a hair under 100 % where all of it passes. */
 const reaches = (pct: number, need: SettledNeed): boolean => pct >= need.requiredPct - 1e-9

@@ -2,7 +2,7 @@ import { clutterAtPoint, type PointClutter, type PointOptions } from '../../clut
 import { improvementDb } from '../../doppler/index.ts'
 import { depressionAtTerrainDeg, earthDropM, effectiveRadiusM, geodesicDirect, type LonLat, slantRangeM } from '../../geodesy/index.ts'
 import { type SightPoint, sightPoint } from '../../masking/index.ts'
-import { isAreaNeed, LOW_K } from '../../merit/index.ts'
+import { isAreaNeed, isLowK } from '../../merit/index.ts'
 import { polarShape } from '../../polar/index.ts'
 import type { SettledStudy } from '../../study/index.ts'
 import { type Ground, siteGround } from '../../terrain/index.ts'
@@ -57,7 +57,6 @@ export function cellLedger(ground: Ground, study: SettledStudy, option: OptionRe
     results.clutter_rcs_dbsm = clutter.rcsDbsm
     results.clutter_to_noise_db = clutter.cnrDb
     const antennaM = siteM + option.heightM
-    const k = earth.effectiveEarthFactor
     const parts = {
       study,
       suppression,
@@ -65,7 +64,7 @@ export function cellLedger(ground: Ground, study: SettledStudy, option: OptionRe
       antennaM,
       sight,
       radiusM: radius,
-      lowSight: k > 0 && k <= LOW_K ? null : sightPoint(ground, site, option.heightM, lowEarthOf(study), at),
+      lowSight: isLowK(earth.effectiveEarthFactor) ? null : sightPoint(ground, site, option.heightM, lowEarthOf(study), at),
       clutterAt: (slantM: number) => {
         // A target shares the gate of the ground at its own slant range.
         const shift = Math.round((slantM - slantRangeM(antennaM, sight.groundM, sight.rangeM, radius)) / grid.rangeStepM)
