@@ -20,7 +20,7 @@ export function Ruler(props: RulerProps) {
   const box = useRef<HTMLDivElement>(null)
   const [size, setSize] = useState({ width: 0, height: 0 })
   const trial = useChannel(hub.trial)
-  const ladder = useLadder(client, groundM === null ? null : (candidate?.id ?? null), props.resultSerial)
+  const ladder = useLadder(client, groundM === null ? null : (candidate?.id ?? null), props.basis)
   const helpId = useId()
   // biome-ignore lint/correctness/useExhaustiveDependencies: the box is there only with a candidate
   useLayoutEffect(() => {
@@ -53,7 +53,7 @@ export function Ruler(props: RulerProps) {
   const isStated = stated.includes(heightM)
   const now = geometry.valuesAt(heightM)
   // usable and short of suppression are shares of needs: without one the strips show the ground itself
-  const asked = (ladder?.needMet.length ?? 0) > 0
+  const asked = ladder ? ladder.needMet.length > 0 : props.asked
   const seen = asked ? 'usable' : 'inSight'
   const echo = asked ? 'short' : 'clutter'
   const place = { lon: candidate.lon, lat: candidate.lat }

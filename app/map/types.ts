@@ -120,8 +120,10 @@ export interface RulerProps {
   readonly option: OptionRef | null
   /** Ground at the candidate, m MSL; null off the terrain. */
   readonly groundM: number | null
-  /** Changes when the ladder has to be asked for again (new figures). */
-  readonly resultSerial: number
+  /** Another object when the ladder has to be asked for again: study, ground or tilt are others. */
+  readonly basis: object
+  /** The study states a need: the strips are about it, else about the ground. */
+  readonly asked: boolean
   readonly units: UnitSystem
   /** A stated height was chosen. */
   readonly onHeight: (heightM: number) => void

@@ -44,7 +44,7 @@ export const MAP_WORDS = {
   north: 'N',
   /** What stands under a place that another chart's pointer gives. */
   pointing: { map: '', horizon: 'controls the horizon', profile: 'on the profile' },
-  pointHint: 'Point at the map to read a place',
+  pointHint: 'Point at a place to read it',
   placing: 'Click where the candidate stands · Esc to leave',
   movingByKeys: 'Arrows move it, Shift for small steps · Enter sets it, Esc puts it back',
   cell: 'cell of the ledger',

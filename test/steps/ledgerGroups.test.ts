@@ -47,8 +47,9 @@ describe('ledger of a cell', () => {
   })
   test('the total is the sum of the lines under it', () => {
     const g = named('C/N')
-    const sum = g.rows.reduce((s, r) => s + (r.sign === '−' ? -1 : 1) * Number(r.value.value.replace('−', '-')), 0)
+    const sum = g.rows.reduce((s, r) => s + (r.sign === '−' ? -1 : 1) * Number(r.value.value.replace(/[()]/g, '').replace('−', '-')), 0)
     expect(Number(g.total?.value)).toBeCloseTo(sum, 2)
+    expect(g.rows[1]?.value.value).toBe('(−20.50)')
     expect(g.onMap).toBe('81\u202fdB')
   })
   test('model and source stand once, at a line only where they differ', () => {

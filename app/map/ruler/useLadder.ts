@@ -2,33 +2,41 @@ import { useEffect, useState } from 'react'
 import type { Ladder } from '../../../core/index.ts'
 import type { StudyClient } from '../../compute/client.ts'
 
-/** Figures come in bursts while options are worked out: the ladder is asked for once they rest, ms. */
+/** Edits come in bursts: the ladder is asked for once they rest, and again after an ask was dropped for a newer study or another layer, ms. */
 const REST_MS = 250
+/** A worker that has no study yet refuses; so often is it asked again. */
+const REFUSALS = 5
 
-/** Results against mast height of one candidate; null until they are there. An older ladder of the same candidate stays until the next. */
-export function useLadder(client: StudyClient, candidate: string | null, serial: number): Ladder | null {
+/**
+ * Results against mast height of one candidate; null until they are there. `basis` is another object whenever study, ground or tilt are others.
+ * An older ladder of the same candidate stays until the next.
+ */
+export function useLadder(client: StudyClient, candidate: string | null, basis: object): Ladder | null {
   const [held, setHeld] = useState<{ candidate: string; ladder: Ladder } | null>(null)
-  // biome-ignore lint/correctness/useExhaustiveDependencies: new figures ask for a new ladder
+  // biome-ignore lint/correctness/useExhaustiveDependencies: another basis asks for another ladder
   useEffect(() => {
     if (candidate === null) return
     let gone = false
+    let refused = 0
     let again: ReturnType<typeof setTimeout> | undefined
+    const later = () => {
+      if (!gone) again = setTimeout(ask, REST_MS * (1 + 4 * refused))
+    }
     const ask = () =>
       client
         .ask('ladder', { candidate })
         .then((ladder) => {
-          if (gone) return
-          if (ladder) setHeld({ candidate, ladder })
-          // superseded by a newer study: the next figures ask again
+          if (!ladder) later()
+          else if (!gone) setHeld({ candidate, ladder })
         })
         .catch(() => {
-          // no ground or no candidate yet: the next figures ask again
+          if (++refused <= REFUSALS) later()
         })
-    again = setTimeout(ask, REST_MS)
+    later()
     return () => {
       gone = true
       clearTimeout(again)
     }
-  }, [client, candidate, serial])
+  }, [client, candidate, basis])
   return held && held.candidate === candidate ? held.ladder : null
 }

@@ -76,7 +76,8 @@ function TableView({ table }: { table: TableBlock }) {
   const heads = table.columns.some((c) => c.head !== '')
   const align = (i: number) => (table.columns[i]?.align === 'right' ? undefined : 'text')
   return (
-    <div className="memo-table-view">
+    // a wide table is scrolled by keys
+    <section className="memo-table-view" aria-label={table.title ?? 'Table'} tabIndex={0}>
       {table.title ? <h4>{table.title}</h4> : null}
       <table className="table">
         {heads ? (
@@ -109,7 +110,7 @@ function TableView({ table }: { table: TableBlock }) {
           ))}
         </tbody>
       </table>
-    </div>
+    </section>
   )
 }
 const spanOf = (cell: Cell): number | undefined => (typeof cell === 'string' ? undefined : cell.span)

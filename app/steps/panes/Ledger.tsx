@@ -50,11 +50,15 @@ function Group({ group }: { group: LedgerGroup }) {
       <tr className="total">
         <td className="text">{group.name}</td>
         <td>{group.total ? <Value of={group.total} /> : null}</td>
-        <td className="text source">
-          {group.onMap ? <span className="on-map">rounded {group.onMap}</span> : null}
-          {group.origin}
-        </td>
+        <td className="text source">{group.onMap ? `rounded ${group.onMap}` : null}</td>
       </tr>
+      {group.origin ? (
+        <tr className="origin">
+          <td className="text source" colSpan={3}>
+            {group.origin}
+          </td>
+        </tr>
+      ) : null}
       {group.rows.map((row) => (
         <tr key={row.key}>
           <td className="text">{row.label}</td>

@@ -155,7 +155,10 @@ export function RulerSlot({ hub }: { hub: MapHub }) {
   const { study, view, client } = useSession()
   const option = useView((v) => v.option)
   const units = useView((v) => v.units)
-  const serial = useResults((r) => r.serial)
+  const doc = useDoc((d) => d)
+  const groundSerial = useGround((g) => g.ground?.serial)
+  // biome-ignore lint/correctness/useExhaustiveDependencies: another object for each of these
+  const basis = useMemo(() => ({}), [doc, groundSerial, option?.tiltDeg])
   const candidate = useMapCandidates().find((c) => c.id === option?.candidate) ?? null
   const stated = useDoc((d) => d.candidates.find((c) => c.id === option?.candidate)?.groundHeightM)
   const raster = useGround((g) => (option ? g.candidateM.get(option.candidate) : undefined))
@@ -168,7 +171,8 @@ export function RulerSlot({ hub }: { hub: MapHub }) {
         candidate={candidate}
         option={option}
         groundM={stated ?? raster ?? null}
-        resultSerial={serial}
+        basis={basis}
+        asked={(doc.needs?.length ?? 0) > 0}
         units={units}
         onHeight={show}
         onAddHeight={(heightM) => {

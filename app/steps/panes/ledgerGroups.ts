@@ -72,13 +72,17 @@ function rowsOf(lines: readonly LedgerLine[], prefix: string, units: UnitSystem)
       key: l.key,
       label: label.charAt(0).toUpperCase() + label.slice(1),
       sign: SIGN[l.op],
-      value: faceValue(l, units),
+      value: inSum(l.op, faceValue(l, units)),
       mark: l.mark,
       origin: own === origin ? '' : own,
     }
   })
   return { origin, rows }
 }
+
+/** A negative number that is added or taken away stands in brackets. */
+const inSum = (op: LedgerLine['op'], q: Quantity): Quantity =>
+  (op === 'add' || op === 'subtract') && q.value.startsWith('−') ? { ...q, value: `(${q.value})` } : q
 
 /** A value in the unit of the face, with digits enough that lines can be added by eye. Mast heights stay in metres. */
 function faceValue({ key, value, unit }: Pick<LedgerLine, 'key' | 'value' | 'unit'>, units: UnitSystem): Quantity {
