@@ -158,7 +158,7 @@ export function Target({ need, path, at, set }: PartProps) {
         label="Required ratio"
         value={need.requiredRatioDb}
         fallback={ratio}
-        mark="worked out"
+        mark="from Pd"
         face={DB}
         limit={limit('requiredRatioDb')}
         onCommit={(v) => set('requiredRatioDb', v)}

@@ -76,7 +76,7 @@ function TableView({ table }: { table: TableBlock }) {
   const heads = table.columns.some((c) => c.head !== '')
   const align = (i: number) => (table.columns[i]?.align === 'right' ? undefined : 'text')
   return (
-    // a wide table is scrolled by keys
+    // biome-ignore lint/a11y/noNoninteractiveTabindex: a wide table is scrolled by keys
     <section className="memo-table-view" aria-label={table.title ?? 'Table'} tabIndex={0}>
       {table.title ? <h4>{table.title}</h4> : null}
       <table className="table">
