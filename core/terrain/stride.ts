@@ -21,14 +21,16 @@ export const isInner = (control: ControlPoints, i: number, width: number, height
   )
 }
 
+/** Most lines of posts of one axis in one stretch (a stretch is 500 m where posts are under 5 m); finer ground is walked with care. */
+const MOST_LINES = 16_384
 /** Scratch: for each line of the minor axis, the last line of the major axis before it. */
-let lastMajor = new Int32Array(64)
+const lastMajor = new Int32Array(MOST_LINES)
 
 /**
  * The crossings of one stretch, as walkRay's own loop writes them, made without a branch that depends on the ray's course: which grid line comes next is as
  * good as random to the processor, and guessing wrong costs more than the arithmetic. The lines of the axis the ray runs along more (`major`) are written
  * first, each at its own place in the sequence: its number plus the number of lines of the other axis met before it; then those others, likewise. Returns
- * the new number of entries, or -1 where a post beside the ray is void: the stretch is then to be walked with care.
+ * the new number of entries, or -1 where a post beside the ray is void (or posts are too fine): the stretch is then to be walked with care.
  */
 export function strideStretch(heightM: Float32Array, width: number, control: ControlPoints, i: number, out: Walk, entries: number): number {
   const { ground, patches } = out
@@ -66,14 +68,15 @@ export function strideStretch(heightM: Float32Array, width: number, control: Con
   const base = (pr * width + pc) | 0
   const first = (3 * (entries - 1)) | 0
   const majors = (Math.ceil(a0 + major) - 1) | 0
-  const minors = (Math.ceil(b0 + minor) - 1) | 0
-  if (lastMajor.length < minors + 2) lastMajor = new Int32Array(2 * minors + 2)
-  const last = lastMajor
-  last[0] = 0
+  // a ray along a line of posts starts on it and never meets another: none, not one less
+  const minors = Math.max(0, Math.ceil(b0 + minor) - 1) | 0
+  if (majors >= MOST_LINES) return -1
+  lastMajor[0] = 0
   let checked = 0
   for (let n = 1; n <= majors; n = (n + 1) | 0) {
     const b = bA + n * ratio
-    const line = b | 0
+    // rounding may carry b onto a line the stretch ends at
+    const line = b < minors + 1 ? b | 0 : minors
     const at = (base + Math.imul(n, stepA) + Math.imul(line, stepB)) | 0
     const z0 = heightM[at]
     const z1 = heightM[(at + stepB) | 0]
@@ -82,14 +85,14 @@ export function strideStretch(heightM: Float32Array, width: number, control: Con
     ground[k] = sA + n * perA
     ground[(k + 1) | 0] = z0 + (b - line) * (z1 - z0)
     ground[(k + 2) | 0] = twist * bendPerTwist
-    last[line] = n
+    lastMajor[line] = n
     checked += twist
   }
   const perRatio = 1 / ratio
   const perB = ds / minor
   const sB = s0 - b0 * perB
   for (let m = 1; m <= minors; m = (m + 1) | 0) {
-    const n = last[(m - 1) | 0]
+    const n = lastMajor[(m - 1) | 0]
     const at = (base + Math.imul(n, stepA) + Math.imul(m, stepB)) | 0
     const z0 = heightM[at]
     const z1 = heightM[(at + stepA) | 0]
@@ -110,7 +113,7 @@ export function strideStretch(heightM: Float32Array, width: number, control: Con
       keepPatch(patches, entries - 1 + n + line, near, byCol ? 0 : v, byCol ? v : 0, right, down, width, bendPerTwist)
     }
     for (let m = 1; m <= minors; m++) {
-      const n = last[m - 1]
+      const n = lastMajor[m - 1]
       const u = (m - bA - n * ratio) * perRatio
       const near = base + n * stepA + m * stepB
       keepPatch(patches, entries - 1 + n + m, near, byCol ? u : 0, byCol ? 0 : u, right, down, width, bendPerTwist)
