@@ -1,5 +1,5 @@
 /// <reference lib="webworker" />
-import type { Ask, Painted } from '../../core/index.ts'
+import { type Ask, loadCrs, type Painted } from '../../core/index.ts'
 import type { Envelope } from './messages.ts'
 import { Scheduler } from './scheduler.ts'
 
@@ -30,7 +30,12 @@ turn.port1.onmessage = () => {
   waiting = false
   if (scheduler.slice()) wake()
 }
+/** Asks are taken in order; a ground waits until its coordinate system can be used on this thread. */
+let turnOf: Promise<void> = Promise.resolve()
 scope.onmessage = ({ data }: MessageEvent<Envelope>) => {
-  scheduler.take(data)
-  wake()
+  turnOf = turnOf.then(async () => {
+    if (data.kind === 'ground') await loadCrs((data.body as Ask['ground']).shape.crs)
+    scheduler.take(data)
+    wake()
+  })
 }
