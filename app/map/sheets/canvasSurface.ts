@@ -10,11 +10,13 @@ export function canvasSurface(paint: GroundPainter, onError: (error: unknown) =>
     reducedMotion: () => true,
     onError,
   })
+  // a picture of the ground before is wrong, not old: it goes when there is none to come
+  let ground = 0
   return {
     kind: 'canvas',
     element: sheet.element,
     show: (view) => sheet.show(view),
-    refresh: () => sheet.refresh('ground', false),
+    refresh: () => sheet.refresh(`ground ${++ground}`, false),
     remove: () => sheet.remove(),
   }
 }

@@ -62,7 +62,8 @@ export function MapSlot({ hub }: { hub: MapHub }) {
   const marks = useResults((r) => (option ? r.byOption.get(optionKey(option))?.figures.marks : undefined)) ?? NO_MARKS
   const losses = useResults((r) => {
     const figures = option ? r.byOption.get(optionKey(option))?.figures.needs : undefined
-    return (figures?.find((n) => n.needId === need) ?? figures?.[0])?.losses ?? null
+    const areas = figures?.filter((n) => n.measure === 'area' && n.notAssessed === null)
+    return (areas?.find((n) => n.needId === need) ?? areas?.[0])?.losses ?? null
   })
   const maxRangeM = useDoc((d) => settledOf(d)?.run.maxRangeM ?? d.radar.instrumentedRangeM ?? 60_000)
   const candidates = useMapCandidates()

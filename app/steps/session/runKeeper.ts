@@ -1,3 +1,4 @@
+import type { StudyDoc } from '../../../core/index.ts'
 import type { StudyClient } from '../../compute/client.ts'
 import {
   type GroundStore,
@@ -11,6 +12,12 @@ import {
 } from '../../document/index.ts'
 import type { NoticeStore } from './notices.ts'
 import { sentenceOf } from './notices.ts'
+
+/** The need that layers are drawn for: the chosen one, or the first, among those of an area. Fixes and tracks have no layers. */
+export function areaNeedOf(doc: StudyDoc, chosen: string | null): string | null {
+  const areas = (doc.needs ?? []).filter((n) => n.kind === 'layer' || n.kind === 'polygon')
+  return (areas.find((n) => n.id === chosen) ?? areas[0])?.id ?? null
+}
 
 /**
  * Sends the whole study to the worker on every change of it or of what is shown; the worker finds out what is missing. Keeps the option on
@@ -28,7 +35,8 @@ export function keepRunning(
   let sentDoc: unknown = null
   const send = (force = false) => {
     const { doc } = study.getState()
-    const { option, layer, need, hold } = view.getState()
+    const { option, layer, need: chosen, hold } = view.getState()
+    const need = areaNeedOf(doc, chosen)
     const ready = ground.getState().state === 'ready'
     const run = runnable(doc)
     if (!ready || !run) return
@@ -57,7 +65,7 @@ export function keepRunning(
     const settled = settleOption(doc, option)
     if (settled !== option) set({ option: settled })
     const needs = doc.needs ?? []
-    const wished = needs.some((n) => n.id === need) ? need : (needs.find((n) => n.kind === 'layer' || n.kind === 'polygon')?.id ?? null)
+    const wished = needs.some((n) => n.id === need) ? need : areaNeedOf(doc, need)
     if (wished !== need) set({ need: wished })
     keepOptions(results, studyOptions(doc))
   }
