@@ -1,5 +1,5 @@
 /// <reference lib="webworker" />
-import { type Ask, loadCrs, type Painted } from '../../core/index.ts'
+import { type Ask, loadCrs, type Painted, type Tell } from '../../core/index.ts'
 import type { Envelope } from './messages.ts'
 import { Scheduler } from './scheduler.ts'
 
@@ -34,7 +34,12 @@ turn.port1.onmessage = () => {
 let turnOf: Promise<void> = Promise.resolve()
 scope.onmessage = ({ data }: MessageEvent<Envelope>) => {
   turnOf = turnOf.then(async () => {
-    if (data.kind === 'ground') await loadCrs((data.body as Ask['ground']).shape.crs)
+    try {
+      if (data.kind === 'ground') await loadCrs((data.body as Ask['ground']).shape.crs)
+    } catch (error) {
+      const message = error instanceof Error ? error.message : String(error)
+      return scope.postMessage({ kind: 'failure', id: data.id, error: { code: 'fault', message } } satisfies Tell)
+    }
     scheduler.take(data)
     wake()
   })
