@@ -182,7 +182,7 @@ function Plot(props: {
     <figure className="plot" ref={box}>
       <figcaption className="ink-2">
         {known
-          ? 'Usable share of the need against the area short of suppression, one line per candidate'
+          ? 'Usable share against the area short of suppression, one line per candidate'
           : 'Ground in sight against clutter, one line per candidate; more ground in sight is not better by itself'}
       </figcaption>
       {width > 0 ? (

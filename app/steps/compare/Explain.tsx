@@ -67,8 +67,9 @@ function causeOf(result: OptionResult, key: string): Cause | null {
   const { figures } = result
   const need = needKey(key)
   if (need && /margin/.test(need.of)) {
-    const worst = figures.needs.find((n) => n.needId === need.needId)?.worst
-    return worst && need.of === 'worst_margin_m' ? { ...worst, at: { lon: worst.lon, lat: worst.lat } } : null
+    const figure = figures.needs.find((n) => n.needId === need.needId)
+    const worst = need.of === 'worst_margin_m' ? figure?.worst : need.of === 'worst_signal_margin_db' ? figure?.signal.worst : null
+    return worst ? { ...worst, at: { lon: worst.lon, lat: worst.lat } } : null
   }
   if (key === 'horizon_highest_deg' && figures.horizon.highest) {
     const { azimuthDeg, rangeM, obstacle } = figures.horizon.highest

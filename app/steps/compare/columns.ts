@@ -84,7 +84,9 @@ export const NEED_COLUMNS: readonly Column[] = [
   ofNeed('margin', MARGIN, 'height', 'worst_margin_m', (n, system) => formatMargin(n.worstMarginM, system)),
   ofNeed('signal', MARGIN, 'signal', 'worst_signal_margin_db', (n) => formatDbDown(n.signal.worstDb)),
   ofNeed('suppression', SUPPRESSION, 'needed, 90 %', 'suppression_needed_90_db', (n) => formatDbUp(n.suppression.p90Db)),
-  ofNeed('short', SUPPRESSION, 'short', 'suppression_short_km2', (n, system) => formatAreaUp(n.suppression.shortKm2, system)),
+  ofNeed('short', SUPPRESSION, 'short', 'suppression_short_km2', (n, system) =>
+    n.measure === 'area' ? formatAreaUp(n.suppression.shortKm2, system) : NONE,
+  ),
   CLUTTER_OVER,
   FLOOR,
 ]
