@@ -6,7 +6,7 @@ import { floorFigures, type GroundSums, groundSums, RING_WIDTH_M } from './groun
 import { needFigure } from './needs/needFigure.ts'
 import { antennaM, type OptionCells } from './optionCells.ts'
 import { percentile } from './percentile.ts'
-import { overloadNotes } from './signal/receiverLimits.ts'
+import { clutterLevelsOf, overloadNotes } from './signal/receiverLimits.ts'
 import type { Figures, FloorFigure, NeedFigure } from './types.ts'
 
 /** What of an option's figures does not hang on its needs, kept with the polar grids it was made from. */
@@ -49,6 +49,7 @@ export function optionFigures(o: OptionCells, needs: readonly SettledNeed[], mar
     ringWidthM: RING_WIDTH_M,
     clutterOverKm2: sums.over,
     cnrPeakDb: sums.peakDb,
+    clutterLevels: clutterLevelsOf(o),
     needs: needFigures(o, needs),
     obstaclesInSight: sight.obstacles,
     marks: [...marks, ...o.suppression.notes, ...kept.notes],

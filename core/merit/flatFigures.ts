@@ -17,6 +17,9 @@ export function flatFigures(f: Omit<Figures, 'flat'>): Record<string, number | n
     clutter_over_40_km2: f.clutterOverKm2.over40,
     clutter_over_60_km2: f.clutterOverKm2.over60,
     clutter_to_noise_peak_db: f.cnrPeakDb,
+    clutter_to_noise_mean_db: f.clutterLevels.whole.meanDb,
+    clutter_to_noise_90_db: f.clutterLevels.whole.p90Db,
+    clutter_to_noise_99_db: f.clutterLevels.whole.p99Db,
   }
   const floors = (list: readonly FloorFigure[], tail: string): void => {
     for (const floor of list) {

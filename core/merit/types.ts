@@ -1,3 +1,4 @@
+import type { ClutterLevels } from '../clutter/index.ts'
 import type { SuppressionBy } from '../doppler/index.ts'
 import type { HorizonRow } from '../masking/index.ts'
 import type { NeedFigure } from './needs/needTypes.ts'
@@ -46,6 +47,8 @@ export interface Figures {
   /** Area with C/N over 0, 20, 40, 60 dB. */
   readonly clutterOverKm2: { readonly over0: number; readonly over20: number; readonly over40: number; readonly over60: number }
   readonly cnrPeakDb: number | null
+  /** C/N by ring of 5 NM and octant: mean, levels that 90 and 99 % of the ground stays under, share over 40 dB; STC not taken off. */
+  readonly clutterLevels: ClutterLevels
   readonly needs: readonly NeedFigure[]
   /** Names of obstacles in sight. */
   readonly obstaclesInSight: readonly string[]

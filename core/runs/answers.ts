@@ -5,6 +5,7 @@ import { polarShape } from '../polar/index.ts'
 import { buildGround, groundAt } from '../terrain/index.ts'
 import { share, type Work } from '../work/index.ts'
 import type { Engine } from './engine.ts'
+import { heightToSee } from './layers.ts'
 import { cellLedger } from './ledger/cellLedger.ts'
 import { candidateOf, clutterOptions, earthOf, lowEarthOf, lowKOf, siteOf, suppressionOf } from './optionParts.ts'
 import { paintGround, paintOption, paintSheet } from './pictures.ts'
@@ -88,7 +89,9 @@ export class Answers {
     const earth = earthOf(study)
     const full = polarShape(study.run)
     const azimuths = Math.ceil(full.azimuths / PREVIEW_STRIDE)
-    const swept = yield* sweep(ground, site, [body.heightM], { ...full, azimuths, azimuthStepDeg: 360 / azimuths }, earth)
+    const swept = yield* sweep(ground, site, [body.heightM], { ...full, azimuths, azimuthStepDeg: 360 / azimuths }, earth, {
+      heightToSee: false,
+    })
     const [mask] = swept.masks
     const tiltDeg = this.engine.shown.option?.tiltDeg ?? candidate.tiltsDeg[0]
     const { landTable } = this.engine
@@ -127,10 +130,10 @@ export class Answers {
     }
   }
 
-  // biome-ignore lint/correctness/useYield: an answer that needs no slices
   private *paint(body: Ask['paint']): Work<EngineAnswer['paint']> {
     const o = body.option === 'preview' ? this.preview : this.engine.cells(body.option)
     if (!o) return null
+    if (body.layer === 'height-to-see') yield* heightToSee(o)
     const need = this.engine.needOnShow(this.engine.shown.need)
     return { pixels: paintOption(o, body.layer, need, body.view, body.opacity), view: body.view }
   }
@@ -142,6 +145,7 @@ export class Answers {
 
   private *map(body: Ask['map']): Work<EngineAnswer['map']> {
     const o = yield* this.engine.compute(body.option)
+    if (body.layer === 'height-to-see') yield* heightToSee(o)
     const pixels = paintSheet(o, body.layer, this.engine.needOnShow(this.engine.shown.need), body.view)
     return { rgba: new Uint8ClampedArray(pixels.buffer), view: body.view }
   }
@@ -198,7 +202,12 @@ export class Answers {
     const rungs: Rung[] = []
     for (let n = 0; n < heights.length; n += LADDER_BATCH) {
       const batch = heights.slice(n, n + LADDER_BATCH)
-      const { site, masks } = yield* share(sweep(ground, place, batch, grid, earth), n, n + batch.length / 3, heights.length)
+      const { site, masks } = yield* share(
+        sweep(ground, place, batch, grid, earth, { heightToSee: false }),
+        n,
+        n + batch.length / 3,
+        heights.length,
+      )
       const low =
         lowEarth &&
         (yield* share(

@@ -150,7 +150,7 @@ export class Engine {
     let mask = this.cache.get<SightCells>(keys.mask)
     if (!site || !mask) {
       const heights = this.missingHeights(candidate.mastHeightsM, ref.heightM, (h) => keysAt(h).mask)
-      const swept = yield* share(sweep(ground, place, heights, polarShape(study.run), earth), 0, 0.6, 1)
+      const swept = yield* share(sweep(ground, place, heights, polarShape(study.run), earth, { heightToSee: false }), 0, 0.6, 1)
       site = swept.site
       this.cache.put(keys.site, site, keep)
       for (const m of swept.masks) {

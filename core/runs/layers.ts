@@ -1,9 +1,11 @@
-import { strengthByCode } from '../clutter/index.ts'
+import { fillCellStrength } from '../clutter/index.ts'
+import { heightToSeeCells } from '../masking/index.ts'
 import { cellsOfNeed, LOSS_CAUSES, type NeedCells, type OptionCells, PLACE, pdOf } from '../merit/index.ts'
 import { makeRamp, type Ramp } from '../paint/index.ts'
 import { CELL } from '../polar/index.ts'
 import type { SettledNeed } from '../study/index.ts'
 import { DEG_PER_RAD } from '../units/index.ts'
+import { finish, type Work } from '../work/index.ts'
 import { LAYER_IDS, type LayerId, type LayerInfo } from './types.ts'
 
 const layer = (
@@ -86,6 +88,18 @@ export const NEED_LAYERS: readonly LayerId[] = [
 export const layerInfo = (id: LayerId): LayerInfo => LAYERS[id]
 export const isLayerId = (id: string): id is LayerId => (LAYER_IDS as readonly string[]).includes(id)
 
+const heights = new WeakMap<OptionCells['site'], Float32Array>()
+/** Height to see of every cell, m of mast, worked out when it is first asked for; the same for every mast height of a candidate. */
+export function* heightToSee(o: OptionCells): Work<Float32Array> {
+  if (o.site.heightToSeeM.length > 0) return o.site.heightToSeeM
+  let found = heights.get(o.site)
+  if (!found) {
+    found = yield* heightToSeeCells(o.ground, o.place, o.site.grid, o.earth)
+    heights.set(o.site, found)
+  }
+  return found
+}
+
 /** Fills one value per polar cell, NaN = bare. `need` is the need on show, for the layers that ask for one. */
 export function fillLayer(id: LayerId, o: OptionCells, need: SettledNeed | null, out: Float32Array): void {
   switch (id) {
@@ -96,7 +110,7 @@ export function fillLayer(id: LayerId, o: OptionCells, need: SettledNeed | null,
       out.set(o.mask.floorM)
       return
     case 'height-to-see':
-      out.set(o.site.heightToSeeM)
+      out.set(finish(heightToSee(o)))
       return
     case 'clutter-to-noise':
       out.set(o.clutter.cnrDb)
@@ -156,13 +170,10 @@ function fillDepression(o: OptionCells, out: Float32Array): void {
   }
 }
 
+/** Mean strength at the cell centres by the tables of the clutter sums: land with its relief and context, steep ground, sea. */
 function fillStrength(o: OptionCells, out: Float32Array): void {
-  fillDepression(o, out)
-  const strength = strengthByCode(o.ground.codes, o.radar.frequencyHz, o.landTable ?? undefined)
-  for (let at = 0; at < out.length; at++) {
-    const depression = out[at]
-    if (!Number.isNaN(depression)) out[at] = strength(o.site.code[at], o.site.relief[at], depression)
-  }
+  const options = { weather: o.atmosphere, ...(o.landTable ? { landTable: o.landTable } : {}) }
+  fillCellStrength(o.site, o.mask, o.ground.codes, o.place, o.heightM, o.radar, options, { strengthDb: out, spread: null })
 }
 
 const visible = (state: number): boolean => state === CELL.inSight || state === CELL.partly

@@ -31,11 +31,11 @@ export function probeAt(o: OptionCells, layer: LayerId, need: SettledNeed | null
   const cell = (Math.round(azimuthDeg / azimuthStepDeg) % azimuths) * ranges + j
   const value = cache.values[cell]
   const state = o.mask.state[cell]
-  const word = wordOf(layer, state, value, cache.words ? cache.words[cell] : 0)
+  const word = wordOf(layer, state, value, cache.words ? cache.words[cell] : 0, o.atmosphere.rainRateMmH > 0)
   return { ...base, value: Number.isFinite(value) && word !== 'masked' ? value : null, word }
 }
 
-function wordOf(layer: LayerId, state: number, value: number, place: number): string | null {
+function wordOf(layer: LayerId, state: number, value: number, place: number, raining: boolean): string | null {
   if (state === CELL.beyondVoid) return 'unknown: beyond a void'
   if (state === CELL.outside) return 'unknown: edge of terrain'
   const hidden = state === CELL.masked || state === CELL.marginal
@@ -45,7 +45,7 @@ function wordOf(layer: LayerId, state: number, value: number, place: number): st
   if (NEED_LAYERS.includes(layer)) return needWord(layer, value, place)
   if (layer === 'clutter-to-noise') {
     if (!Number.isFinite(value)) return hidden ? 'masked' : 'no clutter modelled'
-    return hidden ? 'masked, side lobes only' : value < 0 ? 'below noise' : null
+    return hidden ? (raining ? 'masked: side lobes and rain' : 'masked, side lobes only') : value < 0 ? 'below noise' : null
   }
   return Number.isFinite(value) ? null : hidden ? 'masked' : 'not modelled'
 }

@@ -166,6 +166,13 @@ function sampleFigures(siteGroundM: number, heightM: number, screen: number, see
     ringWidthM: 10_000,
     clutterOverKm2: { over0: sight * 0.94, over20: sight * 0.71, over40: sight * 0.27 + heightM, over60: sight * 0.03 },
     cnrPeakDb: 71.3,
+    clutterLevels: {
+      whole: { knownKm2: all - 240, over40Pct: 8.1, meanDb: 47.2, p90Db: 22.4, p99Db: 55.8 },
+      rings: [],
+      octants: [],
+      sectors: [],
+      peak: null,
+    },
     needs: [
       {
         ...physics(pct),

@@ -92,7 +92,7 @@ export function testLevel(t: LevelTest, out: NeedRow, first: number, last: numbe
     const gate = from + Math.min(ranges - 1, Math.max(0, j + Math.round((row.slantM[j] - groundSlantM[j]) * perStep)))
     const cnr = cnrDb[gate]
     const stc = row.stcDb[j]
-    const overloaded = overload !== null && cnr - stc + overload.excessDb[gate] > overload.limitDb
+    const overloaded = overload !== null && cnr - stc + 0.1 * overload.excessTenths[gate] > overload.limitDb
     const left = overloaded ? cnr : residueDb[gate] - residueLessDb
     const residue = left - stc
     let bits = 0

@@ -123,7 +123,7 @@ function floorLines(s: SightPoint, antennaM: number, radiusM: number): LedgerLin
 
 /** What the clutter figures rest on: row, marks, cell. */
 function clutterInfo(c: PointClutter): LedgerLine[] {
-  const model = 'Low-angle land clutter'
+  const model = c.rowName === 'sea' ? 'Sea clutter' : 'Low-angle land clutter'
   const info = (key: string, label: string, value: number | string | null, unit: string, mark: LedgerLine['mark'] = ''): LedgerLine =>
     ledgerLine({ key, label, value, unit, op: 'info', model, mark })
   return [

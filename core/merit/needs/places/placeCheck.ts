@@ -107,7 +107,7 @@ function residueAt(o: OptionCells, s: SightPoint, slantM: number, stcDb: number)
   const gate = row + Math.min(grid.ranges - 1, Math.max(0, j + shift))
   const overload = overloadOf(o)
   const cnr = o.clutter.cnrDb[gate]
-  if (overload && cnr - stcDb + overload.excessDb[gate] > overload.limitDb) return cnr
+  if (overload && cnr - stcDb + 0.1 * overload.excessTenths[gate] > overload.limitDb) return cnr
   const residue = residueOf(o)
   return residue.cells[gate] - residue.lessDb
 }
