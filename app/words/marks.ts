@@ -25,6 +25,12 @@ export const VERDICT_WORDS = {
   notAtLowK: 'met, not at k = 1',
   notMet: 'not met',
 } as const
+/** What a need comes to in a word. */
+export function verdictOf(n: { readonly met: boolean; readonly passes: boolean | null }): string {
+  if (!n.met) return VERDICT_WORDS.notMet
+  if (n.passes === null) return VERDICT_WORDS.oneK
+  return n.passes ? VERDICT_WORDS.passes : VERDICT_WORDS.notAtLowK
+}
 /** What the shares of a need are shares of. */
 export const MEASURE_WORDS = { area: 'its area', fixes: 'its fixes', length: 'its length' } as const
 /** Words that stand where there is no number. */

@@ -113,10 +113,10 @@ describe('the memo', () => {
       'Three of five options pass every must need, at the k of the study and at k = 1; A at 12 m comes first of them',
     )
     expect(textOfTable(tableOf(passing, 'option-A-24-1.5', 'option-nested'))).toMatch(/Ferry approach .*\| pass/)
-    expect(textOfTable(tableOf(passing, 'option-C-24-1.5', 'option-nested'))).toMatch(/Ferry approach .*\| short at k = 1/)
+    expect(textOfTable(tableOf(passing, 'option-C-24-1.5', 'option-nested'))).toMatch(/Ferry approach .*\| met, not at k = 1/)
     const open = withNeed(() => ({ requiredPct: 50, met: true, passes: null, atLowK: null }))
     expect(wordsOf(open, 'summary')).toContain('Five of five options meet every must need at the k of the study')
-    expect(textOfTable(tableOf(open, 'option-A-24-1.5', 'option-nested'))).toMatch(/\| not run \| .*met; k = 1 not run/)
+    expect(textOfTable(tableOf(open, 'option-A-24-1.5', 'option-nested'))).toMatch(/\| not run \| .*met, k = 1 not run yet/)
     for (const s of open.sections.filter((x) => x.option)) expect(wordsOf(open, s.id)).not.toMatch(/as asked/)
   })
   it('gives causes of loss that add up, both margins with their place, and what suppression is there', () => {

@@ -1,5 +1,6 @@
 import { describe, expect, test } from 'vitest'
-import { columnGroups, marginalPctOf, NEED_COLUMNS, verdictOf } from '../../app/steps/compare/columns.ts'
+import { columnGroups, marginalPctOf, NEED_COLUMNS } from '../../app/steps/compare/columns.ts'
+import { verdictOf } from '../../app/words/index.ts'
 import type { NeedFigure } from '../../core/index.ts'
 
 const figure = (part: Partial<NeedFigure>) => part as NeedFigure

@@ -10,6 +10,7 @@ import {
   textOf,
   toFace,
   unitOf,
+  verdictOf,
 } from '../../words/index.ts'
 import { bare, bothUnits, dualBare, optionName } from './cells.ts'
 import { nestedNumbers } from './needWords.ts'
@@ -30,9 +31,8 @@ function floorNm(results: readonly OptionResult[]): number {
 function mustWords(r: OptionResult): string {
   const must = mustNeeds(r)
   if (must.length === 0) return NO_VALUE
-  if (must.every((n) => n.passes)) return 'pass'
-  if (must.some((n) => !n.met)) return 'short'
-  return must.some((n) => n.passes === false) ? 'short at k = 1' : 'met; k = 1 not run'
+  const passes = must.every((n) => n.passes) ? true : must.some((n) => n.passes === false) ? false : null
+  return verdictOf({ met: must.every((n) => n.met), passes })
 }
 
 /** Options as rows, figures as columns; `summary` is the short form of the first page. */

@@ -15,10 +15,11 @@ import {
   NO_VALUE,
   textOf,
   unitOf,
+  verdictOf,
   withMetric,
 } from '../../words/index.ts'
 import { bare, capital } from './cells.ts'
-import { lossWords, verdictWords } from './needWords.ts'
+import { lossWords } from './needWords.ts'
 import type { Cell, Column, MemoInput, TableBlock } from './types.ts'
 
 type NeedRow = (n: NeedFigure, key: (what: string) => { explain: string }) => Cell[][]
@@ -65,7 +66,7 @@ export function nestedTable(input: MemoInput, r: OptionResult): TableBlock {
         : n.measure === 'fixes'
           ? 'of fixes'
           : 'of length',
-      verdictWords(n),
+      verdictOf(n),
     ],
   ])
   return { kind: 'table', id: 'option-nested', title: `Needs at k = ${k}, and at k = 1`, columns, rows }

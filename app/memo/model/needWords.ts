@@ -19,12 +19,6 @@ export function nestedWords(n: NeedFigure): string {
 export const nestedNumbers = (n: NeedFigure): string =>
   [n.inSightPct, n.detectablePct, n.usablePct].map((x) => formatMetPct(x).value).join(' / ')
 
-/** What the need comes to: pass only where both k are known. */
-export function verdictWords(n: NeedFigure): string {
-  if (n.passes === null) return n.met ? 'met; k = 1 not run' : 'short'
-  if (n.passes) return 'pass'
-  return n.met ? 'short at k = 1' : 'short'
-}
 /** What the shares are shares of, with its amount. */
 export const measureWords = (n: NeedFigure): string =>
   n.measure === 'fixes' ? 'of fixes' : n.measure === 'length' ? 'of length' : 'of area'

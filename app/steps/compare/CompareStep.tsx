@@ -15,9 +15,10 @@ import {
   type Quantity,
   textOf,
   type UnitSystem,
+  verdictOf,
 } from '../../words/index.ts'
 import { useDoc, useResults, useSession, useView } from '../session/index.ts'
-import { columnGroups, GROUND_COLUMNS, NEED_COLUMNS, verdictOf } from './columns.ts'
+import { columnGroups, GROUND_COLUMNS, NEED_COLUMNS } from './columns.ts'
 import { Explain } from './Explain.tsx'
 import { needOf } from './figuresOf.ts'
 

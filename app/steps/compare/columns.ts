@@ -15,7 +15,6 @@ import {
   toFace,
   type UnitSystem,
   unitOf,
-  VERDICT_WORDS,
 } from '../../words/index.ts'
 import { FLOOR_RANGE_M, floorNear, needOf } from './figuresOf.ts'
 
@@ -29,12 +28,6 @@ export interface Column {
   key(result: OptionResult, need: string | null): string | null
 }
 
-/** What a need comes to in a word: *passes* only where both k are known. */
-export function verdictOf(n: NeedFigure): string {
-  if (!n.met) return VERDICT_WORDS.notMet
-  if (n.passes === null) return VERDICT_WORDS.oneK
-  return n.passes ? VERDICT_WORDS.passes : VERDICT_WORDS.notAtLowK
-}
 /** Share inside the error band of the floor, %; null where the need is no area. */
 export const marginalPctOf = (n: NeedFigure): number | null => (n.areaKm2 > 0 ? (100 * n.marginalKm2) / n.areaKm2 : null)
 
