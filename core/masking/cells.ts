@@ -1,8 +1,8 @@
-import { type Cuts, makeCuts } from './profile.ts'
-import { controlErrorM, type RayRunner } from './ray.ts'
-import { RUN, type SightRun } from './sightRun.ts'
+import { type Cuts, makeCuts } from './plane/profile.ts'
+import { controlErrorM, type RayRunner } from './plane/ray.ts'
+import { RUN, type SightRun } from './plane/sightRun.ts'
+import { heightOfY, rangeOfX } from './plane/straight.ts'
 import { isInSight, knownState, packShare } from './sightState.ts'
-import { heightOfY, rangeOfX } from './straight.ts'
 
 /** Where the cells of one ray lie: for each cell the cut at its centre and at its edges (-1: the site itself). */
 export interface RayCellCuts {
@@ -25,8 +25,13 @@ export function cutsAround(centresM: readonly number[], cellM: number): RayCellC
   return { cells: centresM.length, cuts: makeCuts(m), near: column(0), centre: column(1), far: column(2) }
 }
 
+const STEEPEST_PERMILLE = 32767
 /** Slope as per mille in 16 bits. */
-export const packSlope = (slope: number): number => Math.max(-32767, Math.min(32767, Math.floor(1000 * slope + 0.5)))
+export function packSlope(slope: number): number {
+  const permille = Math.floor(1000 * slope + 0.5)
+  if (Math.abs(permille) <= STEEPEST_PERMILLE) return permille
+  return permille > 0 ? STEEPEST_PERMILLE : -STEEPEST_PERMILLE
+}
 
 /** Ground and slope at the cell centres of one ray; unknown cells keep what the arrays held. */
 export interface GroundCells {

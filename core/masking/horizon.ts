@@ -1,13 +1,13 @@
 import { type Earth, elevationAngleDeg } from '../geodesy/index.ts'
 import type { Ground, Site } from '../terrain/index.ts'
-import { makeCuts } from './profile.ts'
-import { controllingOf, makeRunner, type RayRunner, runRay } from './ray.ts'
-import { RUN } from './sightRun.ts'
+import { HORIZON_IS, horizonName } from './horizonIs.ts'
+import { makeCuts } from './plane/profile.ts'
+import { controllingOf, makeRunner, type RayRunner, runRay } from './plane/ray.ts'
+import { RUN } from './plane/sightRun.ts'
 import type { HorizonRow } from './types.ts'
 
-/** Said in place of the controlling point where the ray ends before what was asked. */
-export const AT_LEAST_EDGE = 'at least: edge of terrain'
-export const AT_LEAST_VOID = 'at least: void in terrain'
+/** Numbers of one horizon in a row of them: elevation (deg), range and height (m), longitude and latitude of the controlling point. */
+export const HORIZON_NUMBERS = 5
 
 const NO_CUTS = makeCuts(new Float64Array(0))
 
@@ -24,30 +24,53 @@ export function horizonAt(
   maxRangeM: number,
 ): HorizonRow[] {
   const r = makeRunner(g, site, maxRangeM, 0)
+  const numbers = new Float64Array(HORIZON_NUMBERS)
   return azimuthsDeg.map((azimuthDeg) => {
     r.tracer.trace(azimuthDeg)
     runRay(r, earth, azimuthDeg, heightM, NO_CUTS)
-    return horizonRow(r, azimuthDeg, r.siteGroundM + heightM, r.run.end[RUN.tangent], r.run.end[RUN.controlX])
+    const is = writeHorizon(r, azimuthDeg, r.siteGroundM + heightM, r.run.end[RUN.tangent], r.run.end[RUN.controlX], numbers, 0)
+    return horizonOf(azimuthDeg, numbers, 0, is, g.obstacles)
   })
 }
 
-/** The row of the ray just run, from its highest line. */
-export function horizonRow(r: RayRunner, azimuthDeg: number, antennaM: number, tangent: number, controlX: number): HorizonRow {
-  const t = r.tracer.track
-  const why = t.unknownWhy === 'edge' ? AT_LEAST_EDGE : t.unknownWhy === 'void' ? AT_LEAST_VOID : null
+/** Writes the horizon of the ray just run, from its highest line, at `at`; returns what it is. */
+export function writeHorizon(
+  r: RayRunner,
+  azimuthDeg: number,
+  antennaM: number,
+  tangent: number,
+  controlX: number,
+  numbers: Float64Array,
+  at: number,
+): number {
+  const why = r.tracer.track.unknownWhy
+  const ended = why === 'edge' ? HORIZON_IS.edge : why === 'void' ? HORIZON_IS.void : null
   if (!(controlX > 0)) {
-    const none = Number.NaN
-    return { azimuthDeg, elevationDeg: none, rangeM: none, heightM: none, lon: none, lat: none, obstacle: why ?? 'terrain' }
+    numbers.fill(Number.NaN, at, at + HORIZON_NUMBERS)
+    return ended ?? HORIZON_IS.terrain
   }
   const c = controllingOf(r, tangent, controlX)
   const place = r.tracer.place(c.rangeM, azimuthDeg)
-  return {
-    azimuthDeg,
-    elevationDeg: elevationAngleDeg(antennaM, c.heightM, c.rangeM, r.effectiveRadiusM),
-    rangeM: c.rangeM,
-    heightM: c.heightM,
-    lon: place.lon,
-    lat: place.lat,
-    obstacle: why ?? c.obstacle,
-  }
+  numbers[at] = elevationAngleDeg(antennaM, c.heightM, c.rangeM, r.effectiveRadiusM)
+  numbers[at + 1] = c.rangeM
+  numbers[at + 2] = c.heightM
+  numbers[at + 3] = place.lon
+  numbers[at + 4] = place.lat
+  return ended ?? c.is
 }
+/** The row of those numbers. */
+export const horizonOf = (
+  azimuthDeg: number,
+  numbers: Float64Array,
+  at: number,
+  is: number,
+  obstacles: readonly { readonly name: string }[],
+): HorizonRow => ({
+  azimuthDeg,
+  elevationDeg: numbers[at],
+  rangeM: numbers[at + 1],
+  heightM: numbers[at + 2],
+  lon: numbers[at + 3],
+  lat: numbers[at + 4],
+  obstacle: horizonName(is, obstacles),
+})

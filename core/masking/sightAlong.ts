@@ -1,12 +1,12 @@
 import type { Earth } from '../geodesy/index.ts'
 import type { Ground, Site } from '../terrain/index.ts'
 import { floorBand } from './floorBand.ts'
-import { makeCuts, makeStraightProfile } from './profile.ts'
-import { controlErrorM, heightOnLine, runRay } from './ray.ts'
+import { makeCuts, makeStraightProfile } from './plane/profile.ts'
+import { controlErrorM, heightOnLine, runRay } from './plane/ray.ts'
+import { makeSightRun } from './plane/sightRun.ts'
+import { rangeOfX } from './plane/straight.ts'
 import { heldRunner } from './sightPoint.ts'
-import { makeSightRun } from './sightRun.ts'
 import { isInSight } from './sightState.ts'
-import { rangeOfX } from './straight.ts'
 
 /** Terrain profile along one ray as one antenna sees it; arrays of equal length, at every crossing of the ray. */
 export interface SightProfile {

@@ -1,11 +1,12 @@
 import { depressionAtTerrainDeg, type Earth, geodesicInverse, type LonLat } from '../geodesy/index.ts'
 import { type Ground, groundAt, groundKindAt, positionOf, type Site } from '../terrain/index.ts'
 import { floorBand } from './floorBand.ts'
-import { lowestAntennaY } from './heightToSee.ts'
-import { makeCuts } from './profile.ts'
-import { controllingOf, heightOnLine, makeRunner, type RayRunner, runRay } from './ray.ts'
+import { horizonName } from './horizonIs.ts'
+import { lowestAntennaY } from './plane/heightToSee.ts'
+import { makeCuts } from './plane/profile.ts'
+import { controllingOf, heightOnLine, makeRunner, type RayRunner, runRay } from './plane/ray.ts'
+import { heightOfY } from './plane/straight.ts'
 import { isInSight } from './sightState.ts'
-import { heightOfY } from './straight.ts'
 
 /** One place from one antenna, on its own ray and range. Numbers are NaN where the ground is not known. */
 export interface SightPoint {
@@ -100,7 +101,7 @@ export function sightPoint(g: Ground, site: Site, heightM: number, earth: Earth,
     slope: r.profile.cutSlope[0],
     ...kind,
     unknown: null,
-    controlling: { rangeM: c.rangeM, obstacle: c.obstacle },
+    controlling: { rangeM: c.rangeM, obstacle: horizonName(c.is, g.obstacles) },
   }
 }
 

@@ -2,10 +2,10 @@ import type { Earth } from '../geodesy/index.ts'
 import { CELL } from '../polar/index.ts'
 import { type Ground, RELIEF, type Site } from '../terrain/index.ts'
 import { cutsAround, writeGround, writeSeen } from './cells.ts'
-import { makeStraightProfile } from './profile.ts'
-import { runRay } from './ray.ts'
+import { makeStraightProfile } from './plane/profile.ts'
+import { runRay } from './plane/ray.ts'
+import { makeSightRun } from './plane/sightRun.ts'
 import { heldRunner } from './sightPoint.ts'
-import { makeSightRun } from './sightRun.ts'
 
 /** Cells of chosen rays, packed as in SiteCells and SightCells: index i * cells + j for azimuth i and centre j. */
 export interface SweptRays {

@@ -67,12 +67,13 @@ export function strideStretch(heightM: Float32Array, width: number, control: Con
   const bendPerTwist = (across * along) / (ds * ds)
   const base = (pr * width + pc) | 0
   const first = (3 * (entries - 1)) | 0
-  const majors = (Math.ceil(a0 + major) - 1) | 0
+  const majors = Math.max(0, Math.ceil(a0 + major) - 1) | 0
   // a ray along a line of posts starts on it and never meets another: none, not one less
   const minors = Math.max(0, Math.ceil(b0 + minor) - 1) | 0
   if (majors >= MOST_LINES) return -1
   lastMajor[0] = 0
   let checked = 0
+  let reached = 0
   for (let n = 1; n <= majors; n = (n + 1) | 0) {
     const b = bA + n * ratio
     // rounding may carry b onto a line the stretch ends at
@@ -86,8 +87,11 @@ export function strideStretch(heightM: Float32Array, width: number, control: Con
     ground[(k + 1) | 0] = z0 + (b - line) * (z1 - z0)
     ground[(k + 2) | 0] = twist * bendPerTwist
     lastMajor[line] = n
+    reached = line
     checked += twist
   }
+  // rounding may also leave the last line just unmet: it is met after the last line of the major axis
+  for (let line = reached + 1; line < minors; line++) lastMajor[line] = majors
   const perRatio = 1 / ratio
   const perB = ds / minor
   const sB = s0 - b0 * perB
@@ -107,7 +111,7 @@ export function strideStretch(heightM: Float32Array, width: number, control: Con
   if (patches) {
     for (let n = 1; n <= majors; n++) {
       const b = bA + n * ratio
-      const line = b | 0
+      const line = b < minors + 1 ? b | 0 : minors
       const v = b - line
       const near = base + n * stepA + line * stepB
       keepPatch(patches, entries - 1 + n + line, near, byCol ? 0 : v, byCol ? v : 0, right, down, width, bendPerTwist)

@@ -1,19 +1,23 @@
-// Speed of the kernels in this process, one thread, each over 15 runs; one JSON line on stdout.
-//   npm run --silent bench -- --json --ground G.tif --col C --row R --range M
+// Speed of the kernels in this process, each over 15 runs; one JSON line on stdout.
+//   npm run --silent bench -- --json --ground G.tif --col C --row R --range M [--helpers N]
+// Sweeps are shared with N helper threads (one per further core when it is not said; 0 = one thread) and leave out height to see, as the app does until
+// that layer is shown; `heightToSee` is the time of that by itself. Everything else runs on one thread. "threads" in the answer says how many swept.
 // Without --ground: flat, ridged, rough and all-void grounds of 1 000 x 1 000 posts made here, one line each.
 import { closeSync, fstatSync, openSync, readSync } from 'node:fs'
+import { availableParallelism } from 'node:os'
 import { basename } from 'node:path'
 import { clutterToNoise } from '../../core/clutter/index.ts'
 import { loadCrs, WGS84 } from '../../core/geodesy/index.ts'
 import { type ByteSource, openTerrain } from '../../core/intake/index.ts'
 import type { GroundCode } from '../../core/landcover/index.ts'
-import { previewSweep, sweep } from '../../core/masking/index.ts'
+import { heightToSeeCells, previewSweep } from '../../core/masking/index.ts'
 import { makeRamp, paintPolar } from '../../core/paint/index.ts'
 import type { PolarShape } from '../../core/polar/index.ts'
 import type { RadarInput } from '../../core/radar/index.ts'
 import { type GridShape, gridPosition } from '../../core/raster/index.ts'
 import { buildGround, type Ground, makeTracer, type Site } from '../../core/terrain/index.ts'
 import { finish } from '../../core/work/index.ts'
+import { HelperPool } from './helperPool.ts'
 
 const RUNS = 15
 const AZIMUTHS = 1440
@@ -90,16 +94,17 @@ function fileSource(path: string): ByteSource & { close(): void } {
 async function readGround(path: string): Promise<Ground> {
   const source = fileSource(path)
   const head = await openTerrain(source, {})
-  const heightM = new Float32Array(head.shape.width * head.shape.height)
+  const heightM = sharedHeights(head.shape.width * head.shape.height)
   await head.readInto({ shape: head.shape, samples: heightM })
   source.close()
   return groundOf(head.shape, heightM)
 }
+const sharedHeights = (posts: number): Float32Array => new Float32Array(new SharedArrayBuffer(4 * posts))
 const groundOf = (shape: GridShape, heightM: Float32Array): Ground =>
   finish(buildGround({ serial: 1, shape, heightM, code: null, codes: [FARMLAND], obstacles: [], verticalErrorM: 10 }))
 
 /** All runs of one ground from the post at (col, row). */
-function measure(g: Ground, col: number, row: number, rangeM: number): Record<string, unknown> {
+async function measure(g: Ground, col: number, row: number, rangeM: number, helpers: number): Promise<Record<string, unknown>> {
   const [lon, lat] = gridPosition(g.shape).toLonLat(col, row)
   const site: Site = { lon, lat, groundHeightM: null, clearingRadiusM: 50 }
   const grid: PolarShape = {
@@ -114,13 +119,15 @@ function measure(g: Ground, col: number, row: number, rangeM: number): Record<st
     tracer.trace(i * grid.azimuthStepDeg)
     visits += tracer.track.count
   }
-  const run = (heightsM: readonly number[]) => finish(sweep(g, site, heightsM, grid, EARTH))
+  const pool = new HelperPool(g, helpers)
+  const run = (heightsM: readonly number[]) => pool.sweep(site, heightsM, grid, EARTH, { heightToSee: false })
   const oneHeight = time(() => void run([20]))
   const eightHeights = time(() => void run([5, 10, 15, 20, 25, 30, 35, 40]))
   const option = time(() => {
     const { site: cells, masks } = run([20])
     finish(clutterToNoise(cells, masks[0], g.codes, site, 20, EARTH, RADAR, 0))
   })
+  const heightToSee = time(() => void finish(heightToSeeCells(g, site, grid, EARTH)))
   const preview = time(() => void previewSweep(g, site, 20, grid, EARTH, PREVIEW_NTH))
   const { site: cells, masks } = run([20])
   const clutter = finish(clutterToNoise(cells, masks[0], g.codes, site, 20, EARTH, RADAR, 0))
@@ -132,7 +139,8 @@ function measure(g: Ground, col: number, row: number, rangeM: number): Record<st
   const view = { width: 1440, height: 900, worldX: x - 720 * worldPerPx, worldY: y + 450 * worldPerPx, worldPerPx, night: false }
   const ramp = makeRamp('warm', [0, 20, 40, 60], 'bare')
   const paint = time(() => paintPolar(grid, site, clutter.cnrDb, masks[0].state, ramp, view, out))
-  return { visits, threads: 1, previewEveryNthAzimuth: PREVIEW_NTH, oneHeight, eightHeights, option, preview, paint }
+  await pool.close()
+  return { visits, threads: 1 + helpers, previewEveryNthAzimuth: PREVIEW_NTH, oneHeight, eightHeights, option, preview, paint, heightToSee }
 }
 
 /** Small grounds that show the extremes. */
@@ -150,10 +158,9 @@ function madeGround(height: (col: number, row: number) => number): Ground {
     rowX: 0,
     rowY: -step,
   }
-  return groundOf(
-    shape,
-    Float32Array.from({ length: size * size }, (_, i) => height(i % size, Math.floor(i / size))),
-  )
+  const heightM = sharedHeights(size * size)
+  for (let i = 0; i < heightM.length; i++) heightM[i] = height(i % size, Math.floor(i / size))
+  return groundOf(shape, heightM)
 }
 
 async function main(): Promise<void> {
@@ -161,11 +168,12 @@ async function main(): Promise<void> {
     const i = process.argv.indexOf(`--${name}`)
     return i < 0 ? undefined : process.argv[i + 1]
   }
+  const helpers = Number(value('helpers') ?? availableParallelism() - 1)
   const path = value('ground')
   if (path) {
     const g = await readGround(path)
     await loadCrs(g.shape.crs)
-    const row = measure(g, Number(value('col')), Number(value('row')), Number(value('range')))
+    const row = await measure(g, Number(value('col')), Number(value('row')), Number(value('range')), helpers)
     process.stdout.write(`${JSON.stringify(row)}\n`)
     return
   }
@@ -176,7 +184,7 @@ async function main(): Promise<void> {
     void: () => Number.NaN,
   }
   for (const [name, height] of Object.entries(grounds)) {
-    const row = measure(madeGround(height), 500, 500, 14_000)
+    const row = await measure(madeGround(height), 500, 500, 14_000, helpers)
     process.stdout.write(`${JSON.stringify({ ground: name, ...row })}\n`)
   }
 }

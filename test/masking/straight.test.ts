@@ -1,7 +1,7 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { elevationAngleDeg, heightOnRayM } from '../../core/geodesy/index.ts'
-import { heightOfY, rangeOfX, straightDrop, straightX, straightY } from '../../core/masking/straight.ts'
+import { heightOfY, rangeOfX, straightDrop, straightX, straightY } from '../../core/masking/plane/straight.ts'
 
 // The projective map against plane trigonometry on the sphere (rooms' own sight geometry, which has its own reference tests).
 describe('straight plane', () => {

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { geodesicDirect, geodesicInverse } from '../../core/geodesy/index.ts'
+import type { Obstacle } from '../../core/obstacles/index.ts'
 import { bilinear, type GridShape, gridPosition } from '../../core/raster/index.ts'
 import { groundAt, makeTracer, siteGround, type Tracer } from '../../core/terrain/index.ts'
 import { FARMLAND, FOREST, geographicShape, groundOn, placeAt, seeded, siteAt, utmShape } from './grounds.ts'
@@ -124,7 +125,15 @@ describe('surface', () => {
     expect(entries(t, t.track.ground).every(([, z]) => z === 100)).toBe(true)
   })
 
-  const mast = (over: object) => ({ name: 'mast', heightM: 60, topM: null, widthM: 40, rcsM2: null, verticalErrorM: null, ...over })
+  const mast = (over: Partial<Obstacle> & Pick<Obstacle, 'path'>): Obstacle => ({
+    name: 'mast',
+    heightM: 60,
+    topM: null,
+    widthM: 40,
+    rcsM2: null,
+    verticalErrorM: null,
+    ...over,
+  })
   it('has a point obstacle on every ray inside its angular width, and on one at least', async () => {
     const shape = await utmShape(200, 200, 30)
     const bare = groundOn(shape, () => 10)

@@ -1,12 +1,12 @@
-import type { Earth } from '../geodesy/index.ts'
-import type { PolarShape } from '../polar/index.ts'
-import type { Ground, Site } from '../terrain/index.ts'
-import type { Work } from '../work/index.ts'
+import type { Earth } from '../../geodesy/index.ts'
+import type { PolarShape } from '../../polar/index.ts'
+import type { Ground, Site } from '../../terrain/index.ts'
+import type { Work } from '../../work/index.ts'
+import { uniformCuts } from '../cells.ts'
+import { makeRunner, setEarth } from '../plane/ray.ts'
 import { fillCells, makeCellProfile } from './cellProfile.ts'
-import { uniformCuts } from './cells.ts'
 import { heightsToSee } from './heightLadder.ts'
 import { makeHull } from './hull.ts'
-import { makeRunner, setEarth } from './ray.ts'
 
 const POINTS_PER_TURN = 60_000
 

@@ -1,5 +1,6 @@
-import { type Earth, effectiveRadiusM } from '../geodesy/index.ts'
-import { type Ground, makeTracer, type Site, siteGround, type Tracer } from '../terrain/index.ts'
+import { type Earth, effectiveRadiusM } from '../../geodesy/index.ts'
+import { type Ground, makeTracer, type Site, siteGround, type Tracer } from '../../terrain/index.ts'
+import { HORIZON_IS } from '../horizonIs.ts'
 import { type Cuts, makeStraightProfile, type StraightProfile, straighten } from './profile.ts'
 import { makeSightRun, runSight, type SightRun } from './sightRun.ts'
 import { heightOfY, rangeOfX, straightDrop, straightX, straightY } from './straight.ts'
@@ -57,8 +58,8 @@ export const heightOnLine = (antennaY: number, tangent: number, rangeM: number, 
 export interface Controlling {
   readonly rangeM: number
   readonly heightM: number
-  /** 'terrain', 'cover' or the obstacle's name. */
-  readonly obstacle: string
+  /** Index into Ground.obstacles, or one of HORIZON_IS. */
+  readonly is: number
   /** Its 90 % error, m. */
   readonly errorM: number
 }
@@ -72,7 +73,7 @@ export function controllingOf(r: RayRunner, tangent: number, controlX: number): 
   for (const spike of spikes)
     if (Math.abs(spike.distM - rangeM) < 1e-4) {
       const o = r.g.obstacles[spike.obstacle]
-      return { rangeM, heightM, obstacle: o.name, errorM: o.verticalErrorM ?? r.g.verticalErrorM }
+      return { rangeM, heightM, is: spike.obstacle, errorM: o.verticalErrorM ?? r.g.verticalErrorM }
     }
   let j = 0
   let high = count - 1
@@ -85,8 +86,8 @@ export function controllingOf(r: RayRunner, tangent: number, controlX: number): 
   const u = rangeM - t[3 * j]
   const z = t[3 * j + 1]
   const ground = length > 0 ? z + u * ((t[3 * j + 4] - z) / length + t[3 * j + 2] * (u - length)) : z
-  const obstacle = heightM - ground > COVER_NAMED_M ? 'cover' : 'terrain'
-  return { rangeM, heightM, obstacle, errorM: r.g.verticalErrorM }
+  const is = heightM - ground > COVER_NAMED_M ? HORIZON_IS.cover : HORIZON_IS.terrain
+  return { rangeM, heightM, is, errorM: r.g.verticalErrorM }
 }
 /** Error of the controlling point alone: obstacle records carry their own. */
 export function controlErrorM(r: RayRunner, controlX: number): number {

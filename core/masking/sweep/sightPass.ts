@@ -1,10 +1,10 @@
-import { CELL } from '../polar/index.ts'
+import { CELL } from '../../polar/index.ts'
+import type { SeenCells } from '../cells.ts'
+import type { Cuts } from '../plane/profile.ts'
+import { controlErrorM, type RayRunner } from '../plane/ray.ts'
+import { RUN, type RunState, raise, startRun } from '../plane/sightRun.ts'
+import { isInSight, packShare, SIGHT_ALLOWANCE_M, WHOLE_CELL } from '../sightState.ts'
 import type { CellProfile } from './cellProfile.ts'
-import type { SeenCells } from './cells.ts'
-import type { Cuts } from './profile.ts'
-import { controlErrorM, type RayRunner } from './ray.ts'
-import { RUN, type RunState, raise, startRun } from './sightRun.ts'
-import { isInSight, packShare, SIGHT_ALLOWANCE_M, WHOLE_CELL } from './sightState.ts'
 
 /** A share this near 1 is a cell seen without a break. */
 const UNBROKEN = 1 - 1e-9
@@ -161,7 +161,7 @@ function walk(line: Float64Array, first: number, last: number, s: RunState): voi
     }
     const bow = Math.abs(c) * length * length
     let g1 = y1 - antennaY - m * x1
-    if (g1 > 0 || (g0 > g1 ? g0 : g1) + 0.25 * bow > 0) {
+    if (g1 > 0 || 0.5 * (g0 + g1 + Math.abs(g0 - g1)) + 0.25 * bow > 0) {
       // from the line on, and rising faster than the line to its end throughout: all of it in sight
       const f = (y1 - antennaY) / x1
       if (g0 > -ON_LINE_M && y1 - y0 - bow > f * length) {

@@ -1,5 +1,5 @@
-import type { TracedRay } from '../terrain/index.ts'
-import { type Cuts, placeCuts } from './profile.ts'
+import type { TracedRay } from '../../terrain/index.ts'
+import { type Cuts, placeCuts } from '../plane/profile.ts'
 
 // The sweep's form of a ray in the straight plane: crossings only, with the polar cells noted beside them, so that whole cells can be passed over. The
 // loops are short, hold few arrays, and have no branch the processor would have to guess: that, not the arithmetic, is what a crossing costs.
@@ -15,7 +15,7 @@ export interface CellProfile {
   readonly cell: Float64Array
   /** Per cell: the crossing that ends the segment holding the centre, and the one that ends the segment holding the far edge. */
   readonly at: Int32Array
-  /** Highest Y of the segments that end in a cell; one cell more for what lies beyond. */
+  /** Highest Y of the segments that end in a cell. */
   readonly top: Float64Array
 }
 export const makeCellProfile = (track: number, cells: number): CellProfile => ({
@@ -24,7 +24,7 @@ export const makeCellProfile = (track: number, cells: number): CellProfile => ({
   known: 0,
   cell: new Float64Array(3 * cells),
   at: new Int32Array(2 * cells),
-  top: new Float64Array(cells + 1),
+  top: new Float64Array(cells),
 })
 
 /** Rounding allowed for where a highest Y is put together from sums, m. */
@@ -104,7 +104,6 @@ function noteCells(
 /** From the last crossings to where each mark lies, the surface and slope at the centres, and the tops of all segments that touch a cell. */
 function settleCells(surface: Float64Array, count: number, cutM: Float64Array, out: CellProfile, reached: number): void {
   const { at, cell, top, line } = out
-  const lastCell = top.length - 1
   let ends = 0
   for (let k = 0; k < reached; k++) {
     const more = (at[k] - ends) | 0
@@ -128,7 +127,7 @@ function settleCells(surface: Float64Array, count: number, cutM: Float64Array, o
     const y0 = line[f - 2]
     const y1 = line[f + 1]
     const over = 0.5 * (y0 + y1 + Math.abs(y1 - y0)) + 0.25 * Math.abs(line[f - 1] * length * length)
-    const own = top[j < lastCell ? j : lastCell]
-    cell[3 * j + 2] = (over > own ? over : own) + TOP_SLACK_M
+    const own = top[j]
+    cell[3 * j + 2] = 0.5 * (over + own + Math.abs(over - own)) + TOP_SLACK_M
   }
 }

@@ -1,6 +1,6 @@
+import { ALLOWANCE_REACH, SIGHT_ALLOWANCE_M } from '../sightState.ts'
 import type { StraightProfile } from './profile.ts'
 import { NO_TANGENT } from './sightRun.ts'
-import { ALLOWANCE_REACH, SIGHT_ALLOWANCE_M } from './sightState.ts'
 
 /**
  * Y of the lowest antenna from which a point of a profile is in sight, exact for its segments: the highest of all lines through the point and a place

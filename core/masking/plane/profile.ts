@@ -1,4 +1,4 @@
-import type { TracedRay } from '../terrain/index.ts'
+import type { TracedRay } from '../../terrain/index.ts'
 import { straightDrop, straightX, straightY } from './straight.ts'
 
 /** Distances a profile is cut at (cell edges and centres), ascending, with their places in the straight plane for one effective radius. */

@@ -1,8 +1,8 @@
+import { touchingSlope } from '../plane/heightToSee.ts'
+import type { Cuts } from '../plane/profile.ts'
+import { ALLOWANCE_REACH, SIGHT_ALLOWANCE_M } from '../sightState.ts'
 import type { CellProfile } from './cellProfile.ts'
-import { touchingSlope } from './heightToSee.ts'
 import { dropUnder, type Hull, push, pushArc } from './hull.ts'
-import type { Cuts } from './profile.ts'
-import { ALLOWANCE_REACH, SIGHT_ALLOWANCE_M } from './sightState.ts'
 
 /**
  * Height to see of each cell centre of a ray, in O(n): the tangent from a place to the upper hull of everything nearer, carried back to the mast, with the

@@ -69,7 +69,8 @@ export function raise(s: RunState): void {
   const most = topX - x0
   let from = 0
   if (gap < 0 || steep < 0) {
-    const under = gap < 0 ? gap : 0
+    let under = 0
+    if (gap < 0) under = gap
     const square = steep * steep - 4 * c * under
     const root = square > 0 ? Math.sqrt(square) : 0
     from = steep > 0 ? (-2 * under) / (steep + root) : c > 0 ? (root - steep) / (2 * c) : most
