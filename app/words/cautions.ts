@@ -69,6 +69,7 @@ const LAYER_TOPIC: Record<LayerId, CautionTopic> = {
   depression: 'candidate',
   'clutter-strength': 'clutter',
   'clutter-to-noise': 'clutter',
+  'second-time-around': 'clutter',
   'suppression-needed': 'suppression',
   usable: 'usable',
   'probability-of-detection': 'usable',

@@ -73,6 +73,15 @@ export const LAYER_WORDS: Record<LayerId, LayerWords> = {
     note: 'bare: none needed or too weak · hatched: masked · land table from memory',
     meaning: 'Improvement factor that lets the target of the need stand above mean clutter and noise',
   },
+  'second-time-around': {
+    short: 'clutter of an earlier pulse',
+    title: 'Second-time-around clutter',
+    of: 'dB over noise, mean, one pulse',
+    ends: ['faint', 'severe'],
+    note: 'bare: none, or not evaluated so far out · land table from memory',
+    meaning:
+      'Clutter from beyond the unambiguous range at the range where it appears, worst PRF, before suppression and short-range sensitivity',
+  },
   usable: {
     short: 'in sight, detectable, usable',
     title: 'In sight, detectable, usable',

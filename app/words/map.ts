@@ -82,6 +82,7 @@ export function probeValue(layer: LayerId, value: number | null, units: UnitSyst
   switch (layer) {
     case 'clutter-to-noise':
     case 'clutter-strength':
+    case 'second-time-around':
     case 'suppression-needed':
       return formatDbUp(value)
     case 'coverage-floor':
@@ -140,6 +141,7 @@ const ABOUT_CLUTTER = /clutter|land table/i
 const CLUTTER_LAYERS: readonly LayerId[] = [
   'clutter-strength',
   'clutter-to-noise',
+  'second-time-around',
   'suppression-needed',
   'usable',
   'probability-of-detection',

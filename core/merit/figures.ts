@@ -1,5 +1,7 @@
+import { secondTimeAround } from '../clutter/index.ts'
 import { geodesicInverse } from '../geodesy/index.ts'
 import { sightPoint } from '../masking/index.ts'
+import { isUnknown } from '../polar/index.ts'
 import { canonicalJson, type SettledNeed } from '../study/index.ts'
 import { flatFigures } from './flatFigures.ts'
 import { floorFigures, type GroundSums, groundSums, RING_WIDTH_M } from './groundFigures.ts'
@@ -50,6 +52,7 @@ export function optionFigures(o: OptionCells, needs: readonly SettledNeed[], mar
     clutterOverKm2: sums.over,
     cnrPeakDb: sums.peakDb,
     clutterLevels: clutterLevelsOf(o),
+    secondTimeAround: o.folded ? secondTimeAround(o.folded, o.place.lat) : { km2: null, notEvaluatedBeyondM: knownToM(o) },
     needs: needFigures(o, needs),
     obstaclesInSight: sight.obstacles,
     marks: [...marks, ...o.suppression.notes, ...kept.notes],
@@ -69,7 +72,7 @@ function keptOf(o: OptionCells): Kept {
 /** Figures of needs; those already worked out for the same cells, need and radar are taken again. */
 export function needFigures(o: OptionCells, needs: readonly SettledNeed[]): NeedFigure[] {
   const { needs: known } = keptOf(o)
-  const rest = canonicalJson([o.radar, o.suppression.rows, o.lowK?.key ?? null])
+  const rest = canonicalJson([o.radar, o.suppression.rows, o.lowK?.key ?? null, o.folded?.key ?? null])
   const wanted = new Map<string, NeedFigure>()
   const out = needs.map((need) => {
     const places = o.places.find((p) => p.needId === need.id)
@@ -97,6 +100,13 @@ function sightOf(o: OptionCells): KeptSight {
     keptByMask.set(o.mask, kept)
   }
   return kept
+}
+
+/** Nearest range at which the ground of some azimuth is no longer known, m, or the end of the grid. */
+function knownToM(o: OptionCells): number {
+  const { azimuths, ranges, rangeStepM } = o.site.grid
+  for (let j = 0; j < ranges; j++) for (let i = 0; i < azimuths; i++) if (isUnknown(o.mask.state[i * ranges + j])) return j * rangeStepM
+  return ranges * rangeStepM
 }
 
 /** Names of the obstacles whose top is in sight, each on its own ray, nearest first. */

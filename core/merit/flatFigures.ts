@@ -20,6 +20,8 @@ export function flatFigures(f: Omit<Figures, 'flat'>): Record<string, number | n
     clutter_to_noise_mean_db: f.clutterLevels.whole.meanDb,
     clutter_to_noise_90_db: f.clutterLevels.whole.p90Db,
     clutter_to_noise_99_db: f.clutterLevels.whole.p99Db,
+    second_time_around_km2: f.secondTimeAround.km2,
+    second_time_around_evaluated_m: f.secondTimeAround.notEvaluatedBeyondM,
   }
   const floors = (list: readonly FloorFigure[], tail: string): void => {
     for (const floor of list) {

@@ -7,7 +7,17 @@ export { PLACE } from './needs/place.ts'
 export { type PlacesRequest, readPlaces } from './needs/places/readPlaces.ts'
 export type { NeedPlace, NeedPlaces, PolygonRing } from './needs/places/types.ts'
 export { inSector } from './needs/spans.ts'
-export { antennaM, isLowK, LOW_K, type LowKCells, meanEffectiveRadiusM, type OptionCells, residueOf } from './optionCells.ts'
+export {
+  antennaM,
+  isLowK,
+  LOW_K,
+  type LowKCells,
+  meanEffectiveRadiusM,
+  type OptionCells,
+  plusRatioDb,
+  type ResidueCells,
+  residueOf,
+} from './optionCells.ts'
 export { aboveNoiseDb } from './signal/decibelTables.ts'
 export { twoWayEdgeLossDb } from './signal/edgeLoss.ts'
 export { pdOf } from './signal/pdOf.ts'

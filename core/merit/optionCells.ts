@@ -1,4 +1,4 @@
-import type { ClutterCells, LandTable } from '../clutter/index.ts'
+import type { ClutterCells, FoldedCells, LandTable } from '../clutter/index.ts'
 import type { SuppressionBy } from '../doppler/index.ts'
 import type { Earth } from '../geodesy/index.ts'
 import type { SightCells, SiteCells } from '../masking/index.ts'
@@ -6,6 +6,7 @@ import type { Held } from '../polar/index.ts'
 import type { RadarInput } from '../radar/index.ts'
 import type { SettledStudy } from '../study/index.ts'
 import type { Ground, Site } from '../terrain/index.ts'
+import { fromDb, toDb } from '../units/index.ts'
 import type { NeedPlaces } from './needs/places/types.ts'
 import type { FloorFigure } from './types.ts'
 
@@ -43,6 +44,8 @@ export interface OptionCells {
   readonly clutter: ClutterCells
   /** What suppression does to each kind of clutter. `clutter.residueDb` holds it only where kinds differ: read it through `residueOf`. */
   readonly suppression: SuppressionBy
+  /** Clutter from beyond the unambiguous range, which `clutter` leaves out; null where none can fold in, or it is not worked out. */
+  readonly folded: FoldedCells | null
   /** Null where cover at the smaller k is not worked out. */
   readonly lowK: LowKCells | null
   /** What the files of needs hold. */
@@ -59,8 +62,25 @@ export function meanEffectiveRadiusM(site: SiteCells): number {
   return sum / site.effectiveRadiusM.length
 }
 
-/** Residue over noise per cell, dB, before STC: `cells` less `lessDb`. */
-export function residueOf(o: Pick<OptionCells, 'clutter' | 'suppression'>): { readonly cells: Float32Array; readonly lessDb: number } {
-  const { uniformDb } = o.suppression
-  return uniformDb === null ? { cells: o.clutter.residueDb, lessDb: 0 } : { cells: o.clutter.cnrDb, lessDb: uniformDb }
+/** Clutter and residue over noise by cell, dB, before STC, with what folds in from earlier pulses; NaN where there is none. */
+export interface ResidueCells {
+  readonly cnrDb: Float32Array
+  /** Residue: `left[cell]` less `lessDb`. */
+  readonly left: Float32Array
+  readonly lessDb: number
+  /** Folded clutter over noise, ratio, and what suppression leaves of it, ratio; null = none. */
+  readonly folded: Float32Array | null
+  readonly foldedLeft: number
 }
+export function residueOf(o: Pick<OptionCells, 'clutter' | 'suppression' | 'folded'>): ResidueCells {
+  const { uniformDb, rows } = o.suppression
+  const foldedDb = rows.find((r) => r.about === 'folded')?.improvementDb ?? 0
+  return {
+    cnrDb: o.clutter.cnrDb,
+    ...(uniformDb === null ? { left: o.clutter.residueDb, lessDb: 0 } : { left: o.clutter.cnrDb, lessDb: uniformDb }),
+    folded: o.folded?.ratio ?? null,
+    foldedLeft: fromDb(-foldedDb),
+  }
+}
+/** Two levels over noise added, dB; NaN stands for nothing, `ratio` > 0. */
+export const plusRatioDb = (db: number, ratio: number): number => toDb((Number.isNaN(db) ? 0 : fromDb(db)) + ratio)

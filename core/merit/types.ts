@@ -1,4 +1,4 @@
-import type { ClutterLevels } from '../clutter/index.ts'
+import type { ClutterLevels, SecondTimeAround } from '../clutter/index.ts'
 import type { SuppressionBy } from '../doppler/index.ts'
 import type { HorizonRow } from '../masking/index.ts'
 import type { NeedFigure } from './needs/needTypes.ts'
@@ -49,6 +49,8 @@ export interface Figures {
   readonly cnrPeakDb: number | null
   /** C/N by ring of 5 NM and octant: mean, levels that 90 and 99 % of the ground stays under, share over 40 dB; STC not taken off. */
   readonly clutterLevels: ClutterLevels
+  /** Ground where clutter of an earlier pulse stands over the noise; where terrain ends sooner than it is looked for, how far it was. */
+  readonly secondTimeAround: SecondTimeAround
   readonly needs: readonly NeedFigure[]
   /** Names of obstacles in sight. */
   readonly obstaclesInSight: readonly string[]

@@ -1,4 +1,4 @@
-import { clutterToNoise } from '../clutter/index.ts'
+import { clutterToNoise, foldedClutter } from '../clutter/index.ts'
 import { sightAlong, sweep } from '../masking/index.ts'
 import { isLowK, ladderHeightsM, ladderOf, type OptionCells, type Rung, rung } from '../merit/index.ts'
 import { polarShape } from '../polar/index.ts'
@@ -7,7 +7,7 @@ import { share, type Work } from '../work/index.ts'
 import type { Engine } from './engine.ts'
 import { heightToSee } from './layers.ts'
 import { cellLedger } from './ledger/cellLedger.ts'
-import { candidateOf, clutterOptions, earthOf, lowEarthOf, lowKOf, siteOf, suppressionOf } from './optionParts.ts'
+import { candidateOf, clutterOptions, earthOf, lowEarthOf, lowKOf, mayFold, siteOf, suppressionOf } from './optionParts.ts'
 import { paintGround, paintOption, paintSheet } from './pictures.ts'
 import { type ProbeCache, probeAt } from './probe.ts'
 import type { Answer, Ask, Profile, Tell } from './types.ts'
@@ -119,6 +119,7 @@ export class Answers {
       mask,
       clutter,
       suppression: suppressionOf(study, ground),
+      folded: null,
       lowK: null,
       places: this.engine.needPlaces,
     }
@@ -181,9 +182,10 @@ export class Answers {
   private *ledger(body: Ask['ledger']): Work<EngineAnswer['ledger']> {
     const { ground, study } = this.engine.ready()
     const place = siteOf(candidateOf(study, body.option.candidate))
-    const held = this.engine.cells(body.option)?.clutter
-    const sideLobes = held ? { sideLobeCnrDb: held.sideLobeCnrDb, sideLobeResidueDb: held.sideLobeResidueDb } : {}
-    const options = { ...clutterOptions(study, ground, this.engine.landTable, place, body.option.heightM), ...sideLobes }
+    const held = this.engine.cells(body.option)
+    const sideLobes = held ? { sideLobeCnrDb: held.clutter.sideLobeCnrDb, sideLobeResidueDb: held.clutter.sideLobeResidueDb } : {}
+    const folded = held?.folded ? { folded: held.folded } : {}
+    const options = { ...clutterOptions(study, ground, this.engine.landTable, place, body.option.heightM), ...sideLobes, ...folded }
     return cellLedger(ground, study, body.option, body.at, options)
   }
 
@@ -199,6 +201,7 @@ export class Answers {
     const suppression = suppressionOf(study, ground)
     const grid = polarShape(study.run)
     const lowEarth = isLowK(earth.effectiveEarthFactor) ? null : lowEarthOf(study)
+    const folds = mayFold(study, ground, place)
     const rungs: Rung[] = []
     for (let n = 0; n < heights.length; n += LADDER_BATCH) {
       const batch = heights.slice(n, n + LADDER_BATCH)
@@ -221,12 +224,27 @@ export class Answers {
         const options = clutterOptions(study, ground, landTable, place, heightM)
         const clutter = yield* silently(clutterToNoise(site, mask, ground.codes, place, heightM, earth, radar, tiltDeg, options))
         const lowK = low && lowEarth && lowKOf(low.site, low.masks[h], lowEarth, '')
-        rungs.push(
-          rung(
-            { ground, place, earth, radar, atmosphere, landTable, heightM, tiltDeg, site, mask, clutter, suppression, lowK, places },
-            study.needs,
-          ),
-        )
+        const folded = folds
+          ? yield* silently(foldedClutter(ground, place, heightM, earth, radar, tiltDeg, site, study.foldRangeM, options))
+          : null
+        const cells = {
+          ground,
+          place,
+          earth,
+          radar,
+          atmosphere,
+          landTable,
+          heightM,
+          tiltDeg,
+          site,
+          mask,
+          clutter,
+          suppression,
+          folded,
+          lowK,
+          places,
+        }
+        rungs.push(rung(cells, study.needs))
         yield { done: rungs.length, total: heights.length }
       }
     }

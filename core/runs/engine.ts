@@ -1,4 +1,4 @@
-import { type ClutterCells, clutterMarks, clutterToNoise, type LandTable } from '../clutter/index.ts'
+import { type ClutterCells, clutterMarks, clutterToNoise, type FoldedCells, foldedClutter, type LandTable } from '../clutter/index.ts'
 import type { SuppressionBy } from '../doppler/index.ts'
 import { isInputError } from '../errors/index.ts'
 import { type SightCells, type SiteCells, sweep } from '../masking/index.ts'
@@ -8,7 +8,7 @@ import { type SettledNeed, type SettledStudy, type StudyDoc, settle } from '../s
 import type { Ground } from '../terrain/index.ts'
 import { share, type Work } from '../work/index.ts'
 import { keysOf, optionId, optionsOfStudy } from './keys.ts'
-import { candidateOf, clutterOptions, earthOf, lowEarthOf, lowKOf, siteOf, suppressionOf } from './optionParts.ts'
+import { candidateOf, clutterOptions, earthOf, lowEarthOf, lowKOf, mayFold, siteOf, suppressionOf } from './optionParts.ts'
 import { PolarCache } from './polarCache.ts'
 import type { LayerId, OptionRef, OptionResult, Tell } from './types.ts'
 
@@ -126,12 +126,13 @@ export class Engine {
 
   private *makeFigures(ref: OptionRef): Work<Tell[]> {
     const study = this.study as SettledStudy
-    const cells = yield* share(this.compute(ref), 0, 0.7, 1)
-    const lowK = yield* share(this.computeLowK(ref), 0.7, 1, 1)
+    const cells = yield* share(this.compute(ref), 0, 0.6, 1)
+    const lowK = yield* share(this.computeLowK(ref), 0.6, 0.8, 1)
+    const folded = yield* share(this.computeFolded(ref, cells), 0.8, 1, 1)
     const keys = this.keys(ref)
     if (this.study !== study || !keys) return []
     const marks = clutterMarks(cells.ground.codes, study.radar, this.landTable !== null, study.atmosphere)
-    const figures = optionFigures({ ...cells, lowK }, study.needs, marks)
+    const figures = optionFigures({ ...cells, lowK, folded }, study.needs, marks)
     this.results.set(optionId(ref), { ref, keys, figures, held: true })
     const isShown = this.shown.option !== null && optionId(this.shown.option) === optionId(ref)
     return isShown ? [this.figures(), { kind: 'dirty' }] : [this.figures()]
@@ -191,7 +192,20 @@ export class Engine {
     return cover
   }
 
-  /** Cells of an option if all of them are still held; cover at the smaller k only if it is there. */
+  /** Clutter from beyond the unambiguous range of an option; null where no ground lies there. */
+  private *computeFolded(ref: OptionRef, o: OptionCells): Work<FoldedCells | null> {
+    const { ground, study } = this.ready()
+    const keys = this.keys(ref)
+    if (!keys || !mayFold(study, ground, o.place)) return null
+    const held = this.cache.get<FoldedCells>(keys.folded)
+    if (held) return held
+    const options = { ...clutterOptions(study, ground, this.landTable, o.place, ref.heightM), key: keys.folded }
+    const folded = yield* foldedClutter(ground, o.place, ref.heightM, o.earth, o.radar, ref.tiltDeg, o.site, study.foldRangeM, options)
+    this.cache.put(keys.folded, folded, this.keepWhile(ref))
+    return folded
+  }
+
+  /** Cells of an option if all of them are still held; cover at the smaller k and folded clutter only if they are there. */
   cells(ref: OptionRef): OptionCells | null {
     const keys = this.keys(ref)
     if (!keys) return null
@@ -218,6 +232,7 @@ export class Engine {
       mask,
       clutter,
       suppression: this.suppression.by,
+      folded: (keys && this.cache.get<FoldedCells>(keys.folded)) ?? null,
       lowK: (keys && this.cache.get<LowKCells>(keys.lowK)) ?? null,
       places: this.needPlaces,
     }
@@ -234,7 +249,7 @@ export class Engine {
     return new Set(
       [ref, ...(shown ? [shown] : [])].flatMap((r) => {
         const k = this.keys(r)
-        return k ? [k.site, k.mask, k.lowK, k.clutter] : []
+        return k ? [k.site, k.mask, k.lowK, k.clutter, k.folded] : []
       }),
     )
   }

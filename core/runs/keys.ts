@@ -14,7 +14,8 @@ export function keysOf(serial: number, filesSerial: number, study: SettledStudy,
     mask,
     lowK: `${siteKey(serial, study, candidate, LOW_K)}|${ref.heightM}|cover`,
     clutter,
-    needs: `${clutter}|${filesSerial}|${canonicalJson(study.needs)}`,
+    folded: `${clutter}|${study.foldRangeM}`,
+    needs: `${clutter}|${study.foldRangeM}|${filesSerial}|${canonicalJson(study.needs)}`,
   }
 }
 

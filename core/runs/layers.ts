@@ -1,4 +1,4 @@
-import { fillCellStrength } from '../clutter/index.ts'
+import { decibel, fillCellStrength } from '../clutter/index.ts'
 import { heightToSeeCells } from '../masking/index.ts'
 import { cellsOfNeed, LOSS_CAUSES, type NeedCells, type OptionCells, PLACE, pdOf } from '../merit/index.ts'
 import { makeRamp, type Ramp } from '../paint/index.ts'
@@ -61,6 +61,7 @@ export const LAYERS: Readonly<Record<LayerId, LayerInfo>> = {
   'clutter-strength': layer('clutter-strength', 'echo', 'dB', 'up', makeRamp('warm', [-60, -50, -40, -30, -20, -10], 'bare'), true),
   'clutter-to-noise': layer('clutter-to-noise', 'echo', 'dB', 'up', makeRamp('warm', [0, 10, 20, 30, 40, 50, 60, 70], 'bare'), true),
   'suppression-needed': layer('suppression-needed', 'takes', 'dB', 'up', makeRamp('warm', [0, 10, 20, 30, 40, 50, 60, 70], 'bare'), true),
+  'second-time-around': layer('second-time-around', 'echo', 'dB', 'up', makeRamp('warm', [0, 10, 20, 30, 40, 50, 60, 70], 'bare'), false),
   usable: classes('usable', 'seen', USABLE_HEXES),
   'probability-of-detection': layer(
     'probability-of-detection',
@@ -88,6 +89,9 @@ export const NEED_LAYERS: readonly LayerId[] = [
 export const layerInfo = (id: LayerId): LayerInfo => LAYERS[id]
 export const isLayerId = (id: string): id is LayerId => (LAYER_IDS as readonly string[]).includes(id)
 
+/** Folded clutter fainter than this over noise is none. */
+const FAINTEST_RATIO = 1e-10
+
 const heights = new WeakMap<OptionCells['site'], Float32Array>()
 /** Height to see of every cell, m of mast, worked out when it is first asked for; the same for every mast height of a candidate. */
 export function* heightToSee(o: OptionCells): Work<Float32Array> {
@@ -114,6 +118,11 @@ export function fillLayer(id: LayerId, o: OptionCells, need: SettledNeed | null,
       return
     case 'clutter-to-noise':
       out.set(o.clutter.cnrDb)
+      return
+    case 'second-time-around':
+      if (o.folded)
+        for (let at = 0; at < out.length; at++) out[at] = o.folded.ratio[at] > FAINTEST_RATIO ? decibel(o.folded.ratio[at]) : Number.NaN
+      else out.fill(Number.NaN)
       return
     case 'depression':
       fillDepression(o, out)

@@ -1,8 +1,9 @@
 import { type ClutterOptions, discreteEchoes, type LandTable } from '../clutter/index.ts'
-import { improvementDb, type SuppressionBy, suppressionBy } from '../doppler/index.ts'
-import type { Earth } from '../geodesy/index.ts'
+import { improvementDb, type SuppressionBy, suppressionBy, unambiguousRangeM } from '../doppler/index.ts'
+import { type Earth, geodesicInverse } from '../geodesy/index.ts'
 import type { SightCells, SiteCells } from '../masking/index.ts'
 import { floorFigures, LOW_K, type LowKCells, meanEffectiveRadiusM } from '../merit/index.ts'
+import { gridPosition } from '../raster/index.ts'
 import type { SettledCandidate, SettledStudy } from '../study/index.ts'
 import type { Ground, Site } from '../terrain/index.ts'
 
@@ -48,6 +49,20 @@ export function clutterOptions(
     ...(landTable ? { landTable } : {}),
     ...(residue === 'always' || by.uniformDb === null ? { improvementDb: improvementDb(by, ground.codes) } : {}),
   }
+}
+
+/** Can ground lie beyond the unambiguous range, within the range that folded clutter is looked for? Only then is it worth a sweep. */
+export function mayFold(study: SettledStudy, ground: Ground, place: Site): boolean {
+  const nearestM = Math.min(...study.radar.prfHz.map(unambiguousRangeM))
+  if (study.foldRangeM <= nearestM) return false
+  const { width, height } = ground.shape
+  const { toLonLat } = gridPosition(ground.shape)
+  return [0, width - 1].some((col) =>
+    [0, height - 1].some((row) => {
+      const [lon, lat] = toLonLat(col, row)
+      return geodesicInverse(place, { lon, lat }).distanceM > nearestM
+    }),
+  )
 }
 
 /** Cover of one mast height at the smaller k, from its sweep. */

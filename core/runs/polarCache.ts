@@ -1,8 +1,8 @@
-import type { ClutterCells } from '../clutter/index.ts'
+import type { ClutterCells, FoldedCells } from '../clutter/index.ts'
 import type { SightCells, SiteCells } from '../masking/index.ts'
 import type { LowKCells } from '../merit/index.ts'
 
-type Cells = SiteCells | SightCells | ClutterCells | LowKCells
+type Cells = SiteCells | SightCells | ClutterCells | FoldedCells | LowKCells
 const LIMIT_BYTES = 256 * 2 ** 20
 
 /** Polar grids by key, bounded in bytes; the least recently used go first, but never one named in `keep`. */

@@ -19,6 +19,8 @@ export interface Keys {
   /** Cover at the smaller k. */
   readonly lowK: string
   readonly clutter: string
+  /** Clutter from beyond the unambiguous range. */
+  readonly folded: string
   readonly needs: string
 }
 export interface OptionResult {
@@ -37,6 +39,7 @@ export const LAYER_IDS = [
   'depression',
   'clutter-strength',
   'clutter-to-noise',
+  'second-time-around',
   'suppression-needed',
   'usable',
   'probability-of-detection',

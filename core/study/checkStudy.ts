@@ -24,7 +24,7 @@ export function checkStudy(study: SettledStudy, doc?: StudyDoc): string[] {
   const unambiguous = SPEED_OF_LIGHT_MS / (2 * Math.max(...r.prfHz))
   if (r.instrumentedRangeM > unambiguous * 1.001)
     out.push(
-      `radar.instrumentedRangeM is beyond the unambiguous range of ${quantity(Math.round(unambiguous), 'm')}: folded echoes are not assessed yet`,
+      `radar.instrumentedRangeM is beyond the unambiguous range of ${quantity(Math.round(unambiguous), 'm')}: targets farther out appear at a nearer range`,
     )
   const a = r.antenna
   const most = 10 * Math.log10(SPHERE_DEG2 / (a.azimuthBeamwidthDeg * a.elevationBeamwidthDeg))

@@ -166,6 +166,7 @@ function sampleFigures(siteGroundM: number, heightM: number, screen: number, see
     ringWidthM: 10_000,
     clutterOverKm2: { over0: sight * 0.94, over20: sight * 0.71, over40: sight * 0.27 + heightM, over60: sight * 0.03 },
     cnrPeakDb: 71.3,
+    secondTimeAround: { km2: null, notEvaluatedBeyondM: 81_000 },
     clutterLevels: {
       whole: { knownKm2: all - 240, over40Pct: 8.1, meanDb: 47.2, p90Db: 22.4, p99Db: 55.8 },
       rings: [],
@@ -244,7 +245,7 @@ function sampleFigures(siteGroundM: number, heightM: number, screen: number, see
 
 const result = (candidate: string, heightM: number, groundM: number, screen: number, seen: number): OptionResult => ({
   ref: { candidate, heightM, tiltDeg: 1.5 },
-  keys: { site: candidate, mask: `${candidate}${heightM}`, lowK: '', clutter: `${candidate}${heightM}`, needs: 'n' },
+  keys: { site: candidate, mask: `${candidate}${heightM}`, lowK: '', clutter: `${candidate}${heightM}`, folded: '', needs: 'n' },
   figures: sampleFigures(groundM, heightM, screen, seen),
   held: true,
 })

@@ -1,3 +1,4 @@
+import { plusRatioDb, type ResidueCells } from '../optionCells.ts'
 import { aboveNoiseDb, roomOverNoiseDb } from '../signal/decibelTables.ts'
 import { twoWayEdgeLossDb } from '../signal/edgeLoss.ts'
 import type { LevelRow } from '../signal/levelRow.ts'
@@ -19,9 +20,7 @@ export interface LevelTest {
   readonly floorM: Float32Array
   readonly floorBandM: Float32Array
   readonly clearLowM: Float32Array | null
-  readonly cnrDb: Float32Array
-  readonly residueDb: Float32Array
-  readonly residueLessDb: number
+  readonly residue: ResidueCells
   readonly overload: Overload | null
   readonly noiseGainDb: number
   readonly wavelengthM: number
@@ -71,8 +70,9 @@ const MARGINAL = lossCode('marginal')
 
 /** Tests one level in cells first … last−1 of a row that starts at `from`. Unknown ground counts as hidden; the caller tells it apart. */
 export function testLevel(t: LevelTest, out: NeedRow, first: number, last: number, from: number): void {
-  const { levelM, aboveSea, row, rowLow, groundM, floorM, floorBandM, clearLowM, cnrDb, residueDb, residueLessDb, overload } = t
+  const { levelM, aboveSea, row, rowLow, groundM, floorM, floorBandM, clearLowM, overload } = t
   const { noiseGainDb, wavelengthM, rangeStepM, ranges } = t
+  const { cnrDb, left: leftDb, lessDb, folded, foldedLeft } = t.residue
   const { obstacleM, groundSlantM, rangeM } = t.ray
   const { tested, place, marginal, cause: why, marginM, signalDb, neededDb, availableDb } = out
   const perStep = 1 / rangeStepM
@@ -90,10 +90,15 @@ export function testLevel(t: LevelTest, out: NeedRow, first: number, last: numbe
 
     // A target shares the gate of the ground at its own slant range.
     const gate = from + Math.min(ranges - 1, Math.max(0, j + Math.round((row.slantM[j] - groundSlantM[j]) * perStep)))
-    const cnr = cnrDb[gate]
+    let cnr = cnrDb[gate]
+    let left = leftDb[gate] - lessDb
+    if (folded !== null && folded[gate] > 0) {
+      cnr = plusRatioDb(cnr, folded[gate])
+      left = plusRatioDb(left, folded[gate] * foldedLeft)
+    }
     const stc = row.stcDb[j]
     const overloaded = overload !== null && cnr - stc + 0.1 * overload.excessTenths[gate] > overload.limitDb
-    const left = overloaded ? cnr : residueDb[gate] - residueLessDb
+    if (overloaded) left = cnr
     const residue = left - stc
     let bits = 0
 
@@ -119,7 +124,7 @@ export function testLevel(t: LevelTest, out: NeedRow, first: number, last: numbe
         const needed = cnr - stc > room ? cnr - stc - room : 0
         if (needed > neededDb[j]) {
           neededDb[j] = needed
-          availableDb[j] = cnr >= left ? cnr - left : residueLessDb
+          availableDb[j] = cnr >= left ? cnr - left : lessDb
         }
         if (over >= 0) bits |= PLACE.usable
       }

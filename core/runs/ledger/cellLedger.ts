@@ -1,22 +1,28 @@
-import { clutterAtPoint, type PointClutter, type PointOptions } from '../../clutter/index.ts'
+import { clutterAtPoint, type FoldedCells, foldedClutter, type PointClutter, type PointOptions } from '../../clutter/index.ts'
 import { improvementDb } from '../../doppler/index.ts'
 import { depressionAtTerrainDeg, earthDropM, effectiveRadiusM, geodesicDirect, type LonLat, slantRangeM } from '../../geodesy/index.ts'
-import { type SightPoint, sightPoint } from '../../masking/index.ts'
+import { type SightPoint, sightPoint, sweep } from '../../masking/index.ts'
 import { isAreaNeed, isLowK } from '../../merit/index.ts'
-import { polarShape } from '../../polar/index.ts'
+import { cellAt, polarShape } from '../../polar/index.ts'
 import type { SettledStudy } from '../../study/index.ts'
 import { type Ground, siteGround } from '../../terrain/index.ts'
-import { candidateOf, earthOf, lowEarthOf, siteOf, suppressionOf } from '../optionParts.ts'
+import { finish } from '../../work/index.ts'
+import { candidateOf, earthOf, lowEarthOf, mayFold, siteOf, suppressionOf } from '../optionParts.ts'
 import type { CellLedger, LedgerLine, OptionRef } from '../types.ts'
 import { GEOMETRY, ledgerLine } from './line.ts'
 import { needLines } from './needLines.ts'
+
+/** Options of the clutter kernels, side-lobe terms and folded clutter of the option where they are at hand. */
+export interface LedgerOptions extends PointOptions {
+  readonly folded?: FoldedCells
+}
 
 /**
  * Every step behind the numbers of one place for one option. Lines of a result (`of`) that start, add or subtract sum to it; `info` lines
  * give what went in. The place is evaluated on its own ray and range. `options` are those of the clutter kernels (`clutterOptions`) and, where
  * they are at hand, the side-lobe terms of the option, which otherwise take a sweep of their own.
  */
-export function cellLedger(ground: Ground, study: SettledStudy, option: OptionRef, at: LonLat, options: PointOptions = {}): CellLedger {
+export function cellLedger(ground: Ground, study: SettledStudy, option: OptionRef, at: LonLat, options: LedgerOptions = {}): CellLedger {
   const site = siteOf(candidateOf(study, option.candidate))
   const earth = earthOf(study)
   const sight = sightPoint(ground, site, option.heightM, earth, at)
@@ -43,12 +49,13 @@ export function cellLedger(ground: Ground, study: SettledStudy, option: OptionRe
     results.depression_deg = depressionAtTerrainDeg(siteM + option.heightM - sight.groundM, sight.rangeM, radius)
     const suppression = suppressionOf(study, ground)
     // Where kinds of clutter differ the residue comes from the sums themselves.
-    const { sideLobeCnrDb, sideLobeResidueDb, ...rest } = options
+    const { sideLobeCnrDb, sideLobeResidueDb, folded: heldFolded, ...rest } = options
     const asked: PointOptions =
       suppression.uniformDb !== null || options.improvementDb
         ? options
         : { ...rest, improvementDb: improvementDb(suppression, ground.codes) }
     const grid = polarShape(study.run)
+    const folded = heldFolded ?? foldedOf(ground, study, option, options)
     const clutterOf = (place: LonLat): PointClutter =>
       clutterAtPoint(ground, site, option.heightM, earth, study.radar, option.tiltDeg, grid, place, asked)
     const clutter = clutterOf(at)
@@ -71,7 +78,13 @@ export function cellLedger(ground: Ground, study: SettledStudy, option: OptionRe
         const rangeM = Math.max(grid.rangeStepM / 2, sight.rangeM + shift * grid.rangeStepM)
         const there = shift === 0 ? clutter : clutterOf(geodesicDirect(site, sight.azimuthDeg, rangeM))
         const residueDb = suppression.uniformDb === null || there.cnrDb === null ? there.residueDb : there.cnrDb - suppression.uniformDb
-        return { clutter: there, residueDb, rangeM: shift === 0 ? sight.rangeM : rangeM }
+        const cell = folded ? cellAt(grid, sight.azimuthDeg, rangeM) : -1
+        return {
+          clutter: there,
+          residueDb,
+          foldedRatio: folded && cell >= 0 ? folded.ratio[cell] : 0,
+          rangeM: shift === 0 ? sight.rangeM : rangeM,
+        }
       },
     }
     for (const need of study.needs.filter(isAreaNeed)) {
@@ -81,6 +94,15 @@ export function cellLedger(ground: Ground, study: SettledStudy, option: OptionRe
     }
   }
   return { at: { ...at, azimuthDeg: sight.azimuthDeg, rangeM: sight.rangeM }, option, lines, results }
+}
+
+/** Clutter from beyond the unambiguous range, by a sweep of its own; null where no ground lies there. */
+function foldedOf(ground: Ground, study: SettledStudy, option: OptionRef, options: PointOptions): FoldedCells | null {
+  const site = siteOf(candidateOf(study, option.candidate))
+  if (!mayFold(study, ground, site)) return null
+  const earth = earthOf(study)
+  const near = finish(sweep(ground, site, [option.heightM], polarShape(study.run), earth, { heightToSee: false })).site
+  return finish(foldedClutter(ground, site, option.heightM, earth, study.radar, option.tiltDeg, near, study.foldRangeM, options))
 }
 
 function placeLines(s: SightPoint, siteM: number, mastM: number): LedgerLine[] {

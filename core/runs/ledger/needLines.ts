@@ -3,10 +3,10 @@ import { type PointClutter, percentileOverMeanDb, suppressionNeededDb } from '..
 import type { SuppressionBy } from '../../doppler/index.ts'
 import { elevationAngleDeg, slantRangeM } from '../../geodesy/index.ts'
 import type { SightPoint } from '../../masking/index.ts'
-import { aboveNoiseDb, echoAt, pdOf, receiverLinearRangeDb, targetSignal, twoWayEdgeLossDb } from '../../merit/index.ts'
+import { aboveNoiseDb, echoAt, pdOf, plusRatioDb, receiverLinearRangeDb, targetSignal, twoWayEdgeLossDb } from '../../merit/index.ts'
 import { compressionGainDb, noiseDbw, targetPolarisationLossDb } from '../../radar/index.ts'
 import type { SettledNeed, SettledStudy } from '../../study/index.ts'
-import { RAD_PER_DEG, toDb, wavelengthM } from '../../units/index.ts'
+import { fromDb, RAD_PER_DEG, toDb, wavelengthM } from '../../units/index.ts'
 import type { LedgerLine } from '../types.ts'
 import { GEOMETRY, ledgerLine, sumOf } from './line.ts'
 
@@ -18,6 +18,7 @@ const EDGE = ['Knife edge near the mask', 'Recommendation ITU-R P.526, from memo
 const GAS = ['Gas loss', 'Recommendation ITU-R P.676-12'] as const
 const RAIN = ['Rain loss', 'Recommendation ITU-R P.838-3'] as const
 const RESIDUE = ['Suppression by kind of clutter', '1/I = 1/I_spectral + 1/I_stability + 1/I_quantisation'] as const
+const FOLDED = ['Folded clutter', 'ground beyond c/2f at its apparent range'] as const
 const NEEDED = ['Suppression needed', '(C/N) / [(S/N)/D₀ − 1], mathematics'] as const
 const RECEIVER = ['Linear range of the receiver', '6.02 dB per bit less 6'] as const
 const MARGIN = ['Signal margin', 'S/(C/I + N) less the required ratio'] as const
@@ -34,7 +35,13 @@ export interface NeedPlaceParts {
   /** Sight at the smaller k; null where cover is not worked out there. */
   readonly lowSight: SightPoint | null
   /** Clutter of the resolution cell at a slant range on this azimuth. */
-  clutterAt(slantM: number): { readonly clutter: PointClutter; readonly residueDb: number | null; readonly rangeM: number }
+  clutterAt(slantM: number): {
+    readonly clutter: PointClutter
+    readonly residueDb: number | null
+    /** Folded clutter over noise, ratio; 0 = none. */
+    readonly foldedRatio: number
+    readonly rangeM: number
+  }
 }
 
 /** The target of a need over this place, at its lowest level above the ground: from height margin to probability of detection. */
@@ -121,22 +128,27 @@ export function needLines(need: SettledNeed, p: NeedPlaceParts): { lines: Ledger
   put(snr, 'subtract', 'stc', 'short-range sensitivity', echo.stcDb, 'dB', STATED)
   const snrDb = finish(snr)
 
-  const { clutter, residueDb, rangeM } = p.clutterAt(slantM)
+  const { clutter, residueDb, foldedRatio, rangeM } = p.clutterAt(slantM)
   const noiseGainDb = toDb(p.suppression.noiseGain)
-  const cnrDb = clutter.cnrDb === null ? null : clutter.cnrDb - echo.stcDb
+  const foldedDb = p.suppression.rows.find((r) => r.about === 'folded')?.improvementDb ?? 0
+  const plus = (db: number | null, ratio: number): number | null => (ratio > 0 ? plusRatioDb(db ?? Number.NaN, ratio) : db)
+  const beforeDb = plus(clutter.cnrDb, foldedRatio)
+  const afterDb = plus(residueDb, foldedRatio * fromDb(-foldedDb))
+  const cnrDb = beforeDb === null ? null : beforeDb - echo.stcDb
   const limitDb = receiverLinearRangeDb(p.study.radar)
   const overloaded =
     limitDb !== null && cnrDb !== null && cnrDb + (clutter.spread === null ? 0 : percentileOverMeanDb(clutter.spread, 0.99)) > limitDb
-  const left = overloaded ? clutter.cnrDb : residueDb
+  const left = overloaded ? beforeDb : afterDb
   const residue = resultKey('residue_to_noise_db')
   if (rangeM !== sight.rangeM)
     put(residue, 'info', 'clutter_range', 'ground range of the clutter in the gate of the target', rangeM, 'm', geometry)
-  if (clutter.cnrDb !== null && left !== null) {
-    put(residue, 'start', 'clutter_to_noise', 'C/N of the resolution cell', clutter.cnrDb, 'dB', [
+  if (beforeDb !== null && left !== null) {
+    put(residue, 'start', 'clutter_to_noise', 'C/N of the resolution cell', clutter.cnrDb ?? beforeDb, 'dB', [
       'Clutter-to-noise',
       'lines of clutter_to_noise_db',
     ])
-    put(residue, 'subtract', 'improvement', 'improvement factor over the kinds in the cell', clutter.cnrDb - left, 'dB', RESIDUE)
+    put(residue, 'add', 'folded', 'clutter of an earlier pulse on top', clutter.cnrDb === null ? 0 : beforeDb - clutter.cnrDb, 'dB', FOLDED)
+    put(residue, 'subtract', 'improvement', 'improvement factor over the kinds in the cell', beforeDb - left, 'dB', RESIDUE)
     put(residue, 'subtract', 'residue_stc', 'short-range sensitivity', echo.stcDb, 'dB', STATED)
     finish(residue)
   } else results[residue] = null

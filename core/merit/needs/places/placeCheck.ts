@@ -3,7 +3,7 @@ import { type SightPoint, sightPoint } from '../../../masking/index.ts'
 import { cellAt } from '../../../polar/index.ts'
 import type { SettledNeed } from '../../../study/index.ts'
 import { RAD_PER_DEG, toDb, wavelengthM } from '../../../units/index.ts'
-import { antennaM, type OptionCells, residueOf } from '../../optionCells.ts'
+import { antennaM, type OptionCells, plusRatioDb, residueOf } from '../../optionCells.ts'
 import { aboveNoiseDb } from '../../signal/decibelTables.ts'
 import { twoWayEdgeLossDb } from '../../signal/edgeLoss.ts'
 import { pdOf } from '../../signal/pdOf.ts'
@@ -106,10 +106,12 @@ function residueAt(o: OptionCells, s: SightPoint, slantM: number, stcDb: number)
   const shift = Number.isFinite(groundSlantM) ? Math.round((slantM - groundSlantM) / grid.rangeStepM) : 0
   const gate = row + Math.min(grid.ranges - 1, Math.max(0, j + shift))
   const overload = overloadOf(o)
-  const cnr = o.clutter.cnrDb[gate]
+  const { cnrDb, left, lessDb, folded, foldedLeft } = residueOf(o)
+  const echo = folded ? folded[gate] : 0
+  const cnr = echo > 0 ? plusRatioDb(cnrDb[gate], echo) : cnrDb[gate]
   if (overload && cnr - stcDb + 0.1 * overload.excessTenths[gate] > overload.limitDb) return cnr
-  const residue = residueOf(o)
-  return residue.cells[gate] - residue.lessDb
+  const residue = left[gate] - lessDb
+  return echo > 0 ? plusRatioDb(residue, echo * foldedLeft) : residue
 }
 
 /** One place against one option on its own ray. */
