@@ -24,6 +24,8 @@ interface KeptSight {
 }
 const keptByMask = new WeakMap<object, KeptSight>()
 
+const NOTE_AREA_CFAR = { mark: 'outside model', about: 'area CFAR: threshold of a single sample of clutter, not of what a filter leaves' }
+
 /** Figures of merit of one option. `marks` are the words that must stand beside its clutter figures. A change of need leaves the rest as it was. */
 export function optionFigures(o: OptionCells, needs: readonly SettledNeed[], marks: Figures['marks']): Figures {
   const kept = keptOf(o)
@@ -55,7 +57,7 @@ export function optionFigures(o: OptionCells, needs: readonly SettledNeed[], mar
     secondTimeAround: o.folded ? secondTimeAround(o.folded, o.place.lat) : { km2: null, notEvaluatedBeyondM: knownToM(o) },
     needs: needFigures(o, needs),
     obstaclesInSight: sight.obstacles,
-    marks: [...marks, ...o.suppression.notes, ...kept.notes],
+    marks: [...marks, ...o.suppression.notes, ...kept.notes, ...(o.radar.detector === 'areaCfar' ? [NOTE_AREA_CFAR] : [])],
   }
   return { ...figures, flat: flatFigures(figures) }
 }

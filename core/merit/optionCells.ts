@@ -71,8 +71,10 @@ export interface ResidueCells {
   /** Folded clutter over noise, ratio, and what suppression leaves of it, ratio; null = none. */
   readonly folded: Float32Array | null
   readonly foldedLeft: number
+  /** How far spiky clutter raises the threshold of an area, dB; null = it does not. */
+  readonly riseDb: Float32Array | null
 }
-export function residueOf(o: Pick<OptionCells, 'clutter' | 'suppression' | 'folded'>): ResidueCells {
+export function residueOf(o: Pick<OptionCells, 'clutter' | 'suppression' | 'folded'>, riseDb: Float32Array | null): ResidueCells {
   const { uniformDb, rows } = o.suppression
   const foldedDb = rows.find((r) => r.about === 'folded')?.improvementDb ?? 0
   return {
@@ -80,6 +82,7 @@ export function residueOf(o: Pick<OptionCells, 'clutter' | 'suppression' | 'fold
     ...(uniformDb === null ? { left: o.clutter.residueDb, lessDb: 0 } : { left: o.clutter.cnrDb, lessDb: uniformDb }),
     folded: o.folded?.ratio ?? null,
     foldedLeft: fromDb(-foldedDb),
+    riseDb,
   }
 }
 /** Two levels over noise added, dB; NaN stands for nothing, `ratio` > 0. */

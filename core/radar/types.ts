@@ -74,6 +74,8 @@ export interface RadarInput {
   readonly instrumentedRangeM: number
   /** Loss of an echo that falls between gates and filters, dB; absent = 1. Added to the required ratio of a target. */
   readonly straddleLossDb?: number
+  /** Threshold over noise, or over the clutter of an area: spiky clutter then raises it; absent = noise. */
+  readonly detector?: 'noise' | 'areaCfar'
   /** Loss of an adaptive threshold, dB: stated, or worked out from its reference cells; neither = 0. */
   readonly cfarLossDb?: number | null
   readonly cfarReferenceCells?: number | null

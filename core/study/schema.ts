@@ -135,6 +135,7 @@ const radar = z.looseObject({
     .optional(),
   instrumentedRangeM: num('radar.instrumentedRangeM').optional(),
   straddleLossDb: num('radar.straddleLossDb').optional(),
+  detector: z.enum(['noise', 'areaCfar']).optional(),
   cfarLossDb: num('radar.cfarLossDb').nullable().optional(),
   cfarReferenceCells: num('radar.cfarReferenceCells').nullable().optional(),
   recoveryS: num('radar.recoveryS').optional(),

@@ -90,6 +90,7 @@ function settleRadar(r: RadarDoc, instrumentedRangeM: number, d: Defaults): Rada
     },
     stc: { kind: stcKind, curve: r.stc?.curve ?? [], cornerM: r.stc?.cornerM ?? 0, maxDb: r.stc?.maxDb ?? 0 },
     instrumentedRangeM: d.take('radar.instrumentedRangeM', r.instrumentedRangeM, instrumentedRangeM),
+    detector: d.take('radar.detector', r.detector, 'noise'),
     straddleLossDb: d.take('radar.straddleLossDb', r.straddleLossDb, DEFAULT_STRADDLE_LOSS_DB),
     cfarLossDb: r.cfarLossDb ?? (r.cfarReferenceCells == null ? d.take('radar.cfarLossDb', undefined, 0) : null),
     cfarReferenceCells: r.cfarReferenceCells ?? null,

@@ -85,6 +85,8 @@ export interface RadarDoc {
   stc?: { kind: 'none' | 'curve' | 'rtoFourth'; curve?: [number, number][]; cornerM?: number; maxDb?: number }
   instrumentedRangeM?: number
   straddleLossDb?: number
+  /** Threshold over noise, or over the clutter of an area: spiky clutter then raises it. */
+  detector?: 'noise' | 'areaCfar'
   cfarLossDb?: number | null
   cfarReferenceCells?: number | null
   recoveryS?: number

@@ -89,3 +89,27 @@ describe('a 1 m² aircraft over land clutter at 20 km', () => {
     expect(results.need_n_signal_margin_db).toBeCloseTo(37.82 - 28.28 - 13, 1)
   })
 })
+
+describe('an area CFAR over spiky clutter', () => {
+  it('stands higher by the spread of the cell: the margin falls by the threshold rise where clutter decides', () => {
+    const of = (detector: 'noise' | 'areaCfar') =>
+      work(ground, {
+        needs: [need],
+        landTable: LAND,
+        radar: { detector, suppression: { kind: 'stated', statedDb: 28 } },
+        run: { maxRangeM: 22_000, rangeStepM: 75 },
+      })
+    const plain = of('noise')
+    const area = of('areaCfar')
+    const place = { at: from(13, 20_000), option: plain.ref }
+    const [a, b] = [plain, area].map((w) => finish(w.answers.ask('ledger', place)))
+    const rise = b.lines.find((l) => l.key === 'n_threshold_rise')?.value as number
+    // farmland at 0.1° of depression and a 70 000 m² cell: a_w about 3.8, exponential clutter at Pfa 1e-6 would need 19.4 dB less
+    expect(rise).toBeGreaterThan(17)
+    expect(rise).toBeLessThan(22)
+    const [over, under] = [a, b].map((l) => l.results.need_n_signal_margin_db as number)
+    expect(over - under).toBeCloseTo(rise, 1)
+    expect(area.layerAt('signal-margin', 13, 20_000)).toBeCloseTo(under, 0)
+    expect((b.results.need_n_suppression_needed_db as number) - (a.results.need_n_suppression_needed_db as number)).toBeCloseTo(rise, 6)
+  })
+})

@@ -72,7 +72,7 @@ const MARGINAL = lossCode('marginal')
 export function testLevel(t: LevelTest, out: NeedRow, first: number, last: number, from: number): void {
   const { levelM, aboveSea, row, rowLow, groundM, floorM, floorBandM, clearLowM, overload } = t
   const { noiseGainDb, wavelengthM, rangeStepM, ranges } = t
-  const { cnrDb, left: leftDb, lessDb, folded, foldedLeft } = t.residue
+  const { cnrDb, left: leftDb, lessDb, folded, foldedLeft, riseDb } = t.residue
   const { obstacleM, groundSlantM, rangeM } = t.ray
   const { tested, place, marginal, cause: why, marginM, signalDb, neededDb, availableDb } = out
   const perStep = 1 / rangeStepM
@@ -99,6 +99,11 @@ export function testLevel(t: LevelTest, out: NeedRow, first: number, last: numbe
     const stc = row.stcDb[j]
     const overloaded = overload !== null && cnr - stc + 0.1 * overload.excessTenths[gate] > overload.limitDb
     if (overloaded) left = cnr
+    if (riseDb !== null) {
+      // the threshold stands higher over what is left of spiky clutter
+      cnr += riseDb[gate]
+      left += riseDb[gate]
+    }
     const residue = left - stc
     let bits = 0
 

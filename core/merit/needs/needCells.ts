@@ -3,7 +3,7 @@ import type { SettledNeed } from '../../study/index.ts'
 import { toDb, wavelengthM } from '../../units/index.ts'
 import { antennaM, meanEffectiveRadiusM, type OptionCells, residueOf } from '../optionCells.ts'
 import { fillLevelRow, lossesBetween, makeLevelRow, type RowModel } from '../signal/levelRow.ts'
-import { overloadOf } from '../signal/receiverLimits.ts'
+import { overloadOf, thresholdRiseOf } from '../signal/receiverLimits.ts'
 import { targetSignal } from '../signal/targetSignal.ts'
 import { type LevelTest, makeNeedRow, type NeedRow, startRow, testLevel } from './levelTest.ts'
 import { lossCode } from './needTypes.ts'
@@ -74,7 +74,7 @@ export function scanNeed(
     loss: lossesBetween(signal, grid, mast, curvature, lowM, highM),
   })
   const { floorM, floorBandM, state } = o.mask
-  const residue = residueOf(o)
+  const residue = residueOf(o, thresholdRiseOf(o))
   const ray = makeRayRow(ranges, rangeStepM, mast, c)
   const aboveSea = need.heightAbove === 'sea'
   const model = rowModel(c)

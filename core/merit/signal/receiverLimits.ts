@@ -1,4 +1,5 @@
 import { type ClutterLevels, clutterLevels, fillCellStrength, LEVEL_RING_M, percentileOverMeanDb } from '../../clutter/index.ts'
+import { weibullThresholdDb } from '../../detection/index.ts'
 import type { RadarInput } from '../../radar/index.ts'
 import type { OptionCells } from '../optionCells.ts'
 
@@ -19,6 +20,7 @@ const SHARE = 0.99
 /** What the spikes of an option's clutter decide, kept with it. */
 interface Spikes {
   readonly overload: Overload | null
+  readonly riseDb: Float32Array | null
   readonly levels: ClutterLevels
 }
 const known = new WeakMap<OptionCells['clutter'], Spikes>()
@@ -29,7 +31,11 @@ function spikesOf(o: OptionCells): Spikes {
     const options = { weather: o.atmosphere, ...(o.landTable ? { landTable: o.landTable } : {}) }
     fillCellStrength(o.site, o.mask, o.ground.codes, o.place, o.heightM, o.radar, options, { strengthDb: null, spread })
     const levels = clutterLevels(o.clutter, o.mask, spread, o.place.lat, LEVEL_RING_M.nm)
-    found = { levels, overload: overloadFrom(o, spread, levels) }
+    found = {
+      levels,
+      overload: overloadFrom(o, spread, levels),
+      riseDb: o.radar.detector === 'areaCfar' ? riseFrom(spread, o.radar.pfa) : null,
+    }
     known.set(o.clutter, found)
   }
   return found
@@ -40,6 +46,18 @@ export const clutterLevelsOf = (o: OptionCells): ClutterLevels => spikesOf(o).le
 
 /** Overload of an option; null where the receiver has no limit or no clutter reaches it. */
 export const overloadOf = (o: OptionCells): Overload | null => (receiverLinearRangeDb(o.radar) === null ? null : spikesOf(o).overload)
+
+/**
+ * How far the spikes of each cell raise the threshold of an area CFAR over that for noise-like clutter of the same mean, dB; null for a detector
+ * over noise. Single sample of Weibull power: with care where a filter has been through it.
+ */
+export const thresholdRiseOf = (o: OptionCells): Float32Array | null => (o.radar.detector === 'areaCfar' ? spikesOf(o).riseDb : null)
+
+/** Turns spreads into rises, in place of a second grid. */
+function riseFrom(spread: Float32Array, pfa: number): Float32Array {
+  const rise = Float64Array.from({ length: 801 }, (_, n) => Math.max(0, weibullThresholdDb(Math.max(1, n / 100), pfa).extraDb))
+  return spread.map((a) => rise[Math.min(800, Math.round(100 * a))])
+}
 
 function overloadFrom(o: OptionCells, spread: Float32Array, { peak }: ClutterLevels): Overload | null {
   const limitDb = receiverLinearRangeDb(o.radar)

@@ -1,5 +1,6 @@
 import { twoWayLossParts } from '../../atmosphere/index.ts'
 import { type PointClutter, percentileOverMeanDb, suppressionNeededDb } from '../../clutter/index.ts'
+import { weibullThresholdDb } from '../../detection/index.ts'
 import type { SuppressionBy } from '../../doppler/index.ts'
 import { elevationAngleDeg, slantRangeM } from '../../geodesy/index.ts'
 import type { SightPoint } from '../../masking/index.ts'
@@ -19,6 +20,7 @@ const GAS = ['Gas loss', 'Recommendation ITU-R P.676-12'] as const
 const RAIN = ['Rain loss', 'Recommendation ITU-R P.838-3'] as const
 const RESIDUE = ['Suppression by kind of clutter', '1/I = 1/I_spectral + 1/I_stability + 1/I_quantisation'] as const
 const FOLDED = ['Folded clutter', 'ground beyond c/2f at its apparent range'] as const
+const AREA_CFAR = ['Area CFAR in Weibull clutter', 'mathematics of a single sample'] as const
 const NEEDED = ['Suppression needed', '(C/N) / [(S/N)/D₀ − 1], mathematics'] as const
 const RECEIVER = ['Linear range of the receiver', '6.02 dB per bit less 6'] as const
 const MARGIN = ['Signal margin', 'S/(C/I + N) less the required ratio'] as const
@@ -139,6 +141,10 @@ export function needLines(need: SettledNeed, p: NeedPlaceParts): { lines: Ledger
   const overloaded =
     limitDb !== null && cnrDb !== null && cnrDb + (clutter.spread === null ? 0 : percentileOverMeanDb(clutter.spread, 0.99)) > limitDb
   const left = overloaded ? beforeDb : afterDb
+  const riseDb =
+    p.study.radar.detector === 'areaCfar' && clutter.spread !== null
+      ? Math.max(0, weibullThresholdDb(Math.max(1, clutter.spread), required.pfa).extraDb)
+      : 0
   const residue = resultKey('residue_to_noise_db')
   if (rangeM !== sight.rangeM)
     put(residue, 'info', 'clutter_range', 'ground range of the clutter in the gate of the target', rangeM, 'm', geometry)
@@ -149,6 +155,7 @@ export function needLines(need: SettledNeed, p: NeedPlaceParts): { lines: Ledger
     ])
     put(residue, 'add', 'folded', 'clutter of an earlier pulse on top', clutter.cnrDb === null ? 0 : beforeDb - clutter.cnrDb, 'dB', FOLDED)
     put(residue, 'subtract', 'improvement', 'improvement factor over the kinds in the cell', beforeDb - left, 'dB', RESIDUE)
+    put(residue, 'add', 'threshold_rise', 'threshold over spiky clutter, against noise-like', riseDb, 'dB', AREA_CFAR)
     put(residue, 'subtract', 'residue_stc', 'short-range sensitivity', echo.stcDb, 'dB', STATED)
     finish(residue)
   } else results[residue] = null
@@ -160,11 +167,12 @@ export function needLines(need: SettledNeed, p: NeedPlaceParts): { lines: Ledger
     put(residue, 'info', 'receiver', 'receiver limits: 99 % of clutter over its linear range, nothing suppressed', limitDb, 'dB', RECEIVER)
 
   const needed = resultKey('suppression_needed_db')
-  const wanted = suppressionNeededDb(cnrDb ?? Number.NaN, snrDb, required.ratioDb, noiseGainDb)
+  const spikyDb = cnrDb === null ? null : cnrDb + riseDb
+  const wanted = suppressionNeededDb(spikyDb ?? Number.NaN, snrDb, required.ratioDb, noiseGainDb)
   results[needed] = Number.isFinite(wanted) ? wanted : null
-  if (wanted > 0 && cnrDb !== null) {
-    put(needed, 'start', 'needed_clutter', 'C/N after short-range sensitivity', cnrDb, 'dB', NEEDED)
-    put(needed, 'subtract', 'room', 'room over noise, (S/N)/D₀ − 1', cnrDb - wanted, 'dB', NEEDED)
+  if (wanted > 0 && spikyDb !== null) {
+    put(needed, 'start', 'needed_clutter', 'C/N after short-range sensitivity', spikyDb, 'dB', NEEDED)
+    put(needed, 'subtract', 'room', 'room over noise, (S/N)/D₀ − 1', spikyDb - wanted, 'dB', NEEDED)
   }
 
   const over = resultKey('signal_margin_db')

@@ -7,7 +7,7 @@ import { antennaM, type OptionCells, plusRatioDb, residueOf } from '../../option
 import { aboveNoiseDb } from '../../signal/decibelTables.ts'
 import { twoWayEdgeLossDb } from '../../signal/edgeLoss.ts'
 import { pdOf } from '../../signal/pdOf.ts'
-import { overloadOf } from '../../signal/receiverLimits.ts'
+import { overloadOf, thresholdRiseOf } from '../../signal/receiverLimits.ts'
 import { echoAt, type TargetEcho, type TargetSignal, targetSignal } from '../../signal/targetSignal.ts'
 import { signalLoss, signalMarginDb } from '../lossCause.ts'
 import { type FixFigure, lossCauseAt, lossCode } from '../needTypes.ts'
@@ -106,12 +106,13 @@ function residueAt(o: OptionCells, s: SightPoint, slantM: number, stcDb: number)
   const shift = Number.isFinite(groundSlantM) ? Math.round((slantM - groundSlantM) / grid.rangeStepM) : 0
   const gate = row + Math.min(grid.ranges - 1, Math.max(0, j + shift))
   const overload = overloadOf(o)
-  const { cnrDb, left, lessDb, folded, foldedLeft } = residueOf(o)
+  const { cnrDb, left, lessDb, folded, foldedLeft, riseDb } = residueOf(o, thresholdRiseOf(o))
+  const rise = riseDb ? riseDb[gate] : 0
   const echo = folded ? folded[gate] : 0
   const cnr = echo > 0 ? plusRatioDb(cnrDb[gate], echo) : cnrDb[gate]
-  if (overload && cnr - stcDb + 0.1 * overload.excessTenths[gate] > overload.limitDb) return cnr
+  if (overload && cnr - stcDb + 0.1 * overload.excessTenths[gate] > overload.limitDb) return cnr + rise
   const residue = left[gate] - lessDb
-  return echo > 0 ? plusRatioDb(residue, echo * foldedLeft) : residue
+  return (echo > 0 ? plusRatioDb(residue, echo * foldedLeft) : residue) + rise
 }
 
 /** One place against one option on its own ray. */
