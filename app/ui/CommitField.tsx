@@ -1,4 +1,4 @@
-import { type ReactNode, useEffect, useId, useRef, useState } from 'react'
+import { type ReactNode, useEffect, useId, useLayoutEffect, useRef, useState } from 'react'
 import { TextField as AriaTextField, Input, Label, TextArea } from 'react-aria-components'
 
 export interface CommitFieldProps {
@@ -46,6 +46,11 @@ export function CommitField(props: CommitFieldProps) {
       setWhy(null)
     }
   }, [text])
+  const longer = props.restText !== undefined && props.restText !== text
+  useLayoutEffect(() => {
+    // the whole value takes the place of the short one: typing must replace it, not join it
+    if (focused && longer) input.current?.select()
+  }, [focused, longer])
   const commit = () => {
     if (typed === null) return
     if (typed === text) {
