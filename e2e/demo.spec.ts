@@ -10,6 +10,7 @@ import {
   numberIn,
   openDemo,
   plain,
+  readColumn,
   readComparison,
   readFigure,
   readOut,
@@ -45,16 +46,18 @@ test('every step says how it stands, every option is compared, the memo writes i
   expect(numberIn(await readFigure(page, 'C/N, highest'))).toBeGreaterThan(40)
   const rows = await readComparison(page)
   expect(rows).toHaveLength(9)
-  for (const row of rows) {
-    const inSight = numberIn(row.at(2) ?? '')
-    expect(inSight, row.join(' | ')).toBeGreaterThan(0)
-    expect(inSight, row.join(' | ')).toBeLessThanOrEqual(100)
-  }
+  const [inSight, detectable, usable] = await Promise.all([/^in sight/i, /^detectable/i, /^usable/i].map((head) => readColumn(page, head)))
+  rows.forEach((row, i) => {
+    const three = [100, inSight[i], detectable[i], usable[i], 0] as number[]
+    expect(three, row.join(' | ')).toEqual([...three].sort((a, b) => b - a))
+  })
   // a higher mast of the same place never sees less
   for (const first of [0, 3, 6]) {
-    const seen = rows.slice(first, first + 3).map((r) => numberIn(r[2] ?? ''))
+    const seen = inSight.slice(first, first + 3)
     expect(seen, rows[first]?.join(' | ')).toEqual([...seen].sort((a, b) => a - b))
   }
+  expect(rows.filter((r) => r.includes('passes')).length, 'one option passes').toBeGreaterThan(0)
+  expect(rows.filter((r) => r.includes('not met')).length, 'another does not').toBeGreaterThan(0)
 })
 
 const LAYERS: readonly (readonly [question: string, quantity: string, title: string, tone: 'ink' | 'warm' | 'cool'])[] = [

@@ -7,6 +7,7 @@ import {
   dragCandidate,
   dropFiles,
   everythingRun,
+  field,
   form,
   goTo,
   openDemo,
@@ -147,6 +148,23 @@ test('each edit is taken back and made again by its name', async ({ page }) => {
     await expect.poll(() => look(page), { message: `${words}, made again` }).toBe(after)
     await undoButton.click()
     await expect.poll(() => look(page), { message: `${words}, taken back again` }).toBe(before)
+  }
+})
+
+test('what is typed into a field takes the place of what stood there', async ({ page }) => {
+  await openDemo(page)
+  await goTo(page, 'Need')
+  const need = form(page, 'Need')
+  for (const label of ['Height', 'To range', 'Pd']) {
+    const into = field(need, label).first()
+    // from the field before, as a hand on the keyboard comes
+    await into.focus()
+    await page.keyboard.press('Shift+Tab')
+    await page.keyboard.press('Tab')
+    await expect(into).toBeFocused()
+    await page.keyboard.type('0.7')
+    await page.keyboard.press('Enter')
+    await expect(into, label).toHaveValue('0.7')
   }
 })
 

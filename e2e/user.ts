@@ -195,6 +195,20 @@ export async function readComparison(page: Page): Promise<string[][]> {
   const rows = await comparison(page).locator('tbody tr').all()
   return Promise.all(rows.map(async (r) => (await r.locator('td').allInnerTexts()).map(plain)))
 }
+/** One column of the comparison by the words at its head, as numbers. */
+export async function readColumn(page: Page, head: RegExp): Promise<number[]> {
+  const over = await comparison(page)
+    .getByRole('columnheader', { name: head })
+    .evaluate((th) => {
+      const { left, right } = th.getBoundingClientRect()
+      return (left + right) / 2
+    })
+  const rows = await comparison(page).locator('tbody tr').all()
+  const texts = rows.map((r) =>
+    r.locator('td').evaluateAll((cells, x) => cells.find((c) => c.getBoundingClientRect().right >= x)?.textContent ?? '', over),
+  )
+  return (await Promise.all(texts)).map(numberIn)
+}
 /** Thin and no-break spaces as plain ones. */
 export const plain = (text: string): string => text.replace(/[\u202f\u2009\u00a0\s]+/g, ' ').trim()
 /** First number of a text; a true minus counts. */

@@ -92,7 +92,10 @@ function flaws(page: Page): Promise<string[]> {
       // cut by a box that does not scroll
       for (let up = e.parentElement; up; up = up.parentElement) {
         const s = getComputedStyle(up)
-        if (s.overflowX === 'auto' || s.overflowX === 'scroll') break
+        if (s.overflowX === 'auto' || s.overflowX === 'scroll') {
+          if (up.scrollWidth > up.clientWidth + 1) found.push(`has to be scrolled sideways: ${up.tagName.toLowerCase()}.${up.className}`)
+          break
+        }
         const frame = up.getBoundingClientRect()
         if (s.overflowX === 'hidden' || s.overflowX === 'clip') {
           if (box.right > frame.right + 1.5 || box.left < frame.left - 1.5) found.push(`cut by ${up.className}: ${name(e)}`)
