@@ -1,4 +1,4 @@
-import { geodesicDirect, geodesicInverse, type LonLat } from '../geodesy/index.ts'
+import { geodesicDirect, geodesicInverse, geodesicLine, type LonLat } from '../geodesy/index.ts'
 import { RAD_PER_DEG } from '../units/index.ts'
 import { makeBlockers, type Spike } from './blockers.ts'
 import { codeAt, positionOf } from './buildGround.ts'
@@ -103,6 +103,8 @@ export function makeTracer(g: Ground, site: Site, maxRangeM: number, options: Tr
     row: control.points.row.slice(),
   }
   let current = control.points
+  let lineDeg = 0
+  let line = geodesicLine(site, lineDeg)
 
   return {
     track,
@@ -122,9 +124,12 @@ export function makeTracer(g: Ground, site: Site, maxRangeM: number, options: Tr
       }
       run(azimuthDeg, cut, rangeM)
     },
-    place: (distM, azimuthDeg) => {
-      const { lon, lat } = geodesicDirect(site, azimuthDeg, distM)
-      return { lon, lat }
+    place(distM, azimuthDeg) {
+      if (azimuthDeg !== lineDeg) {
+        line = geodesicLine(site, azimuthDeg)
+        lineDeg = azimuthDeg
+      }
+      return line.at(distM)
     },
     sampleCells(distM, count, code, relief, offset) {
       const { col, row, distM: at } = current

@@ -1,7 +1,7 @@
 import { touchingSlope } from '../plane/heightToSee.ts'
 import type { Cuts } from '../plane/profile.ts'
 import { ALLOWANCE_REACH, SIGHT_ALLOWANCE_M } from '../sightState.ts'
-import type { CellProfile } from './cellProfile.ts'
+import { type CellProfile, straightenRest } from './cellProfile.ts'
 import { dropUnder, type Hull, push, pushArc } from './hull.ts'
 
 /**
@@ -20,6 +20,7 @@ export function heightsToSee(
   out: Float32Array,
   offset: number,
 ): void {
+  straightenRest(p, 0)
   const { line, at, known } = p
   const nearM = ALLOWANCE_REACH * postingM
   h.count = 0

@@ -4,10 +4,12 @@ import type { Cuts } from '../plane/profile.ts'
 import { controlErrorM, type RayRunner } from '../plane/ray.ts'
 import { RUN, type RunState, raise, startRun } from '../plane/sightRun.ts'
 import { isInSight, packShare, SIGHT_ALLOWANCE_M, WHOLE_CELL } from '../sightState.ts'
-import type { CellProfile } from './cellProfile.ts'
+import { type CellProfile, straightenCell, straightenRest } from './cellProfile.ts'
 
 /** A share this near 1 is a cell seen without a break. */
 const UNBROKEN = 1 - 1e-9
+/** Square of (line's height / effective radius) up to which a series of three terms is exact to 0.1 mm. */
+const SMALL = 1e-6
 /** A surface this little under the line stands on it, m: rounding. */
 const ON_LINE_M = 1e-9
 
@@ -28,6 +30,8 @@ export function sightPass(r: RayRunner, p: CellProfile, cuts: Cuts, whole: Uint8
   s[RUN.errorM] = groundErrorM
   let m = s[RUN.tangent]
   let nearX = 0
+  let controlX = 0
+  let perControlX = 0
   let passed = false
   // does the state hold the surface at the near edge?
   let ready = false
@@ -60,12 +64,24 @@ export function sightPass(r: RayRunner, p: CellProfile, cuts: Cuts, whole: Uint8
     let tangent = m
     let touchedX = s[RUN.controlX]
     if (cell[3 * j + 2] > antennaY + m * (m > 0 ? nearX : farX)) {
+      straightenCell(p, j)
       const first = j > 0 ? at[2 * j - 1] : 1
       const middle = at[2 * j]
       if (!ready) {
         s[RUN.endX] = nearX
         surfaceAt(line, first, s)
         ready = true
+      }
+      s[RUN.endX] = farX
+      if (risesThroughout(line, first, at[2 * j + 1], s)) {
+        whole[j] = 1
+        m = s[RUN.tangent]
+        state[i] = CELL.inSight
+        inSight[i] = 65535
+        floorM[i] = surfaceM
+        floorBandM[i] = groundErrorM
+        nearX = farX
+        continue
       }
       s[RUN.seenX] = 0
       s[RUN.endX] = centreX
@@ -82,12 +98,17 @@ export function sightPass(r: RayRunner, p: CellProfile, cuts: Cuts, whole: Uint8
     const errorM = s[RUN.errorM]
     // the line so far at the centre, back to metres (heightOfY)
     const y = antennaY + tangent * centreX
-    const lineM = (y + drop[2 * j]) / (1 - y * inverse)
+    const w = y * inverse
+    const lineM = (y + drop[2 * j]) * (w * w < SMALL ? 1 + w * (1 + w * (1 + w)) : 1 / (1 - w))
     const depthM = lineM - surfaceM
     let bandM = errorM
     if (depthM <= SIGHT_ALLOWANCE_M && isInSight(depthM, centreX - touchedX, postingM)) floorM[i] = surfaceM
     else {
-      const t = centreX / touchedX
+      if (touchedX !== controlX) {
+        controlX = touchedX
+        perControlX = 1 / controlX
+      }
+      const t = centreX * perControlX
       const a = errorM * t
       const b = groundErrorM * (1 - t)
       bandM = Math.sqrt(a * a + b * b)
@@ -112,6 +133,7 @@ export function sightPass(r: RayRunner, p: CellProfile, cuts: Cuts, whole: Uint8
   // a ray that ends in the middle of a cell: the horizon needs the rest
   if (p.count < 2) return
   const first = known > 0 ? at[2 * known - 1] : 1
+  straightenRest(p, first - 1)
   s[RUN.endX] = nearX
   surfaceAt(line, first, s)
   s[RUN.endX] = line[3 * p.count - 3]
@@ -133,6 +155,41 @@ function surfaceAt(line: Float64Array, ends: number, s: RunState): void {
   }
   s[RUN.toX] = x
   s[RUN.toY] = y0 + u * ((line[i + 1] - y0) / length + line[i - 1] * (u - length))
+}
+
+/**
+ * Does the surface, from the place in to… of the state on the line so far to X = endX in the segment that ends at crossing `last`, rise faster than the line
+ * to it throughout? Then all of it is in sight: moves line and place on to the end. Otherwise leaves the state alone.
+ */
+function risesThroughout(line: Float64Array, first: number, last: number, s: RunState): boolean {
+  const endX = s[RUN.endX]
+  const antennaY = s[RUN.antennaY]
+  let x0 = s[RUN.toX]
+  let y0 = s[RUN.toY]
+  if (y0 - antennaY - s[RUN.tangent] * x0 < -ON_LINE_M || endX > line[3 * last]) return false
+  let f = 0
+  for (let k = first; k <= last; k = (k + 1) | 0) {
+    const i = Math.imul(k, 3)
+    let x1 = line[i]
+    let y1 = line[(i + 1) | 0]
+    const c = line[(i - 1) | 0]
+    let length = x1 - x0
+    if (k === last) {
+      const u = endX - x0
+      if (u < length) y1 = y0 + u * ((y1 - y0) / length + c * (u - length))
+      x1 = endX
+      length = u
+    }
+    f = (y1 - antennaY) / x1
+    if (!(y1 - y0 - Math.abs(c) * length * length > f * length)) return false
+    x0 = x1
+    y0 = y1
+  }
+  s[RUN.tangent] = f
+  s[RUN.controlX] = x0
+  s[RUN.toX] = x0
+  s[RUN.toY] = y0
+  return true
 }
 
 /**
