@@ -21,6 +21,7 @@ const keptByClutter = new WeakMap<object, Kept>()
 interface KeptSight {
   readonly floors: FloorFigure[]
   readonly obstacles: string[]
+  readonly knownToM: number
 }
 const keptByMask = new WeakMap<object, KeptSight>()
 
@@ -54,7 +55,7 @@ export function optionFigures(o: OptionCells, needs: readonly SettledNeed[], mar
     clutterOverKm2: sums.over,
     cnrPeakDb: sums.peakDb,
     clutterLevels: clutterLevelsOf(o),
-    secondTimeAround: o.folded ? secondTimeAround(o.folded, o.place.lat) : { km2: null, notEvaluatedBeyondM: knownToM(o) },
+    secondTimeAround: o.folded ? secondTimeAround(o.folded, o.place.lat) : { km2: null, notEvaluatedBeyondM: sight.knownToM },
     needs: needFigures(o, needs),
     obstaclesInSight: sight.obstacles,
     marks: [...marks, ...o.suppression.notes, ...kept.notes, ...(o.radar.detector === 'areaCfar' ? [NOTE_AREA_CFAR] : [])],
@@ -98,7 +99,7 @@ function serialOf(places: object): number {
 function sightOf(o: OptionCells): KeptSight {
   let kept = keptByMask.get(o.mask)
   if (!kept) {
-    kept = { floors: floorFigures(o.mask, o.site.grid), obstacles: obstaclesInSight(o) }
+    kept = { floors: floorFigures(o.mask, o.site.grid), obstacles: obstaclesInSight(o), knownToM: knownToM(o) }
     keptByMask.set(o.mask, kept)
   }
   return kept
@@ -107,8 +108,9 @@ function sightOf(o: OptionCells): KeptSight {
 /** Nearest range at which the ground of some azimuth is no longer known, m, or the end of the grid. */
 function knownToM(o: OptionCells): number {
   const { azimuths, ranges, rangeStepM } = o.site.grid
-  for (let j = 0; j < ranges; j++) for (let i = 0; i < azimuths; i++) if (isUnknown(o.mask.state[i * ranges + j])) return j * rangeStepM
-  return ranges * rangeStepM
+  let known = ranges
+  for (let i = 0; i < azimuths; i++) for (let j = 0; j < known; j++) if (isUnknown(o.mask.state[i * ranges + j])) known = j
+  return known * rangeStepM
 }
 
 /** Names of the obstacles whose top is in sight, each on its own ray, nearest first. */
