@@ -1,6 +1,15 @@
 import { describe, expect, it } from 'vitest'
 import { geodesicInverse } from '../../core/geodesy/index.ts'
-import { previewSweep, sightPoint, sweep, sweepRays } from '../../core/masking/index.ts'
+import {
+  heightToSeeCells,
+  makeSweepArrays,
+  previewSweep,
+  sightPoint,
+  sweep,
+  sweepRays,
+  sweepResult,
+  sweepShare,
+} from '../../core/masking/index.ts'
 import { CELL, cellCentre, isUnknown, type PolarShape } from '../../core/polar/index.ts'
 import { type Ground, RELIEF } from '../../core/terrain/index.ts'
 import { finish } from '../../core/work/index.ts'
@@ -124,6 +133,25 @@ describe('sweep', () => {
       expect(Math.abs(share - seen / 80)).toBeLessThan(0.03)
     }
     expect(partly).toBeGreaterThan(10)
+  })
+
+  it('is the same in two shares taken turn about, and without height to see, made later', async () => {
+    const g = await busyGround()
+    const site = siteAt(g, 205.4, 180.7, { clearingRadiusM: 80 })
+    const alone = finish(sweep(g, site, HEIGHTS, GRID, FOUR_THIRDS))
+    const options = { heightToSee: false }
+    const arrays = makeSweepArrays(GRID, HEIGHTS, options, true)
+    const shares = [sweepShare(g, site, FOUR_THIRDS, arrays), sweepShare(g, site, FOUR_THIRDS, arrays)]
+    let turns = 0
+    while (!shares.map((share) => share.next().done).every(Boolean)) turns++
+    expect(turns).toBeGreaterThan(3)
+    const shared = sweepResult(arrays, alone.site.siteGroundM, g.obstacles, options)
+    expect(shared.masks.map((m) => [...m.state])).toEqual(alone.masks.map((m) => [...m.state]))
+    expect(shared.masks.map((m) => [...m.floorM])).toEqual(alone.masks.map((m) => [...m.floorM]))
+    expect(shared.masks.map((m) => m.horizon)).toEqual(alone.masks.map((m) => m.horizon))
+    expect([...shared.site.groundM]).toEqual([...alone.site.groundM])
+    expect(shared.site.heightToSeeM).toHaveLength(0)
+    expect([...finish(heightToSeeCells(g, site, GRID, FOUR_THIRDS))]).toEqual([...alone.site.heightToSeeM])
   })
 
   it('reports its work and may be stopped', async () => {
