@@ -217,6 +217,30 @@ describe('cell ledger', () => {
   })
 })
 
+describe('height ladder', () => {
+  it('carries usable share, area short of suppression and every stretch of mast in which the need is met', () => {
+    const doc = hillStudy()
+    doc.needs = [{ ...(doc.needs ?? [])[0], requiredPct: 55 }]
+    const { answers } = started(doc)
+    const ladder = finish(answers.ask('ladder', { candidate: 'A' }))
+    const count = ladder.heightsM.length
+    for (const list of [ladder.inSightPct, ladder.usablePct, ladder.over40Km2, ladder.shortKm2]) expect(list).toHaveLength(count)
+    for (let n = 0; n < count; n++) expect(ladder.usablePct[n]).toBeLessThanOrEqual(ladder.inSightPct[n] + 1e-9)
+    const [{ intervals }] = ladder.needMet
+    expect(intervals.length).toBeGreaterThan(0)
+    expect(ladder.needMetAtM[0].heightM).toBe(intervals[0][0])
+    // inside a stretch the usable share reaches what is asked at the study's own k
+    ladder.heightsM.forEach((h, n) => {
+      if (intervals.some(([from, to]) => h >= from && h <= to)) expect(ladder.usablePct[n]).toBeGreaterThanOrEqual(55)
+    })
+    // a stated mast stands among the rungs with the very figures of its option
+    const { engine } = started(doc)
+    runAll(engine)
+    const own = resultsOf(engine).find((r) => r.ref.candidate === 'A' && r.ref.heightM === 25)!
+    expect(ladder.usablePct[ladder.heightsM.indexOf(25)]).toBeCloseTo(own.figures.needs[0].usablePct, 6)
+  })
+})
+
 describe('options of a study', () => {
   it('are candidate × mast height × tilt', () => {
     const { engine } = started(hillStudy())
