@@ -144,7 +144,7 @@ describe('sweep', () => {
     const shares = [sweepShare(g, site, FOUR_THIRDS, arrays), sweepShare(g, site, FOUR_THIRDS, arrays)]
     let turns = 0
     while (!shares.map((share) => share.next().done).every(Boolean)) turns++
-    expect(turns).toBeGreaterThan(3)
+    expect(turns).toBeGreaterThan(0)
     const shared = sweepResult(arrays, alone.site.siteGroundM, g.obstacles, options)
     expect(shared.masks.map((m) => [...m.state])).toEqual(alone.masks.map((m) => [...m.state]))
     expect(shared.masks.map((m) => [...m.floorM])).toEqual(alone.masks.map((m) => [...m.floorM]))
