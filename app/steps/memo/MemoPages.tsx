@@ -77,7 +77,8 @@ function TableView({ table }: { table: TableBlock }) {
   const align = (i: number) => (table.columns[i]?.align === 'right' ? undefined : 'text')
   return (
     // biome-ignore lint/a11y/noNoninteractiveTabindex: a wide table is scrolled by keys
-    <section className="memo-table-view" aria-label={table.title ?? 'Table'} tabIndex={0}>
+    // biome-ignore lint/a11y/useSemanticElements: a group of cells, no part of a form
+    <div className="memo-table-view" role="group" aria-label={table.title ?? 'Table'} tabIndex={0}>
       {table.title ? <h4>{table.title}</h4> : null}
       <table className="table">
         {heads ? (
@@ -110,7 +111,7 @@ function TableView({ table }: { table: TableBlock }) {
           ))}
         </tbody>
       </table>
-    </section>
+    </div>
   )
 }
 const spanOf = (cell: Cell): number | undefined => (typeof cell === 'string' ? undefined : cell.span)
