@@ -1,5 +1,14 @@
 import { basename, resolve } from 'node:path'
-import { buildGround, type Ground, type GroundRead, groundAt, InputError, readGround, type SettledCandidate } from '../../core/index.ts'
+import {
+  buildGround,
+  type Ground,
+  type GroundRead,
+  groundAt,
+  InputError,
+  offTerrain,
+  readGround,
+  type SettledCandidate,
+} from '../../core/index.ts'
 import { FileSource } from './fileSource.ts'
 import { type LoadedStudy, readText } from './loadStudy.ts'
 import { drive, type Progress } from './progress.ts'
@@ -55,11 +64,9 @@ function checkPlaces(loaded: LoadedStudy, ground: Ground, candidates: readonly S
     const stated = c.groundHeightM
     if (Number.isNaN(height) && stated === null)
       throw new InputError({
-        code: 'off-terrain',
+        ...offTerrain(c),
         file: basename(loaded.path),
         place: `candidates[${loaded.study.candidates.indexOf(c)}]`,
-        found: `candidate ${c.id} at ${c.lon}, ${c.lat} is off the terrain or on a void`,
-        remedy: 'move it onto known ground, or add a terrain file that covers it',
       })
     if (stated !== null && Math.abs(stated - height) > 3 * ground.verticalErrorM)
       warnings.push(

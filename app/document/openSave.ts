@@ -1,5 +1,5 @@
 import { strFromU8, strToU8, unzip, zip } from 'fflate'
-import { type FieldProblem, InputError, openDraft, type StudyDoc } from '../../core/index.ts'
+import { type FieldProblem, InputError, openDraft, type StudyDoc, sentence } from '../../core/index.ts'
 import { filesOf } from './draft.ts'
 import type { GivenFile } from './fileStore.ts'
 
@@ -10,20 +10,23 @@ export interface OpenedStudy {
   readonly warnings: readonly string[]
   /** Files the study names that did not come with it. */
   readonly missing: readonly string[]
+  /** What has to change first, with file, key and line; null where nothing has. */
+  readonly trouble: string | null
 }
 
 /**
  * Reads a study that may still be in progress: values that have to change stay and are shown at their fields.
  * Throws InputError for JSON syntax, another format or version, and a document whose lists are not lists.
  */
-export function readStudyText(text: string, fileName: string): { doc: StudyDoc; warnings: readonly string[] } {
+export function readStudyText(text: string, fileName: string): Pick<OpenedStudy, 'doc' | 'warnings' | 'trouble'> {
   const { doc, problems, warnings } = openDraft(text, fileName)
   const broken = problems.find((p) => SHAPE_CODES.has(p.code) && !editable(p))
-  if (broken) throw new InputError({ ...broken, file: fileName, place: broken.path })
+  if (broken) throw new InputError({ ...broken, file: fileName })
   const radar = { ...doc.radar, prfHz: doc.radar?.prfHz ?? [], antenna: doc.radar?.antenna ?? {} }
   return {
     doc: { ...doc, name: doc.name ?? '', terrain: doc.terrain ?? [], candidates: doc.candidates ?? [], radar: radar as StudyDoc['radar'] },
     warnings,
+    trouble: problems[0] ? sentence({ ...problems[0], file: fileName }) : null,
   }
 }
 const SHAPE_CODES = new Set(['wrong-kind', 'wrong-shape', 'missing'])
@@ -37,7 +40,7 @@ const lastPart = (path: string): string => path.split(/[\\/]/).at(-1) ?? path
 
 /** Puts a study and loose files together. Throws InputError when the text is no study. */
 export function openStudyText(text: string, fileName: string, loose: readonly GivenFile[]): OpenedStudy {
-  const { doc, warnings } = readStudyText(text, fileName)
+  const { doc, warnings, trouble } = readStudyText(text, fileName)
   const files: GivenFile[] = []
   const missing: string[] = []
   for (const name of filesOf(doc)) {
@@ -45,7 +48,7 @@ export function openStudyText(text: string, fileName: string, loose: readonly Gi
     if (found) files.push({ name, blob: found.blob })
     else missing.push(name)
   }
-  return { doc, files, warnings, missing }
+  return { doc, files, warnings, missing, trouble }
 }
 
 /** Opens a package: a ZIP of one study and its files. Throws InputError. */

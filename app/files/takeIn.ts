@@ -10,6 +10,8 @@ export interface TakenIn {
   readonly warnings: readonly string[]
   /** Files the opened study names that are not here yet. */
   readonly missing: readonly string[]
+  /** What has to change first in the opened study; null where nothing has. */
+  readonly trouble: string | null
 }
 type Named = Blob & { readonly name: string }
 
@@ -28,7 +30,7 @@ export async function takeIn(study: StudyStore, given: FileStore, dropped: reado
         : openStudyText(await head.file.text(), head.file.name, loose)
     given.getState().replace(opened.files)
     study.getState().load(opened.doc)
-    return { opened: true, warnings: opened.warnings, missing: opened.missing }
+    return { opened: true, warnings: opened.warnings, missing: opened.missing, trouble: opened.trouble }
   }
   const useless = sorted.find((s) => s.role === 'unknown')
   if (useless)
@@ -42,7 +44,7 @@ export async function takeIn(study: StudyStore, given: FileStore, dropped: reado
   given.getState().give(sorted.map(({ file }) => ({ name: nameInStudy(doc, file.name), blob: file }) satisfies GivenFile))
   const words = sorted.length === 1 ? `added ${sorted[0].file.name}` : `added ${sorted.length} files`
   study.getState().edit(words, (before) => sorted.reduce((d, s) => addToStudy(d, nameInStudy(d, s.file.name), s.role), before))
-  return { opened: false, warnings: [], missing: [] }
+  return { opened: false, warnings: [], missing: [], trouble: null }
 }
 
 /** A study may name a file with folders; a dropped file of that last name is that file. */

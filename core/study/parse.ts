@@ -82,7 +82,8 @@ function placeOf(problem: Problem, root: Node, source: string): string {
 /** A study as opened for work: what is wrong is listed, not thrown. */
 export interface Draft {
   readonly doc: StudyDoc
-  readonly problems: readonly FieldProblem[]
+  /** With the place in the text: key path and line. */
+  readonly problems: readonly (FieldProblem & { readonly place: string })[]
   readonly warnings: readonly string[]
 }
 
@@ -96,7 +97,8 @@ export function openDraft(text: string, fileName: string): Draft {
   const { problems, warnings } = checkDoc(value)
   const head = problems.find((p) => p.path === '' || p.code === 'format' || p.code === 'version')
   if (head) throw new InputError({ ...head, file: fileName, place: placeOf(head, root, source) })
-  return { doc: value as StudyDoc, problems, warnings }
+  const placed = problems.map((p) => ({ ...p, place: placeOf(p, root, source) }))
+  return { doc: value as StudyDoc, problems: placed, warnings }
 }
 
 /**

@@ -55,6 +55,16 @@ describe('study files', () => {
   })
 })
 
+describe('a study with values that have to change', () => {
+  it('opens, and says the first with file, key and line as the batch command does', () => {
+    const text = studyText({ ...study(), radar: { ...study().radar, frequencyHz: 5e10 } })
+    expect(openStudyText(text, 's.json', []).trouble).toMatch(
+      /^s\.json, radar\.frequencyHz \(line \d+\): frequency is 50 GHz; give a frequency from 30 MHz to 40 GHz\.$/,
+    )
+    expect(openStudyText(studyText(study()), 's.json', []).trouble).toBeNull()
+  })
+})
+
 describe('packages', () => {
   it('hold the study and every file it names', async () => {
     const doc = study()

@@ -79,7 +79,7 @@ describe('taking files in', () => {
     const files = createFileStore()
     const text = studyText({ ...emptyStudy(), name: 'other', terrain: [{ file: 'dem.tif' }] })
     const taken = await takeIn(study, files, [file('dem.tif', tiff(16)), file('s.json', text)])
-    expect(taken).toEqual({ opened: true, warnings: [], missing: [] })
+    expect(taken).toEqual({ opened: true, warnings: [], missing: [], trouble: null })
     expect(study.getState().doc.name).toBe('other')
     expect(undoWords(study).undo).toBeNull()
   })

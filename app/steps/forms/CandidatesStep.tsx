@@ -1,6 +1,6 @@
 import { useState } from 'react'
 import { Button as AriaButton } from 'react-aria-components'
-import { type CandidateDoc, limitOf } from '../../../core/index.ts'
+import { type CandidateDoc, limitOf, offTerrain } from '../../../core/index.ts'
 import {
   addCandidate,
   moveCandidate,
@@ -98,6 +98,7 @@ function Card({ candidate: c, onSelect }: { candidate: CandidateDoc; onSelect: (
   const at = useDoc((d) => d.candidates.findIndex((x) => x.id === c.id))
   const on = option?.candidate === c.id
   const heightM = c.groundHeightM ?? groundM
+  const away = offTerrain(c)
   const choose = (mastM: number, tiltDeg = on ? option.tiltDeg : (tilts?.[0] ?? 0)) =>
     view.getState().set({ option: { candidate: c.id, heightM: mastM, tiltDeg } })
   return (
@@ -119,7 +120,9 @@ function Card({ candidate: c, onSelect }: { candidate: CandidateDoc; onSelect: (
       <Problems where={(path) => path.startsWith(`candidates[${at}]`)} />
       {hasGround && groundM === null ? (
         <div className="row">
-          <span className="mark">no ground known here: outside the terrain or over a void</span>
+          <span className="help bad" role="alert">
+            {`${away.found}; ${away.remedy}`}
+          </span>
           {windowed ? (
             <Button small onPress={session.readAgain}>
               Read the ground here

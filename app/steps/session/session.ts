@@ -15,7 +15,6 @@ import {
   type GroundStore,
   openShelf,
   packStudy,
-  problemsOf,
   type ResultsStore,
   restore,
   type SaveStore,
@@ -25,7 +24,7 @@ import {
   takeTell,
   type ViewStore,
 } from '../../document/index.ts'
-import { download, type FileRole, openServed, takeIn } from '../../files/index.ts'
+import { download, type FileRole, openServed, type TakenIn, takeIn } from '../../files/index.ts'
 import { keepGround, type ReadGround } from './groundKeeper.ts'
 import { createNoticeStore, type NoticeStore, sentenceOf } from './notices.ts'
 import { keepRunning } from './runKeeper.ts'
@@ -78,12 +77,11 @@ export async function startSession(client: StudyClient, readGround: ReadGround):
   })
   const runner = keepRunning(study, view, ground, results, client, notices)
 
-  const opened = (warnings: readonly string[], missing: readonly string[]) => {
+  const opened = ({ warnings, missing, trouble }: Pick<TakenIn, 'warnings' | 'missing' | 'trouble'>) => {
     forgetResults(results)
     view.getState().set({ cell: null, chart: null, placing: false })
     for (const w of warnings) say(w)
-    const problem = problemsOf(study.getState().doc)[0]
-    if (problem) say(`${problem.path}: ${problem.message}`, 'bad')
+    if (trouble !== null) say(trouble, 'bad')
     if (missing.length > 0)
       say(`${missing.join(', ')}: named by the study, not here yet; drop ${missing.length > 1 ? 'them' : 'it'} on the page`)
   }
@@ -99,7 +97,7 @@ export async function startSession(client: StudyClient, readGround: ReadGround):
     const demo = await openServed(DEMO_FOLDER)
     files.getState().replace(demo.files)
     study.getState().load(demo.doc)
-    opened(demo.warnings, demo.missing)
+    opened(demo)
   }
   let readAgain = () => {}
   const session: Session = {
@@ -114,14 +112,14 @@ export async function startSession(client: StudyClient, readGround: ReadGround):
     take: (dropped, as) =>
       guarded(async () => {
         const taken = await takeIn(study, files, dropped, as)
-        if (taken.opened) opened(taken.warnings, taken.missing)
+        if (taken.opened) opened(taken)
       }),
     openDemo: () => guarded(openDemo),
     newStudy: () => {
       notices.getState().clear()
       files.getState().replace([])
       study.getState().load(emptyStudy())
-      opened([], [])
+      opened({ warnings: [], missing: [], trouble: null })
       view.getState().set({ step: 'ground' })
     },
     saveStudy: () => {
