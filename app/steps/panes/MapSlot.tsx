@@ -4,7 +4,7 @@ import { addCandidate, hasStartingRadar, moveCandidate, optionKey, setMastHeight
 import type { MapCandidate, MapHub, MapNeed } from '../../map/index.ts'
 import { EMPTY_WORDS } from '../../words/index.ts'
 import { useDoc, useGround, useResults, useSession, useView } from '../session/index.ts'
-import { settledOf } from '../settled.ts'
+import { cellUnder, settledOf } from '../settled.ts'
 
 const LowerPanel = lazy(() => import('./LowerPanel.tsx').then((m) => ({ default: m.LowerPanel })))
 const MapPane = lazy(() => import('../../map/index.ts').then((m) => ({ default: m.MapPane })))
@@ -105,7 +105,7 @@ export function MapSlot({ hub }: { hub: MapHub }) {
         onPlacingEnd={() => set({ placing: false })}
         onSelect={select}
         onMove={(id, at) => moveCandidate(study, id, at)}
-        onCell={(at) => set({ cell: at, chart: 'ledger' })}
+        onCell={(at) => set({ cell: option ? cellUnder(study.getState().doc, option.candidate, at) : at, chart: 'ledger' })}
         cell={chart === 'ledger' ? cell : null}
         onProfile={(azimuthDeg) => set({ chart: 'profile', profileAzimuthDeg: azimuthDeg })}
         profileAzimuthDeg={chart === 'profile' ? profileAzimuthDeg : null}
