@@ -69,11 +69,12 @@ const LAYERS: readonly (readonly [question: string, quantity: string, title: str
   ['what comes back', 'C/N', 'Clutter-to-noise', 'warm'],
   ['what it takes', 'suppression needed', 'Suppression needed', 'warm'],
 ]
-// the colour check of C/N has not been seen to hold on the last build
-test.fixme('each of the seven layers paints a picture of its own', async ({ page }) => {
+test('each of the seven layers paints a picture of its own', async ({ page }) => {
   await openDemo(page)
   await everythingRun(page)
-  const looks = new Set<number>()
+  // C/N is there already and is what a question starts with: no other layer may look like it
+  const start = await expectPainted(page, 'overlay')
+  const looks = new Set([start.mark])
   for (const [question, quantity, title, tone] of LAYERS) {
     await chooseLayer(page, question, quantity)
     await expect(legend(page)).toContainText(title)
@@ -88,21 +89,17 @@ test.fixme('each of the seven layers paints a picture of its own', async ({ page
       .poll(
         async () => {
           ink = await inkOf(page, 'overlay')
-          return itsOwn() && !looks.has(ink.mark)
+          return itsOwn() && (quantity === 'C/N' ? ink.mark === start.mark : !looks.has(ink.mark))
         },
         { timeout: 60_000, message: `${quantity} painted, ${tone}` },
       )
       .toBe(true)
-      .catch((error: Error) => {
-        throw new Error(`${error.message}\n${JSON.stringify(ink)}, seen before: ${looks.has(ink.mark)}`)
-      })
     looks.add(ink.mark)
   }
   expect(looks.size).toBe(LAYERS.length)
 })
 
-// read-out (nearest cell) and ledger (own ray) differ by up to a decibel at some places
-test.fixme('a click on a cell opens its ledger, which agrees with the read-out', async ({ page }) => {
+test('a click on a cell opens its ledger, which agrees with the read-out', async ({ page }) => {
   await openDemo(page)
   await everythingRun(page)
   const box = await map(page).boundingBox()
@@ -127,15 +124,16 @@ test.fixme('a click on a cell opens its ledger, which agrees with the read-out',
     await page.mouse.click(at.x, at.y)
     await expect(ledger).toBeVisible()
     const heading = plain(await ledger.getByRole('heading').innerText())
-    expect(azimuthIn(heading.replace('azimuth', 'az')), heading).toBeCloseTo(azimuthIn(shown), 1)
+    // the ledger is that of the painted cell, a quarter of a degree wide
+    expect(Math.abs(azimuthIn(heading.replace('azimuth', 'az')) - azimuthIn(shown)), heading).toBeLessThan(0.25)
     const rows = await Promise.all((await ledger.locator('tbody tr').all()).map((r) => r.locator('td').allInnerTexts()))
-    const total = rows.filter(([label]) => /^(C\/N|Clutter-to-noise)/.test(plain(label ?? ''))).at(-1)
+    const total = rows.find(([label]) => plain(label ?? '') === 'C/N')
     const read = /C\/N ([−-]?[\d.]+) dB/.exec(shown)?.[1]
     if (read && total) {
       // the read-out is rounded up to whole decibels, the ledger is not
       const over = numberIn(read) - numberIn(total[1] ?? '')
-      expect(over, `${shown} against ${total.map(plain).join(' ')}`).toBeGreaterThanOrEqual(-0.051)
-      expect(over, `${shown} against ${total.map(plain).join(' ')}`).toBeLessThan(1.051)
+      expect(over, `${shown} against ${total.map(plain).join(' ')}`).toBeGreaterThanOrEqual(-0.005)
+      expect(over, `${shown} against ${total.map(plain).join(' ')}`).toBeLessThan(1)
       compared++
     }
     await page.keyboard.press('Escape')

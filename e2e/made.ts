@@ -26,6 +26,25 @@ export const uplandPlan = (over: Partial<TiffPlan> = {}): TiffPlan => ({
 })
 export const upland = (name: string = UPLAND.name, over: Partial<TiffPlan> = {}): NamedFile => ({ name, bytes: makeTiff(uplandPlan(over)) })
 
+/** A small study on the upland: one candidate, two masts. */
+export const smallDoc = () => ({
+  format: 'sightfell-study',
+  version: 1,
+  name: 'Upland trial',
+  terrain: [{ file: UPLAND.name }],
+  uniformTerrain: 'farmland',
+  radar: {
+    name: 'Trial set',
+    frequencyHz: 2.9e9,
+    peakPowerW: 18_000,
+    pulseWidthS: 1e-6,
+    prfHz: [1000],
+    antenna: { gainDbi: 32, azimuthBeamwidthDeg: 1.8 },
+  },
+  candidates: [{ id: 'A', name: 'Middle', lon: -23.92, lat: -40.08, mastHeightsM: [10, 20] }],
+  run: { maxRangeM: 5000, rangeStepM: 75, azimuthStepDeg: 0.25 },
+})
+
 /** The demo study as it is served, file by file. */
 const DEMO = new URL('../public/demo/', import.meta.url).pathname
 export const demoText = (): string => readFileSync(`${DEMO}study.json`, 'utf8')
