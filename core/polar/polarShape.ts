@@ -43,6 +43,19 @@ export function defaultPolarRun(o: { azimuthBeamwidthDeg: number; gateM: number;
   return { maxRangeM: o.maxRangeM, rangeStepM, azimuthStepDeg: 360 / azimuths }
 }
 
+/** Azimuths of a coarse picture while something is dragged, and of the finer one while it is held still. */
+const MOVING_AZIMUTHS = 180
+const STILL_AZIMUTHS = 720
+/** Range cells those azimuths are meant for: a grid with more gets fewer azimuths, so that the time stays the same. */
+const PREVIEW_RANGES = 800
+
+/** The grid of a coarse picture: fewer azimuths, every range cell. `still`: nothing moves, so the picture may take four times as long. */
+export function previewShape(grid: PolarShape, still: boolean): PolarShape {
+  const wanted = (still ? STILL_AZIMUTHS : MOVING_AZIMUTHS) * Math.min(1, PREVIEW_RANGES / grid.ranges)
+  const azimuths = Math.min(grid.azimuths, Math.max(60, Math.round(wanted)))
+  return { ...grid, azimuths, azimuthStepDeg: 360 / azimuths }
+}
+
 /** Number of cells. */
 export const cellCount = (grid: PolarShape): number => grid.azimuths * grid.ranges
 /** Outer ground range of the grid, m. */

@@ -1,7 +1,7 @@
 import { clutterToNoise, foldedClutter } from '../clutter/index.ts'
 import { sightAlong, sweep } from '../masking/index.ts'
 import { isLowK, ladderHeightsM, ladderOf, type OptionCells, type Rung, rung } from '../merit/index.ts'
-import { polarShape } from '../polar/index.ts'
+import { polarShape, previewShape } from '../polar/index.ts'
 import { buildGround, groundAt } from '../terrain/index.ts'
 import { share, type Work } from '../work/index.ts'
 import type { Engine } from './engine.ts'
@@ -22,8 +22,6 @@ export interface EngineAnswer extends Omit<Answer, 'paint' | 'base'> {
   paint: Painted | null
   base: Painted | null
 }
-/** Each azimuth of a drag preview stands for this many of the full grid; range cells are never skipped. */
-const PREVIEW_STRIDE = 4
 /** Heights of the ladder swept together: a bound on memory, the sampling is shared among them. */
 const LADDER_BATCH = 6
 let serial = 0
@@ -87,11 +85,8 @@ export class Answers {
     const moved = body.lon !== candidate.lon || body.lat !== candidate.lat
     const site = moved ? { ...place, groundHeightM: null } : place
     const earth = earthOf(study)
-    const full = polarShape(study.run)
-    const azimuths = Math.ceil(full.azimuths / PREVIEW_STRIDE)
-    const swept = yield* sweep(ground, site, [body.heightM], { ...full, azimuths, azimuthStepDeg: 360 / azimuths }, earth, {
-      heightToSee: false,
-    })
+    const grid = previewShape(polarShape(study.run), body.still)
+    const swept = yield* sweep(ground, site, [body.heightM], grid, earth, { heightToSee: false })
     const [mask] = swept.masks
     const tiltDeg = this.engine.shown.option?.tiltDeg ?? candidate.tiltsDeg[0]
     const { landTable } = this.engine

@@ -121,7 +121,8 @@ export interface Ask {
   }
   /** Replaces the last one whole: this is also the cancel. */
   study: { doc: StudyDoc; show: { option: OptionRef | null; layer: LayerId; need?: string }; hold: boolean }
-  preview: { candidate: string; lon: number; lat: number; heightM: number }
+  /** `still`: the hand rests, a finer picture is wanted. */
+  preview: { candidate: string; lon: number; lat: number; heightM: number; still: boolean }
   paint: { view: View; layer: LayerId; option: OptionRef | 'preview'; opacity?: number }
   base: { view: View }
   /** Ground and one layer as one opaque picture, for the memo. */

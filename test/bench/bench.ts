@@ -10,9 +10,9 @@ import { clutterToNoise } from '../../core/clutter/index.ts'
 import { loadCrs, WGS84 } from '../../core/geodesy/index.ts'
 import { type ByteSource, openTerrain } from '../../core/intake/index.ts'
 import type { GroundCode } from '../../core/landcover/index.ts'
-import { heightToSeeCells, previewSweep } from '../../core/masking/index.ts'
+import { heightToSeeCells, sweep } from '../../core/masking/index.ts'
 import { makeRamp, paintPolar } from '../../core/paint/index.ts'
-import type { PolarShape } from '../../core/polar/index.ts'
+import { type PolarShape, previewShape } from '../../core/polar/index.ts'
 import type { RadarInput } from '../../core/radar/index.ts'
 import { type GridShape, gridPosition } from '../../core/raster/index.ts'
 import { buildGround, type Ground, makeTracer, type Site } from '../../core/terrain/index.ts'
@@ -22,8 +22,6 @@ import { HelperPool } from './helperPool.ts'
 const RUNS = 15
 const AZIMUTHS = 1440
 const RANGE_STEP_M = 75
-/** Every n-th azimuth of the preview. */
-const PREVIEW_NTH = 8
 const EARTH = { effectiveEarthFactor: 4 / 3, earthRadiusM: 6_378_137 }
 const FARMLAND: GroundCode = { terrain: 'farmland', coverHeightM: 0, sourceClass: null, mark: null }
 const RADAR: RadarInput = {
@@ -128,7 +126,8 @@ async function measure(g: Ground, col: number, row: number, rangeM: number, help
     finish(clutterToNoise(cells, masks[0], g.codes, site, 20, EARTH, RADAR, 0))
   })
   const heightToSee = time(() => void finish(heightToSeeCells(g, site, grid, EARTH)))
-  const preview = time(() => void previewSweep(g, site, 20, grid, EARTH, PREVIEW_NTH))
+  const coarse = previewShape(grid, false)
+  const preview = time(() => void finish(sweep(g, site, [20], coarse, EARTH, { heightToSee: false })))
   const { site: cells, masks } = run([20])
   const clutter = finish(clutterToNoise(cells, masks[0], g.codes, site, 20, EARTH, RADAR, 0))
   const out = new Uint32Array(1440 * 900)
@@ -140,7 +139,7 @@ async function measure(g: Ground, col: number, row: number, rangeM: number, help
   const ramp = makeRamp('warm', [0, 20, 40, 60], 'bare')
   const paint = time(() => paintPolar(grid, site, clutter.cnrDb, masks[0].state, ramp, view, out))
   await pool.close()
-  return { visits, threads: 1 + helpers, previewEveryNthAzimuth: PREVIEW_NTH, oneHeight, eightHeights, option, preview, paint, heightToSee }
+  return { visits, threads: 1 + helpers, previewAzimuths: coarse.azimuths, oneHeight, eightHeights, option, preview, paint, heightToSee }
 }
 
 /** Small grounds that show the extremes. */

@@ -1,16 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { geodesicInverse } from '../../core/geodesy/index.ts'
-import {
-  heightToSeeCells,
-  makeSweepArrays,
-  previewSweep,
-  sightPoint,
-  sweep,
-  sweepRays,
-  sweepResult,
-  sweepShare,
-} from '../../core/masking/index.ts'
-import { CELL, cellCentre, isUnknown, type PolarShape } from '../../core/polar/index.ts'
+import { heightToSeeCells, makeSweepArrays, sightPoint, sweep, sweepRays, sweepResult, sweepShare } from '../../core/masking/index.ts'
+import { CELL, cellCentre, isUnknown, type PolarShape, previewShape } from '../../core/polar/index.ts'
 import { type Ground, RELIEF } from '../../core/terrain/index.ts'
 import { finish } from '../../core/work/index.ts'
 import { FARMLAND, FOREST, FOUR_THIRDS, geographicShape, groundOn, placeAt, seeded, siteAt, utmShape } from '../terrain/grounds.ts'
@@ -203,9 +194,12 @@ describe('chosen rays and the preview', () => {
         expect(Math.abs(rays.floorM[a] - masks[0].floorM[b])).toBeLessThan(0.005)
       }
     })
-    const coarse = previewSweep(g, site, 12, GRID, FOUR_THIRDS, 4)
-    expect(coarse.grid).toMatchObject({ azimuths: 60, azimuthStepDeg: 6, ranges: 130 })
-    for (let j = 0; j < GRID.ranges; j++) expect(coarse.state[7 * 130 + j]).toBe(masks[0].state[28 * 130 + j])
+    const grid = previewShape(GRID, false)
+    expect(grid).toMatchObject({ azimuths: 180, azimuthStepDeg: 2, ranges: 130 })
+    const coarse = finish(sweep(g, site, [12], grid, FOUR_THIRDS, { heightToSee: false })).masks[0]
+    for (let j = 0; j < GRID.ranges; j++) expect(coarse.state[21 * 130 + j]).toBe(masks[0].state[28 * 130 + j])
+    expect(previewShape(GRID, true)).toEqual(GRID)
+    expect(previewShape({ ...GRID, azimuths: 1440, ranges: 1600 }, false).azimuths).toBe(90)
   })
   it('take overlapping and shifted cells', async () => {
     const g = groundOn(await utmShape(300, 300, 30), hills)
