@@ -26,6 +26,8 @@ export interface Column {
   value(result: OptionResult, need: string | null, system: UnitSystem): Quantity
   /** Key of the figure in the summary, for its explanation; null where there is none. */
   key(result: OptionResult, need: string | null): string | null
+  /** The same for every need: written once an option. */
+  readonly ofOption?: boolean
 }
 
 /** Share inside the error band of the floor, %; null where the need is no area. */
@@ -55,6 +57,7 @@ const CLUTTER_OVER: Column = {
   head: () => 'over 40 dB',
   value: (r, _need, system) => formatAreaUp(r.figures.clutterOverKm2.over40, system),
   key: () => 'clutter_over_40_km2',
+  ofOption: true,
 }
 /** A stated range without decimals it does not have: `20 NM`, `37 km`. */
 const roundRange = (m: number, system: UnitSystem): string => textOf(formatSetting(toFace('range', m, system), unitOf('range', system), 1))
@@ -67,6 +70,7 @@ const FLOOR: Column = {
     const floor = floorNear(r)
     return floor ? `floor_${Math.round(floor.rangeM / M_PER_NM)}nm_worst_m` : null
   },
+  ofOption: true,
 }
 /** The three words stand together, then what lies inside the error band, the verdict and both margins. */
 export const NEED_COLUMNS: readonly Column[] = [
@@ -104,4 +108,13 @@ export function columnGroups(columns: readonly Column[]): { readonly group: stri
     else out.push({ group, span: 1 })
   }
   return out
+}
+/** The unit of a column, from its first number; nothing while there is none. */
+export function unitUnder(column: Column, results: readonly OptionResult[], needIds: readonly string[], system: UnitSystem): string {
+  for (const r of results)
+    for (const need of needIds.length > 0 ? needIds : [null]) {
+      const { unit } = column.value(r, need, system)
+      if (unit !== '') return unit
+    }
+  return ''
 }

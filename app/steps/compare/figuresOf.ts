@@ -1,4 +1,4 @@
-import { type FloorFigure, M_PER_NM, type NeedFigure, type OptionResult } from '../../../core/index.ts'
+import { type FloorFigure, M_PER_NM, type NeedDoc, type NeedFigure, type OptionResult, type StudyDoc } from '../../../core/index.ts'
 
 /** Ground range of the floor that stands for an option in comparisons. */
 export const FLOOR_RANGE_M = 20 * M_PER_NM
@@ -12,3 +12,8 @@ export function needOf(result: OptionResult, needId: string | null): NeedFigure 
   const assessed = result.figures.needs.filter((n) => n.notAssessed === null)
   return assessed.find((n) => n.needId === needId) ?? assessed[0]
 }
+export const isAssessed = (result: OptionResult, needId: string): boolean =>
+  result.figures.needs.some((n) => n.needId === needId && n.notAssessed === null)
+/** Needs of the study, must needs first, otherwise as it lists them. */
+export const needsInOrder = (doc: StudyDoc): NeedDoc[] =>
+  [...(doc.needs ?? [])].sort((a, b) => Number(a.must === false) - Number(b.must === false))

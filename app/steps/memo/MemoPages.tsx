@@ -74,7 +74,8 @@ function BlockView({ block }: { block: Block }): ReactNode {
 
 function TableView({ table }: { table: TableBlock }) {
   const heads = table.columns.some((c) => c.head !== '')
-  const align = (i: number) => (table.columns[i]?.align === 'right' ? undefined : 'text')
+  const align = (i: number) =>
+    [table.columns[i]?.align === 'right' ? '' : 'text', table.columns[i]?.keep ? 'keep' : ''].filter(Boolean).join(' ') || undefined
   return (
     // biome-ignore lint/a11y/noNoninteractiveTabindex: a wide table is scrolled by keys
     // biome-ignore lint/a11y/useSemanticElements: a group of cells, no part of a form
