@@ -23,9 +23,15 @@ export interface LoadedGround {
 /**
  * Reads the ground of a study from the files beside it.
  * @param candidates those whose circles and places the terrain has to hold
+ * @param shared heights and codes lie where helper threads can read them
  * @throws InputError for a file that cannot be used and a candidate off the terrain
  */
-export async function loadGround(loaded: LoadedStudy, candidates: readonly SettledCandidate[], progress: Progress): Promise<LoadedGround> {
+export async function loadGround(
+  loaded: LoadedStudy,
+  candidates: readonly SettledCandidate[],
+  progress: Progress,
+  shared = false,
+): Promise<LoadedGround> {
   const { study, dir } = loaded
   const open: FileSource[] = []
   const door = {
@@ -47,9 +53,9 @@ export async function loadGround(loaded: LoadedStudy, candidates: readonly Settl
       needs: loaded.doc.needs ?? [],
       circles: candidates.map((c) => ({ lon: c.lon, lat: c.lat, radiusM: study.run.maxRangeM })),
     }
-    const read = await readGround(request, door, (doing, done, total) => progress.say(doing, done, total))
-    const { shape, heightM, code, codes, obstacles, verticalErrorM } = read
-    const ground = await drive(buildGround({ serial: 1, shape, heightM, code, codes, obstacles, verticalErrorM }), progress, 'Relief')
+    const read = await readGround(request, door, (doing, done, total) => progress.say(doing, done, total), shared)
+    const { shape, heightM, code, codes, obstacles, roads, verticalErrorM } = read
+    const ground = await drive(buildGround({ serial: 1, shape, heightM, code, codes, obstacles, roads, verticalErrorM }), progress, 'Relief')
     return { ground, read, warnings: [...read.warnings, ...checkPlaces(loaded, ground, candidates)] }
   } finally {
     await Promise.all(open.map((s) => s.close()))
@@ -66,7 +72,7 @@ function checkPlaces(loaded: LoadedStudy, ground: Ground, candidates: readonly S
       throw new InputError({
         ...offTerrain(c),
         file: basename(loaded.path),
-        place: `candidates[${loaded.study.candidates.indexOf(c)}]`,
+        place: `candidates[${loaded.doc.candidates.findIndex((d) => d.id === c.id)}]`,
       })
     if (stated !== null && Math.abs(stated - height) > 3 * ground.verticalErrorM)
       warnings.push(

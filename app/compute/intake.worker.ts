@@ -8,8 +8,13 @@ const post = (tell: IntakeTell, transfer: Transferable[] = []) => scope.postMess
 /** Reads the ground once, hands it over and is ended by the page. */
 scope.onmessage = async ({ data }: MessageEvent<IntakeAsk>) => {
   try {
-    const read = await readGround(data.request, doorOf(data.files), (doing, done, total) => post({ kind: 'progress', doing, done, total }))
-    post({ kind: 'read', read }, [read.heightM.buffer as ArrayBuffer, ...(read.code ? [read.code.buffer as ArrayBuffer] : [])])
+    const tell = (doing: string, done: number, total: number) => post({ kind: 'progress', doing, done, total })
+    const read = await readGround(data.request, doorOf(data.files), tell, scope.crossOriginIsolated)
+    const buffers = [read.heightM.buffer, ...(read.code ? [read.code.buffer] : [])]
+    post(
+      { kind: 'read', read },
+      buffers.filter((b): b is ArrayBuffer => b instanceof ArrayBuffer),
+    )
   } catch (error) {
     if (isInputError(error)) {
       const { code, file, place, found, remedy } = error

@@ -88,7 +88,7 @@ export function makeGroundReader(): (
       warnings,
     } = await reading.result
     return {
-      ground: { shape, heightM, code, codes, obstacles, verticalErrorM, landTable, needPlaces },
+      ground: { shape, heightM, code, codes, obstacles, roads, verticalErrorM, landTable, needPlaces },
       roads,
       obstacles,
       notes: [...read.map((f) => `${f.name}: ${f.describe}`), ...warnings],

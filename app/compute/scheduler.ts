@@ -1,4 +1,4 @@
-import { Answers, type Ask, Engine, isInputError, type Tell, type Work } from '../../core/index.ts'
+import { Answers, type Ask, Engine, isInputError, type SweepHelpers, type Tell, type Work } from '../../core/index.ts'
 import { BACKGROUND_RANK, type Envelope, type Post, RANK, STALE_AFTER_STUDY, SUPERSEDING } from './messages.ts'
 
 const SLICE_MS = 8
@@ -14,8 +14,8 @@ interface Task {
  * of its own: `slice` does one slice and says whether there is more. A new study drops the work under way; that is the only cancel.
  */
 export class Scheduler {
-  private readonly engine = new Engine()
-  private readonly answers = new Answers(this.engine)
+  private readonly engine: Engine
+  private readonly answers: Answers
   private tasks: Task[] = []
   private background: Work<Tell[]> | null = null
   private share = 0
@@ -31,7 +31,11 @@ export class Scheduler {
       body: unknown,
     ) => { body: unknown; transfer: Transferable[] } | Promise<{ body: unknown; transfer: Transferable[] }>,
     private readonly now: () => number,
-  ) {}
+    helpers: SweepHelpers | null = null,
+  ) {
+    this.engine = new Engine(undefined, helpers)
+    this.answers = new Answers(this.engine)
+  }
 
   take({ id, kind, body }: Envelope): void {
     if (kind === 'ground' || kind === 'study') {

@@ -2,6 +2,7 @@
 import { type Ask, loadCrs, type Painted, type Tell } from '../../core/index.ts'
 import type { Envelope } from './messages.ts'
 import { Scheduler } from './scheduler.ts'
+import { startSweepHelpers } from './sweepHelpers.ts'
 
 const scope = self as unknown as DedicatedWorkerGlobalScope
 const turn = new MessageChannel()
@@ -19,6 +20,7 @@ const scheduler = new Scheduler(
   (tell, transfer) => scope.postMessage(tell, transfer ?? []),
   finish,
   () => performance.now(),
+  startSweepHelpers(),
 )
 
 function wake(): void {

@@ -3,7 +3,6 @@ import type { Ground, Site } from '../terrain/index.ts'
 import { makeCuts } from './plane/profile.ts'
 import { heightOnLine, runRay } from './plane/ray.ts'
 import { heldRunner } from './sightPoint.ts'
-import { isInSight } from './sightState.ts'
 
 /** The coverage floor over one place from one antenna, at several effective earths on one tracing of its ray. */
 export interface Clearance {
@@ -34,10 +33,7 @@ export function clearanceAt(g: Ground, site: Site, heightM: number, earths: read
   for (const earth of earths) {
     runRay(r, earth, azimuthDeg, heightM, cuts)
     if (r.profile.cuts === 0 || Number.isNaN(r.siteGroundM)) return unknown
-    const surfaceM = r.profile.cutSurfaceM[0]
-    const lineM = heightOnLine(r.antennaY, r.run.tangent[0], rangeM, r.inverse)
-    // behind a control point a whole posting or more away the allowance of the ground does not hold
-    floorsM.push(isInSight(lineM - surfaceM, Number.POSITIVE_INFINITY, g.postingM) ? surfaceM : lineM)
+    floorsM.push(Math.max(r.profile.cutSurfaceM[0], heightOnLine(r.antennaY, r.run.tangent[0], rangeM, r.inverse)))
   }
   return { ...place, groundM: r.profile.cutGroundM[0], floorsM }
 }

@@ -1,6 +1,6 @@
 import { clutterToNoise, foldedClutter } from '../clutter/index.ts'
 import { sightAlong, sweep } from '../masking/index.ts'
-import { isLowK, ladderHeightsM, ladderOf, type OptionCells, type Rung, rung } from '../merit/index.ts'
+import { isLowK, ladderHeightsM, ladderOf, type OptionCells, type Rung, rung, verticalCut } from '../merit/index.ts'
 import { polarShape, previewShape } from '../polar/index.ts'
 import { buildGround, groundAt } from '../terrain/index.ts'
 import { share, type Work } from '../work/index.ts'
@@ -44,6 +44,7 @@ export class Answers {
     map: (body) => this.map(body),
     probe: (body) => this.probeAt(body),
     profile: (body) => this.profile(body),
+    vertical: (body) => this.vertical(body),
     ledger: (body) => this.ledger(body),
     ladder: (body) => this.ladder(body),
     groundAt: (body) => this.groundAt(body),
@@ -173,6 +174,13 @@ export class Answers {
     return { option: body.option, ...along }
   }
 
+  private *vertical(body: Ask['vertical']): Work<EngineAnswer['vertical']> {
+    const { study } = this.engine.ready()
+    const need = study.needs.find((n) => n.id === body.need) ?? study.needs[0]
+    if (!need) return null
+    return yield* verticalCut(yield* this.engine.compute(body.option), need, body.window)
+  }
+
   // biome-ignore lint/correctness/useYield: an answer that needs no slices
   private *ledger(body: Ask['ledger']): Work<EngineAnswer['ledger']> {
     const { ground, study } = this.engine.ready()
@@ -201,7 +209,7 @@ export class Answers {
     for (let n = 0; n < heights.length; n += LADDER_BATCH) {
       const batch = heights.slice(n, n + LADDER_BATCH)
       const { site, masks } = yield* share(
-        sweep(ground, place, batch, grid, earth, { heightToSee: false }),
+        sweep(ground, place, batch, grid, earth, { heightToSee: false, helpers: this.engine.helpers }),
         n,
         n + batch.length / 3,
         heights.length,
@@ -209,7 +217,7 @@ export class Answers {
       const low =
         lowEarth &&
         (yield* share(
-          sweep(ground, place, batch, grid, lowEarth, { sightOnly: true }),
+          sweep(ground, place, batch, grid, lowEarth, { sightOnly: true, helpers: this.engine.helpers }),
           n + batch.length / 3,
           n + batch.length / 2,
           heights.length,

@@ -1,8 +1,8 @@
 import { type ClutterCells, clutterMarks, clutterToNoise, type FoldedCells, foldedClutter, type LandTable } from '../clutter/index.ts'
 import type { SuppressionBy } from '../doppler/index.ts'
 import { isInputError } from '../errors/index.ts'
-import { type SightCells, type SiteCells, sweep } from '../masking/index.ts'
-import { isAreaNeed, isLowK, type LowKCells, type NeedPlaces, type OptionCells, optionFigures } from '../merit/index.ts'
+import { type SightCells, type SiteCells, type SweepHelpers, sweep } from '../masking/index.ts'
+import { isAreaNeed, isLowK, type LowKCells, type NeedPlaces, type OptionCells, optionFigures, seeRoads } from '../merit/index.ts'
 import { polarShape } from '../polar/index.ts'
 import { type SettledNeed, type SettledStudy, type StudyDoc, settle } from '../study/index.ts'
 import type { Ground } from '../terrain/index.ts'
@@ -37,7 +37,11 @@ export class Engine {
   private readonly results = new Map<string, OptionResult>()
   private readonly failed = new Set<string>()
 
-  constructor(cacheBytes?: number) {
+  /** `helpers`: threads that take a share of sweeps. */
+  constructor(
+    cacheBytes?: number,
+    readonly helpers: SweepHelpers | null = null,
+  ) {
     this.cache = new PolarCache(cacheBytes)
   }
 
@@ -129,6 +133,7 @@ export class Engine {
     const cells = yield* share(this.compute(ref), 0, 0.6, 1)
     const lowK = yield* share(this.computeLowK(ref), 0.6, 0.8, 1)
     const folded = yield* share(this.computeFolded(ref, cells), 0.8, 1, 1)
+    yield* seeRoads(cells)
     const keys = this.keys(ref)
     if (this.study !== study || !keys) return []
     const marks = clutterMarks(cells.ground.codes, study.radar, this.landTable !== null, study.atmosphere)
@@ -151,7 +156,12 @@ export class Engine {
     let mask = this.cache.get<SightCells>(keys.mask)
     if (!site || !mask) {
       const heights = this.missingHeights(candidate.mastHeightsM, ref.heightM, (h) => keysAt(h).mask)
-      const swept = yield* share(sweep(ground, place, heights, polarShape(study.run), earth, { heightToSee: false }), 0, 0.6, 1)
+      const swept = yield* share(
+        sweep(ground, place, heights, polarShape(study.run), earth, { heightToSee: false, helpers: this.helpers }),
+        0,
+        0.6,
+        1,
+      )
       site = swept.site
       this.cache.put(keys.site, site, keep)
       for (const m of swept.masks) {
@@ -181,7 +191,10 @@ export class Engine {
     const keep = this.keepWhile(ref)
     const heights = this.missingHeights(candidate.mastHeightsM, ref.heightM, keyAt)
     const earth = lowEarthOf(study)
-    const { site, masks } = yield* sweep(ground, siteOf(candidate), heights, polarShape(study.run), earth, { sightOnly: true })
+    const { site, masks } = yield* sweep(ground, siteOf(candidate), heights, polarShape(study.run), earth, {
+      sightOnly: true,
+      helpers: this.helpers,
+    })
     for (const m of masks) {
       const own = lowKOf(site, m, earth, keyAt(m.heightM))
       this.cache.put(own.key, own, keep)
@@ -235,6 +248,7 @@ export class Engine {
       folded: (keys && this.cache.get<FoldedCells>(keys.folded)) ?? null,
       lowK: (keys && this.cache.get<LowKCells>(keys.lowK)) ?? null,
       places: this.needPlaces,
+      vehicleRcsM2: study.vehicleRcsM2,
     }
   }
 

@@ -20,7 +20,7 @@ export interface GroundRequest {
   /** Needs as the study states them; the files of fixes, tracks and polygons are read. */
   readonly needs?: readonly NeedDoc[]
 }
-/** What reading the files of a study gives. The arrays are fresh and may be transferred. */
+/** What reading the files of a study gives. The arrays are fresh and may be transferred, or lie on shared memory. */
 export interface GroundRead {
   readonly shape: GridShape
   readonly heightM: Float32Array
@@ -46,12 +46,13 @@ export const DEFAULT_VERTICAL_ERROR_M = 10
 
 /**
  * Reads every file that makes the ground, band by band into one grid: the finest terrain first, others fill what it leaves. Throws
- * InputError with the file's name.
+ * InputError with the file's name. `shared` puts heights and codes on shared memory, where other threads can read them.
  */
 export async function readGround(
   request: GroundRequest,
   door: FileDoor,
   onProgress: (doing: string, done: number, total: number) => void = () => {},
+  shared = false,
 ): Promise<GroundRead> {
   if (request.terrain.length === 0)
     throw new InputError({
@@ -74,7 +75,8 @@ export async function readGround(
     heads.map((h) => h.shape),
     request.circles,
   )
-  const heightM = new Float32Array(shape.width * shape.height).fill(Number.NaN)
+  const posts = shape.width * shape.height
+  const heightM = new Float32Array(shared ? new SharedArrayBuffer(4 * posts) : new ArrayBuffer(4 * posts)).fill(Number.NaN)
   const posting = new Map(heads.map((h) => [h, postingM(h.shape).meanM]))
   const finestFirst = [...heads].sort((a, b) => (posting.get(a) ?? 0) - (posting.get(b) ?? 0))
   for (const head of finestFirst) await head.readInto({ shape, samples: heightM }, told(onProgress, `Reading ${head.name}`))
@@ -88,7 +90,9 @@ export async function readGround(
   if (landCover) {
     const head = await readClasses(await door.bytes(landCover.file, 'landCover.file'))
     const raster = await head.readClassesInto(shape, told(onProgress, `Reading ${head.name}`))
-    ;({ code, codes } = groundCodes(raster, landCover, outside))
+    const made = groundCodes(raster, landCover, outside)
+    codes = made.codes
+    code = shared ? onShared(made.code) : made.code
     const strange = codes.flatMap((c) => (c.sourceClass !== null && c.mark === 'default' ? [c.sourceClass] : []))
     if (strange.length > 0)
       warnings.push(
@@ -116,6 +120,12 @@ export async function readGround(
   }
   const verticalErrorM = request.terrain.reduce((worst, t) => Math.max(worst, t.verticalErrorM ?? DEFAULT_VERTICAL_ERROR_M), 0)
   return { shape, heightM, code, codes, obstacles, roads, landTable, needPlaces, verticalErrorM, files, warnings }
+}
+
+function onShared(bytes: Uint8Array): Uint8Array {
+  const out = new Uint8Array(new SharedArrayBuffer(bytes.length))
+  out.set(bytes)
+  return out
 }
 
 const placesWords = ({ kind, places, rings }: NeedPlaces): string =>

@@ -1,11 +1,12 @@
 // Speed of the kernels in this process, each over 15 runs; one JSON line on stdout.
 //   npm run --silent bench -- --json --ground G.tif --col C --row R --range M [--helpers N]
-// Sweeps are shared with N helper threads (one per further core when it is not said; 0 = one thread) and leave out height to see, as the app does until
-// that layer is shown; `heightToSee` is the time of that by itself. Everything else runs on one thread. "threads" in the answer says how many swept.
+// Sweeps are shared with N helper threads (one per further core when it is not said; 0 = one thread) and leave out height to see until that layer is
+// shown, as app and batch command do; `heightToSee` is the time of that by itself. Everything else runs on one thread. "threads" says how many swept.
 // Without --ground: flat, ridged, rough and all-void grounds of 1 000 x 1 000 posts made here, one line each.
 import { closeSync, fstatSync, openSync, readSync } from 'node:fs'
 import { availableParallelism } from 'node:os'
 import { basename } from 'node:path'
+import { sweepHelpers } from '../../app/batch/helpers/sweepHelpers.ts'
 import { clutterToNoise } from '../../core/clutter/index.ts'
 import { loadCrs, WGS84 } from '../../core/geodesy/index.ts'
 import { type ByteSource, openTerrain } from '../../core/intake/index.ts'
@@ -17,7 +18,6 @@ import type { RadarInput } from '../../core/radar/index.ts'
 import { type GridShape, gridPosition } from '../../core/raster/index.ts'
 import { buildGround, type Ground, makeTracer, type Site } from '../../core/terrain/index.ts'
 import { finish } from '../../core/work/index.ts'
-import { HelperPool } from './helperPool.ts'
 
 const RUNS = 15
 const AZIMUTHS = 1440
@@ -117,8 +117,9 @@ async function measure(g: Ground, col: number, row: number, rangeM: number, help
     tracer.trace(i * grid.azimuthStepDeg)
     visits += tracer.track.count
   }
-  const pool = new HelperPool(g, helpers)
-  const run = (heightsM: readonly number[]) => pool.sweep(site, heightsM, grid, EARTH, { heightToSee: false })
+  const { crew, close } = sweepHelpers(helpers)
+  const options = { heightToSee: false, helpers: crew }
+  const run = (heightsM: readonly number[]) => finish(sweep(g, site, heightsM, grid, EARTH, options))
   const oneHeight = time(() => void run([20]))
   const eightHeights = time(() => void run([5, 10, 15, 20, 25, 30, 35, 40]))
   const option = time(() => {
@@ -127,7 +128,7 @@ async function measure(g: Ground, col: number, row: number, rangeM: number, help
   })
   const heightToSee = time(() => void finish(heightToSeeCells(g, site, grid, EARTH)))
   const coarse = previewShape(grid, false)
-  const preview = time(() => void finish(sweep(g, site, [20], coarse, EARTH, { heightToSee: false })))
+  const preview = time(() => void finish(sweep(g, site, [20], coarse, EARTH, options)))
   const { site: cells, masks } = run([20])
   const clutter = finish(clutterToNoise(cells, masks[0], g.codes, site, 20, EARTH, RADAR, 0))
   const out = new Uint32Array(1440 * 900)
@@ -138,7 +139,7 @@ async function measure(g: Ground, col: number, row: number, rangeM: number, help
   const view = { width: 1440, height: 900, worldX: x - 720 * worldPerPx, worldY: y + 450 * worldPerPx, worldPerPx, night: false }
   const ramp = makeRamp('warm', [0, 20, 40, 60], 'bare')
   const paint = time(() => paintPolar(grid, site, clutter.cnrDb, masks[0].state, ramp, view, out))
-  await pool.close()
+  await close()
   return { visits, threads: 1 + helpers, previewAzimuths: coarse.azimuths, oneHeight, eightHeights, option, preview, paint, heightToSee }
 }
 

@@ -19,6 +19,7 @@ import {
 import type { MemoMap } from '../../memo/index.ts'
 import type { CommandLine } from '../arguments.ts'
 import { encodeGeoTiff } from '../geoTiffWriter.ts'
+import { sweepHelpers } from '../helpers/sweepHelpers.ts'
 import { loadGround } from '../loadGround.ts'
 import { loadStudy, sayWarnings } from '../loadStudy.ts'
 import { openOutFolder, SUMMARY_FORMAT } from '../outFolder.ts'
@@ -42,11 +43,13 @@ export async function run(line: CommandLine, progress: Progress): Promise<void> 
     loaded,
     loaded.study.candidates.filter((c) => study.candidates.some((s) => s.id === c.id)),
     progress,
+    true,
   )
   const files = await filesOf(loaded.dir, study, read.files)
   progress.inputIsGood()
 
-  const engine = new Engine()
+  const helpers = sweepHelpers()
+  const engine = new Engine(undefined, helpers.crew)
   engine.setGround(ground, read.landTable, read.needPlaces)
   const lattice = mapLattice(ground.shape, study.run.rangeStepM)
   const results: OptionResult[] = []
@@ -60,6 +63,7 @@ export async function run(line: CommandLine, progress: Progress): Promise<void> 
     await writer.write(cells, ref, name)
     if (wantsMemo) maps.push(await (await import('./memo.ts')).memoMap(cells, result, study.run.maxRangeM))
   }
+  await helpers.close()
   const remarks = [...loaded.warnings, ...warnings]
   writeFileSync(join(out.workDir, 'summary.json'), summary(study, results, files))
   if (wantsMemo) {

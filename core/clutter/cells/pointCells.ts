@@ -190,7 +190,7 @@ export interface SideLobe {
 }
 
 function sideLobesOfGrid(o: PointOption): ClutterCells {
-  const { site, masks } = finish(sweep(o.g, o.site, [o.heightM], o.grid, o.earth))
+  const { site, masks } = finish(sweep(o.g, o.site, [o.heightM], o.grid, o.earth, { heightToSee: false }))
   return finish(clutterToNoise(site, masks[0], o.g.codes, o.site, o.heightM, o.earth, o.r, o.tiltDeg, o.options))
 }
 

@@ -51,7 +51,7 @@ export function* foldedClutter(
   options: ClutterOptions = {},
 ): Work<FoldedCells> {
   const grid = farGrid(near.grid, foldRangeM)
-  const swept = yield* share(sweep(g, site, [heightM], grid, earth), 0, 0.7, 1)
+  const swept = yield* share(sweep(g, site, [heightM], grid, earth, { heightToSee: false }), 0, 0.7, 1)
   const discretes = options.discretes ? discreteEchoes(g, site, heightM, earth, foldRangeM) : []
   const { landTable, weather } = options
   const clutter = yield* share(

@@ -33,15 +33,25 @@ export function* sweep(
   earth: Earth,
   options: SweepOptions = {},
 ): Work<{ site: SiteCells; masks: SightCells[] }> {
-  const arrays = makeSweepArrays(grid, heightsM, options)
+  const helpers = options.helpers?.canShare(g) ? options.helpers : null
+  const arrays = makeSweepArrays(grid, heightsM, options, helpers !== null)
+  helpers?.begin(g, site, earth, arrays)
   yield* sweepShare(g, site, earth, arrays)
+  for (;;) {
+    const finished = Atomics.load(arrays.finished, 0)
+    if (finished === grid.azimuths) break
+    if (Atomics.load(arrays.finished, 1) > 0) throw new Error('a sweep helper failed')
+    // the last azimuths are in a helper's hands: its core is not taken away by asking
+    Atomics.wait(arrays.finished, 0, finished, 1)
+    yield { done: grid.azimuths, total: grid.azimuths }
+  }
   return sweepResult(arrays, siteGround(g, site), g.obstacles, options)
 }
 
 /**
  * One thread's share of a sweep: takes azimuths nobody has taken yet and fills their part of the arrays, until there are none. Alone it does the whole
  * sweep; with helpers on the same shared arrays (makeSweepArrays with `shared`, heights of the ground shared too) each does what it gets to, and the
- * numbers are the same. The sweep is done when every thread's share has returned; `sweepResult` then makes its result.
+ * numbers are the same. The sweep is done when all azimuths are `finished`; `sweepResult` then makes its result.
  */
 export function* sweepShare(g: Ground, site: Site, earth: Earth, a: SweepArrays): Work<void> {
   const { grid } = a
@@ -96,6 +106,7 @@ export function* sweepShare(g: Ground, site: Site, earth: Earth, a: SweepArrays)
       }
       points += p.count * (2 + 0.3 * a.masks.length)
     }
+    Atomics.add(a.finished, 0, Math.min(AZIMUTHS_PER_TURN, azimuths - first))
     if (points > POINTS_PER_TURN) {
       points = 0
       yield { done: Math.min(first + AZIMUTHS_PER_TURN, azimuths), total: azimuths }

@@ -1,6 +1,7 @@
 import type { PolarShape } from '../../polar/index.ts'
 import { HORIZON_NUMBERS, horizonOf } from '../horizon.ts'
 import type { SightCells, SiteCells } from '../types.ts'
+import type { SweepHelpers } from './sweepCrew.ts'
 
 /** What a sweep is asked for beside ground, site and earth. */
 export interface SweepOptions {
@@ -9,12 +10,16 @@ export interface SweepOptions {
   readonly heightToSee?: boolean
   /** true leaves all arrays of the site cells empty. */
   readonly sightOnly?: boolean
+  /** Threads that take a share; used where they can read the ground. */
+  readonly helpers?: SweepHelpers | null
 }
 /** Plain result arrays of a sweep: any thread may fill any azimuths. */
 export interface SweepArrays {
   readonly grid: PolarShape
   /** Azimuths handed out so far: helpers take the next ones from here. */
   readonly taken: Int32Array
+  /** Azimuths finished so far; helpers that failed. */
+  readonly finished: Int32Array
   readonly groundM: Float32Array
   readonly code: Uint8Array
   readonly relief: Uint8Array
@@ -43,6 +48,7 @@ export function makeSweepArrays(grid: PolarShape, heightsM: readonly number[], o
   return {
     grid,
     taken: new Int32Array(room(4)),
+    finished: new Int32Array(room(8)),
     groundM: new Float32Array(room(4 * site)),
     code: new Uint8Array(room(site)),
     relief: new Uint8Array(room(site)),
