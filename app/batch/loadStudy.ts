@@ -53,8 +53,11 @@ export async function loadStudy(path: string): Promise<LoadedStudy> {
       code: 'no-candidates',
       file: name,
       place: 'candidates',
-      found: 'no candidate',
-      remedy: 'give at least one candidate with id, lon, lat and mastHeightsM',
+      found: study.rejected.length > 0 ? 'every candidate is rejected' : 'no candidate',
+      remedy:
+        study.rejected.length > 0
+          ? 'take "rejected" out of one, or add a candidate'
+          : 'give at least one candidate with id, lon, lat and mastHeightsM',
     })
   return { name, path, dir: dirname(resolve(path)), doc, study, warnings: [...warnings, ...checkStudy(study, doc)] }
 }

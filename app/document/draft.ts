@@ -54,9 +54,9 @@ export function problemsOf(doc: StudyDoc): readonly FieldProblem[] {
   return problems
 }
 
-/** The document, once it can run; null while terrain or every candidate is missing or a value has to change. */
+/** The document, once it can run; null while terrain is missing, no candidate is left or a value has to change. */
 export const runnable = (doc: StudyDoc): StudyDoc | null =>
-  doc.terrain.length > 0 && doc.candidates.length > 0 && problemsOf(doc).length === 0 ? doc : null
+  doc.terrain.length > 0 && doc.candidates.some((c) => c.rejected === undefined) && problemsOf(doc).length === 0 ? doc : null
 
 /** Names of every file the document refers to, each once. */
 export function filesOf(doc: StudyDoc): string[] {

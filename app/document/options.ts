@@ -2,11 +2,11 @@ import type { OptionRef, StudyDoc } from '../../core/index.ts'
 
 const DEFAULT_TILT_DEG = 0
 
-/** Every option of the study, candidate by candidate, lowest mast first. */
+/** Every option of the study, candidate by candidate, lowest mast first; rejected candidates have none. */
 export function studyOptions(doc: StudyDoc): OptionRef[] {
   const own = doc.radar.antenna.tiltDeg ?? DEFAULT_TILT_DEG
   return doc.candidates.flatMap((c) =>
-    [...c.mastHeightsM]
+    c.rejected !== undefined ? [] : [...c.mastHeightsM]
       .sort((a, b) => a - b)
       .flatMap((heightM) => tiltsOf(c.tiltsDeg, own).map((tiltDeg) => ({ candidate: c.id, heightM, tiltDeg }))),
   )

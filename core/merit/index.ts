@@ -18,6 +18,8 @@ export {
   type ResidueCells,
   residueOf,
 } from './optionCells.ts'
+export * from './ranking/index.ts'
+export * from './roads/index.ts'
 export { aboveNoiseDb } from './signal/decibelTables.ts'
 export { twoWayEdgeLossDb } from './signal/edgeLoss.ts'
 export { pdOf } from './signal/pdOf.ts'

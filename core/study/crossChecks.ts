@@ -4,7 +4,7 @@ import { checkPulses, shortestPulseS } from './checkPulses.ts'
 import { cellsOf, defaultAzimuthStepDeg, evenStepDeg, gateOfM, longestRangeStepM } from './grid.ts'
 import { quantity } from './limits.ts'
 import type { Problem } from './problems.ts'
-import type { CandidateDoc, NeedDoc, RadarDoc, RunDoc, StudyDoc, TerrainFileDoc } from './types.ts'
+import type { CandidateDoc, NeedDoc, RadarDoc, RankingDoc, RunDoc, StudyDoc, TerrainFileDoc } from './types.ts'
 
 /** Largest filter bank that is worked out. */
 const MOST_BANK_PULSES = 64
@@ -194,6 +194,16 @@ function checkCandidates(candidates: readonly CandidateDoc[], say: Say): void {
   })
 }
 
+function checkRanking(ranking: RankingDoc, say: Say): void {
+  ranking.criteria.forEach((c, i) => {
+    if (c.worst === c.best)
+      say(`ranking.criteria[${i}].best`, 'range', `worst and best are both ${c.best}`, 'give two different values, the better one as best')
+    const earlier = ranking.criteria.findIndex((o) => o.figure === c.figure)
+    if (earlier < i)
+      say(`ranking.criteria[${i}].figure`, 'twice', `figure "${c.figure}" is already criterion ${earlier + 1}`, 'list every figure once')
+  })
+}
+
 function checkIds(list: readonly { id: string }[], name: string, say: Say): void {
   const first = new Map<string, number>()
   list.forEach(({ id }, i) => {
@@ -267,6 +277,7 @@ export function crossChecks(doc: StudyDoc, ok: (part: string) => boolean): Probl
     checkNeeds(doc.needs ?? [], ok('radar') ? (doc.radar.pfa ?? 1e-6) : null, say)
     checkIds(doc.needs ?? [], 'needs', say)
   }
+  if (ok('ranking') && doc.ranking) checkRanking(doc.ranking, say)
   if (ok('candidates')) {
     checkCandidates(doc.candidates, say)
     checkIds(doc.candidates, 'candidates', say)

@@ -175,6 +175,20 @@ const need = z.looseObject({
   qnhHpa: num('needs[].qnhHpa').nullable().optional(),
 })
 const candidate = z.looseObject({
+  origins: origins.optional(),
+})
+const reason = z.string().superRefine((value, ctx) => {
+  if (value.trim() === '')
+    ctx.addIssue({
+      code: 'custom',
+      params: { code: 'no-reason', found: 'a rejected candidate without a reason', remedy: 'say why, or take the key out' },
+    })
+})
+const FIGURE = /^[a-z][A-Za-z0-9_-]*$/
+const figureName = z.string().superRefine((value, ctx) => {
+  if (FIGURE.test(value)) return
+  const found = `figure is ${JSON.stringify(value.length > 40 ? `${value.slice(0, 40)}…` : value)}`
+  ctx.addIssue({ code: 'custom', params: { code: 'figure', found, remedy: 'use a name of summary.json, such as "clutter_over_40_km2"' } })
   id,
   name: z.string().optional(),
   lon: num('candidates[].lon'),
@@ -186,6 +200,13 @@ const candidate = z.looseObject({
   notes: z.string().optional(),
 })
 
+  rejected: reason.optional(),
+})
+const criterion = z.looseObject({
+  figure: figureName,
+  worst: num('ranking.criteria[].worst'),
+  best: num('ranking.criteria[].best'),
+  weight: num('ranking.criteria[].weight'),
 export const studySchema = z.looseObject({
   format: z.literal('sightfell-study'),
   version: z.literal(1),
@@ -204,6 +225,7 @@ export const studySchema = z.looseObject({
   run: z
     .looseObject({
       maxRangeM: num('run.maxRangeM').optional(),
+  ranking: z.looseObject({ criteria: z.array(criterion) }).optional(),
       rangeStepM: num('run.rangeStepM').optional(),
       azimuthStepDeg: num('run.azimuthStepDeg').optional(),
       foldRangeM: num('run.foldRangeM').optional(),

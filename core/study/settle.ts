@@ -227,7 +227,11 @@ export function settle(doc: StudyDoc, fileName?: string): SettledStudy {
     atmosphere,
     radar,
     needs: (doc.needs ?? []).map((n, i) => settleNeed(n, i, radar, maxRangeM, d)),
-    candidates: doc.candidates.map((c, i) => settleCandidate(c, i, radar.antenna.tiltDeg, d)),
+    candidates: doc.candidates.flatMap((c, i) => (c.rejected === undefined ? [settleCandidate(c, i, radar.antenna.tiltDeg, d)] : [])),
+    rejected: doc.candidates.flatMap((c) =>
+      c.rejected === undefined ? [] : [{ id: c.id, name: c.name ?? c.id, lon: c.lon, lat: c.lat, reason: c.rejected }],
+    ),
+    ranking: doc.ranking && doc.ranking.criteria.length > 0 ? doc.ranking : null,
     run: { maxRangeM, rangeStepM, azimuthStepDeg },
     foldRangeM: d.take('run.foldRangeM', doc.run?.foldRangeM, defaultFoldRangeM(radar)),
     defaults: d.used,

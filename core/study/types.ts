@@ -128,6 +128,19 @@ export interface CandidateDoc {
 export interface AtmosphereDoc {
   effectiveEarthFactor?: number
   earthRadiusM?: number | null
+  /** Why the candidate is out: it is listed with this reason and no longer worked out. */
+  rejected?: string
+}
+/** One thing options are ranked by: a figure of the summary, the values that count as worst and best, and its weight. */
+export interface CriterionDoc {
+  /** Plain name as in the summary file: `need_n1_usable_pct`. */
+  figure: string
+  worst: number
+  best: number
+  weight: number
+}
+export interface RankingDoc {
+  criteria: CriterionDoc[]
   gas?: 'none' | 'p676'
   rainRateMmH?: number
   windMs?: number
@@ -171,6 +184,8 @@ export interface StudyDoc {
 /** A default that stands in for something the user did not state; all are listed in the memo. */
 export interface DefaultUsed {
   /** Key path, e.g. 'radar.noiseFigureDb'. */
+  /** How options are ranked; absent: an order of reading only. */
+  ranking?: RankingDoc
   readonly path: string
   readonly value: string | number | boolean | null
   readonly unit: string
@@ -252,3 +267,7 @@ export interface SettledStudy {
   readonly foldRangeM: number
   readonly defaults: readonly DefaultUsed[]
 }
+  /** Those that are worked out. */
+  /** Those the study has given up, with the reason. */
+  readonly rejected: readonly RejectedCandidate[]
+  readonly ranking: RankingDoc | null

@@ -54,9 +54,10 @@ const pickError = (name: string, asked: string, there: readonly number[]) =>
     `use one of ${[...new Set(there)].slice(0, 12).join(', ')}, or leave it out`,
   )
 
-/** The document with the options that were picked and no others. */
+/** The document with the options that were picked and no others; rejected candidates stay in it, they are listed only. */
 export function narrowed(doc: StudyDoc, chosen: readonly OptionRef[]): StudyDoc {
   const candidates = doc.candidates.flatMap((c) => {
+    if (c.rejected !== undefined) return [c]
     const own = chosen.filter((o) => o.candidate === c.id)
     const tiltsDeg = [...new Set(own.map((o) => o.tiltDeg))]
     return own.length === 0 ? [] : [{ ...c, mastHeightsM: [...new Set(own.map((o) => o.heightM))], tiltsDeg }]
