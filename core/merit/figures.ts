@@ -8,6 +8,7 @@ import { floorFigures, type GroundSums, groundSums, RING_WIDTH_M } from './groun
 import { needFigure } from './needs/needFigure.ts'
 import { antennaM, type OptionCells } from './optionCells.ts'
 import { percentile } from './percentile.ts'
+import { type RoadsFigure, roadsFigure } from './roads/index.ts'
 import { clutterLevelsOf, overloadNotes } from './signal/receiverLimits.ts'
 import type { Figures, FloorFigure, NeedFigure } from './types.ts'
 
@@ -15,6 +16,7 @@ import type { Figures, FloorFigure, NeedFigure } from './types.ts'
 interface Kept {
   sums: GroundSums | null
   notes: Figures['marks'] | null
+  roads: { readonly rcsM2: number | undefined; readonly figure: RoadsFigure | null } | null
   readonly needs: Map<string, NeedFigure>
 }
 const keptByClutter = new WeakMap<object, Kept>()
@@ -32,6 +34,7 @@ export function optionFigures(o: OptionCells, needs: readonly SettledNeed[], mar
   const kept = keptOf(o)
   kept.sums ??= groundSums(o)
   kept.notes ??= overloadNotes(o)
+  if (kept.roads?.rcsM2 !== o.vehicleRcsM2 || !kept.roads) kept.roads = { rcsM2: o.vehicleRcsM2, figure: roadsFigure(o) }
   const { sums } = kept
   const sight = sightOf(o)
   const elevations = o.mask.horizon.map((h) => h.elevationDeg)
@@ -57,6 +60,7 @@ export function optionFigures(o: OptionCells, needs: readonly SettledNeed[], mar
     clutterLevels: clutterLevelsOf(o),
     secondTimeAround: o.folded ? secondTimeAround(o.folded, o.place.lat) : { km2: null, notEvaluatedBeyondM: sight.knownToM },
     needs: needFigures(o, needs),
+    roads: kept.roads.figure,
     obstaclesInSight: sight.obstacles,
     marks: [...marks, ...o.suppression.notes, ...kept.notes, ...(o.radar.detector === 'areaCfar' ? [NOTE_AREA_CFAR] : [])],
   }
@@ -66,7 +70,7 @@ export function optionFigures(o: OptionCells, needs: readonly SettledNeed[], mar
 function keptOf(o: OptionCells): Kept {
   let kept = keptByClutter.get(o.clutter)
   if (!kept) {
-    kept = { sums: null, notes: null, needs: new Map() }
+    kept = { sums: null, notes: null, roads: null, needs: new Map() }
     keptByClutter.set(o.clutter, kept)
   }
   return kept

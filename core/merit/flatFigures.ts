@@ -1,4 +1,5 @@
 import { M_PER_NM } from '../units/index.ts'
+import type { RoadsFigure } from './roads/types.ts'
 import type { Figures, FloorFigure, NeedFigure } from './types.ts'
 
 /** Every figure of an option by a plain name that ends in its unit, for the summary file. */
@@ -34,8 +35,23 @@ export function flatFigures(f: Omit<Figures, 'flat'>): Record<string, number | n
   floors(f.floors, '')
   if (f.floorsLowK) floors(f.floorsLowK, '_k1')
   for (const row of f.suppressionBy.rows) flat[`improvement_${row.about}_db`] = row.improvementDb
+  Object.assign(flat, flatRoads(f.roads))
   for (const need of f.needs) for (const [key, value] of Object.entries(flatNeed(need))) flat[`need_${need.needId}_${key}`] = value
   return flat
+}
+
+function flatRoads(r: RoadsFigure | null): Record<string, number | null> {
+  if (!r) return {}
+  const pct = (m: number | null): number | null => (m === null ? null : r.seenM > 0 ? (100 * m) / r.seenM : 0)
+  return {
+    roads_km: r.lengthM / 1000,
+    roads_in_sight_km: r.inSightM / 1000,
+    roads_seen_km: r.seenM / 1000,
+    roads_seen_k2_75_km: r.atHighK === null ? null : r.atHighK.seenM / 1000,
+    ...Object.fromEntries(r.classes.map((c) => [`roads_seen_${c.roadClass}_km`, c.seenM / 1000])),
+    roads_unknown_km: r.unknownM / 1000,
+    roads_blind_pct: pct(r.blindM),
+  }
 }
 
 function flatNeed(n: NeedFigure): Record<string, number | null> {

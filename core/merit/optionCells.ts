@@ -50,6 +50,8 @@ export interface OptionCells {
   readonly lowK: LowKCells | null
   /** What the files of needs hold. */
   readonly places: readonly NeedPlaces[]
+  /** Radar cross-section of a vehicle, m²; absent = 30. */
+  readonly vehicleRcsM2?: number
 }
 
 /** Electrical centre, m MSL. */

@@ -2,6 +2,7 @@ import type { ClutterLevels, SecondTimeAround } from '../clutter/index.ts'
 import type { SuppressionBy } from '../doppler/index.ts'
 import type { HorizonRow } from '../masking/index.ts'
 import type { NeedFigure } from './needs/needTypes.ts'
+import type { RoadsFigure } from './roads/types.ts'
 
 /** Lowest height covered at one ground range, over all azimuths, m MSL. null where nothing is known. */
 export interface FloorFigure {
@@ -52,6 +53,8 @@ export interface Figures {
   /** Ground where clutter of an earlier pulse stands over the noise; where terrain ends sooner than it is looked for, how far it was. */
   readonly secondTimeAround: SecondTimeAround
   readonly needs: readonly NeedFigure[]
+  /** Roads whose vehicles are seen; null where the study has no roads. */
+  readonly roads: RoadsFigure | null
   /** Names of obstacles in sight. */
   readonly obstaclesInSight: readonly string[]
   readonly marks: readonly { readonly mark: string; readonly about: string }[]

@@ -5,7 +5,7 @@ import type { Road } from './types.ts'
 
 /**
  * Roads and railways of a GeoJSON collection: its lines, with `highway` (or `railway`) and `maxspeedKmh` (or OpenStreetMap's `maxspeed`: km/h unless it
- * says mph). Points and areas are passed over. Throws InputError for a speed out of range.
+ * says mph), and `tunnel`. Points and areas are passed over. Throws InputError for a speed out of range.
  */
 export function readRoads(geojson: FeatureCollection, fileName: string): Road[] {
   return geojson.features
@@ -16,10 +16,14 @@ export function readRoads(geojson: FeatureCollection, fileName: string): Road[] 
         name: nameOf(f) || word('ref') || `road ${f.number}`,
         highway: word('highway') || word('railway') || 'unclassified',
         maxspeedKmh: numberOf(f, 'maxspeedKmh', 0, 500, fileName) ?? speedOf(f.properties.maxspeed),
+        tunnel: inTunnel(f.properties.tunnel) || inTunnel(f.properties.covered),
         path: f.path,
       }
     })
 }
+
+/** OpenStreetMap's `tunnel` or `covered`: any word but "no". */
+const inTunnel = (raw: unknown): boolean => raw === true || (typeof raw === 'string' && !/^(|no|false|0)$/.test(raw.trim()))
 
 /** OpenStreetMap's maxspeed: "50", "30 mph"; null for words such as "none". */
 function speedOf(raw: unknown): number | null {

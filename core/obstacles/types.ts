@@ -16,5 +16,7 @@ export interface Road {
   /** OpenStreetMap highway / railway value. */
   readonly highway: string
   readonly maxspeedKmh: number | null
+  /** In a tunnel: its vehicles are not seen. */
+  readonly tunnel: boolean
   readonly path: readonly LonLat[]
 }

@@ -15,7 +15,7 @@ export function keysOf(serial: number, filesSerial: number, study: SettledStudy,
     lowK: `${siteKey(serial, study, candidate, LOW_K)}|${ref.heightM}|cover`,
     clutter,
     folded: `${clutter}|${study.foldRangeM}`,
-    needs: `${clutter}|${study.foldRangeM}|${filesSerial}|${canonicalJson(study.needs)}`,
+    needs: `${clutter}|${study.foldRangeM}|${filesSerial}|${canonicalJson([study.needs, study.vehicleRcsM2])}`,
   }
 }
 

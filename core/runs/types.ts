@@ -2,7 +2,7 @@ import type { LandTable, ModelMark } from '../clutter/index.ts'
 import type { LonLat } from '../geodesy/index.ts'
 import type { GroundCode } from '../landcover/index.ts'
 import type { Figures, Ladder, NeedPlaces } from '../merit/index.ts'
-import type { Obstacle } from '../obstacles/index.ts'
+import type { Obstacle, Road } from '../obstacles/index.ts'
 import type { Ramp, View } from '../paint/index.ts'
 import type { GridShape } from '../raster/index.ts'
 import type { StudyDoc } from '../study/index.ts'
@@ -113,6 +113,7 @@ export interface Ask {
     code: Uint8Array | null
     codes: readonly GroundCode[]
     obstacles: readonly Obstacle[]
+    roads?: readonly Road[]
     verticalErrorM: number
     /** The study's own low-angle land table; null or absent for the built-in one. */
     landTable?: LandTable | null

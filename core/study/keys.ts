@@ -6,7 +6,6 @@ import { studySchema } from './schema.ts'
 /** Keys whose models come later: kept untouched and reported as not assessed, by the object they stand in. */
 const LATER: Readonly<Record<string, readonly string[]>> = {
   radar: ['dwellsNeeded', 'scan'],
-  'needs[]': ['vehicleRcsM2'],
   'candidates[]': ['surveyedErrorM', 'screeningBandDeg', 'confirmed'],
   '': ['screeningBandDeg', 'weights', 'confirmed', 'vehicleRcsM2'],
 }

@@ -216,6 +216,7 @@ export const studySchema = z.looseObject({
   uniformTerrain: z.enum(TERRAIN_NAMES).optional(),
   obstacles: fileOnly.optional(),
   roads: fileOnly.optional(),
+  vehicleRcsM2: num('vehicleRcsM2').optional(),
   facades: fileOnly.optional(),
   tables: z.looseObject({ lowAngleLand: fileName.optional() }).optional(),
   atmosphere: atmosphere.optional(),

@@ -2,6 +2,7 @@ import { WEATHER_DEFAULTS } from '../atmosphere/index.ts'
 import { defaultFoldRangeM } from '../clutter/index.ts'
 import { DEFAULT_STRADDLE_LOSS_DB, requiredRatio } from '../detection/index.ts'
 import { InputError } from '../errors/index.ts'
+import { DEFAULT_VEHICLE_RCS_M2 } from '../obstacles/index.ts'
 import { type AntennaInput, CIRCULAR_DEFAULTS, type CircularInput, type RadarInput } from '../radar/index.ts'
 import { checkDoc } from './checkDoc.ts'
 import { shortestPulseS } from './checkPulses.ts'
@@ -223,6 +224,7 @@ export function settle(doc: StudyDoc, fileName?: string): SettledStudy {
     uniformTerrainMark: bare ? 'default' : null,
     obstacles: doc.obstacles?.file ?? null,
     roads: doc.roads?.file ?? null,
+    vehicleRcsM2: doc.roads ? d.take('vehicleRcsM2', doc.vehicleRcsM2, DEFAULT_VEHICLE_RCS_M2) : (doc.vehicleRcsM2 ?? DEFAULT_VEHICLE_RCS_M2),
     lowAngleLandTable: doc.tables?.lowAngleLand ?? null,
     atmosphere,
     radar,

@@ -172,6 +172,8 @@ export interface StudyDoc {
   uniformTerrain?: TerrainName
   obstacles?: { file: string }
   roads?: { file: string }
+  /** Radar cross-section of a vehicle on a road, m². */
+  vehicleRcsM2?: number
   facades?: { file: string }
   tables?: { lowAngleLand?: string }
   atmosphere?: AtmosphereDoc
@@ -243,6 +245,8 @@ export interface SettledStudy {
   readonly uniformTerrainMark: 'default' | null
   readonly obstacles: string | null
   readonly roads: string | null
+  /** Radar cross-section of a vehicle, m². */
+  readonly vehicleRcsM2: number
   readonly lowAngleLandTable: string | null
   readonly atmosphere: {
     readonly effectiveEarthFactor: number

@@ -1,5 +1,5 @@
 import type { GroundCode } from '../landcover/index.ts'
-import type { Obstacle } from '../obstacles/index.ts'
+import type { Obstacle, Road } from '../obstacles/index.ts'
 import { bilinear, type GridPosition, type GridShape, gridPosition, postingM } from '../raster/index.ts'
 import type { Work } from '../work/index.ts'
 import { buildRelief } from './relief.ts'
@@ -14,6 +14,7 @@ export interface GroundParts {
   readonly code: Uint8Array | null
   readonly codes: readonly GroundCode[]
   readonly obstacles: readonly Obstacle[]
+  readonly roads?: readonly Road[]
   /** 90 % linear error, m. */
   readonly verticalErrorM: number
 }
@@ -25,7 +26,7 @@ export function* buildGround(parts: GroundParts): Work<Ground> {
   if (parts.code && parts.code.length !== posts) throw new RangeError(`code has ${parts.code.length} posts, its shape ${posts}`)
   if (parts.codes.length === 0 || parts.codes.length > 255) throw new RangeError(`1 to 255 ground codes, not ${parts.codes.length}`)
   const relief = yield* buildRelief(parts.shape, parts.heightM)
-  return { ...parts, relief, postingM: postingM(parts.shape).meanM }
+  return { ...parts, roads: parts.roads ?? [], relief, postingM: postingM(parts.shape).meanM }
 }
 
 const positions = new WeakMap<GridShape, GridPosition>()

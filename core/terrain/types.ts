@@ -1,5 +1,5 @@
 import type { GroundCode } from '../landcover/index.ts'
-import type { Obstacle } from '../obstacles/index.ts'
+import type { Obstacle, Road } from '../obstacles/index.ts'
 import type { GridShape, RasterGrid } from '../raster/index.ts'
 
 export const RELIEF = { low: 0, high: 1, mountains: 2, unknown: 255 } as const
@@ -17,6 +17,8 @@ export interface Ground {
   /** One value of RELIEF per block of the raster. */
   readonly relief: RasterGrid<Uint8Array>
   readonly obstacles: readonly Obstacle[]
+  /** Roads and railways, whose vehicles may be seen; they mask nothing. */
+  readonly roads: readonly Road[]
   /** 90 % linear error of the heights, m. */
   readonly verticalErrorM: number
   /** Mean posting at mid-raster, m. */

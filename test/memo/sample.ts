@@ -234,6 +234,7 @@ function sampleFigures(siteGroundM: number, heightM: number, screen: number, see
         notAssessed: 'its file has not been read',
       },
     ],
+    roads: null,
     obstaclesInSight: ['Grey mast', 'Silo at Wend'],
     marks: [
       { mark: 'from memory', about: 'low-angle land table' },

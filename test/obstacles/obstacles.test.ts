@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { InputError, readFeatures, readObstacles, readRoads } from '../../core/index.ts'
+import { InputError, readFeatures, readObstacles, readRoads, roadClassOf } from '../../core/index.ts'
 
 const features = (...list: [string, unknown, object][]) =>
   readFeatures(
@@ -55,6 +55,8 @@ describe('roads', () => {
         ['LineString', LINE, { railway: 'rail', maxspeed: '30 mph' }],
         ['LineString', LINE, { ref: 'B 7', highway: 'motorway', maxspeed: 'none' }],
         ['Point', [1, 2], { highway: 'crossing' }],
+        ['LineString', LINE, { highway: 'trunk', tunnel: 'yes' }],
+        ['LineString', LINE, { highway: 'trunk', tunnel: 'no' }],
       ),
       'r.geojson',
     )
@@ -62,9 +64,16 @@ describe('roads', () => {
       ['Coast road', 'primary'],
       ['road 2', 'rail'],
       ['B 7', 'motorway'],
+      ['road 5', 'trunk'],
+      ['road 6', 'trunk'],
     ])
+    expect(got.map((r) => r.tunnel)).toEqual([false, false, false, true, false])
     expect(got[0].maxspeedKmh).toBe(70)
     expect(got[1].maxspeedKmh).toBeCloseTo(48.28, 2)
     expect(got[2].maxspeedKmh).toBeNull()
+  })
+  it('classes: slip roads with their road, rails together, ways without vehicles none', () => {
+    const of = ['motorway_link', 'trunk', 'tertiary', 'residential', 'light_rail', 'cycleway', 'construction', 'abandoned'].map(roadClassOf)
+    expect(of).toEqual(['motorway', 'trunk', 'other', 'other', 'rail', null, null, null])
   })
 })
