@@ -26,6 +26,7 @@ const id = z.string().superRefine((value, ctx) => {
   const found = `identifier is ${JSON.stringify(value.length > 40 ? `${value.slice(0, 40)}…` : value)}`
   ctx.addIssue({ code: 'custom', params: { code: 'id', found, remedy: 'use 1 to 32 of the characters A-Z a-z 0-9 _ -' } })
 })
+const origins = z.record(z.string(), z.string())
 const fileOnly = z.looseObject({ file: fileName })
 
 const terrainFile = z.looseObject({
@@ -140,6 +141,7 @@ const radar = z.looseObject({
   cfarReferenceCells: num('radar.cfarReferenceCells').nullable().optional(),
   recoveryS: num('radar.recoveryS').optional(),
   receiverLinearRangeDb: num('radar.receiverLinearRangeDb').nullable().optional(),
+  origins: origins.optional(),
 })
 /** One height or [floor, ceiling]. */
 const levelOrBand = z.unknown().superRefine((value, ctx) => {
@@ -173,8 +175,6 @@ const need = z.looseObject({
   file: fileName.optional(),
   speedMs: num('needs[].speedMs').nullable().optional(),
   qnhHpa: num('needs[].qnhHpa').nullable().optional(),
-})
-const candidate = z.looseObject({
   origins: origins.optional(),
 })
 const reason = z.string().superRefine((value, ctx) => {
@@ -189,6 +189,8 @@ const figureName = z.string().superRefine((value, ctx) => {
   if (FIGURE.test(value)) return
   const found = `figure is ${JSON.stringify(value.length > 40 ? `${value.slice(0, 40)}…` : value)}`
   ctx.addIssue({ code: 'custom', params: { code: 'figure', found, remedy: 'use a name of summary.json, such as "clutter_over_40_km2"' } })
+})
+const candidate = z.looseObject({
   id,
   name: z.string().optional(),
   lon: num('candidates[].lon'),
@@ -198,8 +200,6 @@ const figureName = z.string().superRefine((value, ctx) => {
   tiltsDeg: z.array(num('candidates[].tiltsDeg[]')).nullable().optional(),
   clearingRadiusM: num('candidates[].clearingRadiusM').optional(),
   notes: z.string().optional(),
-})
-
   rejected: reason.optional(),
 })
 const criterion = z.looseObject({
@@ -207,6 +207,8 @@ const criterion = z.looseObject({
   worst: num('ranking.criteria[].worst'),
   best: num('ranking.criteria[].best'),
   weight: num('ranking.criteria[].weight'),
+})
+
 export const studySchema = z.looseObject({
   format: z.literal('sightfell-study'),
   version: z.literal(1),
@@ -223,10 +225,10 @@ export const studySchema = z.looseObject({
   radar,
   needs: z.array(need).optional(),
   candidates: z.array(candidate),
+  ranking: z.looseObject({ criteria: z.array(criterion) }).optional(),
   run: z
     .looseObject({
       maxRangeM: num('run.maxRangeM').optional(),
-  ranking: z.looseObject({ criteria: z.array(criterion) }).optional(),
       rangeStepM: num('run.rangeStepM').optional(),
       azimuthStepDeg: num('run.azimuthStepDeg').optional(),
       foldRangeM: num('run.foldRangeM').optional(),
