@@ -1,4 +1,14 @@
-import type { CandidateDoc, LonLat, NeedDoc, StudyDoc } from '../../core/index.ts'
+import {
+  type CandidateDoc,
+  type LonLat,
+  type NeedDoc,
+  needsOfSet,
+  type RadarDoc,
+  radarOfTemplate,
+  STARTING_SETS,
+  type StudyDoc,
+  withoutOrigin,
+} from '../../core/index.ts'
 import { freeCandidateId, freeNeedId, withValue } from './draft.ts'
 import type { StudyStore } from './studyStore.ts'
 
@@ -13,7 +23,10 @@ const changeCandidate = (doc: StudyDoc, id: string, part: Partial<CandidateDoc>)
 
 /** Sets or (undefined) clears one field by its key path. `words` names it in undo: "changed tilt". */
 export const setField = (store: StudyStore, path: string, value: unknown, words: string): void =>
-  store.getState().edit(words, (doc) => withValue(doc, path, value))
+  store.getState().edit(words, (doc) => {
+    const changed = withValue(doc, path, value)
+    return changed === doc ? doc : withoutOrigin(changed, path)
+  })
 
 export const renameStudy = (store: StudyStore, name: string): void =>
   store.getState().edit('renamed the study', (doc) => (name === doc.name ? doc : { ...doc, name }))
@@ -80,3 +93,16 @@ export function addNeed(store: StudyStore): string {
 }
 export const removeNeed = (store: StudyStore, id: string): void =>
   store.getState().edit('removed a need', (doc) => ({ ...doc, needs: (doc.needs ?? []).filter((n) => n.id !== id) }))
+
+/** A radar in place of the one there is, with what the study says of its values. */
+export const takeRadar = (store: StudyStore, radar: RadarDoc): void =>
+  store.getState().edit(`took the radar ${radar.name ?? 'kept here'}`, (doc) => ({ ...doc, radar: structuredClone(radar) }))
+export const takeTemplate = (store: StudyStore, id: string): void => takeRadar(store, radarOfTemplate(id))
+/** Radar and needs of a kind of work, in place of those there are. */
+export function takeStartingSet(store: StudyStore, id: string): void {
+  const set = STARTING_SETS.find((s) => s.id === id)
+  if (!set) return
+  store
+    .getState()
+    .edit(`started with ${set.name.toLowerCase()}`, (doc) => ({ ...doc, radar: radarOfTemplate(set.radar), needs: needsOfSet(id) }))
+}

@@ -9,6 +9,9 @@ export type Theme = 'paper' | 'night'
 /** What stands over the lower half of the map. */
 export type OpenChart = 'profile' | 'ledger' | 'figure' | null
 
+/** What is asked over the whole page. */
+export type OpenDialog = 'templates' | 'keys' | 'commands' | 'studies' | null
+
 /** What is looked at: kept over a reload, never undone, never saved with the study. */
 export interface ViewState {
   readonly step: StepId
@@ -32,6 +35,7 @@ export interface ViewState {
   readonly profileAzimuthDeg: number | null
   /** The next click on the map places a candidate. */
   readonly placing: boolean
+  readonly dialog: OpenDialog
   /** Edits wait for "Run" instead of running by themselves. */
   readonly hold: boolean
   set(part: Partial<Omit<ViewState, 'set'>>): void
@@ -57,6 +61,7 @@ export function createViewStore(storage?: Storage, prefersDark = false) {
         figure: null,
         profileAzimuthDeg: null,
         placing: false,
+        dialog: null,
         hold: false,
         set: (part) => set(part),
       }),
@@ -64,7 +69,7 @@ export function createViewStore(storage?: Storage, prefersDark = false) {
         name: KEY,
         version: 1,
         storage: storage ? createJSONStorage(() => storage) : undefined,
-        partialize: ({ set: _set, placing: _placing, ...kept }) => kept,
+        partialize: ({ set: _set, placing: _placing, dialog: _dialog, ...kept }) => kept,
       },
     ),
   )

@@ -7,11 +7,13 @@ export interface DialogProps {
   readonly onClose: () => void
   readonly children: ReactNode
   readonly actions?: ReactNode
+  /** Two columns side by side. */
+  readonly wide?: boolean
 }
-export function Dialog({ title, open, onClose, children, actions }: DialogProps) {
+export function Dialog({ title, open, onClose, children, actions, wide }: DialogProps) {
   return (
     <ModalOverlay className="veil" isOpen={open} onOpenChange={(now) => !now && onClose()} isDismissable>
-      <Modal className="dialog-frame">
+      <Modal className={wide ? 'dialog-frame wide' : 'dialog-frame'}>
         <AriaDialog className="dialog">
           <Heading slot="title" level={2}>
             {title}

@@ -21,6 +21,8 @@ export interface NumberFieldProps {
   readonly mark?: string
   /** The study cannot run without it. */
   readonly required?: boolean
+  /** Word beside a stated value: where it comes from. */
+  readonly marks?: ReactNode
   readonly help?: ReactNode
   /** What is wrong with the stored value. */
   readonly trouble?: string | null
@@ -50,7 +52,7 @@ export function NumberField(props: NumberFieldProps) {
       unit={face.unit}
       numeric
       placeholder={stated ? undefined : required ? 'needed' : standIn}
-      marks={!stated && !required && typeof fallback === 'number' ? <Mark>{props.mark ?? 'default'}</Mark> : null}
+      marks={stated ? props.marks : !required && typeof fallback === 'number' ? <Mark>{props.mark ?? 'default'}</Mark> : null}
       help={props.help}
       trouble={props.trouble}
       shape={props.shape}

@@ -9,6 +9,7 @@ import { shortestPulseS } from './checkPulses.ts'
 import { instrumentedRangeOf } from './crossChecks.ts'
 import { defaultAzimuthStepDeg, defaultRangeStepM, evenStepDeg, gateOfM } from './grid.ts'
 import { limitOf } from './limits.ts'
+import { originsOf } from './origins.ts'
 import { settlePulses } from './settlePulses.ts'
 import type {
   AntennaDoc,
@@ -239,6 +240,7 @@ export function settle(doc: StudyDoc, fileName?: string): SettledStudy {
     defaults: d.used,
   }
 }
+    origins: originsOf(doc),
 
 /** Every option of a study: candidate × mast height × tilt, in the order written. */
 export function optionsOf(study: SettledStudy): { candidate: string; heightM: number; tiltDeg: number }[] {

@@ -91,6 +91,8 @@ export interface RadarDoc {
   cfarReferenceCells?: number | null
   recoveryS?: number
   receiverLinearRangeDb?: number | null
+  /** Where values come from, by key path inside the radar: `from memory: ITU-R M.1464, radar C`. */
+  origins?: Record<string, string>
 }
 export interface NeedDoc {
   id: string
@@ -113,6 +115,8 @@ export interface NeedDoc {
   speedMs?: number | null
   /** Pressure setting that turns flight levels of a fix file into heights, hPa. */
   qnhHpa?: number | null
+  /** Where values come from, by key path inside the need. */
+  origins?: Record<string, string>
 }
 export interface CandidateDoc {
   id: string
@@ -191,6 +195,14 @@ export interface DefaultUsed {
   readonly path: string
   readonly value: string | number | boolean | null
   readonly unit: string
+}
+/** Where a value of the study comes from, as the study says. */
+export interface OriginOf {
+  /** Key path, e.g. 'radar.antenna.gainDbi'. */
+  readonly path: string
+  readonly value: unknown
+  /** `from memory: ITU-R M.1464, radar C`. */
+  readonly origin: string
 }
 export interface SettledNeed {
   readonly id: string
@@ -275,3 +287,5 @@ export interface SettledStudy {
   /** Those the study has given up, with the reason. */
   readonly rejected: readonly RejectedCandidate[]
   readonly ranking: RankingDoc | null
+  /** Values taken from a template, with where each comes from. */
+  readonly origins: readonly OriginOf[]

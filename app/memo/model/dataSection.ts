@@ -1,5 +1,6 @@
 import type { DefaultUsed } from '../../../core/index.ts'
 import {
+  faceValue,
   formatAngle,
   formatBand,
   formatBandwidth,
@@ -11,6 +12,8 @@ import {
   formatPulse,
   formatRange,
   formatSetting,
+  labelOf,
+  tied,
   withMetric,
 } from '../../words/index.ts'
 import { value } from './cells.ts'
@@ -39,6 +42,18 @@ export function dataBlocks(input: MemoInput): Block[] {
       right: [pairs('antenna', 'Antenna, suppression and grid', antennaRows(input))],
     },
   ]
+  if (study.origins.length > 0)
+    blocks.push({
+      kind: 'table',
+      id: 'origins',
+      title: 'Values taken from a template, and where they come from',
+      columns: [
+        { head: 'Value', width: 110 },
+        { head: '', align: 'right' },
+        { head: 'Origin', width: 'fill' },
+      ],
+      rows: study.origins.map((o): Cell[] => [originLabel(o.path, study), value(faceValue(o.path, o.value, input.system)), tied(o.origin)]),
+    })
   if (study.defaults.length > 0)
     blocks.push({
       kind: 'table',
@@ -55,6 +70,11 @@ export function dataBlocks(input: MemoInput): Block[] {
   else blocks.push({ kind: 'paragraph', text: 'No default was used: everything is stated in the study.' })
   if (input.warnings && input.warnings.length > 0) blocks.push({ kind: 'caution', texts: input.warnings })
   return blocks
+}
+/** `Gain`; of a need with its name: `Vectoring area: Pd`. */
+function originLabel(path: string, study: MemoInput['study']): string {
+  const at = /^needs\[(\d+)\]/.exec(path)
+  return at ? `${study.needs[Number(at[1])].name}: ${labelOf(path)}` : labelOf(path)
 }
 /** 64 hex digits break badly: two lines of 32. */
 const shaLines = (sha: string | null): string => (sha === null ? 'not taken' : `${sha.slice(0, 32)}\n${sha.slice(32)}`)

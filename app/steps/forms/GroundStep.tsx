@@ -73,6 +73,7 @@ function NoTerrain() {
       <div className="row">
         <Button onPress={picker.open}>Pick files</Button>
         <Button onPress={() => void session.openDemo()}>Open the demo study</Button>
+        <Button onPress={() => session.view.getState().set({ dialog: 'templates' })}>Start from a kind of work</Button>
       </div>
       {picker.input}
     </div>

@@ -1,5 +1,5 @@
-import { setField, valueAt } from '../../document/index.ts'
-import { Check, CommitField, Mark } from '../../ui/index.ts'
+import { hasStartingRadar, setField, valueAt } from '../../document/index.ts'
+import { Button, Check, CommitField, Mark } from '../../ui/index.ts'
 import {
   CIRCULAR_FIELDS,
   COSECANT_FIELD,
@@ -15,8 +15,8 @@ import {
   SUPPRESSION_FIELDS,
   SUPPRESSION_KINDS,
 } from '../../words/index.ts'
-import { useDoc, useSession } from '../session/index.ts'
-import { DocChoice, DocNumber, DocNumbers, Group } from './fields.tsx'
+import { sentenceOf, useDoc, useSession } from '../session/index.ts'
+import { DocChoice, DocNumber, DocNumbers, Group, OriginMark } from './fields.tsx'
 import { PairsField } from './PairsField.tsx'
 import { Problems } from './Problems.tsx'
 import { Remarks } from './Remarks.tsx'
@@ -25,15 +25,36 @@ const HZ = { unit: 'Hz', size: 1 }
 
 /** Every field of the radar, of the air it works in and of the polar grid. */
 export function RadarStep() {
-  const { study } = useSession()
+  const { study, view, radars, notices } = useSession()
   const name = useDoc((d) => d.radar.name ?? '')
   const coherent = useDoc((d) => d.radar.coherentTransmitter)
   const pattern = useDoc((d) => d.radar.antenna.elevationPattern ?? 'gaussian')
   const suppression = useDoc((d) => d.radar.suppression?.kind ?? 'none')
   const circular = useDoc((d) => d.radar.polarisation === 'circular')
   const stc = useDoc((d) => d.radar.stc?.kind ?? 'none')
+  const named = useDoc((d) => !hasStartingRadar(d) && (d.radar.name ?? '') !== '')
+  const doc = useDoc((d) => d.radar)
   return (
     <>
+      <div className="row">
+        <Button small onPress={() => view.getState().set({ dialog: 'templates' })}>
+          Start from…
+        </Button>
+        <Button
+          small
+          look="quiet"
+          disabled={!named}
+          onPress={() =>
+            void radars
+              .getState()
+              .keep(doc)
+              .then(() => notices.getState().say(`${doc.name} is kept for other studies on this machine`))
+              .catch((error) => notices.getState().say(sentenceOf(error), 'bad'))
+          }
+        >
+          Keep this radar
+        </Button>
+      </div>
       <CommitField
         label="Name"
         text={name}
@@ -52,7 +73,7 @@ export function RadarStep() {
         <DocNumbers path="radar.prfHz" label="PRF" face={HZ} required />
         <DocChoice path="radar.prfMode" label="PRF change" choices={PRF_MODES} fallback="single" />
         <Check value={coherent ?? false} onChange={(v) => setField(study, 'radar.coherentTransmitter', v, 'changed coherence')}>
-          Coherent transmitter {coherent === undefined ? <Mark>default</Mark> : null}
+          Coherent transmitter {coherent === undefined ? <Mark>default</Mark> : <OriginMark path="radar.coherentTransmitter" />}
         </Check>
       </Group>
       <Group title="Antenna">

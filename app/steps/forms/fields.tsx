@@ -2,7 +2,7 @@ import type { ReactNode } from 'react'
 import { type DefaultUsed, limitOf, type StudyDoc } from '../../../core/index.ts'
 import { problemsOf, setField, valueAt } from '../../document/index.ts'
 import { CommitField, Mark, NumberField, readNumbers, Select } from '../../ui/index.ts'
-import { type FaceUnit, type FieldWords, fromFace, type UnitKind, type UnitSystem, unitOf } from '../../words/index.ts'
+import { type FaceUnit, type FieldWords, fromFace, originMark, type UnitKind, type UnitSystem, unitOf } from '../../words/index.ts'
 import { useDoc, useSession, useView } from '../session/index.ts'
 import { settledOf } from '../settled.ts'
 
@@ -17,6 +17,18 @@ const troubleAt = (doc: StudyDoc, path: string): string | null => {
 /** Face unit of a field under the unit switch. */
 export const faceOf = (face: FieldWords['face'] | UnitKind, system: UnitSystem): FaceUnit =>
   typeof face === 'string' ? { unit: unitOf(face, system), size: fromFace(face, 1, system) } : face
+
+/** Where the value at a key path comes from, in a word; nothing where the study does not say. */
+export function OriginMark({ path }: { path: string }) {
+  const origin = useDoc((d) => originAt(d, path))
+  const mark = originMark(origin)
+  return mark ? <span title={origin}>{mark === 'read' ? <span className="ink-3 small">read</span> : <Mark>{mark}</Mark>}</span> : null
+}
+const originAt = (doc: StudyDoc, path: string): string | undefined => {
+  const at = /^(radar|needs\[\d+\])\.(.+)$/.exec(path)
+  const origins = at ? (valueAt(doc, at[1]) as { origins?: Record<string, string> } | undefined)?.origins : undefined
+  return origins?.[at?.[2] ?? '']
+}
 
 /** A number of the study at its key path, with unit, range, default and what is wrong with it. */
 export function DocNumber({ of }: { of: FieldWords }) {
@@ -36,6 +48,7 @@ export function DocNumber({ of }: { of: FieldWords }) {
       fallbackWords={of.emptyWords}
       required={of.required}
       trouble={trouble}
+      marks={<OriginMark path={of.path} />}
     />
   )
 }
@@ -58,7 +71,7 @@ export function DocChoice<T extends string>({ path, label, choices, fallback, on
       value={value ?? fallback}
       choices={choices}
       onChange={onChange ?? ((v) => setField(session.study, path, v, `changed ${label.toLowerCase()}`))}
-      marks={value === undefined ? <Mark>default</Mark> : null}
+      marks={value === undefined ? <Mark>default</Mark> : <OriginMark path={path} />}
     />
   )
 }
@@ -96,6 +109,7 @@ export function DocNumbers({
       numeric
       help={help}
       trouble={trouble}
+      marks={<OriginMark path={path} />}
     />
   )
 }

@@ -4,6 +4,7 @@ import {
   autosave,
   createFileStore,
   createGroundStore,
+  createOwnRadars,
   createResultsStore,
   createSaveStore,
   createStudyStore,
@@ -13,6 +14,7 @@ import {
   fileStem,
   forgetResults,
   type GroundStore,
+  type OwnRadarStore,
   openShelf,
   packStudy,
   type ResultsStore,
@@ -38,6 +40,8 @@ export interface Session {
   readonly ground: GroundStore
   readonly save: SaveStore
   readonly notices: NoticeStore
+  /** Radars the user keeps for other studies. */
+  readonly radars: OwnRadarStore
   readonly client: StudyClient
   /** Dropped or picked files; `as` says what they are. */
   take(files: readonly File[], as?: FileRole): Promise<void>
@@ -65,6 +69,8 @@ export async function startSession(client: StudyClient, readGround: ReadGround):
   const notices = createNoticeStore()
   const { say } = notices.getState()
   const shelf = await openShelf().catch(() => noShelf())
+  const own = createOwnRadars(shelf)
+  void own.load().catch(() => {})
   const saver = autosave(study, files, save, shelf, window.localStorage, Date.now)
 
   client.listen((tell) => {
@@ -108,6 +114,7 @@ export async function startSession(client: StudyClient, readGround: ReadGround):
     ground,
     save,
     notices,
+    radars: own.store,
     client,
     take: (dropped, as) =>
       guarded(async () => {

@@ -8,6 +8,7 @@ import { cautionsForLayer, STEP_WORDS } from '../../words/index.ts'
 import { MemoAside } from '../memo/MemoAside.tsx'
 import { MapSlot, RulerSlot, StripSlot } from '../panes/MapSlot.tsx'
 import { useDoc, useSession, useView } from '../session/index.ts'
+import { Dialogs } from './Dialogs.tsx'
 import { FaultBoundary } from './FaultBoundary.tsx'
 import { StepIndex } from './StepIndex.tsx'
 import { TopBar } from './TopBar.tsx'
@@ -97,6 +98,9 @@ export function Shell() {
           <MemoAside />
         </FaultBoundary>
       </aside>
+      <FaultBoundary>
+        <Dialogs />
+      </FaultBoundary>
       {dragging ? <div className="drop-veil">Drop terrain, land cover, obstacles, roads, a study or a package</div> : null}
     </div>
   )

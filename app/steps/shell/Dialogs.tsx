@@ -1,0 +1,18 @@
+import { type ComponentType, lazy, Suspense } from 'react'
+import type { OpenDialog } from '../../document/index.ts'
+import { useView } from '../session/index.ts'
+
+/** What is asked over the whole page; each comes down on its first use. */
+const DIALOGS: Partial<Record<NonNullable<OpenDialog>, ComponentType>> = {
+  templates: lazy(() => import('../forms/TemplateDialog.tsx').then((m) => ({ default: m.TemplateDialog }))),
+}
+
+export function Dialogs() {
+  const dialog = useView((v) => v.dialog)
+  const Open = dialog === null ? undefined : DIALOGS[dialog]
+  return Open ? (
+    <Suspense fallback={null}>
+      <Open />
+    </Suspense>
+  ) : null
+}
