@@ -1,7 +1,7 @@
 import type { LandTable, ModelMark } from '../clutter/index.ts'
 import type { LonLat } from '../geodesy/index.ts'
 import type { GroundCode } from '../landcover/index.ts'
-import type { Figures, Ladder, NeedPlaces } from '../merit/index.ts'
+import type { CutWindow, Figures, Ladder, NeedPlaces, VerticalCut } from '../merit/index.ts'
 import type { Obstacle, Road } from '../obstacles/index.ts'
 import type { Ramp, View } from '../paint/index.ts'
 import type { GridShape } from '../raster/index.ts'
@@ -130,6 +130,8 @@ export interface Ask {
   map: { view: View; layer: LayerId; option: OptionRef }
   probe: { at: LonLat }
   profile: { azimuthDeg: number; option: OptionRef }
+  /** The plane over one azimuth for the target of a need; null: the first need of the study. */
+  vertical: { option: OptionRef; need: string | null; window: CutWindow }
   ledger: { at: LonLat; option: OptionRef }
   ladder: { candidate: string }
   groundAt: { at: readonly LonLat[] }
@@ -146,6 +148,8 @@ export interface Answer {
   map: { rgba: Uint8ClampedArray; view: View }
   probe: Probe | null
   profile: Profile
+  /** null where the study states no need. */
+  vertical: VerticalCut | null
   ledger: CellLedger
   ladder: Ladder
   groundAt: readonly (number | null)[]
