@@ -225,7 +225,9 @@ export function settle(doc: StudyDoc, fileName?: string): SettledStudy {
     uniformTerrainMark: bare ? 'default' : null,
     obstacles: doc.obstacles?.file ?? null,
     roads: doc.roads?.file ?? null,
-    vehicleRcsM2: doc.roads ? d.take('vehicleRcsM2', doc.vehicleRcsM2, DEFAULT_VEHICLE_RCS_M2) : (doc.vehicleRcsM2 ?? DEFAULT_VEHICLE_RCS_M2),
+    vehicleRcsM2: doc.roads
+      ? d.take('vehicleRcsM2', doc.vehicleRcsM2, DEFAULT_VEHICLE_RCS_M2)
+      : (doc.vehicleRcsM2 ?? DEFAULT_VEHICLE_RCS_M2),
     lowAngleLandTable: doc.tables?.lowAngleLand ?? null,
     atmosphere,
     radar,
@@ -238,9 +240,9 @@ export function settle(doc: StudyDoc, fileName?: string): SettledStudy {
     run: { maxRangeM, rangeStepM, azimuthStepDeg },
     foldRangeM: d.take('run.foldRangeM', doc.run?.foldRangeM, defaultFoldRangeM(radar)),
     defaults: d.used,
+    origins: originsOf(doc),
   }
 }
-    origins: originsOf(doc),
 
 /** Every option of a study: candidate × mast height × tilt, in the order written. */
 export function optionsOf(study: SettledStudy): { candidate: string; heightM: number; tiltDeg: number }[] {

@@ -128,10 +128,6 @@ export interface CandidateDoc {
   tiltsDeg?: number[] | null
   clearingRadiusM?: number
   notes?: string
-}
-export interface AtmosphereDoc {
-  effectiveEarthFactor?: number
-  earthRadiusM?: number | null
   /** Why the candidate is out: it is listed with this reason and no longer worked out. */
   rejected?: string
 }
@@ -145,6 +141,10 @@ export interface CriterionDoc {
 }
 export interface RankingDoc {
   criteria: CriterionDoc[]
+}
+export interface AtmosphereDoc {
+  effectiveEarthFactor?: number
+  earthRadiusM?: number | null
   gas?: 'none' | 'p676'
   rainRateMmH?: number
   windMs?: number
@@ -184,14 +184,14 @@ export interface StudyDoc {
   radar: RadarDoc
   needs?: NeedDoc[]
   candidates: CandidateDoc[]
+  /** How options are ranked; absent: an order of reading only. */
+  ranking?: RankingDoc
   run?: RunDoc
 }
 
 /** A default that stands in for something the user did not state; all are listed in the memo. */
 export interface DefaultUsed {
   /** Key path, e.g. 'radar.noiseFigureDb'. */
-  /** How options are ranked; absent: an order of reading only. */
-  ranking?: RankingDoc
   readonly path: string
   readonly value: string | number | boolean | null
   readonly unit: string
@@ -242,6 +242,13 @@ export interface SettledCandidate {
   readonly clearingRadiusM: number
   readonly notes: string
 }
+export interface RejectedCandidate {
+  readonly id: string
+  readonly name: string
+  readonly lon: number
+  readonly lat: number
+  readonly reason: string
+}
 /** The document with every default filled in: what the engine runs on. */
 export interface SettledStudy {
   readonly name: string
@@ -277,15 +284,15 @@ export interface SettledStudy {
   }
   readonly radar: RadarInput
   readonly needs: readonly SettledNeed[]
+  /** Those that are worked out. */
   readonly candidates: readonly SettledCandidate[]
+  /** Those the study has given up, with the reason. */
+  readonly rejected: readonly RejectedCandidate[]
+  readonly ranking: RankingDoc | null
   readonly run: { readonly maxRangeM: number; readonly rangeStepM: number; readonly azimuthStepDeg: number }
   /** Slant range to which clutter that folds is looked for, m. */
   readonly foldRangeM: number
   readonly defaults: readonly DefaultUsed[]
-}
-  /** Those that are worked out. */
-  /** Those the study has given up, with the reason. */
-  readonly rejected: readonly RejectedCandidate[]
-  readonly ranking: RankingDoc | null
   /** Values taken from a template, with where each comes from. */
   readonly origins: readonly OriginOf[]
+}
