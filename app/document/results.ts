@@ -41,8 +41,9 @@ export type ResultsStore = ReturnType<typeof createResultsStore>
 export function takeTell(store: ResultsStore, tell: WorkerTell, now: number): void {
   const state = store.getState()
   if (tell.kind === 'figures') {
-    // always the whole list: what is not in it no longer holds
-    const byOption = new Map(tell.results.map((r) => [optionKey(r.ref), r]))
+    const fresh = new Map(tell.results.map((r) => [r.serial, r]))
+    const had = new Map([...state.byOption.values()].map((r) => [r.serial, r]))
+    const byOption = new Map(tell.holds.flatMap((serial) => fresh.get(serial) ?? had.get(serial) ?? []).map((r) => [optionKey(r.ref), r]))
     store.setState({ byOption, serial: state.serial + 1, failure: null })
   } else if (tell.kind === 'status') {
     const over = tell.done >= tell.total

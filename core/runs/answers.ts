@@ -1,6 +1,6 @@
 import { clutterToNoise, foldedClutter } from '../clutter/index.ts'
 import { sightAlong, sweep } from '../masking/index.ts'
-import { isLowK, ladderHeightsM, ladderOf, type OptionCells, type Rung, rung, verticalCut } from '../merit/index.ts'
+import { isLowK, ladderHeightsM, ladderOf, type OptionCells, type Rung, roadLines, rung, seeRoads, verticalCut } from '../merit/index.ts'
 import { polarShape, previewShape } from '../polar/index.ts'
 import { buildGround, groundAt } from '../terrain/index.ts'
 import { share, type Work } from '../work/index.ts'
@@ -46,6 +46,7 @@ export class Answers {
     profile: (body) => this.profile(body),
     vertical: (body) => this.vertical(body),
     ledger: (body) => this.ledger(body),
+    roads: (body) => this.roads(body),
     ladder: (body) => this.ladder(body),
     groundAt: (body) => this.groundAt(body),
   }
@@ -75,7 +76,7 @@ export class Answers {
 
   // biome-ignore lint/correctness/useYield: an answer that needs no slices
   private *takeStudy(body: Ask['study']): Work<null> {
-    this.tells.push(...this.engine.setStudy(body.doc, body.show, body.hold), { kind: 'dirty' })
+    this.tells.push(...this.engine.setStudy(body.doc, body.show, body.hold, body.have), { kind: 'dirty' })
     return null
   }
 
@@ -190,6 +191,13 @@ export class Answers {
     const folded = held?.folded ? { folded: held.folded } : {}
     const options = { ...clutterOptions(study, ground, this.engine.landTable, place, body.option.heightM), ...sideLobes, ...folded }
     return cellLedger(ground, study, body.option, body.at, options)
+  }
+
+  private *roads(body: Ask['roads']): Work<EngineAnswer['roads']> {
+    const o = this.engine.cells(body.option)
+    if (!o) return null
+    yield* seeRoads(o)
+    return roadLines(o)
   }
 
   private *ladder(body: Ask['ladder']): Work<EngineAnswer['ladder']> {

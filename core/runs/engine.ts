@@ -34,7 +34,10 @@ export class Engine {
   private readonly cache: PolarCache
   private filesSerial = 0
   private suppression: { readonly study: SettledStudy; readonly by: SuppressionBy } | null = null
-  private readonly results = new Map<string, OptionResult>()
+  private readonly found = new Map<string, OptionResult>()
+  private made = 0
+  /** Serials of the results the page has. */
+  private told = new Set<number>()
   private readonly failed = new Set<string>()
 
   /** `helpers`: threads that take a share of sweeps. */
@@ -52,12 +55,16 @@ export class Engine {
     this.filesSerial++
     this.suppression = null
     this.cache.clear()
-    this.results.clear()
+    this.found.clear()
     this.failed.clear()
   }
 
-  /** Takes the whole document; returns what the user should be told. A document that cannot be settled leaves no options. */
-  setStudy(doc: StudyDoc, shown: Shown, hold: boolean): Tell[] {
+  /**
+   * Takes the whole document; returns what the user should be told. A document that cannot be settled leaves no options. `have`: serials of the
+   * results the page has.
+   */
+  setStudy(doc: StudyDoc, shown: Shown, hold: boolean, have: readonly number[] = []): Tell[] {
+    this.told = new Set(have)
     this.shown = shown
     this.hold = hold
     this.failed.clear()
@@ -66,34 +73,38 @@ export class Engine {
     } catch (error) {
       if (!isInputError(error)) throw error
       this.study = null
-      this.results.clear()
+      this.found.clear()
       return [{ kind: 'warnings', warnings: [error.message] }, this.figures()]
     }
     const wanted = new Set<string>()
     for (const ref of optionsOfStudy(this.study)) {
       const id = optionId(ref)
-      const old = this.results.get(id)
+      const old = this.found.get(id)
       if (old && old.keys.needs === this.keys(ref)?.needs) wanted.add(id)
     }
-    for (const id of [...this.results.keys()]) if (!wanted.has(id)) this.results.delete(id)
+    for (const id of [...this.found.keys()]) if (!wanted.has(id)) this.found.delete(id)
     return [this.figures()]
   }
 
+  /** Results that hold, in the study's order. */
+  results(): OptionResult[] {
+    return (this.study ? optionsOfStudy(this.study) : []).flatMap((ref) => this.result(ref) ?? [])
+  }
+
   figures(): Tell {
-    const results = (this.study ? optionsOfStudy(this.study) : []).flatMap((ref) => {
-      const found = this.results.get(optionId(ref))
-      return found ? [{ ...found, held: this.cache.has(found.keys.clutter) }] : []
-    })
-    return { kind: 'figures', results }
+    const all = this.results()
+    const results = all.filter((r) => !this.told.has(r.serial))
+    for (const { serial } of results) this.told.add(serial)
+    return { kind: 'figures', results, holds: all.map((r) => r.serial) }
   }
 
   result(ref: OptionRef): OptionResult | null {
-    return this.results.get(optionId(ref)) ?? null
+    return this.found.get(optionId(ref)) ?? null
   }
 
   /** Options whose figures are there, and all options. */
   progress(): { done: number; total: number } {
-    return { done: this.results.size, total: this.study ? optionsOfStudy(this.study).length : 0 }
+    return { done: this.found.size, total: this.study ? optionsOfStudy(this.study).length : 0 }
   }
 
   /** The next piece of work that is missing, or null. Ends with what to tell the page. */
@@ -138,7 +149,7 @@ export class Engine {
     if (this.study !== study || !keys) return []
     const marks = clutterMarks(cells.ground.codes, study.radar, this.landTable !== null, study.atmosphere)
     const figures = optionFigures({ ...cells, lowK, folded }, study.needs, marks)
-    this.results.set(optionId(ref), { ref, keys, figures, held: true })
+    this.found.set(optionId(ref), { ref, keys, figures, serial: ++this.made })
     const isShown = this.shown.option !== null && optionId(this.shown.option) === optionId(ref)
     return isShown ? [this.figures(), { kind: 'dirty' }] : [this.figures()]
   }

@@ -1,7 +1,7 @@
 import type { LandTable, ModelMark } from '../clutter/index.ts'
 import type { LonLat } from '../geodesy/index.ts'
 import type { GroundCode } from '../landcover/index.ts'
-import type { CutWindow, Figures, Ladder, NeedPlaces, VerticalCut } from '../merit/index.ts'
+import type { CutWindow, Figures, Ladder, NeedPlaces, RoadLines, VerticalCut } from '../merit/index.ts'
 import type { Obstacle, Road } from '../obstacles/index.ts'
 import type { Ramp, View } from '../paint/index.ts'
 import type { GridShape } from '../raster/index.ts'
@@ -27,8 +27,8 @@ export interface OptionResult {
   readonly ref: OptionRef
   readonly keys: Keys
   readonly figures: Figures
-  /** Are the polar grids still in the cache? */
-  readonly held: boolean
+  /** A number of its own for each result of an engine: the same number, the same result. */
+  readonly serial: number
 }
 
 /** The map's quantities. Families: what comes back, what is seen, what is hidden, what it takes. */
@@ -121,7 +121,13 @@ export interface Ask {
     needPlaces?: readonly NeedPlaces[]
   }
   /** Replaces the last one whole: this is also the cancel. */
-  study: { doc: StudyDoc; show: { option: OptionRef | null; layer: LayerId; need?: string }; hold: boolean }
+  study: {
+    doc: StudyDoc
+    show: { option: OptionRef | null; layer: LayerId; need?: string }
+    hold: boolean
+    /** Serials of the results the asker has: they are not told again. */
+    have: readonly number[]
+  }
   /** `still`: the hand rests, a finer picture is wanted. */
   preview: { candidate: string; lon: number; lat: number; heightM: number; still: boolean }
   paint: { view: View; layer: LayerId; option: OptionRef | 'preview'; opacity?: number }
@@ -133,6 +139,8 @@ export interface Ask {
   /** The plane over one azimuth for the target of a need; null: the first need of the study. */
   vertical: { option: OptionRef; need: string | null; window: CutWindow }
   ledger: { at: LonLat; option: OptionRef }
+  /** Roads within range, those whose vehicles are seen apart from the others. */
+  roads: { option: OptionRef }
   ladder: { candidate: string }
   groundAt: { at: readonly LonLat[] }
 }
@@ -151,12 +159,15 @@ export interface Answer {
   /** null where the study states no need. */
   vertical: VerticalCut | null
   ledger: CellLedger
+  /** null where the option's cells are not held. */
+  roads: RoadLines | null
   ladder: Ladder
   groundAt: readonly (number | null)[]
 }
 export type Tell =
   | { readonly kind: 'status'; readonly done: number; readonly total: number; readonly secondsLeft: number | null; readonly doing: string }
-  | { readonly kind: 'figures'; readonly results: readonly OptionResult[] }
+  /** Results not told before, and the serials of all that hold: any other the page still has no longer does. */
+  | { readonly kind: 'figures'; readonly results: readonly OptionResult[]; readonly holds: readonly number[] }
   | { readonly kind: 'dirty' }
   | { readonly kind: 'warnings'; readonly warnings: readonly string[] }
   | { readonly kind: 'reply'; readonly id: number; readonly body: unknown }

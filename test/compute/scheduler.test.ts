@@ -24,7 +24,7 @@ function send<K extends keyof Ask>(kind: K, body: Ask[K]): number {
   scheduler.take({ id: nextId, kind, body })
   return nextId++
 }
-const show = (hold = false): Ask['study'] => ({ doc: hillStudy(), show: { option: SHOWN, layer: 'clutter-to-noise' }, hold })
+const show = (hold = false): Ask['study'] => ({ doc: hillStudy(), show: { option: SHOWN, layer: 'clutter-to-noise' }, hold, have: [] })
 async function drain(): Promise<void> {
   while (scheduler.slice());
   await Promise.resolve()
@@ -41,7 +41,7 @@ describe('scheduler', () => {
     expect(replyOf(study)).toBeDefined()
     const status = told.filter((t) => t.kind === 'status').at(-1)
     expect(status).toMatchObject({ done: 3, total: 3 })
-    expect(told.filter((t) => t.kind === 'figures').at(-1)).toMatchObject({ results: [{}, {}, {}] })
+    expect(told.filter((t) => t.kind === 'figures').at(-1)).toMatchObject({ holds: [1, 2, 3] })
     expect(scheduler.slice()).toBe(false)
   })
 
@@ -82,7 +82,7 @@ describe('scheduler', () => {
     send('study', show(true))
     await drain()
     const figures = told.filter((t) => t.kind === 'figures').at(-1)
-    expect(figures?.kind === 'figures' && figures.results.length).toBe(1)
+    expect(figures?.kind === 'figures' && figures.holds).toEqual([1])
   })
 
   it('says a fault or bad input by the id that asked, with code and remedy', async () => {

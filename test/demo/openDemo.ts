@@ -63,11 +63,7 @@ export async function openDemo(): Promise<OpenDemo> {
 
 /** Every option of the demo worked out. */
 export function allResults(engine: Engine): OptionResult[] {
-  let results: readonly OptionResult[] = []
   for (let work = engine.next(); work; work = engine.next())
-    for (const tell of finish(work)) {
-      if (tell.kind === 'figures') results = tell.results
-      if (tell.kind === 'failure') throw new Error(tell.error.message)
-    }
-  return [...results]
+    for (const tell of finish(work)) if (tell.kind === 'failure') throw new Error(tell.error.message)
+  return engine.results()
 }

@@ -248,7 +248,7 @@ const result = (candidate: string, heightM: number, groundM: number, screen: num
   ref: { candidate, heightM, tiltDeg: 1.5 },
   keys: { site: candidate, mask: `${candidate}${heightM}`, lowK: '', clutter: `${candidate}${heightM}`, folded: '', needs: 'n' },
   figures: sampleFigures(groundM, heightM, screen, seen),
-  held: true,
+  serial: 1,
 })
 export const sampleResults: readonly OptionResult[] = [
   result('A', 12, 214.6, 0.42, 0.34),

@@ -139,13 +139,12 @@ export function work(ground: Ask['ground'], parts: Parts): Worked {
     heightM: candidate.mastHeightsM[0],
     tiltDeg: candidate.tiltsDeg?.[0] ?? doc.radar.antenna.tiltDeg ?? 0,
   }
-  finish(answers.ask('study', { doc, show: { option: ref, layer: 'clutter-to-noise' }, hold: false }))
+  finish(answers.ask('study', { doc, show: { option: ref, layer: 'clutter-to-noise' }, hold: false, have: [] }))
   for (const tell of answers.tells) if (tell.kind === 'warnings') throw new Error(tell.warnings.join())
   for (let next = engine.next(); next; next = engine.next())
     for (const tell of finish(next)) if (tell.kind === 'failure') throw new Error(tell.error.message)
-  const told = engine.figures()
-  const results = told.kind === 'figures' ? told.results : []
-  const result = results[0]
+  const results = engine.results()
+  const [result] = results
   const cells = engine.cells(ref)
   if (!result || !cells) throw new Error('nothing was worked out')
   const layerAt = (id: LayerId, azimuthDeg: number, rangeM: number): number => {

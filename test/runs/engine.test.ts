@@ -28,29 +28,24 @@ function started(doc: StudyDoc, option: OptionRef | null = A10) {
   const engine = new Engine()
   const answers = new Answers(engine)
   finish(answers.ask('ground', { ...ground, heightM: ground.heightM.slice() }))
-  finish(answers.ask('study', { doc, show: { option, layer: 'clutter-to-noise' }, hold: false }))
+  finish(answers.ask('study', { doc, show: { option, layer: 'clutter-to-noise' }, hold: false, have: [] }))
   return { engine, answers }
 }
 function runAll(engine: Engine): { order: string[]; tells: Tell[] } {
   const order: string[] = []
   const tells: Tell[] = []
-  let before = 0
   for (let work = engine.next(); work; work = engine.next()) {
     const told = finish(work)
     tells.push(...told)
     for (const t of told)
       if (t.kind === 'figures') {
-        const ids = t.results.map((r) => `${r.ref.candidate}${r.ref.heightM}`)
-        order.push(ids.length > before ? (ids.find((id) => !order.includes(id)) ?? '') : '')
-        before = ids.length
+        expect(t.results.length, 'each result is told once').toBeLessThanOrEqual(1)
+        order.push(...t.results.map((r) => `${r.ref.candidate}${r.ref.heightM}`))
       }
   }
   return { order, tells }
 }
-const resultsOf = (engine: Engine): readonly OptionResult[] => {
-  const t = engine.figures()
-  return t.kind === 'figures' ? t.results : []
-}
+const resultsOf = (engine: Engine): readonly OptionResult[] => engine.results()
 
 describe('engine', () => {
   it('works out every option, the one on show first, then its candidate', () => {
@@ -67,7 +62,7 @@ describe('engine', () => {
     const before = resultsOf(engine)
     const doc = hillStudy()
     doc.candidates[1] = { ...doc.candidates[1], lon: 13.721 }
-    finish(answers.ask('study', { doc, show: { option: A10, layer: 'clutter-to-noise' }, hold: false }))
+    finish(answers.ask('study', { doc, show: { option: A10, layer: 'clutter-to-noise' }, hold: false, have: [] }))
     const kept = resultsOf(engine)
     expect(kept.map((r) => r.ref)).toEqual([A10, { ...A10, heightM: 25 }])
     expect(kept[0].figures).toBe(before[0].figures)
@@ -80,14 +75,16 @@ describe('engine', () => {
     const [first] = resultsOf(engine)
     const needs = hillStudy()
     needs.needs = [{ ...(needs.needs ?? [])[0], heightM: 300 }]
-    finish(answers.ask('study', { doc: needs, show: { option: A10, layer: 'clutter-to-noise' }, hold: false }))
+    finish(answers.ask('study', { doc: needs, show: { option: A10, layer: 'clutter-to-noise' }, hold: false, have: [] }))
     runAll(engine)
     const [changed] = resultsOf(engine)
     expect(changed.keys.clutter).toBe(first.keys.clutter)
     expect(changed.keys.needs).not.toBe(first.keys.needs)
     const tilted = hillStudy()
     tilted.radar.antenna.tiltDeg = 3
-    finish(answers.ask('study', { doc: tilted, show: { option: { ...A10, tiltDeg: 3 }, layer: 'clutter-to-noise' }, hold: false }))
+    finish(
+      answers.ask('study', { doc: tilted, show: { option: { ...A10, tiltDeg: 3 }, layer: 'clutter-to-noise' }, hold: false, have: [] }),
+    )
     runAll(engine)
     expect(resultsOf(engine)[0].keys.mask).toBe(first.keys.mask)
     expect(resultsOf(engine)[0].keys.clutter).not.toBe(first.keys.clutter)
@@ -97,11 +94,11 @@ describe('engine', () => {
     const { engine, answers } = started(hillStudy())
     const bad = hillStudy()
     bad.run = { maxRangeM: 8000, rangeStepM: 75, azimuthStepDeg: 5 }
-    finish(answers.ask('study', { doc: bad, show: { option: A10, layer: 'clutter-to-noise' }, hold: false }))
+    finish(answers.ask('study', { doc: bad, show: { option: A10, layer: 'clutter-to-noise' }, hold: false, have: [] }))
     const warnings = answers.tells.filter((t) => t.kind === 'warnings')
     expect(warnings).toHaveLength(1)
     expect(engine.next()).toBeNull()
-    finish(answers.ask('study', { doc: hillStudy(), show: { option: A10, layer: 'clutter-to-noise' }, hold: false }))
+    finish(answers.ask('study', { doc: hillStudy(), show: { option: A10, layer: 'clutter-to-noise' }, hold: false, have: [] }))
     expect(runAll(engine).order).toHaveLength(3)
   })
 

@@ -106,7 +106,7 @@ describe('running by itself', () => {
     const s = setUp()
     ready(s)
     const ref = { candidate: 'A', heightM: 20, tiltDeg: 0 }
-    takeTell(s.results, { kind: 'figures', results: [{ ref } as never] }, 0)
+    takeTell(s.results, { kind: 'figures', results: [{ ref, serial: 1 } as never], holds: [1] }, 0)
     expect(s.results.getState().byOption.has(optionKey(ref))).toBe(true)
     changeMastHeight(s.study, 'A', 20, 25)
     expect(s.results.getState().byOption.size).toBe(0)

@@ -44,8 +44,9 @@ export function keepRunning(
     if (!force && show === sent && doc === sentDoc) return
     sent = show
     sentDoc = doc
+    const have = [...results.getState().byOption.values()].map((r) => r.serial)
     client
-      .ask('study', { doc: run, show: { option, layer, ...(need === null ? {} : { need }) }, hold })
+      .ask('study', { doc: run, show: { option, layer, ...(need === null ? {} : { need }) }, hold, have })
       .catch((error) => notices.getState().say(sentenceOf(error), 'bad'))
   }
   let asked = ''
