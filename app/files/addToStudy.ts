@@ -35,7 +35,7 @@ function needFromFile(doc: StudyDoc, file: string, kind: 'fixes' | 'track' | 'po
 
 /** Takes a file out of every place of the study that names it. */
 export function takeOut(doc: StudyDoc, file: string): StudyDoc {
-  const { landCover, obstacles, roads, facades, ...rest } = doc
+  const { landCover, obstacles, roads, facades, tables, ...rest } = doc
   return {
     ...rest,
     terrain: doc.terrain.filter((t) => t.file !== file),
@@ -44,6 +44,7 @@ export function takeOut(doc: StudyDoc, file: string): StudyDoc {
     ...(obstacles && obstacles.file !== file ? { obstacles } : {}),
     ...(roads && roads.file !== file ? { roads } : {}),
     ...(facades && facades.file !== file ? { facades } : {}),
+    ...(tables && tables.lowAngleLand !== file ? { tables } : {}),
   }
 }
 

@@ -52,12 +52,15 @@ export const RADAR_FIELDS = {
     field('radar.noiseFigureDb', 'Noise figure', DB),
     field('radar.systemLossDb', 'System loss', DB),
     field('radar.pfa', 'Pfa', PLAIN),
+    field('radar.instrumentedRangeM', 'Instrumented range', 'range'),
+  ],
+  /** Seldom stated; folded in the form. */
+  processing: [
     field('radar.straddleLossDb', 'Straddling loss', DB),
     field('radar.cfarLossDb', 'Threshold loss', DB, { emptyWords: 'not stated' }),
     field('radar.cfarReferenceCells', 'Reference cells', PLAIN, { emptyWords: 'not stated' }),
     field('radar.recoveryS', 'Recovery time', face('µs', 1e-6)),
     field('radar.receiverLinearRangeDb', 'Linear range', DB, { emptyWords: 'from bits' }),
-    field('radar.instrumentedRangeM', 'Instrumented range', 'range'),
   ],
   air: [
     field('atmosphere.effectiveEarthFactor', 'Effective-earth k', PLAIN),
@@ -121,6 +124,10 @@ export const ELEVATION_PATTERNS: readonly Choice<'gaussian' | 'cosecant-squared'
   { id: 'gaussian', words: 'Gaussian' },
   { id: 'cosecant-squared', words: 'cosecant-squared' },
   { id: 'table', words: 'table' },
+]
+export const DETECTORS: readonly Choice<'noise' | 'areaCfar'>[] = [
+  { id: 'noise', words: 'over noise' },
+  { id: 'areaCfar', words: 'over local clutter' },
 ]
 export const SUPPRESSION_KINDS: readonly Choice<'none' | 'stated' | 'canceller' | 'filterBank'>[] = [
   { id: 'none', words: 'none' },

@@ -1,3 +1,4 @@
+export * from './earthFactorOfAir.ts'
 export * from './gasLoss.ts'
 export * from './pathLoss.ts'
 export * from './rainLoss.ts'

@@ -16,7 +16,7 @@ import {
 } from '../../words/index.ts'
 import { useDoc, useGround, useSession, useView } from '../session/index.ts'
 import { ClassTable } from './ClassTable.tsx'
-import { DocChoice, Group } from './fields.tsx'
+import { DocChoice, Folded, Group } from './fields.tsx'
 import { Problems } from './Problems.tsx'
 import { Remarks } from './Remarks.tsx'
 import { useFilePicker } from './useFilePicker.tsx'
@@ -54,6 +54,7 @@ export function GroundStep() {
           <Group title="Roads">
             <OneFile path="roads" words="Add roads" count={roads.length} noun="road" />
           </Group>
+          <LandTable />
         </>
       ) : null}
     </>
@@ -202,8 +203,21 @@ function OneFile({ path, words, count, noun }: { path: 'obstacles' | 'roads'; wo
   )
 }
 
-function AddFile({ what, words }: { what: 'terrain' | 'landCover' | 'obstacles' | 'roads'; words: string }) {
-  const picker = useFilePicker(what, what === 'terrain' || what === 'landCover' ? '.tif,.tiff' : '.geojson,.json')
+/** Clutter strength from the user's own table in place of the built-in one. */
+function LandTable() {
+  const file = useDoc((d) => d.tables?.lowAngleLand)
+  return (
+    <Folded title="Own table of land clutter" open={file !== undefined}>
+      {file ? <FileHead file={file} /> : <AddFile what="landTable" words="Add a table" />}
+    </Folded>
+  )
+}
+
+function AddFile({ what, words }: { what: 'terrain' | 'landCover' | 'obstacles' | 'roads' | 'landTable'; words: string }) {
+  const picker = useFilePicker(
+    what,
+    what === 'terrain' || what === 'landCover' ? '.tif,.tiff' : what === 'landTable' ? '.json' : '.geojson,.json',
+  )
   return (
     <div className="row add">
       <Button small onPress={picker.open}>

@@ -1,8 +1,10 @@
+import type { StudyDoc } from '../../../core/index.ts'
 import { hasStartingRadar, setField, valueAt } from '../../document/index.ts'
 import { Button, Check, CommitField, Mark } from '../../ui/index.ts'
 import {
   CIRCULAR_FIELDS,
   COSECANT_FIELD,
+  DETECTORS,
   ELEVATION_PATTERNS,
   FILTER_WINDOWS,
   GAS_KINDS,
@@ -14,9 +16,11 @@ import {
   STC_KINDS,
   SUPPRESSION_FIELDS,
   SUPPRESSION_KINDS,
+  TABLE_WORDS,
 } from '../../words/index.ts'
 import { sentenceOf, useDoc, useSession } from '../session/index.ts'
-import { DocChoice, DocNumber, DocNumbers, Group, OriginMark } from './fields.tsx'
+import { EarthFactorHelper } from './EarthFactorHelper.tsx'
+import { DocChoice, DocNumber, DocNumbers, Folded, Group, OriginMark } from './fields.tsx'
 import { PairsField } from './PairsField.tsx'
 import { Problems } from './Problems.tsx'
 import { Remarks } from './Remarks.tsx'
@@ -32,6 +36,9 @@ export function RadarStep() {
   const suppression = useDoc((d) => d.radar.suppression?.kind ?? 'none')
   const circular = useDoc((d) => d.radar.polarisation === 'circular')
   const stc = useDoc((d) => d.radar.stc?.kind ?? 'none')
+  const detector = useDoc((d) => d.radar.detector)
+  const stated = useDoc(statedPaths)
+  const tables = [useDoc((d) => d.radar.pulses?.length ?? 0), useDoc((d) => d.radar.beams?.length ?? 0)]
   const named = useDoc((d) => !hasStartingRadar(d) && (d.radar.name ?? '') !== '')
   const doc = useDoc((d) => d.radar)
   return (
@@ -101,6 +108,25 @@ export function RadarStep() {
           <DocNumber key={f.path} of={f} />
         ))}
       </Group>
+      <Folded
+        title="Detector and receiver limits"
+        open={RADAR_FIELDS.processing.some((f) => stated.includes(f.path)) || detector !== undefined}
+      >
+        <DocChoice path="radar.detector" label="Threshold" choices={DETECTORS} fallback="noise" />
+        {RADAR_FIELDS.processing.map((f) => (
+          <DocNumber key={f.path} of={f} />
+        ))}
+      </Folded>
+      <Folded title={TABLE_WORDS.pulsesTitle} open={tables.some((n) => n > 0)}>
+        <div className="row add">
+          <Button small onPress={() => view.getState().set({ dialog: 'pulses' })}>
+            Edit tables
+          </Button>
+          <span className="small ink-3">
+            {tables.some((n) => n > 0) ? `${tables[0]} pulses, ${tables[1]} beams` : 'one pulse, one beam'}
+          </span>
+        </div>
+      </Folded>
       <Group title="Clutter suppression">
         <DocChoice
           path="radar.suppression.kind"
@@ -152,11 +178,16 @@ export function RadarStep() {
         {RADAR_FIELDS.air.map((f) => (
           <DocNumber key={f.path} of={f} />
         ))}
+        <DocChoice path="atmosphere.gas" label="Gas loss" choices={GAS_KINDS} fallback="none" />
+      </Group>
+      <Folded title="k from the air at the ground" open={false}>
+        <EarthFactorHelper />
+      </Folded>
+      <Folded title="How sea and rain move" open={MOTION_FIELDS.some((f) => stated.includes(f.path))}>
         {MOTION_FIELDS.map((f) => (
           <DocNumber key={f.path} of={f} />
         ))}
-        <DocChoice path="atmosphere.gas" label="Gas loss" choices={GAS_KINDS} fallback="none" />
-      </Group>
+      </Folded>
       <Group title="Polar grid">
         {RADAR_FIELDS.grid.map((f) => (
           <DocNumber key={f.path} of={f} />
@@ -165,3 +196,10 @@ export function RadarStep() {
     </>
   )
 }
+
+/** Which of the folded fields the study states, as one text: the form renders again only when that changes. */
+const statedPaths = (doc: StudyDoc): string =>
+  [...RADAR_FIELDS.processing, ...MOTION_FIELDS]
+    .map((f) => f.path)
+    .filter((path) => valueAt(doc, path) != null)
+    .join(' ')

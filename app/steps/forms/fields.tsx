@@ -120,3 +120,11 @@ export const Group = ({ title, children }: { title: string; children: ReactNode 
     {children}
   </section>
 )
+
+/** Seldom used fields under a plain heading, folded until asked for; open where one of them is stated. */
+export const Folded = ({ title, open, children }: { title: string; open: boolean; children: ReactNode }) => (
+  <details className="group folded" open={open || undefined}>
+    <summary>{title}</summary>
+    {children}
+  </details>
+)

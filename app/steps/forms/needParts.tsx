@@ -3,7 +3,7 @@ import { Caution, Mark, NumberField, Select } from '../../ui/index.ts'
 import { CAUTIONS, DB, DEG, formatSetting, PLAIN, SWERLING_CASES, textOf } from '../../words/index.ts'
 import { useDoc, useView } from '../session/index.ts'
 import { settledOf } from '../settled.ts'
-import { faceOf } from './fields.tsx'
+import { faceOf, OriginMark } from './fields.tsx'
 
 export type SetPart = (key: string, value: unknown) => void
 interface PartProps {
@@ -31,7 +31,15 @@ export function Heights({ need, path, set }: PartProps) {
     set('heightM', a !== undefined && b !== undefined ? [Math.min(a, b), Math.max(a, b)] : (a ?? b))
   return (
     <>
-      <NumberField label="Height" value={low} required face={height} limit={limit} onCommit={(v) => setHeights(v, high)} />
+      <NumberField
+        label="Height"
+        marks={<OriginMark path={`${path}.heightM`} />}
+        value={low}
+        required
+        face={height}
+        limit={limit}
+        onCommit={(v) => setHeights(v, high)}
+      />
       <NumberField
         label="up to height"
         value={high}
@@ -40,7 +48,13 @@ export function Heights({ need, path, set }: PartProps) {
         limit={limit}
         onCommit={(v) => setHeights(low, v)}
       />
-      <Select label="Heights are" value={need.heightAbove ?? 'sea'} choices={HEIGHT_ABOVE} onChange={(v) => set('heightAbove', v)} />
+      <Select
+        label="Heights are"
+        value={need.heightAbove ?? 'sea'}
+        choices={HEIGHT_ABOVE}
+        marks={<OriginMark path={`${path}.heightAbove`} />}
+        onChange={(v) => set('heightAbove', v)}
+      />
     </>
   )
 }
@@ -56,6 +70,7 @@ export function Reach({ need, path, at, set }: PartProps) {
     <>
       <NumberField
         label="From range"
+        marks={<OriginMark path={`${path}.fromRangeM`} />}
         value={need.fromRangeM}
         fallback={0}
         face={range}
@@ -64,6 +79,7 @@ export function Reach({ need, path, at, set }: PartProps) {
       />
       <NumberField
         label="To range"
+        marks={<OriginMark path={`${path}.toRangeM`} />}
         value={need.toRangeM}
         fallback={toRangeM}
         face={range}
@@ -72,6 +88,7 @@ export function Reach({ need, path, at, set }: PartProps) {
       />
       <NumberField
         label="Sector from"
+        marks={<OriginMark path={`${path}.sectorDeg`} />}
         value={need.sectorDeg?.[0]}
         fallback={0}
         face={DEG}
@@ -128,6 +145,7 @@ export function Target({ need, path, at, set }: PartProps) {
     <>
       <NumberField
         label="Share to be met"
+        marks={<OriginMark path={`${path}.requiredPct`} />}
         value={need.requiredPct}
         fallback={settled?.requiredPct}
         face={PERCENT}
@@ -141,6 +159,7 @@ export function Target({ need, path, at, set }: PartProps) {
           </>
         }
         value={need.rcsM2}
+        marks={<OriginMark path={`${path}.rcsM2`} />}
         fallback={settled?.rcsM2}
         face={SQUARE_METRES}
         limit={limit('rcsM2')}
@@ -150,15 +169,23 @@ export function Target({ need, path, at, set }: PartProps) {
         label="Fluctuation"
         value={String(need.swerling ?? settled?.swerling ?? 1) as '1'}
         choices={SWERLING_CASES}
-        marks={need.swerling === undefined ? <Mark>default</Mark> : null}
+        marks={need.swerling === undefined ? <Mark>default</Mark> : <OriginMark path={`${path}.swerling`} />}
         onChange={(v) => set('swerling', Number(v))}
       />
-      <NumberField label="Pd" value={need.pd} fallback={settled?.pd} face={PLAIN} limit={limit('pd')} onCommit={(v) => set('pd', v)} />
+      <NumberField
+        label="Pd"
+        marks={<OriginMark path={`${path}.pd`} />}
+        value={need.pd}
+        fallback={settled?.pd}
+        face={PLAIN}
+        limit={limit('pd')}
+        onCommit={(v) => set('pd', v)}
+      />
       <NumberField
         label="Required ratio"
         value={need.requiredRatioDb}
         fallback={ratio}
-        mark="from Pd"
+        mark="worked out"
         face={DB}
         limit={limit('requiredRatioDb')}
         onCommit={(v) => set('requiredRatioDb', v)}

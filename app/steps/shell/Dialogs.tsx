@@ -4,6 +4,7 @@ import { useView } from '../session/index.ts'
 
 /** What is asked over the whole page; each comes down on its first use. */
 const DIALOGS: Partial<Record<NonNullable<OpenDialog>, ComponentType>> = {
+  pulses: lazy(() => import('../forms/PulsesDialog.tsx').then((m) => ({ default: m.PulsesDialog }))),
   templates: lazy(() => import('../forms/TemplateDialog.tsx').then((m) => ({ default: m.TemplateDialog }))),
 }
 
