@@ -22,11 +22,12 @@ export const RANK: Readonly<Record<keyof Ask, number>> = {
   preview: 3,
   vertical: 4,
   map: 4,
+  roads: 4,
   ladder: 6,
 }
 /** Work for the option on show goes between the asks and the ladder. */
 export const BACKGROUND_RANK = 5
 /** Of these only the newest counts: an older one still waiting is answered with null. */
-export const SUPERSEDING: ReadonlySet<keyof Ask> = new Set(['paint', 'base', 'preview', 'probe', 'vertical', 'ladder'])
+export const SUPERSEDING: ReadonlySet<keyof Ask> = new Set(['paint', 'base', 'preview', 'probe', 'vertical', 'roads', 'ladder'])
 /** A new ground or study makes these worthless. */
-export const STALE_AFTER_STUDY: ReadonlySet<keyof Ask> = new Set(['ladder', 'map', 'vertical'])
+export const STALE_AFTER_STUDY: ReadonlySet<keyof Ask> = new Set(['ladder', 'map', 'vertical', 'roads'])

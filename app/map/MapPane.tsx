@@ -81,6 +81,7 @@ export function MapPane(props: MapPaneProps) {
           needs={props.needs}
           obstacles={props.obstacles}
           roads={props.roads}
+          roadLines={props.roadLines}
           maxRangeM={maxRangeM}
           show={show}
           units={units}
@@ -116,7 +117,11 @@ export function MapPane(props: MapPaneProps) {
       </div>
       {empty && props.empty ? <div className="map-empty">{props.empty}</div> : null}
       <div className="map-foot">
-        {empty ? <span /> : <Legend layer={show.layer} units={units} night={night} marks={props.marks} losses={props.losses} />}
+        {empty ? (
+          <span />
+        ) : (
+          <Legend layer={show.layer} units={units} night={night} marks={props.marks} losses={props.losses} roads={props.roadLines} />
+        )}
         <div className="map-corner">
           {empty ? null : <ScaleBar view={view} units={units} />}
           {empty ? null : <ReadOut client={props.client} hub={hub} site={site} units={units} hint={hint} />}

@@ -1,5 +1,5 @@
 import type { ReactNode } from 'react'
-import type { Answer, HorizonRow, LayerId, LonLat, LossCause, ModelMark, Obstacle, OptionRef, Road } from '../../core/index.ts'
+import type { Answer, HorizonRow, LayerId, LonLat, LossCause, ModelMark, Obstacle, OptionRef, Road, RoadLines } from '../../core/index.ts'
 import type { StudyClient } from '../compute/client.ts'
 import type { UnitSystem } from '../words/index.ts'
 
@@ -79,6 +79,8 @@ export interface MapPaneProps {
   readonly needs: readonly MapNeed[]
   readonly obstacles: readonly Obstacle[]
   readonly roads: readonly Road[]
+  /** Roads whose vehicles the option on show sees, apart from the others; null while not worked out. */
+  readonly roadLines: RoadLines | null
   /** Range of the polar grids: the outermost ring. */
   readonly maxRangeM: number
   readonly show: MapShow

@@ -30,6 +30,8 @@ export const CAUTIONS = {
   unknownGround: 'Unknown ground counts against a need: it is never in sight and never free of clutter.',
   floorBand: 'The floor is nominal; the error band beside it is 90 %, from the raster and obstacle errors.',
   edgeHorizon: 'Where the terrain ends the horizon is "at least" the value shown.',
+  roads:
+    'Roads seen are length, not traffic: free space, one scan, and cover at the road’s own place hides its vehicles; bridges and cuttings are as the raster has them.',
   moreGround: 'More ground in sight is not better by itself: clutter comes with it.',
   ducting: 'Ducting sensitivity, not a prediction',
 } as const
@@ -55,6 +57,7 @@ export const CAUTIONS_OF = {
   clutter: ['landTable', 'clutterMean'],
   suppression: ['requiredRatio', 'blindSpeeds', 'landTable'],
   exposure: ['exposure', 'structure'],
+  roads: ['roads'],
   usable: ['threeWords', 'meanUsable', 'edgeOnly', 'landTable'],
   mast: ['obstruction', 'structure'],
   candidate: ['nearMast'],

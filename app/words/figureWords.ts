@@ -1,4 +1,4 @@
-import { type LayerId, LOSS_CAUSES } from '../../core/index.ts'
+import { type LayerId, LOSS_CAUSES, type RoadClass } from '../../core/index.ts'
 import {
   formatAreaDown,
   formatAreaUp,
@@ -11,12 +11,14 @@ import {
   formatMetPct,
   formatRange,
   formatRangeUp,
+  formatRoad,
   formatScreening,
   NO_VALUE,
   type Quantity,
 } from './format.ts'
 import { formatDuration } from './formatStated.ts'
 import { LOSS_MEANINGS, LOSS_WORDS } from './layers.ts'
+import { ROAD_CLASS_WORDS } from './roads.ts'
 import type { UnitSystem } from './units.ts'
 
 /** What a figure of merit is called, what it means, and which map layer shows where it comes from. */
@@ -30,6 +32,18 @@ export interface FigureWords {
 
 const UP = 'rounded up'
 const DOWN = 'rounded down'
+
+/** Figures of roads are in km. */
+function roadsOf(label: string, meaning: string): FigureWords {
+  return {
+    label,
+    meaning: `${meaning}; ${UP}`,
+    layer: 'masked',
+    format: (km, system) => formatRoad(km === null ? null : km * 1000, system),
+  }
+}
+const ROAD_SEEN = 'Length of road where a vehicle is in sight and its echo over noise is enough for a detection probability of 0.5'
+const roadClass = (of: RoadClass): FigureWords => roadsOf(`Roads seen: ${ROAD_CLASS_WORDS[of].toLowerCase()}`, ROAD_SEEN)
 
 /** By the key's tail, as in the summary file; `need_<id>_` and `floor_<range>nm_` are taken off before. */
 const PLAIN: Readonly<Record<string, FigureWords>> = {
@@ -86,6 +100,17 @@ const PLAIN: Readonly<Record<string, FigureWords>> = {
     meaning: `Highest mean clutter-to-noise of any resolution cell, one pulse, before suppression; ${UP}`,
     layer: 'clutter-to-noise',
     format: (v) => formatDbUp(v),
+  },
+  roads_km: roadsOf('Roads within range', 'Length of roads and railways within range'),
+  roads_in_sight_km: roadsOf('Roads in sight', 'Length of road where the top of a vehicle is in sight, line of sight only'),
+  roads_seen_km: roadsOf('Roads seen', ROAD_SEEN),
+  roads_seen_k2_75_km: roadsOf('Roads seen, k = 2.75', `${ROAD_SEEN}, at k = 2.75`),
+  roads_unknown_km: roadsOf('Roads on unknown ground', 'Length of road beyond a void or past the edge of the terrain'),
+  roads_blind_pct: {
+    label: 'Roads seen, in the blind zone',
+    meaning: `Share of the roads seen whose radial speed the processing passes by more than 10 dB under its mean; ${UP}`,
+    layer: 'masked',
+    format: (v) => formatLossPct(v),
   },
 }
 const clutterOver = (level: string): FigureWords => ({
@@ -279,6 +304,8 @@ export function figureWords(key: string): FigureWords | undefined {
   if (over) return clutterOver(over[1])
   const floor = /^floor_(\d+)nm(_k1)?_(best|median|worst)_m$/.exec(key)
   if (floor) return floorAt(floor[1], floor[3], floor[2] !== undefined)
+  const road = /^roads_seen_([a-z]+)_km$/.exec(key)
+  if (road && road[1] in ROAD_CLASS_WORDS) return roadClass(road[1] as RoadClass)
   const improvement = /^improvement_(.+)_db$/.exec(key)
   if (improvement) return improvementOn(improvement[1])
   const need = needKey(key)

@@ -12,7 +12,7 @@ export const NOT_ASSESSED: readonly NotAssessed[] = [
   { what: 'Ducting and other refraction', so: 'the k of the study and k = 1 only; no bent layers' },
   { what: 'Pulse compression side lobes', so: 'clutter enters through the compressed pulse alone' },
   { what: 'Spiky clutter', so: 'every decision is for the mean of the cell; the spread is not in the shares' },
-  { what: 'Roads and moving vehicles', so: 'roads are drawn, vehicles are not counted' },
+  { what: 'Traffic on roads', so: 'roads seen are counted by length and speed; how many vehicles, and false tracks from them, are not' },
   { what: 'Reflections and false targets', so: 'no facade is traced' },
   { what: 'Wind turbines', so: 'neither turning blades nor shadow sectors' },
   { what: 'Beam blockage', so: 'an obstacle masks or does not; no partial loss of the beam' },

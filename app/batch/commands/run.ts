@@ -29,6 +29,7 @@ import { polarCells, polarRaster } from '../rasters/polarRaster.ts'
 import { NO_PERCENT, sightRaster } from '../rasters/sightRaster.ts'
 import { chooseLayers, chooseOptions, EXTRA_LAYERS, narrowed, ofNeed } from './chooseOptions.ts'
 import { horizonCsv } from './horizon.ts'
+import { roadsSummary, writeOptionFiles } from './optionFiles.ts'
 
 /** `run`: every option picked, one after the other, into a folder that appears whole at the end. */
 export async function run(line: CommandLine, progress: Progress): Promise<void> {
@@ -115,6 +116,7 @@ class RunWriter {
       await this.#writeHeight(heightDir, cells, ref, name)
     }
     await this.#raster(tiltDir, ref, 'clutter-to-noise', 'dB', this.#onLattice(cells, ref, cells.clutter.cnrDb))
+    writeOptionFiles(tiltDir, cells)
     for (const id of this.layers) if (EXTRA_LAYERS[id] === 'tilt') await this.#layer(tiltDir, ref, cells, id)
   }
 
@@ -197,6 +199,7 @@ function summary(study: SettledStudy, results: readonly OptionResult[], files: r
     ...ref,
     key: createHash('sha256').update(`${inputs}|${keys.needs}`).digest('hex').slice(0, 32),
     figures: figures.flat,
+    ...(figures.roads ? { roads: roadsSummary(figures.roads) } : {}),
   }))
   return `${JSON.stringify({ format: SUMMARY_FORMAT, version: 1, study: study.name, files, options }, null, 2)}\n`
 }

@@ -12,9 +12,11 @@ export interface LegendProps {
   readonly night: boolean
   readonly marks: MapPaneProps['marks']
   readonly losses: MapPaneProps['losses']
+  /** Lines of roads on show, seen and hidden; null or absent where there are none. */
+  readonly roads?: MapPaneProps['roadLines']
 }
 /** Title, ramp with labelled stops or a colour per class, what bare and hatched mean, and marks in words. */
-export function Legend({ layer, units, night, marks, losses }: LegendProps) {
+export function Legend({ layer, units, night, marks, losses, roads }: LegendProps) {
   const words = LAYER_WORDS[layer]
   const { unit } = legendStops(layer, layerInfo(layer).ramp.stops, units)
   const { note, warned } = legendMarks(layer, marks)
@@ -40,6 +42,14 @@ export function Legend({ layer, units, night, marks, losses }: LegendProps) {
           ))}
         </p>
       )}
+      {roads && roads.seen.length > 0 ? (
+        <p className="note">
+          <span className="part">
+            <i className="swatch road-seen" aria-hidden />
+            {MAP_WORDS.roadSeen}
+          </span>
+        </p>
+      ) : null}
       {warned.map((m) => (
         <p key={m} className="mark">
           {m}
@@ -50,7 +60,7 @@ export function Legend({ layer, units, night, marks, losses }: LegendProps) {
 }
 
 /** What the colours mean: patterns of states, a colour per class, or a ramp. */
-function Key({ layer, units, night, losses }: Omit<LegendProps, 'marks'>) {
+function Key({ layer, units, night, losses }: Omit<LegendProps, 'marks' | 'roads'>) {
   const { ramp, classes } = layerInfo(layer)
   if (layer === 'masked')
     return (

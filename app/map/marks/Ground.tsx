@@ -1,5 +1,5 @@
 import { memo, useMemo } from 'react'
-import type { LonLat, Obstacle, Road } from '../../../core/index.ts'
+import type { LonLat, Obstacle, Road, RoadLines } from '../../../core/index.ts'
 import { linesPath } from './worldPaths.ts'
 
 const MAJOR = /^(motorway|trunk|primary)/
@@ -22,6 +22,16 @@ export const Roads = memo(function Roads({ anchor, roads }: { anchor: LonLat; ro
       <path className="case" d={paths.major} {...wide} />
       <path className="major" d={paths.major} {...wide} />
       <path className="rail" d={paths.rail} {...wide} />
+    </g>
+  )
+})
+/** Roads whose vehicles are seen, over the others, in world metres from an anchor. */
+export const SeenRoads = memo(function SeenRoads({ anchor, lines }: { anchor: LonLat; lines: RoadLines }) {
+  const d = useMemo(() => linesPath(anchor, lines.seen), [anchor, lines])
+  return (
+    <g className="roads">
+      <path className="seen-case" d={d} {...wide} />
+      <path className="seen" d={d} {...wide} />
     </g>
   )
 })

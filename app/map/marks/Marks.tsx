@@ -2,7 +2,7 @@ import { type RefObject, useMemo } from 'react'
 import { type LonLat, pixelAtLonLat, type View } from '../../../core/index.ts'
 import type { MapPaneProps, Trial } from '../types.ts'
 import { Candidates } from './Candidates.tsx'
-import { ObstacleLines, Roads } from './Ground.tsx'
+import { ObstacleLines, Roads, SeenRoads } from './Ground.tsx'
 import { type Rect, RingLabels, Rings, ringLabels, ringsOf } from './Rings.tsx'
 import { rayPath, sectorPath } from './worldPaths.ts'
 
@@ -19,7 +19,7 @@ const anchored = (view: View, anchor: LonLat): string => {
 export interface MarksProps
   extends Pick<
     MapPaneProps,
-    'candidates' | 'needs' | 'obstacles' | 'roads' | 'maxRangeM' | 'show' | 'units' | 'cell' | 'profileAzimuthDeg'
+    'candidates' | 'needs' | 'obstacles' | 'roads' | 'roadLines' | 'maxRangeM' | 'show' | 'units' | 'cell' | 'profileAzimuthDeg'
   > {
   readonly view: View
   readonly trial: Trial | null
@@ -61,6 +61,7 @@ export function Marks(p: MarksProps) {
       {ground && (
         <g transform={anchored(view, ground)}>
           <Roads anchor={ground} roads={p.roads} />
+          {p.roadLines && <SeenRoads anchor={ground} lines={p.roadLines} />}
           <ObstacleLines anchor={ground} obstacles={p.obstacles} />
         </g>
       )}

@@ -105,6 +105,12 @@ const STEEP: ModelRow = {
   basis: 'from memory',
   limits: 'depression over 8°',
 }
+const ROADS: ModelRow = {
+  model: 'Roads seen',
+  source: 'Our own definition: height, speed and echo of vehicles by class of road',
+  basis: 'default',
+  limits: 'pieces of 50\u202fm, free space, one scan',
+}
 const EXPOSURE: readonly ModelRow[] = [
   { model: 'Near field of an aperture', source: 'FCC OET Bulletin 65', basis: 'from memory', limits: 'average power' },
   {
@@ -155,6 +161,7 @@ export function modelBlocks(input: MemoInput): Block[] {
             limits: 'tops in sight',
           } as const,
         ]),
+    ...(study.roads === null ? [] : [ROADS]),
     ...(study.atmosphere.rainRateMmH > 0 ? RAIN : []),
     ...(study.atmosphere.gas === 'p676' ? [GAS] : []),
     ...GEOMETRY,

@@ -27,6 +27,7 @@ import { mapDrawing } from './mapFigure.ts'
 import { availableWords, lossTable, marginTable, nestedTable, suppressionTable } from './needTables.ts'
 import { nestedWords } from './needWords.ts'
 import { placeBlocks } from './placeTables.ts'
+import { roadBlocks, roadsSeenCell } from './roadsSection.ts'
 import { hasTilts } from './summarySection.ts'
 import { type Block, type Cell, type MemoInput, SMALL_PT, type TableBlock, TEXT_WIDTH_PT } from './types.ts'
 
@@ -66,6 +67,7 @@ export function optionBlocks(input: MemoInput, r: OptionResult, figure: () => nu
     blocks.push(lossTable(input, r), ...placeBlocks(input, r), suppressionTable(input, r))
     blocks.push({ kind: 'paragraph', role: 'small', text: availableWords(r) }, { kind: 'caution', texts: suppressionCautions(input) })
   }
+  blocks.push(...roadBlocks(input, r))
   const rings = ringChart({ rings: r.figures.rings, width: 182, height: 172, system: input.system, size: SMALL_PT - 1 })
   blocks.push({
     kind: 'beside',
@@ -153,6 +155,7 @@ export function figureTable(input: MemoInput, r: OptionResult): TableBlock {
     ['C/N over 60\u202fdB', dual((s) => formatAreaUp(over.over60, s), system, { explain: 'clutter_over_60_km2' })],
     ['C/N, highest', value(formatDbUp(f.cnrPeakDb), { explain: 'clutter_to_noise_peak_db' })],
   ]
+  if (f.roads) rows.push(['Roads seen', roadsSeenCell(f.roads, input)])
   if (f.obstaclesInSight.length > 0) rows.push(['Obstacles in sight', obstacleWords(f.obstaclesInSight)])
   rows.push(['Keep clear, antenna stopped', exposureCell(input, r.ref)])
   for (const m of f.marks) rows.push([capital(m.about.replace(`, ${m.mark}`, '')), { text: '', mark: m.mark }])

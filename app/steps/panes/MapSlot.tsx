@@ -5,6 +5,7 @@ import type { MapCandidate, MapHub, MapNeed } from '../../map/index.ts'
 import { EMPTY_WORDS } from '../../words/index.ts'
 import { useDoc, useGround, useResults, useSession, useView } from '../session/index.ts'
 import { cellUnder, settledOf } from '../settled.ts'
+import { useRoadLines } from './useRoadLines.ts'
 
 const LowerPanel = lazy(() => import('./LowerPanel.tsx').then((m) => ({ default: m.LowerPanel })))
 const MapPane = lazy(() => import('../../map/index.ts').then((m) => ({ default: m.MapPane })))
@@ -59,6 +60,7 @@ export function MapSlot({ hub }: { hub: MapHub }) {
   const ground = useGround((g) => g.ground)
   const obstacles = useGround((g) => g.obstacles)
   const roads = useGround((g) => g.roads)
+  const roadLines = useRoadLines(option)
   const marks = useResults((r) => (option ? r.byOption.get(optionKey(option))?.figures.marks : undefined)) ?? NO_MARKS
   const losses = useResults((r) => {
     const figures = option ? r.byOption.get(optionKey(option))?.figures.needs : undefined
@@ -89,6 +91,7 @@ export function MapSlot({ hub }: { hub: MapHub }) {
         needs={needs}
         obstacles={obstacles}
         roads={roads}
+        roadLines={roadLines}
         maxRangeM={maxRangeM}
         show={{ option, layer, need }}
         onShow={set}

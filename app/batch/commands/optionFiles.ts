@@ -1,0 +1,49 @@
+import { writeFileSync } from 'node:fs'
+import { join } from 'node:path'
+import { type LonLat, type OptionCells, ROAD_CLASSES, type RoadLines, type RoadsFigure, roadLines } from '../../../core/index.ts'
+
+/** Files of one option beside its rasters, in its folder of height and tilt. */
+export function writeOptionFiles(tiltDir: string, cells: OptionCells): void {
+  if (cells.ground.roads.length > 0) writeFileSync(join(tiltDir, 'roads-seen.geojson'), roadsGeoJson(roadLines(cells)))
+}
+
+/** Roads within range as GeoJSON lines, `seen` true or false. */
+export function roadsGeoJson({ seen, hidden }: RoadLines): string {
+  const feature = (line: readonly LonLat[], isSeen: boolean): string => {
+    const coordinates = line.map((p) => [Number(p.lon.toFixed(7)), Number(p.lat.toFixed(7))])
+    return JSON.stringify({ type: 'Feature', properties: { seen: isSeen }, geometry: { type: 'LineString', coordinates } })
+  }
+  const features = [...seen.map((l) => feature(l, true)), ...hidden.map((l) => feature(l, false))]
+  return `{"type":"FeatureCollection","features":[\n${features.join(',\n')}\n]}\n`
+}
+
+const km = (m: number): number => m / 1000
+/** Roads of an option for summary.json: by class and ring, km, and by radial speed, km per 5 m/s. */
+export function roadsSummary(r: RoadsFigure) {
+  return {
+    vehicle_rcs_m2: r.rcsM2,
+    required_ratio_db: r.requiredRatioDb,
+    within_range_km: km(r.lengthM),
+    in_sight_km: km(r.inSightM),
+    seen_km: km(r.seenM),
+    in_tunnel_km: km(r.tunnelM),
+    unknown_km: km(r.unknownM),
+    blind_zone_km: r.blindM === null ? null : km(r.blindM),
+    at_k: r.atHighK && { k: r.atHighK.k, in_sight_km: km(r.atHighK.inSightM), seen_km: km(r.atHighK.seenM) },
+    classes: r.classes.map((c) => ({
+      class: c.roadClass,
+      within_range_km: km(c.lengthM),
+      in_sight_km: km(c.inSightM),
+      seen_km: km(c.seenM),
+    })),
+    rings: r.rings.map((ring) => ({
+      from_m: ring.fromM,
+      to_m: ring.toM,
+      within_range_km: km(ring.lengthM),
+      in_sight_km: km(ring.inSightM),
+      seen_km: km(ring.seenM),
+      seen_by_class_km: Object.fromEntries(r.classes.map((c) => [c.roadClass, km(ring.seenByClassM[ROAD_CLASSES.indexOf(c.roadClass)])])),
+    })),
+    radial_speeds: r.speeds.map((s) => ({ from_ms: s.fromMs, to_ms: s.toMs, seen_km: km(s.seenM) })),
+  }
+}
