@@ -129,6 +129,7 @@ export const LOSS_WORDS: Record<LossCause, string> = {
   'blind-speed': 'blind speed',
   'too-weak': 'too weak',
   several: 'several causes together',
+  lobing: 'null of lobing',
 }
 /** What each cause means, for help and the memo. */
 export const LOSS_MEANINGS: Record<LossCause, string> = {
@@ -143,6 +144,7 @@ export const LOSS_MEANINGS: Record<LossCause, string> = {
   'blind-speed': 'Usable but for a blind speed or a path across the beam',
   'too-weak': 'Under the required ratio on the beam peak without clutter or short-range sensitivity',
   several: 'Several causes together; none alone would make it usable',
+  lobing: 'Usable but for the ray that comes off water or level open ground: direct and reflected ray cancel',
 }
 /** The map's families, in the words of its sentence. */
 export const FAMILY_WORDS: Record<LayerInfo['family'], string> = {

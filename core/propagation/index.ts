@@ -1,5 +1,6 @@
 export * from './deltaBullington.ts'
 export * from './knifeEdge.ts'
+export * from './lobing/index.ts'
 export * from './reflection.ts'
 export * from './sphericalEarth.ts'
 export * from './twoRay.ts'

@@ -50,6 +50,7 @@ const CAUSE_HEXES: Readonly<Record<(typeof LOSS_CAUSES)[number], string>> = {
   'blind-speed': '#e0a13c',
   'too-weak': '#355f9e',
   several: '#8a2f5c',
+  lobing: '#5f7a2e',
 }
 
 /** Fixed ramps with round stops, so that two maps, two candidates and the memo compare by eye. */

@@ -67,6 +67,7 @@ export function startRow(r: NeedRow, first: number, last: number): void {
 const OUT_OF_RANGE = lossCode('out-of-range')
 const MASKED = lossCode('masked')
 const MARGINAL = lossCode('marginal')
+const LOBING = lossCode('lobing')
 
 /** Tests one level in cells first … last−1 of a row that starts at `from`. Unknown ground counts as hidden; the caller tells it apart. */
 export function testLevel(t: LevelTest, out: NeedRow, first: number, last: number, from: number): void {
@@ -109,7 +110,8 @@ export function testLevel(t: LevelTest, out: NeedRow, first: number, last: numbe
 
     if (rowLow !== null && clearLowM !== null && target >= clearLowM[at]) {
       bits |= PLACE.lowInSight
-      const edge = twoWayEdgeLossDb(target - clearLowM[at] + band, rangeM[j], obstacleM[j], wavelengthM)
+      let edge = twoWayEdgeLossDb(target - clearLowM[at] + band, rangeM[j], obstacleM[j], wavelengthM)
+      if (edge === 0) edge = rowLow.lobeDb[j]
       const strength = rowLow.headDb[j] - edge
       if (strength >= 0 && rowLow.heard[j] === 1) {
         bits |= PLACE.lowDetectable
@@ -119,7 +121,9 @@ export function testLevel(t: LevelTest, out: NeedRow, first: number, last: numbe
     }
     if (margin >= band) {
       bits |= PLACE.inSight
-      const edge = twoWayEdgeLossDb(margin, rangeM[j], obstacleM[j], wavelengthM)
+      let edge = twoWayEdgeLossDb(margin, rangeM[j], obstacleM[j], wavelengthM)
+      const clear = edge === 0
+      if (clear) edge = row.lobeDb[j]
       const strength = row.headDb[j] - edge
       const over = strength - aboveNoiseDb(residue + noiseGainDb)
       if (over < signalDb[j]) signalDb[j] = over
@@ -134,10 +138,12 @@ export function testLevel(t: LevelTest, out: NeedRow, first: number, last: numbe
         if (over >= 0) bits |= PLACE.usable
       }
       if (!(bits & PLACE.usable) && why[j] === 0) {
-        // what only the loss close over the mask takes away is the mask's
+        // what only the loss close over the mask takes away is the mask's, what only a null takes away is its own
         const free = edge > 0 && row.headDb[j] >= aboveNoiseDb(residue + noiseGainDb)
         why[j] = free
-          ? MASKED
+          ? clear
+            ? LOBING
+            : MASKED
           : signalLoss({
               headDb: strength,
               gainDb: row.gainDb[j],

@@ -1,8 +1,10 @@
 import { CELL } from '../../polar/index.ts'
+import { fillReflectingRay, makeReflectingRay } from '../../propagation/index.ts'
 import type { SettledNeed } from '../../study/index.ts'
 import { toDb, wavelengthM } from '../../units/index.ts'
 import { antennaM, meanEffectiveRadiusM, type OptionCells, residueOf } from '../optionCells.ts'
 import { fillLevelRow, lossesBetween, makeLevelRow, type RowModel } from '../signal/levelRow.ts'
+import { fillLobes, lobeModel } from '../signal/lobing.ts'
 import { overloadOf, thresholdRiseOf } from '../signal/receiverLimits.ts'
 import { targetSignal } from '../signal/targetSignal.ts'
 import { type LevelTest, makeNeedRow, type NeedRow, startRow, testLevel } from './levelTest.ts'
@@ -105,6 +107,18 @@ export function scanNeed(
     }
   }
   if (aboveSea) fill(0, ranges, null, 0)
+  const lobes = lobeModel(o.ground, o.radar, o.atmosphere)
+  const reflecting = lobes && makeReflectingRay(ranges, rangeStepM)
+  const cells = { groundM, code: o.site.code, relief: o.site.relief, inSight: o.mask.inSight }
+  const fillReflected = (first: number, last: number, from: number, own: number): void => {
+    if (!lobes || !reflecting) return
+    fillReflectingRay(reflecting, lobes.codes, cells, from, ranges, rangeStepM / 2, mast, own, lobes.tideM)
+    for (const t of tests) fillLobes(lobes, reflecting, signal, t.row, first, last, t.levelM, aboveSea ? null : groundM, from)
+    if (!lowModel) return
+    fillReflectingRay(reflecting, lobes.codes, cells, from, ranges, rangeStepM / 2, mast, (own * lowModel.c) / c, lobes.tideM)
+    for (const t of tests)
+      if (t.rowLow) fillLobes(lobes, reflecting, signal, t.rowLow, first, last, t.levelM, aboveSea ? null : groundM, from)
+  }
   const row = makeNeedRow(ranges)
   for (let i = 0; i < azimuths; i++) {
     const pairs = spans.pairs[i]
@@ -113,6 +127,7 @@ export function scanNeed(
     const end = pairs[pairs.length - 1]
     fillRayRow(ray, floorM, groundM, from, end, mast, c, rangeStepM)
     if (!aboveSea) fill(pairs[0], end, groundM, from)
+    fillReflected(pairs[0], end, from, 1 / o.site.effectiveRadiusM[i])
     for (let p = 0; p < pairs.length; p += 2) {
       startRow(row, pairs[p], pairs[p + 1])
       for (const t of tests) testLevel(t, row, pairs[p], pairs[p + 1], from)

@@ -9,7 +9,10 @@ export interface PlaceRef {
   readonly obstacle: string
 }
 
-/** Why a place is not usable, the first that applies; of the last six the first that, taken away alone, makes it pass. */
+/**
+ * Why a place is not usable, the first that applies; from short-range sensitivity on the first that, taken away alone, makes it pass. A null of the
+ * two rays comes before those, at the end of the list so that numbers of causes stay.
+ */
 export const LOSS_CAUSES = [
   'unknown',
   'out-of-range',
@@ -22,6 +25,7 @@ export const LOSS_CAUSES = [
   'blind-speed',
   'too-weak',
   'several',
+  'lobing',
 ] as const
 export type LossCause = (typeof LOSS_CAUSES)[number]
 /** Cause of a number as `NeedCells.cause` and the layer hold it: 1 + index in LOSS_CAUSES; null for 0 and NaN. */

@@ -17,6 +17,9 @@ export interface LevelRow {
   readonly heard: Uint8Array
   /** 1 where the target stands above the beam peak. */
   readonly above: Uint8Array
+  /** Loss of direct and reflected ray together where the mask is clear, two ways, dB; filled by `fillLobes` where anything reflects. */
+  readonly lobeDb: Float32Array
+  lobed: boolean
 }
 export const makeLevelRow = (ranges: number): LevelRow => ({
   slantM: new Float32Array(ranges),
@@ -26,6 +29,8 @@ export const makeLevelRow = (ranges: number): LevelRow => ({
   stcDb: new Float32Array(ranges),
   heard: new Uint8Array(ranges),
   above: new Uint8Array(ranges),
+  lobeDb: new Float32Array(ranges),
+  lobed: false,
 })
 
 /** What turns geometry into a row: the signal, the ratio asked for, the gain of a bank over noise (dB), the mast and the earth. */

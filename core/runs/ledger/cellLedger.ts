@@ -71,6 +71,9 @@ export function cellLedger(ground: Ground, study: SettledStudy, option: OptionRe
       antennaM,
       sight,
       radiusM: radius,
+      ground,
+      site,
+      mastM: option.heightM,
       lowSight: isLowK(earth.effectiveEarthFactor) ? null : sightPoint(ground, site, option.heightM, lowEarthOf(study), at),
       clutterAt: (slantM: number) => {
         // A target shares the gate of the ground at its own slant range.

@@ -4,10 +4,24 @@ import { weibullThresholdDb } from '../../detection/index.ts'
 import type { SuppressionBy } from '../../doppler/index.ts'
 import { elevationAngleDeg, slantRangeM } from '../../geodesy/index.ts'
 import type { SightPoint } from '../../masking/index.ts'
-import { aboveNoiseDb, echoAt, pdOf, plusRatioDb, receiverLinearRangeDb, targetSignal, twoWayEdgeLossDb } from '../../merit/index.ts'
+import {
+  aboveNoiseDb,
+  echoAt,
+  type Lobe,
+  lobeAt,
+  lobeModel,
+  pdOf,
+  plusRatioDb,
+  receiverLinearRangeDb,
+  type TargetSignal,
+  targetSignal,
+  twoWayEdgeLossDb,
+} from '../../merit/index.ts'
 import { compressionGainDb, noiseDbw, targetPolarisationLossDb } from '../../radar/index.ts'
 import type { SettledNeed, SettledStudy } from '../../study/index.ts'
+import type { Ground, Site } from '../../terrain/index.ts'
 import { fromDb, RAD_PER_DEG, toDb, wavelengthM } from '../../units/index.ts'
+import { earthOf } from '../optionParts.ts'
 import type { LedgerLine } from '../types.ts'
 import { GEOMETRY, ledgerLine, sumOf } from './line.ts'
 
@@ -16,6 +30,10 @@ const DETECTION = ['Detection of pulses in noise', 'Marcum and Swerling, exact m
 const GAUSSIAN_BEAM = ['Beam-shape loss', 'Barton, mathematics of a Gaussian beam'] as const
 const STATED = ['As the study states it', ''] as const
 const EDGE = ['Knife edge near the mask', 'Recommendation ITU-R P.526, from memory'] as const
+const TWO_RAY = [
+  'Two rays off water or level open ground',
+  'Kerr, Propagation of Short Radio Waves, 1951; ground constants and roughness from memory',
+] as const
 const GAS = ['Gas loss', 'Recommendation ITU-R P.676-12'] as const
 const RAIN = ['Rain loss', 'Recommendation ITU-R P.838-3'] as const
 const RESIDUE = ['Suppression by kind of clutter', '1/I = 1/I_spectral + 1/I_stability + 1/I_quantisation'] as const
@@ -34,6 +52,10 @@ export interface NeedPlaceParts {
   readonly antennaM: number
   readonly sight: SightPoint
   readonly radiusM: number
+  /** What the reflected ray is traced over. */
+  readonly ground: Ground
+  readonly site: Site
+  readonly mastM: number
   /** Sight at the smaller k; null where cover is not worked out there. */
   readonly lowSight: SightPoint | null
   /** Clutter of the resolution cell at a slant range on this azimuth. */
@@ -44,6 +66,20 @@ export interface NeedPlaceParts {
     readonly foldedRatio: number
     readonly rangeM: number
   }
+}
+
+const lobeOf = (p: NeedPlaceParts, signal: TargetSignal, targetM: number, slantM: number): Lobe | null => {
+  const model = lobeModel(p.ground, p.study.radar, p.study.atmosphere)
+  const place = {
+    ground: p.ground,
+    place: p.site,
+    heightM: p.mastM,
+    antennaM: p.antennaM,
+    earth: earthOf(p.study),
+    effectiveRadiusM: p.radiusM,
+    rangeStepM: p.study.run.rangeStepM,
+  }
+  return model && lobeAt(model, place, signal, p.sight, targetM, slantM)
 }
 
 /** The target of a need over this place, at its lowest level above the ground: from height margin to probability of detection. */
@@ -127,6 +163,22 @@ export function needLines(need: SettledNeed, p: NeedPlaceParts): { lines: Ledger
   put(snr, 'subtract', 'gas', 'gas, both ways', loss.gasDb, 'dB', GAS)
   put(snr, 'subtract', 'rain', 'rain, both ways', loss.rainDb, 'dB', RAIN)
   put(snr, 'subtract', 'edge', 'close over the mask, both ways', edgeDb, 'dB', EDGE, edgeDb > 0 ? 'from memory' : '')
+  const lobe = edgeDb === 0 && marginM >= 0 ? lobeOf(p, signal, targetM, slantM) : null
+  if (lobe) {
+    const mark = lobe.outside ? 'outside model' : 'from memory'
+    put(
+      snr,
+      'info',
+      'lobe_range',
+      `reflection point on ${lobe.surface === 'water' ? 'water' : 'open ground'}, ground range`,
+      lobe.rangeM,
+      'm',
+      TWO_RAY,
+    )
+    put(snr, 'info', 'lobe_grazing', 'grazing angle there', lobe.grazingDeg, 'deg', TWO_RAY, lobe.outside ? 'outside model' : '')
+    put(snr, 'info', 'lobe_factor', 'F⁴ of direct and reflected ray; a gain is not counted', lobe.factorDb, 'dB', TWO_RAY, mark)
+    put(snr, 'subtract', 'lobing', 'direct and reflected ray together, both ways', Math.max(0, -lobe.factorDb), 'dB', TWO_RAY, mark)
+  }
   put(snr, 'subtract', 'stc', 'short-range sensitivity', echo.stcDb, 'dB', STATED)
   const snrDb = finish(snr)
 

@@ -6,10 +6,11 @@ import { RAD_PER_DEG, toDb, wavelengthM } from '../../../units/index.ts'
 import { antennaM, type OptionCells, plusRatioDb, residueOf } from '../../optionCells.ts'
 import { aboveNoiseDb } from '../../signal/decibelTables.ts'
 import { twoWayEdgeLossDb } from '../../signal/edgeLoss.ts'
+import { type LobeModel, type LobePlace, lobeAt, lobeModel } from '../../signal/lobing.ts'
 import { pdOf } from '../../signal/pdOf.ts'
 import { overloadOf, thresholdRiseOf } from '../../signal/receiverLimits.ts'
 import { echoAt, type TargetEcho, type TargetSignal, targetSignal } from '../../signal/targetSignal.ts'
-import { signalLoss, signalMarginDb } from '../lossCause.ts'
+import { type SignalParts, signalLoss, signalMarginDb } from '../lossCause.ts'
 import { type FixFigure, lossCauseAt, lossCode } from '../needTypes.ts'
 import type { NeedPlace } from './types.ts'
 
@@ -58,6 +59,8 @@ export interface PlaceModel {
   readonly need: SettledNeed
   readonly signal: TargetSignal
   readonly noiseGainDb: number
+  /** null where nothing in the ground reflects. */
+  readonly lobes: LobeModel | null
 }
 export function placeModel(o: OptionCells, need: SettledNeed): PlaceModel {
   const { ranges, rangeStepM } = o.site.grid
@@ -68,7 +71,7 @@ export function placeModel(o: OptionCells, need: SettledNeed): PlaceModel {
     need.rcsM2,
     Math.max(ranges * rangeStepM, o.radar.instrumentedRangeM) * 1.5 + 50_000,
   )
-  return { o, need, signal, noiseGainDb: toDb(o.suppression.noiseGain) }
+  return { o, need, signal, noiseGainDb: toDb(o.suppression.noiseGain), lobes: lobeModel(o.ground, o.radar, o.atmosphere) }
 }
 
 /** Response of the processing to the target's own speed, dB over its mean: on the echo, or on the improvement of a bank. */
@@ -78,11 +81,13 @@ export interface Response {
 }
 export const MEAN_RESPONSE: Response = { echoDb: 0, residueDb: 0 }
 
-interface Echo extends TargetEcho {
+interface Echo {
+  readonly at: TargetEcho
   readonly slantM: number
-  /** Loss close over the mask, dB. */
+  /** Loss close over the mask, and of direct and reflected ray together where it is clear, dB. */
   readonly edgeDb: number
-  /** S/N with that loss, less the required ratio, with a bank's gain, dB. */
+  readonly lobeDb: number
+  /** S/N with those losses, less the required ratio, with a bank's gain, dB. */
   readonly headDb: number
 }
 function echoOf(m: PlaceModel, s: SightPoint, targetM: number, radiusM: number): Echo {
@@ -92,8 +97,20 @@ function echoOf(m: PlaceModel, s: SightPoint, targetM: number, radiusM: number):
   const tan = Math.tan(elevationAngleDeg(mast, targetM, s.rangeM, radiusM) * RAD_PER_DEG)
   const echo = echoAt(signal, mast, targetM, s.rangeM, slantM, tan)
   const edgeDb = twoWayEdgeLossDb(targetM - s.floorM, s.rangeM, s.controlling.rangeM, wavelengthM(o.radar.frequencyHz))
-  return { ...echo, slantM, edgeDb, headDb: echo.snrDb - edgeDb - need.requiredRatioDb + m.noiseGainDb }
+  const lobe = m.lobes && edgeDb === 0 && targetM >= s.floorM ? lobeAt(m.lobes, lobePlaceOf(o, radiusM), signal, s, targetM, slantM) : null
+  const lobeDb = lobe ? Math.max(0, -lobe.factorDb) : 0
+  return { at: echo, slantM, edgeDb, lobeDb, headDb: echo.snrDb - edgeDb - lobeDb - need.requiredRatioDb + m.noiseGainDb }
 }
+
+const lobePlaceOf = (o: OptionCells, effectiveRadiusM: number): LobePlace => ({
+  ground: o.ground,
+  place: o.place,
+  heightM: o.heightM,
+  antennaM: antennaM(o),
+  earth: o.earth,
+  effectiveRadiusM,
+  rangeStepM: o.site.grid.rangeStepM,
+})
 
 /** Clutter of the resolution cell a target shares: residue over noise before STC, dB, NaN where none; null beyond the grid, where nothing was worked out. */
 function residueAt(o: OptionCells, s: SightPoint, slantM: number, stcDb: number): number | null {
@@ -115,9 +132,74 @@ function residueAt(o: OptionCells, s: SightPoint, slantM: number, stcDb: number)
   return (echo > 0 ? plusRatioDb(residue, echo * foldedLeft) : residue) + rise
 }
 
+/** What one place is to one option, in numbers. */
+export interface PlaceVerdict {
+  readonly slantM: number
+  /** Loss close over the mask that is in the ratios, dB. */
+  readonly edgeDb: number
+  /** S/N of one pulse after short-range sensitivity, dB. */
+  readonly snrDb: number
+  /** Residue of the resolution cell over noise, dB; null beyond the grid. */
+  readonly residueDb: number | null
+  /** S/(C/I+N) less the required ratio, dB. */
+  readonly marginDb: number
+  readonly heard: boolean
+  readonly detectable: boolean
+  readonly usable: boolean
+  /** Code of LOSS_CAUSES; 0 = usable. */
+  readonly cause: number
+}
+/** A place on known ground with a target at a height, m MSL. */
+export function judgePlace(m: PlaceModel, sight: SightPoint, targetM: number, visible: Visible, response: Response): PlaceVerdict {
+  const { o } = m
+  const echo = echoOf(m, sight, targetM, radiusOf(o.earth, o.place.lat, sight.azimuthDeg))
+  const { heard, stcDb } = echo.at
+  const residueDb = residueAt(o, sight, echo.slantM, stcDb)
+  const parts: SignalParts = {
+    headDb: echo.headDb,
+    gainDb: echo.at.gainDb,
+    stcDb,
+    residueDb: residueDb ?? Number.NaN,
+    noiseGainDb: m.noiseGainDb,
+    above: echo.at.above,
+    echoResponseDb: response.echoDb,
+    residueResponseDb: response.residueDb,
+  }
+  const marginDb = signalMarginDb(parts)
+  const detectable = visible === 'yes' && heard && echo.headDb >= 0
+  const usable = detectable && residueDb !== null && marginDb >= 0
+  const cause = usable
+    ? 0
+    : !heard
+      ? OUT_OF_RANGE
+      : visible !== 'yes'
+        ? visible === 'marginal'
+          ? MARGINAL
+          : MASKED
+        : residueDb === null
+          ? UNKNOWN
+          : echo.edgeDb > 0 && signalMarginDb({ ...parts, headDb: echo.headDb + echo.edgeDb }) >= 0
+            ? MASKED
+            : signalLoss(parts)
+  return {
+    slantM: echo.slantM,
+    edgeDb: echo.edgeDb,
+    snrDb: echo.headDb + m.need.requiredRatioDb - m.noiseGainDb,
+    residueDb,
+    marginDb,
+    heard,
+    detectable,
+    usable,
+    cause,
+  }
+}
+const OUT_OF_RANGE = lossCode('out-of-range')
+const MARGINAL = lossCode('marginal')
+const MASKED = lossCode('masked')
+const UNKNOWN = lossCode('unknown')
+
 /** One place against one option on its own ray. */
 export function checkPlace(m: PlaceModel, at: NeedPlace, seen: PlaceSight, response: Response = MEAN_RESPONSE): FixFigure {
-  const { o } = m
   const { sight, low } = seen
   const base = { name: at.name, lon: at.lon, lat: at.lat, azimuthDeg: sight.azimuthDeg, rangeM: sight.rangeM }
   const targetM = heightAt(at, sight.groundM)
@@ -136,36 +218,10 @@ export function checkPlace(m: PlaceModel, at: NeedPlace, seen: PlaceSight, respo
       usableLowK: low && false,
       cause: 'unknown',
     }
-  const echo = echoOf(m, sight, targetM, radiusOf(o.earth, o.place.lat, sight.azimuthDeg))
-  const residueDb = residueAt(o, sight, echo.slantM, echo.stcDb)
-  const { heard } = echo
-  const parts = {
-    headDb: echo.headDb,
-    gainDb: echo.gainDb,
-    stcDb: echo.stcDb,
-    residueDb: residueDb ?? Number.NaN,
-    noiseGainDb: m.noiseGainDb,
-    above: echo.above,
-    echoResponseDb: response.echoDb,
-    residueResponseDb: response.residueDb,
-  }
-  const marginDb = signalMarginDb(parts)
-  const detectable = visible === 'yes' && heard && echo.headDb >= 0
-  const usable = detectable && residueDb !== null && marginDb >= 0
-  const cause = usable
-    ? 0
-    : !heard
-      ? lossCode('out-of-range')
-      : visible !== 'yes'
-        ? lossCode(visible === 'marginal' ? 'marginal' : 'masked')
-        : residueDb === null
-          ? lossCode('unknown')
-          : echo.edgeDb > 0 && signalMarginDb({ ...parts, headDb: echo.headDb + echo.edgeDb }) >= 0
-            ? lossCode('masked')
-            : signalLoss(parts)
+  const { slantM, snrDb, residueDb, marginDb, detectable, usable, cause } = judgePlace(m, sight, targetM, visible, response)
   return {
     ...base,
-    slantRangeM: echo.slantM,
+    slantRangeM: slantM,
     altM,
     altAglM: targetM - sight.groundM,
     floorM: sight.floorM,
@@ -173,7 +229,7 @@ export function checkPlace(m: PlaceModel, at: NeedPlace, seen: PlaceSight, respo
     floorBandM: sight.floorBandM,
     marginM: targetM - sight.floorM,
     visible,
-    snrDb: echo.headDb + m.need.requiredRatioDb - m.noiseGainDb,
+    snrDb,
     signalMarginDb: residueDb === null ? null : marginDb,
     pd: residueDb === null || visible !== 'yes' ? null : pdOf(m.need.required)(marginDb),
     detectable,
@@ -197,11 +253,11 @@ function atLowK(
   const visibleLowK = visibleFrom(low, targetM)
   if (visibleLowK !== 'yes') return { visibleLowK, detectableLowK: false, usableLowK: false }
   const echo = echoOf(m, low, targetM, radiusOf(o.lowK.earth, o.place.lat, low.azimuthDeg))
-  const detectableLowK = echo.heard && echo.headDb >= 0
+  const detectableLowK = echo.at.heard && echo.headDb >= 0
   const over =
     residueDb === null
       ? Number.NEGATIVE_INFINITY
-      : echo.headDb + response.echoDb - aboveNoiseDb(residueDb - response.residueDb - echo.stcDb + m.noiseGainDb)
+      : echo.headDb + response.echoDb - aboveNoiseDb(residueDb - response.residueDb - echo.at.stcDb + m.noiseGainDb)
   return { visibleLowK, detectableLowK, usableLowK: detectableLowK && over >= 0 }
 }
 

@@ -1,0 +1,3 @@
+export * from './reflectingRay.ts'
+export * from './reflectingSurface.ts'
+export * from './twoRaySum.ts'

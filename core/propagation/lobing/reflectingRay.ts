@@ -1,0 +1,180 @@
+import type { GroundCode } from '../../landcover/index.ts'
+import { RELIEF } from '../../terrain/index.ts'
+import { REFLECTS } from './reflectingSurface.ts'
+
+/** Level open ground is taken at its mean over this far to either side, m: a few posts of noise are no mirror. */
+const SMOOTH_M = 250
+
+/** Ground codes as a reflecting ray reads them: what they reflect as, and how high their cover stands, m. One entry per code byte. */
+export interface ReflectingCodes {
+  readonly kind: Uint8Array
+  readonly coverM: Float64Array
+}
+/** Codes of a ground that may reflect: water, and open ground where its relief is low. null where there are none of them. */
+export function reflectingCodes(codes: readonly GroundCode[]): ReflectingCodes | null {
+  const kind = new Uint8Array(256)
+  const coverM = new Float64Array(256)
+  codes.forEach(({ terrain, coverHeightM }, n) => {
+    kind[n] = terrain === 'water' ? REFLECTS.water : terrain === 'open' ? REFLECTS.open : REFLECTS.none
+    coverM[n] = coverHeightM
+  })
+  return kind.some((k) => k !== REFLECTS.none) ? { kind, coverM } : null
+}
+
+/** Cells of one or more rays: ground at the centre (m MSL), ground code, relief, share in sight of the antenna of 65535. */
+export interface RayCells {
+  readonly groundM: Float32Array
+  readonly code: Uint8Array
+  readonly relief: Uint8Array
+  readonly inSight: Uint16Array
+}
+/** Where rays come off the ground along one azimuth, by cell; filled again for each azimuth. */
+export interface ReflectingRay {
+  /** Ground range of the first centre and distance between centres, m. */
+  firstM: number
+  readonly stepM: number
+  /** Cells in use, and whether any of them reflects. */
+  count: number
+  any: boolean
+  antennaM: number
+  /** 1 / effective earth radius. */
+  c: number
+  /** A value of REFLECTS; none where the antenna does not see the cell. */
+  readonly kind: Uint8Array
+  /** Height of the reflecting surface, m MSL. */
+  readonly heightM: Float64Array
+  /** Tangent of the grazing angle of the ray from the antenna. */
+  readonly tan: Float64Array
+  readonly surfaceM: Float64Array
+  /** Highest surface from a cell on, m. */
+  readonly topM: Float64Array
+  /** Cell in which the reflected ray meets the surface again; −1 = not looked for yet. */
+  readonly meets: Int32Array
+  /** The last point found by `reflectionTo`: its range and height, m, and a value of REFLECTS. */
+  atM: number
+  atHeightM: number
+  atKind: number
+}
+
+export function makeReflectingRay(cells: number, stepM: number): ReflectingRay {
+  const values = (): Float64Array => new Float64Array(cells)
+  return {
+    firstM: stepM / 2,
+    stepM,
+    count: 0,
+    any: false,
+    antennaM: 0,
+    c: 0,
+    kind: new Uint8Array(cells),
+    heightM: values(),
+    tan: values(),
+    surfaceM: values(),
+    topM: values(),
+    meets: new Int32Array(cells),
+    atM: 0,
+    atHeightM: 0,
+    atKind: REFLECTS.none,
+  }
+}
+
+/**
+ * Fills a ray from `count` cells that start at index `from`, centres from `firstM` (m) on. Reflects: water (raised by the tide) and low-relief open
+ * ground, half of whose cell the antenna sees. `c` = 1 / effective earth radius.
+ */
+export function fillReflectingRay(
+  ray: ReflectingRay,
+  codes: ReflectingCodes,
+  cells: RayCells,
+  from: number,
+  count: number,
+  firstM: number,
+  antennaM: number,
+  c: number,
+  tideM: number,
+): void {
+  const { kind, heightM, tan, surfaceM, topM, meets, stepM } = ray
+  Object.assign(ray, { firstM, count, antennaM, c, any: false })
+  for (let i = 0; i < count; i++) {
+    const at = from + i
+    const own = codes.kind[cells.code[at]]
+    const reflects = cells.inSight[at] > 32767 && (own === REFLECTS.water || (own === REFLECTS.open && cells.relief[at] === RELIEF.low))
+    kind[i] = reflects ? own : REFLECTS.none
+    if (reflects) ray.any = true
+  }
+  if (!ray.any) return
+  let top = Number.NEGATIVE_INFINITY
+  for (let i = count - 1; i >= 0; i--) {
+    const ground = cells.groundM[from + i]
+    const surface = Number.isNaN(ground) ? Number.NEGATIVE_INFINITY : ground + codes.coverM[cells.code[from + i]]
+    surfaceM[i] = surface
+    if (surface > top) top = surface
+    topM[i] = top
+    meets[i] = -1
+  }
+  // mean of the open ground around each open cell, by a window that moves along
+  const reach = Math.max(0, Math.round(SMOOTH_M / stepM))
+  let sum = 0
+  let held = 0
+  for (let i = -reach; i < count; i++) {
+    const enters = i + reach
+    const leaves = i - reach - 1
+    if (enters < count && kind[enters] === REFLECTS.open) {
+      sum += cells.groundM[from + enters]
+      held++
+    }
+    if (leaves >= 0 && kind[leaves] === REFLECTS.open) {
+      sum -= cells.groundM[from + leaves]
+      held--
+    }
+    if (i < 0) continue
+    const d = firstM + i * stepM
+    const z = kind[i] === REFLECTS.open ? sum / held : cells.groundM[from + i] + tideM
+    heightM[i] = z
+    tan[i] = (antennaM - z) / d - (d * c) / 2
+  }
+}
+
+/** Height over sea level at a ground range of the ray that came off cell i, m. */
+function reflectedM(ray: ReflectingRay, i: number, rangeM: number): number {
+  const x = rangeM - ray.firstM - i * ray.stepM
+  return ray.heightM[i] + x * ray.tan[i] + (x * x * ray.c) / 2
+}
+
+/** First cell in which the ray off cell i meets the surface; the number of cells where none. The ground around the point itself is its mirror. */
+function meetsAgain(ray: ReflectingRay, i: number): number {
+  const { meets, surfaceM, topM, count, stepM, firstM } = ray
+  if (meets[i] >= 0) return meets[i]
+  let k = i + 1 + Math.round(SMOOTH_M / stepM)
+  for (; k < count; k++) {
+    const y = reflectedM(ray, i, firstM + k * stepM)
+    if (y >= topM[k]) k = count
+    else if (surfaceM[k] > y) break
+  }
+  meets[i] = Math.min(k, count)
+  return meets[i]
+}
+
+/**
+ * Looks for the reflection point toward a target (height m MSL) at a ground range (m) in cell `cell` of the ray, from cell `start` on: the first
+ * reflecting cell whose ray passes at or under the target, between it and the reflecting cell before. Returns the cell the search got to, the
+ * start for any target farther out at the same height or higher; the point is in `ray.at…`, `atKind` REFLECTS.none where there is none in sight of
+ * both ends.
+ */
+export function reflectionTo(ray: ReflectingRay, cell: number, rangeM: number, targetM: number, start: number): number {
+  const { kind, heightM, tan, stepM, firstM } = ray
+  let i = start
+  while (i < cell && (kind[i] === REFLECTS.none || reflectedM(ray, i, rangeM) > targetM)) i++
+  ray.atKind = REFLECTS.none
+  if (i >= cell || i === 0 || kind[i - 1] === REFLECTS.none) return i
+  const before = reflectedM(ray, i - 1, rangeM) - targetM
+  const here = reflectedM(ray, i, rangeM) - targetM
+  // the cell before starts the stretch: its ray already passes under the target
+  if (!(before > 0)) return i
+  const t = before / (before - here)
+  const near = t < 0.5 ? i - 1 : i
+  if (meetsAgain(ray, near) < cell || !(tan[near] > 0)) return i
+  ray.atM = firstM + (i - 1 + t) * stepM
+  ray.atHeightM = heightM[i - 1] + t * (heightM[i] - heightM[i - 1])
+  ray.atKind = kind[near]
+  return i
+}
