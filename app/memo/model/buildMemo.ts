@@ -12,36 +12,35 @@ import { optionBlocks, optionFinding } from './optionSection.ts'
 import { hasTilts, summaryBlocks } from './summarySection.ts'
 import type { Block, MemoInput, MemoModel, Section } from './types.ts'
 
-/** The memo as ordered sections of words, tables and drawings: the PDF and the app's memo column print the same model. */
-export function buildMemo(input: MemoInput): MemoModel {
+/**
+ * The memo as ordered sections of words, tables and drawings: the PDF and the app's memo column print the same model. `only`: the summary and that
+ * option alone have blocks, which is all that stands in the column beside the map.
+ */
+export function buildMemo(input: MemoInput, only?: OptionRef | null): MemoModel {
   let figures = 0
   const figure = (): number => ++figures
   const sections: Section[] = []
-  const add = (id: string, title: string, blocks: readonly Block[], more: Partial<Section> = {}): void => {
-    sections.push({ id, number: sections.length + 1, title, blocks, ...more })
+  const add = (id: string, title: string, blocks: () => readonly Block[], more: Partial<Section> = {}): void => {
+    const wanted = only === undefined || id === 'summary' || (more.option && sameOption(more.option, only))
+    sections.push({ id, number: sections.length + 1, title, blocks: wanted ? blocks() : [], ...more })
   }
-  add('summary', 'Summary', summaryBlocks(input))
-  add('need', 'Need', needBlocks(input), { newPage: true })
-  add('data', 'Data and assumptions', dataBlocks(input))
-  add('candidates', 'Candidates', candidateBlocks(input))
+  add('summary', 'Summary', () => summaryBlocks(input))
+  add('need', 'Need', () => needBlocks(input), { newPage: true })
+  add('data', 'Data and assumptions', () => dataBlocks(input))
+  add('candidates', 'Candidates', () => candidateBlocks(input))
   const ordered = inStudyOrder(input)
   for (const r of ordered)
-    add(`option-${r.ref.candidate}-${r.ref.heightM}-${r.ref.tiltDeg}`, optionTitle(input, r.ref), optionBlocks(input, r, figure), {
+    add(`option-${r.ref.candidate}-${r.ref.heightM}-${r.ref.tiltDeg}`, optionTitle(input, r.ref), () => optionBlocks(input, r, figure), {
       option: r.ref,
       finding: optionFinding(input, r).lead,
       newPage: true,
     })
-  add('comparison', 'Comparison', comparisonBlocks(input, figure), { newPage: true })
-  add('exposure', 'RF exposure', exposureBlocks(input))
-  add('not-assessed', 'Not assessed', notAssessedBlocks())
-  add('cautions', 'Cautions', cautionBlocks())
-  add('models', 'Models and sources', modelBlocks(input))
-  add(
-    'annex',
-    'Annex: horizon by azimuth',
-    annexBlocks(input, ordered, (r) => optionTitle(input, r.ref)),
-    { newPage: true },
-  )
+  add('comparison', 'Comparison', () => comparisonBlocks(input, figure), { newPage: true })
+  add('exposure', 'RF exposure', () => exposureBlocks(input))
+  add('not-assessed', 'Not assessed', () => notAssessedBlocks())
+  add('cautions', 'Cautions', () => cautionBlocks())
+  add('models', 'Models and sources', () => modelBlocks(input))
+  add('annex', 'Annex: horizon by azimuth', () => annexBlocks(input, ordered, (r) => optionTitle(input, r.ref)), { newPage: true })
   const candidates = input.study.candidates.map((c) => c.id).join(', ')
   return {
     title: input.study.name,
@@ -58,6 +57,9 @@ export function buildMemo(input: MemoInput): MemoModel {
     sections,
   }
 }
+const sameOption = (a: OptionRef, b: OptionRef | null): boolean =>
+  a.candidate === b?.candidate && a.heightM === b.heightM && a.tiltDeg === b.tiltDeg
+
 function optionTitle(input: MemoInput, ref: OptionRef): string {
   const name = input.study.candidates.find((c) => c.id === ref.candidate)?.name ?? ref.candidate
   const own = optionName(ref, hasTilts(input))

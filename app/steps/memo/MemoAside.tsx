@@ -39,8 +39,8 @@ export function MemoAside() {
 
 /** The memo; while the option on show is being computed again, the memo as it was, marked so. */
 function useLastModel(): { model: MemoModel | null; stale: boolean } {
-  const model = useMemoModel()
   const option = useView((v) => v.option)
+  const model = useMemoModel(option)
   const computed = useResults((r) => (option ? r.byOption.has(optionKey(option)) : true))
   const last = useRef<{ model: MemoModel; option: OptionRef | null } | null>(null)
   if (model && computed) last.current = { model, option }

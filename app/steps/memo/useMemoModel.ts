@@ -1,24 +1,28 @@
-import { useEffect, useMemo, useState } from 'react'
+import { useDeferredValue, useEffect, useMemo, useState } from 'react'
+import type { OptionRef } from '../../../core/index.ts'
 import type { MemoModel } from '../../memo/model/index.ts'
 import type { Session } from '../session/index.ts'
 import { useDoc, useGround, useResults, useSession, useView } from '../session/index.ts'
 
-type Build = (session: Session) => MemoModel | null
+type Build = (session: Session, only: OptionRef | null | undefined) => MemoModel | null
 
 /** Loads model and input together on first use. */
 async function loadBuild(): Promise<Build> {
   const [{ buildMemo }, { memoFiles, memoInput }] = await Promise.all([import('../../memo/model/index.ts'), import('./memoInput.ts')])
-  return (session) => {
+  return (session, only) => {
     const input = memoInput(session, memoFiles(session), [], new Date().toISOString())
-    return input && input.results.length > 0 ? buildMemo(input) : null
+    return input && input.results.length > 0 ? buildMemo(input, only) : null
   }
 }
 
-/** The memo as it stands: words and tables without pictures; null until something is computed. */
-export function useMemoModel(): MemoModel | null {
+/**
+ * The memo as it stands: words and tables without pictures; null until something is computed. `only`: words of that option alone, as beside the map.
+ * New results come in when the page has time for it.
+ */
+export function useMemoModel(only?: OptionRef | null): MemoModel | null {
   const session = useSession()
   const doc = useDoc((d) => d)
-  const serial = useResults((r) => r.serial)
+  const serial = useDeferredValue(useResults((r) => r.serial))
   const any = useResults((r) => r.byOption.size > 0)
   const notes = useGround((g) => g.notes)
   const units = useView((v) => v.units)
@@ -27,5 +31,5 @@ export function useMemoModel(): MemoModel | null {
     if (any) void loadBuild().then((b) => setBuild(() => b))
   }, [any])
   // biome-ignore lint/correctness/useExhaustiveDependencies: the input is read from the stores; these say when it has changed
-  return useMemo(() => (build && any ? build(session) : null), [build, session, any, doc, serial, notes, units])
+  return useMemo(() => (build && any ? build(session, only) : null), [build, session, any, doc, serial, notes, units, only])
 }
