@@ -165,20 +165,22 @@ const obstacleWords = (names: readonly string[]): string => (names.length === 1 
 
 function horizonFigure(input: MemoInput, r: OptionResult, number: number): Block {
   const { rows, highest, medianDeg } = r.figures.horizon
-  const { drawing } = horizonChart({
-    rows,
-    width: TEXT_WIDTH_PT,
-    height: 132,
-    system: input.system,
-    size: SMALL_PT - 1,
-    style: 'chart',
-    labels: 7,
-  })
+  const { system } = input
+  const chart = { rows, width: TEXT_WIDTH_PT, height: 132, system, size: SMALL_PT - 1, style: 'chart', labels: 7 } as const
   const finding =
     highest === null
       ? 'No azimuth has a known horizon.'
       : `The horizon stands highest at azimuth ${textOf(formatAzimuth(highest.azimuthDeg, 1))}: ${textOf(formatScreening(highest.elevationDeg))}, ${isAtLeast(highest) ? `at least (${whyAtLeast(highest)})` : `set by ${highest.obstacle}`} at ${withMetric((s) => formatPlaceRange(highest.rangeM, s), input.system)}; half of all azimuths lie at or under ${textOf(formatScreening(medianDeg))}.`
-  return { kind: 'figure', id: 'horizon', number, caption: finding, drawing }
+  return {
+    kind: 'figure',
+    id: 'horizon',
+    number,
+    caption: finding,
+    // drawn when it is printed: the column beside the map has no use for it
+    get drawing() {
+      return horizonChart(chart).drawing
+    },
+  }
 }
 
 function floorTable(input: MemoInput, r: OptionResult): TableBlock {
