@@ -1,19 +1,25 @@
 import { InputError } from '../errors/index.ts'
 import { normalLon } from './longitude.ts'
+import { looksLikeMgrs, parseMgrs } from './mgrs.ts'
 import { crsTransform } from './transform.ts'
 import type { LonLat } from './types.ts'
 
-const REMEDY = 'write latitude, longitude: 51.5074 -0.1278, or 51°30\'26"N 000°07\'40"W, or 513026N 0000740W, or UTM 33N 500000 5400000'
+const REMEDY =
+  'write latitude, longitude: 51.5074 -0.1278, or 51°30\'26"N 000°07\'40"W, or 513026N 0000740W, UTM 33N 500000 5400000, or MGRS'
 const fault = (found: string): InputError => new InputError({ code: 'position', found, remedy: REMEDY })
 
 /**
  * Position as a person types it, WGS 84: decimal degrees (latitude first unless letters N S E W say otherwise), degrees-minutes-seconds with or without
- * signs, packed DDMMSS with letters, or UTM "33N 500000 5400000" (N and S are hemispheres). Throws InputError that shows the forms.
+ * signs, packed DDMMSS with letters, UTM "33N 500000 5400000" (N and S are hemispheres), or MGRS "33UXP 01234 56789". Throws InputError that shows the forms.
  */
 export function parsePosition(text: string): LonLat {
   const t = text.trim().replace(/[−–]/g, '-')
   const utm = /^(?:UTM\s*)?(\d{1,2})\s*([NS])[\s,;]+(\d{5,7}(?:\.\d+)?)\s*m?E?[\s,;]+(\d{1,8}(?:\.\d+)?)\s*m?N?$/i.exec(t)
   if (utm) return fromUtm(Number(utm[1]), utm[2].toUpperCase() === 'S', Number(utm[3]), Number(utm[4]))
+  if (looksLikeMgrs(t)) {
+    const square = parseMgrs(t)
+    return fromUtm(square.zone, square.south, square.eastingM, square.northingM)
+  }
   const halves = split(t)
   if (!halves) throw fault(`"${t.slice(0, 40)}" is no position`)
   const [a, b] = halves.map((h) => angle(h, t))

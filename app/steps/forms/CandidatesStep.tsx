@@ -61,7 +61,7 @@ export function CandidatesStep() {
         <PositionField
           label="Position"
           value={null}
-          help="Decimal degrees, degrees minutes seconds, DDMMSS, or UTM such as 33N 500000 5400000"
+          help="Decimal degrees, degrees minutes seconds, DDMMSS, UTM such as 33N 500000 5400000, or MGRS such as 33UXP 01234 56789"
           onCommit={(at) => {
             const id = addCandidate(study, at)
             select(id)
