@@ -1,4 +1,4 @@
-import type { OptionRef, OptionResult } from '../../core/index.ts'
+import { coverageOf, nonDominated, type OptionRef, type OptionResult } from '../../core/index.ts'
 import { formatMast, textOf, toFace, type UnitSystem, unitOf } from '../words/index.ts'
 import { niceTicks, xAxis, yAxis } from './axes.ts'
 import { type Box, type Drawing, type Item, type Point, pathOf, round3, scaleOf } from './drawing.ts'
@@ -18,7 +18,14 @@ export interface OptionsGeometry {
   readonly drawing: Drawing
   readonly box: Box
   /** One per result that has both figures, in the order given. */
-  readonly points: readonly { readonly ref: OptionRef; readonly x: number; readonly y: number; readonly label: string }[]
+  readonly points: readonly {
+    readonly ref: OptionRef
+    readonly x: number
+    readonly y: number
+    readonly label: string
+    /** No other option gives at least as much for less, or more for as little; drawn filled, and their points are joined by a dashed line. */
+    readonly best: boolean
+  }[]
 }
 /** Share of the need in sight, %; of known and unknown ground where no layer need is evaluated. */
 export function inSightPctOf(result: OptionResult, needId: string | null): number | null {
@@ -30,27 +37,14 @@ export function inSightPctOf(result: OptionResult, needId: string | null): numbe
   return all > 0 ? (100 * groundInSightKm2) / all : null
 }
 
-/** Both axes of one option: usable share and area short of suppression, of one need or of all needs of an area, each by its area. */
-export function coverageOf(result: OptionResult, needId: string | null): { usablePct: number; shortKm2: number } | null {
-  const areas = result.figures.needs.filter((n) => n.notAssessed === null && n.measure === 'area')
-  const chosen = areas.filter((n) => n.needId === needId)
-  const needs = chosen.length > 0 ? chosen : areas
-  const areaKm2 = needs.reduce((sum, n) => sum + n.areaKm2, 0)
-  if (areaKm2 === 0) return null
-  return {
-    usablePct: needs.reduce((sum, n) => sum + n.usablePct * n.areaKm2, 0) / areaKm2,
-    shortKm2: needs.reduce((sum, n) => sum + n.suppression.shortKm2, 0),
-  }
-}
-
 /** Coverage against clutter: every option as a named point, mast heights of one candidate joined. */
 export function optionsChart(input: OptionsInput): OptionsGeometry {
   const { results, width, height, system, size } = input
   const box: Box = { left: 3.8 * size, right: width - 1.6 * size, top: 2.2 * size, bottom: height - 3 * size }
   const tilts = new Set(results.map((r) => r.ref.tiltDeg)).size > 1
-  const asked = results.every((r) => coverageOf(r, input.needId) !== null)
+  const asked = results.every((r) => coverageOf(r.figures, input.needId) !== null)
   const known = results.flatMap((r) => {
-    const both = asked ? coverageOf(r, input.needId) : null
+    const both = asked ? coverageOf(r.figures, input.needId) : null
     const pct = both?.usablePct ?? inSightPctOf(r, input.needId)
     const km2 = both?.shortKm2 ?? r.figures.clutterOverKm2.over40
     return pct === null ? [] : [{ ref: r.ref, pct, area: toFace('area', km2, system) }]
@@ -76,14 +70,19 @@ export function optionsChart(input: OptionsInput): OptionsGeometry {
     ),
     ...xAxis(box, across, x.ticks, `${acrossWords}, ${unitOf('area', system)}`, size),
   ]
-  const points = known.map((k) => ({
+  // ground in sight is no gain by itself: without a need nothing is marked
+  const best = asked ? nonDominated(known.map((k) => ({ gain: k.pct, cost: k.area }))) : []
+  const points = known.map((k, i) => ({
     ref: k.ref,
+    best: best[i] ?? false,
     x: round3(across.at(k.area)),
     y: round3(up.at(k.pct)),
     label: labelOfOption(k.ref, tilts),
   }))
   const lines = joined(points)
   for (const line of lines) items.push({ kind: 'path', d: pathOf(line), stroke: 'ink-3', width: 0.8 })
+  const edge = points.filter((p) => p.best).sort((a, b) => a.x - b.x || b.y - a.y)
+  if (edge.length > 1) items.push({ kind: 'path', d: pathOf(edge.map((p): Point => [p.x, p.y])), stroke: 'ink', width: 1, dash: [2, 3] })
   const isSelected = (ref: OptionRef): boolean =>
     input.selected !== null &&
     ref.candidate === input.selected.candidate &&
@@ -102,8 +101,8 @@ export function optionsChart(input: OptionsInput): OptionsGeometry {
       x: p.x,
       y: p.y,
       r: chosen ? 4.5 : 3.2,
-      fill: chosen ? 'accent' : 'sheet',
-      stroke: chosen ? 'accent' : 'ink',
+      fill: chosen ? 'accent' : p.best ? 'ink' : 'sheet',
+      stroke: chosen ? 'accent' : p.best || !asked ? 'ink' : 'ink-3',
       width: 1.2,
     })
   }

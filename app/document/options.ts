@@ -6,9 +6,11 @@ const DEFAULT_TILT_DEG = 0
 export function studyOptions(doc: StudyDoc): OptionRef[] {
   const own = doc.radar.antenna.tiltDeg ?? DEFAULT_TILT_DEG
   return doc.candidates.flatMap((c) =>
-    c.rejected !== undefined ? [] : [...c.mastHeightsM]
-      .sort((a, b) => a - b)
-      .flatMap((heightM) => tiltsOf(c.tiltsDeg, own).map((tiltDeg) => ({ candidate: c.id, heightM, tiltDeg }))),
+    c.rejected !== undefined
+      ? []
+      : [...c.mastHeightsM]
+          .sort((a, b) => a - b)
+          .flatMap((heightM) => tiltsOf(c.tiltsDeg, own).map((tiltDeg) => ({ candidate: c.id, heightM, tiltDeg }))),
   )
 }
 const tiltsOf = (stated: number[] | null | undefined, own: number): number[] => (stated && stated.length > 0 ? stated : [own])

@@ -8,6 +8,7 @@ import {
   formatHeight,
   formatLossPct,
   formatMargin,
+  formatMast,
   formatMetPct,
   formatRange,
   formatRangeUp,
@@ -52,6 +53,12 @@ const PLAIN: Readonly<Record<string, FigureWords>> = {
     meaning: 'As stated for the candidate, else bilinear from the raster',
     layer: 'masked',
     format: formatHeight,
+  },
+  mast_height_m: {
+    label: 'Mast height',
+    meaning: 'Electrical centre above the ground at the mast, as the option states it',
+    layer: 'masked',
+    format: (v) => (v === null ? { value: NO_VALUE, unit: '' } : formatMast(v)),
   },
   antenna_m: {
     label: 'Electrical centre',

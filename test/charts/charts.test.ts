@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import * as c from '../../app/charts/index.ts'
+import { coverageOf } from '../../core/index.ts'
 import { sampleProfile, sampleResults, sampleRows } from '../memo/sample.ts'
 
 const size = 12
@@ -105,16 +106,37 @@ describe('options plot', () => {
     const texts = d.items.flatMap((i) => (i.kind === 'text' ? [i.text.replaceAll('\u202f', ' ')] : []))
     for (const name of ['A 12 m', 'A 24 m', 'B 12 m', 'B 24 m', 'C 24 m']) expect(texts).toContain(name)
   })
+  it('marks the options that no other beats in usable share and area short of suppression', () => {
+    const { points } = c.optionsChart({
+      results: sampleResults,
+      needId: 'n1',
+      selected: null,
+      width: 480,
+      height: 260,
+      system: 'metric',
+      size,
+    })
+    const both = (i: number) => coverageOf(sampleResults[i].figures, 'n1')!
+    points.forEach((p, i) => {
+      const beaten = points.some((_q, k) => {
+        const [own, other] = [both(i), both(k)]
+        const noWorse = other.usablePct >= own.usablePct && other.shortKm2 <= own.shortKm2
+        return noWorse && (other.usablePct > own.usablePct || other.shortKm2 < own.shortKm2)
+      })
+      expect(p.best, p.label).toBe(!beaten)
+    })
+    expect(points.filter((p) => p.best).length).toBeGreaterThan(0)
+  })
 })
 
 describe('coverage against clutter', () => {
   it('weighs the usable shares of all needs by their area, and adds up what is short', () => {
     const { needs } = sampleResults[1].figures
     const [one, two] = needs
-    const all = c.coverageOf(sampleResults[1], null)!
+    const all = coverageOf(sampleResults[1].figures, null)!
     expect(all.usablePct).toBeCloseTo((one.usablePct * 4870 + two.usablePct * 590) / 5460, 9)
     expect(all.shortKm2).toBe(one.suppression.shortKm2 + two.suppression.shortKm2)
-    expect(c.coverageOf(sampleResults[1], 'n2')).toEqual({ usablePct: two.usablePct, shortKm2: two.suppression.shortKm2 })
+    expect(coverageOf(sampleResults[1].figures, 'n2')).toEqual({ usablePct: two.usablePct, shortKm2: two.suppression.shortKm2 })
   })
 })
 

@@ -65,6 +65,16 @@ describe('score', () => {
     expect(names(r)).toEqual(['1 B', '2 A'])
     expect(r.options.map((o) => o.score)).toEqual([0, null])
   })
+  test('the mast height itself may be a criterion: less is better', () => {
+    const tall = { ...option('B', { usable_pct: 90 }), ref: { candidate: 'B', heightM: 40, tiltDeg: 0 } }
+    const r = rankOptions([tall, option('A', { usable_pct: 90 })], {
+      criteria: [{ figure: 'mast_height_m', worst: 40, best: 0, weight: 1 }],
+    })
+    expect(r.options.map((o) => [o.ref.candidate, o.score])).toEqual([
+      ['A', 0.5],
+      ['B', 0],
+    ])
+  })
   test('a need that is not assessed neither passes nor fails', () => {
     expect(mustNeedsPass({ needs: [need({ notAssessed: 'file not read', met: false, passes: false })] })).toBe(true)
     expect(mustNeedsPass({ needs: [need({ met: false, passes: null })] })).toBe(false)

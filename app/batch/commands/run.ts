@@ -30,6 +30,7 @@ import { NO_PERCENT, sightRaster } from '../rasters/sightRaster.ts'
 import { chooseLayers, chooseOptions, EXTRA_LAYERS, narrowed, ofNeed } from './chooseOptions.ts'
 import { horizonCsv } from './horizon.ts'
 import { roadsSummary, writeOptionFiles } from './optionFiles.ts'
+import { optionsTogether } from './rankingSummary.ts'
 
 /** `run`: every option picked, one after the other, into a folder that appears whole at the end. */
 export async function run(line: CommandLine, progress: Progress): Promise<void> {
@@ -201,5 +202,6 @@ function summary(study: SettledStudy, results: readonly OptionResult[], files: r
     figures: figures.flat,
     ...(figures.roads ? { roads: roadsSummary(figures.roads) } : {}),
   }))
-  return `${JSON.stringify({ format: SUMMARY_FORMAT, version: 1, study: study.name, files, options }, null, 2)}\n`
+  const whole = { format: SUMMARY_FORMAT, version: 1, study: study.name, files, options, ...optionsTogether(study, results) }
+  return `${JSON.stringify(whole, null, 2)}\n`
 }

@@ -1,5 +1,5 @@
-import type { OptionResult } from '../../../core/index.ts'
-import { coverageOf, optionsChart } from '../../charts/index.ts'
+import { coverageOf, type OptionResult } from '../../../core/index.ts'
+import { optionsChart } from '../../charts/index.ts'
 import {
   CAUTIONS,
   cautionsFor,
@@ -8,20 +8,28 @@ import {
   formatDbUp,
   formatMetPct,
   NOT_ASSESSED,
+  RANKING_WORDS,
   textOf,
 } from '../../words/index.ts'
 import { capital, inWords, optionName } from './cells.ts'
 import { comparisonTable } from './comparisonTable.ts'
 import { lossWords, nestedWords } from './needWords.ts'
-import { inOrder, ORDER_SENTENCE, reaches } from './ranking.ts'
+import { inOrder, orderSentence, reaches } from './ranking.ts'
+import { rankingBlocks, rejectedBlocks } from './rankingBlocks.ts'
 import { hasTilts } from './summarySection.ts'
 import { type Block, type Cell, type MemoInput, SMALL_PT, TEXT_WIDTH_PT } from './types.ts'
 
 /** Options side by side, coverage against clutter, and why each falls short. */
 export function comparisonBlocks(input: MemoInput, figure: () => number): Block[] {
-  const ordered = inOrder(input.results)
-  if (ordered.length === 0) return [{ kind: 'paragraph', text: 'Nothing to compare: no option has been computed.' }]
-  const blocks: Block[] = [comparisonTable(input, ordered, 'full'), { kind: 'paragraph', role: 'small', text: ORDER_SENTENCE }]
+  const { ranking } = input.study
+  const ordered = inOrder(input.results, ranking)
+  if (ordered.length === 0)
+    return [{ kind: 'paragraph', text: 'Nothing to compare: no option has been computed.' }, ...rejectedBlocks(input)]
+  const blocks: Block[] = [
+    comparisonTable(input, ordered, 'full'),
+    { kind: 'paragraph', role: 'small', text: orderSentence(ranking) },
+    ...rankingBlocks(input),
+  ]
   if (ordered.length > 1) {
     const { drawing } = optionsChart({
       results: input.results,
@@ -48,24 +56,25 @@ export function comparisonBlocks(input: MemoInput, figure: () => number): Block[
     ],
     rows: ordered.map((r): Cell[] => [optionName(r.ref, hasTilts(input)), shortWords(r, input.system)]),
   })
+  blocks.push(...rejectedBlocks(input))
   return blocks
 }
 function comparisonFinding(input: MemoInput, ordered: readonly OptionResult[]): string {
   const best = ordered[0]
   const name = (r: OptionResult): string => optionName(r.ref, hasTilts(input))
   const rated = ordered.flatMap((r) => {
-    const both = coverageOf(r, null)
+    const both = coverageOf(r.figures, null)
     return both ? [{ r, ...both }] : []
   })
   if (rated.length === 0)
-    return `Ground in sight against ground with C/N over 40\u202fdB; ${name(best)} comes first in the order of reading. Mast heights of one candidate are joined.`
+    return `Ground in sight against ground with C/N over 40\u202fdB; ${name(best)} comes first in the order. Mast heights of one candidate are joined.`
   const usable = [...rated].sort((a, b) => b.usablePct - a.usablePct)[0]
   const short = [...rated].sort((a, b) => b.shortKm2 - a.shortKm2)[0]
   const most =
     usable.r === short.r
       ? `${name(usable.r)} has most usable and most area short of suppression`
       : `${name(usable.r)} has most usable; ${short.shortKm2 > 0 ? `${name(short.r)} most area short of suppression` : 'none is short of suppression'}`
-  return `${most}. Usable share of the needs of an area, each by its area, against their area where more suppression is needed than there is; high and left is better. Mast heights of one candidate are joined.`
+  return `${most}. Usable share of the needs of an area, each by its area, against their area where more suppression is needed than there is; high and left is better, ${RANKING_WORDS.plotBest}. Mast heights of one candidate are joined.`
 }
 function shortWords(r: OptionResult, system: MemoInput['system']): string {
   const reasons: string[] = []

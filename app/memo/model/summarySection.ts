@@ -15,7 +15,7 @@ import { capital, countWord, inSentence, inWords, optionName, someInWords } from
 import { comparisonTable } from './comparisonTable.ts'
 import { exposureFor } from './exposureSection.ts'
 import { nestedWords } from './needWords.ts'
-import { inOrder, mustNeeds, ORDER_SENTENCE, reaches, shortKm2 } from './ranking.ts'
+import { inOrder, mustNeeds, orderSentence, reaches, shortKm2 } from './ranking.ts'
 import type { Block, MemoInput } from './types.ts'
 
 /** Options the study asks for. */
@@ -24,7 +24,7 @@ export const hasTilts = (input: MemoInput): boolean => new Set(input.results.map
 
 /** First page: what is found, side by side, the cautions, and what is not assessed. */
 export function summaryBlocks(input: MemoInput): Block[] {
-  const ordered = inOrder(input.results)
+  const ordered = inOrder(input.results, input.study.ranking)
   const blocks: Block[] = [{ kind: 'paragraph', role: 'lead', text: leadSentence(input, ordered) }]
   const rest = restSentences(input, ordered)
   if (rest !== '') blocks.push({ kind: 'paragraph', text: rest })
@@ -32,7 +32,7 @@ export function summaryBlocks(input: MemoInput): Block[] {
     blocks.push(comparisonTable(input, ordered.slice(0, MOST_ROWS), 'summary'))
     const left =
       ordered.length > MOST_ROWS ? ` ${capital(countWord(ordered.length - MOST_ROWS))} further options stand in the comparison.` : ''
-    blocks.push({ kind: 'paragraph', role: 'small', text: ORDER_SENTENCE + left })
+    blocks.push({ kind: 'paragraph', role: 'small', text: orderSentence(input.study.ranking) + left })
   }
   blocks.push({ kind: 'caution', texts: firstPageCautions(input) })
   const what = NOT_ASSESSED.map((n) => inSentence(n.what))

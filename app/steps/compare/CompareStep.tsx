@@ -1,15 +1,16 @@
 import { useLayoutEffect, useRef, useState } from 'react'
-import type { OptionRef, OptionResult } from '../../../core/index.ts'
-import { coverageOf } from '../../charts/index.ts'
+import { coverageOf, type OptionRef, type OptionResult } from '../../../core/index.ts'
 import { OptionsChart } from '../../charts/printers.tsx'
 import { optionKey, studyOptions } from '../../document/index.ts'
 import { Button, Caution, Select } from '../../ui/index.ts'
-import { cautionsFor, EMPTY_WORDS, formatMetPct, MEASURE_WORDS, textOf, type UnitSystem } from '../../words/index.ts'
+import { cautionsFor, EMPTY_WORDS, formatMetPct, MEASURE_WORDS, RANKING_WORDS, textOf, type UnitSystem } from '../../words/index.ts'
 import { useDoc, useResults, useSession, useView } from '../session/index.ts'
 import { GROUND_COLUMNS, NEED_COLUMNS } from './columns.ts'
 import { Explain } from './Explain.tsx'
 import { isAssessed, needOf, needsInOrder } from './figuresOf.ts'
 import { OptionsTable } from './OptionsTable.tsx'
+import { RankingSection } from './RankingSection.tsx'
+import { RejectSection } from './RejectSection.tsx'
 
 const EVERY = ' every'
 
@@ -33,6 +34,7 @@ export function CompareStep() {
         <h3>{EMPTY_WORDS.compare.title}</h3>
         <p className="ink-2">{EMPTY_WORDS.compare.reason}</p>
         <Button onPress={() => view.getState().set({ step: 'candidates' })}>Place a candidate</Button>
+        {doc.candidates.length > 0 ? <RejectSection doc={doc} /> : null}
       </div>
     )
   const asked = needs.length > 0 && results.every((r) => needOf(r, need))
@@ -83,6 +85,8 @@ export function CompareStep() {
         ))}
       </div>
       {results.length > 1 ? <Plot results={results} need={need} shown={shown} system={system} onChoose={show} /> : null}
+      {results.length > 1 ? <RankingSection doc={doc} results={results} shown={shown} system={system} onShow={show} /> : null}
+      <RejectSection doc={doc} />
     </div>
   )
 }
@@ -96,7 +100,7 @@ function Plot(props: {
 }) {
   const box = useRef<HTMLDivElement>(null)
   const [width, setWidth] = useState(0)
-  const known = props.results.every((r) => coverageOf(r, props.need) !== null)
+  const known = props.results.every((r) => coverageOf(r.figures, props.need) !== null)
   useLayoutEffect(() => {
     const element = box.current
     if (!element) return
@@ -108,7 +112,7 @@ function Plot(props: {
     <figure className="plot" ref={box}>
       <figcaption className="ink-2">
         {known
-          ? 'Usable share against the area short of suppression, one line per candidate'
+          ? `Usable share against the area short of suppression, one line per candidate; ${RANKING_WORDS.plotBest}`
           : 'Ground in sight against clutter, one line per candidate; more ground in sight is not better by itself'}
       </figcaption>
       {width > 0 ? (

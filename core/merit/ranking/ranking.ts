@@ -14,6 +14,8 @@ export interface Rated {
   readonly figures: Pick<Figures, 'needs' | 'flat'>
 }
 
+/** A criterion that is no figure of merit: the mast height itself, m, what it costs to build. */
+export const MAST_FIGURE = 'mast_height_m'
 /** By how much each weight is changed to see whether the ranking holds. */
 export const WEIGHT_FACTORS: readonly number[] = [0.8, 1.2]
 /** Scores nearer than this are the same. */
@@ -60,7 +62,7 @@ function ranked(options: readonly Rated[], ranking: RankingDoc, weights: readonl
   const sum = weights.reduce((a, b) => a + b, 0)
   const scored = options.map(({ ref, figures }) => {
     const criteria = ranking.criteria.map((c, i): CriterionScore => {
-      const value = figures.flat[c.figure] ?? null
+      const value = figures.flat[c.figure] ?? (c.figure === MAST_FIGURE ? ref.heightM : null)
       return { figure: c.figure, value, u: value === null ? null : utility(value, c.worst, c.best), share: weights[i] / sum }
     })
     const score = criteria.some((c) => c.u === null) ? null : criteria.reduce((s, c) => s + c.share * (c.u as number), 0)
