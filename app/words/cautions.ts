@@ -30,6 +30,8 @@ export const CAUTIONS = {
   unknownGround: 'Unknown ground counts against a need: it is never in sight and never free of clutter.',
   floorBand: 'The floor is nominal; the error band beside it is 90 %, from the raster and obstacle errors.',
   edgeHorizon: 'Where the terrain ends the horizon is "at least" the value shown.',
+  trialAltitudes:
+    'Altitudes of the trial plan are those of needs and predicted floors, not safe altitudes: terrain, obstacles, airspace and minimum altitudes are for the pilot and the authority.',
   roads:
     'Roads seen are length, not traffic: free space, one scan, and cover at the road’s own place hides its vehicles; bridges and cuttings are as the raster has them.',
   moreGround: 'More ground in sight is not better by itself: clutter comes with it.',
@@ -58,6 +60,7 @@ export const CAUTIONS_OF = {
   suppression: ['requiredRatio', 'blindSpeeds', 'landTable'],
   exposure: ['exposure', 'structure'],
   roads: ['roads'],
+  trial: ['trialAltitudes', 'threeWords'],
   usable: ['threeWords', 'meanUsable', 'edgeOnly', 'landTable'],
   mast: ['obstruction', 'structure'],
   candidate: ['nearMast'],

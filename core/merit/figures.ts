@@ -10,6 +10,7 @@ import { antennaM, type OptionCells } from './optionCells.ts'
 import { percentile } from './percentile.ts'
 import { type RoadsFigure, roadsFigure } from './roads/index.ts'
 import { clutterLevelsOf, overloadNotes } from './signal/receiverLimits.ts'
+import { trialPlan } from './trialPlan/index.ts'
 import type { Figures, FloorFigure, NeedFigure } from './types.ts'
 
 /** What of an option's figures does not hang on its needs, kept with the polar grids it was made from. */
@@ -37,6 +38,7 @@ export function optionFigures(o: OptionCells, needs: readonly SettledNeed[], mar
   if (kept.roads?.rcsM2 !== o.vehicleRcsM2 || !kept.roads) kept.roads = { rcsM2: o.vehicleRcsM2, figure: roadsFigure(o) }
   const { sums } = kept
   const sight = sightOf(o)
+  const asked = needFigures(o, needs)
   const elevations = o.mask.horizon.map((h) => h.elevationDeg)
   const highest = o.mask.horizon.reduce<Figures['horizon']['highest']>(
     (best, row) => (Number.isFinite(row.elevationDeg) && (!best || row.elevationDeg > best.elevationDeg) ? row : best),
@@ -59,7 +61,8 @@ export function optionFigures(o: OptionCells, needs: readonly SettledNeed[], mar
     cnrPeakDb: sums.peakDb,
     clutterLevels: clutterLevelsOf(o),
     secondTimeAround: o.folded ? secondTimeAround(o.folded, o.place.lat) : { km2: null, notEvaluatedBeyondM: sight.knownToM },
-    needs: needFigures(o, needs),
+    needs: asked,
+    trialPlan: trialPlan(o, needs, asked),
     roads: kept.roads.figure,
     obstaclesInSight: sight.obstacles,
     marks: [...marks, ...o.suppression.notes, ...kept.notes, ...(o.radar.detector === 'areaCfar' ? [NOTE_AREA_CFAR] : [])],

@@ -26,5 +26,6 @@ export { type Lobe, type LobeModel, type LobePlace, lobeAt, lobeModel } from './
 export { pdOf } from './signal/pdOf.ts'
 export { receiverLinearRangeDb } from './signal/receiverLimits.ts'
 export { echoAt, type TargetEcho, type TargetSignal, targetSignal } from './signal/targetSignal.ts'
+export * from './trialPlan/index.ts'
 export * from './types.ts'
 export { type BeamRay, type CutWindow, type VerticalCut, verticalCut } from './vertical/index.ts'

@@ -3,6 +3,7 @@ import type { SuppressionBy } from '../doppler/index.ts'
 import type { HorizonRow } from '../masking/index.ts'
 import type { NeedFigure } from './needs/needTypes.ts'
 import type { RoadsFigure } from './roads/types.ts'
+import type { TrialRow } from './trialPlan/types.ts'
 
 /** Lowest height covered at one ground range, over all azimuths, m MSL. null where nothing is known. */
 export interface FloorFigure {
@@ -55,6 +56,8 @@ export interface Figures {
   readonly needs: readonly NeedFigure[]
   /** Roads whose vehicles are seen; null where the study has no roads. */
   readonly roads: RoadsFigure | null
+  /** What a trial should fly and a survey measure, from the worst margins of the needs. */
+  readonly trialPlan: readonly TrialRow[]
   /** Names of obstacles in sight. */
   readonly obstaclesInSight: readonly string[]
   readonly marks: readonly { readonly mark: string; readonly about: string }[]

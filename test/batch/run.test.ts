@@ -34,7 +34,7 @@ describe('run', () => {
   it('writes one folder per candidate, height and tilt, and leaves nothing beside it', () => {
     expect(ran).toMatchObject({ code: 0, out: '' })
     const needed = ['suppression-needed', 'usable', 'probability-of-detection', 'signal-margin', 'cause-of-loss']
-    const tilt = ['clutter-to-noise.tif', ...needed.map((name) => `${name}-n1.tif`)]
+    const tilt = ['clutter-to-noise.tif', 'trial-plan.csv', ...needed.map((name) => `${name}-n1.tif`)]
     const height = ['clutter-strength.tif', 'coverage-floor.tif', 'depression.tif', 'height-to-see.tif', 'horizon.csv', 'in-sight.tif']
     const folders = ['10m', '40m'].flatMap((h) => [
       ...['0deg', '2deg'].flatMap((t) => tilt.map((f) => `A/${h}/${t}/${f}`)),

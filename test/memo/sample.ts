@@ -235,6 +235,7 @@ function sampleFigures(siteGroundM: number, heightM: number, screen: number, see
       },
     ],
     roads: null,
+    trialPlan: [],
     obstaclesInSight: ['Grey mast', 'Silo at Wend'],
     marks: [
       { mark: 'from memory', about: 'low-angle land table' },

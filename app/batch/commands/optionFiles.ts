@@ -1,9 +1,21 @@
 import { writeFileSync } from 'node:fs'
 import { join } from 'node:path'
-import { type LonLat, type OptionCells, ROAD_CLASSES, type RoadLines, type RoadsFigure, roadLines } from '../../../core/index.ts'
+import {
+  type Figures,
+  type LonLat,
+  type OptionCells,
+  ROAD_CLASSES,
+  type RoadLines,
+  type RoadsFigure,
+  roadLines,
+  type TrialRow,
+} from '../../../core/index.ts'
+import { TRIAL_CONFIRMS_WORDS } from '../../words/index.ts'
+import { csvLine, csvNumber } from '../csv.ts'
 
 /** Files of one option beside its rasters, in its folder of height and tilt. */
-export function writeOptionFiles(tiltDir: string, cells: OptionCells): void {
+export function writeOptionFiles(tiltDir: string, cells: OptionCells, figures: Figures): void {
+  writeFileSync(join(tiltDir, 'trial-plan.csv'), trialPlanCsv(figures.trialPlan))
   if (cells.ground.roads.length > 0) writeFileSync(join(tiltDir, 'roads-seen.geojson'), roadsGeoJson(roadLines(cells)))
 }
 
@@ -16,6 +28,60 @@ export function roadsGeoJson({ seen, hidden }: RoadLines): string {
   const features = [...seen.map((l) => feature(l, true)), ...hidden.map((l) => feature(l, false))]
   return `{"type":"FeatureCollection","features":[\n${features.join(',\n')}\n]}\n`
 }
+
+const TRIAL_COLUMNS = [
+  'row',
+  'kind',
+  'need',
+  'name',
+  'azimuth_deg',
+  'range_m',
+  'lon',
+  'lat',
+  'from_range_m',
+  'to_range_m',
+  'from_azimuth_deg',
+  'to_azimuth_deg',
+  'altitude_m_msl',
+  'floor_m_msl',
+  'floor_band_m',
+  'margin_m',
+  'signal_margin_db',
+  'predicted',
+  'behind',
+  'behind_range_m',
+  'confirms',
+] as const
+/** A trial plan as CSV, one row per thing to fly or measure; the header alone where no need is assessed. */
+export const trialPlanCsv = (rows: readonly TrialRow[]): string =>
+  [
+    csvLine(TRIAL_COLUMNS),
+    ...rows.map((r, n) =>
+      csvLine([
+        String(n + 1),
+        r.kind,
+        r.needId,
+        r.name,
+        csvNumber(r.at.azimuthDeg, 4),
+        csvNumber(r.at.rangeM, 3),
+        csvNumber(r.at.lon, 8),
+        csvNumber(r.at.lat, 8),
+        csvNumber(r.fromRangeM, 3),
+        csvNumber(r.toRangeM, 3),
+        csvNumber(r.fromAzimuthDeg, 4),
+        csvNumber(r.toAzimuthDeg, 4),
+        csvNumber(r.altitudeM, 3),
+        csvNumber(r.floorM, 3),
+        csvNumber(r.floorBandM, 3),
+        csvNumber(r.marginM, 3),
+        csvNumber(r.signalMarginDb, 3),
+        r.predicted ?? '',
+        r.obstacle,
+        csvNumber(r.obstacleRangeM, 3),
+        TRIAL_CONFIRMS_WORDS[r.confirms],
+      ]),
+    ),
+  ].join('')
 
 const km = (m: number): number => m / 1000
 /** Roads of an option for summary.json: by class and ring, km, and by radial speed, km per 5 m/s. */

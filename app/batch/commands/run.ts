@@ -62,7 +62,7 @@ export async function run(line: CommandLine, progress: Progress): Promise<void> 
     const name = `${ref.candidate} at ${ref.heightM} m (${results.length + 1} of ${chosen.length})`
     const { cells, result } = await workOut(engine, doc, ref, progress, name)
     results.push(result)
-    await writer.write(cells, ref, name)
+    await writer.write(cells, result, name)
     if (wantsMemo) maps.push(await (await import('./memo.ts')).memoMap(cells, result, study.run.maxRangeM))
   }
   await helpers.close()
@@ -108,7 +108,7 @@ class RunWriter {
     private readonly progress: Progress,
   ) {}
 
-  async write(cells: OptionCells, ref: OptionRef, name: string): Promise<void> {
+  async write(cells: OptionCells, { ref, figures }: OptionResult, name: string): Promise<void> {
     const heightDir = join(this.dir, ref.candidate, `${ref.heightM}m`)
     const tiltDir = join(heightDir, `${ref.tiltDeg}deg`)
     mkdirSync(tiltDir, { recursive: true })
@@ -117,7 +117,7 @@ class RunWriter {
       await this.#writeHeight(heightDir, cells, ref, name)
     }
     await this.#raster(tiltDir, ref, 'clutter-to-noise', 'dB', this.#onLattice(cells, ref, cells.clutter.cnrDb))
-    writeOptionFiles(tiltDir, cells)
+    writeOptionFiles(tiltDir, cells, figures)
     for (const id of this.layers) if (EXTRA_LAYERS[id] === 'tilt') await this.#layer(tiltDir, ref, cells, id)
   }
 

@@ -29,6 +29,7 @@ import { nestedWords } from './needWords.ts'
 import { placeBlocks } from './placeTables.ts'
 import { roadBlocks, roadsSeenCell } from './roadsSection.ts'
 import { hasTilts } from './summarySection.ts'
+import { trialBlocks } from './trialSection.ts'
 import { type Block, type Cell, type MemoInput, SMALL_PT, type TableBlock, TEXT_WIDTH_PT } from './types.ts'
 
 const MAP_PT = 256
@@ -75,6 +76,7 @@ export function optionBlocks(input: MemoInput, r: OptionResult, figure: () => nu
     left: [floorTable(input, r), { kind: 'caution', texts: cautionsFor('floor') }],
     right: [{ kind: 'figure', id: 'rings', number: figure(), caption: `${ringFinding(r.figures.rings, input.system)}.`, drawing: rings }],
   })
+  blocks.push(...trialBlocks(input, r))
   return blocks
 }
 const sameRef = (a: OptionResult['ref'], b: OptionResult['ref']): boolean =>

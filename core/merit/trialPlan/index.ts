@@ -1,0 +1,2 @@
+export { trialPlan } from './trialPlan.ts'
+export * from './types.ts'
