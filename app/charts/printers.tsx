@@ -6,6 +6,8 @@ import { type OptionsInput, optionsChart } from './optionsChart.ts'
 import { type RingInput, ringChart } from './ringChart.ts'
 import { type TerrainInput, terrainChart } from './terrainChart.ts'
 
+export { DrawingView }
+
 /** Vertical line at the pointer; moved by `moveCursor`, never by render. */
 function Cursor({ box, cursorRef }: { box: Box; cursorRef: Ref<SVGLineElement> | undefined }) {
   return <line ref={cursorRef} y1={box.top} y2={box.bottom} x1={-9} x2={-9} style={{ stroke: 'var(--accent)' }} strokeWidth={1} />
@@ -58,12 +60,28 @@ export function HorizonChart({ cursorRef, onPoint, onPick, ...input }: HorizonIn
   )
 }
 /** Terrain profile along one azimuth. */
-export function TerrainChart({ cursorRef, onPoint, onPick, ...input }: TerrainInput & Pointing) {
-  const { profile, width, height, system, size } = input
-  const geometry = useMemo(() => terrainChart({ profile, width, height, system, size }), [profile, width, height, system, size])
-  const pointing = usePointing(geometry.range, { onPoint, onPick })
+export function TerrainChart({
+  cursorRef,
+  onPoint,
+  onPickPlace,
+  ...input
+}: TerrainInput & Omit<Pointing, 'onPick'> & { onPickPlace?: (x: number, y: number) => void }) {
+  const { profile, width, height, system, size, window } = input
+  const geometry = useMemo(
+    () => terrainChart({ profile, width, height, system, size, ...(window ? { window } : {}) }),
+    [profile, width, height, system, size, window],
+  )
+  const pointing = usePointing(geometry.range, { onPoint })
+  const pick =
+    onPickPlace &&
+    ((e: { currentTarget: SVGSVGElement; clientX: number; clientY: number }) => {
+      const area = e.currentTarget.getBoundingClientRect()
+      const [x, y] = [e.clientX - area.left, e.clientY - area.top]
+      const { left, right, top, bottom } = geometry.box
+      if (x >= left && x <= right && y >= top && y <= bottom) onPickPlace(x, y)
+    })
   return (
-    <DrawingView drawing={geometry.drawing} className="chart terrain" {...pointing}>
+    <DrawingView drawing={geometry.drawing} className="chart terrain" {...pointing} onClick={pick}>
       <Cursor box={geometry.box} cursorRef={cursorRef} />
     </DrawingView>
   )

@@ -1,8 +1,9 @@
 import type { Profile } from '../../core/index.ts'
 import { formatAzimuth, formatHeight, formatPlaceRange, textOf, toFace, type UnitSystem, unitOf } from '../words/index.ts'
 import { niceTicks, ticksWithin, xAxis, yAxis } from './axes.ts'
-import { type Box, type Drawing, type Ink, type Item, lineOf, type Point, pathOf, type Scale, scaleOf } from './drawing.ts'
+import { type Box, type Drawing, type Ink, type Item, type Point, pathOf, type Scale, scaleOf } from './drawing.ts'
 import { textWidth } from './labels.ts'
+import { fresnelLabel, rayItems } from './terrainRay.ts'
 
 export interface TerrainInput {
   readonly profile: Profile
@@ -10,6 +11,8 @@ export interface TerrainInput {
   readonly height: number
   readonly system: UnitSystem
   readonly size: number
+  /** Ranges shown, m; the whole profile where absent. */
+  readonly window?: readonly [fromM: number, toM: number]
 }
 export interface TerrainGeometry {
   readonly drawing: Drawing
@@ -18,6 +21,8 @@ export interface TerrainGeometry {
   readonly range: Scale
   /** Place of a height (m MSL) at a range (m) in the drawing: the earth's bulge is added. */
   place(rangeM: number, heightM: number): Point
+  /** Ground range and height (m MSL) of a place of the drawing. */
+  placeAt(x: number, y: number): { rangeM: number; heightM: number }
   /** Index of the profile's sample nearest a range, m; -1 for an empty profile. */
   indexAt(rangeM: number): number
 }
@@ -27,14 +32,16 @@ export interface TerrainGeometry {
  * at both ends and sight lines are straight.
  */
 export function terrainChart(input: TerrainInput): TerrainGeometry {
-  const { profile: p, width, height, system, size } = input
+  const { profile: whole, width, height, system, size } = input
+  const p = input.window ? partOf(whole, input.window) : whole
   const count = p.distM.length
-  const farM = count > 0 ? p.distM[count - 1] : 1
+  const nearM = input.window?.[0] ?? 0
+  const farM = input.window?.[1] ?? (count > 0 ? p.distM[count - 1] : 1)
   const bulge = (rangeM: number): number =>
-    Number.isFinite(p.effectiveRadiusM) ? (rangeM * (farM - rangeM)) / (2 * p.effectiveRadiusM) : 0
+    Number.isFinite(p.effectiveRadiusM) ? ((rangeM - nearM) * (farM - rangeM)) / (2 * p.effectiveRadiusM) : 0
   const box: Box = { left: 4.2 * size, right: width - 1.2 * size, top: 2.4 * size, bottom: height - 3 * size }
-  const range = scaleOf(0, farM, box.left, box.right)
-  const limits = heightLimits(p, bulge)
+  const range = scaleOf(nearM, farM, box.left, box.right)
+  const limits = heightLimits(p, bulge, nearM === 0)
   const nice = niceTicks(toFace('height', limits.low, system), toFace('height', limits.high, system), 5)
   const vertical = scaleOf(nice.from, nice.to, box.bottom, box.top)
   const place = (rangeM: number, heightM: number): Point => [
@@ -47,26 +54,39 @@ export function terrainChart(input: TerrainInput): TerrainGeometry {
     return points
   }
   const items: Item[] = [...yAxis(box, vertical, nice.ticks, `Height, ${unitOf('height', system)} MSL`, size)]
-  const rangeTicks = ticksWithin(0, toFace('range', farM, system), 6).map((t) => ({
-    at: (t.at * farM) / toFace('range', farM, system),
-    label: t.label,
-  }))
+  const perFace = toFace('range', 1, system)
+  const rangeTicks = ticksWithin(nearM * perFace, farM * perFace, 6).map((t) => ({ at: t.at / perFace, label: t.label }))
   items.push(...floorBand(p, place, box))
-  items.push(...groundItems(p, place, bulge, range, vertical, box, farM, system, size))
+  items.push(...groundItems(p, place, bulge, range, vertical, box, [nearM, farM], system, size))
   items.push({ kind: 'path', d: pathOf(line(p.surfaceM)), stroke: 'ink-3', width: 0.6 })
   items.push(...sightRuns(p, line))
   items.push({ kind: 'path', d: pathOf(cut(line(p.floorM), box.top)), stroke: 'cool-6', width: 1.2 })
-  items.push(...sightLine(p, place, box, range))
+  const control = controllingIndex(whole)
+  const shownControl = control < 0 ? -1 : p.distM.findIndex((r) => r >= whole.distM[control])
+  items.push(
+    ...rayItems(p, place, box, shownControl < 0 ? (control < 0 ? -1 : count - 1) : shownControl),
+    ...controlItems(whole, control, place, box),
+  )
   items.push(...xAxis(box, range, rangeTicks, `Ground range, ${unitOf('range', system)}`, size))
-  items.push(...directLabels(p, place, box, system, size))
+  items.push(...directLabels(p, whole, control, place, box, system, size))
   const title = `Terrain along azimuth ${textOf(formatAzimuth(p.azimuthDeg))} from an electrical centre at ${textOf(formatHeight(p.antennaM, system))} MSL`
-  return { drawing: { width, height, title, items }, box, range, place, indexAt: (rangeM) => nearestIndex(p.distM, rangeM) }
+  return {
+    drawing: { width, height, title, items },
+    box,
+    range,
+    place,
+    placeAt: (x, y) => {
+      const rangeM = range.invert(x)
+      return { rangeM, heightM: vertical.invert(y) / toFace('height', 1, system) - bulge(rangeM) }
+    },
+    indexAt: (rangeM) => nearestIndex(whole.distM, rangeM),
+  }
 }
 
 /** Heights to show, m: the ground whole, the floor up to three times the ground's own spread. */
-function heightLimits(p: Profile, bulge: (rangeM: number) => number): { low: number; high: number } {
-  let low = Math.min(0, p.antennaM)
-  let high = p.antennaM
+function heightLimits(p: Profile, bulge: (rangeM: number) => number, fromMast: boolean): { low: number; high: number } {
+  let low = fromMast ? Math.min(0, p.antennaM) : Number.POSITIVE_INFINITY
+  let high = fromMast ? p.antennaM : Number.NEGATIVE_INFINITY
   let floor = Number.NEGATIVE_INFINITY
   for (let i = 0; i < p.distM.length; i++) {
     const b = bulge(p.distM[i])
@@ -74,6 +94,7 @@ function heightLimits(p: Profile, bulge: (rangeM: number) => number): { low: num
     if (!Number.isNaN(p.surfaceM[i])) high = Math.max(high, p.surfaceM[i] + b)
     if (!Number.isNaN(p.floorM[i])) floor = Math.max(floor, p.floorM[i] + p.floorBandM[i] + b)
   }
+  if (!(high >= low)) [low, high] = [0, Math.max(1, p.antennaM)]
   const spread = Math.max(50, high - low)
   return { low, high: Math.max(high + 0.1 * spread, Math.min(floor, high + 2 * spread)) }
 }
@@ -85,7 +106,7 @@ function groundItems(
   range: Scale,
   vertical: Scale,
   box: Box,
-  farM: number,
+  [nearM, farM]: readonly [number, number],
   system: UnitSystem,
   size: number,
 ): Item[] {
@@ -93,7 +114,7 @@ function groundItems(
   for (let i = 0; i < p.distM.length; i++) if (!Number.isNaN(p.groundM[i])) ground.push(place(p.distM[i], p.groundM[i]))
   const sea: Point[] = []
   for (let n = 0; n <= 48; n++) {
-    const r = (farM * n) / 48
+    const r = nearM + ((farM - nearM) * n) / 48
     sea.push([range.at(r), vertical.at(toFace('height', bulge(r), system))])
   }
   const items: Item[] = []
@@ -168,28 +189,43 @@ export function controllingIndex(p: Profile): number {
   return best
 }
 
-function sightLine(p: Profile, place: (r: number, h: number) => Point, box: Box, range: Scale): Item[] {
-  const i = controllingIndex(p)
+function controlItems(p: Profile, i: number, place: (r: number, h: number) => Point, box: Box): Item[] {
   if (i < 0) return []
-  const from = place(0, p.antennaM)
-  const at = place(p.distM[i], p.surfaceM[i])
-  const slope = (at[1] - from[1]) / (at[0] - from[0])
-  let endX = range.at(range.to)
-  let endY = from[1] + slope * (endX - from[0])
-  if (endY < box.top) {
-    endY = box.top
-    endX = from[0] + (endY - from[1]) / slope
-  }
-  const foot = place(0, p.groundM[0])
-  return [
-    { kind: 'path', d: lineOf(from[0], from[1], at[0], at[1]), stroke: 'ink', width: 0.8 },
-    { kind: 'path', d: lineOf(at[0], at[1], endX, endY), stroke: 'ink', width: 0.6, dash: [4, 3] },
-    { kind: 'path', d: lineOf(from[0], Number.isNaN(foot[1]) ? box.bottom : foot[1], from[0], from[1]), stroke: 'ink', width: 2 },
-    { kind: 'circle', x: at[0], y: at[1], r: 2.6, fill: 'sheet', stroke: 'ink', width: 1 },
-  ]
+  const [x, y] = place(p.distM[i], p.surfaceM[i])
+  if (x < box.left || x > box.right) return []
+  return [{ kind: 'circle', x, y, r: 2.6, fill: 'sheet', stroke: 'ink', width: 1 }]
 }
 
-function directLabels(p: Profile, place: (r: number, h: number) => Point, box: Box, system: UnitSystem, size: number): Item[] {
+/** The samples inside a window of range. */
+function partOf(p: Profile, [fromM, toM]: readonly [number, number]): Profile {
+  const first = Math.max(
+    0,
+    p.distM.findIndex((r) => r >= fromM),
+  )
+  let end = p.distM.length
+  while (end > first && p.distM[end - 1] > toM) end--
+  const cut = (values: Float64Array): Float64Array => values.subarray(first, end)
+  return {
+    ...p,
+    distM: cut(p.distM),
+    groundM: cut(p.groundM),
+    surfaceM: cut(p.surfaceM),
+    floorM: cut(p.floorM),
+    floorBandM: cut(p.floorBandM),
+    inSight: p.inSight.subarray(first, end),
+    ray: p.ray && { ...p.ray, heightM: cut(p.ray.heightM), fresnelM: cut(p.ray.fresnelM) },
+  }
+}
+
+function directLabels(
+  p: Profile,
+  whole: Profile,
+  control: number,
+  place: (r: number, h: number) => Point,
+  box: Box,
+  system: UnitSystem,
+  size: number,
+): Item[] {
   const items: Item[] = []
   const say = (text: string, x: number, y: number, ink: Ink, anchor: 'start' | 'middle' | 'end'): void => {
     const w = textWidth(text, size)
@@ -197,12 +233,15 @@ function directLabels(p: Profile, place: (r: number, h: number) => Point, box: B
     const left = Math.min(box.right - w, Math.max(box.left + 0.3 * size, from))
     items.push({ kind: 'text', x: left, y, text, size, ink, halo: true })
   }
-  const control = controllingIndex(p)
+  const controlM = control < 0 ? 0 : whole.distM[control]
   if (control >= 0) {
-    const [x, y] = place(p.distM[control], p.surfaceM[control])
-    say(`controls, ${textOf(formatPlaceRange(p.distM[control], system))}`, x + size, y - 0.8 * size, 'ink', 'end')
+    const [x, y] = place(controlM, whole.surfaceM[control])
+    if (x >= box.left && x <= box.right)
+      say(`controls, ${textOf(formatPlaceRange(controlM, system))}`, x + size, y - 0.8 * size, 'ink', 'end')
   }
-  for (let i = p.distM.length - 1; i > control; i--) {
+  const zone = fresnelLabel(p, place, box)
+  if (zone) say(zone.text, zone.x, zone.y, 'ink-2', 'middle')
+  for (let i = p.distM.length - 1; i >= 0 && p.distM[i] > controlM; i--) {
     if (Number.isNaN(p.floorM[i])) continue
     const [x, y] = place(p.distM[i], p.floorM[i] + p.floorBandM[i])
     if (y < box.top + 1.2 * size) continue

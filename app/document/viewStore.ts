@@ -7,7 +7,7 @@ export const STEPS = ['ground', 'radar', 'need', 'candidates', 'compare', 'memo'
 export type StepId = (typeof STEPS)[number]
 export type Theme = 'paper' | 'night'
 /** What stands over the lower half of the map. */
-export type OpenChart = 'profile' | 'ledger' | 'figure' | null
+export type OpenChart = 'profile' | 'vertical' | 'rings' | 'suppression' | 'ledger' | 'figure' | null
 
 /** What is asked over the whole page. */
 export type OpenDialog = 'templates' | 'pulses' | 'candidates' | 'obstacles' | 'fixes' | 'keys' | 'commands' | 'studies' | null
@@ -31,7 +31,7 @@ export interface ViewState {
   readonly chart: OpenChart
   /** Key of the figure that is explained, as in the summary. */
   readonly figure: string | null
-  /** Azimuth of the profile chart. */
+  /** Azimuth of the terrain profile and of the range-height diagram. */
   readonly profileAzimuthDeg: number | null
   /** The next click on the map places a candidate. */
   readonly placing: boolean

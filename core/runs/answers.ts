@@ -3,6 +3,7 @@ import { sightAlong, sweep } from '../masking/index.ts'
 import { isLowK, ladderHeightsM, ladderOf, type OptionCells, type Rung, roadLines, rung, seeRoads, verticalCut } from '../merit/index.ts'
 import { polarShape, previewShape } from '../polar/index.ts'
 import { buildGround, groundAt } from '../terrain/index.ts'
+import { wavelengthM } from '../units/index.ts'
 import { share, type Work } from '../work/index.ts'
 import type { Engine } from './engine.ts'
 import { heightToSee } from './layers.ts'
@@ -10,6 +11,7 @@ import { cellLedger } from './ledger/cellLedger.ts'
 import { candidateOf, clutterOptions, earthOf, lowEarthOf, lowKOf, mayFold, siteOf, suppressionOf } from './optionParts.ts'
 import { paintGround, paintOption, paintSheet } from './pictures.ts'
 import { type ProbeCache, probeAt } from './probe.ts'
+import { profileRay } from './profileRay.ts'
 import type { Answer, Ask, Profile, Tell } from './types.ts'
 
 /** What the port turns into an ImageBitmap. */
@@ -172,7 +174,7 @@ export class Answers {
     const { ground, study } = this.engine.ready()
     const site = siteOf(candidateOf(study, body.option.candidate))
     const along = sightAlong(ground, site, body.option.heightM, earthOf(study), body.azimuthDeg, study.run.maxRangeM)
-    return { option: body.option, ...along }
+    return { option: body.option, ...along, ray: profileRay(along, wavelengthM(study.radar.frequencyHz), body.target ?? null) }
   }
 
   private *vertical(body: Ask['vertical']): Work<EngineAnswer['vertical']> {

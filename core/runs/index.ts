@@ -5,5 +5,6 @@ export { fillLayer, isLayerId, LAYERS, layerInfo, NEED_LAYERS } from './layers.t
 export { cellLedger } from './ledger/cellLedger.ts'
 export { candidateOf, clutterOptions, earthOf, siteOf, suppressionOf } from './optionParts.ts'
 export { paintGround, paintOption, paintSheet, waterOf } from './pictures.ts'
+export { profileRay } from './profileRay.ts'
 export * from './readGround.ts'
 export * from './types.ts'

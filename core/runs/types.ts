@@ -92,6 +92,17 @@ export interface Profile {
   readonly floorBandM: Float64Array
   /** 1 in sight, 0 masked, 2 unknown. */
   readonly inSight: Uint8Array
+  /** Straight ray to a target, by default to the coverage floor at the far end; null where nothing is known. */
+  readonly ray: ProfileRay | null
+}
+/** A straight ray over the effective earth with its first Fresnel zone; arrays by sample of the profile, NaN beyond the target. */
+export interface ProfileRay {
+  readonly toRangeM: number
+  readonly toHeightM: number
+  /** m MSL. */
+  readonly heightM: Float64Array
+  /** Radius of the first Fresnel zone, m. */
+  readonly fresnelM: Float64Array
 }
 export interface Probe {
   readonly lon: number
@@ -135,7 +146,8 @@ export interface Ask {
   /** Ground and one layer as one opaque picture, for the memo. */
   map: { view: View; layer: LayerId; option: OptionRef }
   probe: { at: LonLat }
-  profile: { azimuthDeg: number; option: OptionRef }
+  /** `target` is where the ray goes, m and m MSL; absent: the floor at the far end. */
+  profile: { azimuthDeg: number; option: OptionRef; target?: { rangeM: number; heightM: number } }
   /** The plane over one azimuth for the target of a need; null: the first need of the study. */
   vertical: { option: OptionRef; need: string | null; window: CutWindow }
   ledger: { at: LonLat; option: OptionRef }

@@ -5,6 +5,7 @@ import {
   type NeedFigure,
   type OptionResult,
   type Profile,
+  profileRay,
   type SettledStudy,
   type StudyDoc,
   settle,
@@ -284,7 +285,7 @@ export function sampleProfile(): Profile {
     return antennaM + steepest * r + drop
   })
   sight.fill(2, 150)
-  return {
+  const along = {
     azimuthDeg: 104,
     option: { candidate: 'B', heightM: 24, tiltDeg: 1.5 },
     antennaM,
@@ -296,4 +297,5 @@ export function sampleProfile(): Profile {
     floorBandM: make((r) => 6 + r / 1_200),
     inSight: sight,
   }
+  return { ...along, ray: profileRay(along, 0.107, null) }
 }

@@ -20,7 +20,7 @@ let shadow: VerticalCut
 const cutOf = (w: Worked, azimuthDeg: number, rows = 121): VerticalCut => {
   const need = w.engine.needOnShow(undefined)
   if (!need) throw new Error('no need')
-  return finish(verticalCut(w.cells, need, { azimuthDeg, toRangeM: 38_000, fromHeightM: 100, toHeightM: 3100, columns: 95, rows }))
+  return finish(verticalCut(w.cells, need, { azimuthDeg, fromRangeM: 0, toRangeM: 38_000, fromHeightM: 100, toHeightM: 3100, columns: 95, rows }))
 }
 const at = (c: VerticalCut, rangeM: number, heightM: number): number => {
   const near = (values: Float64Array, v: number) =>
@@ -126,7 +126,7 @@ describe('range-height plane', () => {
           tiltDeg: 2,
         },
         flat.engine.needOnShow(undefined) ?? fail(),
-        { azimuthDeg: 270, toRangeM: 12_000, fromHeightM: 100, toHeightM: 5100, columns: 60, rows: 101 },
+        { azimuthDeg: 270, fromRangeM: 0, toRangeM: 12_000, fromHeightM: 100, toHeightM: 5100, columns: 60, rows: 101 },
       ),
     )
     expect(end.rays.map((r) => [r.is, Math.round(10 * r.elevationDeg) / 10 + 0])).toEqual([

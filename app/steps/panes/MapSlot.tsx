@@ -110,8 +110,10 @@ export function MapSlot({ hub }: { hub: MapHub }) {
         onMove={(id, at) => moveCandidate(study, id, at)}
         onCell={(at) => set({ cell: option ? cellUnder(study.getState().doc, option.candidate, at) : at, chart: 'ledger' })}
         cell={chart === 'ledger' ? cell : null}
-        onProfile={(azimuthDeg) => set({ chart: 'profile', profileAzimuthDeg: azimuthDeg })}
-        profileAzimuthDeg={chart === 'profile' ? profileAzimuthDeg : null}
+        onProfile={(azimuthDeg) =>
+          set({ chart: chart === 'vertical' ? 'vertical' : 'profile', profileAzimuthDeg: Math.round(10 * azimuthDeg) / 10 })
+        }
+        profileAzimuthDeg={chart === 'profile' || chart === 'vertical' ? (profileAzimuthDeg ?? 0) : null}
         progress={null}
         onStop={session.stop}
         lower={
@@ -200,7 +202,14 @@ export function StripSlot({ hub }: { hub: MapHub }) {
         hub={hub}
         rows={rows}
         units={units}
-        onPick={(azimuthDeg) => view.getState().set({ chart: 'profile', profileAzimuthDeg: azimuthDeg })}
+        onPick={(azimuthDeg) =>
+          view
+            .getState()
+            .set({
+              chart: view.getState().chart === 'vertical' ? 'vertical' : 'profile',
+              profileAzimuthDeg: Math.round(10 * azimuthDeg) / 10,
+            })
+        }
       />
     </Suspense>
   )

@@ -3,7 +3,8 @@ import type { ConeFigure } from '../needs/needTypes.ts'
 /** What of the plane over one azimuth is asked for. */
 export interface CutWindow {
   readonly azimuthDeg: number
-  /** Far end, ground range, m. */
+  /** Near and far end, ground range, m; near 0 for the whole. */
+  readonly fromRangeM: number
   readonly toRangeM: number
   /** Lowest and highest row, m MSL; null = from the lowest ground, up to what the need and the screening ask for. */
   readonly fromHeightM: number | null

@@ -27,7 +27,7 @@ export function* verticalCut(o: OptionCells, need: SettledNeed, w: CutWindow): W
   const { columns, rows, azimuthDeg } = w
   const mast = antennaM(o)
   const radiusM = radiusOf(o.earth, o.place.lat, azimuthDeg)
-  const rangeM = Float64Array.from({ length: columns }, (_, i) => ((i + 0.5) * w.toRangeM) / columns)
+  const rangeM = Float64Array.from({ length: columns }, (_, i) => w.fromRangeM + ((i + 0.5) * (w.toRangeM - w.fromRangeM)) / columns)
   const profile = sightAlong(o.ground, o.place, o.heightM, o.earth, azimuthDeg, w.toRangeM)
   const diffracted = diffractedLoss(o, profile)
   const [low, high] = heights(w, need, profile, mast)
