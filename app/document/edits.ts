@@ -4,6 +4,7 @@ import {
   type NeedDoc,
   needsOfSet,
   type RadarDoc,
+  type ReadCandidate,
   radarOfTemplate,
   STARTING_SETS,
   type StudyDoc,
@@ -41,6 +42,37 @@ export function addCandidate(store: StudyStore, at: LonLat): string {
     candidates: [...doc.candidates, { id, name: `Place ${id}`, ...rounded(at), mastHeightsM: [...mastHeightsM] }],
   }))
   return id
+}
+/** Candidates of a file join those there are; one whose id is taken already gets the next free letter. Masts are those of the last one where none are stated. */
+export function addCandidates(store: StudyStore, list: readonly ReadCandidate[], words: string): void {
+  store.getState().edit(words, (doc) => ({ ...doc, candidates: joined(doc.candidates, list) }))
+}
+function joined(before: readonly CandidateDoc[], list: readonly ReadCandidate[]): CandidateDoc[] {
+  const out = [...before]
+  for (const c of list) {
+    const id = c.id !== undefined && !out.some((o) => o.id === c.id) ? c.id : freeCandidateId(out)
+    out.push({
+      ...c,
+      ...rounded(c),
+      id,
+      name: c.name ?? `Place ${id}`,
+      mastHeightsM: c.mastHeightsM ?? [...(out.at(-1)?.mastHeightsM ?? DEFAULT_MASTS_M)],
+    })
+  }
+  return out
+}
+/** All candidates as a table gives them: a row without id takes the next free letter, one without masts those of the row above it. */
+export function setCandidates(store: StudyStore, rows: readonly CandidateDoc[]): void {
+  store.getState().edit('changed the candidates', (doc) => {
+    const named = rows.filter((r) => r.id !== '')
+    const out: CandidateDoc[] = []
+    for (const r of rows) {
+      const id = r.id || freeCandidateId([...named, ...out])
+      const mastHeightsM = r.mastHeightsM.length > 0 ? r.mastHeightsM : [...(out.at(-1)?.mastHeightsM ?? DEFAULT_MASTS_M)]
+      out.push({ ...r, ...rounded(r), id, name: r.name ?? `Place ${id}`, mastHeightsM })
+    }
+    return { ...doc, candidates: out }
+  })
 }
 /** Moves a candidate. With `dragging`, folds into one undo step until `store.getState().drop()`. */
 export function moveCandidate(store: StudyStore, id: string, to: LonLat, dragging = false): void {

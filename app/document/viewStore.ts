@@ -36,6 +36,8 @@ export interface ViewState {
   /** The next click on the map places a candidate. */
   readonly placing: boolean
   readonly dialog: OpenDialog
+  /** What the dialog is about: id of a need, or a kind of need. */
+  readonly dialogFor: string | null
   /** Edits wait for "Run" instead of running by themselves. */
   readonly hold: boolean
   set(part: Partial<Omit<ViewState, 'set'>>): void
@@ -62,6 +64,7 @@ export function createViewStore(storage?: Storage, prefersDark = false) {
         profileAzimuthDeg: null,
         placing: false,
         dialog: null,
+        dialogFor: null,
         hold: false,
         set: (part) => set(part),
       }),
@@ -69,7 +72,7 @@ export function createViewStore(storage?: Storage, prefersDark = false) {
         name: KEY,
         version: 1,
         storage: storage ? createJSONStorage(() => storage) : undefined,
-        partialize: ({ set: _set, placing: _placing, dialog: _dialog, ...kept }) => kept,
+        partialize: ({ set: _set, placing: _placing, dialog: _dialog, dialogFor: _dialogFor, ...kept }) => kept,
       },
     ),
   )

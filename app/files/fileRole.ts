@@ -9,7 +9,7 @@ export async function fileRole(file: Blob & { readonly name: string }): Promise<
   const head = new Uint8Array(await file.slice(0, HEAD_BYTES).arrayBuffer())
   if (/\.tiff?$/.test(name) || isTiff(head)) return byteClasses(head) ? 'landCover' : 'terrain'
   if (/\.(geo)?json$/.test(name)) return textRole(new TextDecoder().decode(head), name)
-  if (name.endsWith('.csv')) return /track|route|approach|path/.test(name) ? 'track' : 'fixes'
+  if (name.endsWith('.csv')) return /candidate|site/.test(name) ? 'candidates' : /track|route|approach|path/.test(name) ? 'track' : 'fixes'
   return 'unknown'
 }
 
@@ -19,6 +19,7 @@ export function textRole(text: string, name: string): FileRole {
   if (!text.includes('FeatureCollection') && !text.includes('"Feature"')) return /table/.test(name) ? 'landTable' : 'study'
   if (/"(highway|railway|maxspeedKmh)"/.test(text)) return 'roads'
   if (/"(heightM|topM)"/.test(text)) return 'obstacles'
+  if (/"mastHeightsM"/.test(text)) return 'candidates'
   if (/"(Multi)?Polygon"/.test(text)) return 'polygon'
   return /road|rail|street/.test(name) ? 'roads' : 'obstacles'
 }

@@ -1,5 +1,6 @@
 export * from './addToStudy.ts'
 export * from './fileRole.ts'
 export * from './served.ts'
+export * from './tables.ts'
 export * from './takeIn.ts'
 export * from './types.ts'

@@ -1,5 +1,5 @@
-import { InputError, type StudyDoc } from '../../core/index.ts'
-import { type FileStore, filesOf, type GivenFile, openPackage, openStudyText, type StudyStore } from '../document/index.ts'
+import { InputError, readCandidates, type StudyDoc } from '../../core/index.ts'
+import { addCandidates, type FileStore, filesOf, type GivenFile, openPackage, openStudyText, type StudyStore } from '../document/index.ts'
 import { addToStudy } from './addToStudy.ts'
 import { fileRole } from './fileRole.ts'
 import type { FileRole } from './types.ts'
@@ -40,10 +40,15 @@ export async function takeIn(study: StudyStore, given: FileStore, dropped: reado
       found: 'neither GeoTIFF, GeoJSON, CSV, study nor package',
       remedy: 'give a .tif, .geojson, .csv, .json or .zip file',
     })
+  const places = sorted.filter((s) => s.role === 'candidates')
+  const lists = await Promise.all(places.map(async ({ file }) => ({ name: file.name, list: readCandidates(await file.text(), file.name) })))
+  for (const { name, list } of lists) addCandidates(study, list, `added ${list.length} candidate${list.length > 1 ? 's' : ''} of ${name}`)
+  const others = sorted.filter((s) => s.role !== 'candidates')
+  if (others.length === 0) return { opened: false, warnings: [], missing: [], trouble: null }
   const doc = study.getState().doc
-  given.getState().give(sorted.map(({ file }) => ({ name: nameInStudy(doc, file.name), blob: file }) satisfies GivenFile))
-  const words = sorted.length === 1 ? `added ${sorted[0].file.name}` : `added ${sorted.length} files`
-  study.getState().edit(words, (before) => sorted.reduce((d, s) => addToStudy(d, nameInStudy(d, s.file.name), s.role), before))
+  given.getState().give(others.map(({ file }) => ({ name: nameInStudy(doc, file.name), blob: file }) satisfies GivenFile))
+  const words = others.length === 1 ? `added ${others[0].file.name}` : `added ${others.length} files`
+  study.getState().edit(words, (before) => others.reduce((d, s) => addToStudy(d, nameInStudy(d, s.file.name), s.role), before))
   return { opened: false, warnings: [], missing: [], trouble: null }
 }
 

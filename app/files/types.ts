@@ -9,6 +9,7 @@ export type FileRole =
   | 'fixes'
   | 'track'
   | 'polygon'
+  | 'candidates'
   | 'study'
   | 'package'
   | 'unknown'

@@ -107,7 +107,7 @@ export function EditTable<T>(props: EditTableProps<T>) {
       <table aria-label={label} aria-describedby={props.help ? helpId : undefined}>
         <colgroup>
           {columns.map((c) => (
-            <col key={c.head} style={{ width: `calc(${(100 * (c.width ?? 1)) / total}% - ${28 / columns.length}px)` }} />
+            <col key={c.head} style={{ width: `${(96 * (c.width ?? 1)) / total}%` }} />
           ))}
           <col style={{ width: 28 }} />
         </colgroup>

@@ -15,6 +15,7 @@ import { CAUTIONS, DEG, EMPTY_WORDS, formatHeight, formatPosition, METRES, textO
 import { useDoc, useGround, useSession, useView } from '../session/index.ts'
 import { settledOf } from '../settled.ts'
 import { Problems } from './Problems.tsx'
+import { useFilePicker } from './useFilePicker.tsx'
 
 /** Places where the radar could stand, with their mast heights. */
 export function CandidatesStep() {
@@ -23,6 +24,7 @@ export function CandidatesStep() {
   const placing = useView((v) => v.placing)
   const hasGround = useGround((g) => g.state === 'ready')
   const [typing, setTyping] = useState(false)
+  const picker = useFilePicker('candidates', '.csv,.geojson,.json')
   const select = (id: string) => {
     const c = study.getState().doc.candidates.find((x) => x.id === id)
     if (c)
@@ -56,6 +58,9 @@ export function CandidatesStep() {
         <Button active={typing} onPress={() => setTyping(!typing)}>
           Enter position
         </Button>
+        <Button onPress={picker.open}>From a file</Button>
+        {candidates.length > 0 ? <Button onPress={() => view.getState().set({ dialog: 'candidates' })}>Edit as a table</Button> : null}
+        {picker.input}
       </div>
       {typing ? (
         <PositionField

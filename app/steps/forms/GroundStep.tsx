@@ -50,6 +50,7 @@ export function GroundStep() {
           <LandCover />
           <Group title="Obstacles">
             <OneFile path="obstacles" words="Add obstacles" count={obstacles.length} noun="obstacle" />
+            <ObstacleTable />
           </Group>
           <Group title="Roads">
             <OneFile path="roads" words="Add roads" count={roads.length} noun="road" />
@@ -200,6 +201,18 @@ function OneFile({ path, words, count, noun }: { path: 'obstacles' | 'roads'; wo
         </p>
       ) : null}
     </>
+  )
+}
+
+function ObstacleTable() {
+  const { view } = useSession()
+  const given = useDoc((d) => d.obstacles !== undefined)
+  return (
+    <div className="row">
+      <Button small onPress={() => view.getState().set({ dialog: 'obstacles' })}>
+        {given ? 'Edit as a table' : 'Enter obstacles'}
+      </Button>
+    </div>
   )
 }
 

@@ -11,9 +11,11 @@ import { useFilePicker } from './useFilePicker.tsx'
 
 const FROM_FILE = NEED_KINDS.filter((k): k is (typeof NEED_KINDS)[number] & { id: 'fixes' | 'track' | 'polygon' } => k.id !== 'layer')
 
+const TYPED = FROM_FILE.filter((k) => k.id !== 'polygon')
+
 /** What must be detected, and where. */
 export function NeedStep() {
-  const { study } = useSession()
+  const { study, view } = useSession()
   const needs = useDoc((d) => d.needs ?? NONE)
   const pickers = {
     fixes: useFilePicker('fixes', '.csv'),
@@ -35,6 +37,10 @@ export function NeedStep() {
       <div className="row">
         <Button onPress={() => addNeed(study)}>Add a layer need</Button>
         <Menu words="Add from a file" entries={FROM_FILE.map((k) => ({ ...k, run: pickers[k.id].open }))} />
+        <Menu
+          words="Enter places"
+          entries={TYPED.map((k) => ({ id: k.id, words: k.words, run: () => view.getState().set({ dialog: 'fixes', dialogFor: k.id }) }))}
+        />
         {FROM_FILE.map((k) => (
           <Fragment key={k.id}>{pickers[k.id].input}</Fragment>
         ))}
@@ -70,7 +76,7 @@ function Need({ need, at }: { need: NeedDoc; at: number }) {
           remove
         </Button>
       </div>
-      {need.file ? <NeedFile file={need.file} kind={need.kind} /> : null}
+      {need.file ? <NeedFile file={need.file} need={need} /> : null}
       <Problems where={(p) => p.startsWith(path)} />
       <Check value={need.must ?? true} onChange={(v) => set('must', v)}>
         Must be met
@@ -83,11 +89,25 @@ function Need({ need, at }: { need: NeedDoc; at: number }) {
   )
 }
 
-function NeedFile({ file, kind }: { file: string; kind: NeedDoc['kind'] }) {
+function NeedFile({ file, need }: { file: string; need: NeedDoc }) {
+  const { view } = useSession()
   const missing = useGround((g) => g.missing.includes(file))
+  const asTable = need.kind !== 'polygon' && /\.csv$/i.test(file) && !missing
   return (
-    <p className="small ink-3">
-      {kind}: {file} {missing ? <Mark>not here: drop it on the page</Mark> : null}
-    </p>
+    <div className="card-line">
+      <span className="small ink-3">
+        {need.kind}: {file} {missing ? <Mark>not here: drop it on the page</Mark> : null}
+      </span>
+      {asTable ? (
+        <Button
+          small
+          look="quiet"
+          label={`Edit ${file} as a table`}
+          onPress={() => view.getState().set({ dialog: 'fixes', dialogFor: need.id })}
+        >
+          edit
+        </Button>
+      ) : null}
+    </div>
   )
 }

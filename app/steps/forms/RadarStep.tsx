@@ -123,7 +123,7 @@ export function RadarStep() {
             Edit tables
           </Button>
           <span className="small ink-3">
-            {tables.some((n) => n > 0) ? `${tables[0]} pulses, ${tables[1]} beams` : 'one pulse, one beam'}
+            {tables.some((n) => n > 0) ? `pulses: ${Math.max(1, tables[0])}, beams: ${Math.max(1, tables[1])}` : 'one pulse, one beam'}
           </span>
         </div>
       </Folded>
