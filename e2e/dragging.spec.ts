@@ -41,10 +41,15 @@ async function watchHand(page: Page): Promise<void> {
 async function timedMove(page: Page, x: number, y: number): Promise<number> {
   await page.evaluate(() => Object.assign(window, { movedAt: 0, shownAt: 0 }))
   await page.mouse.move(x, y)
-  const times = await page.waitForFunction(() => {
-    const w = window as unknown as { movedAt: number; shownAt: number }
-    return w.movedAt > 0 && w.shownAt > w.movedAt ? w.shownAt - w.movedAt : 0
-  })
+  const times = await page.waitForFunction(
+    () => {
+      const w = window as unknown as { movedAt: number; shownAt: number }
+      return w.movedAt > 0 && w.shownAt > w.movedAt ? w.shownAt - w.movedAt : 0
+    },
+    null,
+    // asking at every frame would take time from the picture waited for
+    { polling: 50 },
+  )
   return Number(await times.jsonValue())
 }
 const median = (xs: number[]): number => [...xs].sort((a, b) => a - b)[Math.floor(xs.length / 2)] ?? Number.NaN
