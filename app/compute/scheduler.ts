@@ -8,6 +8,8 @@ interface Task {
   readonly id: number
   readonly kind: keyof Ask
   readonly work: Work<unknown>
+  /** Which of two maps asks; undefined for the first and for all else. */
+  readonly pane: string | undefined
 }
 /**
  * Runs one engine in slices of a few milliseconds: the most urgent ask first, then what the study still lacks. No threads and no timers
@@ -44,9 +46,10 @@ export class Scheduler {
       this.idle = false
       this.drop((t) => STALE_AFTER_STUDY.has(t.kind))
     }
-    if (SUPERSEDING.has(kind)) this.drop((t) => t.kind === kind)
+    const { pane } = body as { pane?: string }
+    if (SUPERSEDING.has(kind)) this.drop((t) => t.kind === kind && t.pane === pane)
     try {
-      this.tasks.push({ id, kind, work: this.answers.ask(kind, body as never) })
+      this.tasks.push({ id, kind, work: this.answers.ask(kind, body as never), pane })
     } catch (error) {
       this.fail(id, error)
     }

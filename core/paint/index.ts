@@ -1,6 +1,7 @@
+export { type DifferenceSide, paintDifference } from './difference.ts'
 export * from './hillshade.ts'
 export * from './map.ts'
 export * from './mercator.ts'
-export * from './polar.ts'
+export { paintPolar } from './polar.ts'
 export * from './ramps.ts'
 export * from './types.ts'

@@ -10,11 +10,18 @@ import type { PolarPaint, Ramp, View } from './types.ts'
 const SMOOTH_FROM_PX = 3
 const TWO_PI = 2 * Math.PI
 /** Azimuth and range are reckoned once per so many pixels, linear between. */
-const LEAP_PX = 8
+export const LEAP_PX = 8
 
-/** What the inner loops read, settled once per painting. */
-interface Brush {
+/** Where the pixels of a row lie in a polar grid. */
+export interface Located {
   readonly grid: PolarShape
+  readonly maxRangeM: number
+  /** Per pixel of a tile's row: range in cells (-1 = out of range) and azimuth in cells, whole = a cell's border. */
+  readonly rangeAt: Float64Array
+  readonly azimuthAt: Float64Array
+}
+/** What the inner loops read, settled once per painting. */
+interface Brush extends Located {
   readonly values: Float32Array
   readonly state: Uint8Array
   readonly out: Uint32Array
@@ -27,10 +34,6 @@ interface Brush {
   readonly bare: Uint32Array
   /** Per state × pattern place: offset into `colours`, 0 where no mark lies. */
   readonly marked: Uint16Array
-  readonly maxRangeM: number
-  /** Per pixel of a tile's row: range in cells (-1 = out of range) and azimuth in cells, whole = a cell's border. */
-  readonly rangeAt: Float64Array
-  readonly azimuthAt: Float64Array
 }
 
 /**
@@ -164,7 +167,7 @@ const azimuthRad = (east: number, north: number): number => {
 }
 
 /** Range and azimuth, in cells, of `count` pixels in a row from (east, north) m in steps of (de, dn). False when none is in range. */
-function locate(k: Brush, east: number, north: number, de: number, dn: number, count: number, exactWithinM: number): boolean {
+export function locate(k: Located, east: number, north: number, de: number, dn: number, count: number, exactWithinM: number): boolean {
   const { rangeAt, azimuthAt, maxRangeM } = k
   const { azimuths } = k.grid
   const perStep = 1 / k.grid.rangeStepM

@@ -76,6 +76,25 @@ export function makeRamp(family: RampFamily, stops: readonly number[], below: Ra
     below,
   }
 }
+/**
+ * A ramp of differences about zero: cool at one end, warm at the other, paper between. `stops` are the labelled values, low to high, even about 0.
+ * `warmEnd`: which end is warm, the one where more comes back or less is seen.
+ */
+export function makeDifferenceRamp(stops: readonly number[], warmEnd: 'low' | 'high'): Ramp {
+  const table = (theme: 'day' | 'night', middle: string): Uint32Array => {
+    const { warm, cool } = RAMP_STOPS
+    const hexes = [...[6, 5, 4, 3, 1].map((n) => cool[theme][n]!), middle, ...[1, 3, 4, 5, 6].map((n) => warm[theme][n]!)]
+    return coloursBetween(warmEnd === 'high' ? hexes : hexes.reverse())
+  }
+  return {
+    stops,
+    rgba: table('day', '#f4f1e8'),
+    rgbaNight: table('night', '#2b3135'),
+    low: stops[0]!,
+    high: stops[stops.length - 1]!,
+    below: 'hold',
+  }
+}
 /** Colour of a value on a ramp as '#rrggbb', for legends and charts; null where the ground stays bare. */
 export function rampHex(ramp: Ramp, value: number, night: boolean): string | null {
   if (Number.isNaN(value) || (value < ramp.low && ramp.below === 'bare')) return null

@@ -5,12 +5,13 @@ import { polarShape, previewShape } from '../polar/index.ts'
 import { buildGround, groundAt } from '../terrain/index.ts'
 import { wavelengthM } from '../units/index.ts'
 import { share, type Work } from '../work/index.ts'
+import { paintOptionsDifference } from './difference.ts'
 import type { Engine } from './engine.ts'
 import { heightToSee } from './layers.ts'
 import { cellLedger } from './ledger/cellLedger.ts'
 import { candidateOf, clutterOptions, earthOf, lowEarthOf, lowKOf, mayFold, siteOf, suppressionOf } from './optionParts.ts'
 import { paintGround, paintOption, paintSheet } from './pictures.ts'
-import { type ProbeCache, probeAt } from './probe.ts'
+import { differenceOf, type ProbeCache, probeAt } from './probe.ts'
 import { profileRay } from './profileRay.ts'
 import type { Answer, Ask, Profile, Tell } from './types.ts'
 
@@ -32,6 +33,8 @@ let serial = 0
 export class Answers {
   private preview: OptionCells | null = null
   private readonly probe: ProbeCache = { key: '', values: new Float32Array(0), words: null }
+  /** The same of a second option beside it, or in a second map. */
+  private readonly probeSecond: ProbeCache = { key: '', values: new Float32Array(0), words: null }
   /** What to tell the page besides the reply. */
   readonly tells: Tell[] = []
 
@@ -133,6 +136,13 @@ export class Answers {
   private *paint(body: Ask['paint']): Work<EngineAnswer['paint']> {
     const o = body.option === 'preview' ? this.preview : this.engine.cells(body.option)
     if (!o) return null
+    const need = this.engine.needOnShow(this.engine.shown.need)
+    if (body.difference) {
+      const other = yield* this.engine.compute(body.difference)
+      if (body.layer === 'height-to-see') for (const each of [o, other]) yield* heightToSee(each)
+      const pixels = paintOptionsDifference(o, other, body.layer, need, body.view)
+      return pixels && { pixels, view: body.view }
+    }
     if (body.layer === 'height-to-see') yield* heightToSee(o)
     const need = this.engine.needOnShow(this.engine.shown.need)
     return { pixels: paintOption(o, body.layer, need, body.view, body.opacity), view: body.view }
@@ -154,7 +164,12 @@ export class Answers {
   private *probeAt(body: Ask['probe']): Work<EngineAnswer['probe']> {
     const { option, layer, need } = this.engine.shown
     const o = option ? this.engine.cells(option) : null
-    if (o) return probeAt(o, layer, this.engine.needOnShow(need), body.at, this.probe)
+    const on = this.engine.needOnShow(need)
+    if (o) {
+      const own = probeAt(o, layer, on, body.at, body.pane ? this.probeSecond : this.probe)
+      const other = body.difference ? this.engine.cells(body.difference) : null
+      return other ? differenceOf(own, probeAt(other, layer, on, body.at, this.probeSecond)) : own
+    }
     if (!this.engine.ground) return null
     const ground = groundAt(this.engine.ground, body.at.lon, body.at.lat)
     const known = Number.isFinite(ground)

@@ -1,4 +1,5 @@
 export { Answers, type EngineAnswer, type Painted } from './answers.ts'
+export { type DifferenceInfo, differenceInfo } from './difference.ts'
 export { Engine, type Shown } from './engine.ts'
 export { optionId, optionsOfStudy } from './keys.ts'
 export { fillLayer, isLayerId, LAYERS, layerInfo, NEED_LAYERS } from './layers.ts'

@@ -3,6 +3,7 @@ import { cellsOfNeed, lossCauseAt, type OptionCells, PLACE } from '../merit/inde
 import { CELL } from '../polar/index.ts'
 import type { SettledNeed } from '../study/index.ts'
 import { groundAt } from '../terrain/index.ts'
+import { differenceInfo } from './difference.ts'
 import { fillLayer, NEED_LAYERS } from './layers.ts'
 import type { LayerId, Probe } from './types.ts'
 
@@ -33,6 +34,12 @@ export function probeAt(o: OptionCells, layer: LayerId, need: SettledNeed | null
   const state = o.mask.state[cell]
   const word = wordOf(layer, state, value, cache.words ? cache.words[cell] : 0, o.atmosphere.rainRateMmH > 0)
   return { ...base, value: Number.isFinite(value) && word !== 'masked' ? value : null, word }
+}
+
+/** Two read-outs of one place side by side: how much more the first has, where both have a number. */
+export function differenceOf(own: Probe, against: Probe): Probe {
+  const known = own.value !== null && against.value !== null && differenceInfo(own.layer) !== null
+  return { ...own, against, difference: known ? (own.value as number) - (against.value as number) : null }
 }
 
 function wordOf(layer: LayerId, state: number, value: number, place: number, raining: boolean): string | null {

@@ -114,8 +114,13 @@ export interface Probe {
   readonly value: number | null
   /** A word where there is no number: 'masked', 'unknown: beyond a void', 'unknown: edge of terrain', 'out of range', 'below noise', 'too weak', 'none needed'. */
   readonly word: string | null
+  /** The same place for a second option, and its value less; only where one was asked for. */
+  readonly against?: Probe | null
+  readonly difference?: number | null
 }
 
+/** Which of two maps side by side asks; a newer ask replaces older ones of its own map. */
+export type PaneId = 'second'
 /** page -> study worker; every ask has an id; `paint`, `base` and `preview` supersede their like. */
 export interface Ask {
   ground: {
@@ -141,11 +146,13 @@ export interface Ask {
   }
   /** `still`: the hand rests, a finer picture is wanted. */
   preview: { candidate: string; lon: number; lat: number; heightM: number; still: boolean }
-  paint: { view: View; layer: LayerId; option: OptionRef | 'preview'; opacity?: number }
-  base: { view: View }
+  /** `difference`: the layer of `option` less that of this one. */
+  paint: { view: View; layer: LayerId; option: OptionRef | 'preview'; opacity?: number; difference?: OptionRef; pane?: PaneId }
+  base: { view: View; pane?: PaneId }
   /** Ground and one layer as one opaque picture, for the memo. */
   map: { view: View; layer: LayerId; option: OptionRef }
-  probe: { at: LonLat }
+  /** Of the option on show, or of another; `difference`: and of a second one beside it. */
+  probe: { at: LonLat; option?: OptionRef; difference?: OptionRef; pane?: PaneId }
   /** `target` is where the ray goes, m and m MSL; absent: the floor at the far end. */
   profile: { azimuthDeg: number; option: OptionRef; target?: { rangeM: number; heightM: number } }
   /** The plane over one azimuth for the target of a need; null: the first need of the study. */
