@@ -68,6 +68,8 @@ const OUT_OF_RANGE = lossCode('out-of-range')
 const MASKED = lossCode('masked')
 const MARGINAL = lossCode('marginal')
 const LOBING = lossCode('lobing')
+/** Clutter this far under the noise takes nothing from an echo that passes, dB. */
+const LEAST_DB = -60
 
 /** Tests one level in cells first … last−1 of a row that starts at `from`. Unknown ground counts as hidden; the caller tells it apart. */
 export function testLevel(t: LevelTest, out: NeedRow, first: number, last: number, from: number): void {
@@ -115,8 +117,9 @@ export function testLevel(t: LevelTest, out: NeedRow, first: number, last: numbe
       const strength = rowLow.headDb[j] - edge
       if (strength >= 0 && rowLow.heard[j] === 1) {
         bits |= PLACE.lowDetectable
-        const room = edge > 0 ? roomOverNoiseDb(strength) - noiseGainDb : rowLow.roomDb[j]
-        if (!(residue > room)) bits |= PLACE.lowUsable
+        // how much residue the echo bears, worked out only where there is any
+        if (!(residue > LEAST_DB) || !(residue > (edge > 0 ? roomOverNoiseDb(strength) - noiseGainDb : rowLow.roomDb[j])))
+          bits |= PLACE.lowUsable
       }
     }
     if (margin >= band) {
@@ -129,8 +132,9 @@ export function testLevel(t: LevelTest, out: NeedRow, first: number, last: numbe
       if (over < signalDb[j]) signalDb[j] = over
       if (strength >= 0 && heard) {
         bits |= PLACE.detectable
-        const room = edge > 0 ? roomOverNoiseDb(strength) - noiseGainDb : row.roomDb[j]
-        const needed = cnr - stc > room ? cnr - stc - room : 0
+        const clutter = cnr - stc
+        const room = !(clutter > LEAST_DB) ? clutter : edge > 0 ? roomOverNoiseDb(strength) - noiseGainDb : row.roomDb[j]
+        const needed = clutter > room ? clutter - room : 0
         if (needed > neededDb[j]) {
           neededDb[j] = needed
           availableDb[j] = cnr >= left ? cnr - left : lessDb

@@ -1,10 +1,9 @@
 import { CELL } from '../../polar/index.ts'
-import { fillReflectingRay, makeReflectingRay } from '../../propagation/index.ts'
-import type { SettledNeed } from '../../study/index.ts'
+import { canonicalJson, type SettledNeed } from '../../study/index.ts'
 import { toDb, wavelengthM } from '../../units/index.ts'
 import { antennaM, meanEffectiveRadiusM, type OptionCells, residueOf } from '../optionCells.ts'
 import { fillLevelRow, lossesBetween, makeLevelRow, type RowModel } from '../signal/levelRow.ts'
-import { fillLobes, lobeModel } from '../signal/lobing.ts'
+import { fillLobes, lobeGrid, lobeModel } from '../signal/lobing.ts'
 import { overloadOf, thresholdRiseOf } from '../signal/receiverLimits.ts'
 import { targetSignal } from '../signal/targetSignal.ts'
 import { type LevelTest, makeNeedRow, type NeedRow, startRow, testLevel } from './levelTest.ts'
@@ -107,18 +106,21 @@ export function scanNeed(
     }
   }
   if (aboveSea) fill(0, ranges, null, 0)
-  const lobes = lobeModel(o.ground, o.radar, o.atmosphere)
-  const reflecting = lobes && makeReflectingRay(ranges, rangeStepM)
+  const lobing = lobeModel(o.ground, o.radar, o.atmosphere)
+  const lobes =
+    lobing &&
+    lobeGrid(
+      lobing,
+      o.mask,
+      signal,
+      mast,
+      canonicalJson([need.kind, need.id, need.heightAbove, need.fromRangeM, need.toRangeM, need.sectorDeg]),
+      tests.flatMap((t) => [
+        { row: t.row, levelM: t.levelM, c },
+        ...(t.rowLow && lowModel ? [{ row: t.rowLow, levelM: t.levelM, c: lowModel.c }] : []),
+      ]),
+    )
   const cells = { groundM, code: o.site.code, relief: o.site.relief, inSight: o.mask.inSight }
-  const fillReflected = (first: number, last: number, from: number, own: number): void => {
-    if (!lobes || !reflecting) return
-    fillReflectingRay(reflecting, lobes.codes, cells, from, ranges, rangeStepM / 2, mast, own, lobes.tideM)
-    for (const t of tests) fillLobes(lobes, reflecting, signal, t.row, first, last, t.levelM, aboveSea ? null : groundM, from)
-    if (!lowModel) return
-    fillReflectingRay(reflecting, lobes.codes, cells, from, ranges, rangeStepM / 2, mast, (own * lowModel.c) / c, lobes.tideM)
-    for (const t of tests)
-      if (t.rowLow) fillLobes(lobes, reflecting, signal, t.rowLow, first, last, t.levelM, aboveSea ? null : groundM, from)
-  }
   const row = makeNeedRow(ranges)
   for (let i = 0; i < azimuths; i++) {
     const pairs = spans.pairs[i]
@@ -127,7 +129,7 @@ export function scanNeed(
     const end = pairs[pairs.length - 1]
     fillRayRow(ray, floorM, groundM, from, end, mast, c, rangeStepM)
     if (!aboveSea) fill(pairs[0], end, groundM, from)
-    fillReflected(pairs[0], end, from, 1 / o.site.effectiveRadiusM[i])
+    if (lobes) fillLobes(lobes, cells, pairs[0], end, !aboveSea, from)
     for (let p = 0; p < pairs.length; p += 2) {
       startRow(row, pairs[p], pairs[p + 1])
       for (const t of tests) testLevel(t, row, pairs[p], pairs[p + 1], from)

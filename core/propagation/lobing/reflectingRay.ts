@@ -2,8 +2,12 @@ import type { GroundCode } from '../../landcover/index.ts'
 import { RELIEF } from '../../terrain/index.ts'
 import { REFLECTS } from './reflectingSurface.ts'
 
-/** Level open ground is taken at its mean over this far to either side, m: a few posts of noise are no mirror. */
+/**
+ * Level open ground is taken at its mean over this far to either side, m, to the next quarter of a metre: a few posts of noise are no mirror, and no
+ * raster knows its level better.
+ */
 const SMOOTH_M = 250
+const LEVELS_PER_M = 4
 
 /** Ground codes as a reflecting ray reads them: what they reflect as, and how high their cover stands, m. One entry per code byte. */
 export interface ReflectingCodes {
@@ -39,19 +43,24 @@ export interface ReflectingRay {
   antennaM: number
   /** 1 / effective earth radius. */
   c: number
+  tideM: number
+  /** Ground of the cells, which start at index `from`. */
+  groundM: Float32Array
+  from: number
   /** A value of REFLECTS; none where the antenna does not see the cell. */
   readonly kind: Uint8Array
+  readonly surfaceM: Float64Array
+  /** Highest surface from a cell on, m. */
+  readonly topM: Float64Array
+  /** Cells before this one have the three values below worked out for the curvature at hand. */
+  ready: number
   /** Height of the reflecting surface, m MSL. */
   readonly heightM: Float64Array
   /** Tangent of the grazing angle of the ray from the antenna. */
   readonly tan: Float64Array
-  readonly surfaceM: Float64Array
-  /** Highest surface from a cell on, m. */
-  readonly topM: Float64Array
   /** Cell in which the reflected ray meets the surface again; −1 = not looked for yet. */
   readonly meets: Int32Array
-  /** The last point found by `reflectionTo`: its range and height, m, and a value of REFLECTS. */
-  atM: number
+  /** The surface found last by `reflectionTo`: its height, m, and a value of REFLECTS. */
   atHeightM: number
   atKind: number
 }
@@ -65,13 +74,16 @@ export function makeReflectingRay(cells: number, stepM: number): ReflectingRay {
     any: false,
     antennaM: 0,
     c: 0,
+    tideM: 0,
+    groundM: new Float32Array(0),
+    from: 0,
     kind: new Uint8Array(cells),
-    heightM: values(),
-    tan: values(),
     surfaceM: values(),
     topM: values(),
+    ready: 0,
+    heightM: values(),
+    tan: values(),
     meets: new Int32Array(cells),
-    atM: 0,
     atHeightM: 0,
     atKind: REFLECTS.none,
   }
@@ -79,7 +91,7 @@ export function makeReflectingRay(cells: number, stepM: number): ReflectingRay {
 
 /**
  * Fills a ray from `count` cells that start at index `from`, centres from `firstM` (m) on. Reflects: water (raised by the tide) and low-relief open
- * ground, half of whose cell the antenna sees. `c` = 1 / effective earth radius.
+ * ground, half of whose cell the antenna sees. `bendRay` must follow.
  */
 export function fillReflectingRay(
   ray: ReflectingRay,
@@ -89,53 +101,63 @@ export function fillReflectingRay(
   count: number,
   firstM: number,
   antennaM: number,
-  c: number,
   tideM: number,
 ): void {
-  const { kind, heightM, tan, surfaceM, topM, meets, stepM } = ray
-  Object.assign(ray, { firstM, count, antennaM, c, any: false })
-  for (let i = 0; i < count; i++) {
-    const at = from + i
-    const own = codes.kind[cells.code[at]]
-    const reflects = cells.inSight[at] > 32767 && (own === REFLECTS.water || (own === REFLECTS.open && cells.relief[at] === RELIEF.low))
-    kind[i] = reflects ? own : REFLECTS.none
-    if (reflects) ray.any = true
-  }
-  if (!ray.any) return
+  const { kind, surfaceM, topM } = ray
+  const { groundM, code, relief, inSight } = cells
+  let any = false
   let top = Number.NEGATIVE_INFINITY
-  for (let i = count - 1; i >= 0; i--) {
-    const ground = cells.groundM[from + i]
-    const surface = Number.isNaN(ground) ? Number.NEGATIVE_INFINITY : ground + codes.coverM[cells.code[from + i]]
+  for (let i = count - 1, at = from + count - 1; i >= 0; i--, at--) {
+    const own = codes.kind[code[at]]
+    const reflects = own !== 0 && inSight[at] > 32767 && (own === REFLECTS.water || relief[at] === RELIEF.low)
+    kind[i] = reflects ? own : REFLECTS.none
+    if (reflects) any = true
+    const surface = groundM[at] + codes.coverM[code[at]]
     surfaceM[i] = surface
     if (surface > top) top = surface
     topM[i] = top
-    meets[i] = -1
   }
-  // mean of the open ground around each open cell, by a window that moves along
-  const reach = Math.max(0, Math.round(SMOOTH_M / stepM))
-  let sum = 0
-  let held = 0
-  for (let i = -reach; i < count; i++) {
-    const enters = i + reach
-    const leaves = i - reach - 1
-    if (enters < count && kind[enters] === REFLECTS.open) {
-      sum += cells.groundM[from + enters]
+  ray.firstM = firstM
+  ray.count = count
+  ray.any = any
+  ray.antennaM = antennaM
+  ray.tideM = tideM
+  ray.groundM = groundM
+  ray.from = from
+  ray.ready = 0
+}
+
+/** Sets the curvature of the earth, 1 / effective radius, for a filled ray. */
+export function bendRay(ray: ReflectingRay, c: number): void {
+  ray.c = c
+  ray.ready = 0
+}
+
+/** Works out the next cell: its surface is the water's, or the mean of the open ground around. */
+function readyNext(ray: ReflectingRay): void {
+  const { kind, groundM, from, count, stepM } = ray
+  const i = ray.ready++
+  let z = groundM[from + i] + ray.tideM
+  if (kind[i] === REFLECTS.open) {
+    const reach = Math.round(SMOOTH_M / stepM)
+    let sum = 0
+    let held = 0
+    for (let k = Math.max(0, i - reach); k <= Math.min(count - 1, i + reach); k++) {
+      if (kind[k] !== REFLECTS.open) continue
+      sum += groundM[from + k]
       held++
     }
-    if (leaves >= 0 && kind[leaves] === REFLECTS.open) {
-      sum -= cells.groundM[from + leaves]
-      held--
-    }
-    if (i < 0) continue
-    const d = firstM + i * stepM
-    const z = kind[i] === REFLECTS.open ? sum / held : cells.groundM[from + i] + tideM
-    heightM[i] = z
-    tan[i] = (antennaM - z) / d - (d * c) / 2
+    z = Math.round((sum / held) * LEVELS_PER_M) / LEVELS_PER_M
   }
+  const d = ray.firstM + i * stepM
+  ray.heightM[i] = z
+  ray.tan[i] = (ray.antennaM - z) / d - (d * ray.c) / 2
+  ray.meets[i] = -1
 }
 
 /** Height over sea level at a ground range of the ray that came off cell i, m. */
 function reflectedM(ray: ReflectingRay, i: number, rangeM: number): number {
+  while (ray.ready <= i) readyNext(ray)
   const x = rangeM - ray.firstM - i * ray.stepM
   return ray.heightM[i] + x * ray.tan[i] + (x * x * ray.c) / 2
 }
@@ -157,11 +179,11 @@ function meetsAgain(ray: ReflectingRay, i: number): number {
 /**
  * Looks for the reflection point toward a target (height m MSL) at a ground range (m) in cell `cell` of the ray, from cell `start` on: the first
  * reflecting cell whose ray passes at or under the target, between it and the reflecting cell before. Returns the cell the search got to, the
- * start for any target farther out at the same height or higher; the point is in `ray.at…`, `atKind` REFLECTS.none where there is none in sight of
- * both ends.
+ * start for any target farther out at the same height or higher; the surface is in `ray.at…`, `atKind` REFLECTS.none where there is none in sight
+ * of both ends.
  */
 export function reflectionTo(ray: ReflectingRay, cell: number, rangeM: number, targetM: number, start: number): number {
-  const { kind, heightM, tan, stepM, firstM } = ray
+  const { kind, heightM, tan } = ray
   let i = start
   while (i < cell && (kind[i] === REFLECTS.none || reflectedM(ray, i, rangeM) > targetM)) i++
   ray.atKind = REFLECTS.none
@@ -173,8 +195,7 @@ export function reflectionTo(ray: ReflectingRay, cell: number, rangeM: number, t
   const t = before / (before - here)
   const near = t < 0.5 ? i - 1 : i
   if (meetsAgain(ray, near) < cell || !(tan[near] > 0)) return i
-  ray.atM = firstM + (i - 1 + t) * stepM
-  ray.atHeightM = heightM[i - 1] + t * (heightM[i] - heightM[i - 1])
+  ray.atHeightM = heightM[near]
   ray.atKind = kind[near]
   return i
 }

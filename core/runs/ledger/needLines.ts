@@ -76,7 +76,7 @@ const lobeOf = (p: NeedPlaceParts, signal: TargetSignal, targetM: number, slantM
     heightM: p.mastM,
     antennaM: p.antennaM,
     earth: earthOf(p.study),
-    effectiveRadiusM: p.radiusM,
+    raysEarth: earthOf(p.study),
     rangeStepM: p.study.run.rangeStepM,
   }
   return model && lobeAt(model, place, signal, p.sight, targetM, slantM)

@@ -1,4 +1,4 @@
-import { elevationAngleDeg, effectiveRadiusM as radiusOf, slantRangeM } from '../../../geodesy/index.ts'
+import { type Earth, elevationAngleDeg, effectiveRadiusM as radiusOf, slantRangeM } from '../../../geodesy/index.ts'
 import { type SightPoint, sightPoint } from '../../../masking/index.ts'
 import { cellAt } from '../../../polar/index.ts'
 import type { SettledNeed } from '../../../study/index.ts'
@@ -90,25 +90,25 @@ interface Echo {
   /** S/N with those losses, less the required ratio, with a bank's gain, dB. */
   readonly headDb: number
 }
-function echoOf(m: PlaceModel, s: SightPoint, targetM: number, radiusM: number): Echo {
+function echoOf(m: PlaceModel, s: SightPoint, targetM: number, radiusM: number, earth = m.o.earth): Echo {
   const { o, signal, need } = m
   const mast = antennaM(o)
   const slantM = slantRangeM(mast, targetM, s.rangeM, radiusM)
   const tan = Math.tan(elevationAngleDeg(mast, targetM, s.rangeM, radiusM) * RAD_PER_DEG)
   const echo = echoAt(signal, mast, targetM, s.rangeM, slantM, tan)
   const edgeDb = twoWayEdgeLossDb(targetM - s.floorM, s.rangeM, s.controlling.rangeM, wavelengthM(o.radar.frequencyHz))
-  const lobe = m.lobes && edgeDb === 0 && targetM >= s.floorM ? lobeAt(m.lobes, lobePlaceOf(o, radiusM), signal, s, targetM, slantM) : null
+  const lobe = m.lobes && edgeDb === 0 && targetM >= s.floorM ? lobeAt(m.lobes, lobePlaceOf(o, earth), signal, s, targetM, slantM) : null
   const lobeDb = lobe ? Math.max(0, -lobe.factorDb) : 0
   return { at: echo, slantM, edgeDb, lobeDb, headDb: echo.snrDb - edgeDb - lobeDb - need.requiredRatioDb + m.noiseGainDb }
 }
 
-const lobePlaceOf = (o: OptionCells, effectiveRadiusM: number): LobePlace => ({
+const lobePlaceOf = (o: OptionCells, raysEarth: Earth): LobePlace => ({
   ground: o.ground,
   place: o.place,
   heightM: o.heightM,
   antennaM: antennaM(o),
   earth: o.earth,
-  effectiveRadiusM,
+  raysEarth,
   rangeStepM: o.site.grid.rangeStepM,
 })
 
@@ -252,7 +252,7 @@ function atLowK(
   if (!low || !o.lowK) return { visibleLowK: null, detectableLowK: null, usableLowK: null }
   const visibleLowK = visibleFrom(low, targetM)
   if (visibleLowK !== 'yes') return { visibleLowK, detectableLowK: false, usableLowK: false }
-  const echo = echoOf(m, low, targetM, radiusOf(o.lowK.earth, o.place.lat, low.azimuthDeg))
+  const echo = echoOf(m, low, targetM, radiusOf(o.lowK.earth, o.place.lat, low.azimuthDeg), o.lowK.earth)
   const detectableLowK = echo.at.heard && echo.headDb >= 0
   const over =
     residueDb === null
