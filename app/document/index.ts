@@ -1,4 +1,5 @@
 export * from './autosave.ts'
+export * from './confirmationEdits.ts'
 export * from './draft.ts'
 export * from './edits.ts'
 export * from './fileStore.ts'

@@ -10,7 +10,7 @@ export type Theme = 'paper' | 'night'
 export type OpenChart = 'profile' | 'vertical' | 'rings' | 'suppression' | 'ledger' | 'figure' | null
 
 /** What is asked over the whole page. */
-export type OpenDialog = 'templates' | 'pulses' | 'candidates' | 'obstacles' | 'fixes' | 'keys' | 'commands' | 'studies' | null
+export type OpenDialog = 'templates' | 'pulses' | 'candidates' | 'obstacles' | 'fixes' | 'keys' | 'commands' | 'studies' | 'confirmations' | 'models' | null
 
 /** What is looked at: kept over a reload, never undone, never saved with the study. */
 export interface ViewState {

@@ -1,4 +1,5 @@
 export * from './cautions.ts'
+export * from './confirmed.ts'
 export * from './charts.ts'
 export * from './figureWords.ts'
 export * from './format.ts'

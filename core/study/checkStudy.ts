@@ -20,6 +20,13 @@ export function checkStudy(study: SettledStudy, doc?: StudyDoc): string[] {
       out.push(`needs[${i}] "${n.name}" reaches beyond the instrumented range of ${quantity(r.instrumentedRangeM, 'm')}`)
     if (n.fromRangeM >= n.toRangeM) out.push(`needs[${i}] "${n.name}" lies wholly beyond the grid of ${quantity(run.maxRangeM, 'm')}`)
   })
+  study.confirmations.forEach((c, i) => {
+    const candidate = study.candidates.find((x) => x.id === c.candidate)
+    if (!candidate?.mastHeightsM.includes(c.heightM))
+      out.push(`confirmations[${i}] is of ${c.candidate} at ${quantity(c.heightM, 'm')}, which is no option of the study`)
+    if (c.need !== null && !study.needs.some((n) => n.id === c.need))
+      out.push(`confirmations[${i}] is of the need "${c.need}", which is not in the study`)
+  })
   if (doc?.facades) out.push('facades: kept, not assessed yet')
   const unambiguous = SPEED_OF_LIGHT_MS / (2 * Math.max(...r.prfHz))
   if (r.instrumentedRangeM > unambiguous * 1.001)

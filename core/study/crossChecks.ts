@@ -1,5 +1,6 @@
 import { MAX_POLAR_CELLS } from '../polar/index.ts'
 import { SPEED_OF_LIGHT_MS } from '../units/index.ts'
+import { checkConfirmations } from './checkConfirmations.ts'
 import { checkPulses, shortestPulseS } from './checkPulses.ts'
 import { cellsOf, defaultAzimuthStepDeg, evenStepDeg, gateOfM, longestRangeStepM } from './grid.ts'
 import { quantity } from './limits.ts'
@@ -278,6 +279,7 @@ export function crossChecks(doc: StudyDoc, ok: (part: string) => boolean): Probl
     checkIds(doc.needs ?? [], 'needs', say)
   }
   if (ok('ranking') && doc.ranking) checkRanking(doc.ranking, say)
+  if (ok('confirmations')) checkConfirmations(doc.confirmations ?? [], say)
   if (ok('candidates')) {
     checkCandidates(doc.candidates, say)
     checkIds(doc.candidates, 'candidates', say)

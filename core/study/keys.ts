@@ -6,8 +6,8 @@ import { studySchema } from './schema.ts'
 /** Keys whose models come later: kept untouched and reported as not assessed, by the object they stand in. */
 const LATER: Readonly<Record<string, readonly string[]>> = {
   radar: ['dwellsNeeded', 'scan'],
-  'candidates[]': ['surveyedErrorM', 'screeningBandDeg', 'confirmed'],
-  '': ['screeningBandDeg', 'weights', 'confirmed', 'vehicleRcsM2'],
+  'candidates[]': ['surveyedErrorM', 'screeningBandDeg'],
+  '': ['screeningBandDeg'],
 }
 
 /** What the walk over the keys of a document found. */

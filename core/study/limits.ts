@@ -103,6 +103,8 @@ export const LIMITS: Readonly<Record<string, Limit>> = {
   'candidates[].mastHeightsM[]': limit('mast height', 'm', 0, 1000, OPEN),
   'candidates[].tiltsDeg[]': limit('tilt', 'deg', -90, 90),
   'candidates[].clearingRadiusM': limit('clearing radius', 'm', 0, 20_000),
+  'confirmations[].altitudeM': limit('altitude', 'm', -1000, 100_000),
+  'confirmations[].heightM': limit('mast height', 'm', 0, 1000, OPEN),
   'run.maxRangeM': limit('range of the grid', 'm', 100, 2e6),
   'run.rangeStepM': limit('range step', 'm', 0.1, 20_000),
   'run.foldRangeM': limit('range of folded clutter', 'm', 100, 2e6),

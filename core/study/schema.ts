@@ -200,6 +200,8 @@ const candidate = z.looseObject({
   tiltsDeg: z.array(num('candidates[].tiltsDeg[]')).nullable().optional(),
   clearingRadiusM: num('candidates[].clearingRadiusM').optional(),
   notes: z.string().optional(),
+  measuredHorizon: fileOnly.nullable().optional(),
+  useMeasuredHorizon: z.boolean().optional(),
   rejected: reason.optional(),
 })
 const criterion = z.looseObject({
@@ -207,6 +209,18 @@ const criterion = z.looseObject({
   worst: num('ranking.criteria[].worst'),
   best: num('ranking.criteria[].best'),
   weight: num('ranking.criteria[].weight'),
+})
+
+const confirmation = z.looseObject({
+  need: z.string().optional(),
+  place: z.string().optional(),
+  candidate: id,
+  heightM: num('candidates[].mastHeightsM[]'),
+  who: z.string().optional(),
+  when: z.string().optional(),
+  method: z.string().optional(),
+  altitudeM: num('confirmations[].altitudeM').optional(),
+  result: z.string().optional(),
 })
 
 export const studySchema = z.looseObject({
@@ -225,6 +239,7 @@ export const studySchema = z.looseObject({
   radar,
   needs: z.array(need).optional(),
   candidates: z.array(candidate),
+  confirmations: z.array(confirmation).optional(),
   ranking: z.looseObject({ criteria: z.array(criterion) }).optional(),
   run: z
     .looseObject({

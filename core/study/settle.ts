@@ -15,6 +15,8 @@ import type {
   AntennaDoc,
   AtmosphereDoc,
   CandidateDoc,
+  Confirmation,
+  ConfirmationDoc,
   DefaultUsed,
   NeedDoc,
   RadarDoc,
@@ -169,8 +171,23 @@ function settleCandidate(c: CandidateDoc, i: number, antennaTiltDeg: number, d: 
     tiltsDeg: c.tiltsDeg ? [...c.tiltsDeg] : [antennaTiltDeg],
     clearingRadiusM: d.take(`candidates[${i}].clearingRadiusM`, c.clearingRadiusM, 50),
     notes: c.notes ?? '',
+    measuredHorizon: c.measuredHorizon?.file ?? null,
+    useMeasuredHorizon: c.measuredHorizon ? d.take(`candidates[${i}].useMeasuredHorizon`, c.useMeasuredHorizon, false) : false,
   }
 }
+
+/** A confirmation that has been checked at the door. */
+const settleConfirmation = (c: ConfirmationDoc): Confirmation => ({
+  need: c.need ?? null,
+  place: c.place?.trim() ?? '',
+  candidate: c.candidate,
+  heightM: c.heightM,
+  who: c.who?.trim() ?? '',
+  when: c.when?.trim() ?? '',
+  method: c.method?.trim() ?? '',
+  altitudeM: c.altitudeM ?? Number.NaN,
+  result: c.result?.trim() ?? '',
+})
 
 /**
  * Fills in every default of a sound document and lists each one used.
@@ -237,6 +254,7 @@ export function settle(doc: StudyDoc, fileName?: string): SettledStudy {
       c.rejected === undefined ? [] : [{ id: c.id, name: c.name ?? c.id, lon: c.lon, lat: c.lat, reason: c.rejected }],
     ),
     ranking: doc.ranking && doc.ranking.criteria.length > 0 ? doc.ranking : null,
+    confirmations: (doc.confirmations ?? []).map(settleConfirmation),
     run: { maxRangeM, rangeStepM, azimuthStepDeg },
     foldRangeM: d.take('run.foldRangeM', doc.run?.foldRangeM, defaultFoldRangeM(radar)),
     defaults: d.used,

@@ -118,6 +118,22 @@ export interface NeedDoc {
   /** Where values come from, by key path inside the need. */
   origins?: Record<string, string>
 }
+/** Something measured on site or in trial: entered by the user, never computed. All but `need`, `place` and `notes` is asked for. */
+export interface ConfirmationDoc {
+  /** Id of the need, or a place in words; one of the two. */
+  need?: string
+  place?: string
+  candidate: string
+  /** Mast height of the option, m. */
+  heightM: number
+  who?: string
+  /** Day, as 2026-05-31. */
+  when?: string
+  method?: string
+  /** Altitude flown or measured, m MSL. */
+  altitudeM?: number
+  result?: string
+}
 export interface CandidateDoc {
   id: string
   name?: string
@@ -128,6 +144,10 @@ export interface CandidateDoc {
   tiltsDeg?: number[] | null
   clearingRadiusM?: number
   notes?: string
+  /** Horizon surveyed at this candidate. */
+  measuredHorizon?: { file: string } | null
+  /** Take the higher of surveyed and computed horizon. */
+  useMeasuredHorizon?: boolean
   /** Why the candidate is out: it is listed with this reason and no longer worked out. */
   rejected?: string
 }
@@ -184,6 +204,7 @@ export interface StudyDoc {
   radar: RadarDoc
   needs?: NeedDoc[]
   candidates: CandidateDoc[]
+  confirmations?: ConfirmationDoc[]
   /** How options are ranked; absent: an order of reading only. */
   ranking?: RankingDoc
   run?: RunDoc
@@ -241,6 +262,21 @@ export interface SettledCandidate {
   readonly tiltsDeg: readonly number[]
   readonly clearingRadiusM: number
   readonly notes: string
+  /** File of the horizon surveyed there; null = none. */
+  readonly measuredHorizon: string | null
+  readonly useMeasuredHorizon: boolean
+}
+/** Measured on site or in trial; complete. */
+export interface Confirmation {
+  readonly need: string | null
+  readonly place: string
+  readonly candidate: string
+  readonly heightM: number
+  readonly who: string
+  readonly when: string
+  readonly method: string
+  readonly altitudeM: number
+  readonly result: string
 }
 export interface RejectedCandidate {
   readonly id: string
@@ -286,6 +322,7 @@ export interface SettledStudy {
   readonly needs: readonly SettledNeed[]
   /** Those that are worked out. */
   readonly candidates: readonly SettledCandidate[]
+  readonly confirmations: readonly Confirmation[]
   /** Those the study has given up, with the reason. */
   readonly rejected: readonly RejectedCandidate[]
   readonly ranking: RankingDoc | null

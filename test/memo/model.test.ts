@@ -35,6 +35,7 @@ describe('the memo', () => {
       'option-C-24-1.5',
       'comparison',
       'exposure',
+      'confirmed',
       'not-assessed',
       'cautions',
       'models',

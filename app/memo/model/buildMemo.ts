@@ -1,9 +1,10 @@
 import type { OptionRef } from '../../../core/index.ts'
-import { CAUTIONS, formatDate } from '../../words/index.ts'
+import { CAUTIONS, CONFIRMED_WORDS, formatDate } from '../../words/index.ts'
 import { annexBlocks } from './annexSection.ts'
 import { candidateBlocks } from './candidatesSection.ts'
 import { optionName } from './cells.ts'
 import { cautionBlocks, comparisonBlocks, notAssessedBlocks } from './closingSections.ts'
+import { confirmedBlocks } from './confirmedSection.ts'
 import { dataBlocks } from './dataSection.ts'
 import { exposureBlocks } from './exposureSection.ts'
 import { modelBlocks } from './modelsSection.ts'
@@ -37,6 +38,7 @@ export function buildMemo(input: MemoInput, only?: OptionRef | null): MemoModel 
     })
   add('comparison', 'Comparison', () => comparisonBlocks(input, figure), { newPage: true })
   add('exposure', 'RF exposure', () => exposureBlocks(input))
+  add('confirmed', CONFIRMED_WORDS.title, () => confirmedBlocks(input))
   add('not-assessed', 'Not assessed', () => notAssessedBlocks())
   add('cautions', 'Cautions', () => cautionBlocks())
   add('models', 'Models and sources', () => modelBlocks(input))

@@ -1,4 +1,5 @@
 export { buildMemo } from './buildMemo.ts'
 export { cellText } from './cells.ts'
+export { modelBlocks } from './modelsSection.ts'
 export * from './ranking.ts'
 export * from './types.ts'

@@ -29,7 +29,8 @@ export function MemoPages({ model }: { model: MemoModel }) {
   )
 }
 
-const Blocks = ({ blocks }: { blocks: readonly Block[] }): ReactNode =>
+/** Blocks of the memo in order. */
+export const Blocks = ({ blocks }: { blocks: readonly Block[] }): ReactNode =>
   blocks.map((block, i) => (
     // biome-ignore lint/suspicious/noArrayIndexKey: a block is known by its place in the memo alone
     <BlockView key={i} block={block} />

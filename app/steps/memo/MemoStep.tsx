@@ -1,7 +1,7 @@
 import { useMemo } from 'react'
 import { optionKey, studyOptions } from '../../document/index.ts'
 import { Button, Caution, ProgressBar } from '../../ui/index.ts'
-import { CAUTIONS } from '../../words/index.ts'
+import { CAUTIONS, CONFIRMED_WORDS } from '../../words/index.ts'
 import { useDoc, useResults, useSession } from '../session/index.ts'
 import { MemoPages } from './MemoPages.tsx'
 import { useMemoExport } from './useMemoExport.ts'
@@ -22,6 +22,10 @@ export function MemoStep() {
         {done < options.length ? '; the others join as they are computed' : ''}
       </p>
       <Caution>{CAUTIONS.sensitive}</Caution>
+      <div className="row">
+        <Button onPress={() => view.getState().set({ dialog: 'confirmations' })}>{CONFIRMED_WORDS.add}</Button>
+        <Button onPress={() => view.getState().set({ dialog: 'models' })}>Models and sources</Button>
+      </div>
       {progress ? (
         <ProgressBar doing="Painting maps and writing the PDF" done={progress.done} total={progress.total} secondsLeft={null} />
       ) : null}

@@ -5,6 +5,8 @@ import { useView } from '../session/index.ts'
 /** What is asked over the whole page; each comes down on its first use. */
 const DIALOGS: Partial<Record<NonNullable<OpenDialog>, ComponentType>> = {
   candidates: lazy(() => import('../forms/CandidatesDialog.tsx').then((m) => ({ default: m.CandidatesDialog }))),
+  confirmations: lazy(() => import('../memo/ConfirmationsDialog.tsx').then((m) => ({ default: m.ConfirmationsDialog }))),
+  models: lazy(() => import('../memo/ModelsDialog.tsx').then((m) => ({ default: m.ModelsDialog }))),
   fixes: lazy(() => import('../forms/FixesDialog.tsx').then((m) => ({ default: m.FixesDialog }))),
   obstacles: lazy(() => import('../forms/ObstaclesDialog.tsx').then((m) => ({ default: m.ObstaclesDialog }))),
   pulses: lazy(() => import('../forms/PulsesDialog.tsx').then((m) => ({ default: m.PulsesDialog }))),
