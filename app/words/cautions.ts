@@ -21,8 +21,10 @@ export const CAUTIONS = {
   threeWords: 'In sight, detectable and usable are predictions, to be confirmed by trial; none of them is confirmed here.',
   meanUsable: 'Usable is worked out for the mean clutter of each cell: spiky clutter is worse in places.',
   headlineK: 'Pass holds for the k of the study and for k = 1; it says nothing about ducting.',
-  edgeOnly: 'Toward the target only the knife edge near the mask is taken: no lobing over water or level ground.',
-  diffracted: 'Under the coverage floor the diagram shows the diffracted level over the profile, from memory (ITU-R P.526): it is counted nowhere.',
+  edgeOnly:
+    'Nulls of the ray off water or low-relief open ground count, its gains do not; their place moves with tide, waves and the level of the ground.',
+  diffracted:
+    'Under the coverage floor the diagram shows the diffracted level over the profile, from memory (ITU-R P.526): it is counted nowhere.',
   requiredRatio:
     'A required ratio not stated is worked out from Pd, Pfa, fluctuation and the pulses of one scan; residue is taken as noise.',
   statedSuppression: 'Suppression that is stated is taken as stated, not worked out from the waveform.',

@@ -6,11 +6,14 @@ export interface NotAssessed {
 }
 export const NOT_ASSESSED: readonly NotAssessed[] = [
   {
-    what: 'Lobing and diffraction',
-    so: 'a target in sight has its free-space echo, less a knife edge near the mask; no reflection off water or ground',
+    what: 'Diffracted echoes behind a mask',
+    so: 'a masked target counts as lost, whatever comes over the edge; the range-height diagram alone draws it',
+  },
+  {
+    what: 'Lobing off other ground',
+    so: 'rays come off water and low-relief open ground only; farmland, forest and built-up ground send none back up',
   },
   { what: 'Ducting and other refraction', so: 'the k of the study and k = 1 only; no bent layers' },
-  { what: 'Pulse compression side lobes', so: 'clutter enters through the compressed pulse alone' },
   { what: 'Spiky clutter', so: 'every decision is for the mean of the cell; the spread is not in the shares' },
   { what: 'Traffic on roads', so: 'roads seen are counted by length and speed; how many vehicles, and false tracks from them, are not' },
   { what: 'Reflections and false targets', so: 'no facade is traced' },

@@ -46,6 +46,13 @@ const SIGNAL: readonly ModelRow[] = [
     limits: 'never a gain',
   },
   {
+    model: 'Two rays off water and open ground',
+    source:
+      'Kerr, Propagation of Short Radio Waves, 1951; ground constants after ITU-R P.527; roughness after Miller, Brown and Vegh, 1984',
+    basis: 'from memory',
+    limits: 'level surface at the point, never a gain; open ground 0.3\u202fm rough, water a quarter of its waves',
+  },
+  {
     model: 'Detection, Swerling 0 to 4',
     source: 'Exact sums of the chi-square family (Marcum, Swerling)',
     basis: 'computed',
