@@ -148,7 +148,7 @@ test('the terrain profile opens from the horizon and closes again', async ({ pag
   await everythingRun(page)
   const strip = page.getByRole('img', { name: /^Horizon/ })
   await strip.click({ position: { x: 120, y: 40 } })
-  const profile = page.getByRole('heading', { name: /^Terrain profile, azimuth/ })
+  const profile = page.getByRole('application', { name: /^Terrain profile, A at/ })
   await expect(profile).toBeVisible()
   const chart = page.locator('svg.chart.terrain')
   await expect(chart).toBeVisible()

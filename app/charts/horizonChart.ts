@@ -1,7 +1,8 @@
-import type { HorizonRow } from '../../core/index.ts'
+import type { HorizonLine, HorizonRow } from '../../core/index.ts'
 import { formatPlaceRange, formatScreening, textOf, type UnitSystem } from '../words/index.ts'
 import { azimuthTicks, niceTicks, ticksWithin, xAxis, yAxis } from './axes.ts'
 import { type Box, type Drawing, type Item, lineOf, type Point, pathOf, type Scale, scaleOf } from './drawing.ts'
+import { keyItems, otherLines } from './horizonLines.ts'
 import { placeInRows } from './labels.ts'
 
 export interface HorizonInput {
@@ -16,6 +17,15 @@ export interface HorizonInput {
   readonly style: 'strip' | 'chart'
   /** Most labels to try; default 4 in a strip, 8 in a chart. */
   readonly labels?: number
+  /** Other horizons of the same antenna: bare ground, smaller k. */
+  readonly lines?: readonly HorizonLine[]
+  /** Surveyed elevations from this antenna, rising azimuth, with the widest gap that is joined, deg. */
+  readonly measured?: {
+    readonly points: readonly { readonly azimuthDeg: number; readonly elevationDeg: number }[]
+    readonly gapDeg: number
+  }
+  /** How much of the height the scale shows: 1 all of it, 4 its lowest quarter. */
+  readonly stretch?: number
 }
 /** Drawing plus what a pointer needs. */
 export interface HorizonGeometry {
@@ -42,33 +52,41 @@ export function horizonChart(input: HorizonInput): HorizonGeometry {
   const rows = input.rows.filter((r) => Number.isFinite(r.elevationDeg))
   const strip = style === 'strip'
   const named = peaksOf(rows, input.labels ?? (strip ? 4 : 8))
-  const rowCount = strip ? 1 : 2
+  const keyed = (input.lines?.length ?? 0) > 0 || (input.measured?.points.length ?? 0) > 0
+  const rowCount = strip && !keyed ? 1 : 2
   const box: Box = {
     left: strip ? 2.9 * size : 3.4 * size,
     right: width - (strip ? 0.8 : 1.4) * size,
-    top: (strip ? 1.5 : 1.6 + 1.25 * rowCount) * size,
-    bottom: height - (strip ? 1.6 : 3) * size,
+    top: (strip ? 0.25 + 1.25 * rowCount : 1.6 + 1.25 * rowCount) * size,
+    bottom: height - ((strip ? 1.6 : 3) + (keyed ? 1.5 : 0)) * size,
   }
-  const low = Math.min(0, ...rows.map((r) => r.elevationDeg))
-  const high = Math.max(0.1, ...rows.map((r) => r.elevationDeg))
+  const drawn = [
+    ...rows.map((r) => r.elevationDeg),
+    ...(input.lines ?? []).flatMap((l) => [...l.elevationDeg]),
+    ...(input.measured?.points ?? []).map((p) => p.elevationDeg),
+  ].filter((v) => Number.isFinite(v))
+  const low = Math.min(0, ...drawn)
+  const high = low + (Math.max(0.1, ...drawn) - low) / (input.stretch ?? 1)
   const pad = 0.06 * (high - low)
   const { from, to, ticks } = strip
     ? { from: low - pad, to: high + pad, ticks: ticksWithin(low - pad, high + pad, 2) }
     : niceTicks(low, high, 4)
   const azimuth = scaleOf(0, 360, box.left, box.right)
   const elevation = scaleOf(from, to, box.bottom, box.top)
-  const points = closed(rows).map((r): Point => [azimuth.at(r.azimuthDeg), elevation.at(r.elevationDeg)])
+  const points = closed(rows).map((r): Point => [azimuth.at(r.azimuthDeg), Math.max(box.top, elevation.at(r.elevationDeg))])
   const degrees = ticks.map((t) => ({ at: t.at, label: `${t.label}°` }))
   const items: Item[] = [...yAxis(box, elevation, degrees, strip ? '' : 'Elevation of the horizon, deg', size)]
   if (points.length > 1) {
     const area: Point[] = [[box.left, box.bottom], ...points, [box.right, box.bottom]]
     items.push({ kind: 'path', d: pathOf(area, true), fill: 'ink', opacity: 0.14 })
+    items.push(...otherLines(input, azimuth, elevation, box))
     items.push({ kind: 'path', d: edgePath(rows, azimuth, elevation, false), stroke: 'ink', width: 1 })
     items.push({ kind: 'path', d: edgePath(rows, azimuth, elevation, true), stroke: 'ink', width: 1, dash: [3, 2] })
   }
   const titleX = strip ? '' : 'Azimuth from true north'
   items.push(...xAxis(box, azimuth, azimuthTicks(strip ? 'winds' : 'degrees'), titleX, size))
   items.push(...labelItems(named, input, box, azimuth, elevation, rowCount))
+  if (keyed) items.push(...keyItems(input, box, height - 0.35 * size))
   const top = named[0]
   const title = top
     ? `Horizon profile: highest ${textOf(formatScreening(top.elevationDeg))} at azimuth ${Math.round(top.azimuthDeg)}°, ${nameOf(top)}`
@@ -95,7 +113,7 @@ function labelItems(
   return placed.flatMap((p): Item[] => {
     const row = named[wants.findIndex((w) => w.x === p.x && w.text === p.text)]
     const base = box.top - (0.45 + 1.25 * p.row) * input.size
-    const d = lineOf(p.x, base + 0.2 * input.size, p.x, elevation.at(row.elevationDeg))
+    const d = lineOf(p.x, base + 0.2 * input.size, p.x, Math.max(box.top, elevation.at(row.elevationDeg)))
     return [
       { kind: 'path', d, stroke: 'ink-3', width: 0.5 },
       { kind: 'text', x: p.left, y: base, text: p.text, size: input.size, ink: 'ink', halo: true },
@@ -158,7 +176,7 @@ function edgePath(rows: readonly HorizonRow[], azimuth: Scale, elevation: Scale,
   return pathOf(
     all.map((r, i): Point => {
       const shown = isAtLeast(r) === edge || (edge && i > 0 && isAtLeast(all[i - 1]))
-      return shown ? [azimuth.at(r.azimuthDeg), elevation.at(r.elevationDeg)] : [Number.NaN, 0]
+      return shown && r.elevationDeg <= elevation.to ? [azimuth.at(r.azimuthDeg), elevation.at(r.elevationDeg)] : [Number.NaN, 0]
     }),
   )
 }

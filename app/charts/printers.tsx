@@ -47,10 +47,10 @@ function usePointing(scale: Scale, { onPoint, onPick }: Pointing) {
 
 /** Horizon profile; as `strip` it wraps the upper edge of the map. */
 export function HorizonChart({ cursorRef, onPoint, onPick, ...input }: HorizonInput & Pointing) {
-  const { rows, width, height, system, size, style, labels } = input
+  const { rows, width, height, system, size, style, labels, lines, measured, stretch } = input
   const geometry = useMemo(
-    () => horizonChart({ rows, width, height, system, size, style, labels }),
-    [rows, width, height, system, size, style, labels],
+    () => horizonChart({ rows, width, height, system, size, style, labels, lines, measured, stretch }),
+    [rows, width, height, system, size, style, labels, lines, measured, stretch],
   )
   const pointing = usePointing(geometry.azimuth, { onPoint, onPick })
   return (

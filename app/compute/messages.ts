@@ -21,6 +21,7 @@ export const RANK: Readonly<Record<keyof Ask, number>> = {
   ledger: 2,
   preview: 3,
   vertical: 4,
+  horizons: 4,
   map: 4,
   roads: 4,
   ladder: 6,
@@ -28,6 +29,6 @@ export const RANK: Readonly<Record<keyof Ask, number>> = {
 /** Work for the option on show goes between the asks and the ladder. */
 export const BACKGROUND_RANK = 5
 /** Of these only the newest counts: an older one still waiting is answered with null. */
-export const SUPERSEDING: ReadonlySet<keyof Ask> = new Set(['paint', 'base', 'preview', 'probe', 'vertical', 'roads', 'ladder'])
+export const SUPERSEDING: ReadonlySet<keyof Ask> = new Set(['paint', 'base', 'preview', 'probe', 'vertical', 'horizons', 'roads', 'ladder'])
 /** A new ground or study makes these worthless. */
-export const STALE_AFTER_STUDY: ReadonlySet<keyof Ask> = new Set(['ladder', 'map', 'vertical', 'roads'])
+export const STALE_AFTER_STUDY: ReadonlySet<keyof Ask> = new Set(['ladder', 'map', 'vertical', 'horizons', 'roads'])

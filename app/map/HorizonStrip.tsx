@@ -1,9 +1,9 @@
 import { useEffect, useLayoutEffect, useMemo, useRef, useState } from 'react'
 import { Button } from 'react-aria-components'
 import type { HorizonRow } from '../../core/index.ts'
-import { horizonChart } from '../charts/index.ts'
+import { type HorizonInput, horizonChart, horizonCsv } from '../charts/index.ts'
 import { HorizonChart, moveCursor } from '../charts/printers.tsx'
-import { formatAzimuth, formatPlaceRange, formatScreening, MAP_WORDS, textOf, type UnitSystem } from '../words/index.ts'
+import { CHART_WORDS, formatAzimuth, formatPlaceRange, formatScreening, MAP_WORDS, textOf, type UnitSystem } from '../words/index.ts'
 import type { HorizonStripProps } from './types.ts'
 import { useChannel } from './useChannel.ts'
 import './ruler.css'
@@ -11,23 +11,27 @@ import './ruler.css'
 const SIZE = 12
 /** Height of the stretched strip; the shell's grid takes it from `--strip`. */
 const STRETCHED_HEIGHT = '224px'
+/** Shares of the height that the stretched strip shows: all of it, its lower half, quarter, eighth. */
+const TIMES = [1, 2, 4, 8] as const
 
 /** The horizon wraps the map: its profile along the map's upper edge, azimuth by azimuth, pointer linked both ways. */
-export function HorizonStrip({ hub, rows, units, onPick }: HorizonStripProps) {
+export function HorizonStrip({ hub, rows, lines, measured, units, onPick, onStretched, onCharts, copy }: HorizonStripProps) {
   const box = useRef<HTMLDivElement>(null)
   const cursor = useRef<SVGLineElement>(null)
   const read = useRef<HTMLSpanElement>(null)
   const [size, setSize] = useState({ width: 0, height: 0 })
   const [pointed, setPointed] = useState(false)
   const [stretched, setStretched] = useState(false)
+  const [times, setTimes] = useState<(typeof TIMES)[number]>(1)
   const answer = useChannel(hub.trialAnswer)
   useLayoutEffect(() => {
     const { style } = document.documentElement
     if (stretched) style.setProperty('--strip', STRETCHED_HEIGHT)
+    onStretched(stretched)
     return () => {
       style.removeProperty('--strip')
     }
-  }, [stretched])
+  }, [stretched, onStretched])
   useLayoutEffect(() => {
     const host = box.current
     if (!host) return
@@ -43,13 +47,22 @@ export function HorizonStrip({ hub, rows, units, onPick }: HorizonStripProps) {
   const labels = tried || pointed ? 0 : undefined
   const { width } = size
   const height = size.height
-  const geometry = useMemo(
-    () =>
-      width > 0 && shown.length > 0
-        ? horizonChart({ rows: shown, width, height, system: units, size: SIZE, style: 'strip', labels })
-        : null,
-    [shown, labels, width, height, units],
+  // other horizons and the survey have room in the stretched strip only, and none beside a place on trial
+  const others = stretched && !tried
+  const input = useMemo(
+    (): HorizonInput => ({
+      rows: shown,
+      width,
+      height,
+      system: units,
+      size: SIZE,
+      style: 'strip',
+      labels,
+      ...(others ? { lines, measured: measured ?? undefined, stretch: times } : {}),
+    }),
+    [shown, width, height, units, labels, others, lines, measured, times],
   )
+  const geometry = useMemo(() => (width > 0 && shown.length > 0 ? horizonChart(input) : null), [input, width, shown])
   useEffect(
     () =>
       hub.pointer.listen((p) => {
@@ -67,21 +80,31 @@ export function HorizonStrip({ hub, rows, units, onPick }: HorizonStripProps) {
       {geometry ? (
         <div className="horizon-chart">
           <HorizonChart
-            rows={shown}
-            width={width}
-            height={height}
-            system={units}
-            size={SIZE}
-            style="strip"
+            {...input}
             cursorRef={cursor}
-            labels={labels}
             onPoint={(azimuth) => hub.pointer.set(azimuth === null ? null : placeOn(azimuth, geometry.rowAt(azimuth)))}
             onPick={onPick}
           />
           <span ref={read} className="horizon-read" aria-hidden />
-          <Button className="button quiet small stretch" aria-pressed={stretched} onPress={() => setStretched(!stretched)}>
-            {MAP_WORDS.stretch}
-          </Button>
+          <span className="stretch">
+            {stretched
+              ? copy(
+                  () => geometry.drawing,
+                  () => horizonCsv(input),
+                )
+              : null}
+            {stretched ? (
+              <Button className="button quiet small" onPress={() => setTimes(TIMES[(TIMES.indexOf(times) + 1) % TIMES.length])}>
+                {CHART_WORDS.stretchOf(times)}
+              </Button>
+            ) : null}
+            <Button className="button quiet small" onPress={onCharts}>
+              {CHART_WORDS.charts}
+            </Button>
+            <Button className="button quiet small" aria-pressed={stretched} onPress={() => setStretched(!stretched)}>
+              {MAP_WORDS.stretch}
+            </Button>
+          </span>
         </div>
       ) : (
         <p className="ink-3 horizon-empty">{MAP_WORDS.horizonEmpty}</p>

@@ -1,6 +1,7 @@
 import type { ReactNode } from 'react'
-import type { Answer, HorizonRow, LayerId, LonLat, LossCause, ModelMark, Obstacle, OptionRef, Road, RoadLines } from '../../core/index.ts'
+import type { Answer, HorizonLine, HorizonRow, LayerId, LonLat, LossCause, ModelMark, Obstacle, OptionRef, Road, RoadLines } from '../../core/index.ts'
 import type { StudyClient } from '../compute/client.ts'
+import type { Drawing } from '../charts/index.ts'
 import type { UnitSystem } from '../words/index.ts'
 
 /** A candidate as the map draws it. */
@@ -137,7 +138,20 @@ export interface HorizonStripProps {
   readonly hub: MapHub
   /** Rows of the option on show; empty while not computed. */
   readonly rows: readonly HorizonRow[]
+  /** Other horizons of the same antenna, shown in the stretched strip; empty until asked for. */
+  readonly lines: readonly HorizonLine[]
+  /** Surveyed elevations from this antenna, and the widest gap that is joined, deg; null where there is no survey. */
+  readonly measured: {
+    readonly points: readonly { readonly azimuthDeg: number; readonly elevationDeg: number }[]
+    readonly gapDeg: number
+  } | null
   readonly units: UnitSystem
-  /** Azimuth picked: opens the terrain profile there. */
+  /** Azimuth picked: opens a chart there. */
   readonly onPick: (azimuthDeg: number) => void
+  /** The strip was stretched or folded back. */
+  readonly onStretched: (stretched: boolean) => void
+  /** The charts over the lower half of the map are asked for. */
+  readonly onCharts: () => void
+  /** Copy buttons for a drawing and a table. */
+  readonly copy: (drawing: () => Drawing | null, csv: () => string | null) => ReactNode
 }

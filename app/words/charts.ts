@@ -21,6 +21,11 @@ export const CHART_WORDS = {
   keys: 'Arrow keys move the reading, Shift by ten, plus and minus zoom, 0 shows the whole',
   height: 'Height',
   aboveGround: 'above ground',
+  withCover: 'with cover',
+  bareGround: 'bare ground',
+  measured: 'measured',
+  /** How much of the height of the horizon the strip shows. */
+  stretchOf: (n: number) => `Height ×${n}`,
   rays: { peak: 'beam peak', lower: 'half power', upper: 'half power', end: 'end of pattern' },
   stcTo: (most: string) => `short-range sensitivity ends, up to ${most}`,
   instrumented: 'instrumented range',

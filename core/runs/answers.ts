@@ -7,6 +7,7 @@ import { wavelengthM } from '../units/index.ts'
 import { share, type Work } from '../work/index.ts'
 import { paintOptionsDifference } from './difference.ts'
 import type { Engine } from './engine.ts'
+import { horizonLines } from './horizonLines.ts'
 import { heightToSee } from './layers.ts'
 import { cellLedger } from './ledger/cellLedger.ts'
 import { candidateOf, clutterOptions, earthOf, lowEarthOf, lowKOf, mayFold, siteOf, suppressionOf } from './optionParts.ts'
@@ -50,6 +51,7 @@ export class Answers {
     probe: (body) => this.probeAt(body),
     profile: (body) => this.profile(body),
     vertical: (body) => this.vertical(body),
+    horizons: (body) => this.horizons(body),
     ledger: (body) => this.ledger(body),
     roads: (body) => this.roads(body),
     ladder: (body) => this.ladder(body),
@@ -190,6 +192,14 @@ export class Answers {
     const site = siteOf(candidateOf(study, body.option.candidate))
     const along = sightAlong(ground, site, body.option.heightM, earthOf(study), body.azimuthDeg, study.run.maxRangeM)
     return { option: body.option, ...along, ray: profileRay(along, wavelengthM(study.radar.frequencyHz), body.target ?? null) }
+  }
+
+  private *horizons(body: Ask['horizons']): Work<EngineAnswer['horizons']> {
+    const { ground, study } = this.engine.ready()
+    const earth = earthOf(study)
+    const earths = isLowK(earth.effectiveEarthFactor) ? [earth] : [earth, lowEarthOf(study)]
+    const site = siteOf(candidateOf(study, body.option.candidate))
+    return yield* horizonLines(ground, site, body.option.heightM, earths, study.run.maxRangeM)
   }
 
   private *vertical(body: Ask['vertical']): Work<EngineAnswer['vertical']> {

@@ -1,6 +1,7 @@
 export { Answers, type EngineAnswer, type Painted } from './answers.ts'
 export { type DifferenceInfo, differenceInfo } from './difference.ts'
 export { Engine, type Shown } from './engine.ts'
+export { horizonLines } from './horizonLines.ts'
 export { optionId, optionsOfStudy } from './keys.ts'
 export { fillLayer, isLayerId, LAYERS, layerInfo, NEED_LAYERS } from './layers.ts'
 export { cellLedger } from './ledger/cellLedger.ts'

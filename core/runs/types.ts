@@ -104,6 +104,15 @@ export interface ProfileRay {
   /** Radius of the first Fresnel zone, m. */
   readonly fresnelM: Float64Array
 }
+/** A horizon beside the study's own, by azimuth. */
+export interface HorizonLine {
+  /** Effective-earth factor. */
+  readonly k: number
+  /** With cover and obstacles, or of the bare ground. */
+  readonly cover: boolean
+  readonly azimuthsDeg: readonly number[]
+  readonly elevationDeg: Float64Array
+}
 export interface Probe {
   readonly lon: number
   readonly lat: number
@@ -157,6 +166,8 @@ export interface Ask {
   profile: { azimuthDeg: number; option: OptionRef; target?: { rangeM: number; heightM: number } }
   /** The plane over one azimuth for the target of a need; null: the first need of the study. */
   vertical: { option: OptionRef; need: string | null; window: CutWindow }
+  /** Horizons of the bare ground and at the smaller k, for the strip. */
+  horizons: { option: OptionRef }
   ledger: { at: LonLat; option: OptionRef }
   /** Roads within range, those whose vehicles are seen apart from the others. */
   roads: { option: OptionRef }
@@ -177,6 +188,7 @@ export interface Answer {
   profile: Profile
   /** null where the study states no need. */
   vertical: VerticalCut | null
+  horizons: readonly HorizonLine[]
   ledger: CellLedger
   /** null where the option's cells are not held. */
   roads: RoadLines | null

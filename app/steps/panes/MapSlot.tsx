@@ -10,10 +10,8 @@ import { useRoadLines } from './useRoadLines.ts'
 const LowerPanel = lazy(() => import('./LowerPanel.tsx').then((m) => ({ default: m.LowerPanel })))
 const MapPane = lazy(() => import('../../map/index.ts').then((m) => ({ default: m.MapPane })))
 const Ruler = lazy(() => import('../../map/index.ts').then((m) => ({ default: m.Ruler })))
-const HorizonStrip = lazy(() => import('../../map/index.ts').then((m) => ({ default: m.HorizonStrip })))
 
 const NO_CORNERS: readonly LonLat[] = []
-const NO_ROWS: never[] = []
 const NO_MARKS: never[] = []
 
 /** Candidates as the map draws them. */
@@ -186,30 +184,6 @@ export function RulerSlot({ hub }: { hub: MapHub }) {
           setMastHeights(study, candidate.id, [...candidate.mastHeightsM, heightM])
           show(heightM)
         }}
-      />
-    </Suspense>
-  )
-}
-
-export function StripSlot({ hub }: { hub: MapHub }) {
-  const { view } = useSession()
-  const option = useView((v) => v.option)
-  const units = useView((v) => v.units)
-  const rows = useResults((r) => (option ? r.byOption.get(optionKey(option))?.figures.horizon.rows : undefined)) ?? NO_ROWS
-  return (
-    <Suspense fallback={null}>
-      <HorizonStrip
-        hub={hub}
-        rows={rows}
-        units={units}
-        onPick={(azimuthDeg) =>
-          view
-            .getState()
-            .set({
-              chart: view.getState().chart === 'vertical' ? 'vertical' : 'profile',
-              profileAzimuthDeg: Math.round(10 * azimuthDeg) / 10,
-            })
-        }
       />
     </Suspense>
   )
