@@ -10,7 +10,19 @@ export type Theme = 'paper' | 'night'
 export type OpenChart = 'profile' | 'vertical' | 'rings' | 'suppression' | 'ledger' | 'figure' | null
 
 /** What is asked over the whole page. */
-export type OpenDialog = 'templates' | 'pulses' | 'candidates' | 'obstacles' | 'fixes' | 'keys' | 'commands' | 'studies' | 'confirmations' | 'models' | null
+export type OpenDialog =
+  | 'templates'
+  | 'pulses'
+  | 'candidates'
+  | 'obstacles'
+  | 'fixes'
+  | 'north'
+  | 'keys'
+  | 'commands'
+  | 'studies'
+  | 'confirmations'
+  | 'models'
+  | null
 
 /** What is looked at: kept over a reload, never undone, never saved with the study. */
 export interface ViewState {
@@ -28,6 +40,8 @@ export interface ViewState {
   readonly theme: Theme
   /** Cell whose ledger is asked for. */
   readonly cell: LonLat | null
+  /** What azimuths at the face are counted from; magnetic holds only where the study states a declination. */
+  readonly north: 'true' | 'magnetic'
   readonly chart: OpenChart
   /** Key of the figure that is explained, as in the summary. */
   readonly figure: string | null
@@ -62,6 +76,7 @@ export function createViewStore(storage?: Storage, prefersDark = false) {
         chart: null,
         figure: null,
         profileAzimuthDeg: null,
+        north: 'true',
         placing: false,
         dialog: null,
         dialogFor: null,

@@ -1,2 +1,2 @@
-export { type ReadGround, type Session, SessionProvider, startSession } from './session/index.ts'
+export { type ReadGround, type Session, SessionProvider, startSession, useFaceNorth } from './session/index.ts'
 export { Shell } from './shell/Shell.tsx'

@@ -1,5 +1,5 @@
 import type { ReactNode } from 'react'
-import type { Quantity } from '../words/index.ts'
+import { MAGNETIC, type Quantity } from '../words/index.ts'
 import { Button } from './Button.tsx'
 
 /** A word beside a value: *default*, *outside model*, *by hand*, *from memory*. */
@@ -8,7 +8,7 @@ export const Mark = ({ children }: { children: ReactNode }) => <span className="
 /** Stands directly under the number it concerns; never folded, never dismissed. */
 export const Caution = ({ children }: { children: ReactNode }) => <p className="caution">{children}</p>
 
-const ATTACHED = new Set(['°', '″', '′', ''])
+const ATTACHED = new Set(['°', '″', '′', '', MAGNETIC])
 
 /** A number with its unit in lighter ink. */
 export function Value({ of }: { of: Quantity }) {

@@ -1,3 +1,4 @@
+import { faceNorth, MAGNETIC } from './north.ts'
 import { decimalsOf, type Rounding, roundDown, roundTo, roundUp } from './rounding.ts'
 import { toFace, type UnitKind, type UnitSystem, unitOf } from './units.ts'
 
@@ -11,7 +12,7 @@ export const THIN = '\u202f'
 /** Stands where there is no number; a word beside it says why. */
 export const NO_VALUE = '–'
 const NONE: Quantity = { value: NO_VALUE, unit: '' }
-const ATTACHED = new Set(['°', '″', '′'])
+const ATTACHED = new Set(['°', '″', '′', MAGNETIC])
 
 /** `1 234 ft`, `0.62°`, `–`. */
 export function textOf(q: Quantity): string {
@@ -121,12 +122,13 @@ export function formatScreening(deg: Maybe): Quantity {
 export function formatAngle(deg: Maybe, step = 0.01): Quantity {
   return quantity(deg, step, 'nearest', '°')
 }
-/** Azimuth from true north, deg; nearest 0.1°, three digits before the point, 360 prints as 000. */
+/** Azimuth from true north, deg, as the face's north has it (see `setFaceNorth`); nearest 0.1°, three digits before the point, 360 prints as 000. */
 export function formatAzimuth(deg: Maybe, step = 0.1): Quantity {
   if (deg === null || deg === undefined || !Number.isFinite(deg)) return NONE
-  const wrapped = roundTo(((deg % 360) + 360) % 360, step, 'nearest') % 360
+  const shown = deg - (faceNorth()?.valueDeg ?? 0)
+  const wrapped = roundTo(((shown % 360) + 360) % 360, step, 'nearest') % 360
   const [whole, part] = wrapped.toFixed(decimalsOf(step)).split('.')
-  return { value: whole.padStart(3, '0') + (part === undefined ? '' : `.${part}`), unit: '°' }
+  return { value: whole.padStart(3, '0') + (part === undefined ? '' : `.${part}`), unit: faceNorth() ? MAGNETIC : '°' }
 }
 /** Share of a need met or in sight, %; DOWN to 1 (or the step given); `0` and `100` only when exact, else `< 1`. */
 export function formatMetPct(pct: Maybe, step = 1): Quantity {

@@ -1,4 +1,5 @@
 export * from './crs.ts'
+export * from './declination.ts'
 export * from './earthRadius.ts'
 export * from './geodesics.ts'
 export { normalLon } from './longitude.ts'

@@ -25,6 +25,7 @@ const OPEN = { lowOpen: true } as const
 export const LIMITS: Readonly<Record<string, Limit>> = {
   'terrain[].verticalErrorM': limit('height error', 'm', 0, 1000),
   'landCover.classes.*.coverHeightM': limit('cover height', 'm', 0, 150),
+  'declination.valueDeg': limit('declination', 'deg', -180, 180),
   'atmosphere.effectiveEarthFactor': limit('effective-earth factor', '', -1000, 1000),
   'atmosphere.earthRadiusM': limit('earth radius', 'm', 3e6, 1e7),
   'atmosphere.rainRateMmH': limit('rain rate', 'mm/h', 0, 300),

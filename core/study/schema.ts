@@ -236,6 +236,7 @@ export const studySchema = z.looseObject({
   facades: fileOnly.optional(),
   tables: z.looseObject({ lowAngleLand: fileName.optional() }).optional(),
   atmosphere: atmosphere.optional(),
+  declination: z.looseObject({ valueDeg: num('declination.valueDeg'), date: z.string(), model: z.string() }).optional(),
   radar,
   needs: z.array(need).optional(),
   candidates: z.array(candidate),

@@ -259,6 +259,7 @@ export function settle(doc: StudyDoc, fileName?: string): SettledStudy {
     foldRangeM: d.take('run.foldRangeM', doc.run?.foldRangeM, defaultFoldRangeM(radar)),
     defaults: d.used,
     origins: originsOf(doc),
+    declination: doc.declination ?? null,
   }
 }
 

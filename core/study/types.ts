@@ -201,6 +201,8 @@ export interface StudyDoc {
   facades?: { file: string }
   tables?: { lowAngleLand?: string }
   atmosphere?: AtmosphereDoc
+  /** Magnetic declination for azimuths at the face, deg, positive east: of which day and by which field model or survey. */
+  declination?: { valueDeg: number; date: string; model: string }
   radar: RadarDoc
   needs?: NeedDoc[]
   candidates: CandidateDoc[]
@@ -332,4 +334,6 @@ export interface SettledStudy {
   readonly defaults: readonly DefaultUsed[]
   /** Values taken from a template, with where each comes from. */
   readonly origins: readonly OriginOf[]
+  /** Stated declination; null where none is. Nothing is computed with it. */
+  readonly declination: { readonly valueDeg: number; readonly date: string; readonly model: string } | null
 }

@@ -13,6 +13,7 @@ import {
   formatRange,
   formatSetting,
   labelOf,
+  northWords,
   tied,
   withMetric,
 } from '../../words/index.ts'
@@ -107,6 +108,7 @@ function assumptions(input: MemoInput): string[] {
       : `Obstacles from ${study.obstacles}: each masks the azimuths it stands in and at least one`,
     table,
     airWords(input),
+    northWords(),
     `Cover is worked out at k = 1 too; pass asks for both`,
     `In sight: the line of sight over ground, cover and obstacles. Ground beyond a void or the end of the terrain is unknown`,
   ]

@@ -3,8 +3,8 @@ import { useStore } from 'zustand'
 import { redo, renameStudy, undo, undoWords } from '../../document/index.ts'
 import { Button } from '../../ui/Button.tsx'
 import { CommitField } from '../../ui/CommitField.tsx'
-import { UNIT_SYSTEM_NAMES } from '../../words/index.ts'
-import { useDoc, useSave, useSession, useView } from '../session/index.ts'
+import { declinationWords, UNIT_SYSTEM_NAMES } from '../../words/index.ts'
+import { useDoc, useFaceNorth, useSave, useSession, useView } from '../session/index.ts'
 import { PrimaryAction } from './PrimaryAction.tsx'
 import { RunLine } from './Working.tsx'
 
@@ -53,6 +53,7 @@ export function TopBar() {
   const units = useView((v) => v.units)
   const theme = useView((v) => v.theme)
   const memoOpen = useView((v) => v.memoOpen)
+  const north = useFaceNorth()
   const set = view.getState().set
   return (
     <header className="top">
@@ -85,7 +86,14 @@ export function TopBar() {
       >
         {UNIT_SYSTEM_NAMES[units]}
       </Button>
-      <span className="plain">true north</span>
+      <Button
+        look="quiet"
+        className="switch"
+        onPress={() => set({ dialog: 'north' })}
+        label={`Azimuths from ${north ? 'magnetic' : 'true'} north; press to change`}
+      >
+        {north ? `mag. north, ${declinationWords(north.valueDeg)}` : 'true north'}
+      </Button>
       <UndoRedo />
       <Button
         look="quiet"
