@@ -19,6 +19,7 @@ import {
 import type { MemoMap } from '../../memo/index.ts'
 import type { CommandLine } from '../arguments.ts'
 import { encodeGeoTiff } from '../geoTiffWriter.ts'
+import { SightThread } from '../helpers/sightThread.ts'
 import { sweepHelpers } from '../helpers/sweepHelpers.ts'
 import { loadGround } from '../loadGround.ts'
 import { loadStudy, sayWarnings } from '../loadStudy.ts'
@@ -26,7 +27,7 @@ import { openOutFolder, SUMMARY_FORMAT } from '../outFolder.ts'
 import { drive, type Progress } from '../progress.ts'
 import { mapLattice } from '../rasters/mapLattice.ts'
 import { polarCells, polarRaster } from '../rasters/polarRaster.ts'
-import { NO_PERCENT, sightRaster } from '../rasters/sightRaster.ts'
+import { NO_PERCENT } from '../rasters/sightRaster.ts'
 import { chooseLayers, chooseOptions, EXTRA_LAYERS, narrowed, ofNeed } from './chooseOptions.ts'
 import { horizonCsv } from './horizon.ts'
 import { roadsSummary, writeOptionFiles } from './optionFiles.ts'
@@ -51,13 +52,14 @@ export async function run(line: CommandLine, progress: Progress): Promise<void> 
   progress.inputIsGood()
 
   const helpers = sweepHelpers()
+  const sight = new SightThread(ground, progress)
   const engine = new Engine(undefined, helpers.crew)
   engine.setGround(ground, read.landTable, read.needPlaces)
   const lattice = mapLattice(ground.shape, study.run.rangeStepM)
   const results: OptionResult[] = []
   const maps: MemoMap[] = []
   const wantsMemo = options['no-memo'] === undefined
-  const writer = new RunWriter(out.workDir, study, lattice, layers, progress)
+  const writer = new RunWriter(out.workDir, study, lattice, layers, sight)
   for (const ref of chosen) {
     const name = `${ref.candidate} at ${ref.heightM} m (${results.length + 1} of ${chosen.length})`
     const { cells, result } = await workOut(engine, doc, ref, progress, name)
@@ -65,7 +67,8 @@ export async function run(line: CommandLine, progress: Progress): Promise<void> 
     await writer.write(cells, result, name)
     if (wantsMemo) maps.push(await (await import('./memo.ts')).memoMap(cells, result, study.run.maxRangeM))
   }
-  await helpers.close()
+  await writer.finish()
+  await Promise.all([helpers.close(), sight.close()])
   const remarks = [...loaded.warnings, ...warnings]
   writeFileSync(join(out.workDir, 'summary.json'), summary(study, results, files))
   if (wantsMemo) {
@@ -92,7 +95,8 @@ async function workOut(
     if (!work) throw new Error(`no figures for ${name}`)
     await drive(work, progress, name)
   }
-  return { cells, result: engine.result(ref) as OptionResult }
+  const result = await drive(engine.addHighK(ref), progress, `${name}, k = 2.75`)
+  return { cells, result: result as OptionResult }
 }
 
 /** Writes the folders of candidates, heights and tilts as options come. */
@@ -100,12 +104,13 @@ class RunWriter {
   /** Polar cell under each raster cell, of the candidate written last. */
   #under: { candidate: string; cells: Int32Array } | null = null
   readonly #heightsDone = new Set<string>()
+  #sightUnderWay: (() => Promise<void>) | null = null
   constructor(
     private readonly dir: string,
     private readonly study: SettledStudy,
     private readonly lattice: GridShape,
     private readonly layers: readonly LayerId[],
-    private readonly progress: Progress,
+    private readonly sight: SightThread,
   ) {}
 
   async write(cells: OptionCells, { ref, figures }: OptionResult, name: string): Promise<void> {
@@ -114,6 +119,7 @@ class RunWriter {
     mkdirSync(tiltDir, { recursive: true })
     if (!this.#heightsDone.has(heightDir)) {
       this.#heightsDone.add(heightDir)
+      await this.finish()
       await this.#writeHeight(heightDir, cells, ref, name)
     }
     await this.#raster(tiltDir, ref, 'clutter-to-noise', 'dB', this.#onLattice(cells, ref, cells.clutter.cnrDb))
@@ -124,14 +130,21 @@ class RunWriter {
   async #writeHeight(dir: string, cells: OptionCells, ref: OptionRef, name: string): Promise<void> {
     writeFileSync(join(dir, 'horizon.csv'), horizonCsv(cells.mask.horizon))
     const { maxRangeM } = this.study.run
-    const sight = await drive(
-      sightRaster(cells.ground, cells.place, ref.heightM, cells.earth, maxRangeM, this.lattice),
-      this.progress,
-      `${name}, sight`,
-    )
-    await this.#raster(dir, ref, 'in-sight', '%', sight.inSightPct)
-    await this.#raster(dir, ref, 'coverage-floor', 'm', sight.floorM)
+    const { place: site, earth } = cells
+    const raster = this.sight.start({ site, heightM: ref.heightM, earth, maxRangeM, lattice: this.lattice }, `${name}, sight`)
+    this.#sightUnderWay = async () => {
+      const { inSightPct, floorM } = await raster()
+      await this.#raster(dir, ref, 'in-sight', '%', inSightPct)
+      await this.#raster(dir, ref, 'coverage-floor', 'm', floorM)
+    }
     for (const id of this.layers) if (EXTRA_LAYERS[id] === 'height') await this.#layer(dir, ref, cells, id)
+  }
+
+  /** Waits for the sight rasters that are made beside the options, and writes them. */
+  async finish(): Promise<void> {
+    const underWay = this.#sightUnderWay
+    this.#sightUnderWay = null
+    await underWay?.()
   }
 
   /** A layer on request; one that asks for a need is written for each need of a layer or polygon. */
@@ -179,6 +192,7 @@ async function filesOf(dir: string, study: SettledStudy, read: readonly { name: 
     study.roads,
     study.lowAngleLandTable,
     ...needs,
+    ...study.candidates.map((c) => c.measuredHorizon?.file),
   ]
     .filter((n) => typeof n === 'string')
     .map((name, i) => ({ name, describe: read[i]?.describe ?? '' }))
