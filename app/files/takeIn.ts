@@ -17,9 +17,16 @@ type Named = Blob & { readonly name: string }
 
 /**
  * Takes dropped or picked files into the study: a study or package replaces what is open (loose files beside it join it), anything else is
- * added in one step of undo. `as` overrides the guess of what a file is. Throws InputError and changes nothing when one cannot be used.
+ * added in one step of undo. `beforeOpening` runs when another study is about to take the
+ * place of the open one. `as` overrides the guess of what a file is. Throws InputError and changes nothing when one cannot be used.
  */
-export async function takeIn(study: StudyStore, given: FileStore, dropped: readonly Named[], as?: FileRole): Promise<TakenIn> {
+export async function takeIn(
+  study: StudyStore,
+  given: FileStore,
+  dropped: readonly Named[],
+  as?: FileRole,
+  beforeOpening: () => Promise<void> = async () => {},
+): Promise<TakenIn> {
   const sorted = await Promise.all(dropped.map(async (file) => ({ file, role: as ?? (await fileRole(file)) })))
   const head = sorted.find((s) => s.role === 'study' || s.role === 'package')
   if (head) {
@@ -28,6 +35,7 @@ export async function takeIn(study: StudyStore, given: FileStore, dropped: reado
       head.role === 'package'
         ? await openPackage(new Uint8Array(await head.file.arrayBuffer()), head.file.name)
         : openStudyText(await head.file.text(), head.file.name, loose)
+    await beforeOpening()
     given.getState().replace(opened.files)
     study.getState().load(opened.doc)
     return { opened: true, warnings: opened.warnings, missing: opened.missing, trouble: opened.trouble }

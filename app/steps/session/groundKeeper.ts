@@ -1,4 +1,4 @@
-import { type GridShape, gridPosition, type LonLat, loadCrs, type StudyDoc } from '../../../core/index.ts'
+import { type GridShape, gridPosition, type LonLat, loadCrs, type StudyDoc, surveysOf } from '../../../core/index.ts'
 import type { StudyClient } from '../../compute/client.ts'
 import type { makeGroundReader } from '../../compute/intakeClient.ts'
 import { type FileStore, filesOf, type GivenFile, type GroundStore, NO_GROUND, type StudyStore } from '../../document/index.ts'
@@ -88,6 +88,8 @@ function groundKey(doc: StudyDoc, files: ReadonlyMap<string, GivenFile>): string
   const names = [...doc.terrain.map((t) => t.file), doc.landCover?.file, doc.obstacles?.file, doc.roads?.file, doc.tables?.lowAngleLand]
   const placed = (doc.needs ?? []).flatMap((n) => (n.file ? [[n.id, n.kind, n.file, n.heightM, n.heightAbove, n.qnhHpa]] : []))
   names.push(...(doc.needs ?? []).map((n) => n.file))
+  const surveyed = surveysOf(doc)
+  names.push(...surveyed.map((s) => s.file))
   const blobs = names.map((n) => serialOf(n === undefined ? undefined : files.get(n)?.blob))
-  return JSON.stringify([doc.terrain, doc.landCover, doc.uniformTerrain, doc.obstacles, doc.roads, doc.tables, placed, blobs])
+  return JSON.stringify([doc.terrain, doc.landCover, doc.uniformTerrain, doc.obstacles, doc.roads, doc.tables, placed, surveyed, blobs])
 }

@@ -1,3 +1,4 @@
+import { canonicalJson, InputError, type StudyDoc } from '../../../core/index.ts'
 import type { StudyClient } from '../../compute/client.ts'
 import {
   type Autosave,
@@ -7,13 +8,16 @@ import {
   createOwnRadars,
   createResultsStore,
   createSaveStore,
+  createStudyShelf,
   createStudyStore,
   createViewStore,
   emptyStudy,
+  type FileState,
   type FileStore,
   fileStem,
   forgetResults,
   type GroundStore,
+  hasStartingRadar,
   type OwnRadarStore,
   openShelf,
   packStudy,
@@ -21,6 +25,7 @@ import {
   restore,
   type SaveStore,
   type Shelf,
+  type StudyShelf,
   type StudyStore,
   studyText,
   takeTell,
@@ -42,11 +47,17 @@ export interface Session {
   readonly notices: NoticeStore
   /** Radars the user keeps for other studies. */
   readonly radars: OwnRadarStore
+  /** Studies kept on this machine beside the open one. */
+  readonly studies: StudyShelf
+  /** Opens a study of the list; the open one goes there. */
+  openListed(id: string): Promise<void>
+  /** Puts a copy of the open study on the list. */
+  duplicateOpen(): Promise<void>
   readonly client: StudyClient
   /** Dropped or picked files; `as` says what they are. */
   take(files: readonly File[], as?: FileRole): Promise<void>
   openDemo(): Promise<void>
-  newStudy(): void
+  newStudy(): Promise<void>
   saveStudy(): void
   savePackage(): Promise<void>
   /** Reads the ground from its files once more. */
@@ -71,6 +82,8 @@ export async function startSession(client: StudyClient, readGround: ReadGround):
   const shelf = await openShelf().catch(() => noShelf())
   const own = createOwnRadars(shelf)
   void own.load().catch(() => {})
+  const studies = createStudyShelf(shelf, Date.now)
+  void studies.load().catch(() => {})
   const saver = autosave(study, files, save, shelf, window.localStorage, Date.now)
 
   client.listen((tell) => {
@@ -99,8 +112,26 @@ export async function startSession(client: StudyClient, readGround: ReadGround):
       say(sentenceOf(error), 'bad')
     }
   }
+  /** The document as it was last saved to a file, or opened as the demo: nothing is lost with it. */
+  let safe: StudyDoc | null = null
+  /** Puts a study on the list before another takes its place; throws when it has changes that would be lost. */
+  const keep = async (doc: StudyDoc, given: FileState['files']) => {
+    if (doc === safe || (doc.terrain.length === 0 && doc.candidates.length === 0 && hasStartingRadar(doc))) return
+    try {
+      await studies.setAside(doc, given)
+    } catch {
+      throw new InputError({
+        code: 'not-kept',
+        found: `${doc.name} could not be kept in this browser`,
+        remedy: 'save it to a file or package first, then go on',
+      })
+    }
+  }
+  const keepOpen = () => keep(study.getState().doc, files.getState().files)
   const openDemo = async () => {
     const demo = await openServed(DEMO_FOLDER)
+    if (canonicalJson(demo.doc) !== canonicalJson(study.getState().doc)) await keepOpen()
+    safe = demo.doc
     files.getState().replace(demo.files)
     study.getState().load(demo.doc)
     opened(demo)
@@ -115,27 +146,47 @@ export async function startSession(client: StudyClient, readGround: ReadGround):
     save,
     notices,
     radars: own.store,
+    studies,
     client,
     take: (dropped, as) =>
       guarded(async () => {
-        const taken = await takeIn(study, files, dropped, as)
+        const taken = await takeIn(study, files, dropped, as, keepOpen)
         if (taken.opened) opened(taken)
       }),
+    openListed: (id) =>
+      guarded(async () => {
+        const kept = await studies.read(id)
+        if (!kept) return
+        await keepOpen()
+        files.getState().replace(kept.files)
+        study.getState().load(kept.doc)
+        opened({ warnings: [], missing: [], trouble: null })
+        await saver.flush()
+        if (save.getState().state === 'saved') await studies.remove(id)
+      }),
+    duplicateOpen: () =>
+      guarded(async () => {
+        const { doc } = study.getState()
+        await studies.setAside({ ...doc, name: `${doc.name}, copy` }, files.getState().files)
+      }),
     openDemo: () => guarded(openDemo),
-    newStudy: () => {
-      notices.getState().clear()
-      files.getState().replace([])
-      study.getState().load(emptyStudy())
-      opened({ warnings: [], missing: [], trouble: null })
-      view.getState().set({ step: 'ground' })
-    },
+    newStudy: () =>
+      guarded(async () => {
+        await keepOpen()
+        files.getState().replace([])
+        study.getState().load(emptyStudy())
+        opened({ warnings: [], missing: [], trouble: null })
+        view.getState().set({ step: 'ground' })
+      }),
     saveStudy: () => {
       const { doc } = study.getState()
+      safe = doc
       download(new Blob([studyText(doc)], { type: 'application/json' }), `${fileStem(doc)}.json`)
     },
     savePackage: () =>
       guarded(async () => {
         const { doc } = study.getState()
+        safe = doc
         download(await packStudy(doc, files.getState().files), `${fileStem(doc)}.zip`)
       }),
     readAgain: () => readAgain(),

@@ -11,6 +11,7 @@ const DIALOGS: Partial<Record<NonNullable<OpenDialog>, ComponentType>> = {
   north: lazy(() => import('./NorthDialog.tsx').then((m) => ({ default: m.NorthDialog }))),
   obstacles: lazy(() => import('../forms/ObstaclesDialog.tsx').then((m) => ({ default: m.ObstaclesDialog }))),
   pulses: lazy(() => import('../forms/PulsesDialog.tsx').then((m) => ({ default: m.PulsesDialog }))),
+  studies: lazy(() => import('./StudiesDialog.tsx').then((m) => ({ default: m.StudiesDialog }))),
   templates: lazy(() => import('../forms/TemplateDialog.tsx').then((m) => ({ default: m.TemplateDialog }))),
 }
 

@@ -14,7 +14,8 @@ export function FileMenu() {
           { id: 'open', words: 'Open…', hint: 'a study, with its files, or a package', run: () => picker.current?.click() },
           { id: 'save', words: 'Save study', hint: 'the .json alone', run: session.saveStudy },
           { id: 'package', words: 'Save package', hint: 'study and files in one .zip', run: () => void session.savePackage() },
-          { id: 'new', words: 'New study', run: session.newStudy },
+          { id: 'studies', words: 'Studies on this machine…', run: () => session.view.getState().set({ dialog: 'studies' }) },
+          { id: 'new', words: 'New study', run: () => void session.newStudy() },
           { id: 'demo', words: 'Open the demo study', run: () => void session.openDemo() },
         ]}
       />
