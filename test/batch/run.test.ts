@@ -129,6 +129,7 @@ describe('run', () => {
     expect(again).toMatchObject({ code: 0, out: '' })
     expect(tree(out)).toEqual([
       'A/40m/2deg/clutter-to-noise.tif',
+      'A/40m/2deg/trial-plan.csv',
       'A/40m/coverage-floor.tif',
       'A/40m/horizon.csv',
       'A/40m/in-sight.tif',
