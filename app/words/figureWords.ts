@@ -1,5 +1,6 @@
 import { type LayerId, LOSS_CAUSES, type RoadClass } from '../../core/index.ts'
 import {
+  formatAngle,
   formatAreaDown,
   formatAreaUp,
   formatDbDown,
@@ -107,6 +108,24 @@ const PLAIN: Readonly<Record<string, FigureWords>> = {
     meaning: `Highest mean clutter-to-noise of any resolution cell, one pulse, before suppression; ${UP}`,
     layer: 'clutter-to-noise',
     format: (v) => formatDbUp(v),
+  },
+  second_time_around_km2: {
+    label: 'Folded clutter',
+    meaning: `Ground where clutter of an earlier pulse stands over the noise; ${UP}`,
+    layer: 'second-time-around',
+    format: formatAreaUp,
+  },
+  measured_horizon_mean_deg: {
+    label: 'Surveyed horizon, mean difference',
+    meaning: 'Surveyed less computed screening angle from this mast, mean over the rows of the survey',
+    layer: 'masked',
+    format: (v) => formatAngle(v),
+  },
+  measured_horizon_rms_deg: {
+    label: 'Surveyed horizon, root mean square',
+    meaning: `Surveyed less computed screening angle from this mast, root mean square over the rows of the survey; ${UP}`,
+    layer: 'masked',
+    format: formatScreening,
   },
   roads_km: roadsOf('Roads within range', 'Length of roads and railways within range'),
   roads_in_sight_km: roadsOf('Roads in sight', 'Length of road where the top of a vehicle is in sight, line of sight only'),
@@ -305,10 +324,15 @@ const suppressionNeeded = (share: string): FigureWords => ({
   format: (v) => formatDbUp(v),
 })
 
+const atHighK = (words: FigureWords | undefined): FigureWords | undefined =>
+  words && { ...words, label: `${words.label}, k = 2.75`, meaning: `${words.meaning}, at k = 2.75` }
+
 /** Words of a figure by its key in the summary; undefined for a key this version does not explain. */
 export function figureWords(key: string): FigureWords | undefined {
   const over = /^clutter_over_(\d+)_km2$/.exec(key)
   if (over) return clutterOver(over[1])
+  const own = key.replace('_k2_75_', '_')
+  if (own !== key && /^(clutter|second_time_around|need_.*_suppression)/.test(key)) return atHighK(figureWords(own))
   const floor = /^floor_(\d+)nm(_k1)?_(best|median|worst)_m$/.exec(key)
   if (floor) return floorAt(floor[1], floor[3], floor[2] !== undefined)
   const road = /^roads_seen_([a-z]+)_km$/.exec(key)
@@ -321,7 +345,9 @@ export function figureWords(key: string): FigureWords | undefined {
   return places ? suppressionNeeded(places[1]) : NEED[need.of]
 }
 
-const NEED_TAILS = [...Object.keys(NEED), 'suppression_needed_50_db', 'suppression_needed_90_db', 'suppression_needed_99_db']
+const SUPPRESSION_TAILS = ['suppression_needed_50_db', 'suppression_needed_90_db', 'suppression_needed_99_db']
+const HIGH_K_TAILS = [...SUPPRESSION_TAILS, 'suppression_short_km2'].map((tail) => tail.replace(/_(db|km2)$/, '_k2_75_$1'))
+const NEED_TAILS = [...Object.keys(NEED), ...SUPPRESSION_TAILS, ...HIGH_K_TAILS]
 /** Need and tail of a key such as `need_n1_in_sight_pct`. */
 export function needKey(key: string): { needId: string; of: string } | null {
   if (!key.startsWith('need_')) return null

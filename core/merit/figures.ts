@@ -5,6 +5,7 @@ import { isUnknown } from '../polar/index.ts'
 import { canonicalJson, type SettledNeed } from '../study/index.ts'
 import { flatFigures } from './flatFigures.ts'
 import { floorFigures, type GroundSums, groundSums, RING_WIDTH_M } from './groundFigures.ts'
+import { measuredHorizonFigure } from './measured/index.ts'
 import { needFigure } from './needs/needFigure.ts'
 import { antennaM, type OptionCells } from './optionCells.ts'
 import { percentile } from './percentile.ts'
@@ -62,7 +63,9 @@ export function optionFigures(o: OptionCells, needs: readonly SettledNeed[], mar
     clutterLevels: clutterLevelsOf(o),
     secondTimeAround: o.folded ? secondTimeAround(o.folded, o.place.lat) : { km2: null, notEvaluatedBeyondM: sight.knownToM },
     needs: asked,
+    atHighK: null,
     trialPlan: trialPlan(o, needs, asked),
+    measuredHorizon: measuredHorizonFigure(o),
     roads: kept.roads.figure,
     obstaclesInSight: sight.obstacles,
     marks: [...marks, ...o.suppression.notes, ...kept.notes, ...(o.radar.detector === 'areaCfar' ? [NOTE_AREA_CFAR] : [])],

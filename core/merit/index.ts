@@ -1,6 +1,8 @@
 export { needFigures, optionFigures } from './figures.ts'
 export { floorFigures, RING_WIDTH_M } from './groundFigures.ts'
+export { hasHighK, highKFigure, withHighK } from './highK.ts'
 export { ladderHeightsM, ladderOf, type Rung, rung } from './ladder.ts'
+export * from './measured/index.ts'
 export { type NeedCells, needCells } from './needs/needCells.ts'
 export { cellsOfNeed, isAreaNeed } from './needs/needFigure.ts'
 export { PLACE } from './needs/place.ts'

@@ -1,6 +1,7 @@
 import type { ClutterLevels, SecondTimeAround } from '../clutter/index.ts'
 import type { SuppressionBy } from '../doppler/index.ts'
 import type { HorizonRow } from '../masking/index.ts'
+import type { MeasuredHorizonFigure } from './measured/measuredFigure.ts'
 import type { NeedFigure } from './needs/needTypes.ts'
 import type { RoadsFigure } from './roads/types.ts'
 import type { TrialRow } from './trialPlan/types.ts'
@@ -24,6 +25,23 @@ export interface RingFigure {
   /** Power mean of C/N over ground in sight, dB; null when none. */
   readonly cnrMeanDb: number | null
   readonly cnrMaxDb: number | null
+}
+/** Clutter of one option at k = 2.75, where more ground comes into sight. */
+export interface HighKFigure {
+  readonly k: number
+  readonly clutterOverKm2: Figures['clutterOverKm2']
+  readonly cnrPeakDb: number | null
+  /** null where no earlier pulse can fold in. */
+  readonly secondTimeAroundKm2: number | null
+  /** Suppression needed at 50, 90 and 99 % of the places of each layer or polygon need, dB, and the area where it is short. */
+  readonly suppression: readonly {
+    readonly needId: string
+    readonly name: string
+    readonly p50Db: number | null
+    readonly p90Db: number | null
+    readonly p99Db: number | null
+    readonly shortKm2: number
+  }[]
 }
 export interface Figures {
   readonly siteGroundM: number
@@ -54,10 +72,14 @@ export interface Figures {
   /** Ground where clutter of an earlier pulse stands over the noise; where terrain ends sooner than it is looked for, how far it was. */
   readonly secondTimeAround: SecondTimeAround
   readonly needs: readonly NeedFigure[]
+  /** Clutter at k = 2.75; null until it is worked out, after all figures at the study's own k, and where that k is no smaller. */
+  readonly atHighK: HighKFigure | null
   /** Roads whose vehicles are seen; null where the study has no roads. */
   readonly roads: RoadsFigure | null
   /** What a trial should fly and a survey measure, from the worst margins of the needs. */
   readonly trialPlan: readonly TrialRow[]
+  /** The horizon surveyed at the candidate beside the computed one; null where there is none. */
+  readonly measuredHorizon: MeasuredHorizonFigure | null
   /** Names of obstacles in sight. */
   readonly obstaclesInSight: readonly string[]
   readonly marks: readonly { readonly mark: string; readonly about: string }[]

@@ -2,13 +2,24 @@ import { type ClutterCells, clutterMarks, clutterToNoise, type FoldedCells, fold
 import type { SuppressionBy } from '../doppler/index.ts'
 import { isInputError } from '../errors/index.ts'
 import { type SightCells, type SiteCells, type SweepHelpers, sweep } from '../masking/index.ts'
-import { isAreaNeed, isLowK, type LowKCells, type NeedPlaces, type OptionCells, optionFigures, seeRoads } from '../merit/index.ts'
+import {
+  hasHighK,
+  isAreaNeed,
+  isLowK,
+  type LowKCells,
+  type NeedPlaces,
+  type OptionCells,
+  optionFigures,
+  seeRoads,
+  withHighK,
+} from '../merit/index.ts'
 import { polarShape } from '../polar/index.ts'
 import { type SettledNeed, type SettledStudy, type StudyDoc, settle } from '../study/index.ts'
 import type { Ground } from '../terrain/index.ts'
 import { share, type Work } from '../work/index.ts'
+import { HighK } from './highK.ts'
 import { keysOf, optionId, optionsOfStudy } from './keys.ts'
-import { candidateOf, clutterOptions, earthOf, lowEarthOf, lowKOf, mayFold, siteOf, suppressionOf } from './optionParts.ts'
+import { candidateOf, clutterOptions, earthOf, lowEarthOf, lowKOf, mayFold, siteOf, suppressionOf, surveyPart } from './optionParts.ts'
 import { PolarCache } from './polarCache.ts'
 import type { LayerId, OptionRef, OptionResult, Tell } from './types.ts'
 
@@ -32,6 +43,7 @@ export class Engine {
   shown: Shown = { option: null, layer: 'clutter-to-noise' }
   hold = false
   private readonly cache: PolarCache
+  private readonly highK = new HighK()
   private filesSerial = 0
   private suppression: { readonly study: SettledStudy; readonly by: SuppressionBy } | null = null
   private readonly found = new Map<string, OptionResult>()
@@ -55,6 +67,7 @@ export class Engine {
     this.filesSerial++
     this.suppression = null
     this.cache.clear()
+    this.highK.drop()
     this.found.clear()
     this.failed.clear()
   }
@@ -119,7 +132,11 @@ export class Engine {
     }
     const sameCandidate = (r: OptionRef) => (shown && r.candidate === shown.candidate ? 0 : 1)
     const rest = all.filter((r) => !this.result(r) && !this.failed.has(optionId(r))).sort((a, b) => sameCandidate(a) - sameCandidate(b))
-    return rest[0] ? this.guarded(rest[0], this.makeFigures(rest[0])) : null
+    if (rest[0]) return this.guarded(rest[0], this.makeFigures(rest[0]))
+    const late = all.filter((r) => this.lacksHighK(r)).sort((a, b) => sameCandidate(a) - sameCandidate(b))
+    if (late[0]) return this.guarded(late[0], this.makeHighK(late[0]))
+    this.highK.drop()
+    return null
   }
 
   /** Bad input of one option is told and leaves the others alone. */
@@ -152,6 +169,29 @@ export class Engine {
     this.found.set(optionId(ref), { ref, keys, figures, serial: ++this.made })
     const isShown = this.shown.option !== null && optionId(this.shown.option) === optionId(ref)
     return isShown ? [this.figures(), { kind: 'dirty' }] : [this.figures()]
+  }
+
+  private lacksHighK(ref: OptionRef): boolean {
+    const found = this.result(ref)
+    return found !== null && found.figures.atHighK === null && !this.failed.has(optionId(ref)) && hasHighK(earthOf(this.ready().study))
+  }
+
+  private *makeHighK(ref: OptionRef): Work<Tell[]> {
+    yield* this.addHighK(ref)
+    return [this.figures()]
+  }
+
+  /** Result of an option with its clutter at k = 2.75 beside it; as it is where that is not worked out. */
+  *addHighK(ref: OptionRef): Work<OptionResult | null> {
+    if (!this.lacksHighK(ref)) return this.result(ref)
+    const { study } = this.ready()
+    const cells = yield* share(this.compute(ref), 0, 0.1, 1)
+    const figure = yield* share(this.highK.figure(study, ref, cells), 0.1, 1, 1)
+    const found = this.result(ref)
+    if (!found || this.study !== study) return found
+    const result = { ...found, figures: withHighK(found.figures, figure), serial: ++this.made }
+    this.found.set(optionId(ref), result)
+    return result
   }
 
   /** Polar grids of an option, from the cache or worked out now; masks of all heights of the candidate come from one sampling. */
@@ -260,6 +300,7 @@ export class Engine {
       lowK: (keys && this.cache.get<LowKCells>(keys.lowK)) ?? null,
       places: this.needPlaces,
       vehicleRcsM2: study.vehicleRcsM2,
+      ...surveyPart(candidateOf(study, ref.candidate)),
     }
   }
 

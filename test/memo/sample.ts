@@ -235,8 +235,10 @@ function sampleFigures(siteGroundM: number, heightM: number, screen: number, see
         notAssessed: 'its file has not been read',
       },
     ],
+    atHighK: null,
     roads: null,
     trialPlan: [],
+    measuredHorizon: null,
     obstaclesInSight: ['Grey mast', 'Silo at Wend'],
     marks: [
       { mark: 'from memory', about: 'low-angle land table' },

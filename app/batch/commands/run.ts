@@ -30,7 +30,7 @@ import { polarCells, polarRaster } from '../rasters/polarRaster.ts'
 import { NO_PERCENT } from '../rasters/sightRaster.ts'
 import { chooseLayers, chooseOptions, EXTRA_LAYERS, narrowed, ofNeed } from './chooseOptions.ts'
 import { horizonCsv } from './horizon.ts'
-import { roadsSummary, writeOptionFiles } from './optionFiles.ts'
+import { roadsSummary, writeHeightFiles, writeOptionFiles } from './optionFiles.ts'
 import { optionsTogether } from './rankingSummary.ts'
 
 /** `run`: every option picked, one after the other, into a folder that appears whole at the end. */
@@ -121,6 +121,7 @@ class RunWriter {
       this.#heightsDone.add(heightDir)
       await this.finish()
       await this.#writeHeight(heightDir, cells, ref, name)
+      writeHeightFiles(heightDir, figures)
     }
     await this.#raster(tiltDir, ref, 'clutter-to-noise', 'dB', this.#onLattice(cells, ref, cells.clutter.cnrDb))
     writeOptionFiles(tiltDir, cells, figures)

@@ -22,8 +22,11 @@ import {
   withMetric,
 } from '../../words/index.ts'
 import { bothUnits, capital, dual, dualBare, NO_HEADS, optionName, value } from './cells.ts'
+import { levelsFigure, suppressionFigure } from './chartFigures.ts'
+import { clutterAtKTable } from './clutterAtK.ts'
 import { exposureCell } from './exposureSection.ts'
 import { mapDrawing } from './mapFigure.ts'
+import { measuredBlocks } from './measuredSection.ts'
 import { availableWords, lossTable, marginTable, nestedTable, suppressionTable } from './needTables.ts'
 import { nestedWords } from './needWords.ts'
 import { placeBlocks } from './placeTables.ts'
@@ -63,12 +66,17 @@ export function optionBlocks(input: MemoInput, r: OptionResult, figure: () => nu
   blocks.push({ kind: 'caution', texts: clutterCautions(input) })
   if (r.figures.needs.length > 0) blocks.push(marginTable(input, r))
   blocks.push(horizonFigure(input, r, figure()))
-  blocks.push({ kind: 'caution', texts: cautionsFor('horizon') })
+  blocks.push({ kind: 'caution', texts: cautionsFor('horizon') }, ...measuredBlocks(input, r))
   if (r.figures.needs.length > 0) {
     blocks.push(lossTable(input, r), ...placeBlocks(input, r), suppressionTable(input, r))
-    blocks.push({ kind: 'paragraph', role: 'small', text: availableWords(r) }, { kind: 'caution', texts: suppressionCautions(input) })
+    blocks.push({ kind: 'paragraph', role: 'small', text: availableWords(r) })
+    if (r.figures.needs.some((n) => n.measure === 'area' && n.notAssessed === null)) blocks.push(suppressionFigure(input, r, figure()))
+    blocks.push({ kind: 'caution', texts: suppressionCautions(input) })
   }
+  const atBothK = clutterAtKTable(input, r)
+  if (atBothK) blocks.push(atBothK, { kind: 'caution', texts: clutterCautions(input) })
   blocks.push(...roadBlocks(input, r))
+  blocks.push(levelsFigure(input, r, figure()), { kind: 'caution', texts: clutterCautions(input) })
   const rings = ringChart({ rings: r.figures.rings, width: 182, height: 172, system: input.system, size: SMALL_PT - 1 })
   blocks.push({
     kind: 'beside',

@@ -1,0 +1,55 @@
+import type { OptionResult } from '../../../core/index.ts'
+import { formatAreaUp, formatDbUp, formatK, NO_VALUE } from '../../words/index.ts'
+import { dual, value } from './cells.ts'
+import type { Cell, MemoInput, TableBlock } from './types.ts'
+
+/** Clutter at the study's k and at k = 2.75 side by side; null where only one is worked out. */
+export function clutterAtKTable(input: MemoInput, r: OptionResult): TableBlock | null {
+  const f = r.figures
+  const high = f.atHighK
+  if (high === null) return null
+  const { system } = input
+  const area = (km2: number | null, key: string): Cell =>
+    km2 === null ? NO_VALUE : dual((s) => formatAreaUp(km2, s), system, { explain: key })
+  const db = (level: number | null, key: string): Cell => (level === null ? NO_VALUE : value(formatDbUp(level), { explain: key }))
+  const levels = [
+    [0, f.clutterOverKm2.over0, high.clutterOverKm2.over0],
+    [20, f.clutterOverKm2.over20, high.clutterOverKm2.over20],
+    [40, f.clutterOverKm2.over40, high.clutterOverKm2.over40],
+    [60, f.clutterOverKm2.over60, high.clutterOverKm2.over60],
+  ] as const
+  const rows: Cell[][] = levels.map(([level, own, at]) => [
+    `C/N over ${level}\u202fdB`,
+    area(own, `clutter_over_${level}_km2`),
+    area(at, `clutter_over_${level}_k2_75_km2`),
+  ])
+  rows.push(['C/N, highest', db(f.cnrPeakDb, 'clutter_to_noise_peak_db'), db(high.cnrPeakDb, 'clutter_to_noise_peak_k2_75_db')])
+  rows.push([
+    'Folded from earlier pulses',
+    area(f.secondTimeAround.km2, 'second_time_around_km2'),
+    area(high.secondTimeAroundKm2, 'second_time_around_k2_75_km2'),
+  ])
+  for (const s of high.suppression) {
+    const own = f.needs.find((n) => n.needId === s.needId)?.suppression
+    const shares = [
+      [50, own?.p50Db, s.p50Db],
+      [90, own?.p90Db, s.p90Db],
+      [99, own?.p99Db, s.p99Db],
+    ] as const
+    for (const [share, at, atHigh] of shares) {
+      const key = `need_${s.needId}_suppression_needed_${share}`
+      rows.push([`${s.name}: suppression needed at ${share}\u202f%`, db(at ?? null, `${key}_db`), db(atHigh, `${key}_k2_75_db`)])
+    }
+  }
+  return {
+    kind: 'table',
+    id: 'clutter-at-k',
+    title: 'Clutter at both k: more ground comes into sight where the air bends rays down',
+    columns: [
+      { head: 'Figure', width: 'fill' },
+      { head: `k = ${formatK(input.study.atmosphere.effectiveEarthFactor)}`, align: 'right' },
+      { head: 'k = 2.75', align: 'right' },
+    ],
+    rows,
+  }
+}
