@@ -8,6 +8,7 @@ import {
   offTerrain,
   readGround,
   type SettledCandidate,
+  surveysOf,
 } from '../../core/index.ts'
 import { FileSource } from './fileSource.ts'
 import { type LoadedStudy, readText } from './loadStudy.ts'
@@ -51,11 +52,12 @@ export async function loadGround(
       roads: study.roads,
       lowAngleLandTable: study.lowAngleLandTable,
       needs: loaded.doc.needs ?? [],
+      surveys: surveysOf(loaded.doc).filter((s) => candidates.some((c) => c.id === s.candidate)),
       circles: candidates.map((c) => ({ lon: c.lon, lat: c.lat, radiusM: study.run.maxRangeM })),
     }
     const read = await readGround(request, door, (doing, done, total) => progress.say(doing, done, total), shared)
-    const { shape, heightM, code, codes, obstacles, roads, verticalErrorM } = read
-    const ground = await drive(buildGround({ serial: 1, shape, heightM, code, codes, obstacles, roads, verticalErrorM }), progress, 'Relief')
+    const { shape, heightM, code, codes, obstacles, roads, surveys, verticalErrorM } = read
+    const ground = await drive(buildGround({ serial: 1, shape, heightM, code, codes, obstacles, roads, surveys, verticalErrorM }), progress, 'Relief')
     return { ground, read, warnings: [...read.warnings, ...checkPlaces(loaded, ground, candidates)] }
   } finally {
     await Promise.all(open.map((s) => s.close()))

@@ -1,4 +1,4 @@
-import { type Ask, type GroundRead, type GroundRequest, InputError, type Obstacle, type Road, type StudyDoc } from '../../core/index.ts'
+import { type Ask, type GroundRead, type GroundRequest, InputError, type Obstacle, type Road, type StudyDoc, surveysOf } from '../../core/index.ts'
 import type { IntakeTell } from './intakeMessages.ts'
 
 /** The window is planned before the candidates' ranges are settled; 150 km is more than any terrain radar asks of its ground. */
@@ -15,6 +15,7 @@ export function groundRequest(doc: StudyDoc): GroundRequest {
     roads: doc.roads?.file ?? null,
     lowAngleLandTable: doc.tables?.lowAngleLand ?? null,
     needs: doc.needs ?? [],
+    surveys: surveysOf(doc),
     circles: doc.candidates.map((c) => ({ lon: c.lon, lat: c.lat, radiusM })),
   }
 }
@@ -72,7 +73,8 @@ export function makeGroundReader(): (
     const request = groundRequest(doc)
     // a need whose file is not here yet is not assessed; the ground does not wait for it
     const needs = (request.needs ?? []).filter((n) => n.file === undefined || blobs.has(n.file))
-    const reading = readGroundInWorker({ ...request, needs }, blobs, onProgress)
+    const surveyed = (request.surveys ?? []).filter((s) => blobs.has(s.file))
+    const reading = readGroundInWorker({ ...request, needs, surveys: surveyed }, blobs, onProgress)
     stop = reading.stop
     const {
       shape,
@@ -83,12 +85,13 @@ export function makeGroundReader(): (
       roads,
       landTable,
       needPlaces,
+      surveys,
       verticalErrorM,
       files: read,
       warnings,
     } = await reading.result
     return {
-      ground: { shape, heightM, code, codes, obstacles, roads, verticalErrorM, landTable, needPlaces },
+      ground: { shape, heightM, code, codes, obstacles, roads, surveys, verticalErrorM, landTable, needPlaces },
       roads,
       obstacles,
       notes: [...read.map((f) => `${f.name}: ${f.describe}`), ...warnings],

@@ -68,6 +68,7 @@ export function filesOf(doc: StudyDoc): string[] {
     doc.facades?.file,
     doc.tables?.lowAngleLand,
     ...(doc.needs ?? []).map((n) => n.file),
+    ...doc.candidates.map((c) => c.measuredHorizon?.file),
   ]
   return [...new Set(names.filter((n): n is string => Boolean(n)))]
 }

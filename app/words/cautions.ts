@@ -33,6 +33,8 @@ export const CAUTIONS = {
   unknownGround: 'Unknown ground counts against a need: it is never in sight and never free of clutter.',
   floorBand: 'The floor is nominal; the error band beside it is 90 %, from the raster and obstacle errors.',
   edgeHorizon: 'Where the terrain ends the horizon is "at least" the value shown.',
+  survey:
+    'A survey is read with the k of the study and a 90 % error of 0.05° unless it states one; between rows up to 5° apart it is taken as linear, elsewhere the raster alone holds.',
   trialAltitudes:
     'Altitudes of the trial plan are those of needs and predicted floors, not safe altitudes: terrain, obstacles, airspace and minimum altitudes are for the pilot and the authority.',
   roads:
@@ -64,6 +66,7 @@ export const CAUTIONS_OF = {
   exposure: ['exposure', 'structure'],
   roads: ['roads'],
   trial: ['trialAltitudes', 'threeWords'],
+  survey: ['survey'],
   usable: ['threeWords', 'meanUsable', 'edgeOnly', 'landTable'],
   diagram: ['diffracted'],
   mast: ['obstruction', 'structure'],

@@ -19,7 +19,7 @@ export const NOT_ASSESSED: readonly NotAssessed[] = [
   { what: 'Reflections and false targets', so: 'no facade is traced' },
   { what: 'Wind turbines', so: 'neither turning blades nor shadow sectors' },
   { what: 'Beam blockage', so: 'an obstacle masks or does not; no partial loss of the beam' },
-  { what: 'Measured horizon and trials', so: 'nothing in this memo is confirmed' },
+  { what: 'Results of trials', so: 'what was measured is listed as entered; no figure is changed by it' },
   { what: 'Pulse-peak exposure', so: 'keep-clear distances are for average power' },
   { what: 'Cost, access, power, link and land', so: 'left to the site visit' },
 ]

@@ -1,7 +1,7 @@
 export { type Clearance, clearanceAt } from './clearanceAt.ts'
 export { floorBand } from './floorBand.ts'
 export { horizonAt } from './horizon.ts'
-export { AT_LEAST_EDGE, AT_LEAST_VOID } from './horizonIs.ts'
+export { AT_LEAST_EDGE, AT_LEAST_VOID, SURVEYED_NAME } from './horizonIs.ts'
 export { type SightProfile, sightAlong } from './sightAlong.ts'
 export { type SightPoint, sightPoint } from './sightPoint.ts'
 export { isInSight, SIGHT_ALLOWANCE_M } from './sightState.ts'

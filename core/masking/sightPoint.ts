@@ -35,9 +35,13 @@ export interface SightPoint {
 }
 
 const runners = new WeakMap<Ground, { key: string; runner: RayRunner; reachM: number }>()
+/** A survey belongs to the ground; which one, and the earth its angles are taken with, to the site. */
+const surveyKey = ({ survey }: Site): string =>
+  survey ? `${survey.candidate}|${survey.earth.effectiveEarthFactor}|${survey.earth.earthRadiusM}` : ''
+
 /** Runner kept between calls for one ground and site; used by functions that finish before they return. */
 export function heldRunner(g: Ground, site: Site, rangeM: number): RayRunner {
-  const key = `${site.lon},${site.lat},${site.groundHeightM},${site.clearingRadiusM}`
+  const key = `${site.lon},${site.lat},${site.groundHeightM},${site.clearingRadiusM},${surveyKey(site)}`
   const held = runners.get(g)
   if (held && held.key === key && held.reachM >= rangeM) return held.runner
   const reachM = Math.max(rangeM * 1.5, 20_000)

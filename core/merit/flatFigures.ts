@@ -23,6 +23,7 @@ export function flatFigures(f: Omit<Figures, 'flat'>): Record<string, number | n
     clutter_to_noise_99_db: f.clutterLevels.whole.p99Db,
     second_time_around_km2: f.secondTimeAround.km2,
     second_time_around_evaluated_m: f.secondTimeAround.notEvaluatedBeyondM,
+    ...(f.measuredHorizon ? { measured_horizon_mean_deg: f.measuredHorizon.meanDeg, measured_horizon_rms_deg: f.measuredHorizon.rmsDeg } : {}),
   }
   const floors = (list: readonly FloorFigure[], tail: string): void => {
     for (const floor of list) {

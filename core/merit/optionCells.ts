@@ -5,7 +5,7 @@ import type { SightCells, SiteCells } from '../masking/index.ts'
 import type { Held } from '../polar/index.ts'
 import type { RadarInput } from '../radar/index.ts'
 import type { SettledStudy } from '../study/index.ts'
-import type { Ground, Site } from '../terrain/index.ts'
+import type { Ground, Site, SurveyUse } from '../terrain/index.ts'
 import { fromDb, toDb } from '../units/index.ts'
 import type { NeedPlaces } from './needs/places/types.ts'
 import type { FloorFigure } from './types.ts'
@@ -50,6 +50,8 @@ export interface OptionCells {
   readonly lowK: LowKCells | null
   /** What the files of needs hold. */
   readonly places: readonly NeedPlaces[]
+  /** The survey at the candidate, and whether results take it as the higher of both; absent = none. */
+  readonly survey?: SurveyUse & { readonly used: boolean }
   /** Radar cross-section of a vehicle, m²; absent = 30. */
   readonly vehicleRcsM2?: number
 }

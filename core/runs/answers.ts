@@ -92,7 +92,7 @@ export class Answers {
     const candidate = candidateOf(study, body.candidate)
     const place = { ...siteOf(candidate), lon: body.lon, lat: body.lat }
     const moved = body.lon !== candidate.lon || body.lat !== candidate.lat
-    const site = moved ? { ...place, groundHeightM: null } : place
+    const site = moved ? { ...place, groundHeightM: null, survey: undefined } : place
     const earth = earthOf(study)
     const grid = previewShape(polarShape(study.run), body.still)
     const swept = yield* sweep(ground, site, [body.heightM], grid, earth, { heightToSee: false })

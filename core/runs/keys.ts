@@ -15,12 +15,12 @@ export function keysOf(serial: number, filesSerial: number, study: SettledStudy,
     lowK: `${siteKey(serial, study, candidate, LOW_K)}|${ref.heightM}|cover`,
     clutter,
     folded: `${clutter}|${study.foldRangeM}`,
-    needs: `${clutter}|${study.foldRangeM}|${filesSerial}|${canonicalJson([study.needs, study.vehicleRcsM2])}`,
+    needs: `${clutter}|${study.foldRangeM}|${filesSerial}|${canonicalJson([study.needs, study.vehicleRcsM2, candidate.measuredHorizon?.file ?? null])}`,
   }
 }
 
 const siteKey = (serial: number, study: SettledStudy, c: SettledCandidate, k: number): string =>
-  canonicalJson([serial, c.lon, c.lat, c.groundHeightM, c.clearingRadiusM, k, study.atmosphere.earthRadiusM, study.run])
+  canonicalJson([serial, c.lon, c.lat, c.groundHeightM, c.clearingRadiusM, k, study.atmosphere.earthRadiusM, study.run, c.measuredHorizon?.used ? c.measuredHorizon : null])
 
 export const optionId = (ref: OptionRef): string => `${ref.candidate}|${ref.heightM}|${ref.tiltDeg}`
 

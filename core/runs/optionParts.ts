@@ -2,7 +2,7 @@ import { type ClutterOptions, discreteEchoes, type LandTable } from '../clutter/
 import { improvementDb, type SuppressionBy, suppressionBy, unambiguousRangeM } from '../doppler/index.ts'
 import { type Earth, geodesicInverse } from '../geodesy/index.ts'
 import type { SightCells, SiteCells } from '../masking/index.ts'
-import { floorFigures, LOW_K, type LowKCells, meanEffectiveRadiusM } from '../merit/index.ts'
+import { floorFigures, LOW_K, type LowKCells, meanEffectiveRadiusM, type OptionCells } from '../merit/index.ts'
 import { gridPosition } from '../raster/index.ts'
 import type { SettledCandidate, SettledStudy } from '../study/index.ts'
 import type { Ground, Site } from '../terrain/index.ts'
@@ -12,7 +12,11 @@ export const siteOf = (c: SettledCandidate): Site => ({
   lat: c.lat,
   groundHeightM: c.groundHeightM,
   clearingRadiusM: c.clearingRadiusM,
+  ...(c.measuredHorizon?.used ? { survey: { candidate: c.id, earth: c.measuredHorizon.earth } } : {}),
 })
+/** The survey at a candidate as an option's cells name it; nothing where there is none. */
+export const surveyPart = (c: SettledCandidate): Pick<OptionCells, 'survey'> =>
+  c.measuredHorizon ? { survey: { candidate: c.id, earth: c.measuredHorizon.earth, used: c.measuredHorizon.used } } : {}
 export const earthOf = (study: SettledStudy): Earth => ({
   effectiveEarthFactor: study.atmosphere.effectiveEarthFactor,
   earthRadiusM: study.atmosphere.earthRadiusM,

@@ -4,8 +4,9 @@ import { type ByteSource, openTerrain, type Progress, readClasses, readFeatures 
 import { type GroundCode, groundCodes, type TerrainName, uniformCode } from '../landcover/index.ts'
 import { type NeedPlaces, readPlaces } from '../merit/index.ts'
 import { type Obstacle, type Road, readObstacles, readRoads } from '../obstacles/index.ts'
+import { readSurvey, type Survey } from '../terrain/index.ts'
 import { type Circle, type GridShape, planGround, postingM } from '../raster/index.ts'
-import type { LandCoverDoc, NeedDoc, TerrainFileDoc } from '../study/index.ts'
+import type { LandCoverDoc, NeedDoc, StudyDoc, TerrainFileDoc } from '../study/index.ts'
 
 /** What of a study makes its ground. */
 export interface GroundRequest {
@@ -19,6 +20,8 @@ export interface GroundRequest {
   readonly circles: readonly Circle[]
   /** Needs as the study states them; the files of fixes, tracks and polygons are read. */
   readonly needs?: readonly NeedDoc[]
+  /** Files of horizons surveyed at candidates, with the key path that names each. */
+  readonly surveys?: readonly { readonly candidate: string; readonly file: string; readonly place: string }[]
 }
 /** What reading the files of a study gives. The arrays are fresh and may be transferred, or lie on shared memory. */
 export interface GroundRead {
@@ -31,6 +34,7 @@ export interface GroundRead {
   readonly landTable: LandTable | null
   /** What the files of needs hold, in the order of the needs. */
   readonly needPlaces: readonly NeedPlaces[]
+  readonly surveys: readonly Survey[]
   readonly verticalErrorM: number
   /** A line per file: what was read. */
   readonly files: readonly { readonly name: string; readonly describe: string }[]
@@ -118,8 +122,14 @@ export async function readGround(
     needPlaces.push(read)
     files.push({ name: file, describe: placesWords(read) })
   }
+  const surveys: Survey[] = []
+  for (const { candidate, file, place } of request.surveys ?? []) {
+    const rows = readSurvey(await door.text(file, place), file)
+    surveys.push({ candidate, file, rows })
+    files.push({ name: file, describe: `surveyed horizon, ${rows.length} azimuths` })
+  }
   const verticalErrorM = request.terrain.reduce((worst, t) => Math.max(worst, t.verticalErrorM ?? DEFAULT_VERTICAL_ERROR_M), 0)
-  return { shape, heightM, code, codes, obstacles, roads, landTable, needPlaces, verticalErrorM, files, warnings }
+  return { shape, heightM, code, codes, obstacles, roads, landTable, needPlaces, surveys, verticalErrorM, files, warnings }
 }
 
 function onShared(bytes: Uint8Array): Uint8Array {
@@ -127,6 +137,14 @@ function onShared(bytes: Uint8Array): Uint8Array {
   out.set(bytes)
   return out
 }
+
+/** Surveys of candidates as the ground is asked for them. */
+export const surveysOf = (doc: Pick<StudyDoc, 'candidates'>): NonNullable<GroundRequest['surveys']> =>
+  doc.candidates.flatMap((c, i) =>
+    c.measuredHorizon && c.rejected === undefined
+      ? [{ candidate: c.id, file: c.measuredHorizon.file, place: `candidates[${i}].measuredHorizon.file` }]
+      : [],
+  )
 
 const placesWords = ({ kind, places, rings }: NeedPlaces): string =>
   kind === 'polygon'

@@ -6,6 +6,7 @@ import type { Obstacle, Road } from '../obstacles/index.ts'
 import type { Ramp, View } from '../paint/index.ts'
 import type { GridShape } from '../raster/index.ts'
 import type { StudyDoc } from '../study/index.ts'
+import type { Survey } from '../terrain/index.ts'
 
 export interface OptionRef {
   readonly candidate: string
@@ -139,6 +140,7 @@ export interface Ask {
     codes: readonly GroundCode[]
     obstacles: readonly Obstacle[]
     roads?: readonly Road[]
+    surveys?: readonly Survey[]
     verticalErrorM: number
     /** The study's own low-angle land table; null or absent for the built-in one. */
     landTable?: LandTable | null

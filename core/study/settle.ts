@@ -160,7 +160,8 @@ function settleNeed(n: NeedDoc, i: number, radar: RadarInput, maxRangeM: number,
   }
 }
 
-function settleCandidate(c: CandidateDoc, i: number, antennaTiltDeg: number, d: Defaults): SettledCandidate {
+function settleCandidate(c: CandidateDoc, i: number, antennaTiltDeg: number, air: SettledStudy['atmosphere'], d: Defaults): SettledCandidate {
+  const earth = { effectiveEarthFactor: air.effectiveEarthFactor, earthRadiusM: air.earthRadiusM }
   return {
     id: c.id,
     name: c.name ?? c.id,
@@ -171,8 +172,9 @@ function settleCandidate(c: CandidateDoc, i: number, antennaTiltDeg: number, d: 
     tiltsDeg: c.tiltsDeg ? [...c.tiltsDeg] : [antennaTiltDeg],
     clearingRadiusM: d.take(`candidates[${i}].clearingRadiusM`, c.clearingRadiusM, 50),
     notes: c.notes ?? '',
-    measuredHorizon: c.measuredHorizon?.file ?? null,
-    useMeasuredHorizon: c.measuredHorizon ? d.take(`candidates[${i}].useMeasuredHorizon`, c.useMeasuredHorizon, false) : false,
+    measuredHorizon: c.measuredHorizon
+      ? { file: c.measuredHorizon.file, used: d.take(`candidates[${i}].useMeasuredHorizon`, c.useMeasuredHorizon, false), earth }
+      : null,
   }
 }
 
@@ -249,7 +251,7 @@ export function settle(doc: StudyDoc, fileName?: string): SettledStudy {
     atmosphere,
     radar,
     needs: (doc.needs ?? []).map((n, i) => settleNeed(n, i, radar, maxRangeM, d)),
-    candidates: doc.candidates.flatMap((c, i) => (c.rejected === undefined ? [settleCandidate(c, i, radar.antenna.tiltDeg, d)] : [])),
+    candidates: doc.candidates.flatMap((c, i) => (c.rejected === undefined ? [settleCandidate(c, i, radar.antenna.tiltDeg, atmosphere, d)] : [])),
     rejected: doc.candidates.flatMap((c) =>
       c.rejected === undefined ? [] : [{ id: c.id, name: c.name ?? c.id, lon: c.lon, lat: c.lat, reason: c.rejected }],
     ),

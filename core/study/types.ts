@@ -264,9 +264,12 @@ export interface SettledCandidate {
   readonly tiltsDeg: readonly number[]
   readonly clearingRadiusM: number
   readonly notes: string
-  /** File of the horizon surveyed there; null = none. */
-  readonly measuredHorizon: string | null
-  readonly useMeasuredHorizon: boolean
+  /** The horizon surveyed there: its file, whether it is taken as the higher of both, and the earth its angles become heights with; null = none. */
+  readonly measuredHorizon: {
+    readonly file: string
+    readonly used: boolean
+    readonly earth: { readonly effectiveEarthFactor: number; readonly earthRadiusM: number | null }
+  } | null
 }
 /** Measured on site or in trial; complete. */
 export interface Confirmation {

@@ -12,9 +12,13 @@ export interface Spike {
   /** Top, m MSL; for a line of stated height above ground: height, to be added to the ground of the ray. */
   topM: number
   aboveGround: boolean
-  /** Index into Ground.obstacles. */
+  /** Index into Ground.obstacles, or SURVEYED. */
   obstacle: number
+  /** 90 % error of the top where it is not the obstacle's own, m. */
+  errorM?: number
 }
+/** Stands in place of an obstacle's index for what a survey of the horizon found. */
+export const SURVEYED = -5
 /** The obstacles around one site, by azimuth. */
 export interface Blockers {
   /** Spikes of the ray at an azimuth, nearest first. */

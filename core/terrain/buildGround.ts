@@ -3,6 +3,7 @@ import type { Obstacle, Road } from '../obstacles/index.ts'
 import { bilinear, type GridPosition, type GridShape, gridPosition, postingM } from '../raster/index.ts'
 import type { Work } from '../work/index.ts'
 import { buildRelief } from './relief.ts'
+import type { Survey } from './survey/types.ts'
 import type { Ground, Site } from './types.ts'
 
 /** What a ground is made of: one grid of heights, and on the same posts an index into `codes` (null: codes[0] everywhere). */
@@ -15,6 +16,7 @@ export interface GroundParts {
   readonly codes: readonly GroundCode[]
   readonly obstacles: readonly Obstacle[]
   readonly roads?: readonly Road[]
+  readonly surveys?: readonly Survey[]
   /** 90 % linear error, m. */
   readonly verticalErrorM: number
 }
@@ -26,7 +28,7 @@ export function* buildGround(parts: GroundParts): Work<Ground> {
   if (parts.code && parts.code.length !== posts) throw new RangeError(`code has ${parts.code.length} posts, its shape ${posts}`)
   if (parts.codes.length === 0 || parts.codes.length > 255) throw new RangeError(`1 to 255 ground codes, not ${parts.codes.length}`)
   const relief = yield* buildRelief(parts.shape, parts.heightM)
-  return { ...parts, roads: parts.roads ?? [], relief, postingM: postingM(parts.shape).meanM }
+  return { ...parts, roads: parts.roads ?? [], surveys: parts.surveys ?? [], relief, postingM: postingM(parts.shape).meanM }
 }
 
 const positions = new WeakMap<GridShape, GridPosition>()

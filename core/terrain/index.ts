@@ -1,5 +1,6 @@
-export type { Spike } from './blockers.ts'
+export { type Spike, SURVEYED } from './blockers.ts'
 export * from './buildGround.ts'
 export { buildRelief, COARSEST_RELIEF_POSTING_M, reliefAt, reliefBlock } from './relief.ts'
+export * from './survey/index.ts'
 export { groundKindAt, makeTracer, type TracedRay, type Tracer, type TracerOptions } from './tracer.ts'
 export * from './types.ts'

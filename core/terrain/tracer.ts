@@ -1,11 +1,12 @@
 import { geodesicDirect, geodesicInverse, geodesicLine, type LonLat } from '../geodesy/index.ts'
 import { RAD_PER_DEG } from '../units/index.ts'
-import { makeBlockers, type Spike } from './blockers.ts'
+import { makeBlockers, type Spike, SURVEYED } from './blockers.ts'
 import { codeAt, positionOf } from './buildGround.ts'
 import { type ControlPoints, directControl, fanControl, setInside } from './controlPoints.ts'
 import { type Clearing, type CoverPosts, coverAlong } from './coverAlong.ts'
 import type { WalkedPatches } from './patches.ts'
 import { reliefAt, reliefBlockOf } from './relief.ts'
+import { type SurveyLine, surveyLine } from './survey/index.ts'
 import type { Ground, RayTrack, Site } from './types.ts'
 import { WALK_END, walkCapacity, walkRay } from './walkRay.ts'
 
@@ -54,8 +55,9 @@ export function makeTracer(g: Ground, site: Site, maxRangeM: number, options: Tr
   const direct = directControl(shape, position, site, start, maxRangeM, g.postingM)
   const control = options.fanStepDeg === undefined ? direct : fanControl(shape, position, site, direct)
   const blockers = makeBlockers(g, site, options.fanStepDeg ?? null)
+  const survey = surveyLine(g, site)
   const covered = g.codes.some((c) => c.coverHeightM > 0)
-  const capacity = walkCapacity(shape.width, shape.height, control.points.distM.length) + 3 * spikeRoom(g)
+  const capacity = walkCapacity(shape.width, shape.height, control.points.distM.length) + 3 * (spikeRoom(g) + (survey ? 1 : 0))
   const patches: WalkedPatches | null = covered
     ? {
         post: new Int32Array(capacity),
@@ -65,7 +67,7 @@ export function makeTracer(g: Ground, site: Site, maxRangeM: number, options: Tr
       }
     : null
   const ground = new Float64Array(3 * capacity)
-  const separate = covered || g.obstacles.length > 0
+  const separate = covered || g.obstacles.length > 0 || survey !== null
   const surface = separate ? new Float64Array(3 * capacity) : ground
   const track: TracedRay = { count: 0, ground, surface, unknownFromM: Number.POSITIVE_INFINITY, unknownWhy: null, spikes: [] }
   const walk = { count: 0, end: 0, ground, patches }
@@ -89,7 +91,7 @@ export function makeTracer(g: Ground, site: Site, maxRangeM: number, options: Tr
     track.unknownWhy = ended ? (walk.end === WALK_END.void ? 'void' : 'edge') : null
     if (cover && patches) coverAlong(cover, n, patches, ground, surface)
     else if (separate) surface.set(ground.subarray(0, 3 * n))
-    track.spikes = blockers.along(azimuthDeg)
+    track.spikes = survey ? withSurvey(blockers.along(azimuthDeg), survey, azimuthDeg) : blockers.along(azimuthDeg)
     if (track.spikes.length > 0) insertSpikes(track)
   }
   const block = reliefBlockOf(g)
@@ -170,6 +172,14 @@ export const groundKindAt = (g: Ground, col: number, row: number): { code: numbe
   relief: reliefAt(g, col, row),
 })
 
+/** The obstacles of a ray with what was surveyed there, nearest first. */
+function withSurvey(spikes: readonly Spike[], survey: SurveyLine, azimuthDeg: number): readonly Spike[] {
+  const found = survey.at(azimuthDeg)
+  if (!found) return spikes
+  const spike = { distM: found.distM, topM: found.topM, aboveGround: false, obstacle: SURVEYED, errorM: found.errorM }
+  return [...spikes, spike].sort((a, b) => a.distM - b.distM)
+}
+
 /** Entries one ray may need for obstacles: no ray meets more spikes than there are points and pieces of lines. */
 function spikeRoom(g: Ground): number {
   let n = 0
@@ -222,9 +232,10 @@ function heightBetween(t: Float64Array, j: number, distM: number): number {
   return z + u * ((t[3 * j + 4] - z) / length + t[3 * j + 2] * (u - length))
 }
 
-/** Puts the obstacles of this ray into the track: up to the top and down again within 2 mm. */
+/** Puts the obstacles of this ray into the track: up to the top and down again within 2 mm. Those that do not stand over the surface are left out. */
 function insertSpikes(t: TracedRay): void {
   const { ground, surface } = t
+  const standing: Spike[] = []
   for (const spike of t.spikes) {
     const n = t.count
     if (!(spike.distM > 0 && spike.distM <= ground[3 * (n - 1)])) continue
@@ -262,5 +273,7 @@ function insertSpikes(t: TracedRay): void {
       a.set(values, 3 * (j + 1))
     }
     t.count = n + 3
+    standing.push(spike)
   }
+  t.spikes = standing
 }

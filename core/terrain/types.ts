@@ -1,6 +1,7 @@
 import type { GroundCode } from '../landcover/index.ts'
 import type { Obstacle, Road } from '../obstacles/index.ts'
 import type { GridShape, RasterGrid } from '../raster/index.ts'
+import type { Survey, SurveyUse } from './survey/types.ts'
 
 export const RELIEF = { low: 0, high: 1, mountains: 2, unknown: 255 } as const
 export type Relief = (typeof RELIEF)[keyof typeof RELIEF]
@@ -19,6 +20,8 @@ export interface Ground {
   readonly obstacles: readonly Obstacle[]
   /** Roads and railways, whose vehicles may be seen; they mask nothing. */
   readonly roads: readonly Road[]
+  /** Horizons surveyed at candidates. */
+  readonly surveys: readonly Survey[]
   /** 90 % linear error of the heights, m. */
   readonly verticalErrorM: number
   /** Mean posting at mid-raster, m. */
@@ -31,6 +34,8 @@ export interface Site {
   /** Stated ground height, m MSL; null = bilinear ground of the raster. */
   readonly groundHeightM: number | null
   readonly clearingRadiusM: number
+  /** The surveyed horizon it takes as obstacles; absent = none. */
+  readonly survey?: SurveyUse
 }
 /** Where the numbers of one entry of a RayTrack lie: entry k starts at TRACK.stride * k. */
 export const TRACK = { stride: 3, distM: 0, heightM: 1, bendPerM: 2 } as const

@@ -18,6 +18,10 @@ const ROADS = {
   ],
 }
 
+/** A tree line 1° over an instrument of 2 m, 1 km to the south. */
+const SURVEY =
+  'azimuth_deg,elevation_deg,range_m,instrument_height_m,method\n178,1,1000,2,theodolite\n180,1,1000,2,theodolite\n182,1,1000,2,theodolite\n'
+
 describe('files of an option beside its rasters', () => {
   let out = ''
   let ran: Ran
@@ -25,9 +29,13 @@ describe('files of an option beside its rasters', () => {
   beforeAll(async () => {
     const [candidate] = tinyDoc().candidates
     const { dir, path } = await tinyStudy(
-      tinyDoc({ roads: { file: 'roads.geojson' }, candidates: [{ ...candidate!, mastHeightsM: [10] }] }),
+      tinyDoc({
+        roads: { file: 'roads.geojson' },
+        candidates: [{ ...candidate!, mastHeightsM: [10], measuredHorizon: { file: 'survey.csv' }, useMeasuredHorizon: true }],
+      }),
     )
     writeFileSync(join(dir, 'roads.geojson'), JSON.stringify(ROADS))
+    writeFileSync(join(dir, 'survey.csv'), SURVEY)
     out = join(dir, 'results')
     ran = await batchLater('run', path, '--out', out, '--no-memo')
     option = JSON.parse(readFileSync(join(out, 'summary.json'), 'utf8')).options[0]
@@ -48,6 +56,30 @@ describe('files of an option beside its rasters', () => {
     expect(rings).toHaveLength(1)
     expect(rings[0]!.seen_by_class_km).toMatchObject({ motorway: option.figures.roads_seen_km, other: 0 })
     expect((option.roads.in_tunnel_km as number) > 0.36 && (option.roads.in_tunnel_km as number) < 0.37).toBe(true)
+  })
+  it('horizon-difference.csv: surveyed, from the mast, and computed; used, it is the horizon', () => {
+    const rows = rowsOf(readFileSync(join(out, 'A/10m/horizon-difference.csv'), 'utf8'))
+    expect(rows.map((r) => r.azimuth_deg)).toEqual(['178.0000', '180.0000', '182.0000'])
+    // the top stands at 102 + 17.5 m: 0.54° from 110 m at 1 km
+    for (const r of rows) {
+      expect(Number(r.corrected_deg)).toBeCloseTo((Math.atan(9.5 / 1000) * 180) / Math.PI, 2)
+      expect(Number(r.difference_deg)).toBeCloseTo(Number(r.corrected_deg) - Number(r.computed_deg), 4)
+      expect(r).toMatchObject({ measured_deg: '1.00000', method: 'theodolite', used: '1' })
+    }
+    const horizon = rowsOf(readFileSync(join(out, 'A/10m/horizon.csv'), 'utf8'))
+    const south = horizon.find((h) => Number(h.azimuth_deg) === 180)!
+    expect(south.obstacle).toBe('surveyed')
+    expect(Number(south.elevation_deg)).toBeCloseTo(Number(rows[1]!.corrected_deg), 3)
+    const summary = JSON.parse(readFileSync(join(out, 'summary.json'), 'utf8'))
+    expect(summary.files.map((f: { name: string }) => f.name)).toContain('survey.csv')
+    expect(option.figures.measured_horizon_mean_deg).toBeGreaterThan(0.5)
+  })
+  it('a survey that cannot be read ends with one sentence and its line', async () => {
+    const bad = await tinyStudy(tinyDoc({ candidates: [{ ...tinyDoc().candidates[0]!, measuredHorizon: { file: 'survey.csv' } }] }))
+    writeFileSync(join(bad.dir, 'survey.csv'), SURVEY.replace('180,1,', '180,tall,'))
+    const { code, err } = await batchLater('run', bad.path, '--out', join(bad.dir, 'out'), '--no-memo')
+    expect(code).toBe(2)
+    expect(err.trim().split('\n').at(-1)).toMatch(/survey\.csv.*line 3, elevation_deg: elevation is "tall"; give -45 to 89/)
   })
   it('roads-seen.geojson: lines, seen or not', () => {
     const { features } = JSON.parse(readFileSync(join(out, 'A/10m/0deg/roads-seen.geojson'), 'utf8'))

@@ -3,6 +3,7 @@ import { join } from 'node:path'
 import {
   type Figures,
   type LonLat,
+  type MeasuredHorizonFigure,
   type OptionCells,
   ROAD_CLASSES,
   type RoadLines,
@@ -18,6 +19,46 @@ export function writeOptionFiles(tiltDir: string, cells: OptionCells, figures: F
   writeFileSync(join(tiltDir, 'trial-plan.csv'), trialPlanCsv(figures.trialPlan))
   if (cells.ground.roads.length > 0) writeFileSync(join(tiltDir, 'roads-seen.geojson'), roadsGeoJson(roadLines(cells)))
 }
+
+/** Files of one mast height: a surveyed horizon beside the computed one. */
+export function writeHeightFiles(heightDir: string, figures: Figures): void {
+  const { measuredHorizon } = figures
+  if (measuredHorizon) writeFileSync(join(heightDir, 'horizon-difference.csv'), differenceCsv(measuredHorizon))
+}
+
+const DIFFERENCE_COLUMNS = [
+  'azimuth_deg',
+  'range_m',
+  'measured_deg',
+  'instrument_height_m',
+  'method',
+  'corrected_deg',
+  'computed_deg',
+  'difference_deg',
+  'computed_range_m',
+  'computed_obstacle',
+  'used',
+] as const
+/** Rows of a surveyed horizon: as measured, from the mast, computed, and the difference. */
+export const differenceCsv = (m: MeasuredHorizonFigure): string =>
+  [
+    csvLine(DIFFERENCE_COLUMNS),
+    ...m.rows.map((r) =>
+      csvLine([
+        csvNumber(r.azimuthDeg, 4),
+        csvNumber(r.rangeM, 3),
+        csvNumber(r.measuredDeg, 5),
+        csvNumber(r.instrumentHeightM, 3),
+        r.method,
+        csvNumber(r.correctedDeg, 5),
+        csvNumber(r.computedDeg, 5),
+        csvNumber(r.differenceDeg, 5),
+        csvNumber(r.computedRangeM, 3),
+        r.computedObstacle,
+        m.used ? '1' : '0',
+      ]),
+    ),
+  ].join('')
 
 /** Roads within range as GeoJSON lines, `seen` true or false. */
 export function roadsGeoJson({ seen, hidden }: RoadLines): string {

@@ -112,6 +112,12 @@ const STEEP: ModelRow = {
   basis: 'from memory',
   limits: 'depression over 8°',
 }
+const SURVEY: ModelRow = {
+  model: 'Surveyed horizon',
+  source: 'Elevations and ranges as entered, turned into heights with the k of the study',
+  basis: 'by hand',
+  limits: 'rows up to 5° apart joined, error 0.05° unless stated',
+}
 const ROADS: ModelRow = {
   model: 'Roads seen',
   source: 'Our own definition: height, speed and echo of vehicles by class of road',
@@ -169,6 +175,7 @@ export function modelBlocks(input: MemoInput): Block[] {
           } as const,
         ]),
     ...(study.roads === null ? [] : [ROADS]),
+    ...(study.candidates.some((c) => c.measuredHorizon) ? [SURVEY] : []),
     ...(study.atmosphere.rainRateMmH > 0 ? RAIN : []),
     ...(study.atmosphere.gas === 'p676' ? [GAS] : []),
     ...GEOMETRY,

@@ -1,5 +1,5 @@
 import { type Earth, effectiveRadiusM } from '../../geodesy/index.ts'
-import { type Ground, makeTracer, type Site, siteGround, type Tracer } from '../../terrain/index.ts'
+import { type Ground, makeTracer, type Site, type Spike, siteGround, type Tracer } from '../../terrain/index.ts'
 import { HORIZON_IS } from '../horizonIs.ts'
 import { type Cuts, makeStraightProfile, type StraightProfile, straighten } from './profile.ts'
 import { makeSightRun, runSight, type SightRun } from './sightRun.ts'
@@ -72,8 +72,7 @@ export function controllingOf(r: RayRunner, tangent: number, controlX: number): 
   const heightM = heightOfY(r.antennaY + tangent * controlX, straightDrop(rangeM, r.inverse), r.inverse)
   for (const spike of spikes)
     if (Math.abs(spike.distM - rangeM) < 1e-4) {
-      const o = r.g.obstacles[spike.obstacle]
-      return { rangeM, heightM, is: spike.obstacle, errorM: o.verticalErrorM ?? r.g.verticalErrorM }
+      return { rangeM, heightM, is: spike.obstacle, errorM: spikeErrorM(r.g, spike) }
     }
   let j = 0
   let high = count - 1
@@ -89,12 +88,14 @@ export function controllingOf(r: RayRunner, tangent: number, controlX: number): 
   const is = heightM - ground > COVER_NAMED_M ? HORIZON_IS.cover : HORIZON_IS.terrain
   return { rangeM, heightM, is, errorM: r.g.verticalErrorM }
 }
+/** Error of an obstacle's top, m: that of its record or survey, else the raster's. */
+const spikeErrorM = (g: Ground, spike: Spike): number => spike.errorM ?? g.obstacles[spike.obstacle]?.verticalErrorM ?? g.verticalErrorM
 /** Error of the controlling point alone: obstacle records carry their own. */
 export function controlErrorM(r: RayRunner, controlX: number): number {
   const { spikes } = r.tracer.track
   if (spikes.length > 0) {
     const rangeM = rangeOfX(controlX, r.inverse)
-    for (const s of spikes) if (Math.abs(s.distM - rangeM) < 1e-4) return r.g.obstacles[s.obstacle].verticalErrorM ?? r.g.verticalErrorM
+    for (const s of spikes) if (Math.abs(s.distM - rangeM) < 1e-4) return spikeErrorM(r.g, s)
   }
   return r.g.verticalErrorM
 }
