@@ -34,6 +34,9 @@ export interface ViewState {
   /** The option on show; null while there is no candidate. */
   readonly option: OptionRef | null
   readonly layer: LayerId
+  /** A second option to show the layer against, and how: its difference, or a map of its own beside. */
+  readonly against: OptionRef | null
+  readonly beside: 'difference' | 'maps'
   /** Need the layer is about, where it is about one. */
   readonly need: string | null
   readonly units: UnitSystem
@@ -69,6 +72,8 @@ export function createViewStore(storage?: Storage, prefersDark = false) {
         memoOpen: false,
         option: null,
         layer: 'clutter-to-noise',
+        against: null,
+        beside: 'difference',
         need: null,
         units: 'nautical',
         theme: prefersDark ? 'night' : 'paper',

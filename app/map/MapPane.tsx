@@ -1,8 +1,9 @@
-import { useCallback, useEffect, useLayoutEffect, useMemo, useRef, useState } from 'react'
+import { useCallback, useEffect, useId, useLayoutEffect, useMemo, useRef, useState } from 'react'
 import { Button } from 'react-aria-components'
 import { geodesicDirect, type LonLat, pixelAtLonLat, type View } from '../../core/index.ts'
-import { MAP_WORDS } from '../words/index.ts'
+import { MAP_WORDS, optionWords } from '../words/index.ts'
 import { fitted, openingView, panned, resized, zoomed } from './camera.ts'
+import { differenceOn } from './difference.ts'
 import { Legend } from './face/Legend.tsx'
 import { Progress } from './face/Progress.tsx'
 import { ReadOut } from './face/ReadOut.tsx'
@@ -16,6 +17,7 @@ import type { Rect } from './marks/Rings.tsx'
 import { useSheets } from './sheets/useSheets.ts'
 import type { Channel, MapPaneProps } from './types.ts'
 import { useChannel } from './useChannel.ts'
+import { useLink } from './useLink.ts'
 import './map.css'
 
 const FIT_MARGIN_PX = 28
@@ -33,6 +35,9 @@ export function MapPane(props: MapPaneProps) {
   const [trouble, setTrouble] = useState<string | null>(null)
   const onError = useCallback((error: unknown) => setTrouble(error instanceof Error ? error.message : String(error)), [])
   const { base, setBase, gl } = useSheets(sheets, camera, props, onError)
+  useLink(camera, props.link, props.pane)
+  const other = differenceOn(show)
+  const tilts = candidates.some((c) => c.tiltsDeg.length > 1)
   const chosen = candidates.find((c) => c.id === show.option?.candidate) ?? null
   const lon = chosen?.lon
   const lat = chosen?.lat
@@ -58,15 +63,17 @@ export function MapPane(props: MapPaneProps) {
   const cards = useCards(stage, view, show.layer, props.lower !== null)
   const hint = props.placing ? MAP_WORDS.placing : input.nudging ? MAP_WORDS.movingByKeys : MAP_WORDS.pointHint
   const empty = props.groundSerial === null
+  const helpId = useId()
+  const label = props.pane && show.option ? `${MAP_WORDS.mapOf} ${optionWords(show.option, tilts)}` : MAP_WORDS.map
 
   return (
-    <section className={`map-pane${props.placing ? ' placing' : ''}${props.lower ? ' with-lower' : ''}`} aria-label={MAP_WORDS.map}>
+    <section className={`map-pane${props.placing ? ' placing' : ''}${props.lower ? ' with-lower' : ''}`} aria-label={label}>
       <div
         ref={stage}
         className="stage"
         role="application"
-        aria-label={MAP_WORDS.map}
-        aria-describedby="map-help"
+        aria-label={label}
+        aria-describedby={helpId}
         // biome-ignore lint/a11y/noNoninteractiveTabindex: the map is worked by keys, as its role says
         tabIndex={0}
         {...input.handlers}
@@ -90,12 +97,23 @@ export function MapPane(props: MapPaneProps) {
         />
         <span className="cross" aria-hidden />
       </div>
-      <span id="map-help" className="visually-hidden">
+      <span id={helpId} className="visually-hidden">
         {MAP_WORDS.help}
       </span>
       <div className="map-head">
         <div className="map-words">
-          <Sentence show={show} candidates={candidates} needs={props.needs} trial={trial} onShow={props.onShow} onSelect={props.onSelect} />
+          {props.pane && show.option ? (
+            <p className="map-card sentence">{optionWords(show.option, tilts)}</p>
+          ) : (
+            <Sentence
+              show={show}
+              candidates={candidates}
+              needs={props.needs}
+              trial={trial}
+              onShow={props.onShow}
+              onSelect={props.onSelect}
+            />
+          )}
           {props.progress ? <Progress progress={props.progress} onStop={props.onStop} /> : null}
           {trouble ? (
             <p className="map-card trouble" role="alert">
@@ -106,25 +124,46 @@ export function MapPane(props: MapPaneProps) {
             </p>
           ) : null}
         </div>
-        <Tools
-          onZoom={(factor) => camera.set(zoomed(camera.get(), factor, view.width / 2, view.height / 2))}
-          onFit={showWhole}
-          fits={fits}
-          base={base}
-          gl={gl}
-          onBase={setBase}
-        />
+        {props.pane ? null : (
+          <Tools
+            onZoom={(factor) => camera.set(zoomed(camera.get(), factor, view.width / 2, view.height / 2))}
+            onFit={showWhole}
+            fits={fits}
+            base={base}
+            gl={gl}
+            onBase={setBase}
+          />
+        )}
       </div>
       {empty && props.empty ? <div className="map-empty">{props.empty}</div> : null}
       <div className="map-foot">
-        {empty ? (
+        {empty || props.pane ? (
           <span />
         ) : (
-          <Legend layer={show.layer} units={units} night={night} marks={props.marks} losses={props.losses} roads={props.roadLines} />
+          <Legend
+            layer={show.layer}
+            units={units}
+            night={night}
+            marks={props.marks}
+            losses={props.losses}
+            roads={props.roadLines}
+            difference={other && show.option ? [optionWords(show.option, tilts), optionWords(other, tilts)] : null}
+          />
         )}
         <div className="map-corner">
           {empty ? null : <ScaleBar view={view} units={units} />}
-          {empty ? null : <ReadOut client={props.client} hub={hub} site={site} units={units} hint={hint} />}
+          {empty ? null : (
+            <ReadOut
+              client={props.client}
+              hub={hub}
+              site={site}
+              units={units}
+              hint={hint}
+              option={show.option}
+              against={other}
+              pane={props.pane}
+            />
+          )}
         </div>
       </div>
       {props.lower ? <LowerChart onClose={props.onLowerClose}>{props.lower}</LowerChart> : null}
@@ -164,12 +203,13 @@ function useFirstFit(
   showWhole: (to: FitTo) => void,
 ) {
   const fittedFor = useRef<string | null>(null)
-  const latest = useRef({ to, showWhole, serial: props.groundSerial })
-  latest.current = { to, showWhole, serial: props.groundSerial }
+  const latest = useRef({ to, showWhole, serial: props.groundSerial, pane: props.pane })
+  latest.current = { to, showWhole, serial: props.groundSerial, pane: props.pane }
   const once = useCallback(() => {
-    const { to, showWhole, serial } = latest.current
+    // the second of two maps follows the first
+    const { to, showWhole, serial, pane } = latest.current
     const key = `${serial}`
-    if (serial === null || fittedFor.current === key || camera.get().width < 1) return
+    if (serial === null || fittedFor.current === key || camera.get().width < 1 || pane) return
     fittedFor.current = key
     showWhole(to)
   }, [camera])

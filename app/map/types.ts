@@ -1,7 +1,21 @@
 import type { ReactNode } from 'react'
-import type { Answer, HorizonLine, HorizonRow, LayerId, LonLat, LossCause, ModelMark, Obstacle, OptionRef, Road, RoadLines } from '../../core/index.ts'
-import type { StudyClient } from '../compute/client.ts'
+import type {
+  Answer,
+  HorizonLine,
+  HorizonRow,
+  LayerId,
+  LonLat,
+  LossCause,
+  ModelMark,
+  Obstacle,
+  OptionRef,
+  PaneId,
+  Road,
+  RoadLines,
+  View,
+} from '../../core/index.ts'
 import type { Drawing } from '../charts/index.ts'
+import type { StudyClient } from '../compute/client.ts'
 import type { UnitSystem } from '../words/index.ts'
 
 /** A candidate as the map draws it. */
@@ -29,6 +43,9 @@ export interface MapShow {
   readonly layer: LayerId
   /** Id of the need the layer is about, where it is about one. */
   readonly need: string | null
+  /** A second option the layer is shown against; null or absent: none. */
+  readonly against?: OptionRef | null
+  readonly beside?: 'difference' | 'maps'
 }
 export interface RunProgress {
   readonly doing: string
@@ -114,6 +131,15 @@ export interface MapPaneProps {
   readonly onLowerClose: () => void
   /** What to show where there is no ground yet: a reason and the next action. */
   readonly empty?: ReactNode
+  /** Set for the second of two maps side by side: it has no tools and asks beside the first. */
+  readonly pane?: PaneId
+  /** Two maps with the same link show the same middle and scale. */
+  readonly link?: Channel<LinkedView | null>
+}
+/** A view on its way from one of two maps to the other. */
+export interface LinkedView {
+  readonly from: PaneId | undefined
+  readonly view: View
 }
 
 export interface RulerProps {

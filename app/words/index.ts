@@ -1,6 +1,6 @@
 export * from './cautions.ts'
 export * from './confirmed.ts'
-export * from './charts.ts'
+export * from './difference.ts'
 export * from './figureWords.ts'
 export * from './format.ts'
 export * from './formatStated.ts'

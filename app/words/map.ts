@@ -19,6 +19,7 @@ import { toFace, type UnitSystem, unitOf } from './units.ts'
 /** Words of map, ruler and horizon strip. */
 export const MAP_WORDS = {
   map: 'Site map',
+  mapOf: 'Map beside it:',
   help: 'Arrow keys move the map, plus and minus zoom, Home fits the ground, Enter takes the place under the cross',
   sentence: { show: 'Show', as: 'as', for: 'for', at: 'at', tilted: 'tilted', against: 'against', trial: 'on trial' },
   choose: { family: 'Question', layer: 'Quantity', candidate: 'Candidate', height: 'Mast height', tilt: 'Tilt', need: 'Need' },

@@ -1,5 +1,18 @@
-import { type LayerId, LOSS_CAUSES, layerInfo, lossCode, rampHex } from '../../../core/index.ts'
-import { formatLossPct, LAYER_WORDS, LOSS_WORDS, legendMarks, legendStops, MAP_WORDS, textOf, type UnitSystem } from '../../words/index.ts'
+import { differenceInfo, type LayerId, LOSS_CAUSES, layerInfo, lossCode, type Ramp, rampHex } from '../../../core/index.ts'
+import {
+  DIFFERENCE_WORDS,
+  differenceEnds,
+  differenceStops,
+  differenceTitle,
+  formatLossPct,
+  LAYER_WORDS,
+  LOSS_WORDS,
+  legendMarks,
+  legendStops,
+  MAP_WORDS,
+  textOf,
+  type UnitSystem,
+} from '../../words/index.ts'
 import type { MapPaneProps } from '../types.ts'
 
 const WIDTH = 232
@@ -14,9 +27,42 @@ export interface LegendProps {
   readonly losses: MapPaneProps['losses']
   /** Lines of roads on show, seen and hidden; null or absent where there are none. */
   readonly roads?: MapPaneProps['roadLines']
+  /** The two options of a difference, in words; null: the layer itself. */
+  readonly difference?: readonly [string, string] | null
 }
 /** Title, ramp with labelled stops or a colour per class, what bare and hatched mean, and marks in words. */
-export function Legend({ layer, units, night, marks, losses, roads }: LegendProps) {
+export function Legend(props: LegendProps) {
+  return props.difference ? <DifferenceLegend {...props} of={props.difference} /> : <LayerLegend {...props} />
+}
+
+function DifferenceLegend({ layer, units, night, marks, of: [a, b] }: LegendProps & { of: readonly [string, string] }) {
+  const { unit, labels } = differenceStops(layer, units)
+  const { warned } = legendMarks(layer, marks)
+  const title = differenceTitle(layer, a, b)
+  const ramp = differenceInfo(layer)?.ramp
+  return (
+    <section className="map-card legend" aria-label={`Legend: ${title}`}>
+      <h3>
+        {title} <span className="ink-3">{unit}</span>
+      </h3>
+      {ramp ? <Scale ramp={ramp} labels={labels} ends={differenceEnds(layer, shortOf(a, b))} night={night} /> : null}
+      <p className="note">{DIFFERENCE_WORDS.note}</p>
+      {warned.map((m) => (
+        <p key={m} className="mark">
+          {m}
+        </p>
+      ))}
+    </section>
+  )
+}
+
+/** `A` where the other is of another candidate, else `A at 20 m`. */
+const shortOf = (a: string, b: string): string => {
+  const [id = a] = a.split(' ')
+  return b.startsWith(`${id} `) ? a : id
+}
+
+function LayerLegend({ layer, units, night, marks, losses, roads }: LegendProps) {
   const words = LAYER_WORDS[layer]
   const { unit } = legendStops(layer, layerInfo(layer).ramp.stops, units)
   const { note, warned } = legendMarks(layer, marks)
@@ -85,7 +131,20 @@ function Key({ layer, units, night, losses }: Omit<LegendProps, 'marks' | 'roads
       </ul>
     )
   const { labels } = legendStops(layer, ramp.stops, units)
-  const ends = LAYER_WORDS[layer].ends
+  return <Scale ramp={ramp} labels={labels} ends={LAYER_WORDS[layer].ends} night={night} />
+}
+
+function Scale({
+  ramp,
+  labels,
+  ends,
+  night,
+}: {
+  ramp: Ramp
+  labels: readonly { readonly at: number; readonly text: string }[]
+  ends: readonly [string, string] | null
+  night: boolean
+}) {
   const colours = Array.from({ length: 33 }, (_, n) => rampHex(ramp, ramp.low + ((ramp.high - ramp.low) * n) / 32, night))
   const kept: { at: number; text: string }[] = []
   for (const l of labels) if (kept.length === 0 || (l.at - kept[kept.length - 1]!.at) * WIDTH >= APART) kept.push(l)

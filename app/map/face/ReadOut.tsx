@@ -1,7 +1,17 @@
 import { useEffect, useRef } from 'react'
-import { geodesicInverse, type LonLat, type Probe } from '../../../core/index.ts'
+import { geodesicInverse, type LonLat, type OptionRef, type PaneId, type Probe } from '../../../core/index.ts'
 import type { StudyClient } from '../../compute/client.ts'
-import { formatHeight, formatPosition, MAP_WORDS, placeLine, textOf, type UnitSystem, valueLine } from '../../words/index.ts'
+import {
+  againstWords,
+  formatHeight,
+  formatPosition,
+  MAP_WORDS,
+  optionWords,
+  placeLine,
+  textOf,
+  type UnitSystem,
+  valueLine,
+} from '../../words/index.ts'
 import type { MapHub, PointerPlace } from '../types.ts'
 
 /** Pointer read-out. Written to the page by the pointer itself, never by render. */
@@ -11,12 +21,19 @@ export function ReadOut({
   site,
   units,
   hint,
+  option,
+  against,
+  pane,
 }: {
   client: StudyClient
   hub: MapHub
   site: LonLat | null
   units: UnitSystem
   hint: string
+  /** The option read, where it is not simply the one on show; and one to read beside it. */
+  option?: OptionRef | null
+  against?: OptionRef | null
+  pane?: PaneId
 }) {
   const place = useRef<HTMLSpanElement>(null)
   const value = useRef<HTMLSpanElement>(null)
@@ -38,7 +55,7 @@ export function ReadOut({
         placeLine(probe.azimuthDeg, probe.rangeM, probe.groundM, units),
         line.name,
         line.value.value === '' ? '' : textOf(line.value),
-        line.word,
+        [line.word, against ? againstWords(probe, optionWords(against, false), units) : ''].filter(Boolean).join(' · '),
       )
       if (at !== latest) ask()
     }
@@ -47,7 +64,7 @@ export function ReadOut({
       if (asking || !at) return
       asking = true
       client
-        .ask('probe', { at })
+        .ask('probe', { at, ...(pane && option ? { option, pane } : {}), ...(against ? { difference: against } : {}) })
         .then((probe) => {
           asking = false
           reply(probe, at)
@@ -98,7 +115,7 @@ export function ReadOut({
       gone = true
       for (const end of stops) end()
     }
-  }, [client, hub, site, units, hint])
+  }, [client, hub, site, units, hint, option, against, pane])
   return (
     <div className="map-card readout">
       <span ref={place} className="place" />

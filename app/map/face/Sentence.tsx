@@ -1,52 +1,8 @@
-import { Button, Menu, MenuItem, MenuTrigger, Popover } from 'react-aria-components'
 import { LAYER_IDS, type LayerId, type LayerInfo, layerInfo, NEED_LAYERS } from '../../../core/index.ts'
 import { FAMILY_WORDS, formatAngle, formatMast, LAYER_WORDS, MAP_WORDS, textOf } from '../../words/index.ts'
 import type { MapCandidate, MapNeed, MapShow, Trial } from '../types.ts'
-
-interface Choice {
-  readonly id: string
-  readonly words: string
-  readonly hint?: string
-}
-/** One underlined word of the sentence: a choice. */
-function Word({
-  label,
-  word,
-  value,
-  choices,
-  onChoose,
-}: {
-  label: string
-  word: string
-  value: string
-  choices: readonly Choice[]
-  onChoose: (id: string) => void
-}) {
-  return (
-    <MenuTrigger>
-      <Button className="word" aria-label={`${label}: ${word}`}>
-        {word}
-      </Button>
-      <Popover className="popover" placement="bottom start" offset={4}>
-        <Menu
-          className="options"
-          aria-label={label}
-          selectionMode="single"
-          disallowEmptySelection
-          selectedKeys={[value]}
-          onAction={(key) => onChoose(String(key))}
-        >
-          {choices.map((c) => (
-            <MenuItem key={c.id} id={c.id} textValue={c.words} className="option">
-              {c.words}
-              {c.hint ? <span className="hint">{c.hint}</span> : null}
-            </MenuItem>
-          ))}
-        </Menu>
-      </Popover>
-    </MenuTrigger>
-  )
-}
+import { AgainstWords } from './AgainstWords.tsx'
+import { Word } from './Word.tsx'
 
 const FAMILIES: readonly LayerInfo['family'][] = ['hidden', 'seen', 'echo', 'lost', 'takes']
 const layersOf = (family: LayerInfo['family']): LayerId[] => LAYER_IDS.filter((id) => layerInfo(id).family === family)
@@ -139,6 +95,7 @@ export function Sentence({ show, candidates, needs, trial, onShow, onSelect }: S
               />
             </>
           ) : null}
+          <AgainstWords show={show} candidates={candidates} onShow={onShow} />
           {trial && trial.candidate === candidate.id ? <span className="mark"> {s.trial}</span> : null}
         </>
       ) : (

@@ -1,5 +1,6 @@
 import { type RefObject, useEffect, useRef, useState } from 'react'
 import type { View } from '../../../core/index.ts'
+import { differenceOn } from '../difference.ts'
 import { driveTrial } from '../input/trialDriver.ts'
 import type { Channel, MapPaneProps } from '../types.ts'
 import { BitmapSheet, type Picture } from './bitmapSheet.ts'
@@ -12,7 +13,7 @@ const FULL = { px: 1_500_000, marginPx: 96 }
 const MOVING = { px: 700_000, marginPx: 0 }
 const calm = (): boolean => window.matchMedia('(prefers-reduced-motion: reduce)').matches
 
-type Inputs = Pick<MapPaneProps, 'client' | 'hub' | 'groundSerial' | 'show' | 'night'>
+type Inputs = Pick<MapPaneProps, 'client' | 'hub' | 'groundSerial' | 'show' | 'night' | 'pane'>
 
 /** Base and overlay under the marks: made once, told of every view and every change of content. */
 export function useSheets(
@@ -21,7 +22,7 @@ export function useSheets(
   inputs: Inputs,
   onError: (error: unknown) => void,
 ) {
-  const { client, hub, groundSerial, show, night } = inputs
+  const { client, hub, groundSerial, show, night, pane } = inputs
   const latest = useRef(inputs)
   latest.current = inputs
   const overlay = useRef<BitmapSheet | null>(null)
@@ -39,7 +40,7 @@ export function useSheets(
     let gone = false
     const paint: GroundPainter = async (view) => {
       if (latest.current.groundSerial === null) return null
-      return (await client.ask('base', { view })) as Picture | null
+      return (await client.ask('base', { view, ...(pane ? { pane } : {}) })) as Picture | null
     }
     const start = (made: MapSurface) => {
       if (gone) return made.remove()
@@ -65,7 +66,7 @@ export function useSheets(
       surface.current?.remove()
       surface.current = null
     }
-  }, [client, camera, base, host, onError])
+  }, [client, camera, base, host, onError, pane])
 
   useEffect(() => {
     const sheet = new BitmapSheet('overlay', {
@@ -75,7 +76,9 @@ export function useSheets(
         if (serial === null || (!now.option && !trial)) return null
         const answered = trial && hub.trialAnswer.get() ? 'preview' : now.option
         if (!answered) return null
-        return (await client.ask('paint', { view, layer: now.layer, option: answered })) as Picture | null
+        const other = answered === 'preview' ? null : differenceOn(now)
+        const how = { ...(other ? { difference: other } : {}), ...(pane ? { pane } : {}) }
+        return (await client.ask('paint', { view, layer: now.layer, option: answered, ...how })) as Picture | null
       },
       budget: () => (hub.trial.get()?.resting === false ? MOVING : FULL),
       pixelRatio: () => (hub.trial.get()?.resting === false ? 1 : window.devicePixelRatio),
@@ -97,7 +100,7 @@ export function useSheets(
       sheet.remove()
       overlay.current = null
     }
-  }, [client, hub, camera, host, onError])
+  }, [client, hub, camera, host, onError, pane])
 
   // biome-ignore lint/correctness/useExhaustiveDependencies: a new ground is what this waits for
   useEffect(() => {
@@ -106,10 +109,11 @@ export function useSheets(
   }, [groundSerial])
 
   const { option, layer, need } = show
+  const other = differenceOn(show)
   // biome-ignore lint/correctness/useExhaustiveDependencies: what is shown is read through `latest`
   useEffect(() => {
     overlay.current?.refresh(kinOf(latest.current.show), true)
-  }, [option?.candidate, option?.heightM, option?.tiltDeg, layer, need])
+  }, [option?.candidate, option?.heightM, option?.tiltDeg, layer, need, other?.candidate, other?.heightM, other?.tiltDeg])
 
   useEffect(() => {
     const view = camera.get()
@@ -119,4 +123,5 @@ export function useSheets(
   return { base, setBase, gl }
 }
 
-const kinOf = (show: MapPaneProps['show']): string => `${show.option?.candidate ?? ''}|${show.layer}|${show.need ?? ''}`
+const kinOf = (show: MapPaneProps['show']): string =>
+  `${show.option?.candidate ?? ''}|${show.layer}|${show.need ?? ''}|${differenceOn(show)?.candidate ?? ''}`

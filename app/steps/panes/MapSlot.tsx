@@ -1,7 +1,17 @@
-import { lazy, Suspense, useMemo } from 'react'
-import type { LonLat } from '../../../core/index.ts'
-import { addCandidate, hasStartingRadar, moveCandidate, optionKey, setMastHeights, settleOption } from '../../document/index.ts'
-import type { MapCandidate, MapHub, MapNeed } from '../../map/index.ts'
+import { lazy, Suspense, useMemo, useState } from 'react'
+import { differenceInfo, type LonLat, type OptionRef } from '../../../core/index.ts'
+import {
+  addCandidate,
+  hasStartingRadar,
+  moveCandidate,
+  optionKey,
+  sameOption,
+  setMastHeights,
+  settleOption,
+  studyOptions,
+} from '../../document/index.ts'
+import { createChannel, createMapHub } from '../../map/hub.ts'
+import type { LinkedView, MapCandidate, MapHub, MapNeed, MapShow } from '../../map/index.ts'
 import { EMPTY_WORDS } from '../../words/index.ts'
 import { useDoc, useGround, useResults, useSession, useView } from '../session/index.ts'
 import { cellUnder, settledOf } from '../settled.ts'
@@ -12,6 +22,8 @@ const MapPane = lazy(() => import('../../map/index.ts').then((m) => ({ default: 
 const Ruler = lazy(() => import('../../map/index.ts').then((m) => ({ default: m.Ruler })))
 
 const NO_CORNERS: readonly LonLat[] = []
+/** Under this width the form lies over the map, px. */
+const NARROW_PX = 1200
 const NO_MARKS: never[] = []
 
 /** Candidates as the map draws them. */
@@ -20,14 +32,16 @@ function useMapCandidates(): readonly MapCandidate[] {
   const ownTiltDeg = useDoc((d) => d.radar.antenna.tiltDeg ?? 0)
   return useMemo(
     () =>
-      candidates.map((c) => ({
-        id: c.id,
-        name: c.name ?? c.id,
-        lon: c.lon,
-        lat: c.lat,
-        mastHeightsM: c.mastHeightsM,
-        tiltsDeg: c.tiltsDeg && c.tiltsDeg.length > 0 ? c.tiltsDeg : [ownTiltDeg],
-      })),
+      candidates
+        .filter((c) => c.rejected === undefined)
+        .map((c) => ({
+          id: c.id,
+          name: c.name ?? c.id,
+          lon: c.lon,
+          lat: c.lat,
+          mastHeightsM: c.mastHeightsM,
+          tiltsDeg: c.tiltsDeg && c.tiltsDeg.length > 0 ? c.tiltsDeg : [ownTiltDeg],
+        })),
     [candidates, ownTiltDeg],
   )
 }
@@ -54,7 +68,7 @@ export function MapSlot({ hub }: { hub: MapHub }) {
   const session = useSession()
   const { study, view, client } = session
   const set = view.getState().set
-  const { step, option, layer, need, units, theme, placing, cell, chart, profileAzimuthDeg } = useView((v) => v)
+  const { step, option, layer, need, beside, units, theme, placing, cell, chart, profileAzimuthDeg } = useView((v) => v)
   const ground = useGround((g) => g.ground)
   const obstacles = useGround((g) => g.obstacles)
   const roads = useGround((g) => g.roads)
@@ -78,42 +92,52 @@ export function MapSlot({ hub }: { hub: MapHub }) {
     if (c)
       set({ option: settleOption(doc, { candidate: id, heightM: option?.heightM ?? c.mastHeightsM[0], tiltDeg: option?.tiltDeg ?? 0 }) })
   }
-  return (
+  const against = useAgainst()
+  const twin = against !== null && (beside === 'maps' || differenceInfo(layer) === null)
+  const [link] = useState(() => createChannel<LinkedView | null>(null))
+  const [secondHub] = useState(createMapHub)
+  const shared = {
+    client,
+    groundSerial: ground?.serial ?? null,
+    corners: ground?.corners ?? NO_CORNERS,
+    candidates,
+    needs,
+    obstacles,
+    roads,
+    maxRangeM,
+    // two maps need the room of the form where it lies over the map
+    onShow: (part: Partial<MapShow>) => set(part.beside === 'maps' && window.innerWidth < NARROW_PX ? { ...part, formOpen: false } : part),
+    units,
+    night: theme === 'night',
+    marks: shownMarks,
+    losses,
+    onSelect: select,
+    onMove: (id: string, at: LonLat) => moveCandidate(study, id, at),
+    onPlacingEnd: () => set({ placing: false }),
+    onLowerClose: () => set({ chart: null, cell: null }),
+    progress: null,
+    onStop: session.stop,
+  }
+  const first = (
     <Suspense fallback={null}>
       <MapPane
-        client={client}
+        {...shared}
         hub={hub}
-        groundSerial={ground?.serial ?? null}
-        corners={ground?.corners ?? NO_CORNERS}
-        candidates={candidates}
-        needs={needs}
-        obstacles={obstacles}
-        roads={roads}
         roadLines={roadLines}
-        maxRangeM={maxRangeM}
-        show={{ option, layer, need }}
-        onShow={set}
-        units={units}
-        night={theme === 'night'}
-        marks={shownMarks}
-        losses={losses}
+        link={link}
+        show={{ option, layer, need, against, beside: twin ? 'maps' : 'difference' }}
         placing={placing}
         onPlace={(at) => {
           const id = addCandidate(study, at)
           set({ placing: false })
           select(id)
         }}
-        onPlacingEnd={() => set({ placing: false })}
-        onSelect={select}
-        onMove={(id, at) => moveCandidate(study, id, at)}
         onCell={(at) => set({ cell: option ? cellUnder(study.getState().doc, option.candidate, at) : at, chart: 'ledger' })}
         cell={chart === 'ledger' ? cell : null}
         onProfile={(azimuthDeg) =>
           set({ chart: chart === 'vertical' ? 'vertical' : 'profile', profileAzimuthDeg: Math.round(10 * azimuthDeg) / 10 })
         }
         profileAzimuthDeg={chart === 'profile' || chart === 'vertical' ? (profileAzimuthDeg ?? 0) : null}
-        progress={null}
-        onStop={session.stop}
         lower={
           chart && option && !sheet ? (
             <Suspense fallback={null}>
@@ -121,11 +145,44 @@ export function MapSlot({ hub }: { hub: MapHub }) {
             </Suspense>
           ) : null
         }
-        onLowerClose={() => set({ chart: null, cell: null })}
         empty={<NoGround />}
       />
     </Suspense>
   )
+  return (
+    <div className={twin ? 'maps twin' : 'maps'}>
+      {first}
+      {twin ? (
+        <Suspense fallback={null}>
+          <MapPane
+            {...shared}
+            hub={secondHub}
+            link={link}
+            pane="second"
+            show={{ option: against, layer, need }}
+            roadLines={null}
+            placing={false}
+            onPlace={() => {}}
+            onCell={(at) =>
+              set({ option: against, against: option, cell: cellUnder(study.getState().doc, against.candidate, at), chart: 'ledger' })
+            }
+            cell={null}
+            onProfile={() => {}}
+            profileAzimuthDeg={null}
+            lower={null}
+          />
+        </Suspense>
+      ) : null}
+    </div>
+  )
+}
+
+/** The second option of the map, while the study has it and it is not the one on show. */
+function useAgainst(): OptionRef | null {
+  const wished = useView((v) => v.against)
+  const option = useView((v) => v.option)
+  const there = useDoc((d) => wished !== null && studyOptions(d).some((o) => sameOption(o, wished)))
+  return wished && option && there && !sameOption(wished, option) ? wished : null
 }
 
 function NoGround() {
