@@ -21,6 +21,19 @@ export const CHART_WORDS = {
   keys: 'Arrow keys move the reading, Shift by ten, plus and minus zoom, 0 shows the whole',
   height: 'Height',
   aboveGround: 'above ground',
+  cnrTitle: 'C/N of known ground, dB, one pulse, short-range sensitivity not taken off',
+  octant: 'Octant, ± 22.5°',
+  mean: 'mean',
+  known: 'known ground',
+  noClutter: 'No clutter is modelled over known ground',
+  suppressionTitle: 'Needed: dot 50\u202f%, bar 90\u202f%, heavy 99\u202f% of places · upright and filled: available',
+  suppressionAxis: 'dB',
+  needed: 'needed',
+  available: 'available',
+  shortOver: 'short over',
+  noPlaces: 'no place in sight with enough signal',
+  noAreaNeed: 'No need of an area is stated',
+  enoughEverywhere: 'Suppression is enough over every place of every need',
   withCover: 'with cover',
   bareGround: 'bare ground',
   measured: 'measured',
@@ -54,3 +67,15 @@ export const CHART_WORDS = {
   signal: 'S/N',
   margin: 'margin',
 } as const
+
+/** A kind of clutter as a row of a chart names it. */
+export const clutterKindWords = (about: string): string =>
+  about === 'every'
+    ? 'every kind of clutter'
+    : about === 'folded'
+      ? 'an earlier pulse'
+      : about === 'discrete'
+        ? 'single obstacles'
+        : about === 'water'
+          ? 'sea and water'
+          : about

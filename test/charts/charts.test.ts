@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import * as c from '../../app/charts/index.ts'
-import { coverageOf } from '../../core/index.ts'
+import { type ClutterLevel, type ClutterLevels, coverageOf } from '../../core/index.ts'
 import { sampleProfile, sampleResults, sampleRows } from '../memo/sample.ts'
 
 const size = 12
@@ -26,11 +26,34 @@ const collisions = (d: c.Drawing): string[] => {
 const outside = (d: c.Drawing): string[] =>
   textBoxes(d).flatMap((b) => (b.left < -1 || b.right > d.width + 1 || b.top < -1 || b.bottom > d.height + 1 ? [b.text] : []))
 
+/** Three rings of 10 km and the octants, falling outward and round from north. */
+function levelsOf(): ClutterLevels {
+  const level = (meanDb: number | null): ClutterLevel => ({
+    knownKm2: 100,
+    over40Pct: 10,
+    meanDb,
+    p90Db: meanDb === null ? null : meanDb - 3,
+    p99Db: meanDb === null ? null : meanDb + 8,
+  })
+  return {
+    whole: level(41),
+    rings: [52, 31, null].map((db, n) => ({ fromM: n * 10_000, toM: (n + 1) * 10_000, ...level(db) })),
+    octants: Array.from({ length: 8 }, (_, n) => ({ azimuthDeg: 45 * n, ...level(44.2 - 2 * n) })),
+    sectors: Array.from({ length: 24 }, () => level(30)),
+    peak: null,
+  }
+}
+
 const drawings: readonly (readonly [string, () => c.Drawing])[] = [
   ['horizon-strip', () => horizon('strip').drawing],
   ['horizon-chart', () => horizon('chart').drawing],
   ['terrain', () => c.terrainChart({ profile: sampleProfile(), width: 640, height: 260, system: 'metric', size }).drawing],
   ['rings', () => c.ringChart({ rings: sampleResults[1].figures.rings, width: 480, height: 280, system: 'nautical', size })],
+  ['levels', () => c.levelsChart({ levels: levelsOf(), width: 520, height: 240, system: 'metric', size }).drawing],
+  [
+    'suppression',
+    () => c.suppressionChart({ figures: sampleResults[1].figures, width: 520, height: 240, system: 'nautical', size }).drawing,
+  ],
   [
     'options',
     () =>
@@ -102,7 +125,7 @@ describe('terrain profile', () => {
 
 describe('options plot', () => {
   it('names every option', () => {
-    const d = drawings[4][1]()
+    const d = drawings[6][1]()
     const texts = d.items.flatMap((i) => (i.kind === 'text' ? [i.text.replaceAll('\u202f', ' ')] : []))
     for (const name of ['A 12 m', 'A 24 m', 'B 12 m', 'B 24 m', 'C 24 m']) expect(texts).toContain(name)
   })
@@ -179,5 +202,45 @@ describe('ladder', () => {
   it('reads between the rungs and nothing outside them', () => {
     expect(g.valuesAt(20)).toEqual({ inSightPct: 75, over40Km2: 40, usablePct: 60, shortKm2: 2.5 })
     expect(g.valuesAt(2)).toBeNull()
+  })
+})
+
+describe('clutter by ring and octant', () => {
+  it('says where it is strongest, levels rounded up', () => {
+    expect(c.levelsFinding(levelsOf(), 'metric')).toBe(
+      'Clutter is strongest from 0 to 10\u202fkm: mean C/N 52\u202fdB, 99\u202f% under 60\u202fdB; by octant toward N: 45\u202fdB',
+    )
+  })
+  it('has a part for each ring and octant that a pointer finds, and one table of all of them', () => {
+    const { parts, boxes } = c.levelsChart({ levels: levelsOf(), width: 520, height: 240, system: 'metric', size })
+    expect(parts.map((p) => p.rangeM)).toEqual([5_000, 15_000, 25_000, ...Array.from({ length: 8 }, () => null)])
+    expect(parts.slice(3).map((p) => p.azimuthDeg)).toEqual([0, 45, 90, 135, 180, 225, 270, 315])
+    expect(parts[2].right).toBeCloseTo(boxes[0].right, 6)
+    const table = c.levelsCsv(levelsOf()).trim().split('\n')
+    expect(table.length).toBe(1 + 1 + 3 + 8 + 24)
+    expect(table[2]).toBe('0,10000,,100.00,10.00,52.00,49.00,60.00')
+    expect(table[4]).toBe('20000,30000,,100.00,10.00,,,')
+  })
+})
+
+describe('suppression needed against available', () => {
+  const { figures } = sampleResults[1]
+  it('names the need that is short over the largest area, needed up and available down', () => {
+    const short = figures.needs.filter((n) => n.measure === 'area' && n.notAssessed === null && n.suppression.shortKm2 > 0)
+    expect(short.length).toBeGreaterThan(0)
+    const worst = short.reduce((w, n) => (n.suppression.shortKm2 > w.suppression.shortKm2 ? n : w))
+    expect(c.suppressionFinding(figures, 'metric')).toContain(`${worst.name}: needed `)
+    const none = { ...figures, needs: figures.needs.map((n) => ({ ...n, suppression: { ...n.suppression, shortKm2: 0 } })) }
+    expect(c.suppressionFinding(none, 'metric')).toBe('Suppression is enough over every place of every need')
+  })
+  it('one row for each need of an area and one for each kind of clutter; one in all where they share a value', () => {
+    const rows = c.suppressionChart({ figures, width: 520, height: 240, system: 'metric', size }).rows
+    const { needs, kinds } = c.suppressionRows(figures)
+    expect(rows.length).toBe(needs + kinds)
+    const shared = { ...figures, suppressionBy: { ...figures.suppressionBy, uniformDb: 32 } }
+    expect(c.suppressionRows(shared).kinds).toBe(1)
+    expect(c.suppressionChart({ figures: shared, width: 520, height: 240, system: 'metric', size }).rows.at(-1)?.words).toBe(
+      'every kind of clutter: available 32\u202fdB',
+    )
   })
 })

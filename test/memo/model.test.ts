@@ -80,9 +80,9 @@ describe('the memo', () => {
     expect(textOfTable(tableOf(model, 'option-A-24-1.5', 'option-nested'))).toContain('Ferry approach | 89 | 87 | 80 | 88 / 86 / 78 | 95')
     expect(textOfTable(tableOf(model, 'option-A-24-1.5', 'floors'))).toContain('20 NM | 1 700 (500)')
   })
-  it('gives each option a map with its legend, a horizon profile and rings, captioned with what they show', () => {
+  it('gives each option a map with its legend, a horizon profile, suppression, clutter by ring and octant and rings, captioned with what they show', () => {
     const figures = blocksOf(model, 'option-B-24-1.5').flatMap((b) => (b.kind === 'figure' ? [b] : []))
-    expect(figures.map((f) => f.id)).toEqual(['map', 'horizon', 'rings'])
+    expect(figures.map((f) => f.id)).toEqual(['map', 'horizon', 'suppression', 'levels', 'rings'])
     expect(figures[0].png).toMatch(/^data:image\/png;base64,/)
     const texts = figures[0].drawing.items.flatMap((i) => (i.kind === 'text' ? [i.text] : []))
     for (const word of ['Clutter-to-noise', '0', '70', 'N', 'A', 'B', 'C', 'land table from memory']) expect(texts).toContain(word)

@@ -1,5 +1,5 @@
 import type { NeedFigure, OptionResult } from '../../../core/index.ts'
-import { horizonChart, isAtLeast, ringChart, ringFinding, whyAtLeast } from '../../charts/index.ts'
+import { horizonChart, isAtLeast, ringChart, ringFinding, suppressionRows, whyAtLeast } from '../../charts/index.ts'
 import {
   CAUTIONS,
   cautionsFor,
@@ -70,7 +70,7 @@ export function optionBlocks(input: MemoInput, r: OptionResult, figure: () => nu
   if (r.figures.needs.length > 0) {
     blocks.push(lossTable(input, r), ...placeBlocks(input, r), suppressionTable(input, r))
     blocks.push({ kind: 'paragraph', role: 'small', text: availableWords(r) })
-    if (r.figures.needs.some((n) => n.measure === 'area' && n.notAssessed === null)) blocks.push(suppressionFigure(input, r, figure()))
+    if (suppressionRows(r.figures).needs > 0) blocks.push(suppressionFigure(input, r, figure()))
     blocks.push({ kind: 'caution', texts: suppressionCautions(input) })
   }
   const atBothK = clutterAtKTable(input, r)

@@ -4,7 +4,9 @@ import type { MapHub } from '../../map/index.ts'
 import { Notice } from '../../ui/index.ts'
 import { Explain } from '../compare/Explain.tsx'
 import { sentenceOf, useResults, useSession, useView } from '../session/index.ts'
+import { LevelsPane } from './charts/LevelsPane.tsx'
 import { ProfilePane } from './charts/ProfilePane.tsx'
+import { SuppressionPane } from './charts/SuppressionPane.tsx'
 import { VerticalPane } from './charts/VerticalPane.tsx'
 import { Ledger } from './Ledger.tsx'
 
@@ -14,6 +16,8 @@ export function LowerPanel({ hub }: { hub: MapHub }) {
   if (chart === 'figure') return <Explain />
   if (chart === 'ledger') return <LedgerPanel />
   if (chart === 'vertical') return <VerticalPane hub={hub} />
+  if (chart === 'rings') return <LevelsPane hub={hub} />
+  if (chart === 'suppression') return <SuppressionPane />
   return <ProfilePane hub={hub} />
 }
 

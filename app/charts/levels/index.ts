@@ -1,0 +1,3 @@
+export * from './levelsChart.ts'
+export * from './levelsCsv.ts'
+export * from './suppressionChart.ts'
