@@ -3,6 +3,7 @@ import {
   formatAngle,
   formatAreaDown,
   formatAreaUp,
+  formatBand,
   formatDbDown,
   formatDbUp,
   formatFloor,
@@ -226,6 +227,12 @@ const NEED: Readonly<Record<string, FigureWords>> = {
   },
   worst_signal_margin_db: dbMargin('Worst signal margin', 'at the worst place in sight'),
   tenth_signal_margin_db: dbMargin('Signal margin, 10 %', 'exceeded at nine tenths of the places in sight'),
+  exponential_difference_m: {
+    label: 'Difference to exponential atmosphere',
+    meaning: `Height of the ray in reference air that thins out with height over that of the study's k, at the fix, piece or ceiling where it is largest; from memory, ${UP}`,
+    layer: 'coverage-floor',
+    format: (v, system) => formatBand(v === null ? null : Math.abs(v), system),
+  },
   length_m: {
     label: 'Length of the track',
     meaning: `Ground distance along the track; ${DOWN}`,

@@ -39,9 +39,11 @@ type Maybe = number | null | undefined
 
 /** Coverage floor, m MSL; UP: to 100 ft from 1 000 ft (10 ft below that), or to 1 m. */
 export function formatFloor(m: Maybe, system: UnitSystem): Quantity {
-  const step = system === 'metric' ? 1 : (m ?? 0) >= 304.8 ? 100 : 10
-  return faced('height', m, system, step, 'up')
+  return faced('height', m, system, floorStep(m, system), 'up')
 }
+const floorStep = (m: Maybe, system: UnitSystem): number => (system === 'metric' ? 1 : (m ?? 0) >= 304.8 ? 100 : 10)
+/** Step in which a floor of this height is printed, m. */
+export const floorStepM = (m: number, system: UnitSystem): number => floorStep(m, system) * (system === 'metric' ? 1 : 0.3048)
 /** Ground or antenna height, m; nearest 1 ft or 1 m. Say MSL or above ground beside it. */
 export function formatHeight(m: Maybe, system: UnitSystem): Quantity {
   return faced('height', m, system, 1, 'nearest')

@@ -13,7 +13,7 @@ export const NOT_ASSESSED: readonly NotAssessed[] = [
     what: 'Lobing off other ground',
     so: 'rays come off water and low-relief open ground only; farmland, forest and built-up ground send none back up',
   },
-  { what: 'Ducting and other refraction', so: 'the k of the study and k = 1 only; no bent layers' },
+  { what: 'Ducting and other refraction', so: 'the k of the study, k = 1 for cover and k = 2.75 for clutter; no ducts, no layers' },
   { what: 'Spiky clutter', so: 'every decision is for the mean of the cell; the spread is not in the shares' },
   { what: 'Traffic on roads', so: 'roads seen are counted by length and speed; how many vehicles, and false tracks from them, are not' },
   { what: 'Reflections and false targets', so: 'no facade is traced' },

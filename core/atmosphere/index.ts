@@ -1,4 +1,5 @@
 export * from './earthFactorOfAir.ts'
+export * from './exponentialRay.ts'
 export * from './gasLoss.ts'
 export * from './pathLoss.ts'
 export * from './rainLoss.ts'

@@ -23,7 +23,9 @@ export function flatFigures(f: Omit<Figures, 'flat'>): Record<string, number | n
     clutter_to_noise_99_db: f.clutterLevels.whole.p99Db,
     second_time_around_km2: f.secondTimeAround.km2,
     second_time_around_evaluated_m: f.secondTimeAround.notEvaluatedBeyondM,
-    ...(f.measuredHorizon ? { measured_horizon_mean_deg: f.measuredHorizon.meanDeg, measured_horizon_rms_deg: f.measuredHorizon.rmsDeg } : {}),
+    ...(f.measuredHorizon
+      ? { measured_horizon_mean_deg: f.measuredHorizon.meanDeg, measured_horizon_rms_deg: f.measuredHorizon.rmsDeg }
+      : {}),
   }
   const floors = (list: readonly FloorFigure[], tail: string): void => {
     for (const floor of list) {
@@ -69,6 +71,7 @@ function flatNeed(n: NeedFigure): Record<string, number | null> {
     tenth_margin_m: n.tenthMarginM,
     worst_signal_margin_db: n.signal.worstDb,
     tenth_signal_margin_db: n.signal.tenthDb,
+    exponential_difference_m: n.exponential?.differenceM ?? null,
     ...Object.fromEntries(n.losses.map((l) => [`lost_${l.cause.replaceAll('-', '_')}_pct`, l.pct])),
   }
   if (n.measure !== 'area')

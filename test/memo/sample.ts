@@ -83,6 +83,7 @@ export function sampleRows(screen: number, stepDeg: number): HorizonRow[] {
 function physics(pct: number): Omit<NeedFigure, 'needId' | 'name' | 'must' | 'requiredPct' | 'inSightPct' | 'suppression' | 'notAssessed'> {
   const usablePct = Math.max(0, pct - 9)
   return {
+    exponential: null,
     measure: 'area',
     amount: 0,
     areaKm2: 0,

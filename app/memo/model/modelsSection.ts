@@ -18,6 +18,12 @@ const GEOMETRY: readonly ModelRow[] = [
     limits: 'one k for the whole path',
   },
   {
+    model: 'Ray in air that thins out with height',
+    source: 'Snell’s law in spherical layers; reference air after Recommendation ITU-R P.453',
+    basis: 'from memory',
+    limits: 'a difference beside k; decides nothing',
+  },
+  {
     model: 'Line of sight over crossings',
     source: 'Bilinear surface between posts, highest angle per segment',
     basis: 'computed',

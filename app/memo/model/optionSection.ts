@@ -24,6 +24,7 @@ import {
 import { bothUnits, capital, dual, dualBare, NO_HEADS, optionName, value } from './cells.ts'
 import { levelsFigure, suppressionFigure } from './chartFigures.ts'
 import { clutterAtKTable } from './clutterAtK.ts'
+import { exponentialWords } from './exponentialWords.ts'
 import { exposureCell } from './exposureSection.ts'
 import { mapDrawing } from './mapFigure.ts'
 import { measuredBlocks } from './measuredSection.ts'
@@ -65,6 +66,8 @@ export function optionBlocks(input: MemoInput, r: OptionResult, figure: () => nu
   } else blocks.push(figures)
   blocks.push({ kind: 'caution', texts: clutterCautions(input) })
   if (r.figures.needs.length > 0) blocks.push(marginTable(input, r))
+  const air = exponentialWords(input, r)
+  if (air) blocks.push({ kind: 'paragraph', role: 'small', text: air })
   blocks.push(horizonFigure(input, r, figure()))
   blocks.push({ kind: 'caution', texts: cautionsFor('horizon') }, ...measuredBlocks(input, r))
   if (r.figures.needs.length > 0) {

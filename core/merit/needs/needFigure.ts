@@ -6,6 +6,7 @@ import { type AreaHistogram, areaPercentile } from '../areaHistogram.ts'
 import type { OptionCells } from '../optionCells.ts'
 import { areaSums } from './areaSums.ts'
 import { conesOf } from './cone.ts'
+import { exponentialOf } from './exponential.ts'
 import { type NeedCells, needCells, scanNeed } from './needCells.ts'
 import { lossCode, type NeedFigure, type PlaceRef, type SuppressionFigure } from './needTypes.ts'
 import { lossesOf, outcome } from './outcome.ts'
@@ -27,9 +28,13 @@ export function needFigure(o: OptionCells, need: SettledNeed): NeedFigure {
   const places = placesOf(o, need)
   const base = emptyFigure(o, need)
   if (places === 'missing') return { ...base, notAssessed: `its file ${need.file ?? ''} is not read` }
-  if (places && need.kind === 'fixes') return fixesFigure(o, need, places, base)
-  if (places && need.kind === 'track') return trackFigure(o, need, places, base)
-  return areaFigure(o, need, base)
+  const figure =
+    places && need.kind === 'fixes'
+      ? fixesFigure(o, need, places, base)
+      : places && need.kind === 'track'
+        ? trackFigure(o, need, places, base)
+        : areaFigure(o, need, base)
+  return { ...figure, exponential: exponentialOf(o, need, figure) }
 }
 
 /** Sums over the cells of a layer or polygon need. */
@@ -143,6 +148,7 @@ function emptyFigure(o: OptionCells, need: SettledNeed): NeedFigure {
     },
     fixes: null,
     track: null,
+    exponential: null,
     notAssessed: null,
   }
 }

@@ -148,6 +148,13 @@ export interface TrackFigure {
   readonly lostAt: TrackPlace | null
 }
 
+/** Difference of a ray in the reference exponential air to one at the study's k, m (positive: it comes out higher), at a range and height, m MSL. */
+export interface ExponentialFigure {
+  readonly differenceM: number
+  readonly rangeM: number
+  readonly heightM: number
+}
+
 /** One need against one option. Percentages are of the need's area, fixes or length. */
 export interface NeedFigure extends NestedPct {
   readonly needId: string
@@ -186,6 +193,8 @@ export interface NeedFigure extends NestedPct {
   /** Worst first; null for other kinds of need. */
   readonly fixes: readonly FixFigure[] | null
   readonly track: TrackFigure | null
+  /** Where a constant k is most off; null where there is no such place. */
+  readonly exponential: ExponentialFigure | null
   /** Set when the need cannot be assessed; says why in a clause. */
   readonly notAssessed: string | null
 }

@@ -1,4 +1,4 @@
-import { twoWayLossParts } from '../../atmosphere/index.ts'
+import { exponentialDifferenceM, twoWayLossParts } from '../../atmosphere/index.ts'
 import { type PointClutter, percentileOverMeanDb, suppressionNeededDb } from '../../clutter/index.ts'
 import { weibullThresholdDb } from '../../detection/index.ts'
 import type { SuppressionBy } from '../../doppler/index.ts'
@@ -34,6 +34,7 @@ const TWO_RAY = [
   'Two rays off water or level open ground',
   'Kerr, Propagation of Short Radio Waves, 1951; ground constants and roughness from memory',
 ] as const
+const AIR = ['Ray in exponential air, N₀ 315, 7.35 km', 'Snell’s law, mathematics; reference air after ITU-R P.453, from memory'] as const
 const GAS = ['Gas loss', 'Recommendation ITU-R P.676-12'] as const
 const RAIN = ['Rain loss', 'Recommendation ITU-R P.838-3'] as const
 const RESIDUE = ['Suppression by kind of clutter', '1/I = 1/I_spectral + 1/I_stability + 1/I_quantisation'] as const
@@ -145,6 +146,11 @@ export function needLines(need: SettledNeed, p: NeedPlaceParts): { lines: Ledger
   const loss = signal.loss ? twoWayLossParts(signal.loss, p.antennaM, targetM, sight.rangeM, slantM) : { gasDb: 0, rainDb: 0 }
   const edgeDb = twoWayEdgeLossDb(marginM, sight.rangeM, sight.controlling.rangeM, wavelengthM(radar.frequencyHz))
   put(snr, 'info', 'target_elevation', 'elevation of the target', elevationDeg, 'deg', geometry)
+  const airM = Number.isFinite(p.radiusM)
+    ? exponentialDifferenceM(p.antennaM, targetM, sight.rangeM, p.radiusM / p.study.atmosphere.effectiveEarthFactor, p.radiusM)
+    : Number.NaN
+  if (Number.isFinite(airM))
+    put(snr, 'info', 'exponential', 'difference to exponential atmosphere, height of the ray', airM, 'm', AIR, 'from memory')
   put(snr, 'info', 'target_slant_range', 'slant range of the target', slantM, 'm', geometry)
   if (echo.segment.beams !== '') put(snr, 'info', 'beams', 'beams in use', echo.segment.beams, '', STATED)
   const pattern: Model = ['Elevation pattern', 'Gaussian beam, cosecant-squared or table']
