@@ -15,6 +15,7 @@ import { CAUTIONS, DEG, EMPTY_WORDS, formatHeight, formatPosition, METRES, textO
 import { useDoc, useGround, useSession, useView } from '../session/index.ts'
 import { settledOf } from '../settled.ts'
 import { Problems } from './Problems.tsx'
+import { SurveyField } from './SurveyField.tsx'
 import { useFilePicker } from './useFilePicker.tsx'
 
 /** Places where the radar could stand, with their mast heights. */
@@ -232,6 +233,7 @@ function Details({ candidate: c }: { candidate: CandidateDoc }) {
         limit={limit('clearingRadiusM')}
         onCommit={(v) => setCandidateField(study, c.id, 'clearingRadiusM', v)}
       />
+      <SurveyField candidate={c} />
       <CommitField
         label="Notes"
         text={c.notes ?? ''}
