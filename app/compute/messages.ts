@@ -25,10 +25,21 @@ export const RANK: Readonly<Record<keyof Ask, number>> = {
   map: 4,
   roads: 4,
   ladder: 6,
+  change: 6,
 }
 /** Work for the option on show goes between the asks and the ladder. */
 export const BACKGROUND_RANK = 5
 /** Of these only the newest counts: an older one still waiting is answered with null. */
-export const SUPERSEDING: ReadonlySet<keyof Ask> = new Set(['paint', 'base', 'preview', 'probe', 'vertical', 'horizons', 'roads', 'ladder'])
+export const SUPERSEDING: ReadonlySet<keyof Ask> = new Set([
+  'paint',
+  'base',
+  'preview',
+  'probe',
+  'vertical',
+  'horizons',
+  'roads',
+  'ladder',
+  'change',
+])
 /** A new ground or study makes these worthless. */
-export const STALE_AFTER_STUDY: ReadonlySet<keyof Ask> = new Set(['ladder', 'map', 'vertical', 'horizons', 'roads'])
+export const STALE_AFTER_STUDY: ReadonlySet<keyof Ask> = new Set(['ladder', 'change', 'map', 'vertical', 'horizons', 'roads'])

@@ -1,3 +1,4 @@
+export * from './change/index.ts'
 export { needFigures, optionFigures } from './figures.ts'
 export { floorFigures, RING_WIDTH_M } from './groundFigures.ts'
 export { hasHighK, highKFigure, withHighK } from './highK.ts'

@@ -5,6 +5,7 @@ import { polarShape, previewShape } from '../polar/index.ts'
 import { buildGround, groundAt } from '../terrain/index.ts'
 import { wavelengthM } from '../units/index.ts'
 import { share, type Work } from '../work/index.ts'
+import { changeOf } from './change.ts'
 import { paintOptionsDifference } from './difference.ts'
 import type { Engine } from './engine.ts'
 import { horizonLines } from './horizonLines.ts'
@@ -55,6 +56,7 @@ export class Answers {
     ledger: (body) => this.ledger(body),
     roads: (body) => this.roads(body),
     ladder: (body) => this.ladder(body),
+    change: (body) => changeOf(this.engine, body),
     groundAt: (body) => this.groundAt(body),
   }
 

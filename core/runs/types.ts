@@ -1,7 +1,7 @@
 import type { LandTable, ModelMark } from '../clutter/index.ts'
 import type { LonLat } from '../geodesy/index.ts'
 import type { GroundCode } from '../landcover/index.ts'
-import type { CutWindow, Figures, Ladder, NeedPlaces, RoadLines, VerticalCut } from '../merit/index.ts'
+import type { Change, CutWindow, Figures, Ladder, NeedPlaces, RoadLines, VerticalCut } from '../merit/index.ts'
 import type { Obstacle, Road } from '../obstacles/index.ts'
 import type { Ramp, View } from '../paint/index.ts'
 import type { GridShape } from '../raster/index.ts'
@@ -174,6 +174,8 @@ export interface Ask {
   /** Roads within range, those whose vehicles are seen apart from the others. */
   roads: { option: OptionRef }
   ladder: { candidate: string }
+  /** From one option to another, or to itself without some obstacles (by name): what changes. */
+  change: { before: OptionRef; after: OptionRef; without?: readonly string[] }
   groundAt: { at: readonly LonLat[] }
 }
 export interface Answer {
@@ -195,6 +197,7 @@ export interface Answer {
   /** null where the option's cells are not held. */
   roads: RoadLines | null
   ladder: Ladder
+  change: Change
   groundAt: readonly (number | null)[]
 }
 export type Tell =
