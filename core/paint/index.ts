@@ -1,3 +1,4 @@
+export { CLASS_PATTERNS, type ClassPattern, classMarkAt, classMarkColour, classMarkPixels, greyOf } from './classPatterns.ts'
 export { type DifferenceSide, paintDifference } from './difference.ts'
 export * from './hillshade.ts'
 export * from './map.ts'

@@ -1,6 +1,7 @@
 import { geodesicInverse, type LonLat } from '../geodesy/index.ts'
 import { CELL, type PolarShape } from '../polar/index.ts'
 import { RAD_PER_DEG } from '../units/index.ts'
+import { classMarkAt, classMarkColour } from './classPatterns.ts'
 import { controlGrid, tileSidePx } from './controlGrid.ts'
 import { PATTERN_PX, statePatterns } from './hatch.ts'
 import { groundPerPx } from './mercator.ts'
@@ -34,6 +35,8 @@ interface Brush extends Located {
   readonly bare: Uint32Array
   /** Per state × pattern place: offset into `colours`, 0 where no mark lies. */
   readonly marked: Uint16Array
+  /** Per class × pattern place: offset into `colours` of what lies under the class's own mark; null = plain colours. */
+  readonly classMarks: Uint16Array | null
 }
 
 /**
@@ -92,7 +95,8 @@ export function paintPolar(
         if (!locate(brush, ea + de / 2, na + dn / 2, de, dn, count, exactWithinM)) continue
         const at = py * view.width + x0
         const row = ((py + phaseY) & (PATTERN_PX - 1)) * PATTERN_PX
-        if (smooth) spanSmooth(brush, at, count, row, x0 + phaseX, smoothRanges, smoothFromM / grid.rangeStepM)
+        if (brush.classMarks) spanClasses(brush, brush.classMarks, at, count, row, x0 + phaseX)
+        else if (smooth) spanSmooth(brush, at, count, row, x0 + phaseX, smoothRanges, smoothFromM / grid.rangeStepM)
         else spanNearest(brush, at, count, row, x0 + phaseX)
       }
     }
@@ -118,7 +122,7 @@ function makeBrush(
   const alpha = Math.round(255 * Math.min(1, Math.max(0, how.opacity ?? 0.86)))
   const source = (view.night && ramp.rgbaNight) || ramp.rgba
   const states = 8
-  const colours = new Uint32Array(256 * (states + 1))
+  const colours = new Uint32Array(256 * (states + 2))
   for (let n = 0; n < 256; n++) colours[n] = ((source[n]! & 0xffffff) | (alpha << 24)) >>> 0
   const bare = new Uint32Array(states * PATTERN_PX * PATTERN_PX)
   const marked = new Uint16Array(bare.length)
@@ -135,11 +139,25 @@ function makeBrush(
       colours[256 * (st + 1) + n] = ((alpha << 24) | (mix((c >>> 16) & 255) << 16) | (mix((c >>> 8) & 255) << 8) | mix(c & 255)) >>> 0
     }
   }
+  const classMarks = how.patterns ? new Uint16Array((how.patterns.length + 1) * PATTERN_PX * PATTERN_PX) : null
+  if (classMarks && how.patterns) {
+    const under = 256 * (states + 1)
+    how.patterns.forEach((name, n) => {
+      for (let y = 0; y < PATTERN_PX; y++)
+        for (let x = 0; x < PATTERN_PX; x++) if (classMarkAt(name, x, y)) classMarks[((n + 1) * PATTERN_PX + y) * PATTERN_PX + x] = under
+    })
+    for (let n = 0; n < 256; n++) {
+      const c = source[n]!
+      const [r, g, b] = classMarkColour(c & 255, (c >>> 8) & 255, (c >>> 16) & 255)
+      colours[under + n] = ((alpha << 24) | (b << 16) | (g << 8) | r) >>> 0
+    }
+  }
   return {
     grid,
     values,
     state,
     out,
+    classMarks,
     low: ramp.low,
     scale: 255 / (ramp.high - ramp.low),
     holdBelow: ramp.below === 'hold',
@@ -226,6 +244,21 @@ function spanNearest(k: Brush, at: number, count: number, patternRow: number, pa
       const c = (v - low) * scale
       out[at] = colours[(c >= 255 ? 255 : c <= 0 ? 0 : c | 0) + marked[place]!]!
     } else out[at] = bare[place]!
+  }
+}
+
+/** As spanNearest for classes with patterns: a cell without a class shows its state. */
+function spanClasses(k: Brush, marks: Uint16Array, at: number, count: number, patternRow: number, patternX: number): void {
+  const { values, state, out, low, scale, colours, bare, rangeAt, azimuthAt } = k
+  const { ranges } = k.grid
+  for (let n = 0; n < count; n++, at++, patternX++) {
+    const r = rangeAt[n]!
+    if (r < 0) continue
+    const cell = (azimuthAt[n]! | 0) * ranges + (r | 0)
+    const v = values[cell]!
+    const place = patternRow | (patternX & 7)
+    if (v >= low) out[at] = colours[Math.min(255, ((v - low) * scale) | 0) + marks[((v | 0) << 6) | place]!]!
+    else out[at] = bare[((state[cell]! & 7) << 6) | place]!
   }
 }
 

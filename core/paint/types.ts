@@ -1,3 +1,5 @@
+import type { ClassPattern } from './classPatterns.ts'
+
 /** Fixed colours of one quantity. Values map to 256 colours between `low` and `high`. */
 export interface Ramp {
   /** Labelled stops, in the quantity's own unit. */
@@ -28,6 +30,8 @@ export interface PolarPaint {
   readonly hatchMasked?: boolean
   /** Interpolate values (never states) between valid cells where a cell is over 3 px; default false. For dB layers. */
   readonly smooth?: boolean
+  /** The values are classes, numbered from 1, and each has its pattern; absent: plain colours. Never smooth. */
+  readonly patterns?: readonly ClassPattern[]
 }
 /** Where the ground raster is water, when land cover says so. */
 export interface WaterCodes {

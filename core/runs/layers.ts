@@ -1,7 +1,7 @@
 import { decibel, fillCellStrength } from '../clutter/index.ts'
 import { heightToSeeCells } from '../masking/index.ts'
 import { cellsOfNeed, LOSS_CAUSES, type NeedCells, type OptionCells, PLACE, pdOf } from '../merit/index.ts'
-import { makeRamp, type Ramp } from '../paint/index.ts'
+import { type ClassPattern, makeRamp, type Ramp } from '../paint/index.ts'
 import { CELL } from '../polar/index.ts'
 import type { SettledNeed } from '../study/index.ts'
 import { DEG_PER_RAD } from '../units/index.ts'
@@ -53,6 +53,22 @@ const CAUSE_HEXES: Readonly<Record<(typeof LOSS_CAUSES)[number], string>> = {
   lobing: '#5f7a2e',
 }
 
+/** Beside the hues: two causes with the same pattern are far apart in grey. */
+const CAUSE_PATTERNS: Readonly<Record<(typeof LOSS_CAUSES)[number], ClassPattern>> = {
+  unknown: 'falling',
+  'out-of-range': 'grid',
+  masked: 'rising',
+  marginal: 'dots',
+  'short-range-sensitivity': 'level',
+  'above-beam': 'upright',
+  'below-beam': 'upright',
+  clutter: 'plain',
+  'blind-speed': 'checks',
+  'too-weak': 'cross',
+  several: 'falling',
+  lobing: 'rings',
+}
+
 /** Fixed ramps with round stops, so that two maps, two candidates and the memo compare by eye. */
 export const LAYERS: Readonly<Record<LayerId, LayerInfo>> = {
   masked: layer('masked', 'hidden', '', 'up', makeRamp('ink', [0, 1], 'bare'), true),
@@ -73,11 +89,14 @@ export const LAYERS: Readonly<Record<LayerId, LayerInfo>> = {
     false,
   ),
   'signal-margin': layer('signal-margin', 'seen', 'dB', 'down', makeRamp('cool', [-30, -20, -10, 0, 10, 20, 30], 'hold', true), false),
-  'cause-of-loss': classes(
-    'cause-of-loss',
-    'lost',
-    LOSS_CAUSES.map((c) => CAUSE_HEXES[c]),
-  ),
+  'cause-of-loss': {
+    ...classes(
+      'cause-of-loss',
+      'lost',
+      LOSS_CAUSES.map((c) => CAUSE_HEXES[c]),
+    ),
+    patterns: LOSS_CAUSES.map((c) => CAUSE_PATTERNS[c]),
+  },
 }
 /** Layers drawn for one need, of kind layer or polygon. */
 export const NEED_LAYERS: readonly LayerId[] = [

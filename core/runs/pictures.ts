@@ -1,11 +1,11 @@
 import type { LonLat } from '../geodesy/index.ts'
 import type { OptionCells } from '../merit/index.ts'
-import { paintHillshade, paintMap, paintPolar, type View, type WaterCodes } from '../paint/index.ts'
+import { type PolarPaint, paintHillshade, paintMap, paintPolar, type View, type WaterCodes } from '../paint/index.ts'
 import type { RasterGrid } from '../raster/index.ts'
 import type { SettledNeed } from '../study/index.ts'
 import type { Ground } from '../terrain/index.ts'
 import { fillLayer, layerInfo } from './layers.ts'
-import type { LayerId } from './types.ts'
+import type { LayerId, LayerInfo } from './types.ts'
 
 const rasterOf = (g: Ground): RasterGrid => ({ ...g.shape, samples: g.heightM })
 
@@ -25,7 +25,7 @@ export function paintOption(o: OptionCells, layer: LayerId, need: SettledNeed | 
   const values = new Float32Array(o.site.groundM.length)
   fillLayer(layer, o, need, values)
   const out = new Uint32Array(view.width * view.height)
-  const how = { hatchMasked: info.hatchMasked, smooth: info.unit === 'dB', ...(opacity === undefined ? {} : { opacity }) }
+  const how = { ...howOf(info), ...(opacity === undefined ? {} : { opacity }) }
   paintPolar(o.site.grid, placeOf(o), values, o.mask.state, info.ramp, view, out, how)
   return out
 }
@@ -43,7 +43,7 @@ export function paintSheet(o: OptionCells, layer: LayerId, need: SettledNeed | n
   const values = new Float32Array(o.site.groundM.length)
   fillLayer(layer, o, need, values)
   const out = new Uint32Array(view.width * view.height)
-  const how = { hatchMasked: info.hatchMasked, smooth: info.unit === 'dB' }
+  const how = howOf(info)
   paintMap(
     rasterOf(o.ground),
     { grid: o.site.grid, site: placeOf(o), values, state: o.mask.state, ramp: info.ramp, how },
@@ -54,4 +54,9 @@ export function paintSheet(o: OptionCells, layer: LayerId, need: SettledNeed | n
   return out
 }
 
+const howOf = ({ hatchMasked, unit, patterns }: LayerInfo): PolarPaint => ({
+  hatchMasked,
+  smooth: unit === 'dB',
+  ...(patterns ? { patterns } : {}),
+})
 const placeOf = (o: OptionCells): LonLat => ({ lon: o.place.lon, lat: o.place.lat })

@@ -3,7 +3,7 @@ import type { LonLat } from '../geodesy/index.ts'
 import type { GroundCode } from '../landcover/index.ts'
 import type { Change, CutWindow, Figures, Ladder, NeedPlaces, RoadLines, VerticalCut } from '../merit/index.ts'
 import type { Obstacle, Road } from '../obstacles/index.ts'
-import type { Ramp, View } from '../paint/index.ts'
+import type { ClassPattern, Ramp, View } from '../paint/index.ts'
 import type { GridShape } from '../raster/index.ts'
 import type { StudyDoc } from '../study/index.ts'
 import type { Survey } from '../terrain/index.ts'
@@ -54,6 +54,8 @@ export interface LayerInfo {
   readonly unit: 'dB' | 'm' | 'deg' | ''
   /** Values are classes with a colour each, not a quantity. */
   readonly classes?: boolean
+  /** Pattern of each class, beside its colour. */
+  readonly patterns?: readonly ClassPattern[]
   /** Which way the value is rounded at the face. */
   readonly safe: 'up' | 'down'
   readonly ramp: Ramp

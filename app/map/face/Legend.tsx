@@ -1,4 +1,15 @@
-import { differenceInfo, type LayerId, LOSS_CAUSES, layerInfo, lossCode, type Ramp, rampHex } from '../../../core/index.ts'
+import {
+  type ClassPattern,
+  classMarkColour,
+  classMarkPixels,
+  differenceInfo,
+  type LayerId,
+  LOSS_CAUSES,
+  layerInfo,
+  lossCode,
+  type Ramp,
+  rampHex,
+} from '../../../core/index.ts'
 import {
   DIFFERENCE_WORDS,
   differenceEnds,
@@ -107,7 +118,7 @@ function LayerLegend({ layer, units, night, marks, losses, roads }: LegendProps)
 
 /** What the colours mean: patterns of states, a colour per class, or a ramp. */
 function Key({ layer, units, night, losses }: Omit<LegendProps, 'marks' | 'roads'>) {
-  const { ramp, classes } = layerInfo(layer)
+  const { ramp, classes, patterns } = layerInfo(layer)
   if (layer === 'masked')
     return (
       <ul className="swatches">
@@ -124,7 +135,7 @@ function Key({ layer, units, night, losses }: Omit<LegendProps, 'marks' | 'roads
       <ul className="swatches classes">
         {classesOf(layer, losses).map((c) => (
           <li key={c.value}>
-            <i className="swatch" style={{ background: rampHex(ramp, c.value, night) ?? undefined }} aria-hidden />
+            <ClassSwatch hex={rampHex(ramp, c.value, night)} pattern={patterns?.[c.value - 1]} />
             {c.words} {c.share ? <span className="ink-3">{c.share}</span> : null}
           </li>
         ))}
@@ -165,6 +176,19 @@ function Scale({
         </div>
       ) : null}
     </div>
+  )
+}
+
+/** Colour and pattern of a class as the painter draws them, pixel by pixel. */
+function ClassSwatch({ hex, pattern }: { hex: string | null; pattern?: ClassPattern }) {
+  const marks = pattern ? classMarkPixels(pattern) : []
+  if (!hex || marks.length === 0) return <i className="swatch" style={{ background: hex ?? undefined }} aria-hidden />
+  const [r = 0, g = 0, b = 0] = [1, 3, 5].map((at) => Number.parseInt(hex.slice(at, at + 2), 16))
+  const d = [0, 8, 16].flatMap((left) => [0, 8].flatMap((top) => marks.map(([x, y]) => `M${left + x} ${top + y}h1v1h-1z`))).join('')
+  return (
+    <svg className="swatch" width={22} height={12} viewBox="0 0 22 12" style={{ background: hex }} aria-hidden>
+      <path d={d} fill={`rgb(${classMarkColour(r, g, b).join(' ')})`} />
+    </svg>
   )
 }
 
