@@ -110,6 +110,8 @@ interface Choice<T extends string> {
   readonly words: string
   readonly hint?: string
 }
+/** On how many PRFs a target must be usable, where they change from dwell to dwell. */
+export const DWELLS_FIELD = field('radar.dwellsNeeded', 'PRFs needed', PLAIN, { emptyWords: 'all' })
 export const PRF_MODES: readonly Choice<'single' | 'pulseStagger' | 'dwellStagger'>[] = [
   { id: 'single', words: 'single' },
   { id: 'pulseStagger', words: 'pulse to pulse' },
@@ -206,6 +208,7 @@ export const EMPTY_WORDS = {
     title: 'No terrain yet',
     reason: 'Every figure comes from an elevation raster',
     action: 'Drop a GeoTIFF here, pick one, or open the demo study',
+    demo: 'Open the demo study',
   },
   need: { title: 'No need stated', reason: 'Without a need there is nothing to meet: only ground and clutter are counted' },
   candidates: { title: 'No candidate placed', reason: 'A candidate is a place where the radar could stand' },

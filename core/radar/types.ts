@@ -53,6 +53,8 @@ export interface RadarInput {
   readonly noiseBandwidthHz: number
   readonly prfHz: readonly number[]
   readonly prfMode: 'single' | 'pulseStagger' | 'dwellStagger'
+  /** dwellStagger: on how many PRFs a target must be usable; absent = all. */
+  readonly dwellsNeeded?: number
   readonly coherentTransmitter: boolean
   readonly polarisation: 'H' | 'V' | 'circular'
   /** What circular polarisation takes off; the defaults where absent. */

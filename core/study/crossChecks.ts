@@ -66,6 +66,10 @@ function checkPulse(r: RadarDoc, say: Say): void {
   const rates = r.prfHz.length
   if (r.prfMode !== undefined && r.prfMode !== 'single' && rates < 2)
     say('radar.prfMode', 'prf', `${r.prfMode} with ${rates} pulse repetition frequency`, 'list two or more in radar.prfHz, or use "single"')
+  if (r.dwellsNeeded !== undefined && r.prfMode !== 'dwellStagger')
+    say('radar.dwellsNeeded', 'prf', 'PRFs change within the dwell or not at all', 'set radar.prfMode to "dwellStagger", or leave it out')
+  else if (r.dwellsNeeded !== undefined && (r.dwellsNeeded > rates || !Number.isInteger(r.dwellsNeeded)))
+    say('radar.dwellsNeeded', 'prf', `${r.dwellsNeeded} of ${rates} PRFs`, `give a whole number from 1 to ${rates}`)
   if ((r.prfMode ?? 'single') === 'single' && rates > 1)
     say(
       'radar.prfHz',

@@ -5,7 +5,7 @@ import { studySchema } from './schema.ts'
 
 /** Keys whose models come later: kept untouched and reported as not assessed, by the object they stand in. */
 const LATER: Readonly<Record<string, readonly string[]>> = {
-  radar: ['dwellsNeeded', 'scan'],
+  radar: ['scan'],
   'candidates[]': ['surveyedErrorM', 'screeningBandDeg'],
   '': ['screeningBandDeg'],
 }

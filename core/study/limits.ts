@@ -47,6 +47,7 @@ export const LIMITS: Readonly<Record<string, Limit>> = {
   'radar.compressedPulseWidthS': limit('compressed pulse width', 's', 1e-9, 0.1),
   'radar.noiseBandwidthHz': limit('noise bandwidth', 'Hz', 1, 1e10),
   'radar.prfHz[]': limit('pulse repetition frequency', 'Hz', 1, 1e6),
+  'radar.dwellsNeeded': limit('number of PRFs a target must be usable on', '', 1, 64),
   'radar.pulses[].widthS': limit('pulse width', 's', 1e-9, 0.1),
   'radar.pulses[].compressedWidthS': limit('compressed pulse width', 's', 1e-9, 0.1),
   'radar.pulses[].noiseBandwidthHz': limit('noise bandwidth', 'Hz', 1, 1e10),

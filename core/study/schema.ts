@@ -103,6 +103,7 @@ const radar = z.looseObject({
   noiseBandwidthHz: num('radar.noiseBandwidthHz').optional(),
   prfHz: z.array(num('radar.prfHz[]')),
   prfMode: z.enum(['single', 'pulseStagger', 'dwellStagger']).optional(),
+  dwellsNeeded: num('radar.dwellsNeeded').optional(),
   coherentTransmitter: z.boolean().optional(),
   polarisation: z.enum(['H', 'V', 'circular']).optional(),
   circular: z

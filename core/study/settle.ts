@@ -75,6 +75,7 @@ function settleRadar(r: RadarDoc, instrumentedRangeM: number, d: Defaults): Rada
     noiseBandwidthHz: d.take('radar.noiseBandwidthHz', r.noiseBandwidthHz, 1 / compressedPulseWidthS),
     prfHz: [...r.prfHz],
     prfMode: d.take('radar.prfMode', r.prfMode, 'single'),
+    ...(r.prfMode === 'dwellStagger' ? { dwellsNeeded: d.take('radar.dwellsNeeded', r.dwellsNeeded, r.prfHz.length) } : {}),
     coherentTransmitter: d.take('radar.coherentTransmitter', r.coherentTransmitter, false),
     polarisation: d.take('radar.polarisation', r.polarisation, 'V'),
     ...(r.polarisation === 'circular' ? { circular: settleCircular(r, d) } : {}),
@@ -160,7 +161,13 @@ function settleNeed(n: NeedDoc, i: number, radar: RadarInput, maxRangeM: number,
   }
 }
 
-function settleCandidate(c: CandidateDoc, i: number, antennaTiltDeg: number, air: SettledStudy['atmosphere'], d: Defaults): SettledCandidate {
+function settleCandidate(
+  c: CandidateDoc,
+  i: number,
+  antennaTiltDeg: number,
+  air: SettledStudy['atmosphere'],
+  d: Defaults,
+): SettledCandidate {
   const earth = { effectiveEarthFactor: air.effectiveEarthFactor, earthRadiusM: air.earthRadiusM }
   return {
     id: c.id,
@@ -251,7 +258,9 @@ export function settle(doc: StudyDoc, fileName?: string): SettledStudy {
     atmosphere,
     radar,
     needs: (doc.needs ?? []).map((n, i) => settleNeed(n, i, radar, maxRangeM, d)),
-    candidates: doc.candidates.flatMap((c, i) => (c.rejected === undefined ? [settleCandidate(c, i, radar.antenna.tiltDeg, atmosphere, d)] : [])),
+    candidates: doc.candidates.flatMap((c, i) =>
+      c.rejected === undefined ? [settleCandidate(c, i, radar.antenna.tiltDeg, atmosphere, d)] : [],
+    ),
     rejected: doc.candidates.flatMap((c) =>
       c.rejected === undefined ? [] : [{ id: c.id, name: c.name ?? c.id, lon: c.lon, lat: c.lat, reason: c.rejected }],
     ),

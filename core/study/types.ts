@@ -62,6 +62,8 @@ export interface RadarDoc {
   noiseBandwidthHz?: number
   prfHz: number[]
   prfMode?: 'single' | 'pulseStagger' | 'dwellStagger'
+  /** dwellStagger: a place counts when it is usable on at least this many PRFs; absent = all. */
+  dwellsNeeded?: number
   coherentTransmitter?: boolean
   polarisation?: 'H' | 'V' | 'circular'
   /** What circular polarisation takes off rain clutter and targets, dB. */

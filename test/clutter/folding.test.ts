@@ -102,6 +102,29 @@ describe('folded clutter of an option', () => {
     expect(compared).toBeGreaterThan(500)
   })
 
+  it('dwell to dwell, the PRF that decides when fewer than all are needed: the lowest of two for one, the worst for both', () => {
+    const over = { prfMode: 'dwellStagger' } as const
+    const [first, second, both, one] = [
+      fold({ prfHz: [PRFS[0]] }),
+      fold({ prfHz: [PRFS[1]] }),
+      fold({ ...over, dwellsNeeded: 2 }),
+      fold({ ...over, dwellsNeeded: 1 }),
+    ]
+    const pulseM = (SPEED_OF_LIGHT_MS * 0.5e-6) / 2
+    let compared = 0
+    for (let cell = 0; cell < one.ratio.length; cell += 7) {
+      expect(one.ratio[cell]).toBeLessThanOrEqual(both.ratio[cell])
+      expect(both.ratio[cell]).toBe(Math.max(first.ratio[cell], second.ratio[cell]))
+      const rangeM = ((cell % NEAR.ranges) + 0.5) * NEAR.rangeStepM
+      // away from gates under a later pulse
+      if (Math.min(...[5000, 6000].map((u) => Math.abs(rangeM - u))) < pulseM + 200 || first.ratio[cell] === second.ratio[cell]) continue
+      expect(one.ratio[cell]).toBe(Math.min(first.ratio[cell], second.ratio[cell]))
+      compared++
+    }
+    expect(compared).toBeGreaterThan(300)
+    expect(fold(over).ratio).toEqual(both.ratio)
+  })
+
   it('says where the terrain ends: not evaluated beyond, never 0', () => {
     const far = fold({}, 60_000)
     expect(far.evaluatedToM).toBeGreaterThan(3_000)

@@ -35,6 +35,17 @@ describe('weather of a study', () => {
     expect(own.radar.circular).toEqual({ rainLossDb: 22, targetLossDb: 3 })
   })
 
+  it('dwells needed: all of the PRFs unless said, only where PRFs change from dwell to dwell, never more than there are', () => {
+    const rates: [string, unknown] = ['radar.prfHz', [900, 1100, 1000]]
+    const dwell: [string, unknown] = ['radar.prfMode', 'dwellStagger']
+    expect(settled(rates, dwell).radar.dwellsNeeded).toBe(3)
+    expect(used(settled(rates, dwell))).toMatchObject({ 'radar.dwellsNeeded': 3 })
+    expect(settled(rates, dwell, ['radar.dwellsNeeded', 2]).radar.dwellsNeeded).toBe(2)
+    expect(settled().radar.dwellsNeeded).toBeUndefined()
+    expect(refusal('radar.dwellsNeeded', 4, [rates, dwell])).toContain('4 of 3 PRFs')
+    expect(refusal('radar.dwellsNeeded', 1)).toContain('dwellStagger')
+  })
+
   it('folded clutter is looked for out to c/2f of the lowest PRF and the instrumented range', () => {
     expect(settled(['radar.instrumentedRangeM', 60_000]).foldRangeM).toBeCloseTo(299_792_458 / 1800 + 60_000, 6)
     expect(settled(['run.foldRangeM', 250_000]).foldRangeM).toBe(250_000)

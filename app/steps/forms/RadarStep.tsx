@@ -5,6 +5,7 @@ import {
   CIRCULAR_FIELDS,
   COSECANT_FIELD,
   DETECTORS,
+  DWELLS_FIELD,
   ELEVATION_PATTERNS,
   FILTER_WINDOWS,
   GAS_KINDS,
@@ -34,6 +35,7 @@ export function RadarStep() {
   const coherent = useDoc((d) => d.radar.coherentTransmitter)
   const pattern = useDoc((d) => d.radar.antenna.elevationPattern ?? 'gaussian')
   const suppression = useDoc((d) => d.radar.suppression?.kind ?? 'none')
+  const dwells = useDoc((d) => d.radar.prfMode === 'dwellStagger')
   const circular = useDoc((d) => d.radar.polarisation === 'circular')
   const stc = useDoc((d) => d.radar.stc?.kind ?? 'none')
   const detector = useDoc((d) => d.radar.detector)
@@ -79,6 +81,7 @@ export function RadarStep() {
         ))}
         <DocNumbers path="radar.prfHz" label="PRF" face={HZ} required />
         <DocChoice path="radar.prfMode" label="PRF change" choices={PRF_MODES} fallback="single" />
+        {dwells && <DocNumber of={DWELLS_FIELD} />}
         <Check value={coherent ?? false} onChange={(v) => setField(study, 'radar.coherentTransmitter', v, 'changed coherence')}>
           Coherent transmitter {coherent === undefined ? <Mark>default</Mark> : <OriginMark path="radar.coherentTransmitter" />}
         </Check>

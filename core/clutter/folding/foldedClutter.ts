@@ -3,7 +3,7 @@ import { type SiteCells, sweep } from '../../masking/index.ts'
 import { CELL, cellAreasM2, type Held, MAX_POLAR_CELLS, type PolarShape } from '../../polar/index.ts'
 import type { RadarInput } from '../../radar/index.ts'
 import type { Ground, Site } from '../../terrain/index.ts'
-import { fromDb } from '../../units/index.ts'
+import { fromDb, SPEED_OF_LIGHT_MS } from '../../units/index.ts'
 import { share, type Work } from '../../work/index.ts'
 import { slantSquared } from '../cells/cellSums.ts'
 import { centresOf, clutterToNoise, electricalCentreM } from '../cells/clutterToNoise.ts'
@@ -16,7 +16,7 @@ export interface FoldedCells extends Held {
   readonly kind: 'folded'
   readonly heightM: number
   readonly tiltDeg: number
-  /** Σ_{n≥1} C(R + n·c/2f) over noise per cell, ratio, before STC and suppression; the worst PRF, or the mean of them when pulses are staggered. */
+  /** Σ_{n≥1} C(R + n·c/2f) over noise per cell, ratio, before STC and suppression; the worst PRF that has to be usable, or the mean of them when pulses are staggered. */
   readonly ratio: Float32Array
   /** How far it was looked for, m, and to which slant range the ground is known on every azimuth. */
   readonly foldRangeM: number
@@ -68,16 +68,18 @@ export function* foldedClutter(
   const ratio = new Float32Array(near.grid.azimuths * near.grid.ranges)
   const one = r.prfMode === 'pulseStagger' ? null : new Float32Array(near.grid.ranges)
   const slants = new Float64Array(near.grid.ranges)
+  const needed = r.prfMode === 'dwellStagger' ? (r.dwellsNeeded ?? r.prfHz.length) : r.prfHz.length
   for (let i = 0; i < near.grid.azimuths; i++) {
     slantsOfRow(near, i, electricalCentreM(site, near.siteGroundM, heightM), slants)
     const row = ratio.subarray(i * near.grid.ranges, (i + 1) * near.grid.ranges)
     for (const prfHz of r.prfHz) {
       if (!one) foldRow(far, i, slants, unambiguousRangeM(prfHz), 1 / r.prfHz.length, row)
-      else {
+      else if (needed === r.prfHz.length) {
         foldRow(far, i, slants, unambiguousRangeM(prfHz), 1, one.fill(0))
         for (let j = 0; j < row.length; j++) if (one[j] > row[j]) row[j] = one[j]
       }
     }
+    if (needed < r.prfHz.length) foldDwells(far, i, slants, r, needed, row)
     if (i % 64 === 63) yield { done: 0.95 + (0.05 * i) / near.grid.azimuths, total: 1 }
   }
   return {
@@ -112,6 +114,39 @@ export function foldRow(far: FarClutter, i: number, slantsM: Float64Array, stepM
       if (k >= ranges) break
       out[j] += times * far.ratio[i * ranges + k]
     }
+  }
+}
+
+/**
+ * Clutter folded into the gates of azimuth i on the PRF that decides when `needed` of them must be usable: the needed-lowest of those on which the gate
+ * is not under a later pulse, the highest where fewer are left.
+ */
+export function foldDwells(
+  far: FarClutter,
+  i: number,
+  slantsM: Float64Array,
+  r: Pick<RadarInput, 'prfHz' | 'pulseWidthS' | 'recoveryS'>,
+  needed: number,
+  out: Float32Array,
+): void {
+  const pulseM = (SPEED_OF_LIGHT_MS * r.pulseWidthS) / 2
+  const blindM = pulseM + (SPEED_OF_LIGHT_MS * (r.recoveryS ?? 0)) / 2
+  const dwells = r.prfHz.map((prfHz) => {
+    const stepM = unambiguousRangeM(prfHz)
+    const row = new Float32Array(out.length)
+    foldRow(far, i, slantsM, stepM, 1, row)
+    return { stepM, row }
+  })
+  const levels: number[] = []
+  for (let j = 0; j < out.length; j++) {
+    levels.length = 0
+    for (const { stepM, row } of dwells) {
+      const apparent = slantsM[j] % stepM
+      const eclipsed = slantsM[j] + pulseM > stepM && (apparent < blindM || apparent > stepM - pulseM)
+      if (!eclipsed) levels.push(row[j])
+    }
+    levels.sort((a, b) => a - b)
+    out[j] = levels[Math.min(needed, levels.length) - 1] ?? 0
   }
 }
 

@@ -36,9 +36,9 @@ export interface TargetSignal {
   /** Attenuation by slant range in steps of 25 m, dB. */
   readonly stcDb: Float32Array
   readonly loss: PathLoss | null
-  /** Unambiguous range of each PRF, m; an echo is eclipsed when it meets a later pulse on all of them, or on any where each dwell has to see it. */
+  /** Unambiguous range of each PRF, m, and on how many of them an echo may meet a later pulse and still be heard. */
   readonly unambiguousM: readonly number[]
-  readonly anyEclipses: boolean
+  readonly mayEclipse: number
 }
 
 /** Tables for one radar, tilt and target. Side-lobe floors are for clutter only and are not used here. */
@@ -53,7 +53,7 @@ export function targetSignal(radar: RadarInput, weather: Weather, tiltDeg: numbe
     stcDb: stc,
     loss: pathLoss(weather, radar.frequencyHz, radar.polarisation),
     unambiguousM: radar.prfHz.map((f) => SPEED_OF_LIGHT_MS / (2 * f)),
-    anyEclipses: radar.prfMode === 'dwellStagger',
+    mayEclipse: radar.prfHz.length - (radar.prfMode === 'dwellStagger' ? (radar.dwellsNeeded ?? radar.prfHz.length) : 1),
   }
 }
 
@@ -126,7 +126,7 @@ export function isHeard(t: TargetSignal, s: SignalSegment, slantM: number): bool
     const apparent = slantM % u
     if (apparent < s.nearestM || apparent > u - s.pulseM) eclipsed++
   }
-  return t.anyEclipses ? eclipsed === 0 : eclipsed < t.unambiguousM.length
+  return eclipsed <= t.mayEclipse
 }
 
 /** Echo of a target at one place; dB. */
