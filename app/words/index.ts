@@ -1,4 +1,6 @@
 export * from './cautions.ts'
+export * from './change.ts'
+export * from './charts.ts'
 export * from './confirmed.ts'
 export * from './difference.ts'
 export * from './figureWords.ts'

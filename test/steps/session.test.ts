@@ -111,6 +111,18 @@ describe('running by itself', () => {
     changeMastHeight(s.study, 'A', 20, 25)
     expect(s.results.getState().byOption.size).toBe(0)
   })
+  it('drops every result when the ground cannot be read or its file is gone: they were of another', () => {
+    for (const state of ['failed', 'none'] as const) {
+      const s = setUp()
+      ready(s)
+      const ref = { candidate: 'A', heightM: 20, tiltDeg: 0 }
+      takeTell(s.results, { kind: 'figures', results: [{ ref, serial: 1 } as never], holds: [1] }, 0)
+      const { serial } = s.results.getState()
+      s.ground.setState({ state, ground: null })
+      expect(s.results.getState().byOption.size).toBe(0)
+      expect(s.results.getState().serial).toBeGreaterThan(serial)
+    }
+  })
 })
 
 describe('keeping the ground', () => {

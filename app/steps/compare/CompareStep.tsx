@@ -5,6 +5,7 @@ import { optionKey, studyOptions } from '../../document/index.ts'
 import { Button, Caution, Select } from '../../ui/index.ts'
 import { cautionsFor, EMPTY_WORDS, formatMetPct, MEASURE_WORDS, RANKING_WORDS, textOf, type UnitSystem } from '../../words/index.ts'
 import { useDoc, useResults, useSession, useView } from '../session/index.ts'
+import { ChangeSection } from './ChangeSection.tsx'
 import { GROUND_COLUMNS, NEED_COLUMNS } from './columns.ts'
 import { Explain } from './Explain.tsx'
 import { isAssessed, needOf, needsInOrder } from './figuresOf.ts'
@@ -86,6 +87,7 @@ export function CompareStep() {
       </div>
       {results.length > 1 ? <Plot results={results} need={need} shown={shown} system={system} onChoose={show} /> : null}
       {results.length > 1 ? <RankingSection doc={doc} results={results} shown={shown} system={system} onShow={show} /> : null}
+      {results.length > 0 ? <ChangeSection doc={doc} shown={shown} system={system} /> : null}
       <RejectSection doc={doc} />
     </div>
   )

@@ -1,6 +1,7 @@
 import type { StudyDoc } from '../../../core/index.ts'
 import type { StudyClient } from '../../compute/client.ts'
 import {
+  forgetResults,
   type GroundStore,
   keepOptions,
   type ResultsStore,
@@ -76,6 +77,11 @@ export function keepRunning(
     void askGround()
   })
   view.subscribe(() => send())
+  // figures of a ground that is no longer there do not hold: they go with it
+  ground.subscribe((now, before) => {
+    const gone = now.state === 'failed' || now.state === 'none'
+    if (gone && now.state !== before.state) forgetResults(results)
+  })
   settle()
   return {
     /** A new ground: everything is asked anew. */
