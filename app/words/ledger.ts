@@ -35,5 +35,24 @@ export function ledgerWords(key: string, needs: readonly { readonly id: string; 
       if (key === `need_${id}_${tail}`) return { ...w, name: `${name}: ${w.name}`, rank: 2 + (w.rank + 8 * at) / 1000 }
   return undefined
 }
+/** The line after a part's: what it is by itself, before it is added. */
+export const LEDGER_ALONE = 'By itself'
 /** Lines that are read by no result: where the place is and what stands between. */
 export const LEDGER_PLACE = 'Place'
+
+const CLUTTER_KEYS = /^(clutter_|strength$|spread$)/
+/**
+ * Why a result or line has no value, in words: from what the ledger says of the place (`inSight` yes, no, marginal, unknown; `row` of the land
+ * table; `controlling` obstacle).
+ */
+export function whyNone(key: string, place: { readonly inSight: string; readonly row: string; readonly controlling: string }): string {
+  if (place.inSight === 'unknown') return 'unknown ground'
+  if (key.endsWith('suppression_needed_db')) return 'too weak for any suppression'
+  if (key.endsWith('residue_to_noise_db')) return 'no clutter in its cell'
+  if (CLUTTER_KEYS.test(key)) {
+    if (place.inSight === 'yes') return place.row === '' ? 'no clutter modelled here' : 'nothing in sight'
+    const hidden = place.inSight === 'marginal' ? 'masked by less than the error band' : 'masked'
+    return place.row === 'sea' ? `water, ${place.controlling === 'terrain' ? 'below the horizon' : hidden}` : hidden
+  }
+  return 'none'
+}

@@ -66,3 +66,43 @@ describe('ledger of a cell', () => {
     expect(named('Low: height margin').rows[0]?.label).toBe('Target, MSL')
   })
 })
+
+describe('values that are none', () => {
+  const masked: CellLedger = {
+    at: { lon: 0, lat: 0, azimuthDeg: 10, rangeM: 18_520 },
+    option: { candidate: 'A', heightM: 20, tiltDeg: 0 },
+    lines: [
+      line('in_sight', 'no', '', 'info'),
+      line('controlling', 'Harl Edge', '', 'info'),
+      line('table_row', 'sea', '', 'info'),
+      { ...line('spread', 0, '', 'info'), value: null },
+      { ...line('side_lobes', -2.6, 'dB', 'start', 'clutter_to_noise_db'), label: 'Azimuth side lobes all round' },
+      { ...line('side_lobes_alone', -2.6, 'dB', 'info', 'clutter_to_noise_db'), label: 'Azimuth side lobes all round: alone' },
+      { ...line('folded', 3, 'dB', 'add', 'clutter_to_noise_db'), label: 'Second-time-around clutter' },
+      { ...line('folded_alone', -2.6, 'dB', 'info', 'clutter_to_noise_db'), label: 'Second-time-around clutter: alone' },
+    ],
+    results: {
+      clutter_to_noise_db: 0.4,
+      clutter_strength_db: null,
+      need_n1_residue_to_noise_db: null,
+      need_n1_suppression_needed_db: null,
+    },
+  }
+  const of = (ledger: CellLedger, name: string) => ledgerGroups(ledger, [{ id: 'n1', name: 'Low' }], 'metric').find((g) => g.name === name)
+  test('say why in words', () => {
+    expect(of(masked, 'Clutter strength σ°F⁴')?.total).toEqual({ value: 'water, masked', unit: '' })
+    expect(of(masked, 'Low: residue over noise')?.total?.value).toBe('no clutter in its cell')
+    expect(of(masked, 'Low: suppression needed')?.total?.value).toBe('too weak for any suppression')
+    expect(of(masked, 'Place')?.rows.find((r) => r.key === 'spread')?.value.value).toBe('water, masked')
+    const swap = (key: string, value: string): CellLedger => ({
+      ...masked,
+      lines: masked.lines.map((l) => (l.key === key ? { ...l, value } : l)),
+    })
+    expect(of(swap('controlling', 'terrain'), 'Clutter strength σ°F⁴')?.total?.value).toBe('water, below the horizon')
+    expect(of(swap('table_row', 'forest low relief'), 'Clutter strength σ°F⁴')?.total?.value).toBe('masked')
+    expect(of(swap('in_sight', 'unknown'), 'Clutter strength σ°F⁴')?.total?.value).toBe('unknown ground')
+  })
+  test('a part is named once; what it is by itself follows only where something stood before it', () => {
+    expect(of(masked, 'C/N')?.rows.map((r) => r.label)).toEqual(['Azimuth side lobes all round', 'Second-time-around clutter', 'By itself'])
+  })
+})

@@ -3,15 +3,16 @@ import {
   formatAzimuth,
   formatMast,
   formatNumber,
+  LEDGER_ALONE,
   LEDGER_PLACE,
   ledgerWords,
-  NO_VALUE,
   probeValue,
   type Quantity,
   textOf,
   toFace,
   type UnitSystem,
   unitOf,
+  whyNone,
 } from '../../words/index.ts'
 
 export interface LedgerRow {
@@ -43,6 +44,11 @@ export function ledgerGroups(
   needs: readonly { readonly id: string; readonly name: string }[],
   units: UnitSystem,
 ): LedgerGroup[] {
+  const said = (key: string): string => {
+    const value = lines.find((l) => l.key === key)?.value
+    return typeof value === 'string' ? value : ''
+  }
+  const place = { inSight: said('in_sight'), row: said('table_row'), controlling: said('controlling') }
   const known = Object.entries(results).flatMap(([key, value]) => {
     const words = ledgerWords(key, needs)
     return words ? [{ key, value, words }] : []
@@ -52,27 +58,34 @@ export function ledgerGroups(
     .map(({ key, value, words }): LedgerGroup => {
       const own = lines.filter((l) => l.of === key)
       const prefix = words.name.includes(': ') ? words.name.slice(0, words.name.lastIndexOf(': ') + 2) : ''
-      const total = faceValue({ key, value, unit: words.unit }, units)
+      const total = faceValue({ key, value, unit: words.unit }, units, place)
       const map = words.layer === null || value === null ? '' : textOf(probeValue(words.layer, value, units))
-      return { key, name: words.name, total, onMap: map, ...rowsOf(own, prefix, units) }
+      return { key, name: words.name, total, onMap: map, ...rowsOf(own, prefix, units, place) }
     })
   const rest = lines.filter((l) => !l.of || !known.some((k) => k.key === l.of))
-  if (rest.length > 0) groups.push({ key: '', name: LEDGER_PLACE, total: null, onMap: '', ...rowsOf(rest, '', units) })
+  if (rest.length > 0) groups.push({ key: '', name: LEDGER_PLACE, total: null, onMap: '', ...rowsOf(rest, '', units, place) })
   return groups
 }
 
-function rowsOf(lines: readonly LedgerLine[], prefix: string, units: UnitSystem): Pick<LedgerGroup, 'origin' | 'rows'> {
+type Place = Parameters<typeof whyNone>[1]
+const ALONE = '_alone'
+
+function rowsOf(all: readonly LedgerLine[], prefix: string, units: UnitSystem, place: Place): Pick<LedgerGroup, 'origin' | 'rows'> {
+  // what a part is alone is said after what it adds; where nothing stands before it both are the same number
+  const first = all.find((l) => l.op === 'start')?.key
+  const lines = all.filter((l) => l.key !== `${first}${ALONE}`)
   const count = new Map<string, number>()
   for (const l of lines) count.set(originOf(l), (count.get(originOf(l)) ?? 0) + 1)
   const origin = [...count].sort((a, b) => b[1] - a[1])[0]?.[0] ?? ''
   const rows = lines.map((l): LedgerRow => {
-    const label = l.label.startsWith(prefix) ? l.label.slice(prefix.length) : l.label
+    const label =
+      l.key.endsWith(ALONE) && l.op === 'info' ? LEDGER_ALONE : l.label.startsWith(prefix) ? l.label.slice(prefix.length) : l.label
     const own = originOf(l)
     return {
       key: l.key,
       label: label.charAt(0).toUpperCase() + label.slice(1),
       sign: SIGN[l.op],
-      value: inSum(l.op, faceValue(l, units)),
+      value: inSum(l.op, faceValue(l, units, place)),
       mark: l.mark,
       origin: own === origin ? '' : own,
     }
@@ -85,9 +98,9 @@ const inSum = (op: LedgerLine['op'], q: Quantity): Quantity =>
   (op === 'add' || op === 'subtract') && q.value.startsWith('−') ? { ...q, value: `(${q.value})` } : q
 
 /** A value in the unit of the face, with digits enough that lines can be added by eye. Mast heights stay in metres. */
-function faceValue({ key, value, unit }: Pick<LedgerLine, 'key' | 'value' | 'unit'>, units: UnitSystem): Quantity {
+function faceValue({ key, value, unit }: Pick<LedgerLine, 'key' | 'value' | 'unit'>, units: UnitSystem, place: Place): Quantity {
   if (typeof value === 'string') return { value, unit: '' }
-  if (value === null || !Number.isFinite(value)) return { value: NO_VALUE, unit: '' }
+  if (value === null || !Number.isFinite(value)) return { value: whyNone(key, place), unit: '' }
   if (unit === 'deg' || unit === '°') return key === 'azimuth' ? formatAzimuth(value) : { value: formatNumber(value, 2), unit: '°' }
   if (unit === 'm' && (key === 'mast_height' || key === 'height_to_see_m')) return formatMast(value)
   if (unit === 'm' && key.includes('range')) return { value: formatNumber(toFace('range', value, units), 2), unit: unitOf('range', units) }
