@@ -1,4 +1,4 @@
-import { type OptionResult, ROAD_CLASSES, type RoadLengths, type RoadsFigure } from '../../../core/index.ts'
+import { type OptionResult, ROAD_CLASSES, type RoadClass, type RoadsFigure } from '../../../core/index.ts'
 import {
   cautionsFor,
   formatDbUp,
@@ -7,6 +7,7 @@ import {
   formatNumber,
   formatRoad,
   formatSetting,
+  NO_VALUE,
   ROAD_CLASS_WORDS,
   textOf,
   toFace,
@@ -29,31 +30,36 @@ export function roadBlocks(input: MemoInput, r: OptionResult): Block[] {
 }
 
 function ringTable({ system }: MemoInput, roads: RoadsFigure): TableBlock {
-  const present = roads.classes.map((c) => ({ ...c, at: ROAD_CLASSES.indexOf(c.roadClass) }))
   const length = { unit: bothUnits('range', system), align: 'right' } as const
   const columns: Column[] = [
-    { head: 'Ring', unit: unitOf('range', system), width: 'fill' },
-    { head: 'Within\nrange', ...length },
+    { head: 'Ring', keep: true },
+    { head: 'Within range', ...length },
     { head: 'In sight', ...length },
     { head: 'Seen', ...length },
-    ...present.map((c): Column => ({ head: `Seen: ${ROAD_CLASS_WORDS[c.roadClass].toLowerCase()}`, ...length })),
+    { head: 'Seen, by class', unit: unitOf('range', system), width: 'fill' },
   ]
   const cell = (m: number, explain?: string): Cell => (m === 0 ? '0' : dualBare((s) => formatRoad(m, s), system, explain))
-  const three = (l: RoadLengths): Cell[] => [cell(l.lengthM), cell(l.inSightM), cell(l.seenM)]
   const edge = (m: number): string => formatNumber(toFace('range', m, system), 1).replace(/\.0$/, '')
+  const byClass = (seenM: (c: RoadClass) => number): string =>
+    roads.classes
+      .filter((c) => seenM(c.roadClass) > 0)
+      .map((c) => `${ROAD_CLASS_WORDS[c.roadClass].toLowerCase()} ${formatRoad(seenM(c.roadClass), system).value}`)
+      .join(', ') || NO_VALUE
   const rows = roads.rings
     .filter((ring) => ring.lengthM > 0)
     .map((ring): Cell[] => [
-      `${edge(ring.fromM)} to ${edge(ring.toM)}`,
-      ...three(ring),
-      ...present.map((c) => cell(ring.seenByClassM[c.at])),
+      `${edge(ring.fromM)} to ${edge(ring.toM)}\u202f${unitOf('range', system)}`,
+      cell(ring.lengthM),
+      cell(ring.inSightM),
+      cell(ring.seenM),
+      byClass((c) => ring.seenByClassM[ROAD_CLASSES.indexOf(c)]),
     ])
   rows.push([
     'All',
     cell(roads.lengthM, 'roads_km'),
     cell(roads.inSightM, 'roads_in_sight_km'),
     cell(roads.seenM, 'roads_seen_km'),
-    ...present.map((c) => cell(c.seenM, `roads_seen_${c.roadClass}_km`)),
+    byClass((c) => roads.classes.find((x) => x.roadClass === c)?.seenM ?? 0),
   ])
   return { kind: 'table', id: 'roads', title: 'Roads seen, by ring and class', columns, rows }
 }
