@@ -11,6 +11,7 @@ import {
   type ReflectingRay,
   reflectingCodes,
   reflectionPoint,
+  reflectionsAt,
   reflectionTable,
   reflectionTo,
   SURFACES,
@@ -192,6 +193,29 @@ describe('two rays over cells', () => {
       if (fresh.atKind !== REFLECTS.none) found++
     }
     expect(found).toBeGreaterThan(100)
+  })
+
+  it('one height at a time over a whole ray gives the same surfaces', () => {
+    const rough = cellsOf(
+      (i) => (i % 37 < 4 ? 2 : i % 5 === 0 ? 0 : 1),
+      (i) => 2 * Math.sin(i / 9),
+    )
+    let found = 0
+    for (const c of [0, 1 / 8_494_667])
+      for (const targetM of [60, 400, 1500]) {
+        const ray = rayOver(rough, 35, c)
+        const seen = new Map<number, number>()
+        reflectionsAt(ray, targetM, 2, CELLS, (from, to, kind, heightM) => {
+          for (let j = from; j < to; j++) seen.set(j, kind * 1000 + heightM)
+        })
+        const one = rayOver(rough, 35, c)
+        for (let j = 2; j < CELLS; j++) {
+          reflectionTo(one, j, (j + 0.5) * STEP_M, targetM, 0)
+          expect(seen.get(j) ?? 0, `cell ${j} at ${targetM} m`).toBe(one.atKind === REFLECTS.none ? 0 : one.atKind * 1000 + one.atHeightM)
+          if (one.atKind !== REFLECTS.none) found++
+        }
+      }
+    expect(found).toBeGreaterThan(200)
   })
 
   it('rougher water throws back less; a perfect null has a floor', () => {

@@ -16,6 +16,7 @@ import {
   type ReflectionTable,
   type ReflectionTables,
   reflectingCodes,
+  reflectionsAt,
   reflectionTable,
   reflectionTo,
   tangentToPoint,
@@ -213,27 +214,21 @@ function findSurfaces(
 ): void {
   if (!ray.any) return
   if (ray.c !== c || ray.ready === 0) bendRay(ray, c)
-  let topM = levelM
-  if (aboveGround) {
-    topM = Number.NEGATIVE_INFINITY
-    for (let j = first; j < last; j++) if (groundM[from + j] + levelM > topM) topM = groundM[from + j] + levelM
+  if (!aboveGround) {
+    reflectionsAt(ray, levelM, first, last, (start, end, kind, heightM) => {
+      numbers.fill(surfaceNumber(surfaces, kind, heightM), from + start, from + end)
+    })
+    return
   }
+  let topM = Number.NEGATIVE_INFINITY
+  for (let j = first; j < last; j++) if (groundM[from + j] + levelM > topM) topM = groundM[from + j] + levelM
   let start = 0
-  let lastHeight = Number.NaN
-  let lastKind = 0
-  let number = 0
   for (let j = first; j < last; j++) {
     const rangeM = ray.firstM + j * ray.stepM
-    const targetM = aboveGround ? groundM[from + j] + levelM : levelM
+    const targetM = groundM[from + j] + levelM
     start = reflectionTo(ray, j, rangeM, topM, start)
     if (targetM < topM) reflectionTo(ray, j, rangeM, targetM, start)
-    if (ray.atKind === REFLECTS.none) continue
-    if (ray.atHeightM !== lastHeight || ray.atKind !== lastKind) {
-      lastHeight = ray.atHeightM
-      lastKind = ray.atKind
-      number = surfaceNumber(surfaces, lastKind, lastHeight)
-    }
-    numbers[from + j] = number
+    if (ray.atKind !== REFLECTS.none) numbers[from + j] = surfaceNumber(surfaces, ray.atKind, ray.atHeightM)
   }
 }
 

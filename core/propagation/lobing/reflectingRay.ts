@@ -176,26 +176,65 @@ function meetsAgain(ray: ReflectingRay, i: number): number {
   return meets[i]
 }
 
+/** Is a cell, with the one before it, a surface that the ray to a target in a cell farther out may come off? */
+const isMirror = (ray: ReflectingRay, i: number, cell: number): boolean =>
+  i > 0 && ray.kind[i - 1] !== REFLECTS.none && ray.tan[i] > 0 && meetsAgain(ray, i) >= cell
+
 /**
- * Looks for the reflection point toward a target (height m MSL) at a ground range (m) in cell `cell` of the ray, from cell `start` on: the first
- * reflecting cell whose ray passes at or under the target, between it and the reflecting cell before. Returns the cell the search got to, the
- * start for any target farther out at the same height or higher; the surface is in `ray.at…`, `atKind` REFLECTS.none where there is none in sight
- * of both ends.
+ * Looks for the surface that the ray toward a target (height m MSL) at a ground range (m) in cell `cell` comes off, from cell `start` on: the first
+ * reflecting cell whose ray passes at or under the target, if the cell before it reflects too. Returns the cell the search got to, the start for any
+ * target farther out at the same height or higher; the surface is in `ray.at…`, `atKind` REFLECTS.none where there is none in sight of both ends.
  */
 export function reflectionTo(ray: ReflectingRay, cell: number, rangeM: number, targetM: number, start: number): number {
-  const { kind, heightM, tan } = ray
+  const { kind, heightM } = ray
   let i = start
   while (i < cell && (kind[i] === REFLECTS.none || reflectedM(ray, i, rangeM) > targetM)) i++
   ray.atKind = REFLECTS.none
-  if (i >= cell || i === 0 || kind[i - 1] === REFLECTS.none) return i
-  const before = reflectedM(ray, i - 1, rangeM) - targetM
-  const here = reflectedM(ray, i, rangeM) - targetM
-  // the cell before starts the stretch: its ray already passes under the target
-  if (!(before > 0)) return i
-  const t = before / (before - here)
-  const near = t < 0.5 ? i - 1 : i
-  if (meetsAgain(ray, near) < cell || !(tan[near] > 0)) return i
-  ray.atHeightM = heightM[near]
-  ray.atKind = kind[near]
+  if (i >= cell || !isMirror(ray, i, cell)) return i
+  ray.atHeightM = heightM[i]
+  ray.atKind = kind[i]
   return i
+}
+
+/** Range at which the ray off cell i reaches a height (m MSL), m; Infinity where it never does. */
+function reachesM(ray: ReflectingRay, i: number, targetM: number): number {
+  while (ray.ready <= i) readyNext(ray)
+  const { c, tan, firstM, stepM } = ray
+  const rise = targetM - ray.heightM[i]
+  const slope = tan[i]
+  const root = slope * slope + 2 * c * rise
+  if (rise < 0 || root < 0) return rise < 0 ? 0 : Number.POSITIVE_INFINITY
+  const x = c > 0 ? (2 * rise) / (slope + Math.sqrt(root)) : rise / slope
+  return firstM + i * stepM + (x >= 0 ? x : Number.POSITIVE_INFINITY)
+}
+
+/** `reflectionTo` for every cell first … last−1 at one height (m MSL); `each` gets the stretches of cells whose rays come off one surface. */
+export function reflectionsAt(
+  ray: ReflectingRay,
+  targetM: number,
+  first: number,
+  last: number,
+  each: (fromCell: number, toCell: number, kind: number, heightM: number) => void,
+): void {
+  const { kind, firstM, stepM } = ray
+  let i = 0
+  let toM = -1
+  for (let j = first; j < last; ) {
+    while (i < j) {
+      if (kind[i] !== REFLECTS.none) {
+        if (toM < 0) toM = reachesM(ray, i, targetM)
+        if (toM >= firstM + j * stepM) break
+      }
+      i++
+      toM = -1
+    }
+    if (i >= j) {
+      j++
+      continue
+    }
+    let end = j + 1
+    while (end < last && firstM + end * stepM <= toM) end++
+    if (isMirror(ray, i, j)) each(j, Math.min(end, ray.meets[i] + 1), kind[i], ray.heightM[i])
+    j = end
+  }
 }
