@@ -170,6 +170,7 @@ describe('ladder', () => {
     over40Km2: [10, 30, 50, 80],
     usablePct: [20, 40, 80, 90],
     shortKm2: [1, 2, 3, 4],
+    octantPct: [],
     needMet: [
       { needId: 'n1', name: 'one', intervals: [[10, 14] as const, [24, 40] as const] },
       { needId: 'n2', name: 'two', intervals: [[25, 40] as const] },
@@ -241,6 +242,40 @@ describe('suppression needed against available', () => {
     expect(c.suppressionRows(shared).kinds).toBe(1)
     expect(c.suppressionChart({ figures: shared, width: 520, height: 240, system: 'metric', size }).rows.at(-1)?.words).toBe(
       'every kind of clutter: available 32\u202fdB',
+    )
+  })
+})
+
+describe('horizons beside the option’s own', () => {
+  const rows = sampleRows(0.7, 2)
+  const azimuthsDeg = Array.from({ length: 360 }, (_, i) => i)
+  const flat = (k: number, cover: boolean, deg: number) => ({ k, cover, azimuthsDeg, elevationDeg: new Float64Array(360).fill(deg) })
+  const lines = [flat(4 / 3, false, 0.2), flat(1, false, 0.1), flat(1, true, 0.15)]
+  const measured = {
+    points: [10, 12, 14, 40].map((azimuthDeg) => ({ azimuthDeg, elevationDeg: 0.3 })),
+    gapDeg: 5,
+  }
+  const input = { rows, lines, measured, width: 640, height: 210, system: 'metric', size, style: 'strip' } as const
+  it('are named in one row with what was measured, and what is measured is not joined over a wide gap', () => {
+    const { drawing } = c.horizonChart(input)
+    const texts = drawing.items.flatMap((i) => (i.kind === 'text' ? [i.text] : []))
+    for (const words of ['with cover, k = 4/3', 'bare ground, k = 4/3', 'bare ground, k = 1', 'with cover, k = 1', 'measured'])
+      expect(texts).toContain(words)
+    const line = drawing.items.find((i) => i.kind === 'path' && i.stroke === 'cool-7' && i.width === 1.6)
+    expect(line?.kind === 'path' && (line.d.match(/M/g) ?? []).length).toBe(2)
+    expect(outside(drawing)).toEqual([])
+  })
+  it('a stretched scale shows the lower part larger and breaks what stands over it', () => {
+    const whole = c.horizonChart(input).elevation
+    const part = c.horizonChart({ ...input, stretch: 4 }).elevation
+    expect((whole.to - whole.from) / (part.to - part.from)).toBeCloseTo(4, 6)
+    const svg = c.svgOf(c.horizonChart({ ...input, stretch: 8 }).drawing)
+    expect(svg).not.toMatch(/NaN|Infinity|undefined/)
+  })
+  it('and as one table', () => {
+    const head = c.horizonCsv({ rows, lines, measured }).split('\n')[0]
+    expect(head).toBe(
+      'azimuth_deg,elevation_deg,range_m,obstacle,bare_ground_k_1.33_deg,bare_ground_k_1.00_deg,surface_k_1.00_deg,measured_deg',
     )
   })
 })

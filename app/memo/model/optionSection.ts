@@ -1,5 +1,5 @@
 import type { NeedFigure, OptionResult } from '../../../core/index.ts'
-import { horizonChart, isAtLeast, ringChart, ringFinding, suppressionRows, whyAtLeast } from '../../charts/index.ts'
+import { horizonChart, isAtLeast, measuredPoints, ringChart, ringFinding, suppressionRows, whyAtLeast } from '../../charts/index.ts'
 import {
   CAUTIONS,
   cautionsFor,
@@ -179,7 +179,18 @@ const obstacleWords = (names: readonly string[]): string => (names.length === 1 
 function horizonFigure(input: MemoInput, r: OptionResult, number: number): Block {
   const { rows, highest, medianDeg } = r.figures.horizon
   const { system } = input
-  const chart = { rows, width: TEXT_WIDTH_PT, height: 132, system, size: SMALL_PT - 1, style: 'chart', labels: 7 } as const
+  const measured = measuredPoints(r.figures.measuredHorizon)
+  const height = measured ? 144 : 132
+  const chart = {
+    rows,
+    width: TEXT_WIDTH_PT,
+    height,
+    system,
+    size: SMALL_PT - 1,
+    style: 'chart',
+    labels: 7,
+    ...(measured ? { measured } : {}),
+  } as const
   const finding =
     highest === null
       ? 'No azimuth has a known horizon.'

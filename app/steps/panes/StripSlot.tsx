@@ -1,4 +1,5 @@
-import { lazy, Suspense, useCallback, useState } from 'react'
+import { lazy, Suspense, useCallback, useMemo, useState } from 'react'
+import { measuredPoints } from '../../charts/index.ts'
 import { optionKey } from '../../document/index.ts'
 import type { MapHub } from '../../map/index.ts'
 import { useResults, useSession, useView } from '../session/index.ts'
@@ -16,7 +17,9 @@ export function StripSlot({ hub }: { hub: MapHub }) {
   const { view } = useSession()
   const option = useView((v) => v.option)
   const units = useView((v) => v.units)
-  const horizon = useResults((r) => (option ? r.byOption.get(optionKey(option))?.figures.horizon : undefined))
+  const figures = useResults((r) => (option ? r.byOption.get(optionKey(option))?.figures : undefined))
+  const horizon = figures?.horizon
+  const measured = useMemo(() => measuredPoints(figures?.measuredHorizon), [figures])
   const [stretched, setStretched] = useState(false)
   const { answer: lines } = useAnswer('horizons', stretched && option ? { option } : null)
   const open = useCallback(
@@ -32,7 +35,7 @@ export function StripSlot({ hub }: { hub: MapHub }) {
         hub={hub}
         rows={horizon?.rows ?? NO_ROWS}
         lines={lines ?? NO_ROWS}
-        measured={null}
+        measured={measured}
         units={units}
         onPick={open}
         onStretched={setStretched}
