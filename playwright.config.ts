@@ -27,7 +27,13 @@ export default defineConfig({
   timeout: 180_000,
   expect: { timeout: 20_000 },
   reporter: [['list'], ['json', { outputFile: process.env.PLAYWRIGHT_JSON_OUTPUT_NAME ?? 'test-results/e2e.json' }]],
-  use: { baseURL: url, viewport: { width: 1440, height: 900 }, actionTimeout: 60_000, screenshot: 'only-on-failure' },
+  use: {
+    baseURL: url,
+    serviceWorkers: 'block',
+    viewport: { width: 1440, height: 900 },
+    actionTimeout: 60_000,
+    screenshot: 'only-on-failure',
+  },
   webServer: {
     command: `npx vite preview --port ${port}${dist ? ` --outDir ${dist}` : ''}`,
     url,

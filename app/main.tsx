@@ -17,3 +17,8 @@ createRoot(document.getElementById('root') as HTMLElement).render(
     <App session={session} />
   </StrictMode>,
 )
+
+/** A while after the page stands, so that nothing waits for it: the build's own files are kept for days without a network. */
+const KEEP_AFTER_MS = 8000
+if (import.meta.env.PROD && 'serviceWorker' in navigator)
+  setTimeout(() => navigator.serviceWorker.register(`${import.meta.env.BASE_URL}offline.js`).catch(() => {}), KEEP_AFTER_MS)

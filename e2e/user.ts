@@ -116,7 +116,9 @@ export async function everythingRun(page: Page): Promise<void> {
 }
 /** A field by its label, whatever mark stands beside it. */
 export const field = (scope: Locator, label: string): Locator =>
-  scope.getByRole('textbox', { name: new RegExp(`^${label.replace(/[()]/g, '\\$&')}(\\s*(default|from memory|by hand))?$`) })
+  scope.getByRole('textbox', {
+    name: new RegExp(`^${label.replace(/[()]/g, '\\$&')}(\\s*(default|from memory|by hand|worked out|read|chosen here))?$`),
+  })
 export async function setField(scope: Locator, label: string, value: string): Promise<void> {
   const into = field(scope, label)
   await into.fill(value)

@@ -8,6 +8,8 @@ const DIALOGS: Partial<Record<NonNullable<OpenDialog>, ComponentType>> = {
   confirmations: lazy(() => import('../memo/ConfirmationsDialog.tsx').then((m) => ({ default: m.ConfirmationsDialog }))),
   models: lazy(() => import('../memo/ModelsDialog.tsx').then((m) => ({ default: m.ModelsDialog }))),
   fixes: lazy(() => import('../forms/FixesDialog.tsx').then((m) => ({ default: m.FixesDialog }))),
+  commands: lazy(() => import('./CommandsDialog.tsx').then((m) => ({ default: m.CommandsDialog }))),
+  keys: lazy(() => import('./KeysDialog.tsx').then((m) => ({ default: m.KeysDialog }))),
   north: lazy(() => import('./NorthDialog.tsx').then((m) => ({ default: m.NorthDialog }))),
   obstacles: lazy(() => import('../forms/ObstaclesDialog.tsx').then((m) => ({ default: m.ObstaclesDialog }))),
   pulses: lazy(() => import('../forms/PulsesDialog.tsx').then((m) => ({ default: m.PulsesDialog }))),

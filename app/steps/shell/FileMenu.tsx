@@ -17,6 +17,8 @@ export function FileMenu() {
           { id: 'studies', words: 'Studies on this machine…', run: () => session.view.getState().set({ dialog: 'studies' }) },
           { id: 'new', words: 'New study', run: () => void session.newStudy() },
           { id: 'demo', words: 'Open the demo study', run: () => void session.openDemo() },
+          { id: 'commands', words: 'Find a command…', hint: 'Ctrl K', run: () => session.view.getState().set({ dialog: 'commands' }) },
+          { id: 'keys', words: 'Keys…', hint: 'Ctrl /', run: () => session.view.getState().set({ dialog: 'keys' }) },
         ]}
       />
       <input

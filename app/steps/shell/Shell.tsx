@@ -122,9 +122,9 @@ function Notices() {
   )
 }
 
-/** Ctrl+S saves; Ctrl+Z and Ctrl+Shift+Z (or Ctrl+Y) undo and redo, unless a text field is being edited. */
+/** Ctrl+K finds a command, Ctrl+/ lists the keys, Ctrl+S saves; Ctrl+Z and Ctrl+Shift+Z (or Ctrl+Y) undo and redo, unless a text field is being edited. */
 function useKeys() {
-  const { study, saveStudy } = useSession()
+  const { study, view, saveStudy } = useSession()
   useEffect(() => {
     const onKey = (e: KeyboardEvent) => {
       if (!(e.ctrlKey || e.metaKey) || e.altKey) return
@@ -132,6 +132,13 @@ function useKeys() {
       if (key === 's') {
         e.preventDefault()
         saveStudy()
+        return
+      }
+      if (key === 'k' || key === '/') {
+        e.preventDefault()
+        // a table in hand may hold what is not saved yet: it is closed by its own buttons
+        if (document.querySelector('.edit-table')) return
+        view.getState().set({ dialog: key === 'k' ? 'commands' : 'keys' })
         return
       }
       if (key !== 'z' && key !== 'y') return
@@ -143,5 +150,5 @@ function useKeys() {
     }
     window.addEventListener('keydown', onKey)
     return () => window.removeEventListener('keydown', onKey)
-  }, [study, saveStudy])
+  }, [study, view, saveStudy])
 }

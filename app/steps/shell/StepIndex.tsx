@@ -1,5 +1,6 @@
 import { Button } from 'react-aria-components'
 import { hasStartingRadar, optionKey, problemsOf, STEPS, type StepId, studyOptions } from '../../document/index.ts'
+import { Button as AppButton } from '../../ui/Button.tsx'
 import { STEP_WORDS } from '../../words/index.ts'
 import { useDoc, useGround, useResults, useSession, useView } from '../session/index.ts'
 import { Working } from './Working.tsx'
@@ -84,6 +85,14 @@ export function StepIndex() {
           </li>
         ))}
       </ol>
+      <div className="helpers">
+        <AppButton small look="quiet" label="Find a command" onPress={() => view.getState().set({ dialog: 'commands' })}>
+          find
+        </AppButton>
+        <AppButton small look="quiet" label="Keys of the page" onPress={() => view.getState().set({ dialog: 'keys' })}>
+          keys
+        </AppButton>
+      </div>
       <Working />
     </nav>
   )
