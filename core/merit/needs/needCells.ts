@@ -3,7 +3,7 @@ import { canonicalJson, type SettledNeed } from '../../study/index.ts'
 import { toDb, wavelengthM } from '../../units/index.ts'
 import { antennaM, meanEffectiveRadiusM, type OptionCells, residueOf } from '../optionCells.ts'
 import { fillLevelRow, lossesBetween, makeLevelRow, type RowModel } from '../signal/levelRow.ts'
-import { fillLobes, lobeGrid, lobeModel } from '../signal/lobing.ts'
+import { fillLobes, lobeGrid, lobeModel } from '../signal/lobing/index.ts'
 import { overloadOf, thresholdRiseOf } from '../signal/receiverLimits.ts'
 import { targetSignal } from '../signal/targetSignal.ts'
 import { type LevelTest, makeNeedRow, type NeedRow, startRow, testLevel } from './levelTest.ts'
@@ -114,11 +114,12 @@ export function scanNeed(
       o.mask,
       signal,
       mast,
+      c,
       canonicalJson([need.kind, need.id, need.heightAbove, need.fromRangeM, need.toRangeM, need.sectorDeg]),
-      tests.flatMap((t) => [
-        { row: t.row, levelM: t.levelM, c },
-        ...(t.rowLow && lowModel ? [{ row: t.rowLow, levelM: t.levelM, c: lowModel.c }] : []),
-      ]),
+      tests.map(({ levelM, row, rowLow }) => ({
+        levelM,
+        rows: [{ row, c }, ...(rowLow && lowModel ? [{ row: rowLow, c: lowModel.c }] : [])],
+      })),
     )
   const cells = { groundM, code: o.site.code, relief: o.site.relief, inSight: o.mask.inSight }
   const row = makeNeedRow(ranges)

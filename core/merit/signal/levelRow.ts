@@ -19,7 +19,6 @@ export interface LevelRow {
   readonly above: Uint8Array
   /** Loss of direct and reflected ray together where the mask is clear, two ways, dB; filled by `fillLobes` where anything reflects. */
   readonly lobeDb: Float32Array
-  lobed: boolean
 }
 export const makeLevelRow = (ranges: number): LevelRow => ({
   slantM: new Float32Array(ranges),
@@ -30,7 +29,6 @@ export const makeLevelRow = (ranges: number): LevelRow => ({
   heard: new Uint8Array(ranges),
   above: new Uint8Array(ranges),
   lobeDb: new Float32Array(ranges),
-  lobed: false,
 })
 
 /** What turns geometry into a row: the signal, the ratio asked for, the gain of a bank over noise (dB), the mast and the earth. */

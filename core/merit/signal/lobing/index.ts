@@ -1,0 +1,3 @@
+export { fillLobes, lobeGrid } from './cells.ts'
+export { type LobeModel, lobeModel } from './model.ts'
+export { type Lobe, type LobePlace, lobeAt } from './place.ts'
