@@ -2,9 +2,9 @@ import { useId, useLayoutEffect, useMemo, useRef, useState } from 'react'
 import { Button } from 'react-aria-components'
 import { type Ladder, ladderHeightsM } from '../../core/index.ts'
 import { ladderGeometry, textWidth } from '../charts/index.ts'
-import { formatAreaUp, formatHeight, formatMast, formatMetPct, MAP_WORDS, NO_VALUE, textOf } from '../words/index.ts'
+import { formatAngle, formatAreaUp, formatHeight, formatMast, formatMetPct, MAP_WORDS, NO_VALUE, textOf } from '../words/index.ts'
 import { RulerScale } from './ruler/RulerScale.tsx'
-import { BETWEEN_STEP_M, nextStated, snapped } from './ruler/rulerGeometry.ts'
+import { BETWEEN_STEP_M, nextStated, nextStep, signedPct, snapped } from './ruler/rulerGeometry.ts'
 import { useLadder } from './ruler/useLadder.ts'
 import type { RulerProps } from './types.ts'
 import { useChannel } from './useChannel.ts'
@@ -12,7 +12,7 @@ import './ruler.css'
 
 const AXIS_X = 30
 const TOP_PAD = 12
-const FOOT_PAD = 10
+const FOOT_PAD = 22
 
 /** The mast is a ruler: a scale in metres with the ground at its foot, the height ladder running up it, and the mast to drag. */
 export function Ruler(props: RulerProps) {
@@ -20,7 +20,7 @@ export function Ruler(props: RulerProps) {
   const box = useRef<HTMLDivElement>(null)
   const [size, setSize] = useState({ width: 0, height: 0 })
   const trial = useChannel(hub.trial)
-  const ladder = useLadder(client, groundM === null ? null : (candidate?.id ?? null), props.basis)
+  const { ladder, working } = useLadder(client, groundM === null ? null : (candidate?.id ?? null), props.basis)
   const helpId = useId()
   // biome-ignore lint/correctness/useExhaustiveDependencies: the box is there only with a candidate
   useLayoutEffect(() => {
@@ -51,9 +51,12 @@ export function Ruler(props: RulerProps) {
   const mine = trial && trial.candidate === candidate.id && trial.moving === 'mast' ? trial : null
   const heightM = mine?.heightM ?? option.heightM
   const isStated = stated.includes(heightM)
-  const now = geometry.valuesAt(heightM)
+  // the option's own figures are there before the ladder is
+  const now = (heightM === option.heightM ? props.own : null) ?? geometry.valuesAt(heightM)
   // usable and short of suppression are shares of needs: without one the strips show the ground itself
   const asked = ladder ? ladder.needMet.length > 0 : props.asked
+  const gains = nextStep(ladder, heightM)
+  const most = ladder ? Math.max(0, ...(asked ? ladder.shortKm2 : ladder.over40Km2)) : 0
   const seen = asked ? 'usable' : 'inSight'
   const echo = asked ? 'short' : 'clutter'
   const place = { lon: candidate.lon, lat: candidate.lat }
@@ -104,6 +107,7 @@ export function Ruler(props: RulerProps) {
           stripPx={stripPx}
           geometry={geometry}
           strips={asked ? [geometry.usable, geometry.short] : [geometry.inSight, geometry.clutter]}
+          ends={[MAP_WORDS.stripFull, most > 0 ? textOf(formatAreaUp(most, units)) : '']}
           stated={stated}
           heightM={heightM}
           topM={topM}
@@ -134,6 +138,30 @@ export function Ruler(props: RulerProps) {
             <span className="ink-3">{MAP_WORDS.dragMast}</span>
           </>
         )}
+        {working ? <span className="ink-3">{MAP_WORDS.ladderWorking}</span> : null}
+        {gains ? (
+          <p className="gains" title={MAP_WORDS.gainsHint(asked)}>
+            {MAP_WORDS.gains(textOf(formatMast(gains.toM)))}{' '}
+            {gains.octants.length === 0 ? MAP_WORDS.noGain : gains.octants.map((g) => `${g.name}\u00a0${signedPct(g.pct)}`).join(' · ')}
+          </p>
+        ) : null}
+        {candidate.tiltsDeg.length > 1 ? (
+          <fieldset className="ruler-tilts" aria-label={MAP_WORDS.tiltOf}>
+            <span className="ink-2">{MAP_WORDS.tilt}</span>
+            {[...candidate.tiltsDeg]
+              .sort((a, b) => a - b)
+              .map((t) => (
+                <Button
+                  key={t}
+                  className={t === option.tiltDeg ? 'tick on' : 'tick'}
+                  aria-pressed={t === option.tiltDeg}
+                  onPress={() => props.onTilt(t)}
+                >
+                  {textOf(formatAngle(t, 0.1))}
+                </Button>
+              ))}
+          </fieldset>
+        ) : null}
         {geometry.notMet.map((n) => (
           <span key={n.needId} className="not-met" title={n.name}>
             {MAP_WORDS.needNotMet(MAP_WORDS.needNumber(numberOf(ladder, n.needId)), textOf(formatMast(topM)))}

@@ -14,7 +14,7 @@ import type {
   RoadLines,
   View,
 } from '../../core/index.ts'
-import type { Drawing } from '../charts/index.ts'
+import type { Drawing, LadderValues } from '../charts/index.ts'
 import type { StudyClient } from '../compute/client.ts'
 import type { UnitSystem } from '../words/index.ts'
 
@@ -154,6 +154,10 @@ export interface RulerProps {
   /** The study states a need: the strips are about it, else about the ground. */
   readonly asked: boolean
   readonly units: UnitSystem
+  /** Figures of the option on show, there before the ladder is; null while not worked out. */
+  readonly own: LadderValues | null
+  /** A stated tilt was chosen. */
+  readonly onTilt: (tiltDeg: number) => void
   /** A stated height was chosen. */
   readonly onHeight: (heightM: number) => void
   /** The height between that is on trial shall join the study. */

@@ -58,7 +58,7 @@ export const MAP_WORDS = {
   stretch: 'Stretch',
   mast: 'Mast, m',
   mastOf: 'Mast height, m above ground',
-  strips: { usable: 'usable', short: 'suppression short', inSight: 'in sight', clutter: '> 40\u202fdB' },
+  strips: { usable: 'usable', short: 'short', inSight: 'in sight', clutter: '> 40\u202fdB' },
   stripHints: {
     usable: 'Share of the area of the first need that is usable',
     short: 'Area of all needs where more suppression is needed than there is',
@@ -70,6 +70,15 @@ export const MAP_WORDS = {
   /** Classes of the layer `usable`, from 1. */
   usableClasses: ['in sight', 'detectable', 'usable'],
   dragMast: 'drag the mast',
+  ladderWorking: 'ladder: working',
+  gains: (text: string) => `to ${text}:`,
+  gainsHint: (asked: boolean) =>
+    asked
+      ? 'Percentage points of the first need usable, by octant, one step of the ladder up'
+      : 'Percentage points of ground in sight, by octant, one step of the ladder up',
+  noGain: 'nothing more',
+  tilt: 'Tilt',
+  tiltOf: 'Tilt of the antenna, deg',
   mastKeys: 'Arrows step through stated heights, Shift for 0.5 m between',
   addHeight: (text: string) => `Add ${text}`,
   putBack: 'Put back',

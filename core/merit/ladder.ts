@@ -1,8 +1,10 @@
+import { CELL, cellAreasM2 } from '../polar/index.ts'
 import type { SettledNeed } from '../study/index.ts'
 import { groundSums } from './groundFigures.ts'
-import { needFigure } from './needs/needFigure.ts'
+import { cellsOfNeed, isAreaNeed, needFigure } from './needs/needFigure.ts'
+import { PLACE } from './needs/place.ts'
 import type { OptionCells } from './optionCells.ts'
-import type { Ladder } from './types.ts'
+import type { Figures, Ladder } from './types.ts'
 
 /** One rung: what the ruler shows of an option at one mast height. */
 export interface Rung {
@@ -11,6 +13,7 @@ export interface Rung {
   readonly usablePct: number
   readonly over40Km2: number
   readonly shortKm2: number
+  readonly octantPct: readonly (number | null)[]
   readonly needs: readonly { readonly needId: string; readonly name: string; readonly met: boolean }[]
 }
 
@@ -28,7 +31,49 @@ export function rung(o: OptionCells, needs: readonly SettledNeed[]): Rung {
     usablePct: figures[0]?.usablePct ?? 0,
     over40Km2: sums.over.over40,
     shortKm2: figures.reduce((s, f) => s + f.suppression.shortKm2, 0),
+    octantPct: octantPct(o, needs.find(isAreaNeed) ?? null),
     needs: figures.map((f) => ({ needId: f.needId, name: f.name, met: f.passes ?? f.met })),
+  }
+}
+
+const OCTANTS = 8
+/** By octant: share of a need's area that is usable, or of known ground that is in sight, %; null where there is none of it. */
+export function octantPct(o: OptionCells, need: SettledNeed | null): (number | null)[] {
+  const { azimuths, ranges, azimuthStepDeg } = o.site.grid
+  const areas = cellAreasM2(o.site.grid, o.place.lat)
+  const place = need ? (cellsOfNeed(o, need)?.place ?? null) : null
+  const whole = new Float64Array(OCTANTS)
+  const part = new Float64Array(OCTANTS)
+  for (let i = 0; i < azimuths; i++) {
+    const octant = Math.floor((i * azimuthStepDeg * OCTANTS) / 360 + 0.5) % OCTANTS
+    for (let j = 0, at = i * ranges; j < ranges; j++, at++) {
+      if (place) {
+        if (!(place[at] & PLACE.inNeed) || place[at] & PLACE.groundAbove) continue
+        whole[octant] += areas[j]
+        if (place[at] & PLACE.usable) part[octant] += areas[j]
+      } else if (o.mask.state[at] !== CELL.beyondVoid && o.mask.state[at] !== CELL.outside) {
+        whole[octant] += areas[j]
+        part[octant] += (o.mask.inSight[at] / 65535) * areas[j]
+      }
+    }
+  }
+  return Array.from(whole, (area, n) => (area > 0 ? (100 * part[n]) / area : null))
+}
+
+/** The ladder's numbers of an option whose figures are there: the same as its rung has. */
+export function ladderValuesOf(f: Pick<Figures, 'needs' | 'groundInSightKm2' | 'maskedKm2' | 'clutterOverKm2'>): {
+  readonly inSightPct: number
+  readonly usablePct: number
+  readonly over40Km2: number
+  readonly shortKm2: number
+} {
+  const assessed = f.needs.filter((n) => n.notAssessed === null)
+  const known = f.groundInSightKm2 + f.maskedKm2
+  return {
+    inSightPct: assessed[0]?.inSightPct ?? (known > 0 ? (100 * f.groundInSightKm2) / known : 0),
+    usablePct: assessed[0]?.usablePct ?? 0,
+    over40Km2: f.clutterOverKm2.over40,
+    shortKm2: assessed.reduce((s, n) => s + n.suppression.shortKm2, 0),
   }
 }
 
@@ -40,6 +85,7 @@ export function ladderOf(rungs: readonly Rung[]): Ladder {
     usablePct: rungs.map((r) => r.usablePct),
     over40Km2: rungs.map((r) => r.over40Km2),
     shortKm2: rungs.map((r) => r.shortKm2),
+    octantPct: rungs.map((r) => r.octantPct),
     needMet: needs.map(({ needId, name }, k) => ({ needId, name, intervals: intervalsOf(rungs, k) })),
     needMetAtM: needs.map(({ needId, name }, k) => ({
       needId,

@@ -97,6 +97,11 @@ export interface Ladder {
   readonly usablePct: readonly number[]
   /** Area of all needs where suppression is short, km². */
   readonly shortKm2: readonly number[]
+  /**
+   * By octant about N, NE, E … (± 22.5°, true), per height: share of the area of the first need of an area that is usable, of known ground in sight
+   * where there is none, %; null where the octant has nothing of it.
+   */
+  readonly octantPct: readonly (readonly (number | null)[])[]
   /** Every interval of the ladder in which a need is met at the study's k and at k = 1; a taller mast can lose one. */
   readonly needMet: readonly {
     readonly needId: string

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest'
-import { labelPlaces, nextStated, snapped } from '../../app/map/ruler/rulerGeometry.ts'
+import { labelPlaces, nextStated, nextStep, signedPct, snapped } from '../../app/map/ruler/rulerGeometry.ts'
+import type { Ladder } from '../../core/index.ts'
 
 describe('the mast as a ruler', () => {
   const stated = [10, 20, 35]
@@ -25,5 +26,32 @@ describe('the mast as a ruler', () => {
       expect(y).toBeGreaterThanOrEqual(10)
       expect(y).toBeLessThanOrEqual(400)
     }
+  })
+})
+
+describe('one more step of mast', () => {
+  const ladder = {
+    heightsM: [10, 20, 30],
+    octantPct: [
+      [50, 50, null, 50, 50, 50, 50, 50],
+      [50.2, 62, null, 50, 45, 50, 50, 53],
+      [51, 62, 3, 50, 45, 50, 50, 53],
+    ],
+  } as unknown as Ladder
+  it('tells by octant what it brings, most first, and what it costs; no change is left out', () => {
+    expect(nextStep(ladder, 10)).toEqual({
+      toM: 20,
+      octants: [
+        { name: 'NE', pct: 12 },
+        { name: 'NW', pct: 3 },
+        { name: 'S', pct: -5 },
+      ],
+    })
+    expect([signedPct(12.4), signedPct(-5)]).toEqual(['+12', '−5'])
+  })
+  it('has nothing to say at the top, between rungs and without a ladder', () => {
+    expect(nextStep(ladder, 30)).toBeNull()
+    expect(nextStep(ladder, 15)).toBeNull()
+    expect(nextStep(null, 10)).toBeNull()
   })
 })

@@ -215,6 +215,7 @@ describe('the ladder', () => {
       usablePct: 40 + n,
       over40Km2: n,
       shortKm2: 2 * n,
+      octantPct: [],
       needs: [{ needId: 'n', name: 'need', met }],
     }))
     const ladder = ladderOf(rungs)

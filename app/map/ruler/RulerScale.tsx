@@ -14,6 +14,8 @@ export interface RulerScaleProps {
   readonly geometry: LadderGeometry
   /** Outlines of the two strips: what is seen, what comes back. */
   readonly strips: readonly [string, string]
+  /** Words at the full width of each strip; '' where there is none. */
+  readonly ends: readonly [string, string]
   readonly stated: readonly number[]
   readonly heightM: number
   readonly topM: number
@@ -109,8 +111,16 @@ export function RulerScale(p: RulerScaleProps) {
         <g className="full" aria-hidden>
           <path d={`M${first + stripPx} ${topPad}V${footY}`} />
           <text x={first + stripPx} y={topPad - 2} textAnchor="end">
-            {MAP_WORDS.stripFull}
+            {p.ends[0]}
           </text>
+          {p.ends[1] ? (
+            <>
+              <path d={`M${second + stripPx} ${topPad}V${footY}`} />
+              <text x={Math.min(second + stripPx, right)} y={footY + 12} textAnchor="end">
+                {p.ends[1]}
+              </text>
+            </>
+          ) : null}
         </g>
       ) : null}
       {g.intervals.map((need, n) =>

@@ -1,3 +1,5 @@
+import type { Ladder } from '../../../core/index.ts'
+
 /** Heights between stated ones are tried in steps of this, m. */
 export const BETWEEN_STEP_M = 0.5
 /** A pointer this near a stated height takes it, px. */
@@ -40,3 +42,24 @@ export function labelPlaces(wanted: readonly number[], fixed: readonly number[],
   }
   return out
 }
+
+const OCTANT_NAMES = ['N', 'NE', 'E', 'SE', 'S', 'SW', 'W', 'NW'] as const
+/** Gains smaller than this are not told, percentage points. */
+const LEAST_GAIN = 0.5
+/** What one more step of the ladder brings by octant, most first: percentage points of what is usable there; null at the top and without a ladder. */
+export function nextStep(
+  ladder: Ladder | null,
+  heightM: number,
+): { readonly toM: number; readonly octants: readonly { readonly name: string; readonly pct: number }[] } | null {
+  const at = ladder ? ladder.heightsM.findIndex((h) => Math.abs(h - heightM) < 1e-9) : -1
+  const toM = ladder?.heightsM[at + 1]
+  const [now, then] = [ladder?.octantPct[at], ladder?.octantPct[at + 1]]
+  if (at < 0 || toM === undefined || !now || !then) return null
+  const octants = OCTANT_NAMES.flatMap((name, n) => {
+    const [a, b] = [now[n] ?? null, then[n] ?? null]
+    return a === null || b === null || Math.abs(b - a) < LEAST_GAIN ? [] : [{ name, pct: b - a }]
+  })
+  return { toM, octants: octants.sort((a, b) => b.pct - a.pct) }
+}
+/** `+12` or `−3`, whole percentage points. */
+export const signedPct = (pct: number): string => `${pct < 0 ? '−' : '+'}${Math.round(Math.abs(pct))}`

@@ -11,9 +11,13 @@ const REFUSALS = 5
  * Results against mast height of one candidate; null until they are there. `basis` is another object whenever study, ground or tilt are others.
  * An older ladder of the same candidate stays until the next.
  */
-export function useLadder(client: StudyClient, candidate: string | null, basis: object): Ladder | null {
-  const [held, setHeld] = useState<{ candidate: string; ladder: Ladder } | null>(null)
-  // biome-ignore lint/correctness/useExhaustiveDependencies: another basis asks for another ladder
+export function useLadder(
+  client: StudyClient,
+  candidate: string | null,
+  basis: object,
+): { readonly ladder: Ladder | null; readonly working: boolean } {
+  const [held, setHeld] = useState<{ candidate: string; ladder: Ladder; basis: object } | null>(null)
+  const [refusedFor, setRefusedFor] = useState<object | null>(null)
   useEffect(() => {
     if (candidate === null) return
     let gone = false
@@ -27,10 +31,11 @@ export function useLadder(client: StudyClient, candidate: string | null, basis: 
         .ask('ladder', { candidate })
         .then((ladder) => {
           if (!ladder) later()
-          else if (!gone) setHeld({ candidate, ladder })
+          else if (!gone) setHeld({ candidate, ladder, basis })
         })
         .catch(() => {
           if (++refused <= REFUSALS) later()
+          else if (!gone) setRefusedFor(basis)
         })
     later()
     return () => {
@@ -38,5 +43,6 @@ export function useLadder(client: StudyClient, candidate: string | null, basis: 
       clearTimeout(again)
     }
   }, [client, candidate, basis])
-  return held && held.candidate === candidate ? held.ladder : null
+  const ladder = held && held.candidate === candidate ? held.ladder : null
+  return { ladder, working: candidate !== null && refusedFor !== basis && (ladder === null || held?.basis !== basis) }
 }

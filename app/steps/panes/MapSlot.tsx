@@ -1,5 +1,5 @@
 import { lazy, Suspense, useMemo, useState } from 'react'
-import { differenceInfo, type LonLat, type OptionRef } from '../../../core/index.ts'
+import { differenceInfo, type LonLat, ladderValuesOf, type OptionRef } from '../../../core/index.ts'
 import {
   addCandidate,
   hasStartingRadar,
@@ -223,6 +223,8 @@ export function RulerSlot({ hub }: { hub: MapHub }) {
   const candidate = useMapCandidates().find((c) => c.id === option?.candidate) ?? null
   const stated = useDoc((d) => d.candidates.find((c) => c.id === option?.candidate)?.groundHeightM)
   const raster = useGround((g) => (option ? g.candidateM.get(option.candidate) : undefined))
+  const result = useResults((r) => (option ? r.byOption.get(optionKey(option)) : undefined))
+  const own = useMemo(() => (result ? ladderValuesOf(result.figures) : null), [result])
   const show = (heightM: number) => option && view.getState().set({ option: { ...option, heightM } })
   return (
     <Suspense fallback={null}>
@@ -235,6 +237,8 @@ export function RulerSlot({ hub }: { hub: MapHub }) {
         basis={basis}
         asked={(doc.needs?.length ?? 0) > 0}
         units={units}
+        own={own}
+        onTilt={(tiltDeg) => option && view.getState().set({ option: { ...option, tiltDeg } })}
         onHeight={show}
         onAddHeight={(heightM) => {
           if (!candidate) return
