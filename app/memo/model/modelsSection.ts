@@ -52,6 +52,12 @@ const SIGNAL: readonly ModelRow[] = [
     limits: 'never a gain',
   },
   {
+    model: 'Diffracted level under the floor, range-height diagram',
+    source: 'Recommendation ITU-R P.526, delta-Bullington over the profile, medium dry ground',
+    basis: 'from memory',
+    limits: 'shown there only, counted nowhere',
+  },
+  {
     model: 'Two rays off water and open ground',
     source:
       'Kerr, Propagation of Short Radio Waves, 1951; ground constants after ITU-R P.527; roughness after Miller, Brown and Vegh, 1984',
