@@ -120,7 +120,12 @@ function placeLines(s: SightPoint, siteM: number, mastM: number): LedgerLine[] {
     info('surface', 'Surface with cover and obstacles, MSL', Number.isFinite(s.surfaceM) ? s.surfaceM : null, 'm'),
     info('in_sight', 'In sight', s.unknown ? 'unknown' : s.inSight ? 'yes' : s.marginal ? 'marginal' : 'no', ''),
     info('controlling', 'Controlling obstacle', s.controlling.obstacle, ''),
-    info('controlling_range', 'Range of the controlling obstacle', s.controlling.rangeM, 'm'),
+    info(
+      'controlling_range',
+      'Range of the controlling obstacle',
+      Number.isFinite(s.controlling.rangeM) ? s.controlling.rangeM : null,
+      'm',
+    ),
   ]
 }
 
