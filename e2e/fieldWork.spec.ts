@@ -41,7 +41,7 @@ test('a surveyed horizon is compared, then taken, and undone', async ({ page }) 
   await page.screenshot({ path: `${OUT}/survey.png` })
   await a.getByText('Take the higher of surveyed and computed').click()
   await expect(memoColumn(page)).toContainText('Taken as the higher of both', { timeout: LONG })
-  await page.keyboard.press('Control+z')
+  await page.getByRole('button', { name: /^Undo|^undo/ }).click()
   await expect(memoColumn(page)).toContainText('Beside the computed horizon only', { timeout: LONG })
 })
 
