@@ -109,7 +109,7 @@ export function EditTable<T>(props: EditTableProps<T>) {
           {columns.map((c) => (
             <col key={c.head} style={{ width: `${(96 * (c.width ?? 1)) / total}%` }} />
           ))}
-          <col style={{ width: 28 }} />
+          <col className="last" />
         </colgroup>
         <thead>
           <tr>
