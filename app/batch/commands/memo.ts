@@ -2,6 +2,7 @@ import { readFile } from 'node:fs/promises'
 import { createRequire } from 'node:module'
 import { join } from 'node:path'
 import {
+  finish,
   geodesicDirect,
   type LonLat,
   layerInfo,
@@ -11,12 +12,13 @@ import {
   type SettledStudy,
   type StudyDoc,
   type View,
+  verticalCut,
   viewOfBox,
   WORLD_WIDTH_M,
   worldXFromLon,
   worldYFromLat,
 } from '../../../core/index.ts'
-import { buildMemo, type MemoFile, type MemoMap, makePdf, pngDataUrl } from '../../memo/index.ts'
+import { buildMemo, cutOf, type MemoFile, type MemoMap, makePdf, pngDataUrl } from '../../memo/index.ts'
 
 /** Size of a map picture and its margin, pixels: as in the app. */
 const MAP_PX = { width: 920, height: 920 }
@@ -37,12 +39,16 @@ export function circleView(at: LonLat, radiusM: number): View {
   return viewOfBox(box, MAP_PX, MAP_MARGIN_PX, false)
 }
 
-/** Clutter-to-noise over shaded ground, as the memo prints it. */
-export function memoMap(cells: OptionCells, result: OptionResult, radiusM: number): MemoMap {
+/** Clutter-to-noise over shaded ground and the range-height plane, as the memo prints them. */
+export function memoMap(cells: OptionCells, result: OptionResult, study: SettledStudy): MemoMap {
+  const radiusM = study.run.maxRangeM
   const view = circleView(cells.place, radiusM)
   const pixels = paintSheet(cells, 'clutter-to-noise', null, view)
   const png = pngDataUrl(pixels, view.width, view.height)
-  return { ref: result.ref, layer: 'clutter-to-noise', view, ramp: layerInfo('clutter-to-noise').ramp, png }
+  const about = cutOf(result, radiusM)
+  const need = about && study.needs.find((n) => n.id === about.need)
+  const cut = about && need ? finish(verticalCut(cells, need, about.window)) : null
+  return { ref: result.ref, layer: 'clutter-to-noise', view, ramp: layerInfo('clutter-to-noise').ramp, png, cut }
 }
 
 /** Version of the program. */

@@ -65,7 +65,7 @@ export async function run(line: CommandLine, progress: Progress): Promise<void> 
     const { cells, result } = await workOut(engine, doc, ref, progress, name)
     results.push(result)
     await writer.write(cells, result, name)
-    if (wantsMemo) maps.push(await (await import('./memo.ts')).memoMap(cells, result, study.run.maxRangeM))
+    if (wantsMemo) maps.push(await (await import('./memo.ts')).memoMap(cells, result, study))
   }
   await writer.finish()
   await Promise.all([helpers.close(), sight.close()])

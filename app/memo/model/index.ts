@@ -1,5 +1,6 @@
 export { buildMemo } from './buildMemo.ts'
 export { cellText } from './cells.ts'
+export { cutOf } from './chartFigures.ts'
 export { modelBlocks } from './modelsSection.ts'
 export * from './ranking.ts'
 export * from './types.ts'

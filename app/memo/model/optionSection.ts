@@ -22,7 +22,7 @@ import {
   withMetric,
 } from '../../words/index.ts'
 import { bothUnits, capital, dual, dualBare, NO_HEADS, optionName, value } from './cells.ts'
-import { levelsFigure, suppressionFigure } from './chartFigures.ts'
+import { levelsFigure, suppressionFigure, verticalBlocks } from './chartFigures.ts'
 import { clutterAtKTable } from './clutterAtK.ts'
 import { exponentialWords } from './exponentialWords.ts'
 import { exposureCell } from './exposureSection.ts'
@@ -74,7 +74,7 @@ export function optionBlocks(input: MemoInput, r: OptionResult, figure: () => nu
     blocks.push(lossTable(input, r), ...placeBlocks(input, r), suppressionTable(input, r))
     blocks.push({ kind: 'paragraph', role: 'small', text: availableWords(r) })
     if (suppressionRows(r.figures).needs > 0) blocks.push(suppressionFigure(input, r, figure()))
-    blocks.push({ kind: 'caution', texts: suppressionCautions(input) })
+    blocks.push({ kind: 'caution', texts: suppressionCautions(input) }, ...verticalBlocks(input, r, figure))
   }
   const atBothK = clutterAtKTable(input, r)
   if (atBothK) blocks.push(atBothK, { kind: 'caution', texts: clutterCautions(input) })

@@ -1,4 +1,4 @@
-import type { LayerId, OptionRef, OptionResult, Ramp, SettledStudy, StudyDoc, View } from '../../../core/index.ts'
+import type { LayerId, OptionRef, OptionResult, Ramp, SettledStudy, StudyDoc, VerticalCut, View } from '../../../core/index.ts'
 import type { Drawing } from '../../charts/index.ts'
 import type { UnitSystem } from '../../words/index.ts'
 
@@ -17,6 +17,8 @@ export interface MemoMap {
   readonly ramp: Ramp
   /** PNG as `data:image/png;base64,…`. */
   readonly png: string
+  /** Range-height plane of the azimuth that `cutOf` names; absent or null where the study states no need. */
+  readonly cut?: VerticalCut | null
 }
 export interface MemoInput {
   readonly study: SettledStudy

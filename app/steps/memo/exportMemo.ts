@@ -12,9 +12,8 @@ export async function exportMemo(session: Session, date: string, onProgress: (do
   ])
   const input = memoInput(session, files, [], date)
   if (!input) return
-  const refs = input.results.map((r) => r.ref)
-  const total = refs.length + 1
-  const maps = await memoMaps(session.client, input.study, refs, pngDataUrl, (done) => onProgress(done, total))
+  const total = input.results.length + 1
+  const maps = await memoMaps(session.client, input.study, input.results, pngDataUrl, (done) => onProgress(done, total))
   const pdf = await writeMemo({ ...input, maps })
   onProgress(total, total)
   download(new Blob([pdf as BlobPart], { type: 'application/pdf' }), `${fileStem(input.doc)}-memo.pdf`)

@@ -2,7 +2,6 @@ import {
   geodesicDirect,
   type LayerId,
   layerInfo,
-  type OptionRef,
   type OptionResult,
   type SettledStudy,
   type StudyDoc,
@@ -12,7 +11,7 @@ import { version } from '../../../package.json'
 import type { StudyClient } from '../../compute/client.ts'
 import { filesOf, optionKey, studyOptions } from '../../document/index.ts'
 import { fitted, openingView } from '../../map/camera.ts'
-import type { MemoFile, MemoInput, MemoMap } from '../../memo/model/index.ts'
+import { cutOf, type MemoFile, type MemoInput, type MemoMap } from '../../memo/model/index.ts'
 import type { Session } from '../session/index.ts'
 import { remarksOf, settledOf } from '../settled.ts'
 
@@ -56,21 +55,24 @@ export async function memoFilesWithDigests(session: Session): Promise<MemoFile[]
   )
 }
 
-/** One picture per option: ground and C/N of the whole range, day colours. Needs the results of each option. */
+/** One picture per option, ground and C/N of the whole range in day colours, and its range-height plane. */
 export async function memoMaps(
   client: StudyClient,
   study: SettledStudy,
-  refs: readonly OptionRef[],
+  results: readonly OptionResult[],
   png: (rgba: Uint8ClampedArray, width: number, height: number) => string,
   onDone: (done: number) => void,
 ): Promise<MemoMap[]> {
   const maps: MemoMap[] = []
-  for (const ref of refs) {
+  for (const result of results) {
+    const { ref } = result
     const site = study.candidates.find((c) => c.id === ref.candidate)
     if (!site) continue
     const edge = [0, 90, 180, 270].map((azimuth) => geodesicDirect(site, azimuth, study.run.maxRangeM))
     const view: View = fitted({ ...openingView(false), ...MAP_PX }, edge, MAP_MARGIN_PX)
     const answer = await client.ask('map', { view, layer: MAP_LAYER, option: ref })
+    const about = cutOf(result, study.run.maxRangeM)
+    const cut = about && (await client.ask('vertical', { option: ref, ...about }))
     if (answer)
       maps.push({
         ref,
@@ -78,6 +80,7 @@ export async function memoMaps(
         view: answer.view,
         ramp: layerInfo(MAP_LAYER).ramp,
         png: png(answer.rgba, answer.view.width, answer.view.height),
+        cut,
       })
     onDone(maps.length)
   }
