@@ -148,7 +148,6 @@ export class Answers {
       return pixels && { pixels, view: body.view }
     }
     if (body.layer === 'height-to-see') yield* heightToSee(o)
-    const need = this.engine.needOnShow(this.engine.shown.need)
     return { pixels: paintOption(o, body.layer, need, body.view, body.opacity), view: body.view }
   }
 
@@ -166,7 +165,8 @@ export class Answers {
 
   // biome-ignore lint/correctness/useYield: an answer that needs no slices
   private *probeAt(body: Ask['probe']): Work<EngineAnswer['probe']> {
-    const { option, layer, need } = this.engine.shown
+    const { layer, need } = this.engine.shown
+    const option = body.option ?? this.engine.shown.option
     const o = option ? this.engine.cells(option) : null
     const on = this.engine.needOnShow(need)
     if (o) {
