@@ -2,7 +2,8 @@
 //   npm run --silent bench -- --json --ground G.tif --col C --row R --range M [--helpers N]
 // Sweeps are shared with N helper threads (one per further core when it is not said; 0 = one thread) and leave out height to see until that layer is
 // shown, as app and batch command do; `heightToSee` is the time of that by itself. Everything else runs on one thread. "threads" says how many swept.
-// Without --ground: flat, ridged, rough and all-void grounds of 1 000 x 1 000 posts made here, one line each.
+// Without --ground: flat, ridged, rough and all-void grounds of 1 000 x 1 000 posts made here, one line each, and the budgets of the demo: 24 options after a
+// change of need, full physics of one option over masking and clutter alone (processor time).
 import { closeSync, fstatSync, openSync, readSync } from 'node:fs'
 import { availableParallelism } from 'node:os'
 import { basename } from 'node:path'
@@ -18,6 +19,7 @@ import type { RadarInput } from '../../core/radar/index.ts'
 import { type GridShape, gridPosition } from '../../core/raster/index.ts'
 import { buildGround, type Ground, makeTracer, type Site } from '../../core/terrain/index.ts'
 import { finish } from '../../core/work/index.ts'
+import { demoBudget } from './demoBudget.ts'
 
 const RUNS = 15
 const AZIMUTHS = 1440
@@ -187,5 +189,6 @@ async function main(): Promise<void> {
     const row = await measure(madeGround(height), 500, 500, 14_000, helpers)
     process.stdout.write(`${JSON.stringify({ ground: name, ...row })}\n`)
   }
+  process.stdout.write(`${JSON.stringify({ demo: await demoBudget() })}\n`)
 }
 await main()
