@@ -44,12 +44,11 @@ describe('trial plan in the memo', () => {
     const sample = sampleMemo('metric', 40)
     const [first] = sample.results
     const model = buildMemo({ ...sample, results: [{ ...first, figures: { ...first.figures, trialPlan: plan } }] })
-    const blocks: readonly Block[] = model.sections.find((s) => s.option)!.blocks
+    const blocks: readonly Block[] = model.sections.flatMap((s) => s.blocks)
     const table = blocks.find((b): b is TableBlock => b.kind === 'table' && b.id === 'trial-plan')!
     expect(table.rows.map((r) => r.map((c) => plain(cellText(c))))).toEqual([
       [
-        '1',
-        'Radial 118.0°, 1.9 to 37.0 km',
+        '1 Radial 118.0°, 1.9 to 37.0 km',
         'Ferry approach',
         '118.0°, 18.5 km',
         '300',
@@ -59,8 +58,7 @@ describe('trial plan in the memo', () => {
         'The coverage floor behind the obstacle (Grey mast)',
       ],
       [
-        '2',
-        'Orbit at 18.5 km, 030° to 150°',
+        '2 Orbit at 18.5 km, 030° to 150°',
         'Ferry approach',
         '118.0°, 18.5 km',
         '300',
@@ -70,8 +68,7 @@ describe('trial plan in the memo', () => {
         'The horizon azimuth by azimuth (Grey mast)',
       ],
       [
-        '3',
-        'Survey on the ground',
+        '3 Survey on the ground',
         'Ferry approach',
         '118.0°, 18.5 km',
         '190',

@@ -28,7 +28,6 @@ function trialTable({ system }: MemoInput, rows: readonly TrialRow[]): TableBloc
     id: 'trial-plan',
     title: 'Trial plan, through the worst margins of the needs',
     columns: [
-      { head: '', align: 'right' },
       { head: 'What', width: 'fill' },
       { head: 'Need', width: 74 },
       { head: 'Place', align: 'right', keep: true },
@@ -39,8 +38,7 @@ function trialTable({ system }: MemoInput, rows: readonly TrialRow[]): TableBloc
       { head: 'To confirm', width: 96 },
     ],
     rows: rows.map((t, n): Cell[] => [
-      String(n + 1),
-      trialRoute(t, system),
+      `${n + 1} ${trialRoute(t, system)}`,
       t.needName,
       `${textOf(formatAzimuth(t.at.azimuthDeg))}, ${textOf(formatPlaceRange(t.at.rangeM, system))}`,
       bare(formatHeight(t.altitudeM, system)),
