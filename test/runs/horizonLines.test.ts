@@ -28,7 +28,7 @@ beforeAll(async () => {
       ],
     }),
   )
-  finish(answers.ask('study', { doc, show: { option: null, layer: 'masked' }, hold: true }))
+  finish(answers.ask('study', { doc, show: { option: null, layer: 'masked' }, hold: true, have: [] }))
   lines = finish(answers.ask('horizons', { option: { candidate: 'A', heightM: 10, tiltDeg: 1 } }))
   const { study, ground: held } = engine.ready()
   whole = horizonAt(
