@@ -40,11 +40,11 @@ export interface ViewState {
   /** Need the layer is about, where it is about one. */
   readonly need: string | null
   readonly units: UnitSystem
+  /** What azimuths at the face are counted from; magnetic holds only where the study states a declination. */
+  readonly north: 'true' | 'magnetic'
   readonly theme: Theme
   /** Cell whose ledger is asked for. */
   readonly cell: LonLat | null
-  /** What azimuths at the face are counted from; magnetic holds only where the study states a declination. */
-  readonly north: 'true' | 'magnetic'
   readonly chart: OpenChart
   /** Key of the figure that is explained, as in the summary. */
   readonly figure: string | null
@@ -76,12 +76,12 @@ export function createViewStore(storage?: Storage, prefersDark = false) {
         beside: 'difference',
         need: null,
         units: 'nautical',
+        north: 'true',
         theme: prefersDark ? 'night' : 'paper',
         cell: null,
         chart: null,
         figure: null,
         profileAzimuthDeg: null,
-        north: 'true',
         placing: false,
         dialog: null,
         dialogFor: null,
