@@ -11,6 +11,9 @@ export function horizonCsv({ rows, lines = [], measured }: Pick<HorizonInput, 'r
     { head: 'azimuth_deg', values: rows.map((r) => r.azimuthDeg), decimals: 3 },
     { head: 'elevation_deg', values: rows.map((r) => known(r.elevationDeg)), decimals: 4 },
     { head: 'range_m', values: rows.map((r) => known(r.rangeM)), decimals: 0 },
+    { head: 'height_m_msl', values: rows.map((r) => known(r.heightM)), decimals: 1 },
+    { head: 'lon', values: rows.map((r) => known(r.lon)), decimals: 6 },
+    { head: 'lat', values: rows.map((r) => known(r.lat)), decimals: 6 },
     { head: 'obstacle', values: rows.map((r) => r.obstacle) },
     ...lines.map((l) => ({
       head: `${l.cover ? 'surface' : 'bare_ground'}_k_${l.k.toFixed(2)}_deg`,

@@ -275,7 +275,7 @@ describe('horizons beside the option’s own', () => {
   it('and as one table', () => {
     const head = c.horizonCsv({ rows, lines, measured }).split('\n')[0]
     expect(head).toBe(
-      'azimuth_deg,elevation_deg,range_m,obstacle,bare_ground_k_1.33_deg,bare_ground_k_1.00_deg,surface_k_1.00_deg,measured_deg',
+      'azimuth_deg,elevation_deg,range_m,height_m_msl,lon,lat,obstacle,bare_ground_k_1.33_deg,bare_ground_k_1.00_deg,surface_k_1.00_deg,measured_deg',
     )
   })
 })
