@@ -94,7 +94,7 @@ function Table({ table, onExplain }: { table: TableBlock; onExplain: ColumnProps
     <div className="memo-table">
       {table.title !== undefined && <h3>{table.title}</h3>}
       {pairs ? (
-        <Pairs rows={table.rows.map((row) => ({ label: wordsOf(row[0]), cell: row[1] ?? '' }))} onExplain={onExplain} />
+        <Pairs rows={table.rows.map(pairOf)} onExplain={onExplain} />
       ) : (
         table.rows.map((row, i) => (
           // A table may name the same thing in several rows.
@@ -115,6 +115,11 @@ interface Pair {
   readonly label: string
   readonly cell: Cell
 }
+/** A cell that spans both columns is its own label, with its mark. */
+function pairOf([first, second]: readonly Cell[]): Pair {
+  const mark = typeof first === 'string' ? undefined : first.mark
+  return { label: wordsOf(first), cell: second ?? { text: '', ...(mark === undefined ? {} : { mark }) } }
+}
 const wordsOf = (cell: Cell): string => (typeof cell === 'string' ? cell : cell.text)
 /** One row of a wide table as label and number; a cell that spans the rest stands alone. */
 function rowPairs(row: readonly Cell[], columns: readonly Column[]): Pair[] {
@@ -122,7 +127,10 @@ function rowPairs(row: readonly Cell[], columns: readonly Column[]): Pair[] {
   if (typeof second !== 'string' && second?.span !== undefined) return [{ label: wordsOf(second), cell: '' }]
   return row.slice(1).map((cell, i) => ({ label: headOf(columns[i + 1]), cell }))
 }
-const headOf = (column: Column): string => (column.unit === undefined ? column.head : `${column.head}, ${column.unit}`)
+const headOf = ({ head, unit, group }: Column): string => {
+  const own = [head, unit].filter(Boolean).join(', ')
+  return group === undefined ? own : `${group}: ${own}`
+}
 
 function Pairs({ rows, onExplain }: { rows: readonly Pair[]; onExplain: ColumnProps['onExplain'] }) {
   return (

@@ -5,10 +5,9 @@ import { buildMemo } from '../../app/memo/model/index.ts'
 import { CAUTIONS } from '../../app/words/index.ts'
 import { sampleMemo } from './sampleMemo.ts'
 
-const model = buildMemo(sampleMemo('nautical', 40))
-const html = renderToStaticMarkup(
-  <MemoColumn model={model} option={{ candidate: 'B', heightM: 24, tiltDeg: 1.5 }} onExplain={() => undefined} />,
-)
+const option = { candidate: 'B', heightM: 24, tiltDeg: 1.5 }
+const model = buildMemo(sampleMemo('nautical', 40), option)
+const html = renderToStaticMarkup(<MemoColumn model={model} option={option} onExplain={() => undefined} />)
 
 describe('the memo column', () => {
   it('opens with the finding of the option, in the words of the PDF', () => {
@@ -16,8 +15,7 @@ describe('the memo column', () => {
     expect(html).toContain(own.finding!.replaceAll("'", '&#x27;'))
   })
   it('gives in sight, detectable and usable together, at both k', () => {
-    for (const head of ['In sight, %', 'Detectable, %', 'Usable, %', 'At k = 1, the same three, %'])
-      expect(html).toContain(`<dt>${head}</dt>`)
+    for (const head of ['In sight, %', 'Detectable, %', 'Usable, %', 'The same at k = 1, %']) expect(html).toContain(`<dt>${head}</dt>`)
   })
   it('makes every number with a figure behind it a button', () => {
     expect(html).toMatch(/<button[^>]*class="memo-number"[^>]*>[^<]*<span class="unit">/)

@@ -22,23 +22,24 @@ const wordsOf = (m: MemoModel, id: string): string =>
   )
 
 describe('the memo', () => {
-  it('runs from summary to sources, one section per option, numbered in order', () => {
+  it('runs from summary to annex, the option that comes first in full before the others, numbered in order', () => {
     expect(model.sections.map((s) => s.id)).toEqual([
       'summary',
       'need',
-      'data',
-      'candidates',
-      'option-A-12-1.5',
-      'option-A-24-1.5',
-      'option-B-12-1.5',
-      'option-B-24-1.5',
-      'option-C-24-1.5',
       'comparison',
-      'exposure',
+      'candidates',
+      'data',
+      'option-A-24-1.5',
+      'option-A-12-1.5',
+      'option-B-24-1.5',
+      'option-B-12-1.5',
+      'option-C-24-1.5',
       'confirmed',
+      'exposure',
       'not-assessed',
       'cautions',
       'models',
+      'every-option',
       'annex',
     ])
     expect(model.sections.map((s) => s.number)).toEqual(model.sections.map((_, i) => i + 1))
@@ -54,10 +55,14 @@ describe('the memo', () => {
     expect(inOrder(sampleResults)[0].ref).toEqual({ candidate: 'A', heightM: 24, tiltDeg: 1.5 })
     const words = wordsOf(model, 'summary')
     expect(words).toContain('None of the five options computed passes every must need, at the k of the study and at k = 1.')
-    expect(words).toContain('A at 24 m comes nearest: Ferry approach 89 % in sight, 87 % detectable and 80 % usable (95 % asked)')
-    expect(words).toContain('Harbour fixes (its file has not been read)')
-    for (const n of ['A-12', 'A-24', 'B-12'])
-      expect(textOfTable(tableOf(model, `option-${n}-1.5`, 'option-nested'))).not.toMatch(/\bpass\b/)
+    expect(words).toContain('A at 24 m comes nearest: “Ferry approach” 89 % in sight, 87 % detectable and 80 % usable (95 % asked)')
+    expect(words).toContain('“Harbour fixes” (its file has not been read)')
+    expect(words).toContain('It comes before A at 12 m because it misses less of the must needs: 17 percentage points against 22.')
+    expect(textOfTable(tableOf(model, 'summary', 'met'))).toBe(
+      'Ferry approach | must | 95 | 80 | 78 | − 17 | not met\nLow flyers, east | wish | 100 | 58 | 56 | − 44 | not met',
+    )
+    for (const n of ['A-12', 'B-12']) expect(textOfTable(tableOf(model, `option-${n}-1.5`, 'option-needs'))).not.toMatch(/\bpass/)
+    expect(textOfTable(tableOf(model, 'option-A-24-1.5', 'option-nested'))).not.toMatch(/\bpass/)
   })
   it('lists every default of the study and every file with its digest', () => {
     const defaults = textOfTable(tableOf(model, 'data', 'defaults'))
@@ -70,7 +75,7 @@ describe('the memo', () => {
   it('marks what is default, from memory and outside a model beside the figures', () => {
     expect(textOfTable(tableOf(model, 'need', 'needs'))).toMatch(/\d dB,\nPd 0\.80, case 1/)
     const figures = textOfTable(tableOf(model, 'option-A-24-1.5', 'figures'))
-    expect(figures).toMatch(/Low-angle land table \|.*from memory/)
+    expect(figures).toMatch(/Low-angle land table from memory/)
     expect(figures).toMatch(/Depression over 8°.*outside model/)
     expect(textOfTable(tableOf(model, 'models', 'models'))).toMatch(/land clutter table .*from memory/)
   })
@@ -80,9 +85,13 @@ describe('the memo', () => {
     expect(textOfTable(tableOf(model, 'option-A-24-1.5', 'option-nested'))).toContain('Ferry approach | 89 | 87 | 80 | 88 / 86 / 78 | 95')
     expect(textOfTable(tableOf(model, 'option-A-24-1.5', 'floors'))).toContain('20 NM | 1 700 (500)')
   })
-  it('gives each option a map with its legend, a horizon profile, suppression, clutter by ring and octant and rings, captioned with what they show', () => {
-    const figures = blocksOf(model, 'option-B-24-1.5').flatMap((b) => (b.kind === 'figure' ? [b] : []))
-    expect(figures.map((f) => f.id)).toEqual(['map', 'horizon', 'suppression', 'levels', 'rings'])
+  const figuresOf = (id: string) => blocksOf(model, id).flatMap((b) => (b.kind === 'figure' ? [b] : []))
+  it('gives each option a map with its legend and a horizon profile, the first one every figure, numbered in order and captioned with what they show', () => {
+    const figures = figuresOf('option-B-24-1.5')
+    expect(figures.map((f) => f.id)).toEqual(['map', 'horizon'])
+    expect(figuresOf('option-A-24-1.5').map((f) => f.id)).toEqual(['map', 'horizon', 'rings', 'suppression', 'levels'])
+    const numbers = model.sections.flatMap((s) => figuresOf(s.id).map((f) => f.number))
+    expect(numbers).toEqual(numbers.map((_, i) => i + 1))
     expect(figures[0].png).toMatch(/^data:image\/png;base64,/)
     const texts = figures[0].drawing.items.flatMap((i) => (i.kind === 'text' ? [i.text] : []))
     for (const word of ['Clutter-to-noise', '0', '70', 'N', 'A', 'B', 'C', 'land table from memory']) expect(texts).toContain(word)
@@ -92,7 +101,7 @@ describe('the memo', () => {
     const short = textOfTable(tableOf(model, 'comparison', 'rejected'))
     expect(short.split('\n')).toHaveLength(5)
     expect(short).toContain(
-      'C at 24 m | Ferry approach: 69 % in sight, 67 % detectable and 60 % usable, 95 % asked; most lost: masked 31 %',
+      'C at 24 m | “Ferry approach”: 69 % in sight, 67 % detectable and 60 % usable, 95 % asked; most lost: masked 31 %',
     )
   })
   it('has no line about the built-in land table where the study brings its own', () => {
@@ -111,13 +120,13 @@ describe('the memo', () => {
   it('says pass only where both k are known', () => {
     const passing = withNeed((n) => ({ requiredPct: 60, met: true, passes: n.usablePct > 70 }))
     expect(wordsOf(passing, 'summary')).toContain(
-      'Three of five options pass every must need, at the k of the study and at k = 1; A at 12 m comes first of them',
+      'Recommended: A at 12 m, Lantern Hill. Three of five options pass every must need, at the k of the study and at k = 1; A at 12 m comes first of them',
     )
-    expect(textOfTable(tableOf(passing, 'option-A-24-1.5', 'option-nested'))).toMatch(/Ferry approach .*\| pass/)
-    expect(textOfTable(tableOf(passing, 'option-C-24-1.5', 'option-nested'))).toMatch(/Ferry approach .*\| met, not at k = 1/)
+    expect(textOfTable(tableOf(passing, 'option-A-24-1.5', 'option-needs'))).toMatch(/Ferry approach .*\| passes/)
+    expect(textOfTable(tableOf(passing, 'option-C-24-1.5', 'option-needs'))).toMatch(/Ferry approach .*\| met, not at k = 1/)
     const open = withNeed(() => ({ requiredPct: 50, met: true, passes: null, atLowK: null }))
     expect(wordsOf(open, 'summary')).toContain('Five of five options meet every must need at the k of the study')
-    expect(textOfTable(tableOf(open, 'option-A-24-1.5', 'option-nested'))).toMatch(/\| not run \| .*met, k = 1 not run yet/)
+    expect(textOfTable(tableOf(open, 'option-A-12-1.5', 'option-nested'))).toMatch(/\| not run \| .*met, k = 1 not run yet/)
     for (const s of open.sections.filter((x) => x.option)) expect(wordsOf(open, s.id)).not.toMatch(/as asked/)
   })
   it('gives causes of loss that add up, both margins with their place, and what suppression is there', () => {

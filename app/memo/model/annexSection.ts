@@ -1,53 +1,93 @@
-import type { HorizonRow, OptionResult } from '../../../core/index.ts'
-import { isAtLeast, whyAtLeast } from '../../charts/index.ts'
-import { formatAzimuth, formatPlaceRange, formatScreening, NO_VALUE, textOf, unitOf } from '../../words/index.ts'
-import type { Block, Cell, Column, MemoInput, TableBlock } from './types.ts'
+import type { HorizonRow, SettledCandidate } from '../../../core/index.ts'
+import { isAtLeast } from '../../charts/index.ts'
+import { formatAzimuth, formatMast, formatPlaceRange, formatScreening, NO_VALUE, northWords, textOf, unitOf } from '../../words/index.ts'
+import { bare } from './cells.ts'
+import type { Block, Cell, Column, MemoInput } from './types.ts'
 
 /** Sectors of the horizon table, deg. */
-const SECTOR_DEG = 10
-/** The highest point of the horizon in each sector, sectors centred on round azimuths, in three runs of twelve. */
-function sectorTable(input: MemoInput, r: OptionResult, title: string): TableBlock {
-  const count = 360 / SECTOR_DEG
-  const highest: (HorizonRow | null)[] = Array.from({ length: count }, () => null)
-  for (const row of r.figures.horizon.rows) {
-    const i = Math.round(row.azimuthDeg / SECTOR_DEG) % count
+const SECTOR_DEG = 5
+const COUNT = 360 / SECTOR_DEG
+/** Masts of a candidate beyond which the ranges are left out, and beyond which the table is set in one run. */
+const MOST_WITH_RANGE = 3
+const MOST_IN_TWO = 7
+/** Between runs. */
+const GAP_PT = 14
+
+/** Highest point of the horizon in each sector, sectors centred on round azimuths; null where none of it is known. */
+function bySector(rows: readonly HorizonRow[]): (HorizonRow | null)[] {
+  const highest: (HorizonRow | null)[] = Array.from({ length: COUNT }, () => null)
+  for (const row of rows) {
+    const i = Math.round(row.azimuthDeg / SECTOR_DEG) % COUNT
     const top = highest[i]
     if (Number.isFinite(row.elevationDeg) && (top === null || row.elevationDeg > top.elevationDeg)) highest[i] = row
   }
-  const cells = (i: number): Cell[] => {
-    const row = highest[i]
-    const azimuth = textOf(formatAzimuth(i * SECTOR_DEG, 1))
-    if (row === null) return [azimuth, NO_VALUE, NO_VALUE, { text: 'unknown', light: true }]
-    const bound = isAtLeast(row)
-    const far = formatPlaceRange(row.rangeM, input.system)
-    const elevation = formatScreening(row.elevationDeg).value
-    return [azimuth, bound ? `≥ ${elevation}` : elevation, far.value, bound ? { text: whyAtLeast(row), light: true } : row.obstacle]
-  }
-  const third = count / 3
-  const columns: Column[] = Array.from({ length: 3 }, (): Column[] => [
-    { head: 'Azimuth', align: 'right' },
-    { head: 'deg', align: 'right' },
-    { head: unitOf('range', input.system), align: 'right' },
-    { head: 'Set by', width: 'fill' },
+  return highest
+}
+/** What sets a horizon, in a letter beside its range; terrain has none. */
+const letterOf = (obstacle: string): string => (obstacle === 'terrain' ? '' : obstacle === 'cover' ? 'c' : 'o')
+
+/** Horizon of one candidate from each of its masts, in runs side by side; null where nothing of it is computed. */
+function candidateTable(input: MemoInput, candidate: SettledCandidate): Block | null {
+  const heights = [...new Set(input.results.filter((r) => r.ref.candidate === candidate.id).map((r) => r.ref.heightM))].sort(
+    (a, b) => a - b,
+  )
+  if (heights.length === 0) return null
+  const masts = heights.flatMap((h) => {
+    const result = input.results.find((r) => r.ref.candidate === candidate.id && r.ref.heightM === h)
+    return result ? [bySector(result.figures.horizon.rows)] : []
+  })
+  const ranges = heights.length <= MOST_WITH_RANGE
+  const runs = heights.length > MOST_IN_TWO ? 1 : heights.length === 1 && ranges ? 4 : 2
+  const right = { align: 'right', keep: true } as const
+  const columns: Column[] = Array.from({ length: runs }, (_, run): Column[] => [
+    ...(run > 0 ? [{ head: '', width: GAP_PT }] : []),
+    { head: 'Az', unit: '°', ...right },
+    ...heights.flatMap((h): Column[] => {
+      const group = textOf(formatMast(h))
+      return ranges
+        ? [
+            { head: '', unit: '°', group, ...right, width: 'fill' },
+            { head: '', unit: unitOf('range', input.system), group, ...right, width: 'fill' },
+          ]
+        : [{ head: group, unit: '°', ...right, width: 'fill' }]
+    }),
   ]).flat()
+  const cells = (i: number): Cell[] => [
+    { text: formatAzimuth(i * SECTOR_DEG, 1).value, light: true },
+    ...masts.flatMap((sectors): Cell[] => {
+      const row = sectors[i]
+      if (row === null) return ranges ? [NO_VALUE, ''] : [NO_VALUE]
+      const bound = isAtLeast(row)
+      const elevation = formatScreening(row.elevationDeg).value
+      const own: Cell = bound ? `≥ ${elevation}` : elevation
+      if (!ranges) return [own]
+      const letter = bound ? '' : letterOf(row.obstacle)
+      return [own, bare(formatPlaceRange(row.rangeM, input.system), letter === '' ? {} : { unit: letter })]
+    }),
+  ]
+  const lines = Math.ceil(COUNT / runs)
   return {
     kind: 'table',
-    id: 'horizon-sectors',
-    title,
+    id: `horizon-${candidate.id}`,
+    title: candidate.name === candidate.id ? candidate.id : `${candidate.id} ${candidate.name}`,
+    dense: true,
     columns,
-    rows: Array.from({ length: third }, (_, i) => [...cells(i), ...cells(i + third), ...cells(i + 2 * third)]),
+    rows: Array.from({ length: lines }, (_, i) =>
+      Array.from({ length: runs }, (_run, run) => [...(run > 0 ? [''] : []), ...cells(i + run * lines)]).flat(),
+    ),
   }
 }
 
-/** Horizon of every option as a table, after the body of the memo. */
-export function annexBlocks(input: MemoInput, results: readonly OptionResult[], titleOf: (r: OptionResult) => string): Block[] {
-  if (results.length === 0) return [{ kind: 'paragraph', text: 'No option has been computed.' }]
+/** Horizon of every candidate by azimuth, a column for each mast, after the body of the memo. */
+export function annexBlocks(input: MemoInput): Block[] {
+  const tables = input.study.candidates.flatMap((c) => candidateTable(input, c) ?? [])
+  if (tables.length === 0) return [{ kind: 'paragraph', text: 'No option has been computed.' }]
   return [
     {
       kind: 'paragraph',
       role: 'small',
-      text: `Each line gives the highest point of the horizon within ±\u202f${SECTOR_DEG / 2}° of its azimuth from true north. The batch command writes every azimuth to horizon.csv.`,
+      text: `Elevation of the highest point of the horizon within ±\u202f${SECTOR_DEG / 2}° of each azimuth, and its range; set by terrain, c by cover, o by an obstacle, ≥ where the ground beyond is unknown. ${northWords()}. Every azimuth: horizon.csv of the batch command.`,
     },
-    ...results.map((r) => sectorTable(input, r, titleOf(r))),
+    ...tables,
   ]
 }

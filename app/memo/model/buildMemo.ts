@@ -6,16 +6,21 @@ import { optionName } from './cells.ts'
 import { cautionBlocks, comparisonBlocks, notAssessedBlocks } from './closingSections.ts'
 import { confirmedBlocks } from './confirmedSection.ts'
 import { dataBlocks } from './dataSection.ts'
+import { everyOptionBlocks } from './everyOption.ts'
 import { exposureBlocks } from './exposureSection.ts'
 import { modelBlocks } from './modelsSection.ts'
 import { needBlocks } from './needSection.ts'
+import { optionPageBlocks } from './optionPage.ts'
 import { optionBlocks, optionFinding } from './optionSection.ts'
+import { inOrder } from './ranking.ts'
 import { hasTilts, summaryBlocks } from './summarySection.ts'
+import { trialBlocks } from './trialSection.ts'
 import type { Block, MemoInput, MemoModel, Section } from './types.ts'
 
 /**
- * The memo as ordered sections of words, tables and drawings: the PDF and the app's memo column print the same model. `only`: the summary and that
- * option alone have blocks, which is all that stands in the column beside the map.
+ * The memo as ordered sections of words, tables and drawings: the PDF and the app's memo column print the same model. The option that comes first is
+ * given in full, every other one on a page. `only`: the summary and that option alone have blocks, the option in full with its trial plan, which is
+ * what stands in the column beside the map.
  */
 export function buildMemo(input: MemoInput, only?: OptionRef | null): MemoModel {
   let figures = 0
@@ -23,26 +28,35 @@ export function buildMemo(input: MemoInput, only?: OptionRef | null): MemoModel 
   const sections: Section[] = []
   const add = (id: string, title: string, blocks: () => readonly Block[], more: Partial<Section> = {}): void => {
     const wanted = only === undefined || id === 'summary' || (more.option && sameOption(more.option, only))
-    sections.push({ id, number: sections.length + 1, title, blocks: wanted ? blocks() : [], ...more })
+    sections.push({ id, number: sections.length + 1, title, blocks: wanted ? eachCautionOnce(blocks()) : [], ...more })
   }
+  const ordered = inOrder(input.results, input.study.ranking)
+  const [first] = ordered
   add('summary', 'Summary', () => summaryBlocks(input))
   add('need', 'Need', () => needBlocks(input), { newPage: true })
-  add('data', 'Data and assumptions', () => dataBlocks(input))
+  add('comparison', 'Comparison', () => comparisonBlocks(input, figure))
   add('candidates', 'Candidates', () => candidateBlocks(input))
-  const ordered = inStudyOrder(input)
-  for (const r of ordered)
-    add(`option-${r.ref.candidate}-${r.ref.heightM}-${r.ref.tiltDeg}`, optionTitle(input, r.ref), () => optionBlocks(input, r, figure), {
+  add('data', 'Data and assumptions', () => dataBlocks(input))
+  for (const r of ordered) {
+    const blocks = (): readonly Block[] => {
+      if (only) return [...optionBlocks(input, r, figure), ...trialBlocks(input, r)]
+      return r === first ? optionBlocks(input, r, figure) : optionPageBlocks(input, r, figure, optionTitle(input, first.ref))
+    }
+    add(`option-${r.ref.candidate}-${r.ref.heightM}-${r.ref.tiltDeg}`, optionTitle(input, r.ref), blocks, {
       option: r.ref,
       finding: optionFinding(input, r).lead,
       newPage: true,
     })
-  add('comparison', 'Comparison', () => comparisonBlocks(input, figure), { newPage: true })
+  }
+  add('confirmed', CONFIRMED_WORDS.title, () => confirmedBlocks(input), { newPage: true })
   add('exposure', 'RF exposure', () => exposureBlocks(input))
-  add('confirmed', CONFIRMED_WORDS.title, () => confirmedBlocks(input))
+  if (first && first.figures.trialPlan.length > 0)
+    add('trial', `Trial plan of ${optionTitle(input, first.ref)}`, () => trialBlocks(input, first))
   add('not-assessed', 'Not assessed', () => notAssessedBlocks())
   add('cautions', 'Cautions', () => cautionBlocks())
   add('models', 'Models and sources', () => modelBlocks(input))
-  add('annex', 'Annex: horizon by azimuth', () => annexBlocks(input, ordered, (r) => optionTitle(input, r.ref)), { newPage: true })
+  if (ordered.length > 1) add('every-option', 'Annex: figures of every option', () => everyOptionBlocks(input, ordered))
+  add('annex', 'Annex: horizon by azimuth', () => annexBlocks(input))
   const candidates = input.study.candidates.map((c) => c.id).join(', ')
   return {
     title: input.study.name,
@@ -67,11 +81,12 @@ function optionTitle(input: MemoInput, ref: OptionRef): string {
   const own = optionName(ref, hasTilts(input))
   return name === ref.candidate ? own : own.replace(/^\S+/, (id) => `${id} ${name}`)
 }
-/** Candidates as the study lists them, lower masts first. */
-function inStudyOrder(input: MemoInput): MemoInput['results'] {
-  const rank = new Map(input.study.candidates.map((c, i) => [c.id, i]))
-  return [...input.results].sort(
-    (a, b) =>
-      (rank.get(a.ref.candidate) ?? 0) - (rank.get(b.ref.candidate) ?? 0) || a.ref.heightM - b.ref.heightM || a.ref.tiltDeg - b.ref.tiltDeg,
-  )
+/** A caution stands under the first figure of a section that it concerns, not under each. */
+function eachCautionOnce(blocks: readonly Block[], said: Set<string> = new Set()): Block[] {
+  return blocks.flatMap((block): Block[] => {
+    if (block.kind === 'beside') return [{ ...block, left: eachCautionOnce(block.left, said), right: eachCautionOnce(block.right, said) }]
+    if (block.kind !== 'caution') return [block]
+    const texts = block.texts.filter((t) => !said.has(t) && said.add(t))
+    return texts.length === 0 ? [] : [{ ...block, texts }]
+  })
 }

@@ -11,7 +11,7 @@ import {
 import { cautionsFor } from '../../words/index.ts'
 import { type Block, type FigureBlock, type MemoInput, SMALL_PT, TEXT_WIDTH_PT } from './types.ts'
 
-const LEVELS_PT = 150
+const LEVELS_PT = 128
 /** Room for a need and for a kind of clutter in the chart of suppression, and for its axes, pt. */
 const NEED_PT = 22
 const KIND_PT = 13
@@ -19,7 +19,7 @@ const AXES_PT = 52
 
 /** Samples of a printed diagram. */
 const CUT = { columns: 240, rows: 120, fromRangeM: 0, fromHeightM: null, toHeightM: null }
-const CUT_PT = 190
+const CUT_PT = 168
 
 /** The need and the plane that an option's printed range-height diagram is about: its first need, toward the worst place of it, else toward the highest horizon. */
 export function cutOf(r: OptionResult, maxRangeM: number): { need: string; window: CutWindow } | null {

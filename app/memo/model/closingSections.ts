@@ -12,8 +12,8 @@ import {
   textOf,
 } from '../../words/index.ts'
 import { capital, inWords, optionName } from './cells.ts'
-import { comparisonTable } from './comparisonTable.ts'
-import { lossWords, nestedWords } from './needWords.ts'
+import { comparisonTables } from './comparisonTable.ts'
+import { isUnderGround, lossWords, needName, nestedWords, UNDER_GROUND } from './needWords.ts'
 import { inOrder, orderSentence, reaches } from './ranking.ts'
 import { rankingBlocks, rejectedBlocks } from './rankingBlocks.ts'
 import { hasTilts } from './summarySection.ts'
@@ -26,12 +26,19 @@ export function comparisonBlocks(input: MemoInput, figure: () => number): Block[
   if (ordered.length === 0)
     return [{ kind: 'paragraph', text: 'Nothing to compare: no option has been computed.' }, ...rejectedBlocks(input)]
   const blocks: Block[] = [
-    comparisonTable(input, ordered, 'full'),
+    ...comparisonTables(input, ordered),
     { kind: 'paragraph', role: 'small', text: orderSentence(ranking) },
     ...rankingBlocks(input),
   ]
-  if (ordered.length > 1) {
-    const { drawing } = optionsChart({
+  const rated = ordered.some((r) => (coverageOf(r.figures, null)?.usablePct ?? r.figures.groundInSightKm2) > 0)
+  if (ordered.length > 1 && !rated)
+    blocks.push({
+      kind: 'paragraph',
+      role: 'small',
+      text: 'Coverage against clutter is not drawn: no option has any usable share of the needs.',
+    })
+  if (ordered.length > 1 && rated) {
+    const { drawing, points } = optionsChart({
       results: input.results,
       needId: null,
       selected: ordered[0].ref,
@@ -41,6 +48,13 @@ export function comparisonBlocks(input: MemoInput, figure: () => number): Block[
       size: SMALL_PT - 1,
     })
     blocks.push({ kind: 'figure', id: 'options', number: figure(), caption: comparisonFinding(input, ordered), drawing })
+    const best = points.filter((p) => p.best).map((p) => optionName(p.ref, hasTilts(input)))
+    if (best.length > 0)
+      blocks.push({
+        kind: 'paragraph',
+        role: 'small',
+        text: `No other option beats ${inWords(best)}: none has at least as much usable with as little short of suppression.`,
+      })
   }
   blocks.push({
     kind: 'caution',
@@ -80,21 +94,25 @@ function shortWords(r: OptionResult, system: MemoInput['system']): string {
   const reasons: string[] = []
   for (const n of r.figures.needs) {
     if (n.notAssessed !== null) continue
+    if (isUnderGround(n)) {
+      reasons.push(`${needName(n)}: ${UNDER_GROUND}`)
+      continue
+    }
     if (!reaches(n)) {
       const behind = n.worst ? `, worst behind ${n.worst.obstacle} at azimuth ${Math.round(n.worst.azimuthDeg)}°` : ''
       const first = n.losses[0] ? `; most lost: ${lossWords(n, n.losses[0], system)}` : ''
       const at = n.met ? ', short at k = 1' : ''
       reasons.push(
-        `${n.name}${n.must ? '' : ' (wish)'}: ${nestedWords(n)}, ${textOf(formatMetPct(n.requiredPct))} asked${at}${first}${behind}`,
+        `${needName(n)}${n.must ? '' : ' (wish)'}: ${nestedWords(n)}, ${textOf(formatMetPct(n.requiredPct))} asked${at}${first}${behind}`,
       )
     }
     const s = n.suppression
     if (n.measure === 'area' && s.p90Db !== null && s.shortP90Db !== null && s.shortP90Db > 0)
       reasons.push(
-        `${n.name}: ${textOf(formatDbUp(s.p90Db))} of suppression needed at 90\u202f%, ${textOf(formatDbDown(s.availableDb))} available`,
+        `${needName(n)}: ${textOf(formatDbUp(s.p90Db))} of suppression needed at 90\u202f%, ${textOf(formatDbDown(s.availableDb))} available`,
       )
   }
-  const open = r.figures.needs.filter((n) => n.notAssessed !== null).map((n) => n.name)
+  const open = r.figures.needs.filter((n) => n.notAssessed !== null).map(needName)
   if (open.length > 0) reasons.push(`${inWords(open)}: not assessed`)
   return reasons.length === 0 ? 'Falls short of nothing that is assessed' : `${reasons.join('. ')}`
 }

@@ -31,20 +31,14 @@ export function clutterAtKTable(input: MemoInput, r: OptionResult): TableBlock |
   ])
   for (const s of high.suppression) {
     const own = f.needs.find((n) => n.needId === s.needId)?.suppression
-    const shares = [
-      [50, own?.p50Db, s.p50Db],
-      [90, own?.p90Db, s.p90Db],
-      [99, own?.p99Db, s.p99Db],
-    ] as const
-    for (const [share, at, atHigh] of shares) {
-      const key = `need_${s.needId}_suppression_needed_${share}`
-      rows.push([`${s.name}: suppression needed at ${share}\u202f%`, db(at ?? null, `${key}_db`), db(atHigh, `${key}_k2_75_db`)])
-    }
+    const key = `need_${s.needId}_suppression_needed_90`
+    rows.push([`${s.name}: suppression needed, 90\u202f%`, db(own?.p90Db ?? null, `${key}_db`), db(s.p90Db, `${key}_k2_75_db`)])
   }
   return {
     kind: 'table',
     id: 'clutter-at-k',
-    title: 'Clutter at both k: more ground comes into sight where the air bends rays down',
+    title: 'Clutter at both k',
+    dense: true,
     columns: [
       { head: 'Figure', width: 'fill' },
       { head: `k = ${formatK(input.study.atmosphere.effectiveEarthFactor)}`, align: 'right' },

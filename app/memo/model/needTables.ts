@@ -43,10 +43,10 @@ export function nestedTable(input: MemoInput, r: OptionResult): TableBlock {
     { head: 'In sight', ...pct },
     { head: 'Detectable', ...pct },
     { head: 'Usable', ...pct },
-    { head: 'At k = 1, the same three', ...pct },
+    { head: 'The same at k = 1', ...pct },
     { head: 'Asked', ...pct },
     { head: 'Usable', unit: unitOf('area', system), align: 'right' },
-    { head: 'So', align: 'right', keep: true },
+    { head: 'Verdict', align: 'right', keep: true },
   ]
   const rows = needRows(r, columns.length, (n, key) => [
     [
@@ -121,9 +121,9 @@ export function lossTable(input: MemoInput, r: OptionResult): TableBlock {
     id: 'option-losses',
     title: 'Causes of loss',
     columns: [
-      { head: 'Need', width: 120 },
+      { head: 'Need', width: 96 },
       { head: 'Not usable, by cause', width: 'fill' },
-      { head: 'Cone of silence', width: 92 },
+      { head: 'Cone of silence', width: 70 },
     ],
     rows,
   }

@@ -1,4 +1,4 @@
-import type { FixFigure, LossCause, LossFigure, NeedFigure } from '../../../core/index.ts'
+import type { FixFigure, LossCause, LossFigure, NeedFigure, NestedPct } from '../../../core/index.ts'
 import {
   formatAreaUp,
   formatLossPct,
@@ -10,13 +10,21 @@ import {
   withMetric,
 } from '../../words/index.ts'
 
+/** A need's name set apart from the sentence it stands in. */
+export const needName = (n: { readonly name: string }): string => `“${n.name}”`
+/** Nothing of a layer is left over known ground inside its range: the ground stands above it. */
+export const isUnderGround = (n: NeedFigure): boolean =>
+  n.measure === 'area' && n.notAssessed === null && n.groundAboveKm2 > 0 && n.areaKm2 - n.unknownKm2 < 1e-6
+export const UNDER_GROUND = 'the layer lies below all known ground inside its range'
+
 /** The three nested shares in one breath; never one alone. */
 export function nestedWords(n: NeedFigure): string {
+  if (isUnderGround(n)) return UNDER_GROUND
   const pct = (x: number): string => textOf(formatMetPct(x))
   return `${pct(n.inSightPct)} in sight, ${pct(n.detectablePct)} detectable and ${pct(n.usablePct)} usable`
 }
 /** `97 / 95 / 88`, for a column whose head says which is which. */
-export const nestedNumbers = (n: NeedFigure): string =>
+export const nestedNumbers = (n: NestedPct): string =>
   [n.inSightPct, n.detectablePct, n.usablePct].map((x) => formatMetPct(x).value).join(' / ')
 
 /** What the shares are shares of, with its amount. */

@@ -29,14 +29,15 @@ import { exposureCell } from './exposureSection.ts'
 import { mapDrawing } from './mapFigure.ts'
 import { measuredBlocks } from './measuredSection.ts'
 import { availableWords, lossTable, marginTable, nestedTable, suppressionTable } from './needTables.ts'
-import { nestedWords } from './needWords.ts'
+import { isUnderGround, needName, nestedWords, UNDER_GROUND } from './needWords.ts'
 import { placeBlocks } from './placeTables.ts'
-import { roadBlocks, roadsSeenCell } from './roadsSection.ts'
+import { roadBlocks, roadSpeeds, roadsSeenCell } from './roadsSection.ts'
 import { hasTilts } from './summarySection.ts'
-import { trialBlocks } from './trialSection.ts'
 import { type Block, type Cell, type MemoInput, SMALL_PT, type TableBlock, TEXT_WIDTH_PT } from './types.ts'
 
-const MAP_PT = 256
+const MAP_PT = 244
+/** Left of two blocks side by side. */
+const LEFT_PT = 282
 
 /** One option: map and figures, horizon, needs, floors and rings, with their cautions. `figure` numbers figures through the memo. */
 export function optionBlocks(input: MemoInput, r: OptionResult, figure: () => number): Block[] {
@@ -46,49 +47,55 @@ export function optionBlocks(input: MemoInput, r: OptionResult, figure: () => nu
     { kind: 'paragraph', text: rest },
   ]
   if (r.figures.needs.length > 0) blocks.push(nestedTable(input, r), { kind: 'caution', texts: cautionsFor('need') })
-  const map = input.maps.find((m) => sameRef(m.ref, r.ref))
-  const figures = figureTable(input, r)
-  if (map) {
-    const drawing = mapDrawing({
-      map,
-      candidates: input.study.candidates,
-      maxRangeM: input.study.run.maxRangeM,
-      system: input.system,
-      widthPt: MAP_PT,
-    })
-    const caption = mapCaption(input, r)
-    blocks.push({
-      kind: 'beside',
-      leftPt: MAP_PT,
-      left: [{ kind: 'figure', id: 'map', number: figure(), caption, drawing, png: map.png }],
-      right: [figures],
-    })
-  } else blocks.push(figures)
-  blocks.push({ kind: 'caution', texts: clutterCautions(input) })
-  if (r.figures.needs.length > 0) blocks.push(marginTable(input, r))
+  blocks.push(...mapBlocks(input, r, figure, figureTable(input, r)), { kind: 'caution', texts: clutterCautions(input) })
+  const assessed = r.figures.needs.length > 0
+  if (assessed) blocks.push(marginTable(input, r))
   const air = exponentialWords(input, r)
   if (air) blocks.push({ kind: 'paragraph', role: 'small', text: air })
   blocks.push(horizonFigure(input, r, figure()))
   blocks.push({ kind: 'caution', texts: cautionsFor('horizon') }, ...measuredBlocks(input, r))
-  if (r.figures.needs.length > 0) {
-    blocks.push(lossTable(input, r), ...placeBlocks(input, r), suppressionTable(input, r))
-    blocks.push({ kind: 'paragraph', role: 'small', text: availableWords(r) })
-    if (suppressionRows(r.figures).needs > 0) blocks.push(suppressionFigure(input, r, figure()))
-    blocks.push({ kind: 'caution', texts: suppressionCautions(input) }, ...verticalBlocks(input, r, figure))
-  }
+  if (assessed) blocks.push(lossTable(input, r), ...placeBlocks(input, r), ...verticalBlocks(input, r, figure))
+  const rings = ringFigure(input, r, figure())
+  const speeds = roadSpeeds(input, r)
   const atBothK = clutterAtKTable(input, r)
-  if (atBothK) blocks.push(atBothK, { kind: 'caution', texts: clutterCautions(input) })
-  blocks.push(...roadBlocks(input, r))
-  blocks.push(levelsFigure(input, r, figure()), { kind: 'caution', texts: clutterCautions(input) })
-  const rings = ringChart({ rings: r.figures.rings, width: 182, height: 172, system: input.system, size: SMALL_PT - 1 })
   blocks.push({
     kind: 'beside',
-    leftPt: 282,
+    leftPt: LEFT_PT,
     left: [floorTable(input, r), { kind: 'caution', texts: cautionsFor('floor') }],
-    right: [{ kind: 'figure', id: 'rings', number: figure(), caption: `${ringFinding(r.figures.rings, input.system)}.`, drawing: rings }],
+    right: [atBothK && speeds ? speeds : rings],
   })
-  blocks.push(...trialBlocks(input, r))
+  if (assessed) {
+    blocks.push(suppressionTable(input, r), { kind: 'paragraph', role: 'small', text: availableWords(r) })
+    if (suppressionRows(r.figures).needs > 0) blocks.push(suppressionFigure(input, r, figure()))
+    blocks.push({ kind: 'caution', texts: suppressionCautions(input) })
+  }
+  if (atBothK && speeds) blocks.push({ kind: 'beside', leftPt: LEFT_PT, left: [atBothK], right: [rings] })
+  else blocks.push(...[atBothK, speeds].filter((t) => t !== null))
+  blocks.push(...roadBlocks(input, r), levelsFigure(input, r, figure()), { kind: 'caution', texts: clutterCautions(input) })
   return blocks
+}
+const RINGS_PT = { width: 182, height: 122 }
+function ringFigure(input: MemoInput, r: OptionResult, number: number): Block {
+  const { rings } = r.figures
+  const { system } = input
+  return {
+    kind: 'figure',
+    id: 'rings',
+    number,
+    caption: `${ringFinding(rings, system)}.`,
+    get drawing() {
+      return ringChart({ rings, ...RINGS_PT, system, size: SMALL_PT - 1 })
+    },
+  }
+}
+/** The painted map beside a table; the table alone where there is no map. */
+export function mapBlocks(input: MemoInput, r: OptionResult, figure: () => number, table: TableBlock): Block[] {
+  const map = input.maps.find((m) => sameRef(m.ref, r.ref))
+  if (!map) return [table]
+  const { study, system } = input
+  const drawing = mapDrawing({ map, candidates: study.candidates, maxRangeM: study.run.maxRangeM, system, widthPt: MAP_PT })
+  const own: Block = { kind: 'figure', id: 'map', number: figure(), caption: mapCaption(input, r), drawing, png: map.png }
+  return [{ kind: 'beside', leftPt: MAP_PT, left: [own], right: [table] }]
 }
 const sameRef = (a: OptionResult['ref'], b: OptionResult['ref']): boolean =>
   a.candidate === b.candidate && a.heightM === b.heightM && a.tiltDeg === b.tiltDeg
@@ -122,21 +129,23 @@ export function optionFinding(input: MemoInput, r: OptionResult): { lead: string
     if (!n.met) return `against ${share}`
     return n.passes === null ? `${share}, k = 1 not run` : `${share}, but short of it at k = 1`
   }
-  const lead = `From ${place} a mast of ${mast} has ${nestedWords(first)} of ${first.name}, ${asked(first)}.`
+  const lead = isUnderGround(first)
+    ? `Of ${needName(first)} nothing can be seen from ${place}: ${UNDER_GROUND}.`
+    : `From ${place} a mast of ${mast} has ${nestedWords(first)} of ${needName(first)}, ${asked(first)}.`
   const rest = [over]
   if (others.length > 0)
     rest.push(
       `${others
         .slice(0, MOST_OTHERS)
-        .map((n) => `${n.name}: ${nestedWords(n)}, ${asked(n)}`)
+        .map((n) => (isUnderGround(n) ? `${needName(n)}: ${UNDER_GROUND}` : `${needName(n)}: ${nestedWords(n)}, ${asked(n)}`))
         .join('. ')}.`,
     )
-  if (first.losses.length > 0)
+  if (first.losses.length > 0 && !isUnderGround(first))
     rest.push(`Largest cause of loss: ${LOSS_WORDS[first.losses[0].cause]}, ${textOf(formatLossPct(first.losses[0].pct))}.`)
   if (first.worst && first.worstMarginM !== null && first.worstMarginM < 0) {
     const under = withMetric((s) => formatBand(-(first.worstMarginM as number), s), system)
     const where = `azimuth ${textOf(formatAzimuth(first.worst.azimuthDeg, 1))}, ${textOf(formatPlaceRange(first.worst.rangeM, system))}`
-    rest.push(`The worst place of ${first.name} lies ${under} under the floor, at ${where}, behind ${first.worst.obstacle}.`)
+    rest.push(`The worst place of ${needName(first)} lies ${under} under the floor, at ${where}, behind ${first.worst.obstacle}.`)
   }
   return { lead, rest: rest.join(' ') }
 }
@@ -171,16 +180,17 @@ export function figureTable(input: MemoInput, r: OptionResult): TableBlock {
   if (f.roads) rows.push(['Roads seen', roadsSeenCell(f.roads, input)])
   if (f.obstaclesInSight.length > 0) rows.push(['Obstacles in sight', obstacleWords(f.obstaclesInSight)])
   rows.push(['Keep clear, antenna stopped', exposureCell(input, r.ref)])
-  for (const m of f.marks) rows.push([capital(m.about.replace(`, ${m.mark}`, '')), { text: '', mark: m.mark }])
-  return { kind: 'table', id: 'figures', columns: NO_HEADS, rows }
+  for (const m of f.marks) rows.push([{ text: capital(m.about.replace(`, ${m.mark}`, '')), mark: m.mark, span: 2 }])
+  return { kind: 'table', id: 'figures', dense: true, columns: NO_HEADS, rows }
 }
 const obstacleWords = (names: readonly string[]): string => (names.length === 1 ? names[0] : `${names[0]} and ${names.length - 1} more`)
 
-function horizonFigure(input: MemoInput, r: OptionResult, number: number): Block {
+/** Horizon profile of an option. */
+export function horizonFigure(input: MemoInput, r: OptionResult, number: number): Block {
   const { rows, highest, medianDeg } = r.figures.horizon
   const { system } = input
   const measured = measuredPoints(r.figures.measuredHorizon)
-  const height = measured ? 144 : 132
+  const height = measured ? 140 : 118
   const chart = {
     rows,
     width: TEXT_WIDTH_PT,

@@ -1,15 +1,17 @@
-import { type Ranking, rankOptions, WEIGHT_FACTORS } from '../../../core/index.ts'
+import { type OptionRef, type Ranking, rankOptions, WEIGHT_FACTORS } from '../../../core/index.ts'
 import {
   criterionWords,
   effectWords,
   formatCriterion,
   formatNumber,
   formatScore,
+  NO_VALUE,
   optionWords,
   RANKING_WORDS,
   rankWords,
 } from '../../words/index.ts'
 import { value } from './cells.ts'
+import { mustWords } from './comparisonTable.ts'
 import type { Block, Cell, MemoInput } from './types.ts'
 
 /** The study's ranking: what is weighed, the scores, and whether they hold when a weight changes. Nothing where none is stated. */
@@ -50,6 +52,10 @@ const hasTilts = (input: MemoInput): boolean => new Set(input.results.map((r) =>
 function scoresTable(input: MemoInput, { options }: Ranking): Block {
   const ranks = options.map((o) => o.rank)
   const criteria = input.study.ranking?.criteria ?? []
+  const verdictOf = (ref: OptionRef): string => {
+    const own = input.results.find((r) => r.ref === ref)
+    return own ? mustWords(own) : NO_VALUE
+  }
   return {
     kind: 'table',
     id: 'ranking-scores',
@@ -64,7 +70,7 @@ function scoresTable(input: MemoInput, { options }: Ranking): Block {
     rows: options.map((o): Cell[] => [
       rankWords(o.rank, ranks),
       optionWords(o.ref, hasTilts(input)),
-      o.passes === null ? 'met, k = 1 not run yet' : o.passes ? 'pass' : 'fail',
+      verdictOf(o.ref),
       ...o.criteria.map((c) => formatScore(c.u === null ? null : c.u * c.share)),
       formatScore(o.score),
     ]),

@@ -24,9 +24,13 @@ export function roadBlocks(input: MemoInput, r: OptionResult): Block[] {
   if (roads.lengthM === 0) return [{ kind: 'paragraph', text: 'No road or railway lies within range.' }]
   return [
     ringTable(input, roads),
-    roads.seenM > 0 ? { kind: 'beside', leftPt: 200, left: [speedTable(input, roads)], right: [words(input, roads)] } : words(input, roads),
+    { kind: 'paragraph', role: 'small', text: roadWords(input, roads) },
     { kind: 'caution', texts: cautionsFor('roads') },
   ]
+}
+/** Seen by radial speed; null where nothing is seen. */
+export function roadSpeeds(input: MemoInput, { figures: { roads } }: OptionResult): TableBlock | null {
+  return roads && roads.seenM > 0 ? speedTable(input, roads) : null
 }
 
 function ringTable({ system }: MemoInput, roads: RoadsFigure): TableBlock {
@@ -64,7 +68,6 @@ function ringTable({ system }: MemoInput, roads: RoadsFigure): TableBlock {
   return { kind: 'table', id: 'roads', title: 'Roads seen, by ring and class', columns, rows }
 }
 
-const words = (input: MemoInput, roads: RoadsFigure): Block => ({ kind: 'paragraph', role: 'small', text: roadWords(input, roads) })
 function roadWords({ system, study }: MemoInput, roads: RoadsFigure): string {
   const km = (m: number): string => withMetric((s) => formatRoad(m, s), system)
   const words = [
@@ -91,7 +94,8 @@ function speedTable({ system }: MemoInput, roads: RoadsFigure): TableBlock {
   return {
     kind: 'table',
     id: 'road-speeds',
-    title: 'Seen, by radial speed',
+    title: 'Roads seen, by radial speed',
+    dense: true,
     columns: [
       { head: 'Radial speed', unit: 'm/s', width: 'fill' },
       { head: '', unit: 'km/h', align: 'right' },

@@ -55,6 +55,8 @@ export interface Column {
   /** In lighter ink under or after the head. */
   readonly unit?: string
   readonly align?: 'left' | 'right'
+  /** Head over this and the neighbouring columns of the same group. */
+  readonly group?: string
   /** Never broken over lines. */
   readonly keep?: boolean
   /** Points, `auto` (as wide as its words, default) or `fill`. */
@@ -64,6 +66,8 @@ export interface TableBlock {
   readonly kind: 'table'
   readonly id: string
   readonly title?: string
+  /** Many rows of numbers, set close. */
+  readonly dense?: boolean
   /** Empty heads on all columns: no header row is printed. */
   readonly columns: readonly Column[]
   readonly rows: readonly (readonly Cell[])[]

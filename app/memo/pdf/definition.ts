@@ -22,18 +22,18 @@ const INK_3 = hexOf('ink-3')
 const LINE = hexOf('line')
 const WARN = hexOf('warn')
 const PAGE_WIDTH: Record<Paper, number> = { A4: 595.28, Letter: 612 }
-const TITLE_PT = 22
+const TITLE_PT = 18
 const SECTION_PT = 13
 
 /** Hairlines between rows, a darker one under the heads, none over or between them. */
-const hairlines = (heads: number): CustomTableLayout => ({
+const hairlines = (heads: number, dense = false): CustomTableLayout => ({
   hLineWidth: (i, node) => (i < heads ? 0 : i === heads && heads > 0 ? 0.8 : i === 0 || i === node.table.body.length ? 0.5 : 0.4),
   vLineWidth: () => 0,
   hLineColor: (i) => (heads > 0 && i === heads ? INK_3 : LINE),
   paddingLeft: (i) => (i === 0 ? 0 : 4),
   paddingRight: (i, node) => (i === (node.table.widths?.length ?? 0) - 1 ? 0 : 4),
-  paddingTop: () => 2.4,
-  paddingBottom: () => 1.8,
+  paddingTop: () => (dense ? 0.9 : 2.4),
+  paddingBottom: () => (dense ? 0.5 : 1.8),
 })
 const CAUTION_LAYOUT: CustomTableLayout = {
   hLineWidth: () => 0,
@@ -51,7 +51,7 @@ export function pdfDefinition(model: MemoModel, paper: Paper): TDocumentDefiniti
   const stamp = new Date(/^\d{4}-\d{2}-\d{2}$/.test(model.date) ? `${model.date}T00:00:00Z` : model.date)
   return {
     pageSize: paper === 'A4' ? 'A4' : 'LETTER',
-    pageMargins: [side, 56, side, 52],
+    pageMargins: [side, 50, side, 48],
     version: '1.7',
     language: 'en',
     displayTitle: true,
@@ -65,13 +65,13 @@ export function pdfDefinition(model: MemoModel, paper: Paper): TDocumentDefiniti
     },
     defaultStyle: { font: FONT, fontSize: BODY_PT, color: INK, lineHeight: 1.04 },
     header: (page) =>
-      page === 1 ? '' : { text: `${model.title}: siting memo`, fontSize: SMALL_PT, color: INK_3, margin: [side, 30, side, 0] },
+      page === 1 ? '' : { text: `${model.title}: siting memo`, fontSize: SMALL_PT, color: INK_3, margin: [side, 26, side, 0] },
     footer: (page, pages) => ({
       columns: [
         { text: model.footer, fontSize: SMALL_PT, color: INK_3 },
         { text: `page ${page} of ${pages}`, fontSize: SMALL_PT, color: INK_3, alignment: 'right', width: 90 },
       ],
-      margin: [side, 18, side, 0],
+      margin: [side, 16, side, 0],
     }),
     content: [...titleBlock(model), ...model.sections.flatMap((s) => sectionContent(s))],
   }
@@ -208,6 +208,8 @@ function paragraph(block: Extract<Block, { kind: 'paragraph' }>): Content {
 
 /** Tables of up to about this many lines are never broken over pages; a longer block kept whole could not be placed at all. */
 const KEPT_LINES = 30
+/** Rows that stay with the head of a table that may be broken. */
+const KEPT_ROWS = 4
 /** Lines a table will take, estimated high: words per column from the share of the text width it is likely to get. */
 function linesOf({ columns, rows }: TableBlock): number {
   const fills = columns.filter((c) => c.width === 'fill').length
@@ -227,12 +229,9 @@ function tableContent(block: TableBlock): Content {
   const headed = columns.some((c) => c.head !== '')
   const heads = columns.map(
     (c): TableCell => ({
-      text: c.unit === undefined ? words(c.head) : [...words(c.head), { text: ` ${c.unit}`, color: INK_3 }],
-      fontSize: SMALL_PT,
-      color: INK_2,
+      text: c.unit === undefined ? words(c.head) : [...words(c.head), { text: `${c.head === '' ? '' : ' '}${c.unit}`, color: INK_3 }],
+      ...HEAD,
       alignment: c.align ?? 'left',
-      lineHeight: 1,
-      verticalAlignment: 'bottom',
     }),
   )
   // The title of a table that may be broken is part of its repeated head, so that neither stands alone.
@@ -241,21 +240,36 @@ function tableContent(block: TableBlock): Content {
     ...columns.slice(1).map(() => ''),
   ]
   const titled = title !== undefined && !kept && headed
-  const heading = [...(titled ? [titleRow] : []), ...(headed ? [heads] : [])]
+  const grouped = columns.some((c) => c.group !== undefined)
+  const heading = [...(titled ? [titleRow] : []), ...(grouped ? [groupRow(columns)] : []), ...(headed ? [heads] : [])]
   const table: ContentTable = {
     table: {
       headerRows: heading.length,
-      keepWithHeaderRows: 1,
+      keepWithHeaderRows: Math.min(rows.length, KEPT_ROWS),
       dontBreakRows: true,
       widths: columns.map((c) => (c.width === 'fill' ? '*' : (c.width ?? 'auto'))),
       body: [...heading, ...rows.map((row) => rowContent(row, columns))],
     },
-    layout: hairlines(heading.length),
+    layout: hairlines(heading.length, block.dense),
     margin: [0, 2, 0, 8],
   }
   if (!kept) return table
   if (title === undefined) return { stack: [table], unbreakable: true }
   return { stack: [{ text: title ?? '', bold: true, fontSize: SMALL_PT, margin: [0, 4, 0, 2] }, table], unbreakable: true }
+}
+
+const HEAD = { fontSize: SMALL_PT, color: INK_2, lineHeight: 1, verticalAlignment: 'bottom' } as const
+/** Heads over neighbouring columns of one group. */
+function groupRow(columns: readonly Column[]): TableCell[] {
+  const out: TableCell[] = []
+  while (out.length < columns.length) {
+    const { group } = columns[out.length]
+    let span = 1
+    while (group !== undefined && columns[out.length + span]?.group === group) span++
+    out.push({ text: words(group ?? ''), ...HEAD, alignment: 'right', colSpan: span })
+    for (let n = 1; n < span; n++) out.push('')
+  }
+  return out
 }
 
 /** Cells of a row; the printer wants an empty cell for each one that a spanning cell covers. */
@@ -268,9 +282,16 @@ function rowContent(row: readonly Cell[], columns: readonly Column[]): TableCell
   }
   return out
 }
+/** A number with its unit and what stands in brackets, or a few of them: never broken over lines. */
+function isNumber(cell: Cell): boolean {
+  if (typeof cell === 'string') return /^[−≥<+±\d\u202f.,/ –-]{1,24}$/.test(cell)
+  const long = cell.text.length + (cell.unit?.length ?? 0) + (cell.also?.length ?? 0)
+  return cell.mark === undefined && /^[−≥<+±\d][−≥<+±\d\u202f.,/ –-]*$/.test(cell.text) && long <= 24
+}
 function cellContent(cell: Cell, column: Column): TableCell {
-  const long = (typeof cell === 'string' ? cell : cell.text).length > LONGEST_KEPT
-  const base = { fontSize: SMALL_PT, alignment: column.align ?? ('left' as const), lineHeight: 1, noWrap: column.keep === true && !long }
+  const text = typeof cell === 'string' ? cell : cell.text
+  const keep = (column.keep === true && text.length <= LONGEST_KEPT) || isNumber(cell)
+  const base = { fontSize: SMALL_PT, alignment: column.align ?? ('left' as const), lineHeight: 1, noWrap: keep }
   if (typeof cell === 'string') return { text: words(cell), ...base }
   const runs: Content[] = []
   if (cell.text !== '') runs.push({ text: cell.text, color: cell.light ? INK_2 : INK })

@@ -1,6 +1,6 @@
 import type { ReactNode } from 'react'
 import { DrawingView } from '../../charts/DrawingView.tsx'
-import type { Block, Cell, MemoModel, TableBlock } from '../../memo/model/index.ts'
+import type { Block, Cell, Column, MemoModel, TableBlock } from '../../memo/model/index.ts'
 import { Caution, Mark } from '../../ui/index.ts'
 
 /** The whole memo as it will be printed, but for page breaks and the painted maps. */
@@ -85,6 +85,7 @@ function TableView({ table }: { table: TableBlock }) {
       <table className="table">
         {heads ? (
           <thead>
+            <GroupRow columns={table.columns} />
             <tr>
               {table.columns.map((c, i) => {
                 const Head = c.head === '' ? 'td' : 'th'
@@ -114,6 +115,29 @@ function TableView({ table }: { table: TableBlock }) {
         </tbody>
       </table>
     </div>
+  )
+}
+/** Heads over neighbouring columns of one group; nothing where there are none. */
+function GroupRow({ columns }: { columns: readonly Column[] }) {
+  if (columns.every((c) => c.group === undefined)) return null
+  const groups: { group: string | undefined; at: number; span: number }[] = []
+  columns.forEach(({ group }, at) => {
+    const last = groups.at(-1)
+    if (last && group !== undefined && last.group === group) last.span++
+    else groups.push({ group, at, span: 1 })
+  })
+  return (
+    <tr>
+      {groups.map(({ group, at, span }) =>
+        group === undefined ? (
+          <td key={at} />
+        ) : (
+          <th key={at} colSpan={span} scope="colgroup">
+            {group}
+          </th>
+        ),
+      )}
+    </tr>
   )
 }
 const spanOf = (cell: Cell): number | undefined => (typeof cell === 'string' ? undefined : cell.span)
