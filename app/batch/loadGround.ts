@@ -57,7 +57,11 @@ export async function loadGround(
     }
     const read = await readGround(request, door, (doing, done, total) => progress.say(doing, done, total), shared)
     const { shape, heightM, code, codes, obstacles, roads, surveys, verticalErrorM } = read
-    const ground = await drive(buildGround({ serial: 1, shape, heightM, code, codes, obstacles, roads, surveys, verticalErrorM }), progress, 'Relief')
+    const ground = await drive(
+      buildGround({ serial: 1, shape, heightM, code, codes, obstacles, roads, surveys, verticalErrorM }),
+      progress,
+      'Relief',
+    )
     return { ground, read, warnings: [...read.warnings, ...checkPlaces(loaded, ground, candidates)] }
   } finally {
     await Promise.all(open.map((s) => s.close()))

@@ -1,4 +1,13 @@
-import { type Ask, type GroundRead, type GroundRequest, InputError, type Obstacle, type Road, type StudyDoc, surveysOf } from '../../core/index.ts'
+import {
+  type Ask,
+  type GroundRead,
+  type GroundRequest,
+  InputError,
+  type Obstacle,
+  type Road,
+  type StudyDoc,
+  surveysOf,
+} from '../../core/index.ts'
 import type { IntakeTell } from './intakeMessages.ts'
 
 /** The window is planned before the candidates' ranges are settled; 150 km is more than any terrain radar asks of its ground. */

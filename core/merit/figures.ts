@@ -3,6 +3,7 @@ import { geodesicInverse } from '../geodesy/index.ts'
 import { sightPoint } from '../masking/index.ts'
 import { isUnknown } from '../polar/index.ts'
 import { canonicalJson, type SettledNeed } from '../study/index.ts'
+import { share, type Work } from '../work/index.ts'
 import { flatFigures } from './flatFigures.ts'
 import { floorFigures, type GroundSums, groundSums, RING_WIDTH_M } from './groundFigures.ts'
 import { measuredHorizonFigure } from './measured/index.ts'
@@ -29,17 +30,24 @@ interface KeptSight {
 }
 const keptByMask = new WeakMap<object, KeptSight>()
 
+/** Parts that the work is told in: four before the needs, which take as long as all of them. */
+const PARTS = 8
 const NOTE_AREA_CFAR = { mark: 'outside model', about: 'area CFAR: threshold of a single sample of clutter, not of what a filter leaves' }
 
 /** Figures of merit of one option. `marks` are the words that must stand beside its clutter figures. A change of need leaves the rest as it was. */
-export function optionFigures(o: OptionCells, needs: readonly SettledNeed[], marks: Figures['marks']): Figures {
+export function* optionFigures(o: OptionCells, needs: readonly SettledNeed[], marks: Figures['marks']): Work<Figures> {
   const kept = keptOf(o)
   kept.sums ??= groundSums(o)
+  yield { done: 1, total: PARTS }
   kept.notes ??= overloadNotes(o)
+  yield { done: 2, total: PARTS }
+  const clutterLevels = clutterLevelsOf(o)
+  yield { done: 3, total: PARTS }
   if (kept.roads?.rcsM2 !== o.vehicleRcsM2 || !kept.roads) kept.roads = { rcsM2: o.vehicleRcsM2, figure: roadsFigure(o) }
   const { sums } = kept
   const sight = sightOf(o)
-  const asked = needFigures(o, needs)
+  yield { done: 4, total: PARTS }
+  const asked = yield* share(needFigures(o, needs), 4, PARTS, PARTS)
   const elevations = o.mask.horizon.map((h) => h.elevationDeg)
   const highest = o.mask.horizon.reduce<Figures['horizon']['highest']>(
     (best, row) => (Number.isFinite(row.elevationDeg) && (!best || row.elevationDeg > best.elevationDeg) ? row : best),
@@ -60,7 +68,7 @@ export function optionFigures(o: OptionCells, needs: readonly SettledNeed[], mar
     ringWidthM: RING_WIDTH_M,
     clutterOverKm2: sums.over,
     cnrPeakDb: sums.peakDb,
-    clutterLevels: clutterLevelsOf(o),
+    clutterLevels,
     secondTimeAround: o.folded ? secondTimeAround(o.folded, o.place.lat) : { km2: null, notEvaluatedBeyondM: sight.knownToM },
     needs: asked,
     atHighK: null,
@@ -83,17 +91,18 @@ function keptOf(o: OptionCells): Kept {
 }
 
 /** Figures of needs; those already worked out for the same cells, need and radar are taken again. */
-export function needFigures(o: OptionCells, needs: readonly SettledNeed[]): NeedFigure[] {
+export function* needFigures(o: OptionCells, needs: readonly SettledNeed[]): Work<NeedFigure[]> {
   const { needs: known } = keptOf(o)
   const rest = canonicalJson([o.radar, o.suppression.rows, o.lowK?.key ?? null, o.folded?.key ?? null])
   const wanted = new Map<string, NeedFigure>()
-  const out = needs.map((need) => {
+  const out: NeedFigure[] = []
+  for (const [n, need] of needs.entries()) {
     const places = o.places.find((p) => p.needId === need.id)
     const key = `${canonicalJson(need)}|${rest}|${places ? serialOf(places) : ''}`
-    const figure = known.get(key) ?? needFigure(o, need)
+    const figure = known.get(key) ?? (yield* share(needFigure(o, need), n, n + 1, needs.length))
     wanted.set(key, figure)
-    return figure
-  })
+    out.push(figure)
+  }
   known.clear()
   for (const [key, figure] of wanted) known.set(key, figure)
   return out

@@ -1,6 +1,7 @@
 import { secondTimeAround } from '../clutter/index.ts'
 import type { Earth } from '../geodesy/index.ts'
 import type { SettledNeed } from '../study/index.ts'
+import type { Work } from '../work/index.ts'
 import { groundSums } from './groundFigures.ts'
 import { isAreaNeed, needFigure } from './needs/needFigure.ts'
 import type { OptionCells } from './optionCells.ts'
@@ -12,19 +13,21 @@ export const hasHighK = (earth: Pick<Earth, 'effectiveEarthFactor'>): boolean =>
   earth.effectiveEarthFactor > 0 && earth.effectiveEarthFactor < HIGH_K
 
 /** Clutter figures of an option whose cells are those of k = 2.75: areas, folded area, suppression needed over each need of layer or polygon. */
-export function highKFigure(o: OptionCells, needs: readonly SettledNeed[]): HighKFigure {
+export function* highKFigure(o: OptionCells, needs: readonly SettledNeed[]): Work<HighKFigure> {
   const { over, peakDb } = groundSums(o)
+  const suppression: HighKFigure['suppression'][number][] = []
+  for (const need of needs.filter(isAreaNeed)) {
+    const f = yield* needFigure(o, need)
+    if (f.notAssessed !== null) continue
+    const { p50Db, p90Db, p99Db, shortKm2 } = f.suppression
+    suppression.push({ needId: need.id, name: f.name, p50Db, p90Db, p99Db, shortKm2 })
+  }
   return {
     k: o.earth.effectiveEarthFactor,
     clutterOverKm2: over,
     cnrPeakDb: peakDb,
     secondTimeAroundKm2: o.folded ? secondTimeAround(o.folded, o.place.lat).km2 : null,
-    suppression: needs.filter(isAreaNeed).flatMap((need) => {
-      const f = needFigure(o, need)
-      if (f.notAssessed !== null) return []
-      const { p50Db, p90Db, p99Db, shortKm2 } = f.suppression
-      return [{ needId: need.id, name: f.name, p50Db, p90Db, p99Db, shortKm2 }]
-    }),
+    suppression,
   }
 }
 

@@ -1,10 +1,12 @@
 import { CELL, cellAreasM2 } from '../polar/index.ts'
 import type { SettledNeed } from '../study/index.ts'
+import type { Work } from '../work/index.ts'
 import { groundSums } from './groundFigures.ts'
-import { cellsOfNeed, isAreaNeed, needFigure } from './needs/needFigure.ts'
+import type { EachNeedRow } from './needs/needCells.ts'
+import { isAreaNeed, needFigure } from './needs/needFigure.ts'
 import { PLACE } from './needs/place.ts'
 import type { OptionCells } from './optionCells.ts'
-import type { Figures, Ladder } from './types.ts'
+import type { Figures, Ladder, NeedFigure } from './types.ts'
 
 /** One rung: what the ruler shows of an option at one mast height. */
 export interface Rung {
@@ -21,9 +23,17 @@ export interface Rung {
  * In sight and usable % are of the first need, or of the known ground (in sight) where there is none. A need is met when it passes at the study's
  * k and at the smaller one; at the study's alone where the smaller was not worked out.
  */
-export function rung(o: OptionCells, needs: readonly SettledNeed[]): Rung {
+export function* rung(o: OptionCells, needs: readonly SettledNeed[]): Work<Rung> {
   const sums = groundSums(o)
-  const figures = needs.map((need) => needFigure(o, need)).filter((f) => f.notAssessed === null)
+  yield { done: 0, total: 1 }
+  const first = needs.find(isAreaNeed)
+  const octants = octantAreas(o)
+  const figures: NeedFigure[] = []
+  for (const need of needs) {
+    const figure = yield* needFigure(o, need, need === first ? octants.add : undefined)
+    if (figure.notAssessed === null) figures.push(figure)
+  }
+  if (!first) octants.addGround()
   const known = sums.inSightKm2 + sums.maskedKm2
   return {
     heightM: o.heightM,
@@ -31,33 +41,39 @@ export function rung(o: OptionCells, needs: readonly SettledNeed[]): Rung {
     usablePct: figures[0]?.usablePct ?? 0,
     over40Km2: sums.over.over40,
     shortKm2: figures.reduce((s, f) => s + f.suppression.shortKm2, 0),
-    octantPct: octantPct(o, needs.find(isAreaNeed) ?? null),
+    octantPct: octants.pct(),
     needs: figures.map((f) => ({ needId: f.needId, name: f.name, met: f.passes ?? f.met })),
   }
 }
 
 const OCTANTS = 8
-/** By octant: share of a need's area that is usable, or of known ground that is in sight, %; null where there is none of it. */
-export function octantPct(o: OptionCells, need: SettledNeed | null): (number | null)[] {
+/** By octant: share of a need's area that is usable (`add` takes its rows), or of known ground that is in sight, %; null where there is none of it. */
+export function octantAreas(o: OptionCells) {
   const { azimuths, ranges, azimuthStepDeg } = o.site.grid
   const areas = cellAreasM2(o.site.grid, o.place.lat)
-  const place = need ? (cellsOfNeed(o, need)?.place ?? null) : null
   const whole = new Float64Array(OCTANTS)
   const part = new Float64Array(OCTANTS)
-  for (let i = 0; i < azimuths; i++) {
-    const octant = Math.floor((i * azimuthStepDeg * OCTANTS) / 360 + 0.5) % OCTANTS
-    for (let j = 0, at = i * ranges; j < ranges; j++, at++) {
-      if (place) {
-        if (!(place[at] & PLACE.inNeed) || place[at] & PLACE.groundAbove) continue
+  const octantOf = (i: number): number => Math.floor((i * azimuthStepDeg * OCTANTS) / 360 + 0.5) % OCTANTS
+  const add: EachNeedRow = ({ place }, from, first, last) => {
+    const octant = octantOf(from / ranges)
+    for (let j = first; j < last; j++) {
+      if (place[j] & PLACE.groundAbove) continue
+      whole[octant] += areas[j]
+      if (place[j] & PLACE.usable) part[octant] += areas[j]
+    }
+  }
+  const addGround = (): void => {
+    const { state, inSight } = o.mask
+    for (let i = 0; i < azimuths; i++) {
+      const octant = octantOf(i)
+      for (let j = 0, at = i * ranges; j < ranges; j++, at++) {
+        if (state[at] === CELL.beyondVoid || state[at] === CELL.outside) continue
         whole[octant] += areas[j]
-        if (place[at] & PLACE.usable) part[octant] += areas[j]
-      } else if (o.mask.state[at] !== CELL.beyondVoid && o.mask.state[at] !== CELL.outside) {
-        whole[octant] += areas[j]
-        part[octant] += (o.mask.inSight[at] / 65535) * areas[j]
+        part[octant] += (inSight[at] / 65535) * areas[j]
       }
     }
   }
-  return Array.from(whole, (area, n) => (area > 0 ? (100 * part[n]) / area : null))
+  return { add, addGround, pct: () => Array.from(whole, (area, n) => (area > 0 ? (100 * part[n]) / area : null)) }
 }
 
 /** The ladder's numbers of an option whose figures are there: the same as its rung has. */

@@ -284,7 +284,7 @@ export class Answers {
           lowK,
           places,
         }
-        rungs.push(rung(cells, study.needs))
+        rungs.push(yield* silently(rung(cells, study.needs)))
         yield { done: rungs.length, total: heights.length }
       }
     }

@@ -158,14 +158,15 @@ export class Engine {
 
   private *makeFigures(ref: OptionRef): Work<Tell[]> {
     const study = this.study as SettledStudy
-    const cells = yield* share(this.compute(ref), 0, 0.6, 1)
-    const lowK = yield* share(this.computeLowK(ref), 0.6, 0.8, 1)
-    const folded = yield* share(this.computeFolded(ref, cells), 0.8, 1, 1)
-    yield* seeRoads(cells)
+    const cells = yield* share(this.compute(ref), 0, 0.4, 1)
+    const lowK = yield* share(this.computeLowK(ref), 0.4, 0.5, 1)
+    const folded = yield* share(this.computeFolded(ref, cells), 0.5, 0.6, 1)
+    yield* share(seeRoads(cells), 0.6, 0.7, 1)
     const keys = this.keys(ref)
     if (this.study !== study || !keys) return []
     const marks = clutterMarks(cells.ground.codes, study.radar, this.landTable !== null, study.atmosphere)
-    const figures = optionFigures({ ...cells, lowK, folded }, study.needs, marks)
+    const figures = yield* share(optionFigures({ ...cells, lowK, folded }, study.needs, marks), 0.7, 1, 1)
+    if (this.study !== study) return []
     this.found.set(optionId(ref), { ref, keys, figures, serial: ++this.made })
     const isShown = this.shown.option !== null && optionId(this.shown.option) === optionId(ref)
     return isShown ? [this.figures(), { kind: 'dirty' }] : [this.figures()]

@@ -39,6 +39,6 @@ export class HighK {
     const folded = mayFold(study, ground, place)
       ? yield* share(foldedClutter(ground, place, ref.heightM, earth, radar, ref.tiltDeg, site, study.foldRangeM, options), 0.8, 1, 1)
       : null
-    return highKFigure({ ...o, earth, site, mask, clutter, folded, lowK: null }, study.needs)
+    return yield* highKFigure({ ...o, earth, site, mask, clutter, folded, lowK: null }, study.needs)
   }
 }

@@ -20,7 +20,17 @@ export function keysOf(serial: number, filesSerial: number, study: SettledStudy,
 }
 
 const siteKey = (serial: number, study: SettledStudy, c: SettledCandidate, k: number): string =>
-  canonicalJson([serial, c.lon, c.lat, c.groundHeightM, c.clearingRadiusM, k, study.atmosphere.earthRadiusM, study.run, c.measuredHorizon?.used ? c.measuredHorizon : null])
+  canonicalJson([
+    serial,
+    c.lon,
+    c.lat,
+    c.groundHeightM,
+    c.clearingRadiusM,
+    k,
+    study.atmosphere.earthRadiusM,
+    study.run,
+    c.measuredHorizon?.used ? c.measuredHorizon : null,
+  ])
 
 export const optionId = (ref: OptionRef): string => `${ref.candidate}|${ref.heightM}|${ref.tiltDeg}`
 

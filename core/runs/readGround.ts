@@ -4,9 +4,9 @@ import { type ByteSource, openTerrain, type Progress, readClasses, readFeatures 
 import { type GroundCode, groundCodes, type TerrainName, uniformCode } from '../landcover/index.ts'
 import { type NeedPlaces, readPlaces } from '../merit/index.ts'
 import { type Obstacle, type Road, readObstacles, readRoads } from '../obstacles/index.ts'
-import { readSurvey, type Survey } from '../terrain/index.ts'
 import { type Circle, type GridShape, planGround, postingM } from '../raster/index.ts'
 import type { LandCoverDoc, NeedDoc, StudyDoc, TerrainFileDoc } from '../study/index.ts'
+import { readSurvey, type Survey } from '../terrain/index.ts'
 
 /** What of a study makes its ground. */
 export interface GroundRequest {

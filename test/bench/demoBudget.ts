@@ -50,7 +50,7 @@ export async function demoBudget(): Promise<DemoBudget> {
     const { study } = demo.engine.ready()
     const place = siteOf(study.candidates[0])
     const from = cpuMs()
-    const { site, masks } = finish(sweep(demo.ground, place, [20], polarShape(study.run), earthOf(study)))
+    const { site, masks } = finish(sweep(demo.ground, place, [20], polarShape(study.run), earthOf(study), { heightToSee: false }))
     finish(clutterToNoise(site, masks[0], demo.ground.codes, place, 20, earthOf(study), study.radar, 1.5, { weather: study.atmosphere }))
     return full / (cpuMs() - from)
   })

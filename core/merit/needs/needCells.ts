@@ -1,6 +1,7 @@
 import { CELL } from '../../polar/index.ts'
 import { canonicalJson, type SettledNeed } from '../../study/index.ts'
 import { toDb, wavelengthM } from '../../units/index.ts'
+import { finish, type Work } from '../../work/index.ts'
 import { antennaM, meanEffectiveRadiusM, type OptionCells, residueOf } from '../optionCells.ts'
 import { fillLevelRow, lossesBetween, makeLevelRow, type RowModel } from '../signal/levelRow.ts'
 import { fillLobes, lobeGrid, lobeModel } from '../signal/lobing/index.ts'
@@ -27,6 +28,11 @@ export interface NeedCells {
   readonly cause: Uint8Array
 }
 
+/** Takes the cells first … last−1 of one row of a need; the row's first cell has index `from`. */
+export type EachNeedRow = (row: NeedRow, from: number, first: number, last: number) => void
+/** Azimuths between two yields of a scan. */
+const AZIMUTHS_PER_TURN = 24
+
 /** The cells of a need, all of them. */
 export function needCells(o: OptionCells, need: SettledNeed): NeedCells {
   const count = o.site.groundM.length
@@ -39,10 +45,11 @@ export function needCells(o: OptionCells, need: SettledNeed): NeedCells {
     availableDb: values(),
     cause: new Uint8Array(count),
   }
-  scanNeed(o, need, (row, from, first, last) => {
+  const scan = scanNeed(o, need, (row, from, first, last) => {
     for (const key of ['place', 'marginM', 'signalDb', 'neededDb', 'availableDb', 'cause'] as const)
       out[key].set(row[key].subarray(first, last), from + first)
   })
+  finish(scan)
   return out
 }
 
@@ -52,11 +59,7 @@ export function needCells(o: OptionCells, need: SettledNeed): NeedCells {
  * detectable and S/(C/I+N) ≥ it. Signal: one pulse after STC, elevation pattern, knife edge near the mask, F never over 1. Clutter: mean of the
  * resolution cell at the target's azimuth and slant range. Returns the spans of the need.
  */
-export function scanNeed(
-  o: OptionCells,
-  need: SettledNeed,
-  each: (row: NeedRow, from: number, first: number, last: number) => void,
-): NeedSpans {
+export function* scanNeed(o: OptionCells, need: SettledNeed, each: EachNeedRow): Work<NeedSpans> {
   const { grid, groundM } = o.site
   const { azimuths, ranges, rangeStepM } = grid
   const spans = spansOf(o.place, grid, need, o.places.find((p) => p.needId === need.id) ?? null)
@@ -124,6 +127,7 @@ export function scanNeed(
   const cells = { groundM, code: o.site.code, relief: o.site.relief, inSight: o.mask.inSight }
   const row = makeNeedRow(ranges)
   for (let i = 0; i < azimuths; i++) {
+    if (i % AZIMUTHS_PER_TURN === 0) yield { done: i, total: azimuths }
     const pairs = spans.pairs[i]
     if (!pairs) continue
     const from = i * ranges

@@ -1,13 +1,14 @@
 import { geodesicDirect } from '../../geodesy/index.ts'
 import { sightPoint } from '../../masking/index.ts'
-import type { SettledNeed } from '../../study/index.ts'
+import { canonicalJson, type SettledNeed } from '../../study/index.ts'
 import { toDb } from '../../units/index.ts'
+import type { Work } from '../../work/index.ts'
 import { type AreaHistogram, areaPercentile } from '../areaHistogram.ts'
 import type { OptionCells } from '../optionCells.ts'
 import { areaSums } from './areaSums.ts'
 import { conesOf } from './cone.ts'
 import { exponentialOf } from './exponential.ts'
-import { type NeedCells, needCells, scanNeed } from './needCells.ts'
+import { type EachNeedRow, type NeedCells, needCells, scanNeed } from './needCells.ts'
 import { lossCode, type NeedFigure, type PlaceRef, type SuppressionFigure } from './needTypes.ts'
 import { lossesOf, outcome } from './outcome.ts'
 import { PLACE } from './place.ts'
@@ -17,14 +18,27 @@ import { fixesFigure, trackFigure } from './places/placesFigure.ts'
 export const isAreaNeed = (need: SettledNeed): boolean => need.kind === 'layer' || need.kind === 'polygon'
 
 /** Cells of a need for one option; null for fixes and tracks, and for a polygon whose file is not read. */
-export const cellsOfNeed = (o: OptionCells, need: SettledNeed): NeedCells | null =>
-  isAreaNeed(need) && placesOf(o, need) !== 'missing' ? needCells(o, need) : null
+export function cellsOfNeed(o: OptionCells, need: SettledNeed): NeedCells | null {
+  if (!isAreaNeed(need)) return null
+  const places = placesOf(o, need)
+  if (places === 'missing') return null
+  const { clutter, mask, lowK, folded, suppression } = o
+  const from = { clutter, mask, lowK, folded, suppression, places, need: canonicalJson(need) }
+  const at = lately.findIndex((l) => Object.entries(from).every(([key, value]) => l.from[key as keyof typeof from] === value))
+  const found = at < 0 ? { from, cells: needCells(o, need) } : lately.splice(at, 1)[0]
+  lately.unshift(found)
+  lately.length = Math.min(lately.length, CELLS_KEPT)
+  return found.cells
+}
+/** The needs looked at last: layers, pans of the map and the pointer ask for the same cells again and again. */
+const CELLS_KEPT = 2
+const lately: { readonly from: Readonly<Record<string, unknown>>; readonly cells: NeedCells }[] = []
 
 const placesOf = (o: OptionCells, need: SettledNeed) =>
   need.kind === 'layer' ? null : (o.places.find((p) => p.needId === need.id) ?? 'missing')
 
-/** One need against one option. `notAssessed` is set where its file is not read. */
-export function needFigure(o: OptionCells, need: SettledNeed): NeedFigure {
+/** One need against one option. `notAssessed` is set where its file is not read; `also` sees each row of cells of a layer or polygon. */
+export function* needFigure(o: OptionCells, need: SettledNeed, also?: EachNeedRow): Work<NeedFigure> {
   const places = placesOf(o, need)
   const base = emptyFigure(o, need)
   if (places === 'missing') return { ...base, notAssessed: `its file ${need.file ?? ''} is not read` }
@@ -33,14 +47,18 @@ export function needFigure(o: OptionCells, need: SettledNeed): NeedFigure {
       ? fixesFigure(o, need, places, base)
       : places && need.kind === 'track'
         ? trackFigure(o, need, places, base)
-        : areaFigure(o, need, base)
+        : yield* areaFigure(o, need, base, also)
   return { ...figure, exponential: exponentialOf(o, need, figure) }
 }
 
 /** Sums over the cells of a layer or polygon need. */
-function areaFigure(o: OptionCells, need: SettledNeed, base: NeedFigure): NeedFigure {
+function* areaFigure(o: OptionCells, need: SettledNeed, base: NeedFigure, also?: EachNeedRow): Work<NeedFigure> {
   const sums = areaSums(o)
-  const { beyondM2 } = scanNeed(o, need, sums.add)
+  const each: EachNeedRow = (row, from, first, last) => {
+    sums.add(row, from, first, last)
+    also?.(row, from, first, last)
+  }
+  const { beyondM2 } = yield* scanNeed(o, need, each)
   const { margins, signals, needed, shortBy, lost, lowestMargin, lowestSignal } = sums
   const of = (bit: number): number => sums.by.reduce((s, area, bits) => (bits & bit ? s + area : s), 0)
   const above = of(PLACE.groundAbove)
