@@ -9,9 +9,9 @@ export function App({ session }: { session: Session }) {
   )
 }
 
-/** Azimuths are in every corner of the page: it is drawn anew when north changes. */
+/** Azimuths are in every corner of the page: all of it renders again when north changes, and keeps its state. */
 function Faced() {
   const north = useFaceNorth()
   setFaceNorth(north)
-  return <Shell key={north ? JSON.stringify(north) : 'true'} />
+  return <Shell />
 }

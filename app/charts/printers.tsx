@@ -1,4 +1,5 @@
 import { type PointerEvent, type Ref, useMemo } from 'react'
+import { faceNorth } from '../words/index.ts'
 import { DrawingView } from './DrawingView.tsx'
 import type { Box, Scale } from './drawing.ts'
 import { type HorizonInput, horizonChart } from './horizonChart.ts'
@@ -67,9 +68,11 @@ export function TerrainChart({
   ...input
 }: TerrainInput & Omit<Pointing, 'onPick'> & { onPickPlace?: (x: number, y: number) => void }) {
   const { profile, width, height, system, size, window } = input
+  const north = faceNorth()
+  // biome-ignore lint/correctness/useExhaustiveDependencies: the title names the azimuth from the north of the face
   const geometry = useMemo(
     () => terrainChart({ profile, width, height, system, size, ...(window ? { window } : {}) }),
-    [profile, width, height, system, size, window],
+    [profile, width, height, system, size, window, north],
   )
   const pointing = usePointing(geometry.range, { onPoint })
   const pick =

@@ -2,7 +2,7 @@ import { useDeferredValue, useEffect, useMemo, useState } from 'react'
 import type { OptionRef } from '../../../core/index.ts'
 import type { MemoModel } from '../../memo/model/index.ts'
 import type { Session } from '../session/index.ts'
-import { useDoc, useGround, useResults, useSession, useView } from '../session/index.ts'
+import { useDoc, useFaceNorth, useGround, useResults, useSession, useView } from '../session/index.ts'
 
 type Build = (session: Session, only: OptionRef | null | undefined) => MemoModel | null
 
@@ -26,10 +26,11 @@ export function useMemoModel(only?: OptionRef | null): MemoModel | null {
   const any = useResults((r) => r.byOption.size > 0)
   const notes = useGround((g) => g.notes)
   const units = useView((v) => v.units)
+  const north = useFaceNorth()
   const [build, setBuild] = useState<Build | null>(null)
   useEffect(() => {
     if (any) void loadBuild().then((b) => setBuild(() => b))
   }, [any])
   // biome-ignore lint/correctness/useExhaustiveDependencies: the input is read from the stores; these say when it has changed
-  return useMemo(() => (build && any ? build(session, only) : null), [build, session, any, doc, serial, notes, units, only])
+  return useMemo(() => (build && any ? build(session, only) : null), [build, session, any, doc, serial, notes, units, north, only])
 }

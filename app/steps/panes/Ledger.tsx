@@ -1,7 +1,7 @@
 import { useMemo } from 'react'
 import type { CellLedger } from '../../../core/index.ts'
 import { Caution, Mark, Value } from '../../ui/index.ts'
-import { cautionsFor, formatAzimuth, formatMast, formatPlaceRange, textOf } from '../../words/index.ts'
+import { cautionsFor, faceNorth, formatAzimuth, formatMast, formatPlaceRange, textOf } from '../../words/index.ts'
 import { useDoc, useView } from '../session/index.ts'
 import { type LedgerGroup, ledgerGroups } from './ledgerGroups.ts'
 
@@ -10,6 +10,8 @@ export function Ledger({ ledger }: { ledger: CellLedger }) {
   const units = useView((v) => v.units)
   const needs = useDoc((d) => d.needs)
   const { at, option } = ledger
+  const north = faceNorth()
+  // biome-ignore lint/correctness/useExhaustiveDependencies: the lines name azimuths from the north of the face
   const groups = useMemo(
     () =>
       ledgerGroups(
@@ -17,7 +19,7 @@ export function Ledger({ ledger }: { ledger: CellLedger }) {
         (needs ?? []).map((n) => ({ id: n.id, name: n.name ?? n.id })),
         units,
       ),
-    [ledger, needs, units],
+    [ledger, needs, units, north],
   )
   return (
     <div className="ledger">

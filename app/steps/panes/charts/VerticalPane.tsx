@@ -6,6 +6,7 @@ import type { MapHub } from '../../../map/index.ts'
 import { Select } from '../../../ui/index.ts'
 import {
   CHART_WORDS,
+  faceNorth,
   formatDbDown,
   formatHeight,
   formatPd,
@@ -188,7 +189,9 @@ interface DiagramProps {
   readonly onWheel: (event: React.WheelEvent<SVGSVGElement>) => void
 }
 function Diagram({ cut, width, height, system, onGeometry, crossRef, onMove, onLeave, onWheel }: DiagramProps) {
-  const geometry = useMemo(() => verticalChart({ cut, width, height, system, size: SIZE }), [cut, width, height, system])
+  const north = faceNorth()
+  // biome-ignore lint/correctness/useExhaustiveDependencies: the caption names the azimuth from the north of the face
+  const geometry = useMemo(() => verticalChart({ cut, width, height, system, size: SIZE }), [cut, width, height, system, north])
   onGeometry(geometry)
   return (
     <DrawingView drawing={geometry.drawing} className="chart vertical" onPointerMove={onMove} onPointerLeave={onLeave} onWheel={onWheel}>
