@@ -122,6 +122,9 @@ function Notices() {
   )
 }
 
+/** Fields that undo their own typing; a checkbox or a radio button has none. */
+const TEXT_FIELDS = 'textarea, input:not([type=checkbox]):not([type=radio]), [contenteditable=true]'
+
 /** Ctrl+K finds a command, Ctrl+/ lists the keys, Ctrl+S saves; Ctrl+Z and Ctrl+Shift+Z (or Ctrl+Y) undo and redo, unless a text field is being edited. */
 function useKeys() {
   const { study, view, saveStudy } = useSession()
@@ -142,8 +145,7 @@ function useKeys() {
         return
       }
       if (key !== 'z' && key !== 'y') return
-      const typing = e.target instanceof HTMLElement && e.target.closest('input, textarea')
-      if (typing) return
+      if (e.target instanceof HTMLElement && e.target.closest(TEXT_FIELDS)) return
       e.preventDefault()
       if (key === 'y' || e.shiftKey) redo(study)
       else undo(study)
