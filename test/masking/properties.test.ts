@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { effectiveRadiusM, geodesicInverse, type LonLat } from '../../core/geodesy/index.ts'
-import { floorBand, horizonAt, sightAlong, sightPoint } from '../../core/masking/index.ts'
+import { floorBand, horizonAt, sightAlong, sightPoint, topSight } from '../../core/masking/index.ts'
 import { bilinear } from '../../core/raster/index.ts'
 import type { Ground } from '../../core/terrain/index.ts'
 import { FLAT_EARTH, FOUR_THIRDS, geographicShape, groundOn, placeAt, seeded, siteAt, utmShape } from '../terrain/grounds.ts'
@@ -73,6 +73,26 @@ describe('sight', () => {
         expect(sightPoint(g, site, heightToSeeM * 0.9999 - 1e-3, FOUR_THIRDS, at).inSight).toBe(false)
       }
     }
+  })
+
+  it('of a top over a place begins at the mast whose floor there comes down to it, at each k', async () => {
+    const g = await roughGround(160, 7)
+    const random = seeded(43)
+    const low = { ...FOUR_THIRDS, effectiveEarthFactor: 1 }
+    let compared = 0
+    for (let n = 0; n < 200; n++) {
+      const site = { ...somewhere(g, random), groundHeightM: null, clearingRadiusM: 0 }
+      const at = somewhere(g, random)
+      const { topM, lowestMastM } = topSight(g, site, [FOUR_THIRDS, low], at, 5)
+      lowestMastM.forEach((mastM, e) => {
+        if (!(mastM > 0.1)) return
+        compared++
+        const floorM = (h: number): number => sightPoint(g, site, h, e === 0 ? FOUR_THIRDS : low, at).floorM
+        expect(floorM(mastM + 0.01)).toBeLessThanOrEqual(topM)
+        expect(floorM(mastM - 0.01)).toBeGreaterThan(topM)
+      })
+    }
+    expect(compared).toBeGreaterThan(100)
   })
 
   it('is mutual: from a to a point h above b as from b to a point h above a', async () => {

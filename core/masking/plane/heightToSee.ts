@@ -22,6 +22,19 @@ export function lowestAntennaY(p: StraightProfile, point: number, postingM: numb
   return least === Number.POSITIVE_INFINITY ? NO_TANGENT : yd - least * xd
 }
 
+/** Y of the lowest antenna from which a target at Y `yd` over a point of a profile is in sight; `NO_TANGENT` when nothing stands between. */
+export function lowestAntennaYOver(p: StraightProfile, point: number, yd: number): number {
+  const { line } = p
+  const xd = line[3 * point]
+  let least = Number.POSITIVE_INFINITY
+  for (let j = 0; j < point; j++) {
+    const x = line[3 * j]
+    if (xd > x) least = Math.min(least, (yd - line[3 * j + 1]) / (xd - x))
+    least = Math.min(least, touchingSlope(line, j, xd, yd))
+  }
+  return least === Number.POSITIVE_INFINITY ? NO_TANGENT : yd - least * xd
+}
+
 /**
  * Slope of the line from (xd, yd) that touches from above, at a place inside it, the segment of a line of points (X, Y,
  * bend) that starts at point j; Infinity where there is none. At the

@@ -1,19 +1,20 @@
 import { type Earth, geodesicInverse } from '../../geodesy/index.ts'
-import { clearanceAt } from '../../masking/index.ts'
+import { topSight } from '../../masking/index.ts'
 import { finish, type Work } from '../../work/index.ts'
 import type { OptionCells } from '../optionCells.ts'
 import { type RoadPiece, roadPieces } from './pieces.ts'
 import { HIGH_K } from './types.ts'
 
-/** Sight of the top of a vehicle on a piece. */
-export const ROAD_SIGHT = { masked: 0, inSight: 1, unknown: 2, beyond: 3 } as const
-/** What no tilt and no radar changes of the pieces of all roads, from one mast. */
+/** What no mast, no tilt and no radar changes of the pieces of all roads, from one site. */
 export interface RoadSight {
   readonly pieces: readonly RoadPiece[]
   /** The study's own earth, and that of the larger k where it differs. */
   readonly earths: readonly Earth[]
-  /** A value of ROAD_SIGHT by earth, then piece; a piece in a tunnel is masked. */
-  readonly sight: readonly Uint8Array[]
+  /**
+   * By earth, then piece: lowest mast that sees the top of a vehicle, m; Infinity in a tunnel and where what stands there hides it, NaN where the
+   * ground is not known. 0 beyond the range of the study.
+   */
+  readonly lowestMastM: readonly Float64Array[]
   readonly rangeM: Float64Array
   /** Top of the vehicle, m MSL. */
   readonly topM: Float64Array
@@ -22,7 +23,7 @@ export interface RoadSight {
   readonly azimuthAtPieceDeg: Float64Array
 }
 
-/** Rays of roads depend on the mast alone: kept with the mask they belong to. */
+/** Rays of roads depend on the site alone: kept with the cells of it. */
 const kept = new WeakMap<object, RoadSight>()
 /** Pieces between two yields. */
 const PIECES_PER_TURN = 20
@@ -33,9 +34,9 @@ function earthsOf({ earth }: OptionCells): Earth[] {
   return k > 0 && k < HIGH_K ? [earth, { ...earth, effectiveEarthFactor: HIGH_K }] : [earth]
 }
 
-/** Looks at every piece of road within range on its own ray, at both k on one tracing; done once for a mast. */
+/** Looks at every piece of road within range on its own ray, at both k on one tracing; done once for all masts of a site. */
 export function* seeRoads(o: OptionCells): Work<RoadSight> {
-  const held = kept.get(o.mask)
+  const held = kept.get(o.site)
   if (held) return held
   const pieces = roadPieces(o.ground.roads)
   const n = pieces.length
@@ -44,7 +45,7 @@ export function* seeRoads(o: OptionCells): Work<RoadSight> {
   const made: RoadSight = {
     pieces,
     earths,
-    sight: earths.map(() => new Uint8Array(n)),
+    lowestMastM: earths.map(() => new Float64Array(n)),
     rangeM: new Float64Array(n),
     topM: new Float64Array(n),
     azimuthDeg: new Float64Array(n),
@@ -54,7 +55,7 @@ export function* seeRoads(o: OptionCells): Work<RoadSight> {
     lookAt(o, made, i, ranges * rangeStepM)
     if (i % PIECES_PER_TURN === 0) yield { done: i, total: n }
   }
-  kept.set(o.mask, made)
+  kept.set(o.site, made)
   return made
 }
 /** The same without slices. */
@@ -64,17 +65,16 @@ function lookAt(o: OptionCells, out: RoadSight, i: number, farthestM: number): v
   const piece = out.pieces[i]
   const { distanceM } = geodesicInverse(o.place, piece.middle)
   out.rangeM[i] = distanceM
-  if (distanceM > farthestM) {
-    for (const s of out.sight) s[i] = ROAD_SIGHT.beyond
+  if (distanceM > farthestM) return
+  if (piece.tunnel) {
+    for (const lowest of out.lowestMastM) lowest[i] = Number.POSITIVE_INFINITY
     return
   }
-  if (piece.tunnel) return
-  const clear = clearanceAt(o.ground, o.place, o.heightM, out.earths, piece.middle)
-  out.azimuthDeg[i] = clear.azimuthDeg
-  out.azimuthAtPieceDeg[i] = clear.azimuthAtPlaceDeg
-  out.topM[i] = clear.groundM + piece.topM
-  out.sight.forEach((s, e) => {
-    const floorM = clear.floorsM[e]
-    s[i] = Number.isNaN(floorM) ? ROAD_SIGHT.unknown : out.topM[i] >= floorM ? ROAD_SIGHT.inSight : ROAD_SIGHT.masked
+  const top = topSight(o.ground, o.place, out.earths, piece.middle, piece.topM)
+  out.azimuthDeg[i] = top.azimuthDeg
+  out.azimuthAtPieceDeg[i] = top.azimuthAtPlaceDeg
+  out.topM[i] = top.topM
+  out.lowestMastM.forEach((lowest, e) => {
+    lowest[i] = top.lowestMastM[e]
   })
 }

@@ -7,7 +7,7 @@ import { RING_WIDTH_M } from '../groundFigures.ts'
 import { antennaM, type OptionCells } from '../optionCells.ts'
 import { echoAt, targetSignal } from '../signal/targetSignal.ts'
 import type { RoadPiece } from './pieces.ts'
-import { ROAD_SIGHT, type RoadSight, roadSight } from './roadSight.ts'
+import { type RoadSight, roadSight } from './roadSight.ts'
 import {
   BLIND_ZONE_DB,
   HIGH_K,
@@ -31,10 +31,10 @@ function outcomesOf(o: OptionCells, s: RoadSight): { byEarth: Uint8Array[]; rcsM
   const leastDb = requiredRatioDb - toDb(o.suppression.noiseGain)
   const mastM = antennaM(o)
   const one = (e: number, i: number): number => {
-    const sight = s.sight[e][i]
-    if (sight === ROAD_SIGHT.beyond) return PIECE.beyond
+    if (s.rangeM[i] > ranges * rangeStepM) return PIECE.beyond
     if (s.pieces[i].tunnel) return PIECE.tunnel
-    if (sight !== ROAD_SIGHT.inSight) return sight === ROAD_SIGHT.unknown ? PIECE.unknown : PIECE.masked
+    const lowestM = s.lowestMastM[e][i]
+    if (!(o.heightM >= lowestM)) return Number.isNaN(lowestM) ? PIECE.unknown : PIECE.masked
     const radiusM = effectiveRadiusM(s.earths[e], o.place.lat, s.azimuthDeg[i])
     const slantM = slantRangeM(mastM, s.topM[i], s.rangeM[i], radiusM)
     const tan = Math.tan(elevationAngleDeg(mastM, s.topM[i], s.rangeM[i], radiusM) * RAD_PER_DEG)
