@@ -20,7 +20,9 @@ let shadow: VerticalCut
 const cutOf = (w: Worked, azimuthDeg: number, rows = 121): VerticalCut => {
   const need = w.engine.needOnShow(undefined)
   if (!need) throw new Error('no need')
-  return finish(verticalCut(w.cells, need, { azimuthDeg, fromRangeM: 0, toRangeM: 38_000, fromHeightM: 100, toHeightM: 3100, columns: 95, rows }))
+  return finish(
+    verticalCut(w.cells, need, { azimuthDeg, fromRangeM: 0, toRangeM: 38_000, fromHeightM: 100, toHeightM: 3100, columns: 95, rows }),
+  )
 }
 const at = (c: VerticalCut, rangeM: number, heightM: number): number => {
   const near = (values: Float64Array, v: number) =>
