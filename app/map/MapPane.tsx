@@ -85,6 +85,7 @@ export function MapPane(props: MapPaneProps) {
           cards={cards}
           cursorRef={cursor}
           candidates={candidates}
+          rejected={props.rejected}
           needs={props.needs}
           obstacles={props.obstacles}
           roads={props.roads}
@@ -147,6 +148,7 @@ export function MapPane(props: MapPaneProps) {
             marks={props.marks}
             losses={props.losses}
             roads={props.roadLines}
+            rejected={props.rejected.length > 0}
             difference={other && show.option ? [optionWords(show.option, tilts), optionWords(other, tilts)] : null}
           />
         )}

@@ -28,6 +28,13 @@ export interface MapCandidate {
   /** Never empty: the antenna's own tilt when none are stated. */
   readonly tiltsDeg: readonly number[]
 }
+/** A rejected candidate as the map draws it. */
+export interface MapRejected {
+  readonly id: string
+  readonly name: string
+  readonly lon: number
+  readonly lat: number
+}
 /** A need as the map draws it: the ring piece it asks for around the candidate on show; a polygon has none and is seen in its layers. */
 export interface MapNeed {
   readonly id: string
@@ -94,6 +101,7 @@ export interface MapPaneProps {
   /** Outer corners of the ground, for "fit"; empty while there is none. */
   readonly corners: readonly LonLat[]
   readonly candidates: readonly MapCandidate[]
+  readonly rejected: readonly MapRejected[]
   readonly needs: readonly MapNeed[]
   readonly obstacles: readonly Obstacle[]
   readonly roads: readonly Road[]

@@ -66,6 +66,7 @@ export const MAP_WORDS = {
     clutter: 'Ground with C/N over 40 dB',
   },
   stripFull: '100\u202f%',
+  rejectedMark: 'rejected candidate',
   roadSeen: 'road or rail: vehicles seen',
   /** Classes of the layer `usable`, from 1. */
   usableClasses: ['in sight', 'detectable', 'usable'],

@@ -1,4 +1,6 @@
 import { describe, expect, it } from 'vitest'
+import { markLabels } from '../../app/map/marks/markLabels.ts'
+import { strokesOf } from '../../app/map/marks/Obstacles.tsx'
 import { ringLabels } from '../../app/map/marks/Rings.tsx'
 import { offsetFrom, ringPath, sectorPath } from '../../app/map/marks/worldPaths.ts'
 import { geodesicInverse } from '../../core/geodesy/index.ts'
@@ -44,5 +46,34 @@ describe('marks', () => {
       expect(l.x).toBeLessThan(572)
     }
     for (const a of labels) for (const b of labels) if (a !== b) expect(Math.abs(a.x - b.x) >= 50 || Math.abs(a.y - b.y) >= 18).toBe(true)
+  })
+
+  const east = (m: number) => ({ lon: lonFromWorldX(worldXFromLon(10) + m), lat: 48 })
+  const candidate = (id: string, m: number) => ({ id, name: id, ...east(m), mastHeightsM: [10], tiltsDeg: [0] })
+  const obstacle = (name: string, m: number, heightM: number) =>
+    ({ name, path: [east(m)], heightM, topM: null, widthM: 0, rcsM2: null, verticalErrorM: null }) as const
+
+  it('shows letters and names that find room: the candidate on show first, then the higher obstacle', () => {
+    const candidates = [candidate('A', 0), candidate('B', 22), candidate('C', 300)]
+    const obstacles = [obstacle('Chimney', 200, 60), obstacle('Silo tower', 204, 90), obstacle('Mill', -150, 20)]
+    const near = markLabels(east(0), 1, candidates, 'B', obstacles)
+    // B's letter has the room to its right, A's goes to the left of its own ring
+    expect([...near.candidates]).toEqual([
+      ['B', 'right'],
+      ['A', 'left'],
+      ['C', 'right'],
+    ])
+    expect(near.obstacles.map((l) => l.n)).toEqual([1, 2])
+    // from farther off the rings lie over each other: C's keeps the right, the letter of the one on show goes left, A's finds no room
+    const far = markLabels(east(0), 30, candidates, 'B', [])
+    expect([...far.candidates]).toEqual([
+      ['B', 'left'],
+      ['C', 'right'],
+    ])
+  })
+  it('draws obstacles of the same few pixels once', () => {
+    const obstacles = [0, 1, 2, 500].map((m) => obstacle('x', m, 10))
+    expect(strokesOf(east(0), obstacles, 10)[0].match(/M/g)).toHaveLength(2)
+    expect(strokesOf(east(0), obstacles, 0.2)[0].match(/M/g)).toHaveLength(4)
   })
 })

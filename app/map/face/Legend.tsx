@@ -24,6 +24,7 @@ import {
   textOf,
   type UnitSystem,
 } from '../../words/index.ts'
+import { REJECTED_MARK } from '../marks/Rejected.tsx'
 import type { MapPaneProps } from '../types.ts'
 
 const WIDTH = 232
@@ -38,6 +39,8 @@ export interface LegendProps {
   readonly losses: MapPaneProps['losses']
   /** Lines of roads on show, seen and hidden; null or absent where there are none. */
   readonly roads?: MapPaneProps['roadLines']
+  /** A rejected candidate is drawn. */
+  readonly rejected?: boolean
   /** The two options of a difference, in words; null: the layer itself. */
   readonly difference?: readonly [string, string] | null
 }
@@ -46,7 +49,7 @@ export function Legend(props: LegendProps) {
   return props.difference ? <DifferenceLegend {...props} of={props.difference} /> : <LayerLegend {...props} />
 }
 
-function DifferenceLegend({ layer, units, night, marks, of: [a, b] }: LegendProps & { of: readonly [string, string] }) {
+function DifferenceLegend({ layer, units, night, marks, rejected, of: [a, b] }: LegendProps & { of: readonly [string, string] }) {
   const { unit, labels } = differenceStops(layer, units)
   const { warned } = legendMarks(layer, marks)
   const title = differenceTitle(layer, a, b)
@@ -58,6 +61,7 @@ function DifferenceLegend({ layer, units, night, marks, of: [a, b] }: LegendProp
       </h3>
       {ramp ? <Scale ramp={ramp} labels={labels} ends={differenceEnds(layer, shortOf(a, b))} night={night} /> : null}
       <p className="note">{DIFFERENCE_WORDS.note}</p>
+      {rejected ? <RejectedKey /> : null}
       {warned.map((m) => (
         <p key={m} className="mark">
           {m}
@@ -73,7 +77,18 @@ const shortOf = (a: string, b: string): string => {
   return b.startsWith(`${id} `) ? a : id
 }
 
-function LayerLegend({ layer, units, night, marks, losses, roads }: LegendProps) {
+const RejectedKey = () => (
+  <p className="note">
+    <span className="part">
+      <svg className="crossed" width={14} height={14} viewBox="-7 -7 14 14" aria-hidden>
+        <path d={REJECTED_MARK} />
+      </svg>
+      {MAP_WORDS.rejectedMark}
+    </span>
+  </p>
+)
+
+function LayerLegend({ layer, units, night, marks, losses, roads, rejected }: LegendProps) {
   const words = LAYER_WORDS[layer]
   const { unit } = legendStops(layer, layerInfo(layer).ramp.stops, units)
   const { note, warned } = legendMarks(layer, marks)
@@ -107,6 +122,7 @@ function LayerLegend({ layer, units, night, marks, losses, roads }: LegendProps)
           </span>
         </p>
       ) : null}
+      {rejected ? <RejectedKey /> : null}
       {warned.map((m) => (
         <p key={m} className="mark">
           {m}

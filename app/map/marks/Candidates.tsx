@@ -1,15 +1,19 @@
 import { pixelAtLonLat, type View } from '../../../core/index.ts'
 import type { MapCandidate, Trial } from '../types.ts'
+import type { MarkLabels } from './markLabels.ts'
 
 /** A candidate: a ring with a dot and its letter. The one on show in accent, above the others. Dragging and keys are the map's business (`data-candidate`). */
 export function Candidates({
   view,
   candidates,
+  sides,
   selected,
   trial,
 }: {
   view: View
   candidates: readonly MapCandidate[]
+  /** Where each letter stands; none where it finds no room. */
+  sides: MarkLabels['candidates']
   selected: string | null
   trial: Trial | null
 }) {
@@ -37,9 +41,11 @@ export function Candidates({
             <circle className="halo" r={10.5} />
             <circle className="ring" r={8} />
             <circle className="dot" r={2.3} />
-            <text x={14} y={5}>
-              {c.id}
-            </text>
+            {sides.has(c.id) ? (
+              <text x={sides.get(c.id) === 'left' ? -14 : 14} y={5} textAnchor={sides.get(c.id) === 'left' ? 'end' : 'start'}>
+                {c.id}
+              </text>
+            ) : null}
           </g>
         )
       })}

@@ -3,11 +3,13 @@ import { type LonLat, pixelAtLonLat, type View } from '../../../core/index.ts'
 import type { MapPaneProps, Trial } from '../types.ts'
 import { Candidates } from './Candidates.tsx'
 import { ObstacleLines, Roads, SeenRoads } from './Ground.tsx'
+import { type MarkLabels, markLabels } from './markLabels.ts'
+import { Obstacles } from './Obstacles.tsx'
+import { Rejected } from './Rejected.tsx'
 import { type Rect, RingLabels, Rings, ringLabels, ringsOf } from './Rings.tsx'
 import { rayPath, sectorPath } from './worldPaths.ts'
 
-/** Obstacles are named once the view is near enough for the names not to crowd, world m per px. */
-const NAMES_BELOW = 60
+const NO_LABELS: MarkLabels = { candidates: new Map(), obstacles: [] }
 const wide = { vectorEffect: 'non-scaling-stroke' } as const
 
 /** Group transform that turns world metres from an anchor into pixels of the view. */
@@ -19,7 +21,17 @@ const anchored = (view: View, anchor: LonLat): string => {
 export interface MarksProps
   extends Pick<
     MapPaneProps,
-    'candidates' | 'needs' | 'obstacles' | 'roads' | 'roadLines' | 'maxRangeM' | 'show' | 'units' | 'cell' | 'profileAzimuthDeg'
+    | 'candidates'
+    | 'rejected'
+    | 'needs'
+    | 'obstacles'
+    | 'roads'
+    | 'roadLines'
+    | 'maxRangeM'
+    | 'show'
+    | 'units'
+    | 'cell'
+    | 'profileAzimuthDeg'
   > {
   readonly view: View
   readonly trial: Trial | null
@@ -43,6 +55,12 @@ export function Marks(p: MarksProps) {
   const rayD = useMemo(
     () => (site && p.profileAzimuthDeg !== null ? rayPath(site, p.profileAzimuthDeg, maxRangeM) : ''),
     [site, p.profileAzimuthDeg, maxRangeM],
+  )
+  const anchor = useMemo(() => p.obstacles[0]?.path[0] ?? candidates[0] ?? null, [p.obstacles, candidates])
+  const selected = show.option?.candidate ?? null
+  const letters = useMemo(
+    () => (anchor ? markLabels(anchor, view.worldPerPx, candidates, selected, p.obstacles) : NO_LABELS),
+    [anchor, view.worldPerPx, candidates, selected, p.obstacles],
   )
   const labels = useMemo(() => {
     if (!site) return []
@@ -72,35 +90,15 @@ export function Marks(p: MarksProps) {
           {rayD && <path className="ray" d={rayD} {...wide} />}
         </g>
       )}
-      <g className="obstacles">
-        {p.obstacles.map((o, n) => {
-          const at = o.path[0]
-          if (!at || o.path.length > 1) return null
-          const [x, y] = pixelAtLonLat(view, at)
-          if (x < -10 || y < -20 || x > view.width + 10 || y > view.height + 20) return null
-          return (
-            // obstacles have no id of their own: their place in the file is one
-            // biome-ignore lint/suspicious/noArrayIndexKey: see above
-            <g key={n} transform={`translate(${x.toFixed(1)} ${y.toFixed(1)})`}>
-              <title>{o.name}</title>
-              <path className="case" d="M0 0V-10" />
-              <path d="M0 0V-10M-2.5 0H2.5" />
-              {view.worldPerPx < NAMES_BELOW && (
-                <text x={5} y={-4}>
-                  {o.name}
-                </text>
-              )}
-            </g>
-          )
-        })}
-      </g>
+      {anchor && <Obstacles view={view} anchor={anchor} obstacles={p.obstacles} labels={letters.obstacles} />}
       <RingLabels labels={labels} units={units} />
       {p.cell && <CellMark view={view} at={p.cell} />}
       <g ref={p.cursorRef} className="cursor" visibility="hidden">
         <path className="line" />
         <circle r={4} />
       </g>
-      <Candidates view={view} candidates={candidates} selected={show.option?.candidate ?? null} trial={trial} />
+      <Rejected view={view} rejected={p.rejected} />
+      <Candidates view={view} candidates={candidates} sides={letters.candidates} selected={selected} trial={trial} />
     </svg>
   )
 }

@@ -11,7 +11,7 @@ import {
   studyOptions,
 } from '../../document/index.ts'
 import { createChannel, createMapHub } from '../../map/hub.ts'
-import type { LinkedView, MapCandidate, MapHub, MapNeed, MapShow } from '../../map/index.ts'
+import type { LinkedView, MapCandidate, MapHub, MapNeed, MapRejected, MapShow } from '../../map/index.ts'
 import { EMPTY_WORDS } from '../../words/index.ts'
 import { useDoc, useGround, useResults, useSession, useView } from '../session/index.ts'
 import { cellUnder, settledOf } from '../settled.ts'
@@ -43,6 +43,14 @@ function useMapCandidates(): readonly MapCandidate[] {
           tiltsDeg: c.tiltsDeg && c.tiltsDeg.length > 0 ? c.tiltsDeg : [ownTiltDeg],
         })),
     [candidates, ownTiltDeg],
+  )
+}
+/** Rejected candidates as the map draws them. */
+function useMapRejected(): readonly MapRejected[] {
+  const candidates = useDoc((d) => d.candidates)
+  return useMemo(
+    () => candidates.filter((c) => c.rejected !== undefined).map((c) => ({ id: c.id, name: c.name ?? c.id, lon: c.lon, lat: c.lat })),
+    [candidates],
   )
 }
 function useMapNeeds(maxRangeM: number): readonly MapNeed[] {
@@ -81,6 +89,7 @@ export function MapSlot({ hub }: { hub: MapHub }) {
   })
   const maxRangeM = useDoc((d) => settledOf(d)?.run.maxRangeM ?? d.radar.instrumentedRangeM ?? 60_000)
   const candidates = useMapCandidates()
+  const rejected = useMapRejected()
   const needs = useMapNeeds(maxRangeM)
   // a whole-sheet step lies over the map and explains figures itself
   const sheet = step === 'compare' || step === 'memo'
@@ -101,6 +110,7 @@ export function MapSlot({ hub }: { hub: MapHub }) {
     groundSerial: ground?.serial ?? null,
     corners: ground?.corners ?? NO_CORNERS,
     candidates,
+    rejected,
     needs,
     obstacles,
     roads,
