@@ -1,14 +1,16 @@
-import { useState } from 'react'
+import { memo, useCallback, useState } from 'react'
 import { Button as AriaButton } from 'react-aria-components'
 import { type CandidateDoc, limitOf, offTerrain } from '../../../core/index.ts'
 import {
   addCandidate,
   moveCandidate,
+  rejectCandidate,
   removeCandidate,
   renameCandidate,
   sameOption,
   setCandidateField,
   setMastHeights,
+  takeBackCandidate,
 } from '../../document/index.ts'
 import { Button, Caution, CommitField, Notice, NumberField, PositionField, readNumbers } from '../../ui/index.ts'
 import { CAUTIONS, DEG, EMPTY_WORDS, formatHeight, formatPosition, METRES, textOf } from '../../words/index.ts'
@@ -26,13 +28,14 @@ export function CandidatesStep() {
   const hasGround = useGround((g) => g.state === 'ready')
   const [typing, setTyping] = useState(false)
   const picker = useFilePicker('candidates', '.csv,.geojson,.json')
-  const select = (id: string) => {
-    const c = study.getState().doc.candidates.find((x) => x.id === id)
-    if (c)
-      view
-        .getState()
-        .set({ option: { candidate: id, heightM: c.mastHeightsM[0], tiltDeg: study.getState().doc.radar.antenna.tiltDeg ?? 0 } })
-  }
+  const select = useCallback(
+    (id: string) => {
+      const { doc } = study.getState()
+      const c = doc.candidates.find((x) => x.id === id)
+      if (c) view.getState().set({ option: { candidate: id, heightM: c.mastHeightsM[0], tiltDeg: doc.radar.antenna.tiltDeg ?? 0 } })
+    },
+    [study, view],
+  )
   return (
     <>
       {candidates.length === 0 ? (
@@ -45,10 +48,10 @@ export function CandidatesStep() {
         </div>
       ) : null}
       {candidates.length > 0 ? (
-        <div className="stack">
-          {candidates.map((c) => (
-            <Card key={c.id} candidate={c} onSelect={() => select(c.id)} />
-          ))}
+        <div className={candidates.length > MANY ? 'stack many' : 'stack'}>
+          {candidates.map((c) =>
+            c.rejected === undefined ? <Card key={c.id} candidate={c} onSelect={select} /> : <RejectedCard key={c.id} candidate={c} />,
+          )}
         </div>
       ) : null}
       {placing ? <Notice>Click the map where the candidate stands; Escape ends it</Notice> : null}
@@ -80,18 +83,20 @@ export function CandidatesStep() {
   )
 }
 
+/** More cards than this are drawn only where they are seen. */
+const MANY = 12
 /** A ground of this size may be a window of its file, read around the candidates there were. */
 const WINDOWED_POSTS = 30e6
 
 /** Letter ring as the map draws it. */
-export const Ring = () => (
+export const Ring = ({ crossed }: { crossed?: boolean }) => (
   <svg className="ring" width="18" height="18" viewBox="0 0 18 18" aria-hidden>
     <circle cx="9" cy="9" r="7" />
-    <circle cx="9" cy="9" r="2" />
+    {crossed ? <path d="M4 14L14 4" /> : <circle cx="9" cy="9" r="2" />}
   </svg>
 )
 
-function Card({ candidate: c, onSelect }: { candidate: CandidateDoc; onSelect: () => void }) {
+const Card = memo(function Card({ candidate: c, onSelect }: { candidate: CandidateDoc; onSelect: (id: string) => void }) {
   const session = useSession()
   const { view } = session
   const [editing, setEditing] = useState(false)
@@ -109,7 +114,7 @@ function Card({ candidate: c, onSelect }: { candidate: CandidateDoc; onSelect: (
     view.getState().set({ option: { candidate: c.id, heightM: mastM, tiltDeg } })
   return (
     <section className={on ? 'card on' : 'card'} aria-label={`Candidate ${c.id}`}>
-      <AriaButton className="card-head" aria-pressed={on} onPress={onSelect}>
+      <AriaButton className="card-head" aria-pressed={on} onPress={() => onSelect(c.id)}>
         <Ring />
         <b>{c.id}</b>
         <span className="card-name">{c.name === c.id ? '' : c.name}</span>
@@ -172,11 +177,39 @@ function Card({ candidate: c, onSelect }: { candidate: CandidateDoc; onSelect: (
       {on && editing ? <Details candidate={c} /> : null}
     </section>
   )
+})
+
+/** A candidate given up: where it was and why, and the way back. */
+function RejectedCard({ candidate: c }: { candidate: CandidateDoc }) {
+  const { study } = useSession()
+  return (
+    <section className="card out" aria-label={`Candidate ${c.id}`}>
+      <div className="card-head">
+        <Ring crossed />
+        <b>{c.id}</b>
+        <span className="card-name">{c.name === c.id ? '' : c.name}</span>
+        <Button small look="quiet" label={`Take back ${c.id}`} onPress={() => takeBackCandidate(study, c.id)}>
+          take back
+        </Button>
+      </div>
+      <CommitField
+        label="Rejected"
+        text={c.rejected ?? ''}
+        shape="wide"
+        onCommit={(text) => {
+          if (text.trim() === '') return 'say why, or take it back'
+          rejectCandidate(study, c.id, text)
+          return null
+        }}
+      />
+    </section>
+  )
 }
 
 function Details({ candidate: c }: { candidate: CandidateDoc }) {
   const { study } = useSession()
   const at = useDoc((d) => d.candidates.findIndex((x) => x.id === c.id))
+  const kept = useDoc((d) => d.candidates.filter((x) => x.rejected === undefined).length)
   const ownTiltDeg = useDoc((d) => d.radar.antenna.tiltDeg ?? 0)
   const limit = (key: string) => limitOf(`candidates[${at}].${key}`)
   return (
@@ -244,6 +277,18 @@ function Details({ candidate: c }: { candidate: CandidateDoc }) {
           return null
         }}
       />
+      {kept > 1 ? (
+        <CommitField
+          label="Reject"
+          text=""
+          shape="wide"
+          placeholder="why it is out; Enter rejects it"
+          onCommit={(text) => {
+            rejectCandidate(study, c.id, text)
+            return null
+          }}
+        />
+      ) : null}
       <div className="row end">
         <Button small look="quiet" label={`Delete candidate ${c.id}`} onPress={() => removeCandidate(study, c.id)}>
           Delete {c.id}
