@@ -1,4 +1,4 @@
-import { useEffect, useState } from 'react'
+import { memo, useEffect, useState } from 'react'
 import type { Change, OptionRef, StudyDoc } from '../../../core/index.ts'
 import { optionKey, studyOptions } from '../../document/index.ts'
 import { Button, Select } from '../../ui/index.ts'
@@ -12,7 +12,15 @@ const MOST_OBSTACLES = 200
 const WITHOUT = 'without '
 
 /** One option against another, or against itself without an obstacle: which needs and fixes change, sectors, floors and areas. */
-export function ChangeSection({ doc, shown, system }: { doc: StudyDoc; shown: OptionRef | null; system: UnitSystem }) {
+export const ChangeSection = memo(function ChangeSection({
+  doc,
+  shown,
+  system,
+}: {
+  doc: StudyDoc
+  shown: OptionRef | null
+  system: UnitSystem
+}) {
   const { client, notices } = useSession()
   const ground = useGround((g) => g.ground)
   const obstacles = useGround((g) => g.obstacles)
@@ -78,4 +86,4 @@ export function ChangeSection({ doc, shown, system }: { doc: StudyDoc; shown: Op
       )}
     </section>
   )
-}
+})

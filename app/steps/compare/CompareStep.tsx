@@ -1,5 +1,5 @@
-import { useLayoutEffect, useRef, useState } from 'react'
-import { coverageOf, type OptionRef, type OptionResult } from '../../../core/index.ts'
+import { memo, useCallback, useDeferredValue, useLayoutEffect, useMemo, useRef, useState } from 'react'
+import { coverageOf, type NeedDoc, type OptionRef, type OptionResult } from '../../../core/index.ts'
 import { OptionsChart } from '../../charts/printers.tsx'
 import { optionKey, studyOptions } from '../../document/index.ts'
 import { Button, Caution, Select } from '../../ui/index.ts'
@@ -14,21 +14,30 @@ import { RankingSection } from './RankingSection.tsx'
 import { RejectSection } from './RejectSection.tsx'
 
 const EVERY = ' every'
+const NO_NEEDS: readonly NeedDoc[] = []
 
 /** All options side by side; each figure says what it is and shows where it comes from. */
 export function CompareStep() {
   const { view } = useSession()
   const doc = useDoc((d) => d)
-  const byOption = useResults((r) => r.byOption)
+  // new results come in when the page has time for them
+  const byOption = useDeferredValue(useResults((r) => r.byOption))
   const shown = useView((v) => v.option)
   const need = useView((v) => v.need)
   const system = useView((v) => v.units)
   const explaining = useView((v) => v.chart === 'figure')
   const [every, setEvery] = useState(false)
-  const options = studyOptions(doc)
-  const needs = needsInOrder(doc)
-  const results = options.flatMap((o) => byOption.get(optionKey(o)) ?? [])
-  const show = (option: OptionRef) => view.getState().set({ option })
+  const options = useMemo(() => studyOptions(doc), [doc])
+  const needs = useMemo(() => needsInOrder(doc), [doc])
+  const results = useMemo(() => options.flatMap((o) => byOption.get(optionKey(o)) ?? []), [options, byOption])
+  const show = useCallback((option: OptionRef) => view.getState().set({ option }), [view])
+  const explain = useCallback((option: OptionRef, figure: string) => view.getState().set({ option, chart: 'figure', figure }), [view])
+  // another list only when a need joins or leaves it, so that rows keep
+  const asked = needs.length > 0 && results.every((r) => needOf(r, need))
+  const readable = needs.filter((n) => results.every((r) => isAssessed(r, n.id)))
+  const chosen = readable.find((n) => n.id === need) ?? readable[0] ?? needs[0]
+  const rowIds = !asked ? '' : JSON.stringify(every ? readable.map((n) => n.id) : [chosen.id])
+  const rowNeeds = useMemo(() => (rowIds === '' ? NO_NEEDS : needs.filter((n) => JSON.parse(rowIds).includes(n.id))), [needs, rowIds])
   if (options.length === 0)
     return (
       <div className="empty">
@@ -38,12 +47,8 @@ export function CompareStep() {
         {doc.candidates.length > 0 ? <RejectSection doc={doc} /> : null}
       </div>
     )
-  const asked = needs.length > 0 && results.every((r) => needOf(r, need))
   const columns = asked ? NEED_COLUMNS : GROUND_COLUMNS
-  const readable = needs.filter((n) => results.every((r) => isAssessed(r, n.id)))
-  const chosen = readable.find((n) => n.id === need) ?? readable[0] ?? needs[0]
   const assessed = results[0] && asked ? needOf(results[0], chosen.id) : undefined
-  const needIds = !asked ? [] : every ? readable.map((n) => n.id) : [chosen.id]
   return (
     <div className="compare">
       {needs.length > 1 ? (
@@ -63,15 +68,15 @@ export function CompareStep() {
         </div>
       ) : null}
       <OptionsTable
-        doc={doc}
+        candidates={doc.candidates}
         options={options}
         byOption={byOption}
         shown={shown}
         columns={columns}
-        needIds={needIds}
+        needs={rowNeeds}
         system={system}
         onShow={show}
-        onExplain={(option, figure) => view.getState().set({ option, chart: 'figure', figure })}
+        onExplain={explain}
       />
       {assessed ? (
         <p className="ink-2">
@@ -93,7 +98,7 @@ export function CompareStep() {
   )
 }
 
-function Plot(props: {
+const Plot = memo(function Plot(props: {
   results: readonly OptionResult[]
   need: string | null
   shown: OptionRef | null
@@ -131,4 +136,4 @@ function Plot(props: {
       ) : null}
     </figure>
   )
-}
+})

@@ -1,5 +1,6 @@
+import { memo } from 'react'
 import { Button as AriaButton } from 'react-aria-components'
-import type { OptionRef, OptionResult, StudyDoc } from '../../../core/index.ts'
+import type { CandidateDoc, NeedDoc, OptionRef, OptionResult } from '../../../core/index.ts'
 import { optionKey, sameOption } from '../../document/index.ts'
 import { FigureButton } from '../../ui/index.ts'
 import { formatAngle, formatMast, type Quantity, textOf, type UnitSystem, verdictOf } from '../../words/index.ts'
@@ -7,24 +8,26 @@ import { type Column, columnGroups, unitUnder } from './columns.ts'
 import { needOf } from './figuresOf.ts'
 
 export interface OptionsTableProps {
-  readonly doc: StudyDoc
+  readonly candidates: readonly CandidateDoc[]
   readonly options: readonly OptionRef[]
   readonly byOption: ReadonlyMap<string, OptionResult>
   readonly shown: OptionRef | null
   readonly columns: readonly Column[]
   /** Needs a row is written for, must needs first; empty where none is assessed: one row an option. */
-  readonly needIds: readonly string[]
+  readonly needs: readonly NeedDoc[]
   readonly system: UnitSystem
   readonly onShow: (option: OptionRef) => void
   readonly onExplain: (option: OptionRef, figure: string) => void
 }
 /** Options as rows, or options by needs; units stand at the heads, so that the numbers find room. */
-export function OptionsTable(p: OptionsTableProps) {
-  const { options, byOption, columns, needIds, system } = p
+export const OptionsTable = memo(function OptionsTable(p: OptionsTableProps) {
+  const { candidates, options, byOption, columns, needs, system } = p
+  const names = new Map(candidates.map((c) => [c.id, c.name === c.id ? '' : (c.name ?? '')]))
+  const needIds = needs.map((n) => n.id)
   const results = options.flatMap((o) => byOption.get(optionKey(o)) ?? [])
   const withTilt = new Set(options.map((o) => o.tiltDeg)).size > 1
-  const asked = needIds.length > 0
-  const many = needIds.length > 1
+  const asked = needs.length > 0
+  const many = needs.length > 1
   const lead = (withTilt ? 3 : 2) + (many ? 1 : 0) + (asked ? 1 : 0)
   return (
     <table className="table">
@@ -63,45 +66,58 @@ export function OptionsTable(p: OptionsTableProps) {
       <tbody>
         {options.map((o, i) => {
           const first = i === 0 || options[i - 1].candidate !== o.candidate
-          return (asked ? needIds : [null]).map((needId, n) => (
+          return (asked ? needs : [null]).map((need, n) => (
             <Row
-              key={`${optionKey(o)} ${needId}`}
-              {...p}
+              key={`${optionKey(o)} ${need?.id}`}
               option={o}
+              result={byOption.get(optionKey(o))}
+              name={names.get(o.candidate) ?? ''}
+              on={sameOption(o, p.shown)}
               first={first && n === 0}
               top={n === 0}
-              needId={needId}
+              need={need}
               tilt={withTilt}
               many={many}
+              columns={columns}
+              system={system}
+              onShow={p.onShow}
+              onExplain={p.onExplain}
             />
           ))
         })}
       </tbody>
     </table>
   )
-}
+})
 
-interface RowProps extends OptionsTableProps {
+interface RowProps {
   readonly option: OptionRef
+  readonly result: OptionResult | undefined
+  /** Name of the candidate; '' where its letter is all. */
+  readonly name: string
+  readonly on: boolean
   /** First row of its candidate, of its option. */
   readonly first: boolean
   readonly top: boolean
-  readonly needId: string | null
+  readonly need: NeedDoc | null
   readonly tilt: boolean
   readonly many: boolean
+  readonly columns: readonly Column[]
+  readonly system: UnitSystem
+  readonly onShow: (option: OptionRef) => void
+  readonly onExplain: (option: OptionRef, figure: string) => void
 }
-function Row({ doc, byOption, option, first, top, needId, tilt, many, shown, columns, system, onShow, onExplain }: RowProps) {
-  const result = byOption.get(optionKey(option))
-  const name = doc.candidates.find((c) => c.id === option.candidate)?.name ?? ''
-  const on = sameOption(option, shown)
+/** Rendered again only when its own option has another result. */
+const Row = memo(function Row(p: RowProps) {
+  const { option, result, name, on, first, top, need, tilt, many, columns, system, onShow, onExplain } = p
+  const needId = need?.id ?? null
   const figure = result && needId !== null ? needOf(result, needId) : undefined
-  const stated = doc.needs?.find((n) => n.id === needId)
   return (
     <tr className={[on ? 'on' : '', first ? 'first' : '', top ? '' : 'under'].join(' ')}>
       <td className="candidate">
         {first ? (
           <>
-            <b>{option.candidate}</b> {name === option.candidate ? '' : name}
+            <b>{option.candidate}</b> {name}
           </>
         ) : null}
       </td>
@@ -120,8 +136,8 @@ function Row({ doc, byOption, option, first, top, needId, tilt, many, shown, col
       {tilt ? <td>{top ? textOf(formatAngle(option.tiltDeg, 0.1)) : null}</td> : null}
       {many ? (
         <td className="text need">
-          {stated?.name ?? needId}
-          {stated?.must === false ? <span className="ink-3"> wish</span> : null}
+          {need?.name ?? needId}
+          {need?.must === false ? <span className="ink-3"> wish</span> : null}
         </td>
       ) : null}
       {needId !== null ? <td className="text verdict">{figure ? verdictOf(figure) : ''}</td> : null}
@@ -143,7 +159,7 @@ function Row({ doc, byOption, option, first, top, needId, tilt, many, shown, col
       ))}
     </tr>
   )
-}
+})
 
 function FigureCell({ words, value, onPress }: { words: string; value: Quantity; onPress: () => void }) {
   return (

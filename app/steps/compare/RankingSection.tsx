@@ -1,3 +1,4 @@
+import { memo } from 'react'
 import { Button as AriaButton } from 'react-aria-components'
 import { type CriterionDoc, type OptionRef, type OptionResult, rankOptions, type StudyDoc, WEIGHT_FACTORS } from '../../../core/index.ts'
 import { addCriterion, problemsOf, removeCriterion, sameOption, setCriterion } from '../../document/index.ts'
@@ -25,7 +26,7 @@ export interface RankingProps {
   readonly onShow: (option: OptionRef) => void
 }
 /** What counts, how the options rank by it, and whether that holds when a weight changes. */
-export function RankingSection({ doc, results, shown, system, onShow }: RankingProps) {
+export const RankingSection = memo(function RankingSection({ doc, results, shown, system, onShow }: RankingProps) {
   const { study } = useSession()
   const criteria = doc.ranking?.criteria ?? []
   const needs = doc.needs ?? []
@@ -125,7 +126,7 @@ export function RankingSection({ doc, results, shown, system, onShow }: RankingP
       ) : null}
     </section>
   )
-}
+})
 
 /** The stated values, each a field; SI in the study, face units here. */
 function Criteria({ doc, criteria, system }: { doc: StudyDoc; criteria: readonly CriterionDoc[]; system: UnitSystem }) {

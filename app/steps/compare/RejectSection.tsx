@@ -1,4 +1,4 @@
-import { useState } from 'react'
+import { memo, useState } from 'react'
 import type { CandidateDoc, StudyDoc } from '../../../core/index.ts'
 import { rejectCandidate, takeBackCandidate } from '../../document/index.ts'
 import { Button, CommitField, Select } from '../../ui/index.ts'
@@ -8,7 +8,7 @@ import { useSession } from '../session/index.ts'
 const nameOf = (c: CandidateDoc): string => (c.name && c.name !== c.id ? `${c.id} ${c.name}` : c.id)
 
 /** Candidates given up, with the reason, and giving one up. */
-export function RejectSection({ doc }: { doc: StudyDoc }) {
+export const RejectSection = memo(function RejectSection({ doc }: { doc: StudyDoc }) {
   const { study } = useSession()
   const [chosen, setChosen] = useState<string | null>(null)
   const rejected = doc.candidates.filter((c) => c.rejected !== undefined)
@@ -68,4 +68,4 @@ export function RejectSection({ doc }: { doc: StudyDoc }) {
       ) : null}
     </section>
   )
-}
+})
