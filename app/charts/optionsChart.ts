@@ -54,7 +54,8 @@ export function optionsChart(input: OptionsInput): OptionsGeometry {
   const high = Math.max(0, ...pcts)
   const y = niceTicks(Math.max(0, low - 0.1 * (high - low)), high > 0 ? Math.min(100, high + 0.1 * (high - low)) : 100, 4)
   const x = niceTicks(0, 1.12 * Math.max(0.1, ...known.map((k) => k.area)), 5)
-  const across = scaleOf(0, x.to, box.left, box.right)
+  // a mark at nothing short keeps clear of the labels of the other axis
+  const across = scaleOf(0, x.to, box.left + 0.9 * size, box.right)
   const up = scaleOf(y.from, Math.min(100, y.to), box.bottom, box.top)
   const names = (results[0]?.figures.needs ?? []).filter((n) => n.notAssessed === null && n.measure === 'area')
   const own = names.find((n) => n.needId === input.needId) ?? (names.length === 1 ? names[0] : undefined)

@@ -15,7 +15,7 @@ describe('the memo column', () => {
     expect(html).toContain(own.finding!.replaceAll("'", '&#x27;'))
   })
   it('gives in sight, detectable and usable together, at both k', () => {
-    for (const head of ['In sight, %', 'Detectable, %', 'Usable, %', 'The same at k = 1, %']) expect(html).toContain(`<dt>${head}</dt>`)
+    for (const head of ['In sight, %', 'Detectable, %', 'Usable, %', 'At k = 1, the same, %']) expect(html).toContain(`<dt>${head}</dt>`)
   })
   it('makes every number with a figure behind it a button', () => {
     expect(html).toMatch(/<button[^>]*class="memo-number"[^>]*>[^<]*<span class="unit">/)

@@ -40,16 +40,16 @@ describe('trial plan in the memo', () => {
     ])
     expect(plain(trialRoute({ ...plan[1]!, fromAzimuthDeg: 0, toAzimuthDeg: 360 }, 'metric'))).toBe('Orbit at 18.5 km, all round')
   })
-  it('a row each with need, place, altitude, floor up, margin down, prediction and what it would confirm; the caution under it', () => {
+  it('a row each under its need, with place, altitude, floor up, margin down, prediction and what it would confirm; the caution under it', () => {
     const sample = sampleMemo('metric', 40)
     const [first] = sample.results
     const model = buildMemo({ ...sample, results: [{ ...first, figures: { ...first.figures, trialPlan: plan } }] })
     const blocks: readonly Block[] = model.sections.flatMap((s) => s.blocks)
     const table = blocks.find((b): b is TableBlock => b.kind === 'table' && b.id === 'trial-plan')!
     expect(table.rows.map((r) => r.map((c) => plain(cellText(c))))).toEqual([
+      ['“Ferry approach”'],
       [
         '1 Radial 118.0°, 1.9 to 37.0 km',
-        'Ferry approach',
         '118.0°, 18.5 km',
         '300',
         '305',
@@ -57,26 +57,8 @@ describe('trial plan in the memo', () => {
         'marginal',
         'The coverage floor behind the obstacle (Grey mast)',
       ],
-      [
-        '2 Orbit at 18.5 km, 030° to 150°',
-        'Ferry approach',
-        '118.0°, 18.5 km',
-        '300',
-        '305',
-        '−5',
-        'marginal',
-        'The horizon azimuth by azimuth (Grey mast)',
-      ],
-      [
-        '3 Survey on the ground',
-        'Ferry approach',
-        '118.0°, 18.5 km',
-        '190',
-        '–',
-        '–',
-        '–',
-        'The height of the obstacle that the floor rests on (Grey mast)',
-      ],
+      ['2 Orbit at 18.5 km, 030° to 150°', '118.0°, 18.5 km', '300', '305', '−5', 'marginal', 'The horizon azimuth by azimuth (Grey mast)'],
+      ['3 Survey on the ground', '118.0°, 18.5 km', '190', '–', '–', '–', 'The height of the obstacle that the floor rests on (Grey mast)'],
     ])
     expect(blocks.some((b) => b.kind === 'caution' && b.texts.includes(CAUTIONS.trialAltitudes))).toBe(true)
   })

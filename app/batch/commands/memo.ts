@@ -77,6 +77,6 @@ export async function memoPdf(parts: MemoParts): Promise<Uint8Array> {
   const fonts = join(createRequire(import.meta.url).resolve('@expo-google-fonts/source-sans-3/package.json'), '..')
   const face = async (name: string) => new Uint8Array(await readFile(join(fonts, name, `SourceSans3_${name}.ttf`)))
   const [regular, semibold] = await Promise.all([face('400Regular'), face('600SemiBold')])
-  const model = buildMemo({ ...parts, system: 'metric', date: today(), version: await programVersion() })
+  const model = buildMemo({ ...parts, system: 'nautical', date: today(), version: await programVersion() })
   return makePdf(model, { regular, semibold })
 }

@@ -1,6 +1,6 @@
 import type { HorizonRow, SettledCandidate } from '../../../core/index.ts'
 import { isAtLeast } from '../../charts/index.ts'
-import { formatAzimuth, formatMast, formatPlaceRange, formatScreening, NO_VALUE, northWords, textOf, unitOf } from '../../words/index.ts'
+import { declinationWords, formatMast, formatPlaceRange, formatScreening, NO_VALUE, textOf, unitOf } from '../../words/index.ts'
 import { bare } from './cells.ts'
 import type { Block, Cell, Column, MemoInput } from './types.ts'
 
@@ -26,6 +26,9 @@ function bySector(rows: readonly HorizonRow[]): (HorizonRow | null)[] {
 /** What sets a horizon, in a letter beside its range; terrain has none. */
 const letterOf = (obstacle: string): string => (obstacle === 'terrain' ? '' : obstacle === 'cover' ? 'c' : 'o')
 
+/** Whole degrees from 000 to 359. */
+const azimuthText = (deg: number): string => String(((Math.round(deg) % 360) + 360) % 360).padStart(3, '0')
+
 /** Horizon of one candidate from each of its masts, in runs side by side; null where nothing of it is computed. */
 function candidateTable(input: MemoInput, candidate: SettledCandidate): Block | null {
   const heights = [...new Set(input.results.filter((r) => r.ref.candidate === candidate.id).map((r) => r.ref.heightM))].sort(
@@ -36,12 +39,14 @@ function candidateTable(input: MemoInput, candidate: SettledCandidate): Block | 
     const result = input.results.find((r) => r.ref.candidate === candidate.id && r.ref.heightM === h)
     return result ? [bySector(result.figures.horizon.rows)] : []
   })
+  const magnetic = input.study.declination?.valueDeg ?? null
   const ranges = heights.length <= MOST_WITH_RANGE
   const runs = heights.length > MOST_IN_TWO ? 1 : heights.length === 1 && ranges ? 4 : 2
   const right = { align: 'right', keep: true } as const
   const columns: Column[] = Array.from({ length: runs }, (_, run): Column[] => [
     ...(run > 0 ? [{ head: '', width: GAP_PT }] : []),
-    { head: 'Az', unit: '°', ...right },
+    { head: 'Az', unit: magnetic === null ? '°' : '°T', ...right },
+    ...(magnetic === null ? [] : [{ head: '', unit: '°M', ...right }]),
     ...heights.flatMap((h): Column[] => {
       const group = textOf(formatMast(h))
       return ranges
@@ -53,7 +58,8 @@ function candidateTable(input: MemoInput, candidate: SettledCandidate): Block | 
     }),
   ]).flat()
   const cells = (i: number): Cell[] => [
-    { text: formatAzimuth(i * SECTOR_DEG, 1).value, light: true },
+    { text: azimuthText(i * SECTOR_DEG), light: true },
+    ...(magnetic === null ? [] : [{ text: azimuthText(i * SECTOR_DEG - magnetic), light: true }]),
     ...masts.flatMap((sectors): Cell[] => {
       const row = sectors[i]
       if (row === null) return ranges ? [NO_VALUE, ''] : [NO_VALUE]
@@ -78,6 +84,10 @@ function candidateTable(input: MemoInput, candidate: SettledCandidate): Block | 
   }
 }
 
+function northOf({ study: { declination: d } }: MemoInput): string {
+  if (d === null) return 'Azimuths are true.'
+  return `Azimuths are true (°T) and magnetic (°M), declination ${declinationWords(d.valueDeg)} on ${d.date} (${d.model}).`
+}
 /** Horizon of every candidate by azimuth, a column for each mast, after the body of the memo. */
 export function annexBlocks(input: MemoInput): Block[] {
   const tables = input.study.candidates.flatMap((c) => candidateTable(input, c) ?? [])
@@ -86,7 +96,7 @@ export function annexBlocks(input: MemoInput): Block[] {
     {
       kind: 'paragraph',
       role: 'small',
-      text: `Elevation of the highest point of the horizon within ±\u202f${SECTOR_DEG / 2}° of each azimuth, and its range; set by terrain, c by cover, o by an obstacle, ≥ where the ground beyond is unknown. ${northWords()}. Every azimuth: horizon.csv of the batch command.`,
+      text: `Elevation of the highest point of the horizon within ±\u202f${SECTOR_DEG / 2}° of each azimuth, and its range; set by terrain, c by cover, o by an obstacle, ≥ where the ground beyond is unknown. ${northOf(input)} Every azimuth: horizon.csv of the batch command.`,
     },
     ...tables,
   ]

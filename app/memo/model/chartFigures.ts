@@ -19,7 +19,7 @@ const AXES_PT = 52
 
 /** Samples of a printed diagram. */
 const CUT = { columns: 240, rows: 120, fromRangeM: 0, fromHeightM: null, toHeightM: null }
-const CUT_PT = 168
+const CUT_PT = 148
 
 /** The need and the plane that an option's printed range-height diagram is about: its first need, toward the worst place of it, else toward the highest horizon. */
 export function cutOf(r: OptionResult, maxRangeM: number): { need: string; window: CutWindow } | null {

@@ -122,6 +122,7 @@ export function notAssessedBlocks(): Block[] {
     {
       kind: 'table',
       id: 'not-assessed',
+      dense: true,
       columns: [{ head: 'Not assessed' }, { head: 'So', width: 'fill' }],
       rows: NOT_ASSESSED.map((n): Cell[] => [n.what, capital(n.so)]),
     },
@@ -136,5 +137,18 @@ export function cautionBlocks(): Block[] {
       text: 'For what follows, local codes and licensed practice prevail over this memo, with professional sign-off where it is reserved.',
     },
     { kind: 'list', items: DEFERRED_CAUTIONS.map((id) => CAUTIONS[id].replace(/\.$/, '')) },
+    {
+      kind: 'table',
+      id: 'release',
+      title: 'Release: a draft until signed',
+      columns: [
+        { head: '' },
+        { head: 'Name', width: 'fill' },
+        { head: 'Licence', width: 80 },
+        { head: 'Date', width: 60 },
+        { head: 'Signature', width: 130 },
+      ],
+      rows: ['Prepared', 'Checked', 'Approved'].map((role): Cell[] => [role, '', '', '', '']),
+    },
   ]
 }

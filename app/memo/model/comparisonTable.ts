@@ -38,6 +38,8 @@ export function mustWords(r: OptionResult): string {
   const passes = must.every((n) => n.passes) ? true : must.some((n) => n.passes === false) ? false : null
   return verdictOf({ met: must.every((n) => n.met), passes })
 }
+/** Options from which the tables are set close. */
+const DENSE_FROM = 6
 /** A column and what stands in it for an option. */
 interface Part {
   readonly column: Column
@@ -46,6 +48,7 @@ interface Part {
 const tableOf = (id: string, title: string | null, results: readonly OptionResult[], parts: readonly Part[]): TableBlock => ({
   kind: 'table',
   id,
+  dense: results.length > DENSE_FROM,
   ...(title === null ? {} : { title }),
   columns: parts.map((p) => p.column),
   rows: results.map((r) => parts.map((p) => p.cell(r))),

@@ -1,5 +1,7 @@
 import type { DefaultUsed } from '../../../core/index.ts'
 import {
+  declinationWords,
+  faceNorth,
   faceValue,
   formatAngle,
   formatBand,
@@ -109,9 +111,16 @@ function assumptions(input: MemoInput): string[] {
     table,
     airWords(input),
     northWords(),
+    ...declinationLine(input),
     `Cover is worked out at k = 1 too; pass asks for both`,
     `In sight: the line of sight over ground, cover and obstacles. Ground beyond a void or the end of the terrain is unknown`,
   ]
+}
+
+/** The study's declination, while azimuths are true. */
+function declinationLine({ study: { declination: d } }: MemoInput): string[] {
+  if (d === null || faceNorth() !== null) return []
+  return [`Magnetic azimuths are those less the declination, ${declinationWords(d.valueDeg)} on ${d.date} (${d.model})`]
 }
 
 /** Gas, rain and sea of the study, in a clause. */

@@ -35,6 +35,7 @@ function groundTable(input: MemoInput, ordered: readonly OptionResult[]): TableB
     kind: 'table',
     id: 'every-ground',
     title: `Ground and clutter at k = ${k}`,
+    dense: true,
     columns: [
       option,
       { head: 'Antenna', unit: `${bothUnits('height', system)} MSL`, align: 'right' },
@@ -101,5 +102,12 @@ function atHighKTable(input: MemoInput, ordered: readonly OptionResult[]): Table
     }
     return cells
   })
-  return { kind: 'table', id: 'every-high-k', title: high ? `Clutter at k = 2.75${roads ? ', and roads' : ''}` : 'Roads', columns, rows }
+  return {
+    kind: 'table',
+    id: 'every-high-k',
+    dense: true,
+    title: high ? `Clutter at k = 2.75${roads ? ', and roads' : ''}` : 'Roads',
+    columns,
+    rows,
+  }
 }

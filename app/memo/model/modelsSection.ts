@@ -207,6 +207,7 @@ export function modelBlocks(input: MemoInput): Block[] {
     {
       kind: 'table',
       id: 'models',
+      dense: true,
       columns: [
         { head: 'Model', width: 138 },
         { head: 'Source', width: 'fill' },

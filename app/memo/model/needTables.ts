@@ -19,18 +19,19 @@ import {
   withMetric,
 } from '../../words/index.ts'
 import { bare, capital } from './cells.ts'
-import { lossWords } from './needWords.ts'
+import { isUnderGround, lossWords, UNDER_GROUND } from './needWords.ts'
 import type { Cell, Column, MemoInput, TableBlock } from './types.ts'
 
 type NeedRow = (n: NeedFigure, key: (what: string) => { explain: string }) => Cell[][]
 const keyOf =
   (n: NeedFigure) =>
   (what: string): { explain: string } => ({ explain: `need_${n.needId}_${what}` })
-/** Rows of each need; one that is not assessed says why across the table. */
-function needRows(r: OptionResult, columns: number, rows: NeedRow): Cell[][] {
-  return r.figures.needs.flatMap((n) =>
-    n.notAssessed === null ? rows(n, keyOf(n)) : [[n.name, { text: `not assessed: ${n.notAssessed}`, light: true, span: columns - 1 }]],
-  )
+/** Rows of each need; one that has no shares, not assessed or under the ground, says why across the table. */
+export function needRows(r: OptionResult, columns: number, rows: NeedRow): Cell[][] {
+  return r.figures.needs.flatMap((n) => {
+    const why = n.notAssessed !== null ? `not assessed: ${n.notAssessed}` : isUnderGround(n) ? UNDER_GROUND : null
+    return why === null ? rows(n, keyOf(n)) : [[n.name, { text: why, light: true, span: columns - 1 }]]
+  })
 }
 
 /** In sight, detectable and usable together, at the k of the study and at k = 1, against what is asked. */
@@ -43,7 +44,7 @@ export function nestedTable(input: MemoInput, r: OptionResult): TableBlock {
     { head: 'In sight', ...pct },
     { head: 'Detectable', ...pct },
     { head: 'Usable', ...pct },
-    { head: 'The same at k = 1', ...pct },
+    { head: 'At k = 1, the same', ...pct },
     { head: 'Asked', ...pct },
     { head: 'Usable', unit: unitOf('area', system), align: 'right' },
     { head: 'Verdict', align: 'right', keep: true },
@@ -146,13 +147,13 @@ export function suppressionTable(input: MemoInput, r: OptionResult): TableBlock 
   const pct = { unit: '%', align: 'right' } as const
   const columns: Column[] = [
     { head: 'Need', width: 'fill' },
-    { head: 'Needed at 50\u202f%', ...db },
-    { head: '90\u202f%', ...db },
-    { head: '99\u202f%', ...db },
+    { head: '50\u202f%', ...db, group: 'Needed at' },
+    { head: '90\u202f%', ...db, group: 'Needed at' },
+    { head: '99\u202f%', ...db, group: 'Needed at' },
     { head: 'Available', ...db },
-    { head: 'Short at 90\u202f%', ...db },
-    { head: '99\u202f%', ...db },
-    { head: 'Short', unit: unitOf('area', system), align: 'right' },
+    { head: '90\u202f%', ...db, group: 'Short by' },
+    { head: '99\u202f%', ...db, group: 'Short by' },
+    { head: 'Area', unit: unitOf('area', system), align: 'right', group: 'Short by' },
     { head: 'Masked', ...pct },
     { head: 'Too weak', ...pct },
   ]

@@ -52,28 +52,29 @@ export function optionBlocks(input: MemoInput, r: OptionResult, figure: () => nu
   if (assessed) blocks.push(marginTable(input, r))
   const air = exponentialWords(input, r)
   if (air) blocks.push({ kind: 'paragraph', role: 'small', text: air })
-  blocks.push(horizonFigure(input, r, figure()))
+  blocks.push(horizonFigure(input, r, figure(), HORIZON_PT))
   blocks.push({ kind: 'caution', texts: cautionsFor('horizon') }, ...measuredBlocks(input, r))
   if (assessed) blocks.push(lossTable(input, r), ...placeBlocks(input, r), ...verticalBlocks(input, r, figure))
-  const rings = ringFigure(input, r, figure())
+  const rings = (): Block => ringFigure(input, r, figure())
   const speeds = roadSpeeds(input, r)
   const atBothK = clutterAtKTable(input, r)
   blocks.push({
     kind: 'beside',
     leftPt: LEFT_PT,
     left: [floorTable(input, r), { kind: 'caution', texts: cautionsFor('floor') }],
-    right: [atBothK && speeds ? speeds : rings],
+    right: [atBothK && speeds ? speeds : rings()],
   })
   if (assessed) {
     blocks.push(suppressionTable(input, r), { kind: 'paragraph', role: 'small', text: availableWords(r) })
     if (suppressionRows(r.figures).needs > 0) blocks.push(suppressionFigure(input, r, figure()))
     blocks.push({ kind: 'caution', texts: suppressionCautions(input) })
   }
-  if (atBothK && speeds) blocks.push({ kind: 'beside', leftPt: LEFT_PT, left: [atBothK], right: [rings] })
+  if (atBothK && speeds) blocks.push({ kind: 'beside', leftPt: LEFT_PT, left: [atBothK], right: [rings()] })
   else blocks.push(...[atBothK, speeds].filter((t) => t !== null))
   blocks.push(...roadBlocks(input, r), levelsFigure(input, r, figure()), { kind: 'caution', texts: clutterCautions(input) })
   return blocks
 }
+const HORIZON_PT = 118
 const RINGS_PT = { width: 182, height: 122 }
 function ringFigure(input: MemoInput, r: OptionResult, number: number): Block {
   const { rings } = r.figures
@@ -185,12 +186,11 @@ export function figureTable(input: MemoInput, r: OptionResult): TableBlock {
 }
 const obstacleWords = (names: readonly string[]): string => (names.length === 1 ? names[0] : `${names[0]} and ${names.length - 1} more`)
 
-/** Horizon profile of an option. */
-export function horizonFigure(input: MemoInput, r: OptionResult, number: number): Block {
+/** Horizon profile of an option, `height` pt high. */
+export function horizonFigure(input: MemoInput, r: OptionResult, number: number, height: number): Block {
   const { rows, highest, medianDeg } = r.figures.horizon
   const { system } = input
   const measured = measuredPoints(r.figures.measuredHorizon)
-  const height = measured ? 140 : 118
   const chart = {
     rows,
     width: TEXT_WIDTH_PT,

@@ -65,7 +65,7 @@ function ringTable({ system }: MemoInput, roads: RoadsFigure): TableBlock {
     cell(roads.seenM, 'roads_seen_km'),
     byClass((c) => roads.classes.find((x) => x.roadClass === c)?.seenM ?? 0),
   ])
-  return { kind: 'table', id: 'roads', title: 'Roads seen, by ring and class', columns, rows }
+  return { kind: 'table', id: 'roads', title: 'Roads seen, by ring and class', dense: true, columns, rows }
 }
 
 function roadWords({ system, study }: MemoInput, roads: RoadsFigure): string {

@@ -56,7 +56,7 @@ const MOST_MET = 6
 function metTable(input: MemoInput, best: OptionResult): TableBlock | null {
   const needs = best.figures.needs.filter((n) => n.notAssessed === null)
   if (needs.length === 0) return null
-  const pct = { unit: '%', align: 'right' } as const
+  const usable = { group: 'Usable, %', align: 'right' } as const
   return {
     kind: 'table',
     id: 'met',
@@ -64,9 +64,9 @@ function metTable(input: MemoInput, best: OptionResult): TableBlock | null {
     columns: [
       { head: 'Need', width: 'fill' },
       { head: 'Kind', width: 40 },
-      { head: 'Asked', ...pct },
-      { head: `Usable, k = ${formatK(input.study.atmosphere.effectiveEarthFactor)}`, ...pct },
-      { head: 'Usable, k = 1', ...pct },
+      { head: 'Asked', unit: '%', align: 'right' },
+      { head: `k = ${formatK(input.study.atmosphere.effectiveEarthFactor)}`, ...usable },
+      { head: 'k = 1', ...usable },
       { head: 'Over or short', unit: 'points', align: 'right' },
       { head: 'Verdict', align: 'right', keep: true },
     ],

@@ -13,6 +13,7 @@ import {
   unitOf,
 } from '../../words/index.ts'
 import { bare, capital } from './cells.ts'
+import { needName } from './needWords.ts'
 import type { Block, Cell, MemoInput, TableBlock } from './types.ts'
 
 /** What a trial of an option should fly and a survey measure; nothing where no need is assessed. */
@@ -27,25 +28,28 @@ function trialTable({ system }: MemoInput, rows: readonly TrialRow[]): TableBloc
     kind: 'table',
     id: 'trial-plan',
     title: 'Trial plan, through the worst margins of the needs',
+    dense: true,
     columns: [
-      { head: 'What', width: 'fill' },
-      { head: 'Need', width: 74 },
+      { head: 'What', width: 124 },
       { head: 'Place', align: 'right', keep: true },
       { head: 'Altitude', ...height },
       { head: 'Floor', ...height },
       { head: 'Margin', unit: unitOf('height', system), align: 'right' },
       { head: 'Predicted' },
-      { head: 'To confirm', width: 96 },
+      { head: 'To confirm', width: 'fill' },
     ],
-    rows: rows.map((t, n): Cell[] => [
-      `${n + 1} ${trialRoute(t, system)}`,
-      t.needName,
-      `${textOf(formatAzimuth(t.at.azimuthDeg))}, ${textOf(formatPlaceRange(t.at.rangeM, system))}`,
-      bare(formatHeight(t.altitudeM, system)),
-      bare(formatFloor(t.floorM, system)),
-      bare(formatMargin(t.marginM, system)),
-      t.predicted ?? NO_VALUE,
-      confirmWords(t),
+    // a line of its own names the need, where it is another one than above
+    rows: rows.flatMap((t, n): Cell[][] => [
+      ...(n > 0 && rows[n - 1].needName === t.needName ? [] : [[{ text: needName({ name: t.needName }), light: true, span: 7 }]]),
+      [
+        `${n + 1} ${trialRoute(t, system)}`,
+        `${textOf(formatAzimuth(t.at.azimuthDeg))}, ${textOf(formatPlaceRange(t.at.rangeM, system))}`,
+        bare(formatHeight(t.altitudeM, system)),
+        bare(formatFloor(t.floorM, system)),
+        bare(formatMargin(t.marginM, system)),
+        t.predicted ?? NO_VALUE,
+        confirmWords(t),
+      ],
     ]),
   }
 }

@@ -207,7 +207,7 @@ function paragraph(block: Extract<Block, { kind: 'paragraph' }>): Content {
 }
 
 /** Tables of up to about this many lines are never broken over pages; a longer block kept whole could not be placed at all. */
-const KEPT_LINES = 30
+const KEPT_LINES = 20
 /** Rows that stay with the head of a table that may be broken. */
 const KEPT_ROWS = 4
 /** Lines a table will take, estimated high: words per column from the share of the text width it is likely to get. */
