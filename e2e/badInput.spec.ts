@@ -45,7 +45,7 @@ interface Case {
 const bytesNamed = (bytes: Uint8Array): NamedFile => ({ name: UPLAND.name, bytes })
 const editA = async (page: Page, label: string, value: string) => {
   await goTo(page, 'Candidates')
-  const open = page.getByRole('button', { name: 'Edit A' })
+  const open = page.getByRole('button', { name: 'Edit A', exact: true })
   if (await open.isVisible()) await open.click()
   await setField(form(page, 'Candidates'), label, value)
 }
