@@ -47,9 +47,8 @@ describe('trial plan in the memo', () => {
     const blocks: readonly Block[] = model.sections.flatMap((s) => s.blocks)
     const table = blocks.find((b): b is TableBlock => b.kind === 'table' && b.id === 'trial-plan')!
     expect(table.rows.map((r) => r.map((c) => plain(cellText(c))))).toEqual([
-      ['“Ferry approach”'],
       [
-        '1 Radial 118.0°, 1.9 to 37.0 km',
+        '“Ferry approach”\n1 Radial 118.0°, 1.9 to 37.0 km',
         '118.0°, 18.5 km',
         '300',
         '305',

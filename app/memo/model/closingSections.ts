@@ -123,7 +123,10 @@ export function notAssessedBlocks(): Block[] {
       kind: 'table',
       id: 'not-assessed',
       dense: true,
-      columns: [{ head: 'Not assessed' }, { head: 'So', width: 'fill' }],
+      columns: [
+        { head: 'Not assessed', width: 138 },
+        { head: 'So', width: 'fill' },
+      ],
       rows: NOT_ASSESSED.map((n): Cell[] => [n.what, capital(n.so)]),
     },
   ]

@@ -8,7 +8,11 @@ export function confirmedBlocks(input: MemoInput): Block[] {
   const { inSight, detectable, usable, confirmed } = FOUR_WORDS
   const words = [inSight, detectable, usable, confirmed].map((w) => `${w.word}: ${inSentence(w.meaning)}`)
   const rule: Block = { kind: 'paragraph', role: 'small', text: `${words.map(capital).join('. ')}. ${CONFIRMED_WORDS.rule}` }
-  if (confirmations.length === 0) return [{ kind: 'paragraph', text: CONFIRMED_WORDS.none }, rule]
+  if (confirmations.length === 0)
+    return [
+      { kind: 'paragraph', text: CONFIRMED_WORDS.none },
+      { kind: 'paragraph', role: 'small', text: CONFIRMED_WORDS.rule },
+    ]
   const { parts } = CONFIRMED_WORDS
   return [
     {

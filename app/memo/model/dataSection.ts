@@ -62,6 +62,7 @@ export function dataBlocks(input: MemoInput): Block[] {
       kind: 'table',
       id: 'defaults',
       title: 'Defaults used',
+      dense: true,
       columns: [
         { head: 'Key of the study', width: 'fill' },
         { head: 'Value taken', align: 'right' },
@@ -137,6 +138,7 @@ function pairs(id: string, title: string, rows: readonly Pair[]): Block {
     kind: 'table',
     id,
     title,
+    dense: true,
     columns: [
       { head: '', width: 'fill' },
       { head: '', align: 'right' },

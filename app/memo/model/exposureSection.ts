@@ -60,7 +60,7 @@ export function exposureBlocks(input: MemoInput): Block[] {
       role: 'lead',
       text: `With the antenna stopped the main beam is to be kept clear to ${distance}.`,
     },
-    { kind: 'table', id: 'exposure', columns: NO_HEADS, rows },
+    { kind: 'table', id: 'exposure', dense: true, columns: NO_HEADS, rows },
   ]
   const seen = new Set<string>()
   const own = refs.filter(({ heightM, tiltDeg }) => {

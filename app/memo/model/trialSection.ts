@@ -38,19 +38,19 @@ function trialTable({ system }: MemoInput, rows: readonly TrialRow[]): TableBloc
       { head: 'Predicted' },
       { head: 'To confirm', width: 'fill' },
     ],
-    // a line of its own names the need, where it is another one than above
-    rows: rows.flatMap((t, n): Cell[][] => [
-      ...(n > 0 && rows[n - 1].needName === t.needName ? [] : [[{ text: needName({ name: t.needName }), light: true, span: 7 }]]),
-      [
-        `${n + 1} ${trialRoute(t, system)}`,
+    rows: rows.map((t, n): Cell[] => {
+      // the need stands over the first of its rows
+      const need = n > 0 && rows[n - 1].needName === t.needName ? '' : `${needName({ name: t.needName })}\n`
+      return [
+        `${need}${n + 1} ${trialRoute(t, system)}`,
         `${textOf(formatAzimuth(t.at.azimuthDeg))}, ${textOf(formatPlaceRange(t.at.rangeM, system))}`,
         bare(formatHeight(t.altitudeM, system)),
         bare(formatFloor(t.floorM, system)),
         bare(formatMargin(t.marginM, system)),
         t.predicted ?? NO_VALUE,
         confirmWords(t),
-      ],
-    ]),
+      ]
+    }),
   }
 }
 const confirmWords = (t: TrialRow): string => {

@@ -32,8 +32,8 @@ const hairlines = (heads: number, dense = false): CustomTableLayout => ({
   hLineColor: (i) => (heads > 0 && i === heads ? INK_3 : LINE),
   paddingLeft: (i) => (i === 0 ? 0 : 4),
   paddingRight: (i, node) => (i === (node.table.widths?.length ?? 0) - 1 ? 0 : 4),
-  paddingTop: () => (dense ? 0.9 : 2.4),
-  paddingBottom: () => (dense ? 0.5 : 1.8),
+  paddingTop: () => (dense ? 0.4 : 2.4),
+  paddingBottom: () => (dense ? 0.1 : 1.8),
 })
 const CAUTION_LAYOUT: CustomTableLayout = {
   hLineWidth: () => 0,
@@ -113,7 +113,7 @@ function sectionContent(section: Section): Content[] {
     text: `${section.number}  ${section.title}`,
     fontSize: SECTION_PT,
     bold: true,
-    margin: [0, section.newPage ? 0 : 12, 0, 5],
+    margin: [0, section.newPage ? 0 : 11, 0, 4],
     outline: true,
     outlineText: `${section.number}  ${section.title}`,
   }
@@ -135,7 +135,7 @@ function keptTogether(blocks: readonly Block[]): Content[] {
   for (let i = 0; i < blocks.length; i++) {
     const next = blocks[i + 1]
     const caution = next?.kind === 'caution' && blocks[i].kind !== 'caution' && !isLong(blocks[i])
-    const opening = next?.kind === 'list' && blocks[i].kind === 'paragraph' && next.items.length < 12
+    const opening = next?.kind === 'list' && blocks[i].kind === 'paragraph' && next.items.length < 5
     if (next && (caution || opening)) {
       out.push({ stack: [blockContent(blocks[i]), blockContent(next)], unbreakable: true })
       i++
@@ -207,7 +207,7 @@ function paragraph(block: Extract<Block, { kind: 'paragraph' }>): Content {
 }
 
 /** Tables of up to about this many lines are never broken over pages; a longer block kept whole could not be placed at all. */
-const KEPT_LINES = 20
+const KEPT_LINES = 14
 /** Rows that stay with the head of a table that may be broken. */
 const KEPT_ROWS = 4
 /** Lines a table will take, estimated high: words per column from the share of the text width it is likely to get. */
@@ -266,7 +266,7 @@ function groupRow(columns: readonly Column[]): TableCell[] {
     const { group } = columns[out.length]
     let span = 1
     while (group !== undefined && columns[out.length + span]?.group === group) span++
-    out.push({ text: words(group ?? ''), ...HEAD, alignment: 'right', colSpan: span })
+    out.push({ text: words(group ?? ''), ...HEAD, alignment: span > 1 ? 'center' : 'right', colSpan: span })
     for (let n = 1; n < span; n++) out.push('')
   }
   return out
