@@ -2,7 +2,7 @@ import { AxeBuilder } from '@axe-core/playwright'
 import type { Page } from '@playwright/test'
 import { smallDoc, upland } from './made.ts'
 import { expect, test } from './page.ts'
-import { dropFiles, everythingRun, openEmpty, setTheme, textFile } from './user.ts'
+import { copied, dropFiles, everythingRun, openEmpty, setTheme, textFile } from './user.ts'
 
 const CHARTS = ['Terrain profile', 'Range-height diagram', 'Clutter by ring and octant', 'Suppression needed and available'] as const
 
@@ -25,20 +25,7 @@ async function choose(page: Page, name: (typeof CHARTS)[number]): Promise<void> 
   await page.getByRole('option', { name }).click()
   await expect(chart(page, name).locator('svg.chart')).toBeVisible()
 }
-/** Text that a copy button hands over. */
-async function copied(page: Page, button: 'Copy SVG' | 'Copy CSV'): Promise<string> {
-  await page.evaluate(() => {
-    const held = window as unknown as { copiedText?: string }
-    held.copiedText = undefined
-    Object.defineProperty(navigator, 'clipboard', {
-      configurable: true,
-      value: { writeText: (text: string) => Promise.resolve().then(() => (held.copiedText = text)) },
-    })
-  })
-  await page.locator('.chart-panel').getByRole('button', { name: button }).click()
-  await expect(page.locator('.chart-panel').getByText('Copied')).toBeVisible()
-  return page.evaluate(() => (window as unknown as { copiedText: string }).copiedText)
-}
+const panel = (page: Page) => page.locator('.chart-panel')
 
 test('every chart opens, reads out by keys, and is copied as picture and table', async ({ page }) => {
   await openCharts(page)
@@ -51,10 +38,10 @@ test('every chart opens, reads out by keys, and is copied as picture and table',
     for (let n = 0; n < 2; n++) await page.keyboard.press(name.startsWith('Suppression') ? 'ArrowDown' : 'ArrowRight')
     await expect(read, name).not.toHaveText('Point at the chart to read it')
     await expect(read, name).toHaveText(/\d/)
-    const svg = await copied(page, 'Copy SVG')
+    const svg = await copied(panel(page), 'Copy SVG')
     expect(svg, name).toMatch(/^<svg [\s\S]*<\/svg>$/)
     expect(svg, name).not.toMatch(/NaN|var\(/)
-    const rows = (await copied(page, 'Copy CSV')).trim().split('\n')
+    const rows = (await copied(panel(page), 'Copy CSV')).trim().split('\n')
     expect(rows.length, name).toBeGreaterThan(2)
     for (const row of rows.slice(1))
       expect(row.split(',').length, `${name}: ${row}`).toBeGreaterThanOrEqual(rows[0]?.split(',').length ?? 0)
@@ -68,7 +55,7 @@ test('the diagram shows where the target is usable, zooms, and follows the azimu
   const words = () => box.locator('svg.chart').getAttribute('aria-label')
   await expect.poll(words).toMatch(/^Over the upland, 1\s?m², Swerling 1, azimuth \d{3}\.\d°: usable to /)
   const before = await words()
-  const table = (await copied(page, 'Copy CSV')).trim().split('\n').slice(1)
+  const table = (await copied(panel(page), 'Copy CSV')).trim().split('\n').slice(1)
   const outcomes = new Set(table.map((row) => row.split(',')[7]))
   expect([...outcomes]).toContain('usable')
   // the target is detected where its margin is not negative, and only there

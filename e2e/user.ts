@@ -217,6 +217,22 @@ export const plain = (text: string): string => text.replace(/[\u202f\u2009\u00a0
 export const numberIn = (text: string): number =>
   Number(/[-−]?\d[\d ]*(?:\.\d+)?/.exec(plain(text))?.[0].replace('−', '-').replaceAll(' ', ''))
 
+/** Text that a copy button of a chart hands over. */
+export async function copied(chart: Locator, button: 'Copy SVG' | 'Copy CSV'): Promise<string> {
+  const page = chart.page()
+  await page.evaluate(() => {
+    const held = window as unknown as { copiedText?: string }
+    held.copiedText = undefined
+    Object.defineProperty(navigator, 'clipboard', {
+      configurable: true,
+      value: { writeText: (text: string) => Promise.resolve().then(() => (held.copiedText = text)) },
+    })
+  })
+  await chart.getByRole('button', { name: button }).click()
+  await expect(chart.getByText('Copied')).toBeVisible()
+  return page.evaluate(() => (window as unknown as { copiedText: string }).copiedText)
+}
+
 export async function exportMemo(page: Page): Promise<NamedFile> {
   await goTo(page, 'Memo')
   const button = page.getByRole('button', { name: 'Export PDF' })
