@@ -142,7 +142,9 @@ export function Ruler(props: RulerProps) {
         {gains ? (
           <p className="gains" title={MAP_WORDS.gainsHint(asked)}>
             {MAP_WORDS.gains(textOf(formatMast(gains.toM)))}{' '}
-            {gains.octants.length === 0 ? MAP_WORDS.noGain : gains.octants.map((g) => `${g.name}\u00a0${signedPct(g.pct)}`).join(' · ')}
+            {gains.octants.length === 0
+              ? MAP_WORDS.noGain
+              : gains.octants.map((g) => `${g.name}\u00a0${signedPct(g.pct)}`).join('\u00a0· ')}
           </p>
         ) : null}
         {candidate.tiltsDeg.length > 1 ? (

@@ -4,6 +4,8 @@ import { isBlock, pasted, readBlock } from './tableText.ts'
 
 export interface TableColumn {
   readonly head: string
+  /** Name of the column in a file: pasted cells may stand under it too. */
+  readonly key?: string
   readonly unit?: string
   readonly numeric?: boolean
   readonly placeholder?: string
@@ -97,7 +99,7 @@ export function EditTable<T>(props: EditTableProps<T>) {
         readBlock(text),
         row,
         column,
-        columns.map((c) => c.head),
+        columns.map((c) => [c.head, c.key ?? '']),
       ),
     )
   }
@@ -119,7 +121,7 @@ export function EditTable<T>(props: EditTableProps<T>) {
               </th>
             ))}
             <th>
-              <span className="sr-only">Row</span>
+              <span className="visually-hidden">Row</span>
             </th>
           </tr>
         </thead>

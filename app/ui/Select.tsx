@@ -32,7 +32,9 @@ export function Select<T extends string>({ label, value, choices, onChange, mark
         </Label>
       )}
       <Button className="select-button">
-        <SelectValue className="value">{() => choices.find((c) => c.id === value)?.words ?? ''}</SelectValue>
+        <SelectValue className="value">
+          {() => choices.find((c) => c.id === value)?.words ?? <span className="ink-3">choose</span>}
+        </SelectValue>
         <span className="arrow" aria-hidden />
       </Button>
       <Popover className="popover" offset={2}>

@@ -31,18 +31,18 @@ export const isBlock = (text: string): boolean => /[\t\n]/.test(text.replace(/\r
 
 /**
  * Rows with a block laid over them from (row, column) on; rows are added below as needed, what would lie right of the last column is left
- * out. A first line that names the columns (`heads`, any case) is taken as that: its cells go under those names, from the first column on.
+ * out. A first line that names the columns (`heads`, each with its other names, any case) is taken as that: its cells go under those names, from the first column on.
  */
 export function pasted(
   rows: readonly (readonly string[])[],
   block: readonly (readonly string[])[],
   row: number,
   column: number,
-  heads: readonly string[],
+  heads: readonly (string | readonly string[])[],
 ): string[][] {
   const plain = (s: string) => s.toLowerCase().replace(/\(.*\)|[^a-z0-9]/g, '')
-  const known = heads.map(plain)
-  const named = (block[0] ?? []).map((h) => known.indexOf(plain(h)))
+  const known = heads.map((names) => [names].flat().map(plain))
+  const named = (block[0] ?? []).map((h) => known.findIndex((names) => plain(h) !== '' && names.includes(plain(h))))
   const hasHead = named.filter((n) => n >= 0).length >= Math.min(2, heads.length)
   const body = hasHead ? block.slice(1) : block
   const out = rows.map((r) => [...r])

@@ -9,3 +9,14 @@ export const PLACE_TABLE_WORDS = {
 } as const
 /** Columns of a new table of fixes. */
 export const FIX_COLUMNS = ['name', 'lat', 'lon', 'alt_ft_msl'] as const
+/** What stands over the columns a table of fixes can have; any other stands as the file names it. */
+export const FIX_HEADS: Readonly<Record<string, { readonly head: string; readonly unit?: string } | undefined>> = {
+  name: { head: 'Name' },
+  lat: { head: 'Latitude', unit: '°' },
+  lon: { head: 'Longitude', unit: '°' },
+  alt_ft_msl: { head: 'Altitude above sea', unit: 'ft' },
+  alt_m_msl: { head: 'Altitude above sea', unit: 'm' },
+  alt_ft_agl: { head: 'Height above ground', unit: 'ft' },
+  alt_m_agl: { head: 'Height above ground', unit: 'm' },
+  flight_level: { head: 'Flight level' },
+}

@@ -55,4 +55,17 @@ describe('cells from a spreadsheet', () => {
       ),
     ).toEqual([...rows, ['C', '', '40']])
   })
+  it('a column is known by its name in a file too', () => {
+    const block = [
+      ['lat', 'name'],
+      ['48', 'P1'],
+    ]
+    expect(
+      pasted([], block, 0, 0, [
+        ['Name', 'name'],
+        ['Latitude', 'lat'],
+        ['Note', ''],
+      ]),
+    ).toEqual([['P1', '48', '']])
+  })
 })

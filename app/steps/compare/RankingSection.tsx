@@ -64,10 +64,10 @@ export const RankingSection = memo(function RankingSection({ doc, results, shown
                 </th>
                 {criteria.map((c, i) => (
                   <th key={c.figure} scope="col" title={criterionWords(c.figure, needs)}>
-                    points {i + 1}
+                    Points {i + 1}
                   </th>
                 ))}
-                <th scope="col">score of 100</th>
+                <th scope="col">Score of 100</th>
               </tr>
             </thead>
             <tbody>
@@ -138,10 +138,10 @@ function Criteria({ doc, criteria, system }: { doc: StudyDoc; criteria: readonly
       <thead>
         <tr>
           <th scope="col">Figure</th>
-          <th scope="col">worst</th>
-          <th scope="col">best</th>
-          <th scope="col">weight</th>
-          <th scope="col">share</th>
+          <th scope="col">Worst</th>
+          <th scope="col">Best</th>
+          <th scope="col">Weight</th>
+          <th scope="col">Share</th>
           <td />
         </tr>
       </thead>

@@ -3,7 +3,7 @@ import { isInputError, readPlaces, readTable } from '../../../core/index.ts'
 import { freeNeedId } from '../../document/index.ts'
 import { csvText, freshName } from '../../files/index.ts'
 import { Button, Dialog, EditTable, type RowRead } from '../../ui/index.ts'
-import { FIX_COLUMNS, PLACE_TABLE_WORDS } from '../../words/index.ts'
+import { FIX_COLUMNS, FIX_HEADS, PLACE_TABLE_WORDS } from '../../words/index.ts'
 import { sentenceOf, useDoc, useSession, useView } from '../session/index.ts'
 import { degreesText, readPlace } from './placeCells.ts'
 
@@ -94,7 +94,7 @@ export function FixesDialog() {
         {sheet ? (
           <EditTable
             label={PLACE_TABLE_WORDS[kind]}
-            columns={sheet.columns.map((head) => ({ head, numeric: head !== 'name' }))}
+            columns={sheet.columns.map((key) => ({ key, head: key, ...FIX_HEADS[key.toLowerCase()], numeric: key !== 'name' }))}
             rows={sheet.rows}
             write={(row) => [...row]}
             read={(cells) => readFix(cells, sheet.columns)}

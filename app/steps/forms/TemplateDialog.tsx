@@ -11,7 +11,7 @@ import { useSession, useView } from '../session/index.ts'
 export function TemplateDialog() {
   const { study, view, radars } = useSession()
   const own = useStore(radars, (r) => r.radars)
-  const [chosen, setChosen] = useState<string | null>(null)
+  const [chosen, setChosen] = useState<string | null>(`set:${STARTING_SETS[0].id}`)
   const close = () => view.getState().set({ dialog: null })
   const [kind, id] = chosen ? split(chosen) : [null, '']
   const take = () => {
@@ -113,7 +113,7 @@ function Rows({ title, rows }: { title: string; rows: readonly TemplateRow[] }) 
   return (
     <table className="template-table">
       <caption>{title}</caption>
-      <thead className="sr-only">
+      <thead className="visually-hidden">
         <tr>
           <th>Value</th>
           <th>Number</th>

@@ -127,7 +127,7 @@ function GroupRow({ columns }: { columns: readonly Column[] }) {
     else groups.push({ group, at, span: 1 })
   })
   return (
-    <tr>
+    <tr className="groups">
       {groups.map(({ group, at, span }) =>
         group === undefined ? (
           <td key={at} />
