@@ -1,12 +1,14 @@
 import { memo, useMemo } from 'react'
 import { type LonLat, type Obstacle, pixelAtLonLat, type View } from '../../../core/index.ts'
-import type { MarkLabels } from './markLabels.ts'
+import { type MarkLabels, tallness } from './markLabels.ts'
 import { offsetFrom } from './worldPaths.ts'
 
 /** Obstacles are named once the view is near enough for the names not to crowd, world m per px. */
 const NAMES_BELOW = 60
-/** Two obstacles nearer than this are one stroke, px. */
+/** Two obstacles nearer than this are one stroke, px; of very many fewer are drawn, so that the ground stays in sight. */
 const APART_PX = 3
+const APART_OF_MANY_PX = 14
+const MANY = 300
 
 /** Obstacles that are points, however many, as two paths; those that find room with their names. */
 export function Obstacles(p: { view: View; anchor: LonLat; obstacles: readonly Obstacle[]; labels: MarkLabels['obstacles'] }) {
@@ -48,16 +50,17 @@ const Strokes = memo(function Strokes({
   )
 })
 
-/** Masts and feet of the points at a scale, px from the anchor; points on the same few pixels are drawn once. */
+/** Masts and feet of the points at a scale, px from the anchor; of those on the same few pixels the highest alone. */
 export function strokesOf(anchor: LonLat, obstacles: readonly Obstacle[], worldPerPx: number): readonly [mast: string, foot: string] {
+  const points = obstacles.filter((o) => o.path.length === 1)
+  const apartPx = points.length > MANY ? APART_OF_MANY_PX : APART_PX
   const drawn = new Set<string>()
   let [mast, foot] = ['', '']
-  for (const { path } of obstacles) {
-    const [at] = path
-    if (!at || path.length > 1) continue
+  for (const { path } of points.sort((a, b) => tallness(b) - tallness(a))) {
+    const at = path[0]!
     const [east, south] = offsetFrom(anchor, at)
     const [x, y] = [east / worldPerPx, south / worldPerPx]
-    const cell = `${Math.round(x / APART_PX)} ${Math.round(y / APART_PX)}`
+    const cell = `${Math.round(x / apartPx)} ${Math.round(y / apartPx)}`
     if (drawn.has(cell)) continue
     drawn.add(cell)
     mast += `M${x.toFixed(1)} ${y.toFixed(1)}v-10`

@@ -56,4 +56,5 @@ export function markLabels(
   })
   return { candidates: sides, obstacles: shown }
 }
-const tallness = (o: Obstacle): number => o.heightM ?? o.topM ?? 0
+/** What obstacles are ordered by: height above ground, or of the top above the sea where that is all that is stated, m. */
+export const tallness = (o: Obstacle): number => o.heightM ?? o.topM ?? 0

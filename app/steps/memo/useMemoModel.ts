@@ -1,4 +1,4 @@
-import { useDeferredValue, useEffect, useMemo, useState } from 'react'
+import { useDeferredValue, useEffect, useMemo, useRef, useState } from 'react'
 import type { OptionRef } from '../../../core/index.ts'
 import type { MemoModel } from '../../memo/model/index.ts'
 import type { Session } from '../session/index.ts'
@@ -15,6 +15,30 @@ async function loadBuild(): Promise<Build> {
   }
 }
 
+/** While options are being worked out the whole memo is written anew no more often than this, ms. */
+const WHOLE_EVERY_MS = 4000
+
+/** Serial of the results the memo is written from; the newest at once when nothing runs. */
+function useSerial(whole: boolean): number {
+  const newest = useDeferredValue(useResults((r) => r.serial))
+  const running = useResults((r) => r.status !== null)
+  const [taken, setTaken] = useState(newest)
+  const takenAt = useRef(0)
+  useEffect(() => {
+    if (!whole) return
+    const wait = takenAt.current + WHOLE_EVERY_MS - performance.now()
+    const timer = setTimeout(
+      () => {
+        takenAt.current = performance.now()
+        setTaken(newest)
+      },
+      Math.max(0, wait),
+    )
+    return () => clearTimeout(timer)
+  }, [whole, newest])
+  return whole && running ? taken : newest
+}
+
 /**
  * The memo as it stands: words and tables without pictures; null until something is computed. `only`: words of that option alone, as beside the map.
  * New results come in when the page has time for it.
@@ -22,7 +46,7 @@ async function loadBuild(): Promise<Build> {
 export function useMemoModel(only?: OptionRef | null): MemoModel | null {
   const session = useSession()
   const doc = useDoc((d) => d)
-  const serial = useDeferredValue(useResults((r) => r.serial))
+  const serial = useSerial(only === undefined)
   const any = useResults((r) => r.byOption.size > 0)
   const notes = useGround((g) => g.notes)
   const units = useView((v) => v.units)
