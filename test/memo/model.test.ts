@@ -139,6 +139,58 @@ describe('the memo', () => {
       /Available by kind of clutter: forest 38 dB, rain 38 dB, discrete 38 dB, from an earlier pulse \d+ dB\./,
     )
   })
+  it('says of a layer that lies below all known ground that it does, and gives it no shares', () => {
+    const under = withNeed((n) => ({
+      areaKm2: n.unknownKm2,
+      groundAboveKm2: 900,
+      inSightPct: 0,
+      detectablePct: 0,
+      usablePct: 0,
+      met: false,
+      passes: false,
+    }))
+    const words = 'the layer lies below all known ground inside its range'
+    expect(wordsOf(under, 'option-A-24-1.5')).toContain(`Of “Ferry approach” nothing can be seen from Lantern Hill: ${words}.`)
+    expect(wordsOf(under, 'option-A-24-1.5')).not.toContain('Largest cause of loss')
+    for (const id of ['option-nested', 'option-losses', 'option-suppression'])
+      expect(textOfTable(tableOf(under, 'option-A-12-1.5', id))).toContain(`Ferry approach | ${words}`)
+    expect(textOfTable(tableOf(under, 'option-A-24-1.5', 'option-needs'))).toContain(`Ferry approach | ${words}`)
+    expect(textOfTable(tableOf(under, 'comparison', 'compare-needs'))).toMatch(/^A at 12 m \| – \|/)
+  })
+  it('says a caution once in a section, and on the page of an option where it stands', () => {
+    for (const s of model.sections) {
+      const texts = blocksOf(model, s.id).flatMap((b) => (b.kind === 'caution' ? b.texts : []))
+      expect(new Set(texts).size, s.id).toBe(texts.length)
+    }
+    expect(wordsOf(model, 'option-B-24-1.5')).toContain('Every caution under the figures of A Lantern Hill at 24 m holds for these too.')
+  })
+  it('gives the option beside the map in full, with its trial plan, whichever comes first', () => {
+    const ref = { candidate: 'B', heightM: 24, tiltDeg: 1.5 }
+    const own = buildMemo(input, ref)
+    expect(own.sections.filter((s) => s.blocks.length > 0).map((s) => s.id)).toEqual(['summary', 'option-B-24-1.5'])
+    for (const id of ['option-nested', 'option-margins', 'option-losses', 'option-suppression', 'floors'])
+      expect(tableOf(own, 'option-B-24-1.5', id), id).toBeDefined()
+  })
+  it('gives the horizon of a candidate every 5° from each of its masts', () => {
+    const table = tableOf(model, 'annex', 'horizon-A')
+    expect(table.rows).toHaveLength(36)
+    expect(table.columns.flatMap((c) => (c.group === undefined ? [] : [plain(c.group)]))).toEqual([
+      '12 m',
+      '12 m',
+      '24 m',
+      '24 m',
+      '12 m',
+      '12 m',
+      '24 m',
+      '24 m',
+    ])
+    const azimuths = table.rows.flatMap((r) => [cellText(r[0]), cellText(r[6])])
+    expect(new Set(azimuths).size).toBe(72)
+    expect(azimuths).toContain('355')
+    const turned = buildMemo({ ...input, study: { ...sampleStudy, declination: { valueDeg: 3.2, date: '2026-12-01', model: 'WMM2025' } } })
+    expect(tableOf(turned, 'annex', 'horizon-A').rows[0].slice(0, 2).map(cellText)).toEqual(['000', '357'])
+    expect(wordsOf(turned, 'annex')).toContain('magnetic (°M), declination 3.2° E on 2026-12-01 (WMM2025)')
+  })
   it('works out the required ratio from D₀ and its losses', () => {
     const { required } = sampleStudy.needs[0]
     const row = tableOf(model, 'need', 'ratios').rows[0].map(cellText)

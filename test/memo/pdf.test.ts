@@ -70,6 +70,17 @@ describe('the PDF', () => {
     },
     120_000,
   )
+  it.skipIf(!hasPoppler)('gives the first option three pages at most and every other one a page (skipped without pdftotext)', () => {
+    const pages = textOf(pdf).split('\f')
+    const plain = (s: string): string => s.replaceAll('\u202f', ' ')
+    const options = model.sections.filter((s) => s.option)
+    const starts = options.map((s) => pages.findIndex((p) => p.includes(`${s.number} ${plain(s.title)}\n`)))
+    const confirmed = pages.findIndex((p) => p.includes('Confirmed by survey and trial\n'))
+    expect(Math.min(...starts)).toBeGreaterThan(0)
+    const taken = starts.map((at, i) => (starts[i + 1] ?? confirmed) - at)
+    expect(taken[0]).toBeLessThanOrEqual(3)
+    expect(taken.slice(1)).toEqual(taken.slice(1).map(() => 1))
+  })
   it.skipIf(!hasPoppler)('holds every title, heading and page number as text (read with pdftotext; skipped without it)', () => {
     const path = fileOf(pdf)
     const text = textOf(pdf)

@@ -31,10 +31,15 @@ export function cutOf(r: OptionResult, maxRangeM: number): { need: string; windo
 
 /** Range-height diagram with the caution of its diffracted part; nothing where no plane was worked out. */
 export function verticalBlocks(input: MemoInput, r: OptionResult, figure: () => number): Block[] {
-  const cut = input.maps.find(
+  const map = input.maps.find(
     (m) => m.ref.candidate === r.ref.candidate && m.ref.heightM === r.ref.heightM && m.ref.tiltDeg === r.ref.tiltDeg,
-  )?.cut
-  if (!cut) return []
+  )
+  const cut = map?.cut
+  if (!cut) {
+    // as for the map: its number stays its own
+    if (!map && cutOf(r, input.study.run.maxRangeM)) figure()
+    return []
+  }
   const { system } = input
   return [
     {

@@ -67,7 +67,7 @@ function atHighKTable(input: MemoInput, ordered: readonly OptionResult[]): Table
   if (!high && !roads) return null
   const area = bothUnits('area', system)
   const k = formatK(input.study.atmosphere.effectiveEarthFactor)
-  const bothK = `k = ${k} / 2.75`
+  const bothK = `k\u00a0=\u00a0${k}\u202f/\u202f2.75`
   const need = ordered[0].figures.atHighK?.suppression[0]
   const columns: Column[] = [option]
   const folded = ordered.some((r) => (r.figures.atHighK?.secondTimeAroundKm2 ?? null) !== null)
@@ -81,7 +81,7 @@ function atHighKTable(input: MemoInput, ordered: readonly OptionResult[]): Table
   if (roads) {
     columns.push({ head: 'In sight', unit: bothUnits('range', system), group: 'Roads', align: 'right' })
     columns.push({ head: 'Seen', unit: bothUnits('range', system), group: 'Roads', align: 'right' })
-    columns.push({ head: 'Seen at k = 2.75', unit: unitOf('range', system), group: 'Roads', align: 'right' })
+    columns.push({ head: 'Seen, k\u00a0=\u00a02.75', unit: unitOf('range', system), group: 'Roads', align: 'right' })
   }
   const rows = ordered.map(({ ref, figures: f }): Cell[] => {
     const cells: Cell[] = [optionName(ref, hasTilts(input))]

@@ -92,7 +92,11 @@ function ringFigure(input: MemoInput, r: OptionResult, number: number): Block {
 /** The painted map beside a table; the table alone where there is no map. */
 export function mapBlocks(input: MemoInput, r: OptionResult, figure: () => number, table: TableBlock): Block[] {
   const map = input.maps.find((m) => sameRef(m.ref, r.ref))
-  if (!map) return [table]
+  if (!map) {
+    // the number stays its own, so that figures have the same one without pictures
+    figure()
+    return [table]
+  }
   const { study, system } = input
   const drawing = mapDrawing({ map, candidates: study.candidates, maxRangeM: study.run.maxRangeM, system, widthPt: MAP_PT })
   const own: Block = { kind: 'figure', id: 'map', number: figure(), caption: mapCaption(input, r), drawing, png: map.png }
