@@ -1,7 +1,20 @@
 import type { Page } from '@playwright/test'
 import { expect, test } from './page.ts'
 import { inkOf } from './sheets.ts'
-import { comparison, everythingRun, expectStepState, goTo, legend, numberIn, openDemo, plain, readColumn } from './user.ts'
+import {
+  card,
+  comparison,
+  everythingRun,
+  expectStepState,
+  goTo,
+  legend,
+  numberIn,
+  openDemo,
+  plain,
+  readColumn,
+  ring,
+  setField,
+} from './user.ts'
 
 const section = (page: Page, name: string) => page.getByRole('region', { name, exact: true })
 async function pick(page: Page, within: string, label: string, option: RegExp): Promise<void> {
@@ -58,6 +71,17 @@ test('a rejected candidate is no longer compared and stands in the memo with its
   await goTo(page, 'Compare')
   await page.getByRole('button', { name: 'Take back B' }).click()
   await expectStepState(page, 'Compare', '9 options')
+  // the same in the candidate's own form, seen on the map
+  await goTo(page, 'Candidates')
+  await card(page, 'B').getByRole('button', { name: /^B\b/ }).click()
+  await card(page, 'B').getByRole('button', { name: 'Edit B' }).click()
+  await setField(card(page, 'B'), 'Reject', 'No road to the top')
+  await expect(card(page, 'B').getByRole('textbox', { name: 'Rejected' })).toHaveValue('No road to the top')
+  await expect(ring(page, 'B')).toHaveCount(0)
+  await expect(legend(page)).toContainText('rejected candidate')
+  await card(page, 'B').getByRole('button', { name: 'Take back B' }).click()
+  await expect(ring(page, 'B')).toBeVisible()
+  await expect(legend(page)).not.toContainText('rejected candidate')
 })
 
 test('a layer against a second option: warm and cool differences with words at both ends, or two maps of the same view', async ({

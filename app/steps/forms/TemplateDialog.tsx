@@ -52,6 +52,7 @@ export function TemplateDialog() {
           aria-label={TEMPLATE_WORDS.title}
           className="options template-list"
           selectionMode="single"
+          disallowEmptySelection
           escapeKeyBehavior="none"
           selectedKeys={chosen ? [chosen] : []}
           onSelectionChange={(keys) => setChosen(keys === 'all' ? null : (([...keys][0] as string | undefined) ?? null))}

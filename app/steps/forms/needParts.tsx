@@ -41,7 +41,7 @@ export function Heights({ need, path, set }: PartProps) {
         onCommit={(v) => setHeights(v, high)}
       />
       <NumberField
-        label="up to height"
+        label="Up to height"
         value={high}
         fallbackWords="one height"
         face={height}
