@@ -198,7 +198,7 @@ test('four levels, twelve fixes, an approach, a motorway and a railway', async (
     })
   const byClass = roads.classes.map((c) => `${c.class === 'rail' ? 'railway' : c.class} ${face(formatRoad(1000 * c.seen_km, 'nautical'))}`)
   expect(seen.at(-1)?.['Seen, by class, NM']).toBe(byClass.join(', '))
-  const speeds = await memoTable(page, /^Seen, by radial speed/)
+  const speeds = await memoTable(page, /^Roads seen, by radial speed/)
   expect(speeds.map((r) => [r[''], r['Seen, NM (km)']])).toEqual(
     roads.radial_speeds.map((r) => [`${r.from_ms} to ${r.to_ms}`, km(r.seen_km)]),
   )

@@ -119,7 +119,7 @@ function sectionContent(section: Section): Content[] {
   }
   // The paragraphs that open the section, the block they lead to, and its caution.
   const opening = section.blocks.findIndex((b) => b.kind !== 'paragraph')
-  const reach = opening < 0 ? section.blocks.length : isLong(section.blocks[opening]) ? opening : opening + 1
+  const reach = opening < 0 ? section.blocks.length : isLong(section.blocks[opening], OPENING_LINES) ? opening : opening + 1
   const kept = section.blocks.slice(0, section.blocks[reach]?.kind === 'caution' ? reach + 1 : reach)
   const after = section.blocks.slice(kept.length)
   const head: Content = {
@@ -143,7 +143,8 @@ function keptTogether(blocks: readonly Block[]): Content[] {
   }
   return out
 }
-const isLong = (block: Block | undefined): boolean => block === undefined || (block.kind === 'table' && !isKept(block))
+const isLong = (block: Block | undefined, most = KEPT_LINES): boolean =>
+  block === undefined || (block.kind === 'table' && linesOf(block) > most)
 
 function blockContent(block: Block): Content {
   switch (block.kind) {
@@ -208,6 +209,8 @@ function paragraph(block: Extract<Block, { kind: 'paragraph' }>): Content {
 
 /** Tables of up to about this many lines are never broken over pages; a longer block kept whole could not be placed at all. */
 const KEPT_LINES = 14
+/** The same for the table a section opens with, so that its heading does not stand alone. */
+const OPENING_LINES = 24
 /** Rows that stay with the head of a table that may be broken. */
 const KEPT_ROWS = 4
 /** Lines a table will take, estimated high: words per column from the share of the text width it is likely to get. */
