@@ -205,15 +205,17 @@ function useFirstFit(
   showWhole: (to: FitTo) => void,
 ) {
   const fittedFor = useRef<string | null>(null)
-  const latest = useRef({ to, showWhole, serial: props.groundSerial, pane: props.pane })
-  latest.current = { to, showWhole, serial: props.groundSerial, pane: props.pane }
+  const now = { to, showWhole, serial: props.groundSerial, corners: props.corners, pane: props.pane }
+  const latest = useRef(now)
+  latest.current = now
   const once = useCallback(() => {
     // the second of two maps follows the first
-    const { to, showWhole, serial, pane } = latest.current
-    const key = `${serial}`
-    if (serial === null || fittedFor.current === key || camera.get().width < 1 || pane) return
+    const { to, showWhole, serial, corners, pane } = latest.current
+    // the same ground read again leaves the view where the user has put it
+    const key = serial === null ? null : JSON.stringify(corners)
+    if (fittedFor.current === key || camera.get().width < 1 || pane) return
     fittedFor.current = key
-    showWhole(to)
+    if (key !== null) showWhole(to)
   }, [camera])
   useLayoutEffect(() => {
     const host = stage.current

@@ -140,7 +140,7 @@ describe('keeping the ground', () => {
       obstacles: [],
       notes: [name],
     }) as unknown as Awaited<ReturnType<ReadGround>>
-  it('reads when the file is here, again when what is stated of it changes, and not for a candidate', async () => {
+  it('reads when the file is here, again when what is stated of it changes, and not for a candidate or a need', async () => {
     const s = setUp()
     const read = vi.fn<ReadGround>(async () => parts('read'))
     keepGround(s.study, s.files, s.ground, s.client, read, s.runner.onGround)
@@ -151,6 +151,8 @@ describe('keeping the ground', () => {
     expect(s.ground.getState()).toMatchObject({ state: 'ready', ground: { serial: 7 }, notes: ['read'] })
     expect(s.ground.getState().ground?.corners[0]).toEqual({ lon: 9.75, lat: 50.25 })
     addCandidate(s.study, { lon: 1, lat: 1 })
+    setField(s.study, 'needs', [{ id: 'n1', kind: 'layer', heightM: 300 }], 'added need 1')
+    await settled()
     expect(read).toHaveBeenCalledTimes(1)
     setField(s.study, 'terrain[0].unit', 'ft', 'stated the unit')
     await settled()

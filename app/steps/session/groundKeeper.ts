@@ -87,7 +87,8 @@ const serialOf = (blob: Blob | undefined): number => {
 function groundKey(doc: StudyDoc, files: ReadonlyMap<string, GivenFile>): string {
   const names = [...doc.terrain.map((t) => t.file), doc.landCover?.file, doc.obstacles?.file, doc.roads?.file, doc.tables?.lowAngleLand]
   const placed = (doc.needs ?? []).flatMap((n) => (n.file ? [[n.id, n.kind, n.file, n.heightM, n.heightAbove, n.qnhHpa]] : []))
-  names.push(...(doc.needs ?? []).map((n) => n.file))
+  // a need without a file is nothing to the ground: it is not read again when one comes or goes
+  names.push(...(doc.needs ?? []).flatMap((n) => n.file ?? []))
   const surveyed = surveysOf(doc)
   names.push(...surveyed.map((s) => s.file))
   const blobs = names.map((n) => serialOf(n === undefined ? undefined : files.get(n)?.blob))
