@@ -177,6 +177,14 @@ test('keys undo and redo outside of text fields', async ({ page }) => {
   await expect.poll(() => stepState(page, 'Need')).toBe('2 stated')
   await page.keyboard.press('Control+Shift+z')
   await expect.poll(() => stepState(page, 'Need')).toBe('3 stated')
+  // a checkbox has no typing of its own to undo
+  const must = form(page, 'Need').getByRole('checkbox', { name: 'Must be met' }).first()
+  await must.focus()
+  await page.keyboard.press('Space')
+  await expect(must).not.toBeChecked()
+  await page.keyboard.press('Control+z')
+  await expect(must).toBeChecked()
+  await expect.poll(() => stepState(page, 'Need')).toBe('3 stated')
 })
 
 test('a reload brings back the document, its files and its figures', async ({ page }) => {
