@@ -20,10 +20,12 @@ const port = process.env.E2E_PORT ?? '4173'
 const dist = process.env.E2E_DIST
 const url = `http://127.0.0.1:${port}`
 
+const TIMED = /(demo|dragging|smooth)\.spec/
+
 export default defineConfig({
   testDir: 'e2e',
   outputDir: 'test-results/e2e',
-  workers: 1,
+  workers: 2,
   timeout: 180_000,
   expect: { timeout: 20_000 },
   reporter: [['list'], ['json', { outputFile: process.env.PLAYWRIGHT_JSON_OUTPUT_NAME ?? 'test-results/e2e.json' }]],
@@ -41,7 +43,7 @@ export default defineConfig({
     timeout: 60_000,
   },
   projects: [
-    { name: 'canvas', testIgnore: /webgl/, use: { launchOptions: launch(['--disable-3d-apis']) } },
+    { name: 'canvas', testIgnore: [/webgl/, TIMED], use: { launchOptions: launch(['--disable-3d-apis']) } },
     {
       name: 'webgl',
       testMatch: /webgl/,
@@ -49,6 +51,14 @@ export default defineConfig({
         viewport: { width: 1280, height: 800 },
         launchOptions: launch(['--use-angle=swiftshader', '--enable-unsafe-swiftshader', '--ignore-gpu-blocklist']),
       },
+    },
+    // what prints a time has the machine for itself
+    {
+      name: 'timed',
+      testMatch: TIMED,
+      workers: 1,
+      dependencies: ['canvas', 'webgl'],
+      use: { launchOptions: launch(['--disable-3d-apis']) },
     },
   ],
 })
