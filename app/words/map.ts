@@ -167,14 +167,17 @@ export function legendMarks(
   marks: readonly { readonly mark: string; readonly about: string }[],
 ): { readonly note: string; readonly warned: readonly string[] } {
   const parts = LAYER_WORDS[layer].note.split(' · ')
-  const own = parts.filter((p) => p.includes('from memory'))
+  const remembered = parts.filter((p) => p.includes('from memory'))
+  // a land table of the study's own takes the place of the built-in one
+  const ownTable = marks.some((m) => m.mark === 'by hand' && /^land clutter table/.test(m.about))
+  const own = ownTable ? [] : remembered
   const concerns = marks.filter((m) =>
     ABOUT_SUPPRESSION.test(m.about) ? NEED_LAYERS.includes(layer) : CLUTTER_LAYERS.includes(layer) || !ABOUT_CLUTTER.test(m.about),
   )
   const others = concerns
     .filter((m) => !(m.mark === 'from memory' && own.length > 0 && /land/i.test(m.about)))
     .map((m) => `${(m.about.split(/[:,;(]/)[0] ?? '').trim()} · ${m.mark}`)
-  return { note: parts.filter((p) => !own.includes(p)).join(' · '), warned: [...new Set([...own, ...others])] }
+  return { note: parts.filter((p) => !remembered.includes(p)).join(' · '), warned: [...new Set([...own, ...others])] }
 }
 
 /** Round length for a scale bar at most `mostPx` long: its length in pixels and its words. */

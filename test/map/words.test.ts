@@ -49,6 +49,11 @@ describe('words of the map', () => {
     expect(legendMarks('suppression-needed', marks).warned).toContain('Suppression · by hand')
     expect(legendMarks('coverage-floor', marks).warned).toEqual(['uniform terrain · default'])
   })
+  it('says by hand, not from memory, of a land table of the study', () => {
+    const { note, warned } = legendMarks('clutter-to-noise', [{ mark: 'by hand', about: 'land clutter table: from the study' }])
+    expect(warned).toEqual(['land clutter table · by hand'])
+    expect(note).not.toContain('memory')
+  })
   it('leaves out what is not known, and says where no ground is known', () => {
     expect(placeLine(118.5, 13_334, 122.5, 'nautical')).toBe('az 118.5° · 7.2\u202fNM · ground 402\u202fft')
     expect(placeLine(118.5, 13_334, null, 'nautical')).toContain('no ground known')
