@@ -23,7 +23,7 @@ export function reliefBlock(shape: GridShape): { cols: number; rows: number; col
 }
 
 /**
- * Relief per block of the raster (COMPUTE §4): heights without cover averaged in blocks, slope by central differences of blocks (one-sided at an
+ * Relief per block of the raster: heights without cover averaged in blocks, slope by central differences of blocks (one-sided at an
  * edge), relief slope = mean slope within 1 km, at least 2° = high, high with over 300 m between blocks within 1 km = mountains. A block needs 25 %
  * of its posts within the raster, a disc 25 % of its blocks, else unknown.
  */
