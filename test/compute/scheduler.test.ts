@@ -41,7 +41,9 @@ describe('scheduler', () => {
     expect(replyOf(study)).toBeDefined()
     const status = told.filter((t) => t.kind === 'status').at(-1)
     expect(status).toMatchObject({ done: 3, total: 3 })
-    expect(told.filter((t) => t.kind === 'figures').at(-1)).toMatchObject({ holds: [expect.any(Number), expect.any(Number), expect.any(Number)] })
+    expect(told.filter((t) => t.kind === 'figures').at(-1)).toMatchObject({
+      holds: [expect.any(Number), expect.any(Number), expect.any(Number)],
+    })
     expect(scheduler.slice()).toBe(false)
   })
 
