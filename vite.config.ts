@@ -1,3 +1,4 @@
+import { availableParallelism } from 'node:os'
 import react from '@vitejs/plugin-react'
 import { defineConfig } from 'vitest/config'
 import { offline } from './scripts/offline.ts'
@@ -12,6 +13,8 @@ export default defineConfig({
   preview: { headers: isolation, port: 4173, strictPort: true, host: '127.0.0.1' },
   optimizeDeps: { include: ['geotiff', 'proj4', 'fast-png'] },
   test: {
+    // the runner alone would leave one of two cores idle
+    maxWorkers: Math.max(2, availableParallelism() - 1),
     projects: [
       {
         test: {
