@@ -22,11 +22,12 @@ async function find(page: Page, words: string): Promise<void> {
   await page.keyboard.press('Enter')
 }
 async function close(page: Page, title: string): Promise<void> {
-  await page.keyboard.press('Escape')
-  // the first Escape gives up what stands in a table and cannot be read yet
   const open = dialog(page, title)
-  if (await open.getByRole('alert').or(open.locator('.edit-table')).first().isVisible()) await page.keyboard.press('Escape')
-  await expect(open).toHaveCount(0)
+  // the first Escape gives up what stands in a table and cannot be read yet
+  await expect(async () => {
+    if (await open.isVisible()) await page.keyboard.press('Escape')
+    await expect(open).toHaveCount(0, { timeout: 1000 })
+  }).toPass({ timeout: 10_000 })
 }
 /** What a spreadsheet puts on the clipboard, pasted into the cell in hand. */
 const paste = (page: Page, text: string) =>

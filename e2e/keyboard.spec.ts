@@ -18,6 +18,11 @@ const press = async (page: Page, on: Locator, key = 'Enter'): Promise<void> => {
 }
 const step = (page: Page, name: string) =>
   page.getByRole('navigation', { name: 'Steps' }).getByRole('button', { name: new RegExp(`^${name}`) })
+/** Goes to another step: back over the form, not forward through the map and every figure of the memo. */
+async function stepBackTo(page: Page, name: string): Promise<void> {
+  await tabTo(page, step(page, name), 'Shift+Tab')
+  await page.keyboard.press('Enter')
+}
 /** Opens a word of the sentence and takes a choice with the arrows. */
 async function say(page: Page, word: string, choice: RegExp): Promise<void> {
   await press(page, page.getByRole('button', { name: new RegExp(`^${word}: `) }))
@@ -42,7 +47,7 @@ test('from the demo to the exported memo by keys alone', async ({ page }) => {
   await page.keyboard.press('Enter')
   await expect(page.getByRole('button', { name: 'undo: changed frequency' })).toBeVisible()
 
-  await press(page, step(page, 'Candidates'))
+  await stepBackTo(page, 'Candidates')
   await press(page, form(page, 'Candidates').getByRole('button', { name: 'Enter position' }))
   const position = form(page, 'Candidates').getByRole('textbox', { name: 'Position' })
   await tabTo(page, position)
@@ -80,15 +85,13 @@ test('from the demo to the exported memo by keys alone', async ({ page }) => {
   await page.keyboard.press('ArrowUp')
   expect(await mastHeight(page)).toBeGreaterThan(before)
 
-  await press(page, step(page, 'Compare'))
+  await stepBackTo(page, 'Compare')
   await everythingRun(page)
   const shown = page.getByRole('button', { name: 'Show A at 20 m' })
   await press(page, shown, 'Space')
   await expect(shown).toHaveAttribute('aria-pressed', 'true')
 
-  // back over the table, not forward through every figure of it
-  await tabTo(page, step(page, 'Memo'), 'Shift+Tab')
-  await page.keyboard.press('Enter')
+  await stepBackTo(page, 'Memo')
   const exporting = page.getByRole('button', { name: 'Export PDF' })
   await tabTo(page, exporting)
   const [download] = await Promise.all([page.waitForEvent('download', { timeout: LONG }), page.keyboard.press('Enter')])
