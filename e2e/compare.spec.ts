@@ -39,9 +39,9 @@ test('options are ranked by stated values and weights, those that fail a must ne
   await expect(rows).toHaveCount(9)
   const cells = await Promise.all((await rows.all()).map(async (r) => (await r.locator('td').allInnerTexts()).map(plain)))
   const verdicts = cells.map((c) => c[2])
-  expect(verdicts.lastIndexOf('pass'), verdicts.join(' ')).toBeLessThan(verdicts.indexOf('fail'))
+  expect(verdicts.lastIndexOf('passes'), verdicts.join(' ')).toBeLessThan(verdicts.indexOf('not met'))
   for (const c of cells) expect(numberIn(c[3] ?? '') + numberIn(c[4] ?? ''), c.join(' | ')).toBeCloseTo(numberIn(c[5] ?? ''), 0)
-  for (const verdict of ['pass', 'fail']) {
+  for (const verdict of ['passes', 'not met']) {
     const scores = cells.filter((c) => c[2] === verdict).map((c) => numberIn(c[5] ?? ''))
     expect(scores).toEqual([...scores].sort((a, b) => b - a))
   }

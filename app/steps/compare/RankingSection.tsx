@@ -14,6 +14,7 @@ import {
   RANKING_WORDS,
   rankWords,
   type UnitSystem,
+  VERDICT_WORDS,
 } from '../../words/index.ts'
 import { useSession } from '../session/index.ts'
 import { figuresToRankBy, startingCriterion } from './criteria.ts'
@@ -81,7 +82,9 @@ export const RankingSection = memo(function RankingSection({ doc, results, shown
                         {optionWords(o.ref, withTilt)}
                       </AriaButton>
                     </td>
-                    <td className="text">{o.passes === null ? 'met, k = 1 not run yet' : o.passes ? 'pass' : 'fail'}</td>
+                    <td className="text">
+                      {o.passes === null ? VERDICT_WORDS.oneK : o.passes ? VERDICT_WORDS.passes : VERDICT_WORDS.notMet}
+                    </td>
                     {o.criteria.map((c) => (
                       <td key={c.figure}>{c.u === null ? '–' : formatScore(c.u * c.share)}</td>
                     ))}
